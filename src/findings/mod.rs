@@ -1,0 +1,254 @@
+//! Everything that is computed about a joint, in one place, SI.
+
+pub mod expression;
+
+use crate::assembly::press::PressCurve;
+use crate::joint::{Bath, Joint};
+use crate::material::Range;
+use crate::tolerance::{Character, Extremes};
+
+/// All results for one joint. Lengths m, pressures and stresses Pa, forces N, torques N·m, temperatures K.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Findings {
+    /// The joint as understood.
+    pub joint: Joint,
+    /// Clearance, transition or interference fit.
+    pub character: Character,
+    /// The loosest, mean and tightest pair at the shop temperature, at rest.
+    pub extremes: Extremes<PairFindings>,
+    /// Each service state.
+    pub duty: Vec<DutyFindings>,
+    /// How it is put together.
+    pub assembly: AssemblyFindings,
+    /// Onset of yield of the joint, when an elastic limit exists.
+    pub onset_of_yield: Option<OnsetOfYield>,
+    /// The three questions answered against the requirements.
+    pub verdicts: Vec<Verdict>,
+    /// The derivation, line by line.
+    pub worksheet: Vec<WorksheetSection>,
+    /// What must be minded; each a full sentence.
+    pub cautions: Vec<Caution>,
+    /// Why a quantity does not exist, what is not covered; full sentences.
+    pub notes: Vec<String>,
+}
+
+/// One pair of parts at the shop temperature, at rest.
+#[derive(Debug, Clone, PartialEq)]
+pub struct PairFindings {
+    /// Diametral interference of the parts at 20 °C, m; negative is clearance.
+    pub interference: f64,
+    /// Loss by smoothing that was taken, m.
+    pub smoothing: f64,
+    /// Interference that grips, m; negative is clearance.
+    pub effective_interference: f64,
+    /// Contact pressure, Pa; zero when the pair has clearance.
+    pub pressure: f64,
+    /// Contact pressure had the smoothing loss been taken, Pa.
+    pub pressure_smoothed: f64,
+    /// Contact pressure had it been kept, Pa.
+    pub pressure_unsmoothed: f64,
+    /// Stress in each ring, innermost first.
+    pub rings: Vec<RingStress>,
+    /// Torque at which the joint slips, N·m.
+    pub torque_capacity: f64,
+    /// Axial force at which it slips, N.
+    pub axial_capacity: f64,
+    /// Greatest force while pressing in, over the friction range, N.
+    pub press_force: Range,
+    /// Force at first movement when pushing out, over the friction range, N.
+    pub release_force: Range,
+}
+
+/// Stress and safety of one ring.
+#[derive(Debug, Clone, PartialEq)]
+pub struct RingStress {
+    /// Its inner face; the centre when it is solid.
+    pub bore: FaceStress,
+    /// Its outer face.
+    pub rim: FaceStress,
+    /// Equivalent stress that governs, Pa, by the criterion of its kind.
+    pub equivalent: f64,
+    /// Strength it is compared with, Pa.
+    pub strength: Option<f64>,
+    /// Strength over equivalent stress; none when nothing stresses the ring or no strength is known.
+    pub safety: Option<f64>,
+    /// Change of the inner diameter, m.
+    pub bore_change: f64,
+    /// Change of the outer diameter, m.
+    pub outer_change: f64,
+}
+
+/// Stress at one face of a ring, Pa.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct FaceStress {
+    /// Radial stress.
+    pub radial: f64,
+    /// Hoop stress.
+    pub hoop: f64,
+    /// von Mises equivalent.
+    pub von_mises: f64,
+    /// Tresca equivalent.
+    pub tresca: f64,
+}
+
+/// One service state at both extremes.
+#[derive(Debug, Clone, PartialEq)]
+pub struct DutyFindings {
+    /// The loosest pair.
+    pub loosest: StateFindings,
+    /// The tightest pair.
+    pub tightest: StateFindings,
+}
+
+/// One pair in one service state.
+#[derive(Debug, Clone, PartialEq)]
+pub struct StateFindings {
+    /// Contact pressure, Pa.
+    pub pressure: f64,
+    /// Torque at which it slips, N·m.
+    pub torque_capacity: f64,
+    /// Axial force at which it slips, N.
+    pub axial_capacity: f64,
+    /// Safety against slip; none when the state has neither torque nor axial force.
+    pub slip_safety: Option<f64>,
+    /// Stress in each ring.
+    pub rings: Vec<RingStress>,
+}
+
+/// Where the first ring starts to yield (or break, when brittle).
+#[derive(Debug, Clone, PartialEq)]
+pub struct OnsetOfYield {
+    /// Index of the ring.
+    pub ring: usize,
+    /// Contact pressure at onset, Pa.
+    pub pressure: f64,
+    /// Effective diametral interference at onset at the shop temperature, m.
+    pub interference: f64,
+}
+
+/// How the joint is put together; all routes are computed, the plan says which was asked for.
+#[derive(Debug, Clone, PartialEq)]
+pub struct AssemblyFindings {
+    /// Press force along the travel: loosest pair at the low friction, tightest at the high.
+    pub press: Extremes<PressCurve>,
+    /// Press rating to look for, N.
+    pub press_rating: f64,
+    /// Heating the hub alone.
+    pub heat_hub: ThermalRoute,
+    /// Chilling the shaft alone: the temperature it would need.
+    pub chill_shaft: ThermalRoute,
+    /// Each bath: what it gives and what hub temperature is needed besides.
+    pub baths: Vec<BathFindings>,
+    /// Clearance needed while joining, m.
+    pub clearance: f64,
+    /// Change of diameter needed of the tightest pair, interference plus clearance, m.
+    pub needed: f64,
+    /// Highest temperature for the hub, K, with the reason.
+    pub hub_limit: Option<(f64, String)>,
+}
+
+/// One thermal route.
+#[derive(Debug, Clone, PartialEq)]
+pub struct ThermalRoute {
+    /// Temperature the part must reach, K; none when its curve ends before.
+    pub temperature: Option<f64>,
+    /// Whether it is within the limit of the material and of the expansion curve.
+    pub possible: bool,
+    /// Plain statement of what it takes or why it cannot be.
+    pub statement: String,
+}
+
+/// What one bath does for the tightest pair.
+#[derive(Debug, Clone, PartialEq)]
+pub struct BathFindings {
+    /// The bath.
+    pub bath: Bath,
+    /// Its temperature, K.
+    pub temperature: f64,
+    /// Diametral shrinkage of the shaft in it from shop temperature, m; none when the curve ends before.
+    pub shrinkage: Option<f64>,
+    /// Hub temperature that is needed as well, K; shop temperature when none.
+    pub hub_temperature: Option<f64>,
+    /// Whether the bath alone clears.
+    pub alone: bool,
+    /// Plain statement.
+    pub statement: String,
+}
+
+/// Which of the three questions.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord)]
+pub enum Question {
+    /// Does it hold?
+    Hold,
+    /// Does it keep its strength?
+    Strength,
+    /// How is it assembled?
+    Assembly,
+}
+
+/// Unit of a verdict's numbers.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum VerdictUnit {
+    /// A safety factor.
+    Safety,
+    /// Force, N.
+    Force,
+    /// Temperature, K.
+    Temperature,
+}
+
+/// One requirement with what was found.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Verdict {
+    /// The question it belongs to.
+    pub question: Question,
+    /// What is judged, such as `slip safety`.
+    pub subject: String,
+    /// The requirement; none when nothing was required.
+    pub required: Option<f64>,
+    /// What was found; none when it does not exist.
+    pub found: Option<f64>,
+    /// Unit of both.
+    pub unit: VerdictUnit,
+    /// Whether it is met.
+    pub ok: bool,
+    /// At which pair and state.
+    pub at: String,
+}
+
+/// A caution with what it belongs to.
+#[derive(Debug, Clone, PartialEq, Eq)]
+pub struct Caution {
+    /// Step or subject: `press`, `heat`, `cold`, `strength`, `hold`, `input`.
+    pub subject: &'static str,
+    /// The sentence.
+    pub text: String,
+    /// Where it comes from.
+    pub source: String,
+}
+
+/// A part of the worksheet.
+#[derive(Debug, Clone, PartialEq)]
+pub struct WorksheetSection {
+    /// Heading.
+    pub title: String,
+    /// Lines in order.
+    pub lines: Vec<WorksheetLine>,
+}
+
+/// One line: symbol = formula = numbers = result with unit · source.
+#[derive(Debug, Clone, PartialEq)]
+pub struct WorksheetLine {
+    /// Symbol that the line defines.
+    pub symbol: expression::Symbol,
+    /// What the symbol means.
+    pub meaning: String,
+    /// The formula; none when the symbol is an input.
+    pub formula: Option<expression::Expression>,
+    /// The printed value, exactly as printed.
+    pub printed: String,
+    /// Unit as printed; empty for a pure number.
+    pub unit: String,
+    /// Source of the formula or of the input.
+    pub source: String,
+}

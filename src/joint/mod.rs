@@ -1,0 +1,192 @@
+//! A joint as understood: validated, in SI, with every default marked as one.
+
+use std::sync::Arc;
+
+use crate::material::{Material, Range, Sourced, Strength};
+use crate::mechanics::criteria::DuctileCriterion;
+use crate::quantity::UnitSystem;
+use crate::tolerance::FitLimits;
+
+/// A validated joint. Lengths m, forces N, torques N·m, temperatures K, pressures Pa.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Joint {
+    /// Free text; empty when none was given.
+    pub title: String,
+    /// Drawing number and revision.
+    pub drawing: Option<String>,
+    /// Free note.
+    pub note: Option<String>,
+    /// Date as written in the file; the program never reads a clock.
+    pub date: Option<String>,
+    /// Nominal diameter of the mating surface, m.
+    pub diameter: f64,
+    /// Length of the hub along the shaft, m.
+    pub length: f64,
+    /// Part of the length that carries nothing, m.
+    pub relief: f64,
+    /// The rings from the innermost outwards; a plain joint has two: shaft and hub.
+    pub rings: Vec<Ring>,
+    /// The fit between ring k and ring k + 1.
+    pub fits: Vec<Fit>,
+    /// Coefficients of friction.
+    pub friction: Friction,
+    /// Service states; never empty.
+    pub duty: Vec<DutyState>,
+    /// How it is put together.
+    pub assembly: AssemblyPlan,
+    /// Loss of interference as roughness peaks flatten.
+    pub smoothing: Smoothing,
+    /// Criterion for ductile parts.
+    pub criterion: DuctileCriterion,
+    /// What must be met.
+    pub require: Requirements,
+    /// Units shown to the reader.
+    pub display: UnitSystem,
+    /// Every default that was taken, in the order of the joint file's keys.
+    pub defaults: Vec<DefaultTaken>,
+    /// Changes made from the command line, as typed.
+    pub set: Vec<(String, String)>,
+    /// SHA-256 of the input text (and of the changes), hexadecimal.
+    pub digest: String,
+}
+
+/// One ring of the joint; the shaft is a ring whose inner diameter may be zero.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Ring {
+    /// What it is called: `shaft`, `hub`, or the name given in the file.
+    pub name: String,
+    /// Its material.
+    pub material: Arc<Material>,
+    /// Ruling section for its strength, m.
+    pub section: f64,
+    /// Strength at that section.
+    pub strength: Strength,
+    /// Inner diameter, m; zero for a solid shaft.
+    pub inner_diameter: f64,
+    /// Outer diameter, m.
+    pub outer_diameter: f64,
+    /// Roughness Rz of the mating surface, m.
+    pub roughness: Sourced<f64>,
+}
+
+/// The fit at one interface.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Fit {
+    /// The callout as written, such as `H7/s6`.
+    pub callout: String,
+    /// Limits of both members.
+    pub limits: FitLimits,
+    /// Which standard or measurement the limits come from.
+    pub source: String,
+}
+
+/// Coefficients of friction; each range is used from its safe side.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Friction {
+    /// Against slip in service; the low end is used.
+    pub holding: Sourced<Range>,
+    /// While pressing in; the high end sizes the press.
+    pub pressing: Sourced<Range>,
+    /// At first movement when pushing out after rest; the high end sizes the press.
+    pub release: Sourced<Range>,
+}
+
+/// One service state.
+#[derive(Debug, Clone, PartialEq)]
+pub struct DutyState {
+    /// Its name.
+    pub name: String,
+    /// Torque, N·m, not negative.
+    pub torque: f64,
+    /// Axial force, N, not negative.
+    pub axial_force: f64,
+    /// Temperature of each ring, K, innermost first.
+    pub temperatures: Vec<f64>,
+}
+
+/// Method of assembly.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Method {
+    /// Pressed in at shop temperature.
+    Press,
+    /// The hub is heated, the shaft is at shop temperature.
+    HeatHub,
+    /// The shaft is chilled, the hub is at shop temperature.
+    ChillShaft,
+    /// The shaft is chilled in the bath and the hub is heated for the rest.
+    HeatAndChill,
+}
+
+/// A cold bath.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Bath {
+    /// Dry ice, −78.5 °C.
+    DryIce,
+    /// Liquid nitrogen, −196 °C.
+    LiquidNitrogen,
+}
+
+/// How the joint is put together.
+#[derive(Debug, Clone, PartialEq)]
+pub struct AssemblyPlan {
+    /// Method asked for.
+    pub method: Method,
+    /// Temperature of the shop, K.
+    pub shop_temperature: f64,
+    /// Diametral clearance wanted while joining hot or cold, m.
+    pub clearance: Sourced<f64>,
+    /// Half-angle of the lead-in chamfer, rad.
+    pub chamfer_angle: Sourced<f64>,
+    /// Bath used when the method chills and shares.
+    pub bath: Bath,
+    /// Highest hub temperature allowed by the user, K; the material's own limit holds as well.
+    pub hub_temperature_limit: Option<f64>,
+}
+
+/// At which pairs the smoothing loss is taken.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum SmoothingAt {
+    /// Lost at the loosest and the mean pair, kept at the tightest.
+    Loosest,
+    /// Lost at every pair.
+    Both,
+    /// Kept at every pair.
+    None,
+}
+
+/// Loss of interference by smoothing.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Smoothing {
+    /// Full diametral loss of each fit, m, from the rule and the two roughnesses.
+    pub loss: Vec<f64>,
+    /// Share of (Rz shaft + Rz hub), when the rule is of that kind.
+    pub factor: Option<f64>,
+    /// The rule, with its source.
+    pub rule: String,
+    /// Where it is taken.
+    pub at: SmoothingAt,
+}
+
+/// What must be met.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Requirements {
+    /// Least safety against slip at the loosest pair.
+    pub slip_safety: f64,
+    /// Least safety against yield of ductile parts at the tightest pair.
+    pub yield_safety: f64,
+    /// Least safety against fracture of brittle parts at the tightest pair.
+    pub fracture_safety: f64,
+    /// Greatest press-in force, N.
+    pub press_force: Option<f64>,
+}
+
+/// A default that was taken because the file is silent.
+#[derive(Debug, Clone, PartialEq, Eq)]
+pub struct DefaultTaken {
+    /// Key of the joint file, such as `friction.holding`.
+    pub key: String,
+    /// The value as it would be written in the file.
+    pub value: String,
+    /// Where the default comes from.
+    pub source: String,
+}

@@ -1,0 +1,3 @@
+//! The hubgrip command line.
+
+fn main() {}

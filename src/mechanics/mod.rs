@@ -1,0 +1,5 @@
+//! Pure formulas of the thick-walled cylinder: one ring, a stack of rings, strength, capacity.
+//!
+//! All numbers are SI (m, Pa, N, N·m, rad/s, K). Interference is diametral. Plane stress, σz = 0.
+
+pub mod criteria;
