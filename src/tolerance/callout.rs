@@ -3,6 +3,7 @@
 mod text;
 
 use std::fmt;
+use std::str::FromStr;
 
 use super::ansi_b4_1::AnsiClass;
 use super::exact::{self, deviation_text, inches_text, micrometres_text, millimetres_text};
@@ -334,6 +335,15 @@ fn check_size(what: &'static str, value: f64) -> Result<(), ToleranceError> {
 
 fn check_finite(what: &'static str, value: f64) -> Result<(), ToleranceError> {
     if value.is_finite() { Ok(()) } else { Err(ToleranceError::NotFinite { what, value }) }
+}
+
+impl FromStr for FitCallout {
+    type Err = ToleranceError;
+
+    /// As [`FitCallout::parse`].
+    fn from_str(text: &str) -> Result<Self, ToleranceError> {
+        Self::parse(text)
+    }
 }
 
 impl fmt::Display for FitCallout {

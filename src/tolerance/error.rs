@@ -108,7 +108,7 @@ pub enum ToleranceError {
     },
     /// A deviation that is too large to be meant.
     #[error(
-        "the {}'s deviation {} is {:.3} % of the nominal diameter {}, which looks like a slip of the unit",
+        "the {}'s deviation {} is {:.1} % of the nominal diameter {}, which looks like a slip of the unit",
         .member, deviation_text(*.deviation), 100.0 * .deviation.abs() / .nominal, millimetres_text(*.nominal)
     )]
     ImplausibleDeviation {
@@ -151,6 +151,9 @@ pub enum ToleranceError {
     },
 }
 
+const GIVE_LIMITS: &str = "give the limits themselves, as in \
+     `{hole: {lower: 0 um, upper: 30 um}, shaft: {lower: 53 um, upper: 72 um}}`";
+
 impl ToleranceError {
     /// The way out, when there is one.
     ///
@@ -166,19 +169,15 @@ impl ToleranceError {
             Self::WrongMember { meant, .. } => Some(format!(
                 "holes have capital letters, shafts small ones; did you mean `{meant}`?"
             )),
-            Self::NominalOutOfRange { .. } => Some(
-                "nothing is extrapolated; give the limits themselves: \
-                 `{hole: {lower, upper}, shaft: {lower, upper}}`"
-                    .to_owned(),
-            ),
+            Self::NominalOutOfRange { nominal, .. } => {
+                (*nominal > 0.0).then(|| format!("nothing is extrapolated; {GIVE_LIMITS}"))
+            }
             Self::NotDefined { nearest, .. } if nearest.is_empty() => None,
             Self::NotDefined { nearest, .. } => Some(format!("defined at this size: {}", nearest.join(", "))),
             Self::NotUsed { .. } => Some(
                 "choose another class, or give the deviations themselves if the parts are made so".to_owned(),
             ),
-            Self::NotCarried { .. } => Some(
-                "give the limits from a printed copy: `{hole: {lower, upper}, shaft: {lower, upper}}`".to_owned(),
-            ),
+            Self::NotCarried { .. } => Some(format!("from a printed copy, {GIVE_LIMITS}")),
             Self::DeviationsReversed { .. } => Some(
                 "the lower deviation belongs to the smallest part, with its sign: `lower: -20 um, upper: -7 um`"
                     .to_owned(),

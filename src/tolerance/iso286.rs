@@ -21,6 +21,8 @@ use super::{Limits, Member, ToleranceError};
 const LARGEST: i64 = 3_150_000_000_000;
 /// Size to which the grades IT14 to IT18 and some deviations are not used, pm.
 const ONE_MILLIMETRE: i64 = 1_000_000_000;
+/// Size above which the width of IT4 was not found printed, pm.
+const ONE_METRE: i64 = 1_000_000_000_000;
 /// Size above which IT1 to IT5 were experimental, pm.
 const FIVE_HUNDRED_MILLIMETRES: i64 = 500_000_000_000;
 
@@ -125,6 +127,7 @@ impl ToleranceClass {
         }
         if size > FIVE_HUNDRED_MILLIMETRES {
             remarks.extend(self.remark_over_500_mm());
+            remarks.extend(self.remark_on_memory(size));
         }
         if self.letter == Letter::Js {
             remarks.extend(self.remark_on_rounding(tables, size));
@@ -153,6 +156,12 @@ impl ToleranceClass {
         } else {
             None
         }
+    }
+
+    fn remark_on_memory(&self, size: i64) -> Option<String> {
+        (self.grade.within(4, 4) && size > ONE_METRE).then(|| {
+            format!("{self}: the width of IT4 over 1000 mm rests on memory; confirm it against the standard.")
+        })
     }
 
     /// ISO 286-1 lets an odd IT of the grades 7 to 11 be rounded down to even before it is halved.
@@ -353,6 +362,8 @@ mod tests {
         assert!(class("ef6").remarks(0.005)[0].contains("fine mechanics"));
         assert!(class("H5").remarks(0.600)[0].contains("experimental"));
         assert!(class("H5").remarks(0.500).is_empty());
+        assert_eq!(class("H4").remarks(1.0).len(), 1);
+        assert!(class("H4").remarks(1.001)[1].contains("memory"));
         assert!(class("d17").remarks(0.600)[0].contains("IT6 to IT16"));
         // IT7 over 18 to 30 mm is 21 µm, odd; over 50 to 80 mm it is 30 µm, even.
         assert_eq!(

@@ -8,7 +8,7 @@ use crate::tolerance::{Member, ToleranceError};
 
 /// Fundamental deviation, the letter of a tolerance class (ISO 286-1); capitals for holes.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash)]
-#[allow(missing_docs)]
+#[expect(missing_docs, reason = "each variant is the letter itself")]
 pub enum Letter {
     A,
     B,
@@ -123,7 +123,7 @@ impl Grade {
         (1..=18).contains(&number).then_some(Self(number + 1))
     }
 
-    /// A numbered grade that is known to lie between 1 and 18.
+    /// A grade that is known to lie between IT1 and IT18, for constants.
     pub(super) const fn known(number: u8) -> Self {
         assert!(number >= 1 && number <= 18);
         Self(number + 1)

@@ -20,7 +20,7 @@ impl fmt::Display for PreferredFit {
     }
 }
 
-/// Preferred metric fits of ANSI B4.2-1978 (those of ISO 1829), hole basis first; from memory.
+/// Preferred metric fits of ANSI B4.2-1978, hole basis first; from memory.
 ///
 /// # Example
 /// ```
