@@ -4,6 +4,7 @@
 use std::collections::BTreeSet;
 use std::fs;
 use std::path::PathBuf;
+use std::sync::LazyLock;
 
 use hubgrip::material::friction::{FrictionMethod, Lubrication, friction};
 use hubgrip::material::library::Library;
@@ -135,6 +136,16 @@ fn metals_that_are_chilled_in_nitrogen_have_a_curve_down_to_it() {
         let (from, _) = material.expansion.range();
         assert!(excused || from <= media::liquid_nitrogen::TEMPERATURE.value, "{file}");
     }
+}
+
+#[test]
+fn the_example_in_the_readme_is_a_material() {
+    let readme = fs::read_to_string(folder().join("README.md")).unwrap();
+    let example = readme.split("```yaml\n").nth(1).and_then(|rest| rest.split("```").next()).unwrap();
+    let material = yaml::read(example, "demo", Origin::JointFile).unwrap_or_else(|fault| panic!("{fault:?}"));
+    assert_eq!(material.id, "Demo-steel+QT");
+    assert_eq!(material.strength.len(), 2);
+    assert!(material.expansion.strain(77.36).is_ok());
 }
 
 // ---- expansion
@@ -498,14 +509,15 @@ fn a_pair_without_data_says_so() {
 
 // ---- whatever is asked
 
+static LIBRARY: LazyLock<Library> = LazyLock::new(Library::built_in);
+
 proptest! {
     #[test]
     fn looking_up_any_name_never_panics(name in "\\PC{0,24}") {
-        let library = Library::built_in();
-        if let Err(error) = library.find(&name) {
+        if let Err(error) = LIBRARY.find(&name) {
             prop_assert!(!error.help().is_empty() && !error.to_string().is_empty());
         }
-        library.search(&name);
+        LIBRARY.search(&name);
     }
 
     #[test]

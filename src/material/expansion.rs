@@ -5,6 +5,9 @@ use std::sync::Arc;
 use super::REFERENCE_TEMPERATURE;
 use crate::numerics::interpolation::{InterpolationError, MonotoneCubic};
 
+/// How far beyond an end of the curve a temperature still counts as the end, K.
+const END_TOLERANCE: f64 = 1e-6;
+
 /// Thermal expansion of a free part from 20 °C as a curve of total strain.
 ///
 /// The argument is temperature in K, the value the strain (L − L₂₀)/L₂₀; it is zero at 293.15 K. It is
@@ -47,13 +50,27 @@ impl Expansion {
 
     /// Strain of a free part at `temperature` (K), zero at 293.15 K.
     ///
+    /// A millionth of a kelvin beyond an end counts as the end, so that a temperature converted from degrees
+    /// Celsius or Fahrenheit does not fall outside by its last digit.
+    ///
     /// # Errors
     /// Outside the curve's range: nothing is extrapolated.
+    ///
+    /// # Example
+    /// ```
+    /// use hubgrip::material::Expansion;
+    /// let steel = Expansion::from_mean(12e-6, 273.15, 573.15, "invented")?;
+    /// assert!((steel.strain(393.15)? - 1.2e-3).abs() < 1e-15);
+    /// assert!(steel.strain(600.0).is_err());
+    /// # Ok::<(), hubgrip::numerics::interpolation::InterpolationError>(())
+    /// ```
     pub fn strain(&self, temperature: f64) -> Result<f64, InterpolationError> {
         if temperature == REFERENCE_TEMPERATURE {
             return Ok(0.0);
         }
-        self.curve.value(temperature)
+        let (from, to) = self.curve.range();
+        let at_end = [from, to].into_iter().find(|end| (temperature - end).abs() <= END_TOLERANCE);
+        self.curve.value(at_end.unwrap_or(temperature))
     }
 
     /// Lowest and highest temperature of the curve, K.
@@ -71,7 +88,7 @@ impl Expansion {
             let (low, high) = (REFERENCE_TEMPERATURE - 1.0, REFERENCE_TEMPERATURE + 1.0);
             return Ok((self.curve.value(high)? - self.curve.value(low)?) / 2.0);
         }
-        Ok(self.curve.value(temperature)? / difference)
+        Ok(self.strain(temperature)? / difference)
     }
 
     /// The points of the curve, (K, strain).
