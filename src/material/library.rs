@@ -78,7 +78,7 @@ impl Library {
         for folder in folders {
             match files_of(folder) {
                 Ok(files) => library.read_folder(&files, &mut faults),
-                Err(fault) => faults.push(fault),
+                Err(fault) => faults.push(*fault),
             }
         }
         if faults.is_empty() { Ok(library) } else { Err(faults) }
@@ -183,7 +183,7 @@ impl Library {
                         None => self.add(material, file),
                     }
                 }
-                Err(fault) => faults.push(fault),
+                Err(fault) => faults.push(*fault),
             }
         }
     }
@@ -222,9 +222,10 @@ fn twice(material: &Material, other: &Material, file: &Path) -> Diagnostic {
         .in_file(file)
 }
 
-fn files_of(folder: &Path) -> Result<Vec<PathBuf>, Diagnostic> {
+fn files_of(folder: &Path) -> Result<Vec<PathBuf>, Box<Diagnostic>> {
     let fault = |error: std::io::Error| {
-        Diagnostic::new(format!("cannot read the folder of materials: {error}")).in_file(folder)
+        let message = format!("cannot read the folder of materials: {error}");
+        Box::new(Diagnostic::new(message).in_file(folder))
     };
     let mut files = Vec::new();
     for entry in std::fs::read_dir(folder).map_err(fault)? {

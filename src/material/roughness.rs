@@ -253,8 +253,8 @@ mod tests {
     fn the_band_holds_the_ratios_of_a_published_table() {
         // Table of ISO N grades, Ra and the rougher of its two Rz columns, µm.
         for (ra, rz) in [(0.1, 0.8), (0.2, 1.6), (0.4, 2.5), (0.8, 4.0), (1.6, 8.0), (3.2, 16.0)] {
-            let ratio = rz / ra;
-            assert!(ratio >= RZ_OVER_RA_BAND.low && ratio <= RZ_OVER_RA_BAND.high, "Ra {ra}: {ratio}");
+            let band = RZ_OVER_RA_BAND.low..=RZ_OVER_RA_BAND.high;
+            assert!(band.contains(&(rz / ra)), "Ra {ra}: {}", rz / ra);
         }
     }
 

@@ -25,30 +25,31 @@ pub const LARGEST_FILE: usize = 1 << 20;
 /// assert_eq!(fault.place.unwrap().line, 2);
 /// assert_eq!(fault.place.unwrap().column, 17);
 /// ```
-pub fn read(text: &str, id_default: &str, origin: Origin) -> Result<Material, Diagnostic> {
+pub fn read(text: &str, id_default: &str, origin: Origin) -> Result<Material, Box<Diagnostic>> {
     if text.len() > LARGEST_FILE {
-        return Err(Diagnostic::new("the file is larger than 1 MiB").with_help("one material a file"));
+        let fault = Diagnostic::new("the file is larger than 1 MiB").with_help("one material a file");
+        return Err(Box::new(fault));
     }
     let text = text.strip_prefix('\u{feff}').unwrap_or(text);
     let parser = serde_yaml::Deserializer::from_str(text);
     let record: MaterialRecord =
-        serde_path_to_error::deserialize(parser).map_err(|error| of_parser(text, &error))?;
-    record.into_material(id_default, origin).map_err(|error| of_record(text, error))
+        serde_path_to_error::deserialize(parser).map_err(|error| Box::new(of_parser(text, &error)))?;
+    record.into_material(id_default, origin).map_err(|error| Box::new(of_record(text, error)))
 }
 
 /// The material in the file at `path`; its identifier is the file's stem unless the record has one.
 ///
 /// # Errors
 /// The first fault, with the file and the place in it.
-pub fn read_file(path: &Path) -> Result<Material, Diagnostic> {
+pub fn read_file(path: &Path) -> Result<Material, Box<Diagnostic>> {
     let bytes = std::fs::read(path).map_err(|error| of_file(path, &error.to_string()))?;
     let text = String::from_utf8(bytes).map_err(|_| of_file(path, "the file is not UTF-8 text"))?;
     let stem = path.file_stem().unwrap_or_default().to_string_lossy();
-    read(&text, &stem, Origin::File(path.to_path_buf())).map_err(|fault| fault.in_file(path))
+    read(&text, &stem, Origin::File(path.to_path_buf())).map_err(|fault| Box::new(fault.in_file(path)))
 }
 
-fn of_file(path: &Path, reason: &str) -> Diagnostic {
-    Diagnostic::new(format!("cannot read the material file: {reason}")).in_file(path)
+fn of_file(path: &Path, reason: &str) -> Box<Diagnostic> {
+    Box::new(Diagnostic::new(format!("cannot read the material file: {reason}")).in_file(path))
 }
 
 fn of_parser(text: &str, error: &serde_path_to_error::Error<serde_yaml::Error>) -> Diagnostic {
