@@ -1,1 +1,6 @@
-//! Placeholder, to be filled.
+//! What is shown of the findings: HTML with drawings and plots.
+
+pub mod mathml;
+
+mod text_width;
+mod typeset;
