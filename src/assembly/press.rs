@@ -124,6 +124,29 @@ pub fn force_at(input: &PressInput, travel: f64) -> Result<f64, AssemblyError> {
     Ok(LeadIn::of(input)?.force(travel))
 }
 
+/// Greatest force while pressing in, N: at s = L + l_c μ/K, while the chamfer leaves the bore.
+///
+/// # Errors
+/// As [`press_curve`].
+///
+/// # Example
+/// ```
+/// use hubgrip::assembly::press::{PressInput, peak_force};
+/// let input = PressInput {
+///     pressure: 75e6,
+///     interference: 50e-6,
+///     diameter: 0.05,
+///     length: 0.04,
+///     friction: 0.1,
+///     chamfer_angle: 5f64.to_radians(),
+/// };
+/// assert!((peak_force(&input).unwrap() - 47194.6073).abs() < 1e-3);
+/// ```
+pub fn peak_force(input: &PressInput) -> Result<f64, AssemblyError> {
+    let lead = LeadIn::of(input)?;
+    Ok(lead.force(lead.peak_travel()))
+}
+
 /// Force at first movement when the joint is pushed out, F = μ p π d L, with the friction of release.
 ///
 /// | symbol | meaning | unit | valid |

@@ -2,7 +2,7 @@
 
 use super::{AssemblyFindings, BathFindings, FindingsError, PairFindings, ThermalRoute};
 use crate::assembly::press::{self, PressCurve, PressInput};
-use crate::assembly::thermal::{BathRoute, Joining, Obstacle, Route};
+use crate::assembly::joining::{BathRoute, Joining, Obstacle, Route};
 use crate::joint::{Bath, Joint};
 use crate::material::media;
 use crate::quantity::{Measure, UnitSystem, show};
@@ -169,8 +169,8 @@ fn hub_limit(joint: &Joint) -> Option<(f64, String)> {
 /// Temperature of a bath, K.
 pub fn bath_temperature(bath: Bath) -> f64 {
     match bath {
-        Bath::DryIce => media::DRY_ICE_TEMPERATURE,
-        Bath::LiquidNitrogen => media::LIQUID_NITROGEN_TEMPERATURE,
+        Bath::DryIce => media::dry_ice::TEMPERATURE.value,
+        Bath::LiquidNitrogen => media::liquid_nitrogen::TEMPERATURE.value,
     }
 }
 
