@@ -217,7 +217,7 @@ strength:
             ("100 mm", "16 mm", "sections must rise from row to row", "{section_up_to"),
             ("[200 degC", "[90 degC", "temperatures must rise from point to point", "[90 degC"),
             ("13e-6", "5e-6", "the part does not grow from this point to the next when heated", "[200 degC"),
-            ("[100 degC", "[-300 degC", "the temperature is at or below 0 K", "[-300 degC"),
+            ("100 degC", "-300 degC", "below absolute zero", "-300 degC"),
         ] {
             let found = fault(from, to);
             assert!(found.0.contains(message) && found.1 == meant, "{to}: {found:?}");
