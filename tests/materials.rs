@@ -148,6 +148,22 @@ fn the_example_in_the_readme_is_a_material() {
     assert!(material.expansion.strain(77.36).is_ok());
 }
 
+#[test]
+fn the_schema_for_editors_knows_every_key_and_no_other() {
+    let schema = schemars::generate::SchemaSettings::draft07().into_generator();
+    let schema = schema.into_root_schema_for::<hubgrip::material::record::MaterialRecord>().to_value();
+    assert_eq!(schema["additionalProperties"], false);
+    let known = schema["properties"].as_object().unwrap();
+    for (file, text) in Library::built_in_records() {
+        let record: serde_yaml::Mapping = serde_yaml::from_str(text).unwrap();
+        for key in record.keys().filter_map(|key| key.as_str()) {
+            assert!(known.contains_key(key), "{file}: {key}");
+        }
+    }
+    let required = ["kind", "youngs_modulus", "poisson", "density", "expansion"];
+    assert_eq!(schema["required"], serde_json::json!(required));
+}
+
 // ---- expansion
 
 /// NIST fit 1e5 (L − L₂₉₃)/L₂₉₃ = a + bT + cT² + dT³ + eT⁴, as the strain from 20 °C.

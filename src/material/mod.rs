@@ -57,7 +57,7 @@ pub struct Range {
 }
 
 /// How a material fails, which picks its strength criterion.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, serde::Serialize, serde::Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Eq, serde::Serialize, serde::Deserialize, schemars::JsonSchema)]
 #[serde(rename_all = "lowercase")]
 pub enum Kind {
     /// Yields before it breaks: von Mises or Tresca against yield strength.

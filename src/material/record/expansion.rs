@@ -1,8 +1,10 @@
 //! Thermal expansion as written: a mean coefficient, a table, or the name of a shared curve.
 
+use std::borrow::Cow;
 use std::fmt;
 use std::sync::Arc;
 
+use schemars::{JsonSchema, Schema, SchemaGenerator, json_schema};
 use serde::Deserialize;
 use serde::de::value::{MapAccessDeserializer, StrDeserializer};
 use serde::de::{Deserializer, Error, MapAccess, Visitor};
@@ -50,18 +52,46 @@ pub enum ExpansionRecord {
 }
 
 /// The mapping form of an expansion.
-#[derive(Debug, Clone, Default, PartialEq, Deserialize)]
+#[derive(Debug, Clone, Default, PartialEq, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct ExpansionTable {
+    /// One mean coefficient of expansion from 20 °C.
     mean: Option<ExpansionCoefficient>,
+    /// Lowest temperature for which `mean` holds; -50 degC when absent.
     from: Option<Temperature>,
+    /// Highest temperature for which `mean` holds; 350 degC when absent.
     to: Option<Temperature>,
+    /// Name of a shared curve used below 20 °C.
     cold: Option<String>,
+    /// Temperatures with the total strain from 20 °C.
     curve: Option<Vec<(Temperature, Number)>>,
+    /// Temperatures with the mean coefficient from 20 °C to each.
     means: Option<Vec<(Temperature, ExpansionCoefficient)>>,
+    /// False when the part may shrink on heating.
     #[serde(default = "yes")]
     monotone: bool,
+    /// Where the figures come from.
     source: Option<String>,
+}
+
+impl JsonSchema for ExpansionRecord {
+    fn inline_schema() -> bool {
+        true
+    }
+
+    fn schema_name() -> Cow<'static, str> {
+        "Expansion".into()
+    }
+
+    fn json_schema(generator: &mut SchemaGenerator) -> Schema {
+        json_schema!({
+            "description": "thermal expansion: a mean coefficient, the name of a shared curve, or a table",
+            "anyOf": [
+                { "type": "string", "examples": ["11.5e-6 /K", "ferritic steel"] },
+                generator.subschema_for::<ExpansionTable>(),
+            ],
+        })
+    }
 }
 
 fn yes() -> bool {
@@ -202,11 +232,6 @@ fn add_zero(points: &mut Vec<Point>) -> Result<(), MaterialError> {
 }
 
 fn check_points(points: &[Point], monotone: bool) -> Result<(), MaterialError> {
-    for point in points {
-        if point.kelvin <= 0.0 {
-            return Err(located(MaterialError::new("the temperature is at or below 0 K"), &point.path));
-        }
-    }
     for pair in points.windows(2) {
         let at = if pair[1].path.is_empty() { &pair[0].path } else { &pair[1].path };
         if pair[1].kelvin <= pair[0].kelvin {

@@ -36,6 +36,7 @@ mod value;
 
 use std::sync::Arc;
 
+use schemars::JsonSchema;
 use serde::Deserialize;
 
 pub use error::{MaterialError, Step};
@@ -47,7 +48,7 @@ use super::{Family, Kind, Material, Origin, REFERENCE_TEMPERATURE, Sourced, Stre
 use crate::quantity::{Conductivity, Density, Number, Pressure, SpecificHeat, Temperature};
 
 /// A material as written; see the [module](self) for the keys.
-#[derive(Debug, Clone, PartialEq, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct MaterialRecord {
     /// Identifier, such as `C45+N`.

@@ -1,8 +1,10 @@
 //! Strength as written: rows by ruling section, or one pair of values for any size.
 
+use std::borrow::Cow;
 use std::fmt;
 use std::sync::Arc;
 
+use schemars::{JsonSchema, Schema, SchemaGenerator, json_schema};
 use serde::Deserialize;
 use serde::de::value::{MapAccessDeserializer, SeqAccessDeserializer};
 use serde::de::{Deserializer, MapAccess, SeqAccess, Visitor};
@@ -13,7 +15,7 @@ use crate::material::{Kind, Strength};
 use crate::quantity::{Length, Pressure};
 
 /// One row: `{section_up_to: 16 mm, yield_strength: 340 MPa, tensile_strength: 620 MPa}`.
-#[derive(Debug, Clone, PartialEq, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct StrengthRow {
     /// Largest ruling section for which the row holds; for castings the wall thickness.
@@ -43,11 +45,33 @@ impl<'de> Deserialize<'de> for StrengthRecord {
     }
 }
 
-#[derive(Deserialize)]
+#[derive(Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 struct WithSource {
+    /// Source of the rows that have none of their own.
     source: Option<String>,
+    /// The rows, smallest section first.
     sections: Vec<StrengthRow>,
+}
+
+impl JsonSchema for StrengthRecord {
+    fn inline_schema() -> bool {
+        true
+    }
+
+    fn schema_name() -> Cow<'static, str> {
+        "Strength".into()
+    }
+
+    fn json_schema(generator: &mut SchemaGenerator) -> Schema {
+        json_schema!({
+            "description": "strengths by ruling section, smallest first",
+            "anyOf": [
+                generator.subschema_for::<Vec<StrengthRow>>(),
+                WithSource::json_schema(generator),
+            ],
+        })
+    }
 }
 
 struct StrengthVisitor;

@@ -1,9 +1,11 @@
 //! A value written plain or with its source.
 
+use std::borrow::Cow;
 use std::fmt;
 use std::marker::PhantomData;
 use std::sync::Arc;
 
+use schemars::{JsonSchema, Schema, SchemaGenerator, json_schema};
 use serde::Deserialize;
 use serde::de::value::{MapAccessDeserializer, StrDeserializer};
 use serde::de::{Deserializer, Error, MapAccess, Visitor};
@@ -38,6 +40,31 @@ impl<'de, T: Deserialize<'de>> Deserialize<'de> for Value<T> {
 struct WithSource<T> {
     value: T,
     source: Option<String>,
+}
+
+impl<T: JsonSchema> JsonSchema for Value<T> {
+    fn inline_schema() -> bool {
+        true
+    }
+
+    fn schema_name() -> Cow<'static, str> {
+        format!("Sourced{}", T::schema_name()).into()
+    }
+
+    fn json_schema(generator: &mut SchemaGenerator) -> Schema {
+        let plain = generator.subschema_for::<T>();
+        json_schema!({
+            "anyOf": [
+                plain,
+                {
+                    "type": "object",
+                    "properties": { "value": plain, "source": { "type": "string" } },
+                    "required": ["value"],
+                    "additionalProperties": false,
+                },
+            ],
+        })
+    }
 }
 
 struct ValueVisitor<T>(PhantomData<T>);
