@@ -1,6 +1,7 @@
 //! What is shown of the findings: HTML with drawings and plots.
 
 pub mod drawing;
+pub mod html;
 pub mod mathml;
 pub mod plot;
 
@@ -17,28 +18,7 @@ mod dump {
     #[test]
     fn dump() {
         for (name, findings) in super::sample::all() {
-            let drawing = super::drawing::section(&findings);
-            let mut out = format!(
-                "<!DOCTYPE html><html><head><meta charset='utf-8'/></head><body style='background:#fff'><div>{}<p>{}</p></div>",
-                drawing.svg.into_string(),
-                drawing.caption
-            );
-            let plots = [
-                Some(super::plot::tolerance_zones(&findings)),
-                Some(super::plot::stress(&findings)),
-                super::plot::press_force(&findings),
-                super::plot::diameters(&findings),
-            ];
-            for plot in plots.into_iter().flatten() {
-                out.push_str(&format!(
-                    "<div><h3>{}</h3>{}<p>{}</p></div>",
-                    plot.title,
-                    plot.svg.into_string(),
-                    plot.caption
-                ));
-            }
-            out.push_str("</body></html>");
-            std::fs::write(format!("/tmp/gfx/{name}.html"), out).unwrap();
+            std::fs::write(format!("/tmp/gfx/{name}.html"), super::html::html(&findings)).unwrap();
         }
     }
 }
