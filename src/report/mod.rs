@@ -5,6 +5,7 @@ pub mod drawing;
 pub mod json;
 pub mod limits;
 pub mod materials;
+pub mod html;
 pub mod mathml;
 pub mod plot;
 pub mod terminal;
@@ -17,3 +18,12 @@ mod units;
 
 #[cfg(test)]
 mod sample;
+#[cfg(test)]
+mod dump {
+    #[test]
+    fn dump() {
+        for (name, findings) in super::sample::all() {
+            std::fs::write(format!("/tmp/gfx/{name}.html"), super::html::html(&findings)).unwrap();
+        }
+    }
+}

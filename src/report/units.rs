@@ -7,6 +7,8 @@ use crate::quantity::UnitSystem;
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub(crate) enum Measure {
     Size,
+    /// A size with its deviation.
+    Limit,
     Deviation,
     Roughness,
     Pressure,
@@ -69,6 +71,8 @@ impl Units {
         let value = si * factor + offset;
         let decimals = match measure {
             Measure::Size => 3,
+            Measure::Limit if self.system == UnitSystem::Metric => 3,
+            Measure::Limit => 4,
             Measure::Deviation => 1,
             Measure::Temperature => 0,
             Measure::Number => 2,
@@ -86,8 +90,8 @@ impl Units {
     fn scale(self, measure: Measure) -> (f64, f64, &'static str) {
         let metric = self.system == UnitSystem::Metric;
         match measure {
-            Measure::Size if metric => (1e3, 0.0, "mm"),
-            Measure::Size => (1.0 / 0.0254, 0.0, "in"),
+            Measure::Size | Measure::Limit if metric => (1e3, 0.0, "mm"),
+            Measure::Size | Measure::Limit => (1.0 / 0.0254, 0.0, "in"),
             Measure::Deviation if metric => (1e6, 0.0, "µm"),
             Measure::Deviation => (1e3 / 0.0254, 0.0, "thou"),
             Measure::Roughness if metric => (1e6, 0.0, "µm"),

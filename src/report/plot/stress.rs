@@ -248,6 +248,7 @@ fn label(chart: &mut Chart, walls: &Walls, findings: &Findings, ring: usize, pro
         None if last => names.push(("radial".to_owned(), radial)),
         None => {}
     }
+    names.sort_by(|a, b| b.1.total_cmp(&a.1));
     for (name, value) in names {
         let at = (x, units.on_axis(Measure::Pressure, value));
         chart.mark(at, Pair::Tightest);
