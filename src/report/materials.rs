@@ -96,7 +96,7 @@ impl Values {
 
     fn write(&self, out: &mut String) {
         for (name, value, number) in &self.lines {
-            let _ = writeln!(out, "  {name:34} {value:26} [{number}]");
+            let _ = writeln!(out, "  {name:36} {value:24} [{number}]");
         }
         out.push_str("\n  sources\n");
         for (index, source) in self.sources.iter().enumerate() {
