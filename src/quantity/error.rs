@@ -102,14 +102,18 @@ impl QuantityError {
             Self::Empty { kind } | Self::NoNumber { kind, .. } | Self::NotFinite { kind, .. } => {
                 Some(format!("write a number{}", with_units(*kind)))
             }
-            Self::NoUnit { kind, .. } => Some(format!("the units of {} are {}", kind.phrase(), kind.unit_names())),
+            Self::NoUnit { kind, .. } => {
+                Some(format!("the units of {} are {}", kind.phrase(), kind.unit_names()))
+            }
             Self::UnknownUnit { near: Some(near), .. } => Some(format!("did you mean {near}?")),
             Self::UnknownUnit { kind, .. } | Self::WrongKind { kind, .. } => {
                 Some(format!("the units of {} are {}", kind.phrase(), kind.unit_names()))
             }
             Self::UnitNotDue { .. } => Some("write the number alone".to_owned()),
             Self::NotPlainDecimal { meant: Some(meant), .. } => Some(format!("write {meant}")),
-            Self::NotPlainDecimal { meant: None, .. } => Some("write the digits together, such as 1200.5".to_owned()),
+            Self::NotPlainDecimal { meant: None, .. } => {
+                Some("write the digits together, such as 1200.5".to_owned())
+            }
             Self::BelowAbsoluteZero { .. } => Some("temperatures are in degC, degF or K".to_owned()),
             Self::RangeOrder { .. } => Some("write the lesser value first, such as 0.08 to 0.14".to_owned()),
             Self::NotPlusMinus { .. } => Some("write ±10 um, +/- 10 um or +30 / -10 um".to_owned()),

@@ -135,7 +135,8 @@ impl FromStr for NumberRange {
 
 impl<'de> Deserialize<'de> for NumberRange {
     fn deserialize<D: Deserializer<'de>>(deserializer: D) -> Result<Self, D::Error> {
-        let text = Text { expected: "a number or a range of numbers", read: |text| text.parse::<NumberRange>() };
+        let text =
+            Text { expected: "a number or a range of numbers", read: |text| text.parse::<NumberRange>() };
         deserializer.deserialize_str(text)
     }
 }

@@ -74,7 +74,8 @@ pub fn parse_plus_minus(kind: Kind, text: &str) -> Result<(f64, f64), QuantityEr
     }
     let (_, _, unit) = split(kind, lower)?;
     let (_, _, own_unit) = split(kind, upper)?;
-    let upper = if own_unit.is_empty() { parse(kind, &format!("{upper} {unit}"))? } else { parse(kind, upper)? };
+    let upper =
+        if own_unit.is_empty() { parse(kind, &format!("{upper} {unit}"))? } else { parse(kind, upper)? };
     Ok((parse(kind, lower)?, upper))
 }
 
@@ -94,7 +95,11 @@ pub fn parse_with_uncertainty(kind: Kind, text: &str) -> Result<(f64, f64), Quan
     };
     let (_, _, own_unit) = split(kind, value)?;
     let (_, _, unit) = split(kind, width)?;
-    let value = if own_unit.is_empty() { parse(kind, &format!("{} {unit}", value.trim()))? } else { parse(kind, value)? };
+    let value = if own_unit.is_empty() {
+        parse(kind, &format!("{} {unit}", value.trim()))?
+    } else {
+        parse(kind, value)?
+    };
     let difference = if kind == Kind::Temperature { Kind::TemperatureDifference } else { kind };
     let width = parse(difference, width)?;
     if width < 0.0 {

@@ -54,9 +54,10 @@ pub(super) fn split(kind: Kind, text: &str) -> Result<(Written, &str, &str), Qua
     }
     match scan::number(text) {
         Scan::Found(written, number, unit) => Ok((written, number, unit)),
-        Scan::Grouped(given, meant) => {
-            Err(QuantityError::NotPlainDecimal { given: shown(&given), meant: meant.map(|meant| shown(&meant)) })
-        }
+        Scan::Grouped(given, meant) => Err(QuantityError::NotPlainDecimal {
+            given: shown(&given),
+            meant: meant.map(|meant| shown(&meant)),
+        }),
         Scan::NotFinite => Err(QuantityError::NotFinite { kind, given: shown(text) }),
         Scan::Missing => Err(QuantityError::NoNumber { kind, given: shown(text) }),
     }
@@ -96,7 +97,11 @@ pub(super) fn value(kind: Kind, text: &str, written: &Written, unit: &Unit) -> R
 }
 
 fn finite(kind: Kind, text: &str, value: f64) -> Result<f64, QuantityError> {
-    if value.is_finite() { Ok(value + 0.0) } else { Err(QuantityError::NotFinite { kind, given: shown(text) }) }
+    if value.is_finite() {
+        Ok(value + 0.0)
+    } else {
+        Err(QuantityError::NotFinite { kind, given: shown(text) })
+    }
 }
 
 /// A text as an error repeats it: trimmed, without control characters, not endless.

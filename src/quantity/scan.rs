@@ -26,7 +26,9 @@ impl Written {
             Self::Decimal { mantissa, exponent } => {
                 format!("{mantissa}e{}", exponent.saturating_add(power)).parse().unwrap_or(f64::NAN)
             }
-            Self::Fraction { numerator, denominator } if power >= 0 => numerator * 10f64.powi(power) / denominator,
+            Self::Fraction { numerator, denominator } if power >= 0 => {
+                numerator * 10f64.powi(power) / denominator
+            }
             Self::Fraction { numerator, denominator } => numerator / (denominator * 10f64.powi(-power)),
         }
     }
@@ -35,7 +37,9 @@ impl Written {
     pub(super) fn times_ratio(&self, numerator: f64, denominator: f64) -> f64 {
         match self {
             Self::Decimal { .. } => self.times_ten_to(0) * numerator / denominator,
-            Self::Fraction { numerator: top, denominator: bottom } => top * numerator / (bottom * denominator),
+            Self::Fraction { numerator: top, denominator: bottom } => {
+                top * numerator / (bottom * denominator)
+            }
         }
     }
 }
@@ -90,7 +94,9 @@ fn decimal_length(text: &str) -> usize {
     for (index, character) in text.char_indices() {
         match character {
             '0'..='9' => has_digit = true,
-            '.' if !point && text[index + 1..].starts_with(|next: char| next.is_ascii_digit()) => point = true,
+            '.' if !point && text[index + 1..].starts_with(|next: char| next.is_ascii_digit()) => {
+                point = true
+            }
             '.' if !point && has_digit => {
                 // A point at the end, as in `60. mm`, belongs to the number unless a letter follows it.
                 let follows = text[index + 1..].chars().next();
@@ -119,7 +125,9 @@ fn grouped<'a>(text: &'a str, end: usize, rest: &'a str) -> Option<Scan<'a>> {
             Some(Scan::Grouped(text.to_owned(), meant))
         }
         '_' | '\'' if digit_after => Some(Scan::Grouped(text.to_owned(), None)),
-        'x' | 'X' if mantissa.trim_start_matches(['+', '-']) == "0" => Some(Scan::Grouped(text.to_owned(), None)),
+        'x' | 'X' if mantissa.trim_start_matches(['+', '-']) == "0" => {
+            Some(Scan::Grouped(text.to_owned(), None))
+        }
         '.' if digit_after => Some(Scan::Grouped(text.to_owned(), None)),
         ' ' if digit_after => Some(Scan::Grouped(text.to_owned(), None)),
         _ => None,

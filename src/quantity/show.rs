@@ -121,7 +121,9 @@ pub fn show(measure: Measure, si: f64, system: UnitSystem) -> Shown {
         (Measure::Size, UnitSystem::Inch) => trimmed(value, 5),
         (Measure::Deviation, UnitSystem::Metric) => trimmed(value, 1),
         (Measure::Deviation, UnitSystem::Inch) => trimmed(value, 2),
-        (Measure::Temperature | Measure::TemperatureDifference, _) if value.abs() < 99.95 => trimmed(value, 1),
+        (Measure::Temperature | Measure::TemperatureDifference, _) if value.abs() < 99.95 => {
+            trimmed(value, 1)
+        }
         (Measure::Temperature | Measure::TemperatureDifference, _) => trimmed(value, 0),
         _ => number(value, 4),
     };
@@ -155,7 +157,11 @@ pub fn number(value: f64, significant_digits: usize) -> String {
     let (mantissa, exponent) = scientific.split_once('e').unwrap_or((&scientific, "0"));
     let exponent: i32 = exponent.parse().unwrap_or(0);
     if !(-4..15).contains(&exponent) {
-        let mantissa = if mantissa.contains('.') { mantissa.trim_end_matches('0').trim_end_matches('.') } else { mantissa };
+        let mantissa = if mantissa.contains('.') {
+            mantissa.trim_end_matches('0').trim_end_matches('.')
+        } else {
+            mantissa
+        };
         return format!("{mantissa}e{exponent}");
     }
     let rounded: f64 = scientific.parse().unwrap_or(value);

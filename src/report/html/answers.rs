@@ -78,7 +78,10 @@ fn assembly(sheet: Sheet) -> String {
     }
     match plan.method {
         Method::Press => {
-            format!("press in with up to {}", units.text(Measure::Force, assembly.press.tightest.peak_force))
+            format!(
+                "press in with up to {}",
+                units.brief(Measure::Force, assembly.press.tightest.peak_force).text()
+            )
         }
         Method::HeatHub => match assembly.heat_hub.temperature {
             Some(hot) => format!("heat the {hub} to {}", temperature(hot)),
@@ -118,7 +121,7 @@ fn shortfall(units: Units, verdict: &Verdict, found: Option<f64>) -> String {
 fn shown(units: Units, unit: VerdictUnit, value: f64) -> String {
     match unit {
         VerdictUnit::Safety => safety(value),
-        VerdictUnit::Force => units.text(Measure::Force, value),
+        VerdictUnit::Force => units.brief(Measure::Force, value).text(),
         VerdictUnit::Temperature => units.text(Measure::Temperature, value),
     }
 }

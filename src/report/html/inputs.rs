@@ -58,13 +58,13 @@ pub(super) fn body(sheet: Sheet) -> Markup {
         }
         @for (heading, rows) in groups.iter().filter(|(_, rows)| !rows.is_empty()) {
             tbody {
-                tr { th.group colspan="3" scope="rowgroup" { (heading) } }
+                tr.group { th colspan="3" scope="rowgroup" { (heading) } }
                 @for input in rows { (row(joint, input)) }
             }
         }
         @if !others.is_empty() {
             tbody {
-                tr { th.group colspan="3" scope="rowgroup" { "Other defaults taken" } }
+                tr.group { th colspan="3" scope="rowgroup" { "Other defaults taken" } }
                 @for input in &others { (row(joint, input)) }
             }
         }
@@ -87,7 +87,9 @@ fn row(joint: &Joint, input: &Input) -> Markup {
                     Some(default) => { strong { "default" } " · " (default.source) }
                     None => {
                         @if set { "set on the command line" } @else { "given" }
-                        @if let Some(source) = &input.source { " · " (source) }
+                        @if let Some(source) = input.source.as_ref().filter(|source| !source.contains("joint file")) {
+                            " · " (source)
+                        }
                     }
                 }
             }

@@ -49,7 +49,7 @@ pub fn stress(findings: &Findings) -> Plot {
         walls.axis(units),
         y_axis,
         370.0,
-        Margins { left: 62.0, right: 112.0, top: 50.0, bottom: 44.0 },
+        Margins { left: 62.0, right: 130.0, top: 50.0, bottom: 44.0 },
     );
 
     chart.rule((0.0, 0.0), (1.0, 0.0));
@@ -66,7 +66,7 @@ pub fn stress(findings: &Findings) -> Plot {
         let (from, to) = walls.ends(limit.ring);
         let y = on_axis(limit.value);
         let last = limit.ring + 1 == joint.rings.len();
-        let name = format!("{} {}", limit.name, units.reading(Measure::Pressure, limit.value).number);
+        let name = format!("{} {}", limit.name, units.brief(Measure::Pressure, limit.value).number);
         let at = if last { (to, y) } else { (0.5 * (from + to), y) };
         chart.limit((from, y), (to, y), name, at, if last { Side::Right } else { Side::Above });
     }
@@ -236,7 +236,7 @@ fn label(chart: &mut Chart, walls: &Walls, findings: &Findings, ring: usize, pro
         _ => "equivalent",
     };
     let mut names: Vec<(String, f64)> = vec![(equivalent.to_owned(), end(&profile.equivalent))];
-    let number = |value: f64| units.reading(Measure::Pressure, value).number;
+    let number = |value: f64| units.brief(Measure::Pressure, value).number;
     let near = |a: f64, b: f64| number(a) == number(b);
     let (hoop, radial) = (end(&profile.hoop), end(&profile.radial));
     match names.iter_mut().find(|(_, value)| near(*value, hoop)) {
@@ -283,8 +283,8 @@ fn caption(findings: &Findings, limits: &[Limit], shown: &dyn Fn(f64) -> bool) -
         text.push_str(&format!(
             "At the tightest pair the {} reaches {}, {share:.0} % of {kind} ({}).",
             ring.name,
-            units.text(Measure::Pressure, stress.equivalent),
-            units.text(Measure::Pressure, strength),
+            units.brief(Measure::Pressure, stress.equivalent).text(),
+            units.brief(Measure::Pressure, strength).text(),
         ));
         let hidden = limits.iter().any(|limit| limit.ring == index && !shown(limit.value));
         if hidden {
