@@ -44,10 +44,24 @@ pub struct Joint {
     pub display: UnitSystem,
     /// Every default that was taken, in the order of the joint file's keys.
     pub defaults: Vec<DefaultTaken>,
+    /// What a reader must know about the inputs, such as limits that rest on memory.
+    pub remarks: Vec<String>,
     /// Changes made from the command line, as typed.
     pub set: Vec<(String, String)>,
     /// SHA-256 of the input text (and of the changes), hexadecimal.
     pub digest: String,
+}
+
+impl Joint {
+    /// Length that carries: the hub's length less the relief, m.
+    pub fn engaged_length(&self) -> f64 {
+        self.length - self.relief
+    }
+
+    /// The innermost and the outermost ring.
+    pub fn shaft_and_hub(&self) -> (&Ring, &Ring) {
+        (&self.rings[0], &self.rings[self.rings.len() - 1])
+    }
 }
 
 /// One ring of the joint; the shaft is a ring whose inner diameter may be zero.

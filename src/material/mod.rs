@@ -1,9 +1,32 @@
 //! The material library: strengths, elastic and thermal data with their sources, expansion curves, friction.
+//!
+//! | module | subject |
+//! |---|---|
+//! | [`record`] | a material as written in YAML, in a library file or in place in a joint file |
+//! | [`yaml`] | reading such a file, with file, line and column of every fault |
+//! | [`library`] | the records built in and the user's folders; finding a material by any of its names |
+//! | [`curves`] | expansion curves that several materials share |
+//! | [`friction`] | coefficients of friction by pair, method and lubrication |
+//! | [`roughness`] | usual roughness, Ra and Rz, loss of interference by smoothing |
+//! | [`media`] | cold baths, ovens, oil baths: temperatures and film coefficients |
+
+pub mod curves;
+pub mod friction;
+pub mod library;
+pub mod media;
+pub mod record;
+pub mod roughness;
+pub mod yaml;
+
+mod catalogue;
+mod expansion;
+mod family;
 
 use std::path::PathBuf;
 use std::sync::Arc;
 
-use crate::numerics::interpolation::{InterpolationError, MonotoneCubic};
+pub use expansion::Expansion;
+pub use family::Family;
 
 /// Reference temperature of sizes: 20 °C (ISO 1:2022, clause 4).
 pub const REFERENCE_TEMPERATURE: f64 = 293.15;
@@ -34,7 +57,7 @@ pub struct Range {
 }
 
 /// How a material fails, which picks its strength criterion.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, serde::Serialize, serde::Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Eq, serde::Serialize, serde::Deserialize, schemars::JsonSchema)]
 #[serde(rename_all = "lowercase")]
 pub enum Kind {
     /// Yields before it breaks: von Mises or Tresca against yield strength.
@@ -48,7 +71,7 @@ pub enum Kind {
 /// Strength of a section, SI.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Strength {
-    /// Largest ruling section for which it holds, m; none: any size.
+    /// Largest ruling section for which it holds, m (for castings the wall thickness); none: any size.
     pub section_up_to: Option<f64>,
     /// Yield strength (Re or Rp0.2), Pa; none for brittle materials.
     pub yield_strength: Option<f64>,
@@ -67,6 +90,8 @@ pub struct Material {
     pub name: String,
     /// Other designations it is found by.
     pub designations: Vec<String>,
+    /// What family it belongs to, which picks its friction.
+    pub family: Family,
     /// How it fails.
     pub kind: Kind,
     /// Heat treatment or form, such as `normalised`.
@@ -114,80 +139,5 @@ impl Material {
         self.strength
             .iter()
             .find(|row| row.section_up_to.is_none_or(|limit| section <= limit * (1.0 + 1e-12)))
-    }
-}
-
-/// Thermal expansion of a free part from 20 °C as a curve of total strain.
-///
-/// The argument is temperature in K, the value the strain (L − L₂₀)/L₂₀; it is zero at 293.15 K. It is
-/// never extrapolated.
-#[derive(Debug, Clone, PartialEq)]
-pub struct Expansion {
-    curve: MonotoneCubic,
-    /// Where the curve comes from.
-    pub source: Arc<str>,
-    /// True when the curve is a single mean coefficient, not measured points.
-    pub is_mean_coefficient: bool,
-}
-
-impl Expansion {
-    /// A curve through (temperature K, strain) points that pass through zero at 293.15 K.
-    ///
-    /// # Errors
-    /// As [`MonotoneCubic::new`].
-    pub fn from_strains(
-        points: &[(f64, f64)],
-        source: impl Into<Arc<str>>,
-    ) -> Result<Self, InterpolationError> {
-        Ok(Self { curve: MonotoneCubic::new(points)?, source: source.into(), is_mean_coefficient: false })
-    }
-
-    /// One mean coefficient (1/K) for temperatures between `from` and `to` (K).
-    ///
-    /// # Errors
-    /// As [`MonotoneCubic::new`].
-    pub fn from_mean(
-        coefficient: f64,
-        from: f64,
-        to: f64,
-        source: impl Into<Arc<str>>,
-    ) -> Result<Self, InterpolationError> {
-        let strain = |t: f64| (t, coefficient * (t - REFERENCE_TEMPERATURE));
-        let curve = MonotoneCubic::new(&[strain(from), strain(to)])?;
-        Ok(Self { curve, source: source.into(), is_mean_coefficient: true })
-    }
-
-    /// Strain of a free part at `temperature` (K), zero at 293.15 K.
-    ///
-    /// # Errors
-    /// Outside the curve's range: nothing is extrapolated.
-    pub fn strain(&self, temperature: f64) -> Result<f64, InterpolationError> {
-        if temperature == REFERENCE_TEMPERATURE {
-            return Ok(0.0);
-        }
-        self.curve.value(temperature)
-    }
-
-    /// Lowest and highest temperature of the curve, K.
-    pub fn range(&self) -> (f64, f64) {
-        self.curve.range()
-    }
-
-    /// Mean coefficient between 20 °C and `temperature` (K), 1/K.
-    ///
-    /// # Errors
-    /// Outside the curve's range. Within 1 K of 20 °C the slope over that kelvin is given.
-    pub fn mean_coefficient(&self, temperature: f64) -> Result<f64, InterpolationError> {
-        let difference = temperature - REFERENCE_TEMPERATURE;
-        if difference.abs() < 1.0 {
-            let (low, high) = (REFERENCE_TEMPERATURE - 1.0, REFERENCE_TEMPERATURE + 1.0);
-            return Ok((self.curve.value(high)? - self.curve.value(low)?) / 2.0);
-        }
-        Ok(self.curve.value(temperature)? / difference)
-    }
-
-    /// The points of the curve, (K, strain).
-    pub fn points(&self) -> &[(f64, f64)] {
-        self.curve.points()
     }
 }

@@ -1,9 +1,14 @@
 //! What is shown of the findings: HTML with drawings and plots.
 
+pub mod diagnostics;
 pub mod drawing;
+pub mod json;
+pub mod limits;
+pub mod materials;
 pub mod html;
 pub mod mathml;
 pub mod plot;
+pub mod terminal;
 
 mod hatch;
 mod svg;

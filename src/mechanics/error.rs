@@ -1,0 +1,38 @@
+//! Why a formula cannot be used.
+
+use thiserror::Error;
+
+/// An input outside the range in which a formula holds. Numbers are SI.
+#[derive(Debug, Clone, PartialEq, Error)]
+pub enum MechanicsError {
+    /// A number lies outside what the formula allows.
+    #[error("{quantity} is {given}, but it must be {allowed}")]
+    OutsideRange {
+        /// Which input, with its unit.
+        quantity: &'static str,
+        /// What was given.
+        given: f64,
+        /// What is allowed.
+        allowed: &'static str,
+    },
+    /// Two rings that do not touch.
+    #[error("ring {inner} ends at radius {ends} m, but the ring round it begins at {begins} m")]
+    RingsDoNotMeet {
+        /// Index of the inner ring.
+        inner: usize,
+        /// Its outer radius, m.
+        ends: f64,
+        /// The inner radius of the next ring, m.
+        begins: f64,
+    },
+    /// Lists that do not fit the number of rings.
+    #[error("{count} {what} were given for {rings} rings")]
+    WrongCount {
+        /// What was counted.
+        what: &'static str,
+        /// How many there are.
+        count: usize,
+        /// How many rings.
+        rings: usize,
+    },
+}
