@@ -4,10 +4,10 @@ use maud::{Markup, html};
 
 use super::Sheet;
 use super::table::{range_text, safety, scrolling};
+use crate::findings::bath_name;
 use crate::joint::{Joint, Method, Ring, SmoothingAt};
 use crate::material::{Kind, Range};
 use crate::mechanics::criteria::DuctileCriterion;
-use crate::report::plot::bath_name;
 use crate::report::units::Measure;
 
 /// One value of the joint file.

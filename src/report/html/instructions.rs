@@ -4,10 +4,9 @@ use maud::{Markup, html};
 
 use super::Sheet;
 use super::table::range_text;
-use crate::findings::{BathFindings, Caution};
+use crate::findings::{BathFindings, Caution, bath_name};
 use crate::joint::{Method, Ring};
 use crate::material::{REFERENCE_TEMPERATURE, Range};
-use crate::report::plot::bath_name;
 use crate::report::units::Measure;
 
 /// One step.
