@@ -16,7 +16,7 @@ shaft: {material: C45+N, roughness: Rz 6.3 um}
 hub: {material: C45+N, outer_diameter: 120 mm, roughness: Rz 10 um}
 fit: H7/s6
 duty:
-  - {state: rated, torque: 400 N.m}
+  - {state: rated, torque: 100 N.m}
 ";
 
 fn folder() -> tempfile::TempDir {
@@ -159,7 +159,7 @@ fn a_requirement_that_is_not_met_is_a_result() {
 fn several_files_end_with_the_worst_code() {
     let here = folder();
     write(here.path(), "good.yaml", PLAIN);
-    write(here.path(), "weak.yaml", PLAIN.replace("400 N.m", "40 kN.m"));
+    write(here.path(), "weak.yaml", PLAIN.replace("100 N.m", "40 kN.m"));
     assert_eq!(exit_code(&hubgrip_in(here.path(), &["check", "good.yaml", "weak.yaml"])), 1);
     assert_eq!(exit_code(&hubgrip_in(here.path(), &["check", "good.yaml", "missing.yaml"])), 2);
 }
@@ -189,12 +189,12 @@ fn bad_inputs() -> Vec<Bad> {
         bad("misspelt material", ("material: C45+N, r", "material: C45+M, r"), Some((4, 19)), &["C45+M", "C45+N"]),
         bad("negative length", ("length: 70 mm", "length: -70 mm"), Some((3, 9)), &["length", "-70 mm"]),
         bad("bore", ("shaft: {", "shaft: {bore: 60 mm, "), Some((4, 15)), &["bore", "60 mm"]),
-        bad("outer diameter", ("120 mm", "50 mm"), Some((5, 39)), &["outer_diameter", "50 mm", "60 mm"]),
+        bad("outer diameter", ("120 mm", "50 mm"), Some((5, 40)), &["outer_diameter", "50 mm", "60 mm"]),
         bad("undefined class", ("H7/s6", "H7/zz6"), Some((6, 6)), &["zz"]),
         bad("class not at that size", ("H7/s6", "J9/s6"), Some((6, 6)), &["J9", "J8"]),
         bad("not a number", ("70 mm", ".nan"), Some((3, 9)), &["nan"]),
         bad("infinity", ("70 mm", "inf mm"), Some((3, 9)), &["inf"]),
-        bad("not yet", ("torque: 400 N.m", "speed: 1450 rpm"), Some((8, 20)), &["not supported yet"]),
+        bad("not yet", ("torque: 100 N.m", "speed: 1450 rpm"), Some((8, 20)), &["not supported yet"]),
         bad("newer version", ("joint_file: 1", "joint_file: 2"), Some((1, 13)), &["2", "1"]),
         Bad { name: "empty", text: String::new(), place: None, words: &["empty"] },
     ]

@@ -48,6 +48,12 @@ impl From<Diagnostic> for Failure {
     }
 }
 
+impl From<Box<Diagnostic>> for Failure {
+    fn from(diagnostic: Box<Diagnostic>) -> Self {
+        (*diagnostic).into()
+    }
+}
+
 /// Tells a failure on standard error and gives its exit code.
 pub fn told(failure: &Failure, json: bool, output: &Output) -> ExitCode {
     let Failure::Input(diagnostics) = failure else { return ExitCode::SUCCESS };

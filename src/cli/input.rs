@@ -7,7 +7,7 @@ use std::path::{Path, PathBuf};
 use clap::Args;
 use hubgrip::diagnostic::Diagnostic;
 use hubgrip::findings::{self, Findings};
-use hubgrip::joint::read;
+use hubgrip::joint::{read, set};
 use hubgrip::material::library::{self, Library};
 
 use super::exit::Failure;
@@ -22,10 +22,7 @@ pub struct WhatIf {
 }
 
 fn key_value(text: &str) -> Result<(String, String), String> {
-    match text.split_once('=') {
-        Some((key, value)) if !key.trim().is_empty() => Ok((key.trim().to_owned(), value.trim().to_owned())),
-        _ => Err("write KEY=VALUE, such as fit=H7/u6".to_owned()),
-    }
+    set::split(text).map_err(|wrong| wrong.help.unwrap_or(wrong.message))
 }
 
 /// The material library with the user's folders in front.
@@ -60,7 +57,7 @@ fn shown(path: &Path) -> PathBuf {
 
 /// The bytes of a file or of standard input, one more than allowed at most.
 fn bytes(path: &Path) -> Result<Vec<u8>, Failure> {
-    let limit = read::LARGEST_FILE as u64 + 1;
+    let limit = read::LARGEST as u64 + 1;
     let mut bytes = Vec::new();
     let read = if path == Path::new("-") {
         if io::stdin().is_terminal() {

@@ -34,11 +34,7 @@ pub fn run(arguments: &Arguments, folder: Option<&Path>, output: &Output) -> Res
         Err(not_found) => {
             let found = library.search(&words);
             if found.is_empty() {
-                let diagnostic = Diagnostic::new(not_found.to_string());
-                return Err(match not_found.help() {
-                    Some(help) => diagnostic.with_help(help).into(),
-                    None => diagnostic.with_help("hubgrip materials lists them all").into(),
-                });
+                return Err(Diagnostic::new(not_found.to_string()).with_help(not_found.help()).into());
             }
             materials::list(&found)
         }

@@ -51,7 +51,7 @@ struct Global {
     /// Folder with your own material files, searched first
     #[arg(long, global = true, value_name = "DIR")]
     materials: Option<PathBuf>,
-    /// No remarks on standard error (errors are always told)
+    /// No remarks and no summary (errors are always told)
     #[arg(long, short, global = true)]
     quiet: bool,
 }

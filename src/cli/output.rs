@@ -27,6 +27,11 @@ impl Output {
         Self { colour, quiet }
     }
 
+    /// Whether remarks are unwanted.
+    pub fn quiet(&self) -> bool {
+        self.quiet
+    }
+
     /// Writes a result to standard output.
     pub fn result(&self, text: &str) -> Result<(), Failure> {
         let mut stdout = AutoStream::new(io::stdout(), self.colour).lock();
@@ -52,9 +57,7 @@ impl Output {
         if path == Path::new("-") {
             return self.result(text);
         }
-        write_whole(path, text.as_bytes()).map_err(|error| unwritable(path, &error))?;
-        self.remark(&format!("wrote {}", path.display()));
-        Ok(())
+        write_whole(path, text.as_bytes()).map_err(|error| unwritable(path, &error))
     }
 
     /// Standard output, refused when it is a terminal and the text is not for reading.

@@ -3,7 +3,7 @@
 use std::path::{Path, PathBuf};
 
 use clap::Args;
-use hubgrip::report::html;
+use hubgrip::report::{html, terminal};
 
 use super::check;
 use super::exit::{Ending, Failure};
@@ -14,6 +14,7 @@ const EXAMPLE: &str = "\
 Example:
   hubgrip report joint.yaml -o joint.html
 
+The three answers are printed as well, unless --quiet is given.
 A joint that misses a requirement gets its report as well; the exit code is then 1.";
 
 /// The plotted report: one HTML file that needs no network and no script
@@ -38,7 +39,12 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     let findings = input::findings(&arguments.file, &arguments.what_if.set, &library)?;
     let page = html::html(&findings);
     match &arguments.output {
-        Some(path) => output.file(path, &page)?,
+        Some(path) => {
+            output.file(path, &page)?;
+            if path.as_os_str() != "-" && !output.quiet() {
+                output.result(&terminal::summary(&findings))?;
+            }
+        }
         None => output.not_for_terminal(&page, "add -o OUT.html, or send it on with > or |")?,
     }
     Ok(check::ending(&findings, arguments.strict))

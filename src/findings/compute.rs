@@ -12,7 +12,7 @@ use crate::joint::{DutyState, Joint, Ring, SmoothingAt};
 use crate::material::{Kind, Range};
 use crate::mechanics::capacity;
 use crate::mechanics::criteria::{self, DuctileCriterion};
-use crate::mechanics::ring::{RingLoad, RingSection};
+use crate::mechanics::ring::{RingLoad, RingSection, Stress};
 use crate::mechanics::stack::{Stack, StackSolution};
 use crate::mechanics::MechanicsError;
 use crate::numerics::interpolation::InterpolationError;
@@ -21,6 +21,14 @@ use crate::tolerance::Extremes;
 /// Why the findings of a valid joint could not be computed.
 #[derive(Debug, Clone, PartialEq, Error)]
 pub enum FindingsError {
+    /// A joint needs two rings or more, and a fit between each two neighbours.
+    #[error("a joint of {rings} rings and {fits} fits is incomplete: each two neighbours need one fit")]
+    Incomplete {
+        /// Number of rings.
+        rings: usize,
+        /// Number of fits.
+        fits: usize,
+    },
     /// A formula was asked for something outside its validity.
     #[error(transparent)]
     Mechanics(#[from] MechanicsError),
@@ -43,6 +51,9 @@ pub enum FindingsError {
 /// [`FindingsError`] when a formula would be used outside its validity; a joint that has clearance,
 /// slips or yields is a result, not an error.
 pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
+    if joint.rings.len() < 2 || joint.fits.len() + 1 != joint.rings.len() {
+        return Err(FindingsError::Incomplete { rings: joint.rings.len(), fits: joint.fits.len() });
+    }
     let kernel = Kernel::new(&joint)?;
     let pairs = pair_interferences(&joint);
     let extremes = Extremes {
@@ -297,8 +308,14 @@ fn ring_stress(
     criterion: DuctileCriterion,
 ) -> Result<RingStress, MechanicsError> {
     let (inner, outer) = (section.inner_radius(), section.outer_radius());
-    let bore = face(section, load, inner)?;
-    let rim = face(section, load, outer)?;
+    let mut bore = section.stress_at(load, inner)?;
+    let mut rim = section.stress_at(load, outer)?;
+    // At a loaded face the radial stress is the pressure itself; rounding must not blur a free face.
+    if !section.is_solid() {
+        bore.radial = 0.0 - load.inner_pressure;
+    }
+    rim.radial = 0.0 - load.outer_pressure;
+    let (bore, rim) = (face(bore), face(rim));
     let (equivalent, strength) = match (ring.material.kind, criterion) {
         (Kind::Brittle, _) => {
             let tension = |face: &FaceStress| criteria::greatest_principal(face.radial, face.hoop).max(0.0);
@@ -319,12 +336,11 @@ fn ring_stress(
     })
 }
 
-fn face(section: &RingSection, load: &RingLoad, radius: f64) -> Result<FaceStress, MechanicsError> {
-    let stress = section.stress_at(load, radius)?;
-    Ok(FaceStress {
+fn face(stress: Stress) -> FaceStress {
+    FaceStress {
         radial: stress.radial,
         hoop: stress.hoop,
         von_mises: criteria::von_mises(stress.radial, stress.hoop),
         tresca: criteria::tresca(stress.radial, stress.hoop),
-    })
+    }
 }

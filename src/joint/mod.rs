@@ -1,4 +1,30 @@
-//! A joint as understood: validated, in SI, with every default marked as one.
+//! The joint file: its shape, its faults with line and column, and the joint as understood.
+//!
+//! [`read::read`] takes a text to a [`Joint`]: validated, in SI, with every default marked as one.
+//!
+//! | module | subject |
+//! |---|---|
+//! | [`read`](mod@read) | from text to joint, or to everything that is wrong |
+//! | [`set`] | changes from the command line |
+//! | [`template`] | commented files to start from |
+//! | [`schema`](mod@schema) | JSON Schema for editors |
+
+mod decode;
+mod diagnose;
+mod draft;
+mod file;
+mod grow;
+mod leaf;
+mod place;
+pub mod read;
+pub mod schema;
+pub mod set;
+pub mod template;
+mod tree;
+mod validate;
+mod written;
+
+pub use file::VERSION;
 
 use std::sync::Arc;
 
@@ -44,7 +70,7 @@ pub struct Joint {
     pub display: UnitSystem,
     /// Every default that was taken, in the order of the joint file's keys.
     pub defaults: Vec<DefaultTaken>,
-    /// What a reader must know about the inputs, such as limits that rest on memory.
+    /// What a reader should know of the input; full sentences.
     pub remarks: Vec<String>,
     /// Changes made from the command line, as typed.
     pub set: Vec<(String, String)>,

@@ -31,7 +31,7 @@ pub fn kind_name(kind: Kind) -> &'static str {
     }
 }
 
-/// Everything about one material.
+/// Everything about one material; sources are numbered and stand at the end.
 pub fn sheet(material: &Material) -> String {
     let mut out = String::new();
     wrapped(&mut out, "", &format!("{}: {}", material.id, material.name));
@@ -42,36 +42,28 @@ pub fn sheet(material: &Material) -> String {
         wrapped(&mut out, "  also ", &material.designations.join(", "));
     }
     let origin = match &material.origin {
-        Origin::BuiltIn => "built into hubgrip".to_owned(),
+        Origin::BuiltIn => "the library built into hubgrip".to_owned(),
         Origin::File(path) => path.display().to_string(),
         Origin::JointFile => "the joint file".to_owned(),
     };
     wrapped(&mut out, "  ", &format!("{}; from {origin}", kind_name(material.kind)));
     out.push('\n');
-    value(&mut out, "youngs_modulus", Quantity::Pressure, &material.youngs_modulus);
-    value(&mut out, "poisson", Quantity::Number, &material.poisson);
-    value(&mut out, "density", Quantity::Density, &material.density);
-    for row in &material.strength {
-        let section = match row.section_up_to {
-            Some(limit) => format!(" to {}", written(Quantity::Length, limit)),
-            None => String::new(),
-        };
-        for (name, strength) in [("yield_strength", row.yield_strength), ("tensile_strength", row.tensile_strength)] {
-            if let Some(strength) = strength {
-                line(&mut out, &format!("{name}{section}"), &written(Quantity::Pressure, strength), &row.source);
-            }
-        }
-    }
-    expansion(&mut out, material);
+    let mut values = Values::default();
+    values.add("youngs_modulus", Quantity::Pressure, &material.youngs_modulus);
+    values.add("poisson", Quantity::Number, &material.poisson);
+    values.add("density", Quantity::Density, &material.density);
+    strength(&mut values, material);
+    expansion(&mut values, material);
     for (name, kind, found) in [
         ("conductivity", Quantity::Conductivity, &material.conductivity),
         ("specific_heat", Quantity::SpecificHeat, &material.specific_heat),
         ("max_temperature", Quantity::Temperature, &material.max_temperature),
     ] {
         if let Some(found) = found {
-            value(&mut out, name, kind, found);
+            values.add(name, kind, found);
         }
     }
+    values.write(&mut out);
     for (first, text) in [("  cold: ", &material.low_temperature_caution), ("  note: ", &material.notes)] {
         if let Some(text) = text {
             out.push('\n');
@@ -81,24 +73,64 @@ pub fn sheet(material: &Material) -> String {
     out
 }
 
-fn expansion(out: &mut String, material: &Material) {
-    let expansion = &material.expansion;
-    let (from, to) = expansion.range();
-    let range = format!("{} to {}", written(Quantity::Temperature, from), written(Quantity::Temperature, to));
-    line(out, "expansion", &range, &expansion.source);
-    for (celsius, name) in [(-196.0, "-196"), (-78.5, "-78.5"), (100.0, "100"), (200.0, "200"), (300.0, "300")] {
-        if let Ok(mean) = expansion.mean_coefficient(celsius + 273.15) {
-            let _ = writeln!(out, "    mean from 20 to {name} degC: {} um/m.K", number(mean * 1e6, 3));
+/// Values with the numbers of their sources.
+#[derive(Default)]
+struct Values {
+    lines: Vec<(String, String, usize)>,
+    sources: Vec<String>,
+}
+
+impl Values {
+    fn add(&mut self, name: &str, kind: Quantity, found: &Sourced<f64>) {
+        self.line(name.to_owned(), written(kind, found.value), &found.source);
+    }
+
+    fn line(&mut self, name: String, value: String, source: &str) {
+        let known = self.sources.iter().position(|known| known == source);
+        let number = known.unwrap_or_else(|| {
+            self.sources.push(source.to_owned());
+            self.sources.len() - 1
+        });
+        self.lines.push((name, value, number + 1));
+    }
+
+    fn write(&self, out: &mut String) {
+        for (name, value, number) in &self.lines {
+            let _ = writeln!(out, "  {name:34} {value:26} [{number}]");
+        }
+        out.push_str("\n  sources\n");
+        for (index, source) in self.sources.iter().enumerate() {
+            wrapped(out, &format!("  {:>4} ", format!("[{}]", index + 1)), source);
         }
     }
 }
 
-fn value(out: &mut String, name: &str, kind: Quantity, found: &Sourced<f64>) {
-    line(out, name, &written(kind, found.value), &found.source);
+fn strength(values: &mut Values, material: &Material) {
+    for row in &material.strength {
+        let section = match row.section_up_to {
+            Some(limit) => format!(", section to {}", written(Quantity::Length, limit)),
+            None => String::new(),
+        };
+        for (name, strength) in [("yield_strength", row.yield_strength), ("tensile_strength", row.tensile_strength)] {
+            if let Some(strength) = strength {
+                values.line(format!("{name}{section}"), written(Quantity::Pressure, strength), &row.source);
+            }
+        }
+    }
 }
 
-fn line(out: &mut String, name: &str, value: &str, source: &str) {
-    wrapped(out, &format!("  {name:26} {value:14} "), source);
+/// The range of the curve, and mean coefficients at the usual temperatures.
+fn expansion(values: &mut Values, material: &Material) {
+    let expansion = &material.expansion;
+    let (from, to) = expansion.range();
+    let range = format!("{} to {}", written(Quantity::Temperature, from), written(Quantity::Temperature, to));
+    values.line("expansion".to_owned(), range, &expansion.source);
+    for (celsius, name) in [(-196.0, "-196"), (-78.5, "-78.5"), (100.0, "100"), (200.0, "200"), (300.0, "300")] {
+        if let Ok(mean) = expansion.mean_coefficient(celsius + 273.15) {
+            let value = format!("{} um/m.K", number(mean * 1e6, 3));
+            values.line(format!("  mean from 20 to {name} degC"), value, &expansion.source);
+        }
+    }
 }
 
 fn wrapped(out: &mut String, first: &str, text: &str) {

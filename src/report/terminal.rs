@@ -7,7 +7,7 @@ use comfy_table::{CellAlignment, Table, presets};
 
 use crate::findings::{Findings, PairFindings, Question, Verdict, VerdictUnit};
 use crate::joint::Method;
-use crate::quantity::{Measure, UnitSystem, display_unit, number, show};
+use crate::quantity::{Measure, UnitSystem, display_unit, show};
 use crate::tolerance::{Character, Extremes};
 
 /// Width of the text.
@@ -16,6 +16,14 @@ pub const WIDTH: usize = 80;
 const GOOD: Style = AnsiColor::Green.on_default().bold();
 const BAD: Style = AnsiColor::Red.on_default().bold();
 const HEADING: Style = Style::new().bold();
+
+/// The title and the three answers alone.
+pub fn summary(findings: &Findings) -> String {
+    let mut out = String::new();
+    title(&mut out, findings);
+    answers(&mut out, findings);
+    out
+}
 
 /// The findings as text; styled with ANSI codes that the writer strips where they are not wanted.
 pub fn text(findings: &Findings) -> String {
@@ -159,9 +167,13 @@ fn table(header: &[String]) -> Table {
     table
 }
 
-fn print_table(out: &mut String, mut table: Table) {
-    for column in table.column_iter_mut().skip(1) {
-        column.set_cell_alignment(CellAlignment::Right);
+/// A table whose columns from `numbers` on are right-aligned.
+fn print_table(out: &mut String, mut table: Table, numbers: usize) {
+    for (index, column) in table.column_iter_mut().enumerate() {
+        column.set_padding((if index == 0 { 0 } else { 1 }, 1));
+        if index >= numbers {
+            column.set_cell_alignment(CellAlignment::Right);
+        }
     }
     for row in table.lines() {
         line(out, row);
@@ -172,15 +184,13 @@ fn print_table(out: &mut String, mut table: Table) {
 
 
 fn extremes(out: &mut String, findings: &Findings) {
-    let joint = &findings.joint;
     heading(out, "Extreme pairs, shop temperature, at rest");
     let mut table = table(&["", "loosest", "mean", "tightest"].map(str::to_owned));
     for (name, values) in extreme_rows(findings) {
         let cell = |value: Option<String>| value.unwrap_or_else(|| "-".to_owned());
         table.add_row(vec![name, cell(values.loosest), cell(values.mean), cell(values.tightest)]);
     }
-    let _ = joint;
-    print_table(out, table);
+    print_table(out, table, 1);
 }
 
 /// The rows of the table of extremes, ready to print: name with unit, and three numbers.
@@ -258,7 +268,7 @@ fn duty(out: &mut String, findings: &Findings) {
             ]);
         }
     }
-    print_table(out, table);
+    print_table(out, table, 2);
 }
 
 fn assembly(out: &mut String, findings: &Findings) {
@@ -322,5 +332,4 @@ fn notes(out: &mut String, findings: &Findings) {
     for note in &findings.notes {
         paragraph(out, "  ", note);
     }
-    let _ = number;
 }

@@ -1,0 +1,284 @@
+//! The joint file, version 1: every key with what it may hold.
+//!
+//! The doc comments of the keys are the descriptions in the JSON Schema. Every key is optional here; what must
+//! be there is said where the joint is put together, so that a file tells all its faults in one run.
+
+use schemars::JsonSchema;
+use serde::Deserialize;
+
+use super::leaf::{BathWord, CriterionWord, DisplayWord, FrictionText, LimitsText, LubricationWord};
+use super::leaf::{FitText, MaterialName, UncertainSize};
+use super::leaf::{MaterialKeys, MethodWord, Roughness, SmoothingAtWord, SmoothingText, Version};
+use super::written::{At, Free, NotYet, TextOr, Written};
+use crate::quantity::{Angle, Force, Length, Number, NumberRange, Temperature, Torque};
+
+/// Version of the joint file that is read.
+pub const VERSION: u32 = 1;
+
+/// Keys that are known but whose subject is not calculated yet, in any section.
+pub(crate) const NOT_YET: &[&str] = &[
+    "rings",
+    "fits",
+    "order",
+    "bearing",
+    "allow",
+    "steps",
+    "speed",
+    "bending_moment",
+    "rotating_bending",
+    "inner_temperature",
+    "outer_temperature",
+];
+
+/// The sections with their keys, for a key that was put into the wrong one.
+const SECTIONS: &[(&str, &[&str])] = &[
+    ("shaft", &["name", "material", "bore", "roughness", "section"]),
+    ("hub", &["name", "material", "outer_diameter", "roughness", "section"]),
+    ("fit", &["hole", "measured"]),
+    ("friction", &["holding", "pressing", "release", "lubrication"]),
+    (
+        "duty",
+        &["state", "torque", "axial_force", "temperature", "shaft_temperature", "hub_temperature", "speed"],
+    ),
+    (
+        "assembly",
+        &["method", "shop_temperature", "clearance", "chamfer_angle", "bath", "hub_temperature_limit"],
+    ),
+    ("smoothing", &["factor", "rule", "at"]),
+    ("require", &["slip_safety", "yield_safety", "fracture_safety", "press_force"]),
+];
+
+/// The sections that have `key`, such as `shaft` and `hub`; none when no section has it.
+pub(crate) fn sections_of(key: &str) -> Option<String> {
+    let owners: Vec<String> = SECTIONS
+        .iter()
+        .filter(|(_, keys)| keys.contains(&key))
+        .map(|(section, _)| format!("`{section}`"))
+        .collect();
+    if owners.is_empty() { None } else { Some(owners.join(" and ")) }
+}
+
+/// A press or shrink fit: two parts, their fit, what it must carry and how it is put together.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct JointFile {
+    /// Version of the joint file: 1.
+    #[schemars(required)]
+    pub(crate) joint_file: Option<Written<Version>>,
+    /// What the joint is, in your words.
+    pub(crate) title: Option<Written<Free>>,
+    /// Drawing number and revision.
+    pub(crate) drawing: Option<Written<Free>>,
+    /// Whatever a reader should know.
+    pub(crate) note: Option<Written<Free>>,
+    /// Date as it shall be printed.
+    pub(crate) date: Option<Written<Free>>,
+    /// Nominal diameter of the mating surface.
+    #[schemars(required)]
+    pub(crate) diameter: Option<Written<Length>>,
+    /// Length of the hub along the shaft.
+    #[schemars(required)]
+    pub(crate) length: Option<Written<Length>>,
+    /// Part of the length that carries nothing: chamfers and grooves. Silent: 0 mm.
+    pub(crate) relief: Option<Written<Length>>,
+    /// The inner part.
+    #[schemars(required)]
+    pub(crate) shaft: Option<At<ShaftKeys>>,
+    /// The outer part.
+    #[schemars(required)]
+    pub(crate) hub: Option<At<HubKeys>>,
+    /// The fit: a callout such as H7/s6 or FN 4, or the limits of hole and shaft, or two measured parts.
+    #[schemars(required)]
+    pub(crate) fit: Option<At<TextOr<FitText, FitKeys>>>,
+    /// Coefficients of friction. Silent: from the library by pair of materials and method of assembly.
+    pub(crate) friction: Option<At<TextOr<FrictionText, FrictionKeys>>>,
+    /// Service states. Silent: one state at shop temperature without load.
+    pub(crate) duty: Option<At<Vec<At<StateKeys>>>>,
+    /// How the joint is put together.
+    pub(crate) assembly: Option<At<AssemblyKeys>>,
+    /// Loss of interference as the peaks of the roughness flatten: a rule by name, or its parts.
+    pub(crate) smoothing: Option<At<TextOr<SmoothingText, SmoothingKeys>>>,
+    /// Strength criterion of ductile parts. Silent: von Mises.
+    pub(crate) criterion: Option<Written<CriterionWord>>,
+    /// What must be met.
+    pub(crate) require: Option<At<RequireKeys>>,
+    /// Units on the terminal and in the report. Silent: metric.
+    pub(crate) display: Option<Written<DisplayWord>>,
+    #[schemars(skip)]
+    pub(crate) rings: Option<At<NotYet>>,
+    #[schemars(skip)]
+    pub(crate) fits: Option<At<NotYet>>,
+    #[schemars(skip)]
+    pub(crate) order: Option<At<NotYet>>,
+    #[schemars(skip)]
+    pub(crate) bearing: Option<At<NotYet>>,
+    #[schemars(skip)]
+    pub(crate) allow: Option<At<NotYet>>,
+}
+
+/// The inner part.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct ShaftKeys {
+    /// What it is called. Silent: shaft.
+    pub(crate) name: Option<Written<Free>>,
+    /// Material of the library by name, or written here with the keys of a library file.
+    #[schemars(required)]
+    pub(crate) material: Option<At<TextOr<MaterialName, MaterialKeys>>>,
+    /// Diameter of its bore. Silent: 0 mm, a solid shaft.
+    pub(crate) bore: Option<Written<Length>>,
+    /// Roughness of its mating surface, such as Rz 6.3 um.
+    pub(crate) roughness: Option<Written<Roughness>>,
+    /// Ruling section that picks its strength. Silent: its diameter.
+    pub(crate) section: Option<Written<Length>>,
+    #[schemars(skip)]
+    pub(crate) steps: Option<At<NotYet>>,
+}
+
+/// The outer part.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct HubKeys {
+    /// What it is called. Silent: hub.
+    pub(crate) name: Option<Written<Free>>,
+    /// Material of the library by name, or written here with the keys of a library file.
+    #[schemars(required)]
+    pub(crate) material: Option<At<TextOr<MaterialName, MaterialKeys>>>,
+    /// Its outer diameter.
+    #[schemars(required)]
+    pub(crate) outer_diameter: Option<Written<Length>>,
+    /// Roughness of its bore, such as Rz 10 um.
+    pub(crate) roughness: Option<Written<Roughness>>,
+    /// Ruling section that picks its strength. Silent: the thickness of its wall.
+    pub(crate) section: Option<Written<Length>>,
+    #[schemars(skip)]
+    pub(crate) steps: Option<At<NotYet>>,
+}
+
+/// The fit with hole and shaft apart, or two measured parts.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct FitKeys {
+    /// Class or limits of the hole.
+    pub(crate) hole: Option<At<TextOr<LimitsText, LimitKeys>>>,
+    /// Class or limits of the shaft.
+    pub(crate) shaft: Option<At<TextOr<LimitsText, LimitKeys>>>,
+    /// Two parts as measured.
+    pub(crate) measured: Option<At<MeasuredKeys>>,
+    #[schemars(skip)]
+    pub(crate) bearing: Option<At<NotYet>>,
+}
+
+/// Limits of one member: deviations from the diameter (lower, upper), or sizes (min, max).
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct LimitKeys {
+    /// Lower deviation from the nominal diameter, with its sign.
+    pub(crate) lower: Option<Written<Length>>,
+    /// Upper deviation from the nominal diameter, with its sign.
+    pub(crate) upper: Option<Written<Length>>,
+    /// Smallest size.
+    pub(crate) min: Option<Written<Length>>,
+    /// Largest size.
+    pub(crate) max: Option<Written<Length>>,
+}
+
+/// Two parts as measured, at 20 degC.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct MeasuredKeys {
+    /// Measured diameter of the hole.
+    #[schemars(required)]
+    pub(crate) hole: Option<Written<UncertainSize>>,
+    /// Measured diameter of the shaft.
+    #[schemars(required)]
+    pub(crate) shaft: Option<Written<UncertainSize>>,
+    /// Uncertainty of each of the two, plus and minus.
+    pub(crate) uncertainty: Option<Written<Length>>,
+}
+
+/// Coefficients of friction, each a number or a range such as 0.08 to 0.14.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct FrictionKeys {
+    /// Against slip in service; the low end is used.
+    pub(crate) holding: Option<Written<NumberRange>>,
+    /// While pressing in; the high end sizes the press.
+    pub(crate) pressing: Option<Written<NumberRange>>,
+    /// At first movement when pushing out.
+    pub(crate) release: Option<Written<NumberRange>>,
+    /// State of the surfaces, such as dry, oiled or degreased, for the library's coefficients.
+    pub(crate) lubrication: Option<Written<LubricationWord>>,
+}
+
+/// One service state.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct StateKeys {
+    /// Its name.
+    pub(crate) state: Option<Written<Free>>,
+    /// Torque to be carried.
+    pub(crate) torque: Option<Written<Torque>>,
+    /// Axial force to be carried.
+    pub(crate) axial_force: Option<Written<Force>>,
+    /// Temperature of all parts.
+    pub(crate) temperature: Option<Written<Temperature>>,
+    /// Temperature of the shaft.
+    pub(crate) shaft_temperature: Option<Written<Temperature>>,
+    /// Temperature of the hub.
+    pub(crate) hub_temperature: Option<Written<Temperature>>,
+    #[schemars(skip)]
+    pub(crate) speed: Option<At<NotYet>>,
+    #[schemars(skip)]
+    pub(crate) bending_moment: Option<At<NotYet>>,
+    #[schemars(skip)]
+    pub(crate) rotating_bending: Option<At<NotYet>>,
+    #[schemars(skip)]
+    pub(crate) inner_temperature: Option<At<NotYet>>,
+    #[schemars(skip)]
+    pub(crate) outer_temperature: Option<At<NotYet>>,
+}
+
+/// How the joint is put together.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct AssemblyKeys {
+    /// Method. Silent: press.
+    pub(crate) method: Option<Written<MethodWord>>,
+    /// Temperature of the shop. Silent: 20 degC.
+    pub(crate) shop_temperature: Option<Written<Temperature>>,
+    /// Diametral clearance wanted while joining hot or cold. Silent: a thousandth of the diameter.
+    pub(crate) clearance: Option<Written<Length>>,
+    /// Angle of the lead-in chamfer to the axis. Silent: 5 deg.
+    pub(crate) chamfer_angle: Option<Written<Angle>>,
+    /// Cold bath. Silent: dry ice.
+    pub(crate) bath: Option<Written<BathWord>>,
+    /// Highest temperature the hub may have; the limit of its material holds as well.
+    pub(crate) hub_temperature_limit: Option<Written<Temperature>>,
+}
+
+/// Loss of interference by smoothing.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct SmoothingKeys {
+    /// Share of (Rz shaft + Rz hub) that is lost on the diameter.
+    pub(crate) factor: Option<Written<Number>>,
+    /// A published rule by name.
+    pub(crate) rule: Option<Written<SmoothingText>>,
+    /// At which pairs it is lost. Silent: loosest, lost for holding and kept for stress.
+    pub(crate) at: Option<Written<SmoothingAtWord>>,
+}
+
+/// What must be met.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct RequireKeys {
+    /// Least safety against slip, at the loosest pair.
+    pub(crate) slip_safety: Option<Written<Number>>,
+    /// Least safety against yield of ductile parts, at the tightest pair.
+    pub(crate) yield_safety: Option<Written<Number>>,
+    /// Least safety against fracture of brittle parts, at the tightest pair.
+    pub(crate) fracture_safety: Option<Written<Number>>,
+    /// Greatest press-in force.
+    pub(crate) press_force: Option<Written<Force>>,
+}

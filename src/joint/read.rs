@@ -1,0 +1,144 @@
+//! From the text of a joint file to a validated joint, or to everything that is wrong with it.
+//!
+//! 1. refused at once: what is too large, not text, empty or not YAML;
+//! 2. the tree of values, with the changes from the command line made in it;
+//! 3. the keys, by serde;
+//! 4. the joint put together: texts with units read, rules checked, defaults taken.
+//!
+//! A fault in steps 3 and 4 does not stop the reading, so one run tells them all.
+
+use std::path::Path;
+
+use serde::Deserialize;
+use sha2::{Digest, Sha256};
+
+use super::decode::Value;
+use super::diagnose::Faults;
+use super::draft::Draft;
+use super::file::{JointFile, VERSION};
+use super::grow::tree_of;
+use super::tree::{Content, Tree};
+use super::{Joint, place, set, validate};
+use crate::diagnostic::Diagnostic;
+use crate::material::library::Library;
+
+/// Largest joint file that is read, bytes.
+pub const LARGEST: usize = 1 << 20;
+
+/// The joint that a text describes, with changes made in it.
+///
+/// `file` is what messages call the text; the changes are keys with values as [`set::split`] gives them.
+///
+/// # Errors
+/// Everything that is wrong, in the order of the file, each with its place where it has one.
+pub fn read(
+    text: &str,
+    file: &Path,
+    set: &[(String, String)],
+    library: &Library,
+) -> Result<Joint, Vec<Diagnostic>> {
+    let fault = |fault: Box<Diagnostic>| vec![fault.in_file(file)];
+    refuse_unreadable(text.as_bytes()).map_err(fault)?;
+    let plain = text.strip_prefix('\u{feff}').unwrap_or(text);
+    let mut tree = tree_of(plain).map_err(fault)?;
+    refuse_other_shapes(plain, &tree).map_err(fault)?;
+    set::apply(&mut tree, set)?;
+    let faults = Faults::default();
+    match understood(&tree, &faults, library) {
+        Some(joint) if faults.is_empty() => {
+            Ok(Joint { set: set.to_vec(), digest: digest(text, set), ..joint })
+        }
+        _ => Err(faults.told(plain, &tree, file, set)),
+    }
+}
+
+/// As [`read`], from bytes that need not be text.
+///
+/// # Errors
+/// As [`read`]; bytes that are not UTF-8 are told with their place.
+pub fn read_bytes(
+    bytes: &[u8],
+    file: &Path,
+    set: &[(String, String)],
+    library: &Library,
+) -> Result<Joint, Vec<Diagnostic>> {
+    let text = text_of(bytes).map_err(|fault| vec![fault.in_file(file)])?;
+    read(text, file, set, library)
+}
+
+fn understood(tree: &Tree, faults: &Faults, library: &Library) -> Option<Joint> {
+    let root = tree.root();
+    match JointFile::deserialize(Value { tree, node: root, faults }) {
+        Ok(file) => {
+            let mut draft = Draft::new(tree, faults, library);
+            let version = draft.required(root, "joint_file", &VERSION.to_string(), file.joint_file.as_ref());
+            if let Some(version) = version
+                && draft.value(version).is_none()
+            {
+                return None;
+            }
+            validate::joint(&mut draft, &file)
+        }
+        Err(refusal) => {
+            faults.add(refusal.fault(root));
+            None
+        }
+    }
+}
+
+fn text_of(bytes: &[u8]) -> Result<&str, Box<Diagnostic>> {
+    refuse_unreadable(bytes)?;
+    std::str::from_utf8(bytes).map_err(|error| {
+        let good = bytes.get(..error.valid_up_to()).and_then(|good| std::str::from_utf8(good).ok());
+        let fault = Diagnostic::new("a character here is not UTF-8")
+            .with_help("save the file as UTF-8; an editor calls this the encoding");
+        Box::new(match good {
+            Some(good) => fault.at(good, place::of_byte(good, good.len()), 1),
+            None => fault,
+        })
+    })
+}
+
+fn refuse_unreadable(bytes: &[u8]) -> Result<(), Box<Diagnostic>> {
+    let refused = |message: String, help: &str| Err(Box::new(Diagnostic::new(message).with_help(help)));
+    if bytes.len() > LARGEST {
+        let mebibytes = bytes.len() as f64 / LARGEST as f64;
+        let message = format!("the file has {mebibytes:.1} MiB, a joint file has at most 1 MiB");
+        return refused(message, "this looks like another file");
+    }
+    if bytes.contains(&0) {
+        let help = "a joint file is plain text in UTF-8; `hubgrip new` writes one to start from";
+        return refused("this is not a text file: it holds NUL bytes".to_owned(), help);
+    }
+    Ok(())
+}
+
+fn refuse_other_shapes(text: &str, tree: &Tree) -> Result<(), Box<Diagnostic>> {
+    let (message, help) = match tree.content(tree.root()) {
+        Content::Map(_) => return Ok(()),
+        Content::Null => ("the joint file is empty", "write one to start from with `hubgrip new`"),
+        Content::List(_) => (
+            "a joint file holds keys with values, this is a list",
+            "write each key at the beginning of a line, such as `diameter: 60 mm`",
+        ),
+        Content::Scalar(_) => (
+            "a joint file holds keys with values, this is one text",
+            "write `key: value` with a blank after the colon, such as `diameter: 60 mm`",
+        ),
+    };
+    let fault = Diagnostic::new(message).with_help(help);
+    Err(Box::new(match place::of_node(text, tree, tree.root(), place::Part::Value) {
+        Some(span) => fault.at(text, span.place, span.width),
+        None => fault,
+    }))
+}
+
+/// SHA-256 of the text as it is in the file; the changes follow it, each on a line of its own.
+fn digest(text: &str, set: &[(String, String)]) -> String {
+    let mut hash = Sha256::new();
+    hash.update(text.as_bytes());
+    for (key, value) in set {
+        hash.update(format!("\n--set {key}={value}").as_bytes());
+    }
+    hash.finalize().iter().map(|byte| format!("{byte:02x}")).collect()
+}

@@ -1,0 +1,194 @@
+//! The joint put together from what the file says: what must be there, what must hold, what is taken when the
+//! file is silent.
+
+mod assembly;
+mod duty;
+mod fit;
+mod friction;
+mod parts;
+mod smoothing;
+
+use super::draft::Draft;
+use super::file::{JointFile, RequireKeys};
+use super::leaf::{CriterionWord, DisplayWord};
+use super::written::{At, Written};
+use super::{Joint, Requirements};
+use crate::mechanics::criteria::DuctileCriterion;
+use crate::quantity::{Kind, Number, UnitSystem, written};
+
+/// The keys in the order of the joint file, which is the order of the defaults.
+const ORDER: [&str; 12] = [
+    "relief",
+    "shaft",
+    "hub",
+    "fit",
+    "friction",
+    "duty",
+    "assembly",
+    "smoothing",
+    "criterion",
+    "require",
+    "display",
+    "joint_file",
+];
+
+/// Slip safety asked for when the file is silent.
+const SLIP_SAFETY: (f64, &str) = (
+    1.5,
+    "usual against slip under steady load, 1.2 at least and 1.8 to 2.2 for alternating load (textbooks after DIN 7190, from memory)",
+);
+
+/// Yield safety asked for when the file is silent.
+const YIELD_SAFETY: (f64, &str) =
+    (1.2, "within 1.0 to 1.3, usual for ductile parts (textbooks after DIN 7190, from memory)");
+
+/// Fracture safety asked for when the file is silent.
+const FRACTURE_SAFETY: (f64, &str) = (
+    2.5,
+    "within 2 to 3 on tensile strength, usual for brittle parts (textbooks after DIN 7190, from memory)",
+);
+
+/// The joint, unless something is wrong.
+pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
+    refuse_what_is_not_calculated(draft, file);
+    let root = draft.tree.root();
+    let diameter = draft
+        .required(root, "diameter", "60 mm", file.diameter.as_ref())
+        .and_then(|written| draft.positive(written));
+    let (length, relief) = lengths(draft, file);
+    let method = assembly::method(draft, file);
+    let shop = assembly::shop_temperature(draft, file);
+    let rings = parts::rings(draft, file, diameter);
+    let fit = fit::fit(draft, file, diameter);
+    let friction = friction::friction(draft, file, rings.as_deref(), method);
+    let duty = duty::states(draft, file, rings.as_deref(), shop);
+    let assembly = assembly::plan(draft, file, rings.as_deref(), diameter, method, shop);
+    let smoothing = smoothing::smoothing(draft, file, rings.as_deref(), method);
+    let criterion = criterion(draft, file);
+    let require = requirements(draft, file.require.as_ref());
+    let display = display(draft, file);
+    if !draft.faults.is_empty() {
+        return None;
+    }
+    let mut defaults = std::mem::take(&mut draft.defaults);
+    defaults.sort_by_key(|default| rank(&default.key));
+    Some(Joint {
+        title: draft.optional(file.title.as_ref()).unwrap_or_default(),
+        drawing: draft.optional(file.drawing.as_ref()),
+        note: draft.optional(file.note.as_ref()),
+        date: draft.optional(file.date.as_ref()),
+        diameter: diameter?,
+        length: length?,
+        relief: relief?,
+        rings: rings?,
+        fits: vec![fit?],
+        friction: friction?,
+        duty: duty?,
+        assembly: assembly?,
+        smoothing: smoothing?,
+        criterion: criterion?,
+        require: require?,
+        display: display?,
+        defaults,
+        remarks: std::mem::take(&mut draft.remarks),
+        set: Vec::new(),
+        digest: String::new(),
+    })
+}
+
+fn rank(key: &str) -> usize {
+    let section = key.split('.').next().unwrap_or(key);
+    ORDER.iter().position(|known| *known == section).unwrap_or(ORDER.len())
+}
+
+fn refuse_what_is_not_calculated(draft: &Draft<'_>, file: &JointFile) {
+    let two = "write `shaft:`, `hub:` and `fit:` for two parts";
+    draft.not_yet(file.rings.as_ref(), "only joints of two parts are calculated", two);
+    draft.not_yet(file.fits.as_ref(), "only one fit between two parts is calculated", two);
+    draft.not_yet(file.order.as_ref(), "two parts have no order of assembly", "take the key out");
+    draft.not_yet(
+        file.bearing.as_ref(),
+        "bearing seats are not calculated",
+        "give the ring's limits as a fit: `fit: {hole: {lower: -12 um, upper: 0 um}, shaft: k6}`",
+    );
+    draft.not_yet(
+        file.allow.as_ref(),
+        "only elastic joints are calculated",
+        "take the key out: a yield safety under 1 is reported as not met",
+    );
+}
+
+fn lengths(draft: &mut Draft<'_>, file: &JointFile) -> (Option<f64>, Option<f64>) {
+    let length = draft
+        .required(draft.tree.root(), "length", "70 mm", file.length.as_ref())
+        .and_then(|written| draft.positive(written));
+    let Some(written) = &file.relief else {
+        draft.default("relief", "0 mm", "the whole length is taken to carry");
+        return (length, Some(0.0));
+    };
+    let relief = draft.not_negative(written);
+    if let (Some(length_value), Some(relief_value), Some(length_written)) = (length, relief, &file.length)
+        && relief_value >= length_value
+    {
+        draft.refuse(written, &format!("leaves nothing of the {}", draft.called(length_written)));
+        return (length, None);
+    }
+    (length, relief)
+}
+
+fn criterion(draft: &mut Draft<'_>, file: &JointFile) -> Option<DuctileCriterion> {
+    let Some(written) = &file.criterion else {
+        let source = "greatest distortion energy, the usual criterion for ductile metals (textbooks of strength of materials)";
+        draft.default("criterion", "von Mises", source);
+        return Some(DuctileCriterion::VonMises);
+    };
+    draft.value::<CriterionWord>(written)
+}
+
+fn display(draft: &mut Draft<'_>, file: &JointFile) -> Option<UnitSystem> {
+    let Some(written) = &file.display else {
+        draft.default(
+            "display",
+            "metric",
+            "metric unless the file says inch, whatever units it is written in",
+        );
+        return Some(UnitSystem::Metric);
+    };
+    draft.value::<DisplayWord>(written)
+}
+
+fn requirements(draft: &mut Draft<'_>, keys: Option<&At<RequireKeys>>) -> Option<Requirements> {
+    let keys = keys.map(|at| &at.value);
+    let mut safety = |key: &str, written: Option<&Written<Number>>, (value, source): (f64, &str)| {
+        let Some(given) = written else {
+            draft.default(format!("require.{key}"), self::written(Kind::Number, value), source);
+            return Some(value);
+        };
+        let value = draft.value(given)?;
+        if value > 0.0 {
+            return Some(value);
+        }
+        draft.refuse(given, "must be more than zero");
+        None
+    };
+    let slip = safety("slip_safety", keys.and_then(|k| k.slip_safety.as_ref()), SLIP_SAFETY);
+    let yielding = safety("yield_safety", keys.and_then(|k| k.yield_safety.as_ref()), YIELD_SAFETY);
+    let fracture = safety("fracture_safety", keys.and_then(|k| k.fracture_safety.as_ref()), FRACTURE_SAFETY);
+    let press_force = match keys.and_then(|k| k.press_force.as_ref()) {
+        None => None,
+        Some(given) => {
+            let force = draft.value(given)?;
+            if force <= 0.0 {
+                draft.refuse(given, "must be more than zero");
+                return None;
+            }
+            Some(force)
+        }
+    };
+    Some(Requirements {
+        slip_safety: slip?,
+        yield_safety: yielding?,
+        fracture_safety: fracture?,
+        press_force,
+    })
+}

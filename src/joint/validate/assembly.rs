@@ -1,0 +1,152 @@
+//! How the joint is put together.
+
+use crate::joint::draft::Draft;
+use crate::joint::file::{AssemblyKeys, JointFile};
+use crate::joint::written::Written;
+use crate::joint::{AssemblyPlan, Bath, Method, Ring};
+use crate::material::{REFERENCE_TEMPERATURE, Sourced};
+use crate::quantity::{Angle, Kind, Temperature, written};
+
+/// Clearance while joining, as a share of the diameter, when the file is silent.
+const CLEARANCE_SHARE: f64 = 1e-3;
+const CLEARANCE_SOURCE: &str =
+    "a thousandth of the diameter, after DIN 7190 (lecture sheet on interference fits, second-hand)";
+
+/// Angle of the lead-in chamfer, degrees, when the file is silent.
+const CHAMFER_DEGREES: f64 = 5.0;
+const CHAMFER_SOURCE: &str = "lead-in chamfer of pressed fits: at most 5 degrees (textbooks after DIN 7190)";
+
+fn keys(file: &JointFile) -> Option<&AssemblyKeys> {
+    file.assembly.as_ref().map(|at| &at.value)
+}
+
+/// The method of assembly.
+pub(super) fn method(draft: &mut Draft<'_>, file: &JointFile) -> Option<Method> {
+    match keys(file).and_then(|keys| keys.method.as_ref()) {
+        Some(given) => draft.value(given),
+        None => {
+            draft.default(
+                "assembly.method",
+                "press",
+                "the plainest method; the other routes are computed as well",
+            );
+            Some(Method::Press)
+        }
+    }
+}
+
+/// Temperature of the shop, K.
+pub(super) fn shop_temperature(draft: &mut Draft<'_>, file: &JointFile) -> Option<f64> {
+    match keys(file).and_then(|keys| keys.shop_temperature.as_ref()) {
+        Some(given) => draft.value(given),
+        None => {
+            draft.default(
+                "assembly.shop_temperature",
+                "20 degC",
+                "ISO 1:2022, clause 4: reference temperature of sizes",
+            );
+            Some(REFERENCE_TEMPERATURE)
+        }
+    }
+}
+
+/// The plan of assembly.
+pub(super) fn plan(
+    draft: &mut Draft<'_>,
+    file: &JointFile,
+    rings: Option<&[Ring]>,
+    diameter: Option<f64>,
+    method: Option<Method>,
+    shop: Option<f64>,
+) -> Option<AssemblyPlan> {
+    let keys = keys(file);
+    if let Some(given) = keys.and_then(|keys| keys.shop_temperature.as_ref()) {
+        within_curves(draft, given, shop, rings.unwrap_or_default());
+    }
+    let clearance = clearance(draft, keys, diameter);
+    let chamfer_angle = chamfer_angle(draft, keys.and_then(|keys| keys.chamfer_angle.as_ref()));
+    let bath = match keys.and_then(|keys| keys.bath.as_ref()) {
+        Some(given) => draft.value(given),
+        None => {
+            draft.default("assembly.bath", "dry ice", "the milder bath; liquid nitrogen is computed as well");
+            Some(Bath::DryIce)
+        }
+    };
+    let hub_temperature_limit = match keys.and_then(|keys| keys.hub_temperature_limit.as_ref()) {
+        Some(given) => Some(hub_limit(draft, given, shop)?),
+        None => None,
+    };
+    Some(AssemblyPlan {
+        method: method?,
+        shop_temperature: shop?,
+        clearance: clearance?,
+        chamfer_angle: chamfer_angle?,
+        bath: bath?,
+        hub_temperature_limit,
+    })
+}
+
+/// A fault when a temperature is outside the expansion curve of one of the rings.
+pub(super) fn within_curves(
+    draft: &Draft<'_>,
+    given: &Written<Temperature>,
+    temperature: Option<f64>,
+    rings: &[Ring],
+) -> bool {
+    let Some(temperature) = temperature else { return false };
+    let outside = rings.iter().find(|ring| {
+        let (low, high) = ring.material.expansion.range();
+        temperature != REFERENCE_TEMPERATURE && !(low..=high).contains(&temperature)
+    });
+    let Some(ring) = outside else { return true };
+    let (low, high) = ring.material.expansion.range();
+    let text = |kelvin| written(Kind::Temperature, kelvin);
+    draft.refuse(
+        given,
+        &format!(
+            "is outside the expansion curve of {} ({}), which runs from {} to {}",
+            ring.material.id,
+            ring.name,
+            text(low),
+            text(high)
+        ),
+    );
+    false
+}
+
+fn clearance(
+    draft: &mut Draft<'_>,
+    keys: Option<&AssemblyKeys>,
+    diameter: Option<f64>,
+) -> Option<Sourced<f64>> {
+    match keys.and_then(|keys| keys.clearance.as_ref()) {
+        Some(given) => Some(Sourced::new(draft.not_negative(given)?, "joint file")),
+        None => {
+            let clearance = CLEARANCE_SHARE * diameter?;
+            draft.default("assembly.clearance", written(Kind::Length, clearance), CLEARANCE_SOURCE);
+            Some(Sourced::new(clearance, CLEARANCE_SOURCE))
+        }
+    }
+}
+
+fn chamfer_angle(draft: &mut Draft<'_>, given: Option<&Written<Angle>>) -> Option<Sourced<f64>> {
+    let Some(given) = given else {
+        draft.default("assembly.chamfer_angle", "5 deg", CHAMFER_SOURCE);
+        return Some(Sourced::new(CHAMFER_DEGREES.to_radians(), CHAMFER_SOURCE));
+    };
+    let angle = draft.value(given)?;
+    if angle > 0.0 && angle < std::f64::consts::FRAC_PI_2 {
+        return Some(Sourced::new(angle, "joint file"));
+    }
+    draft.refuse(given, "must be more than 0 deg and less than 90 deg, counted from the axis");
+    None
+}
+
+fn hub_limit(draft: &Draft<'_>, given: &Written<Temperature>, shop: Option<f64>) -> Option<f64> {
+    let limit = draft.value(given)?;
+    if limit > shop? {
+        return Some(limit);
+    }
+    draft.refuse(given, "is not above the shop temperature");
+    None
+}

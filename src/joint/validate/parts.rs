@@ -1,0 +1,266 @@
+//! The two parts: materials, diameters, roughness, and the ruling section that picks the strength.
+
+use std::sync::Arc;
+
+use serde::Deserialize;
+
+use crate::joint::Ring;
+use crate::joint::diagnose::Fault;
+use crate::joint::draft::Draft;
+use crate::joint::file::{JointFile, ShaftKeys};
+use crate::joint::leaf::{GivenRoughness, MaterialKeys, MaterialName, Roughness};
+use crate::joint::tree::NodeId;
+use crate::joint::written::{At, TextOr, Written};
+use crate::material::record::{MaterialRecord, Step};
+use crate::material::roughness::{self, Member};
+use crate::material::{Material, Origin, Sourced};
+use crate::quantity::{Kind, Length, written};
+
+const BAR_SECTION: &str =
+    "the diameter of a bar (common practice for ruling sections of heat-treated steel, no source)";
+const WALL_SECTION: &str =
+    "the thickness of the wall (common practice for ruling sections of heat-treated steel, no source)";
+
+/// A part as far as both kinds of part are alike.
+struct Part<'f> {
+    key: &'static str,
+    node: NodeId,
+    name: Option<String>,
+    material: Option<Arc<Material>>,
+    material_node: Option<NodeId>,
+    section: Option<&'f Written<Length>>,
+    inner: Option<f64>,
+    outer: Option<f64>,
+    roughness: Option<Sourced<f64>>,
+}
+
+/// Shaft and hub.
+pub(super) fn rings(draft: &mut Draft<'_>, file: &JointFile, diameter: Option<f64>) -> Option<Vec<Ring>> {
+    let root = draft.tree.root();
+    let shaft = draft.required(root, "shaft", "{material: C45+N}", file.shaft.as_ref());
+    let shaft = shaft.and_then(|at| shaft_ring(draft, at, file, diameter));
+    let example = "{material: EN-GJL-250, outer_diameter: 110 mm}";
+    let hub = draft.required(root, "hub", example, file.hub.as_ref());
+    let hub = hub.and_then(|at| {
+        let keys = &at.value;
+        draft.not_yet(
+            keys.steps.as_ref(),
+            "a hub of one outer diameter is calculated",
+            "give `outer_diameter`",
+        );
+        let outer = draft.required(at.node, "outer_diameter", "110 mm", keys.outer_diameter.as_ref());
+        let outer = outer.and_then(|given| larger_than_joint(draft, given, file, diameter));
+        let part = Part {
+            key: "hub",
+            node: at.node,
+            name: draft.optional(keys.name.as_ref()),
+            material: material(draft, at.node, "EN-GJL-250", keys.material.as_ref()),
+            material_node: keys.material.as_ref().map(|material| material.node),
+            section: keys.section.as_ref(),
+            inner: diameter,
+            outer,
+            roughness: roughness(draft, "hub", keys.roughness.as_ref(), Member::Hub),
+        };
+        ring(draft, part, |inner, outer| 0.5 * (outer - inner), WALL_SECTION)
+    });
+    Some(vec![shaft?, hub?])
+}
+
+fn shaft_ring(
+    draft: &mut Draft<'_>,
+    at: &At<ShaftKeys>,
+    file: &JointFile,
+    diameter: Option<f64>,
+) -> Option<Ring> {
+    let keys = &at.value;
+    draft.not_yet(keys.steps.as_ref(), "a shaft of one bore is calculated", "give `bore`");
+    let material_found = material(draft, at.node, "C45+N", keys.material.as_ref());
+    let part = Part {
+        key: "shaft",
+        node: at.node,
+        name: draft.optional(keys.name.as_ref()),
+        material: material_found,
+        material_node: keys.material.as_ref().map(|material| material.node),
+        section: keys.section.as_ref(),
+        inner: bore(draft, keys.bore.as_ref(), file, diameter),
+        outer: diameter,
+        roughness: roughness(draft, "shaft", keys.roughness.as_ref(), Member::Shaft),
+    };
+    ring(draft, part, |_, outer| outer, BAR_SECTION)
+}
+
+fn ring(
+    draft: &mut Draft<'_>,
+    part: Part<'_>,
+    usual_section: impl Fn(f64, f64) -> f64,
+    section_source: &str,
+) -> Option<Ring> {
+    let material = part.material?;
+    let (inner, outer) = (part.inner?, part.outer?);
+    let section = match part.section {
+        Some(given) => draft.positive(given)?,
+        None => {
+            let section = tidy(usual_section(inner, outer));
+            draft.default(format!("{}.section", part.key), written(Kind::Length, section), section_source);
+            section
+        }
+    };
+    let Some(strength) = material.strength_for(section).cloned() else {
+        let node = part.section.map(|given| given.node).or(part.material_node).unwrap_or(part.node);
+        draft.faults.add(no_strength(node, &material, section));
+        return None;
+    };
+    Some(Ring {
+        name: part.name.unwrap_or_else(|| part.key.to_owned()),
+        material,
+        section,
+        strength,
+        inner_diameter: inner,
+        outer_diameter: outer,
+        roughness: part.roughness?,
+    })
+}
+
+/// A computed length without the noise of its last digits, to the picometre.
+fn tidy(length: f64) -> f64 {
+    (length * 1e12).round() / 1e12
+}
+
+fn no_strength(node: NodeId, material: &Material, section: f64) -> Fault {
+    let largest = material.strength.iter().filter_map(|row| row.section_up_to).fold(0.0, f64::max);
+    let text = |length| written(Kind::Length, length);
+    Fault::value(
+        node,
+        format!(
+            "{} has no strength for a ruling section of {}: its table ends at {}",
+            material.id,
+            text(section),
+            text(largest)
+        ),
+    )
+    .help("give `section` if the piece was treated at a smaller section, or write the material here with its strength")
+}
+
+fn bore(
+    draft: &mut Draft<'_>,
+    given: Option<&Written<Length>>,
+    file: &JointFile,
+    diameter: Option<f64>,
+) -> Option<f64> {
+    let Some(given) = given else {
+        draft.default("shaft.bore", "0 mm", "a solid shaft");
+        return Some(0.0);
+    };
+    let bore = draft.not_negative(given)?;
+    if bore >= diameter? {
+        draft.refuse(given, &format!("is not smaller than the mating {}", called_diameter(draft, file)));
+        return None;
+    }
+    Some(bore)
+}
+
+fn larger_than_joint(
+    draft: &Draft<'_>,
+    given: &Written<Length>,
+    file: &JointFile,
+    diameter: Option<f64>,
+) -> Option<f64> {
+    let outer = draft.positive(given)?;
+    if outer <= diameter? {
+        draft.refuse(given, &format!("is not larger than the mating {}", called_diameter(draft, file)));
+        return None;
+    }
+    Some(outer)
+}
+
+fn called_diameter(draft: &Draft<'_>, file: &JointFile) -> String {
+    file.diameter.as_ref().map_or_else(|| "diameter".to_owned(), |given| draft.called(given))
+}
+
+fn material(
+    draft: &Draft<'_>,
+    part: NodeId,
+    example: &str,
+    given: Option<&At<TextOr<MaterialName, MaterialKeys>>>,
+) -> Option<Arc<Material>> {
+    let given = draft.required(part, "material", example, given)?;
+    match &given.value {
+        TextOr::Text(text) => {
+            let name = draft.value(&At { node: given.node, value: text.clone() })?;
+            match draft.library.find(&name) {
+                Ok(material) => Some(material),
+                Err(error) => {
+                    draft.faults.add(Fault::value(given.node, error.to_string()).help(error.help()));
+                    None
+                }
+            }
+        }
+        TextOr::Keys(_) => in_place(draft, given.node),
+    }
+}
+
+/// A material written in the joint file.
+fn in_place(draft: &Draft<'_>, node: NodeId) -> Option<Arc<Material>> {
+    let record = match MaterialRecord::deserialize(draft.reader(node)) {
+        Ok(record) => record,
+        Err(refusal) => {
+            draft.faults.add(refusal.fault(node));
+            return None;
+        }
+    };
+    if draft.faults.touch_within(draft.tree, node) {
+        return None;
+    }
+    match record.into_material("written in place", Origin::JointFile) {
+        Ok(material) => Some(Arc::new(material)),
+        Err(error) => {
+            let (at, reached) = follow(draft, node, &error.path);
+            let fault = if reached { Fault::value(at, error.message) } else { Fault::key(at, error.message) };
+            draft.faults.add(fault.maybe_help(error.help));
+            None
+        }
+    }
+}
+
+/// The value at the end of a path below `node`, or the last one on the way that is there.
+fn follow(draft: &Draft<'_>, node: NodeId, path: &[Step]) -> (NodeId, bool) {
+    let mut at = node;
+    for step in path {
+        let next = match step {
+            Step::Key(key) => draft.tree.get(at, key),
+            Step::Index(number) => draft.tree.item(at, *number),
+        };
+        match next {
+            Some(next) => at = next,
+            None => return (at, false),
+        }
+    }
+    (at, true)
+}
+
+fn roughness(
+    draft: &mut Draft<'_>,
+    part: &str,
+    given: Option<&Written<Roughness>>,
+    member: Member,
+) -> Option<Sourced<f64>> {
+    let Some(given) = given else {
+        let usual = roughness::default_rz(member);
+        let value = format!("Rz {}", written(Kind::Length, usual.value));
+        draft.default(format!("{part}.roughness"), value, usual.source.to_string());
+        return Some(usual);
+    };
+    match draft.value(given)? {
+        GivenRoughness::Rz(depth) => Some(Sourced::new(depth, "joint file")),
+        GivenRoughness::Ra(depth) => {
+            let converted = roughness::rz_from_ra(depth);
+            draft.remarks.push(format!(
+                "The roughness {} of the {part} was taken as Rz {} ({}).",
+                given.value.text.trim(),
+                written(Kind::Length, tidy(converted.value)),
+                converted.source
+            ));
+            Some(converted)
+        }
+    }
+}
