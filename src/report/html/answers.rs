@@ -78,7 +78,10 @@ fn assembly(sheet: Sheet) -> String {
     }
     match plan.method {
         Method::Press => {
-            format!("press in with up to {}", units.text(Measure::Force, assembly.press.tightest.peak_force))
+            format!(
+                "press in with up to {}",
+                units.brief(Measure::Force, assembly.press.tightest.peak_force).text()
+            )
         }
         Method::HeatHub => match assembly.heat_hub.temperature {
             Some(hot) => format!("heat the {hub} to {}", temperature(hot)),
@@ -118,7 +121,7 @@ fn shortfall(units: Units, verdict: &Verdict, found: Option<f64>) -> String {
 fn shown(units: Units, unit: VerdictUnit, value: f64) -> String {
     match unit {
         VerdictUnit::Safety => safety(value),
-        VerdictUnit::Force => units.text(Measure::Force, value),
+        VerdictUnit::Force => units.brief(Measure::Force, value).text(),
         VerdictUnit::Temperature => units.text(Measure::Temperature, value),
     }
 }
@@ -141,8 +144,8 @@ fn table(sheet: Sheet) -> Markup {
                 th scope="col" { "Judged" }
                 th.r scope="col" { "Required" }
                 th.r scope="col" { "Found" }
-                th scope="col" { "At" }
                 th scope="col" { "Result" }
+                th scope="col" { "At" }
             }
         }
         tbody {
@@ -151,24 +154,27 @@ fn table(sheet: Sheet) -> Markup {
                 tr.first[first] {
                     th scope="row" { (if first { question(verdict.question) } else { "" }) }
                     td { (verdict.subject) }
-                    td.r { (required(sheet.units, verdict)) }
+                    td.r { (required(sheet, verdict)) }
                     td.r { (verdict.found.map_or_else(|| NONE.to_owned(), |value| shown(sheet.units, verdict.unit, value))) }
-                    td { (verdict.at) }
                     td.result.missed[!verdict.ok] { (result(verdict)) }
+                    td { (verdict.at) }
                 }
             }
         }
     }
 }
 
-/// The requirement with its sense: a safety is a least value, a force or temperature a greatest one.
-fn required(units: Units, verdict: &Verdict) -> String {
+/// The requirement with its sense: a safety is a least value, a force or temperature a greatest one, but a
+/// chilled shaft must not have to be colder than its bath.
+fn required(sheet: Sheet, verdict: &Verdict) -> String {
     let Some(value) = verdict.required else { return "none set".to_owned() };
+    let chilled = sheet.findings.joint.assembly.method == Method::ChillShaft;
     let sense = match verdict.unit {
         VerdictUnit::Safety => "≥",
+        VerdictUnit::Temperature if chilled => "≥",
         VerdictUnit::Force | VerdictUnit::Temperature => "≤",
     };
-    format!("{sense} {}", shown(units, verdict.unit, value))
+    format!("{sense} {}", shown(sheet.units, verdict.unit, value))
 }
 
 fn result(verdict: &Verdict) -> &'static str {

@@ -4,10 +4,9 @@ use maud::{Markup, html};
 
 use super::Sheet;
 use super::table::range_text;
-use crate::findings::{BathFindings, Caution};
+use crate::findings::{BathFindings, Caution, bath_name};
 use crate::joint::{Method, Ring};
-use crate::material::Range;
-use crate::report::plot::bath_name;
+use crate::material::{REFERENCE_TEMPERATURE, Range};
 use crate::report::units::Measure;
 
 /// One step.
@@ -84,8 +83,12 @@ fn check_parts(sheet: Sheet) -> Step {
         ));
     }
     Step::new(
-        "Measure both parts at 20 °C",
-        format!("{} Parts outside these limits are not covered by this sheet.", sentences.join(" ")),
+        "Measure both parts",
+        format!(
+            "At {}. {} Parts outside these limits are not covered by this sheet.",
+            sheet.units.text(Measure::Temperature, REFERENCE_TEMPERATURE),
+            sentences.join(" ")
+        ),
     )
 }
 
@@ -104,7 +107,7 @@ fn clean(sheet: Sheet) -> Step {
 fn press(sheet: Sheet) -> Vec<Step> {
     let findings = sheet.findings;
     let units = sheet.units;
-    let force = |value: f64| units.text(Measure::Force, value);
+    let force = |value: f64| units.brief(Measure::Force, value).text();
     let press = &findings.assembly.press;
     let friction = &findings.joint.friction.pressing;
     let seated = if press.loosest.peak_force > 0.0 {
@@ -259,12 +262,13 @@ fn impossible(statement: &str, subject: &'static str) -> Step {
 fn dismantle(sheet: Sheet) -> Step {
     let extremes = &sheet.findings.extremes;
     let range = Range { low: extremes.loosest.release_force.low, high: extremes.tightest.release_force.high };
+    let force = |value: f64| sheet.units.brief(Measure::Force, value).text();
     Step::new(
         "To take it apart",
         format!(
-            "Pushing out takes {} {}.",
-            range_text(sheet.units, Measure::Force, range),
-            sheet.units.unit(Measure::Force)
+            "Pushing out takes {} to {}, the least at the loosest pair and the low friction.",
+            force(range.low),
+            force(range.high)
         ),
     )
 }
