@@ -384,6 +384,7 @@ mod tests {
 
     fn material(name: &str, kind: Kind, condition: Option<&str>) -> Material {
         Material {
+            family: crate::material::Family::default(),
             id: name.to_owned(),
             name: name.to_owned(),
             designations: Vec::new(),

@@ -169,7 +169,8 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
             } else {
                 "nothing stresses it"
             };
-            notes.push(format!("The safety of the {} at the tightest pair does not exist: {why}.", ring.name));
+            notes
+                .push(format!("The safety of the {} at the tightest pair does not exist: {why}.", ring.name));
         }
     }
     notes.push(

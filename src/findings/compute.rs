@@ -10,11 +10,11 @@ use crate::assembly::AssemblyError;
 use crate::assembly::press;
 use crate::joint::{DutyState, Joint, Ring, SmoothingAt};
 use crate::material::{Kind, Range};
+use crate::mechanics::MechanicsError;
 use crate::mechanics::capacity;
 use crate::mechanics::criteria::{self, DuctileCriterion};
 use crate::mechanics::ring::{RingLoad, RingSection, Stress};
 use crate::mechanics::stack::{Stack, StackSolution};
-use crate::mechanics::MechanicsError;
 use crate::numerics::interpolation::InterpolationError;
 use crate::tolerance::Extremes;
 
@@ -73,7 +73,8 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         .collect::<Result<Vec<_>, FindingsError>>()?;
     let onset_of_yield = kernel.onset_of_yield()?;
     let assembly = assembly_of::assembly(&joint, &extremes)?;
-    let character = joint.fits.first().map_or(crate::tolerance::Character::Clearance, |fit| fit.limits.character());
+    let character =
+        joint.fits.first().map_or(crate::tolerance::Character::Clearance, |fit| fit.limits.character());
     let mut findings = Findings {
         joint,
         character,
@@ -112,8 +113,11 @@ fn pair_interferences(joint: &Joint) -> Extremes<PairInterference> {
             SmoothingAt::None => false,
         };
         let made: Vec<f64> = joint.fits.iter().map(|fit| pick(fit.limits.interference())).collect();
-        let smoothed: Vec<f64> =
-            made.iter().zip(&joint.smoothing.loss).map(|(made, loss)| after_smoothing(*made, *loss)).collect();
+        let smoothed: Vec<f64> = made
+            .iter()
+            .zip(&joint.smoothing.loss)
+            .map(|(made, loss)| after_smoothing(*made, *loss))
+            .collect();
         let effective = if takes_loss { smoothed.clone() } else { made.clone() };
         let lost = made.iter().zip(&effective).map(|(made, effective)| made - effective).collect();
         PairInterference { made, lost, effective, smoothed }
@@ -152,7 +156,11 @@ impl<'a> Kernel<'a> {
         })
     }
 
-    fn solve(&self, interference: &[f64], free_strain: &[f64]) -> Result<(Stack, StackSolution), MechanicsError> {
+    fn solve(
+        &self,
+        interference: &[f64],
+        free_strain: &[f64],
+    ) -> Result<(Stack, StackSolution), MechanicsError> {
         let stack = Stack {
             rings: self.sections.clone(),
             interference: interference.to_vec(),
@@ -176,7 +184,12 @@ impl<'a> Kernel<'a> {
         let friction = &self.joint.friction;
         let capacity = self.capacity(pressure, friction.holding.value.low);
         let peak = |friction: f64| -> Result<f64, AssemblyError> {
-            Ok(press::peak_force(&assembly_of::press_input(self.joint, pressure, first(&pair.effective), friction))?)
+            Ok(press::peak_force(&assembly_of::press_input(
+                self.joint,
+                pressure,
+                first(&pair.effective),
+                friction,
+            ))?)
         };
         let release = |friction: f64| capacity::axial(friction, pressure, self.joint.diameter, self.engaged);
         Ok(PairFindings {
@@ -189,7 +202,10 @@ impl<'a> Kernel<'a> {
             rings: self.stresses(&stack, &solution)?,
             torque_capacity: capacity.torque,
             axial_capacity: capacity.axial,
-            press_force: Range { low: peak(friction.pressing.value.low)?, high: peak(friction.pressing.value.high)? },
+            press_force: Range {
+                low: peak(friction.pressing.value.low)?,
+                high: peak(friction.pressing.value.high)?,
+            },
             release_force: Range {
                 low: release(friction.release.value.low),
                 high: release(friction.release.value.high),
@@ -285,10 +301,10 @@ pub(super) fn free_strains(joint: &Joint, temperatures: &[f64]) -> Result<Vec<f6
         .iter()
         .zip(temperatures)
         .map(|(ring, temperature)| {
-            ring.material.expansion.strain(*temperature).map_err(|cause| FindingsError::Expansion {
-                material: ring.material.name.clone(),
-                cause,
-            })
+            ring.material
+                .expansion
+                .strain(*temperature)
+                .map_err(|cause| FindingsError::Expansion { material: ring.material.name.clone(), cause })
         })
         .collect()
 }

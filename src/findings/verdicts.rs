@@ -116,7 +116,14 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
             let force = assembly.press.tightest.peak_force;
             let allowed = findings.joint.require.press_force;
             let ok = allowed.is_none_or(|allowed| force <= allowed);
-            vec![verdict("peak press force", VerdictUnit::Force, allowed, Some(force), ok, "tightest pair, high friction")]
+            vec![verdict(
+                "peak press force",
+                VerdictUnit::Force,
+                allowed,
+                Some(force),
+                ok,
+                "tightest pair, high friction",
+            )]
         }
         Method::HeatHub => {
             let route = &assembly.heat_hub;

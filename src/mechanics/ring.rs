@@ -133,5 +133,9 @@ pub(super) fn check(
     allowed: &'static str,
     holds: bool,
 ) -> Result<(), MechanicsError> {
-    if holds && given.is_finite() { Ok(()) } else { Err(MechanicsError::OutsideRange { quantity, given, allowed }) }
+    if holds && given.is_finite() {
+        Ok(())
+    } else {
+        Err(MechanicsError::OutsideRange { quantity, given, allowed })
+    }
 }

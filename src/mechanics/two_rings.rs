@@ -52,7 +52,12 @@ impl TwoRings {
         let outer = self.hub_outer_diameter;
         check("outer diameter (m)", outer, "above the joint diameter", outer > self.diameter)?;
         check("Young's modulus (Pa)", self.hub_youngs_modulus, "positive", self.hub_youngs_modulus > 0.0)?;
-        check("Young's modulus (Pa)", self.shaft_youngs_modulus, "positive", self.shaft_youngs_modulus > 0.0)?;
+        check(
+            "Young's modulus (Pa)",
+            self.shaft_youngs_modulus,
+            "positive",
+            self.shaft_youngs_modulus > 0.0,
+        )?;
         let hub = self.hub_hoop_factor() + self.hub_poisson;
         let shaft = factor(self.diameter, self.shaft_bore) - self.shaft_poisson;
         let flexibility = hub / self.hub_youngs_modulus + shaft / self.shaft_youngs_modulus;
