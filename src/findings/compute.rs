@@ -183,13 +183,9 @@ impl<'a> Kernel<'a> {
         let pressure = grip(&solution);
         let friction = &self.joint.friction;
         let capacity = self.capacity(pressure, friction.holding.value.low);
-        let peak = |friction: f64| -> Result<f64, AssemblyError> {
-            Ok(press::peak_force(&assembly_of::press_input(
-                self.joint,
-                pressure,
-                first(&pair.effective),
-                friction,
-            ))?)
+        let peak = |friction: f64| {
+            let input = assembly_of::press_input(self.joint, pressure, first(&pair.effective), friction);
+            press::peak_force(&input)
         };
         let release = |friction: f64| capacity::axial(friction, pressure, self.joint.diameter, self.engaged);
         Ok(PairFindings {
@@ -246,7 +242,12 @@ impl<'a> Kernel<'a> {
     }
 
     /// Onset of yield (or fracture) at the shop temperature, at rest: every stress is linear in the pressure.
+    ///
+    /// With more than two rings there is no one interference at which yield starts.
     fn onset_of_yield(&self) -> Result<Option<OnsetOfYield>, FindingsError> {
+        if self.sections.len() != 2 {
+            return Ok(None);
+        }
         let cold = vec![0.0; self.sections.len()];
         let unit = self.joint.diameter * 1e-3;
         let (stack, solution) = self.solve(&[unit], &cold)?;
