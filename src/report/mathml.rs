@@ -5,7 +5,7 @@
 
 use maud::{Markup, html};
 
-use super::typeset::{MINUS, THIN, is_number, number, split_exponent};
+use super::typeset::{self, MINUS, THIN, is_number, number, split_exponent};
 use crate::findings::expression::{Expression, Function, Symbol};
 
 /// A formula in letters, such as p = δ/(d·c), without the `math` element round it.
@@ -56,7 +56,7 @@ pub fn printed_number(plain: &str) -> Markup {
 pub fn with_unit(plain: &str, unit: &str) -> Markup {
     html! {
         (printed_number(plain))
-        @if !unit.is_empty() { mtext { (THIN) (unit) } }
+        @if !unit.is_empty() { mtext { (THIN) (typeset::unit(unit)) } }
     }
 }
 

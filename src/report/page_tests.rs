@@ -1,5 +1,7 @@
 //! What must hold of every report, whatever the joint.
 
+use std::sync::OnceLock;
+
 use super::html::html;
 use super::sample;
 use super::svg::{FONT, digits};
@@ -7,7 +9,12 @@ use super::text_width::text_width;
 use super::well_formed::{Element, elements};
 
 /// Pages of all samples. With HUBGRIP_PAGES set to a folder they are written there too, to be looked at.
-fn pages() -> Vec<(&'static str, String)> {
+fn pages() -> &'static [(&'static str, String)] {
+    static PAGES: OnceLock<Vec<(&'static str, String)>> = OnceLock::new();
+    PAGES.get_or_init(made)
+}
+
+fn made() -> Vec<(&'static str, String)> {
     let folder = std::env::var_os("HUBGRIP_PAGES").map(std::path::PathBuf::from);
     sample::all()
         .into_iter()
@@ -24,7 +31,7 @@ fn pages() -> Vec<(&'static str, String)> {
 #[test]
 fn every_page_is_well_formed() {
     for (name, page) in pages() {
-        if let Err(fault) = elements(&page) {
+        if let Err(fault) = elements(page) {
             panic!("{name}: {fault}");
         }
     }
@@ -48,7 +55,7 @@ fn no_text_of_the_user_becomes_markup() {
 #[test]
 fn nothing_is_fetched_and_nothing_runs() {
     for (name, page) in pages() {
-        for element in elements(&page).unwrap() {
+        for element in elements(page).unwrap() {
             assert!(
                 !matches!(element.name.as_str(), "script" | "link" | "img" | "iframe" | "object"),
                 "{name}"
@@ -68,7 +75,7 @@ fn nothing_is_fetched_and_nothing_runs() {
 #[test]
 fn no_number_is_missing_its_value() {
     for (name, page) in pages() {
-        let text: String = elements(&page).unwrap().into_iter().map(|element| element.text + " ").collect();
+        let text: String = elements(page).unwrap().into_iter().map(|element| element.text + " ").collect();
         for word in text.split(|c: char| !c.is_alphanumeric()) {
             assert!(!matches!(word, "NaN" | "inf" | "Inf"), "{name}: {word}");
         }
@@ -79,7 +86,7 @@ fn no_number_is_missing_its_value() {
 #[test]
 fn identifiers_are_unique_and_references_lead_somewhere() {
     for (name, page) in pages() {
-        let all = elements(&page).unwrap();
+        let all = elements(page).unwrap();
         let mut ids: Vec<&str> = all.iter().filter_map(|element| element.attribute("id")).collect();
         let count = ids.len();
         ids.sort_unstable();
@@ -101,7 +108,7 @@ fn identifiers_are_unique_and_references_lead_somewhere() {
 #[test]
 fn pictures_and_tables_can_be_used_without_seeing_them() {
     for (name, page) in pages() {
-        let all = elements(&page).unwrap();
+        let all = elements(page).unwrap();
         for (index, element) in all.iter().enumerate() {
             let inside = |tag: &str| all.iter().any(|other| other.name == tag && other.parent == Some(index));
             match element.name.as_str() {
@@ -200,9 +207,9 @@ fn line(all: &[Element], index: usize, element: &Element, figure: usize) -> Line
 #[test]
 fn lettering_of_the_figures_stays_inside_and_apart() {
     for (name, page) in pages() {
-        let all = elements(&page).unwrap();
+        let all = elements(page).unwrap();
         let figures: Vec<usize> = (0..all.len()).filter(|index| all[*index].name == "svg").collect();
-        assert!(figures.len() >= 3, "{name}");
+        assert!(figures.len() >= 2, "{name}");
         for figure in figures {
             let id = all[figure].attribute("id").unwrap();
             assert_eq!(all[figure].attribute("font-family"), Some(FONT));

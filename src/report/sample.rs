@@ -5,13 +5,15 @@
 
 use std::sync::{Arc, OnceLock};
 
-use crate::findings::{Findings, compute};
+use crate::findings::{FaceStress, Findings, RingStress, compute};
 use crate::joint::*;
 use crate::material::library::Library;
 use crate::material::{Range, Sourced};
-use crate::mechanics::criteria::DuctileCriterion;
+use crate::mechanics::criteria::{self, DuctileCriterion};
+use crate::mechanics::ring::RingSection;
+use crate::mechanics::stack::Stack;
 use crate::quantity::UnitSystem;
-use crate::tolerance::{FitLimits, Limits};
+use crate::tolerance::{Extremes, FitLimits, Limits};
 
 /// One ring: name, material, outer diameter in mm, roughness Rz in µm.
 type Part = (&'static str, &'static str, f64, f64);
@@ -129,22 +131,75 @@ pub(crate) fn yielding() -> Findings {
     })
 }
 
-/// Three rings: an insert, a liner and a case.
+/// Three rings: an insert, a liner and a case, shrunk together.
+///
+/// The case is put round the computed pair here: its stresses, and theirs with it, come from the stack of rings.
 pub(crate) fn three_rings() -> Findings {
-    findings(&Spec {
+    let spec = |parts: &[Part], fits: &[(&'static str, [f64; 4])]| Spec {
         title: "Die ring with a liner",
         bore: 20.0,
-        parts: vec![
-            ("insert", "100Cr6", 40.0, 2.5),
-            ("liner", "42CrMo4+QT", 60.0, 4.0),
-            ("case", "C45+N", 100.0, 6.3),
-        ],
-        fits: vec![("H6/s6", [0.0, 16.0, 43.0, 59.0]), ("H6/s6", [0.0, 19.0, 53.0, 72.0])],
+        parts: parts.to_vec(),
+        fits: fits.to_vec(),
         length: 45.0,
         torque: 200.0,
         method: Method::HeatHub,
         ..Spec::default()
-    })
+    };
+    let parts =
+        [("insert", "100Cr6", 40.0, 2.5), ("liner", "42CrMo4+QT", 60.0, 4.0), ("case", "C45+N", 100.0, 6.3)];
+    let fits = [("H6/s6", [0.0, 16.0, 43.0, 59.0]), ("H6/s6", [0.0, 19.0, 53.0, 72.0])];
+    let mut findings = findings(&spec(&parts[..2], &fits[..1]));
+    findings.joint = joint(&spec(&parts, &fits));
+    let joint = &findings.joint;
+    let of = |pick: fn(&Extremes<f64>) -> f64| -> Vec<f64> {
+        joint.fits.iter().map(|fit| pick(&fit.limits.interference())).collect()
+    };
+    findings.extremes.loosest.rings = stresses(joint, of(|e| e.loosest));
+    findings.extremes.mean.rings = stresses(joint, of(|e| e.mean));
+    findings.extremes.tightest.rings = stresses(joint, of(|e| e.tightest));
+    findings
+}
+
+fn stresses(joint: &Joint, interference: Vec<f64>) -> Vec<RingStress> {
+    let section = |ring: &Ring| {
+        let material = &ring.material;
+        let (inner, outer) = (ring.inner_diameter / 2.0, ring.outer_diameter / 2.0);
+        let (e, nu) = (material.youngs_modulus.value, material.poisson.value);
+        RingSection::new(inner, outer, e, nu, material.density.value).unwrap()
+    };
+    let stack = Stack {
+        rings: joint.rings.iter().map(section).collect(),
+        free_strain: vec![0.0; joint.rings.len()],
+        interference,
+        inner_pressure: 0.0,
+        outer_pressure: 0.0,
+        angular_speed: 0.0,
+    };
+    let solution = stack.solve().unwrap();
+    let of_ring = |(index, ring): (usize, &Ring)| {
+        let load = stack.ring_load(index, &solution).unwrap();
+        let section = &stack.rings[index];
+        let face = |radius: f64| {
+            let stress = section.stress_at(&load, radius).unwrap();
+            let (radial, hoop) = (stress.radial, stress.hoop);
+            let (von_mises, tresca) = (criteria::von_mises(radial, hoop), criteria::tresca(radial, hoop));
+            FaceStress { radial, hoop, von_mises, tresca }
+        };
+        let (bore, rim) = (face(section.inner_radius()), face(section.outer_radius()));
+        let equivalent = bore.von_mises.max(rim.von_mises);
+        let strength = ring.strength.yield_strength;
+        let change = |radius: f64| 2.0 * section.displacement_at(&load, radius).unwrap();
+        RingStress {
+            bore,
+            rim,
+            equivalent,
+            strength,
+            safety: strength.map(|strength| strength / equivalent),
+            bore_change: change(section.inner_radius()),
+            outer_change: change(section.outer_radius()),
+        }
+    };
+    joint.rings.iter().enumerate().map(of_ring).collect()
 }
 
 /// A pin of 3 mm in a lever, in inches.

@@ -33,11 +33,12 @@ pub(crate) struct Reading {
 }
 
 impl Reading {
-    /// Both in one line, a thin space between; the sign of degrees stands close.
+    /// Both in one line, a thin space between; the sign of degrees stands close, a power of ten is a factor.
     pub(crate) fn text(&self) -> String {
         match self.unit.as_str() {
             "" => self.number.clone(),
             "°" => format!("{}°", self.number),
+            power if power.starts_with("10") => format!("{}·{power}", self.number),
             unit => format!("{}{THIN}{unit}", self.number),
         }
     }
@@ -64,10 +65,11 @@ impl Units {
         self.reading(measure, si).text()
     }
 
-    /// A computed number for a sentence or a picture: three significant digits, for pressure, force and torque.
+    /// A computed number for a sentence or a picture: three significant digits for
+    /// pressure, force, torque and a computed length.
     pub(crate) fn brief(self, measure: Measure, si: f64) -> Reading {
         match measure {
-            Measure::Pressure | Measure::Force | Measure::Torque => {
+            Measure::Pressure | Measure::Force | Measure::Torque | Measure::Size => {
                 let plain = quantity::number(self.on_axis(measure, settled(measure, si)), 3);
                 Reading { number: typeset::number(&plain), unit: self.unit(measure) }
             }

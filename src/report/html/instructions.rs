@@ -7,6 +7,7 @@ use super::table::range_text;
 use crate::findings::{BathFindings, Caution, bath_name};
 use crate::joint::{Method, Ring};
 use crate::material::{REFERENCE_TEMPERATURE, Range};
+use crate::report::typeset::{prose, sentence};
 use crate::report::units::Measure;
 
 /// One step.
@@ -56,9 +57,10 @@ pub(super) fn body(sheet: Sheet) -> Markup {
 fn cautions(all: &[Caution], subject: &str) -> Markup {
     html! {
         @if all.iter().any(|caution| caution.subject == subject) {
+            p.caution-head { strong { "Cautions" } }
             ul.cautions {
                 @for caution in all.iter().filter(|caution| caution.subject == subject) {
-                    li { strong { "Caution. " } (caution.text) " " span.source { (caution.source) } }
+                    li { (prose(&caution.text)) " " span.source { (caution.source) } }
                 }
             }
         }
@@ -134,8 +136,8 @@ fn press(sheet: Sheet) -> Vec<Step> {
         Step::new(
             "Press in with one stroke",
             format!(
-                "Travel {} from first touch. The force rises steadily. Stop when it passes {}: parts or friction are then not as assumed.",
-                units.text(Measure::Size, press.tightest.peak_travel.max(findings.joint.length - findings.joint.relief)),
+                "Over {} of seat, from first touch. The force rises steadily. Stop when it passes {}: parts or friction are then not as assumed.",
+                units.text(Measure::Size, findings.joint.engaged_length()),
                 force(press.tightest.peak_force)
             ),
         )
@@ -256,7 +258,7 @@ fn heat_and_chill(sheet: Sheet) -> Vec<Step> {
 }
 
 fn impossible(statement: &str, subject: &'static str) -> Step {
-    Step::new("NOT POSSIBLE as asked", statement.to_owned()).with_cautions(subject)
+    Step::new("NOT POSSIBLE as asked", sentence(statement)).with_cautions(subject)
 }
 
 fn dismantle(sheet: Sheet) -> Step {
@@ -276,12 +278,19 @@ fn dismantle(sheet: Sheet) -> Step {
 /// What the other methods would take, in the words of the findings.
 fn other_routes(sheet: Sheet) -> Markup {
     let assembly = &sheet.findings.assembly;
+    let plan = &sheet.findings.joint.assembly;
+    let mut statements = Vec::new();
+    if plan.method != Method::HeatHub {
+        statements.push(&assembly.heat_hub.statement);
+    }
+    if plan.method != Method::ChillShaft {
+        statements.push(&assembly.chill_shaft.statement);
+    }
+    let other =
+        assembly.baths.iter().filter(|bath| plan.method != Method::HeatAndChill || bath.bath != plan.bath);
+    statements.extend(other.map(|bath| &bath.statement));
     html! {
         h3 { "Other ways" }
-        ul {
-            li { (assembly.heat_hub.statement) }
-            li { (assembly.chill_shaft.statement) }
-            @for bath in &assembly.baths { li { (bath.statement) } }
-        }
+        ul { @for statement in statements { li { (sentence(statement)) } } }
     }
 }

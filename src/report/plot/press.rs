@@ -74,7 +74,7 @@ pub fn press_force(findings: &Findings) -> Option<Plot> {
         number(friction.low),
         units.brief(Measure::Force, high.peak_force).text(),
         number(friction.high),
-        units.text(Measure::Size, high.peak_travel),
+        units.brief(Measure::Size, high.peak_travel).text(),
     ));
     for (value, name) in limits.iter().filter(|(value, _)| !shown(*value)) {
         caption.push_str(&format!(

@@ -26,7 +26,12 @@ struct Profile {
 }
 
 /// Hoop, radial and equivalent stress against radius, with strength and allowable stress of each ring.
-pub fn stress(findings: &Findings) -> Plot {
+///
+/// None when no pair grips: nothing is stressed then.
+pub fn stress(findings: &Findings) -> Option<Plot> {
+    if findings.extremes.tightest.rings.iter().all(|ring| ring.equivalent < 1.0) {
+        return None;
+    }
     let joint = &findings.joint;
     let units = Units { system: joint.display };
     let walls = Walls::new(&joint.rings);
@@ -93,7 +98,7 @@ pub fn stress(findings: &Findings) -> Plot {
             sketch.text((x, y - 8.0), &Lettering::new(name, TYPE).bold().anchor(Anchor::Middle));
         }
     });
-    Plot { title: title.to_owned(), svg, caption }
+    Some(Plot { title: title.to_owned(), svg, caption })
 }
 
 /// The walls side by side, each at least a good quarter of the width; the radius is stretched to fit.
