@@ -3,10 +3,17 @@
 //! All numbers are SI (m, Pa, N, J, K, s, kg). Interference and clearance are diametral; interference is
 //! shaft minus hole, positive when it grips.
 
+pub mod boiling;
 pub mod cautions;
+pub mod conduction;
 pub mod error;
+pub mod film;
+mod grid;
+mod integrator;
 pub mod joining;
 pub mod press;
+pub mod property;
+pub mod soak;
 pub mod thermal;
 
 pub use error::AssemblyError;
