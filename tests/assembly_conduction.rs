@@ -170,7 +170,7 @@ fn solid_cylinder_follows_the_series() {
     }
     let times = part.times_to_means(&[300.5, 300.05]).unwrap();
     assert_relative_eq!(times[0].value, 411.559_782, max_relative = SERIES);
-    assert_relative_eq!(times[1].value, 1778.877_513, max_relative = SERIES);
+    assert_relative_eq!(times[1].value, 1_778.877_513, max_relative = SERIES);
 }
 
 #[test]
@@ -201,11 +201,11 @@ fn hollow_cylinder_follows_the_series() {
         assert_abs_diff_eq!(found - 300.0, exact, epsilon = SERIES);
     }
     let time = part.time_to_mean(300.5).unwrap();
-    assert_relative_eq!(time.value, 2438.813_712, max_relative = SERIES);
+    assert_relative_eq!(time.value, 2_438.813_712, max_relative = SERIES);
     assert!(time.mesh_correction < 1e-3 * time.value);
     let (volume, exchange) = (long(0.06, 0.12).volume(), std::f64::consts::PI * (0.12 * 20.0 + 0.06 * 10.0));
     let lumped = lumped_time(7800.0, 500.0, volume, exchange, 301.0, 300.5, 300.0).unwrap();
-    assert_relative_eq!(lumped, 2432.946_604, max_relative = 1e-9);
+    assert_relative_eq!(lumped, 2_432.946_604, max_relative = 1e-9);
 }
 
 /// Series for a slab of half-thickness `half`, its faces in a film: Carslaw and Jaeger ch. III.

@@ -118,14 +118,36 @@ impl Film {
             let heat_flux = slope * (inside - surroundings);
             return Surface { temperature: inside - heat_flux / conductance, heat_flux, slope };
         }
-        let balance = |surface: f64| conductance * (inside - surface) - self.heat_flux(surface, surroundings);
-        let temperature = bracketed(balance, inside, surroundings, 1e-10).unwrap_or(f64::NAN);
-        let nudge = 1e-4;
-        let film_slope = (self.heat_flux(temperature + nudge, surroundings)
-            - self.heat_flux(temperature - nudge, surroundings))
-            / (2.0 * nudge);
+        let (temperature, film_slope) = self.balanced(inside, conductance, surroundings);
         let slope = (conductance * film_slope / (conductance + film_slope)).max(0.0);
         Surface { temperature, heat_flux: conductance * (inside - temperature), slope }
+    }
+
+    /// Surface temperature at which conduction from inside equals the exchange, and the slope of the exchange there.
+    ///
+    /// Newton's method from inside, where a metal's surface is near; a bracketed root when it does not settle.
+    fn balanced(&self, inside: f64, conductance: f64, surroundings: f64) -> (f64, f64) {
+        let balance = |surface: f64| conductance * (inside - surface) - self.heat_flux(surface, surroundings);
+        let slope_at = |surface: f64| {
+            let nudge = 1e-4;
+            (self.heat_flux(surface + nudge, surroundings) - self.heat_flux(surface - nudge, surroundings))
+                / (2.0 * nudge)
+        };
+        let (low, high) = (inside.min(surroundings), inside.max(surroundings));
+        let mut surface = inside;
+        for _ in 0..6 {
+            let slope = slope_at(surface);
+            let change = balance(surface) / (conductance + slope);
+            surface += change;
+            if !(low..=high).contains(&surface) {
+                break;
+            }
+            if change.abs() < 1e-9 {
+                return (surface, slope);
+            }
+        }
+        let surface = bracketed(balance, inside, surroundings, 1e-10).unwrap_or(f64::NAN);
+        (surface, slope_at(surface))
     }
 }
 
