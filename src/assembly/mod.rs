@@ -3,9 +3,11 @@
 //! All numbers are SI (m, Pa, N, J, K, s, kg). Interference and clearance are diametral; interference is
 //! shaft minus hole, positive when it grips.
 
+pub mod atmosphere;
 pub mod boiling;
 pub mod cautions;
 pub mod conduction;
+pub mod cryogen;
 pub mod error;
 pub mod film;
 mod grid;
@@ -14,6 +16,7 @@ mod integrator;
 pub mod joining;
 mod pair;
 pub mod press;
+pub mod press_practice;
 pub mod property;
 pub mod soak;
 pub mod thermal;
