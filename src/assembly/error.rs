@@ -63,6 +63,14 @@ pub enum AssemblyError {
         /// The temperature asked for, K.
         given: f64,
     },
+    /// A standard's table has no row for a size.
+    #[error("{table} has no row for {} mm", *.given * 1e3)]
+    NotInTable {
+        /// The standard.
+        table: &'static str,
+        /// The size asked for, m.
+        given: f64,
+    },
     /// A transient could not be followed any further.
     #[error("the temperatures could not be followed beyond {time} s")]
     NotSettled {

@@ -168,7 +168,7 @@ impl Handling {
         Ok(extrapolated(coarse.gone, fine.gone))
     }
 
-    fn check(&self) -> Result<(), AssemblyError> {
+    pub(super) fn check(&self) -> Result<(), AssemblyError> {
         positive("length (m)", self.length)?;
         finite("interference (m)", self.interference)?;
         positive("air temperature (K)", self.air_temperature)?;
@@ -214,7 +214,7 @@ impl Handling {
         }
     }
 
-    fn pair(&self, gap: Option<Gap>, rings: usize) -> Pair<'_> {
+    pub(super) fn pair(&self, gap: Option<Gap>, rings: usize) -> Pair<'_> {
         Pair {
             shaft: self.pair_part(&self.shaft),
             hub: self.pair_part(&self.hub),
@@ -249,7 +249,7 @@ impl Handling {
         )?;
         let at_overlap = apart.clearance(&state.temperatures);
         if gone.is_none() && overlap.is_some() {
-            let joined = self.pair(Some(Gap { gas_conductivity: self.gas_conductivity }), rings);
+            let joined = self.pair(Some(Gap::Gas(self.gas_conductivity)), rings);
             gone = self.phase(&joined, &mut state, least, limit, tolerance, &mut points)?;
         }
         Ok(Run { points, at_overlap, gone })
@@ -288,7 +288,7 @@ impl Handling {
     }
 
     /// Time after which nothing changes any more, s: the heat of both parts at a tenth of a weak film, 2 W/(m²·K).
-    fn longest(&self) -> f64 {
+    pub(super) fn longest(&self) -> f64 {
         let least_film = 2.0;
         let constant = |part: &HandledPart| {
             let heat = part.substance.density * part.substance.specific_heat.value_held(part.temperature);

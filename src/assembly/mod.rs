@@ -4,6 +4,8 @@
 //! shaft minus hole, positive when it grips.
 
 pub mod atmosphere;
+pub mod bearing;
+pub mod bearing_tables;
 pub mod boiling;
 pub mod cautions;
 pub mod conduction;
@@ -18,6 +20,7 @@ mod pair;
 pub mod press;
 pub mod press_practice;
 pub mod property;
+pub mod release;
 pub mod soak;
 pub mod thermal;
 

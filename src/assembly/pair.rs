@@ -17,11 +17,13 @@ pub(crate) struct PairPart<'a> {
     pub(crate) films: [&'a Film; 3],
 }
 
-/// The gap between the parts once they overlap.
+/// What lies between the parts once they overlap.
 #[derive(Debug, Clone, Copy)]
-pub(crate) struct Gap {
-    /// Conductivity of the gas in it, W/(m·K).
-    pub(crate) gas_conductivity: f64,
+pub(crate) enum Gap {
+    /// Gas of this conductivity, W/(m·K), in a gap as wide as the clearance.
+    Gas(f64),
+    /// Nothing: the parts press on each other.
+    Contact,
 }
 
 /// Below this width the gap conducts no better, m: less than any roughness, so that contact is still reached.
@@ -127,7 +129,11 @@ impl<'a> Pair<'a> {
         let last = self.rings - 1;
         let shaft = self.shaft_rings().to_face(last, self.rings, temperatures[last]);
         let hub = self.hub_rings().to_face(0, 0, temperatures[self.rings]);
-        let resistance = 1.0 / shaft + width / gap.gas_conductivity + 1.0 / hub;
+        let between = match gap {
+            Gap::Gas(conductivity) => width / conductivity,
+            Gap::Contact => 0.0,
+        };
+        let resistance = 1.0 / shaft + between + 1.0 / hub;
         PI * self.diameter * self.length() / resistance
     }
 
