@@ -157,6 +157,8 @@ pub struct Conduction {
 const RINGS: [usize; 2] = [48, 8];
 /// Allowed error of a step as a share of the temperature step, in the same order.
 const TOLERANCE: [f64; 2] = [1e-9, 1e-7];
+/// The same for a boiling film, which itself is known to some tens of per cent.
+const BOILING_TOLERANCE: f64 = 1e-5;
 /// Longest time that is followed, in multiples of the lumped time constant.
 const LONGEST: f64 = 60.0;
 
@@ -231,8 +233,17 @@ impl Conduction {
     /// # Errors
     /// As [`Conduction::time_to_mean`].
     pub fn times_to_means(&self, targets: &[f64]) -> Result<Vec<Estimate>, AssemblyError> {
+        self.times_observed(targets, |_| {})
+    }
+
+    /// As [`Conduction::times_to_means`], with every step of the finer mesh shown to `observe`.
+    pub(crate) fn times_observed(
+        &self,
+        targets: &[f64],
+        mut observe: impl FnMut(&Profile),
+    ) -> Result<Vec<Estimate>, AssemblyError> {
         let coarse = self.passed(targets, self.rings, |_, _| {})?;
-        let fine = self.passed(targets, 2 * self.rings, |_, _| {})?;
+        let fine = self.passed(targets, 2 * self.rings, |grid, state| observe(&profile(grid, state)))?;
         Ok(coarse.iter().zip(&fine).map(|(coarse, fine)| estimate(*coarse, *fine)).collect())
     }
 
@@ -349,13 +360,22 @@ impl Conduction {
             grid,
             State { time: 0.0, temperatures, exchanged: 0.0 },
             step,
-            TOLERANCE[self.kind()] * scale,
+            self.tolerance() * scale,
         )
     }
 
     /// 0 when the ends are insulated, 1 when they exchange heat.
     fn kind(&self) -> usize {
         usize::from(self.surroundings.ends != Film::Insulated)
+    }
+
+    fn tolerance(&self) -> f64 {
+        let films = [&self.surroundings.inner, &self.surroundings.outer, &self.surroundings.ends];
+        if films.iter().any(|film| matches!(film, Film::NitrogenPool(_))) {
+            BOILING_TOLERANCE
+        } else {
+            TOLERANCE[self.kind()]
+        }
     }
 
     fn first_heat_flow(&self) -> f64 {

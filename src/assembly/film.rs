@@ -119,7 +119,9 @@ impl Film {
             return Surface { temperature: inside - heat_flux / conductance, heat_flux, slope };
         }
         let (temperature, film_slope) = self.balanced(inside, conductance, surroundings);
-        let slope = (conductance * film_slope / (conductance + film_slope)).max(0.0);
+        // In transition boiling the film's slope is negative; it must not outweigh the conduction from inside.
+        let film_slope = film_slope.max(-0.9 * conductance);
+        let slope = conductance * film_slope / (conductance + film_slope);
         Surface { temperature, heat_flux: conductance * (inside - temperature), slope }
     }
 

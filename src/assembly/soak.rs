@@ -41,14 +41,13 @@ pub struct Soak {
 /// ```
 pub fn soak(part: &Conduction) -> Result<Soak, AssemblyError> {
     let marks = [part.after(0.90)?, part.after(0.95)?, part.after(0.99)?];
-    let times = part.times_to_means(&marks)?;
     let (mut greatest_difference, mut greatest_difference_at) = (0.0, 0.0);
-    for profile in part.history(0.99)? {
+    let times = part.times_observed(&marks, |profile| {
         let difference = (profile.inner - profile.outer).abs();
         if difference > greatest_difference {
             (greatest_difference, greatest_difference_at) = (difference, profile.time);
         }
-    }
+    })?;
     Ok(Soak {
         to_90_percent: times[0],
         to_95_percent: times[1],
