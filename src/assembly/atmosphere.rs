@@ -5,7 +5,8 @@ use super::error::{AssemblyError, not_negative, positive, require};
 /// Volume share of oxygen in dry air (ISO 2533, Standard Atmosphere).
 pub const OXYGEN_IN_AIR: f64 = 0.2095;
 
-/// Below this share air counts as deficient in oxygen: 0.195 (29 CFR 1910.134; a convention with margin).
+/// Below this share air counts as deficient in oxygen: 0.195 (29 CFR 1910.134, clause from memory; a convention
+/// with margin).
 pub const OXYGEN_WARNING: f64 = 0.195;
 
 /// Alarm level of gas practice in Europe: 0.18 (from memory).

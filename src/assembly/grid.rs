@@ -4,7 +4,7 @@ use std::f64::consts::PI;
 
 use super::conduction::{Body, Substance, Surroundings};
 use super::film::Surface;
-use super::integrator::{Banded, HeatNetwork};
+use super::integrator::HeatNetwork;
 
 /// The cells of a cylinder: `radial` rings, each of `axial` cells from the middle plane to the end face.
 ///
@@ -132,9 +132,26 @@ impl<'a> CylinderGrid<'a> {
         let conductance = self.substance.conductivity.value_held(inside) / way;
         self.surroundings.ends.surface(inside, conductance, self.surroundings.temperature)
     }
+}
 
-    /// Visits every pair of neighbours with the conductance between them, W/K.
-    fn for_each_link(&self, temperatures: &[f64], mut visit: impl FnMut(usize, usize, f64)) {
+impl HeatNetwork for CylinderGrid<'_> {
+    fn cells(&self) -> usize {
+        self.rings() * self.layers()
+    }
+
+    fn bandwidth(&self) -> usize {
+        self.layers()
+    }
+
+    fn content(&self, cell: usize, temperature: f64) -> f64 {
+        self.volume(cell) * self.substance.density * self.substance.specific_heat.content(temperature)
+    }
+
+    fn capacity(&self, cell: usize, temperature: f64) -> f64 {
+        self.volume(cell) * self.substance.density * self.substance.specific_heat.value_held(temperature)
+    }
+
+    fn for_each_link(&self, temperatures: &[f64], visit: &mut dyn FnMut(usize, usize, f64)) {
         let layers = self.layers();
         let conductivity = |one: usize, other: usize| {
             self.substance.conductivity.value_held(0.5 * (temperatures[one] + temperatures[other]))
@@ -155,8 +172,7 @@ impl<'a> CylinderGrid<'a> {
         }
     }
 
-    /// Visits every cell surface with its area, m².
-    fn for_each_surface(&self, temperatures: &[f64], mut visit: impl FnMut(usize, f64, Surface)) {
+    fn for_each_surface(&self, temperatures: &[f64], visit: &mut dyn FnMut(usize, f64, Surface)) {
         let (rings, layers) = (self.rings(), self.layers());
         for layer in 0..layers {
             let length = self.layer_length(layer);
@@ -170,53 +186,6 @@ impl<'a> CylinderGrid<'a> {
         for ring in 0..rings {
             visit(ring * layers + layers - 1, self.ring_area(ring), self.end_surface(ring, temperatures));
         }
-    }
-}
-
-impl HeatNetwork for CylinderGrid<'_> {
-    fn cells(&self) -> usize {
-        self.rings() * self.layers()
-    }
-
-    fn bandwidth(&self) -> usize {
-        self.layers()
-    }
-
-    fn content(&self, cell: usize, temperature: f64) -> f64 {
-        self.volume(cell) * self.substance.density * self.substance.specific_heat.content(temperature)
-    }
-
-    fn capacity(&self, cell: usize, temperature: f64) -> f64 {
-        self.volume(cell) * self.substance.density * self.substance.specific_heat.value_held(temperature)
-    }
-
-    fn inflow(&self, temperatures: &[f64], inflow: &mut [f64]) {
-        inflow.fill(0.0);
-        self.for_each_link(temperatures, |one, other, conductance| {
-            let heat = conductance * (temperatures[other] - temperatures[one]);
-            inflow[one] += heat;
-            inflow[other] -= heat;
-        });
-        self.for_each_surface(temperatures, |cell, area, surface| inflow[cell] -= area * surface.heat_flux);
-    }
-
-    fn add_slope(&self, temperatures: &[f64], factor: f64, matrix: &mut Banded) {
-        self.for_each_link(temperatures, |one, other, conductance| {
-            let value = factor * conductance;
-            matrix.add(one, one, -value);
-            matrix.add(other, other, -value);
-            matrix.add(one, other, value);
-            matrix.add(other, one, value);
-        });
-        self.for_each_surface(temperatures, |cell, area, surface| {
-            matrix.add(cell, cell, -factor * area * surface.slope);
-        });
-    }
-
-    fn exchange(&self, temperatures: &[f64]) -> f64 {
-        let mut heat = 0.0;
-        self.for_each_surface(temperatures, |_, area, surface| heat -= area * surface.heat_flux);
-        heat
     }
 }
 

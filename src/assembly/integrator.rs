@@ -8,6 +8,7 @@
 //! section IV.6, table 6.5 (coefficients) and section IV.8 (filtered error estimate).
 
 use super::error::AssemblyError;
+use super::film::Surface;
 use crate::numerics::root::bracketed;
 
 /// Cells that store heat and pass it on.
@@ -20,12 +21,44 @@ pub(crate) trait HeatNetwork {
     fn content(&self, cell: usize, temperature: f64) -> f64;
     /// Slope of the content, J/K.
     fn capacity(&self, cell: usize, temperature: f64) -> f64;
+    /// Visits every pair of cells that exchange heat, with the conductance between them, W/K.
+    fn for_each_link(&self, temperatures: &[f64], visit: &mut dyn FnMut(usize, usize, f64));
+    /// Visits every surface to the outside with its cell and its area, m².
+    fn for_each_surface(&self, temperatures: &[f64], visit: &mut dyn FnMut(usize, f64, Surface));
+
     /// Heat flowing into each cell, W.
-    fn inflow(&self, temperatures: &[f64], inflow: &mut [f64]);
+    fn inflow(&self, temperatures: &[f64], inflow: &mut [f64]) {
+        inflow.fill(0.0);
+        self.for_each_link(temperatures, &mut |one, other, conductance| {
+            let heat = conductance * (temperatures[other] - temperatures[one]);
+            inflow[one] += heat;
+            inflow[other] -= heat;
+        });
+        self.for_each_surface(temperatures, &mut |cell, area, surface| {
+            inflow[cell] -= area * surface.heat_flux;
+        });
+    }
+
     /// Slope of the inflow of each cell against the temperature of each cell, added to `matrix` times `factor`.
-    fn add_slope(&self, temperatures: &[f64], factor: f64, matrix: &mut Banded);
+    fn add_slope(&self, temperatures: &[f64], factor: f64, matrix: &mut Banded) {
+        self.for_each_link(temperatures, &mut |one, other, conductance| {
+            let value = factor * conductance;
+            matrix.add(one, one, -value);
+            matrix.add(other, other, -value);
+            matrix.add(one, other, value);
+            matrix.add(other, one, value);
+        });
+        self.for_each_surface(temperatures, &mut |cell, area, surface| {
+            matrix.add(cell, cell, -factor * area * surface.slope);
+        });
+    }
+
     /// Heat flowing in from outside the network, W.
-    fn exchange(&self, temperatures: &[f64]) -> f64;
+    fn exchange(&self, temperatures: &[f64]) -> f64 {
+        let mut heat = 0.0;
+        self.for_each_surface(temperatures, &mut |_, area, surface| heat -= area * surface.heat_flux);
+        heat
+    }
 }
 
 /// Square matrix with entries near its diagonal only.
@@ -308,14 +341,9 @@ mod tests {
         fn capacity(&self, _: usize, t: f64) -> f64 {
             if self.curved { 1.0 + t } else { 1.0 }
         }
-        fn inflow(&self, t: &[f64], inflow: &mut [f64]) {
-            inflow[0] = -self.rate * t[0];
-        }
-        fn add_slope(&self, _: &[f64], factor: f64, matrix: &mut Banded) {
-            matrix.add(0, 0, -self.rate * factor);
-        }
-        fn exchange(&self, t: &[f64]) -> f64 {
-            -self.rate * t[0]
+        fn for_each_link(&self, _: &[f64], _: &mut dyn FnMut(usize, usize, f64)) {}
+        fn for_each_surface(&self, t: &[f64], visit: &mut dyn FnMut(usize, f64, Surface)) {
+            visit(0, 1.0, Surface { temperature: t[0], heat_flux: self.rate * t[0], slope: self.rate });
         }
     }
 

@@ -4,7 +4,7 @@ use std::f64::consts::PI;
 
 use super::conduction::{Body, Substance};
 use super::film::{Film, Surface};
-use super::integrator::{Banded, HeatNetwork};
+use super::integrator::HeatNetwork;
 use crate::material::Expansion;
 
 /// One part of the pair in the air.
@@ -136,52 +136,6 @@ impl<'a> Pair<'a> {
         let resistance = 1.0 / shaft + between + 1.0 / hub;
         PI * self.diameter * self.length() / resistance
     }
-
-    fn for_each_link(&self, temperatures: &[f64], mut visit: impl FnMut(usize, usize, f64)) {
-        for rings in [self.shaft_rings(), self.hub_rings()] {
-            for ring in 0..rings.count - 1 {
-                let cell = rings.first + ring;
-                let mean = 0.5 * (temperatures[cell] + temperatures[cell + 1]);
-                let way = rings.middle(ring + 1) - rings.middle(ring);
-                let area = 2.0 * PI * rings.face(ring + 1) * self.length();
-                visit(cell, cell + 1, rings.conductivity(mean) * area / way);
-            }
-        }
-        if let Some(gap) = self.gap {
-            visit(self.rings - 1, self.rings, self.across(gap, temperatures));
-        }
-    }
-
-    fn for_each_surface(&self, temperatures: &[f64], mut visit: impl FnMut(usize, f64, Surface)) {
-        let (shaft, hub, last) = (self.shaft_rings(), self.hub_rings(), self.rings - 1);
-        let mut face = |rings: &Rings, ring: usize, face: usize, film: &Film| {
-            let cell = rings.first + ring;
-            let area = 2.0 * PI * rings.face(face) * self.length();
-            if area > 0.0 && *film != Film::Insulated {
-                let conductance = rings.to_face(ring, face, temperatures[cell]);
-                visit(cell, area, film.surface(temperatures[cell], conductance, self.air));
-            }
-        };
-        face(&shaft, 0, 0, self.shaft.films[0]);
-        face(&hub, last, self.rings, self.hub.films[1]);
-        if self.gap.is_none() {
-            face(&shaft, last, self.rings, self.shaft.films[1]);
-            face(&hub, 0, 0, self.hub.films[0]);
-        }
-        for rings in [&shaft, &hub] {
-            let film = rings.part.films[2];
-            if *film != Film::Insulated {
-                for ring in 0..rings.count {
-                    let cell = rings.first + ring;
-                    // From the mean of a layer cooled on both faces to a face, quasi-steady: a sixth of its thickness.
-                    let way = self.length() / 6.0;
-                    let conductance = rings.conductivity(temperatures[cell]) / way;
-                    let surface = film.surface(temperatures[cell], conductance, self.air);
-                    visit(cell, 2.0 * rings.area(ring), surface);
-                }
-            }
-        }
-    }
 }
 
 impl HeatNetwork for Pair<'_> {
@@ -211,32 +165,49 @@ impl HeatNetwork for Pair<'_> {
             * substance.specific_heat.value_held(temperature)
     }
 
-    fn inflow(&self, temperatures: &[f64], inflow: &mut [f64]) {
-        inflow.fill(0.0);
-        self.for_each_link(temperatures, |one, other, conductance| {
-            let heat = conductance * (temperatures[other] - temperatures[one]);
-            inflow[one] += heat;
-            inflow[other] -= heat;
-        });
-        self.for_each_surface(temperatures, |cell, area, surface| inflow[cell] -= area * surface.heat_flux);
+    fn for_each_link(&self, temperatures: &[f64], visit: &mut dyn FnMut(usize, usize, f64)) {
+        for rings in [self.shaft_rings(), self.hub_rings()] {
+            for ring in 0..rings.count - 1 {
+                let cell = rings.first + ring;
+                let mean = 0.5 * (temperatures[cell] + temperatures[cell + 1]);
+                let way = rings.middle(ring + 1) - rings.middle(ring);
+                let area = 2.0 * PI * rings.face(ring + 1) * self.length();
+                visit(cell, cell + 1, rings.conductivity(mean) * area / way);
+            }
+        }
+        if let Some(gap) = self.gap {
+            visit(self.rings - 1, self.rings, self.across(gap, temperatures));
+        }
     }
 
-    fn add_slope(&self, temperatures: &[f64], factor: f64, matrix: &mut Banded) {
-        self.for_each_link(temperatures, |one, other, conductance| {
-            let value = factor * conductance;
-            matrix.add(one, one, -value);
-            matrix.add(other, other, -value);
-            matrix.add(one, other, value);
-            matrix.add(other, one, value);
-        });
-        self.for_each_surface(temperatures, |cell, area, surface| {
-            matrix.add(cell, cell, -factor * area * surface.slope);
-        });
-    }
-
-    fn exchange(&self, temperatures: &[f64]) -> f64 {
-        let mut heat = 0.0;
-        self.for_each_surface(temperatures, |_, area, surface| heat -= area * surface.heat_flux);
-        heat
+    fn for_each_surface(&self, temperatures: &[f64], visit: &mut dyn FnMut(usize, f64, Surface)) {
+        let (shaft, hub, last) = (self.shaft_rings(), self.hub_rings(), self.rings - 1);
+        let mut face = |rings: &Rings, ring: usize, face: usize, film: &Film| {
+            let cell = rings.first + ring;
+            let area = 2.0 * PI * rings.face(face) * self.length();
+            if area > 0.0 && *film != Film::Insulated {
+                let conductance = rings.to_face(ring, face, temperatures[cell]);
+                visit(cell, area, film.surface(temperatures[cell], conductance, self.air));
+            }
+        };
+        face(&shaft, 0, 0, self.shaft.films[0]);
+        face(&hub, last, self.rings, self.hub.films[1]);
+        if self.gap.is_none() {
+            face(&shaft, last, self.rings, self.shaft.films[1]);
+            face(&hub, 0, 0, self.hub.films[0]);
+        }
+        for rings in [&shaft, &hub] {
+            let film = rings.part.films[2];
+            if *film != Film::Insulated {
+                for ring in 0..rings.count {
+                    let cell = rings.first + ring;
+                    // From the mean of a layer cooled on both faces to a face, quasi-steady: a sixth of its thickness.
+                    let way = self.length() / 6.0;
+                    let conductance = rings.conductivity(temperatures[cell]) / way;
+                    let surface = film.surface(temperatures[cell], conductance, self.air);
+                    visit(cell, 2.0 * rings.area(ring), surface);
+                }
+            }
+        }
     }
 }
