@@ -119,6 +119,9 @@ impl RingSection {
     }
 
     fn check_place(&self, load: &RingLoad, r: f64) -> Result<(), MechanicsError> {
+        for value in [load.inner_pressure, load.outer_pressure, load.angular_speed, load.free_strain] {
+            check("pressure, speed or strain on a ring", value, "finite", true)?;
+        }
         let slack = 1e-9 * self.outer_radius;
         let inside = r >= self.inner_radius - slack && r <= self.outer_radius + slack;
         check("radius (m)", r, "within the ring", inside)?;
@@ -133,5 +136,9 @@ pub(super) fn check(
     allowed: &'static str,
     holds: bool,
 ) -> Result<(), MechanicsError> {
-    if holds && given.is_finite() { Ok(()) } else { Err(MechanicsError::OutsideRange { quantity, given, allowed }) }
+    if holds && given.is_finite() {
+        Ok(())
+    } else {
+        Err(MechanicsError::OutsideRange { quantity, given, allowed })
+    }
 }

@@ -70,7 +70,8 @@ impl Stack {
     /// # Errors
     /// An index that is no ring.
     pub fn ring_load(&self, index: usize, solution: &StackSolution) -> Result<RingLoad, MechanicsError> {
-        let wrong = MechanicsError::WrongCount { what: "ring numbers", count: index, rings: self.rings.len() };
+        let wrong =
+            MechanicsError::WrongCount { what: "ring numbers", count: index, rings: self.rings.len() };
         let free_strain = *self.free_strain.get(index).ok_or(wrong)?;
         let inner = index.checked_sub(1).and_then(|k| solution.pressures.get(k)).copied();
         let outer = solution.pressures.get(index).copied();
