@@ -81,6 +81,11 @@ impl RingSection {
         self.poisson
     }
 
+    /// Density, kg/m³.
+    pub fn density(&self) -> f64 {
+        self.density
+    }
+
     /// Stress at radius `r` (m).
     ///
     /// Source: Timoshenko & Goodier, *Theory of Elasticity*, §§ 28 and 32.
