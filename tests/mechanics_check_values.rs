@@ -25,9 +25,7 @@ fn steel_stack(radii_mm: &[f64], interference_um: &[f64]) -> Stack {
         rings: radii_mm.windows(2).map(|faces| steel_ring(faces[0], faces[1])).collect(),
         interference: interference_um.iter().map(|value| value * MICRON).collect(),
         free_strain: vec![0.0; radii_mm.len() - 1],
-        inner_pressure: 0.0,
-        outer_pressure: 0.0,
-        angular_speed: 0.0,
+        ..Stack::default()
     }
 }
 
@@ -148,6 +146,18 @@ fn pressures_of_three_rings() {
     let filled = Stack { inner_pressure: 100e6, ..stack }.solve().unwrap();
     assert_prints(filled.pressures[0], "79.687500", MPA);
     assert_prints(filled.pressures[1], "48.148148", MPA);
+}
+
+#[test]
+fn influence_of_pressure_on_the_gaps() {
+    // Lamé; Timoshenko & Goodier, § 28. r M is symmetric by Betti's theorem: 20 · 3.6 = 30 · 2.4.
+    let influence = steel_stack(&[10.0, 20.0, 30.0, 50.0], &[20.0, 30.0]).influence().unwrap();
+    assert_prints(influence.diagonal[0], "4.2666667", 1e-13);
+    assert_prints(influence.upper[0], "-3.6", 1e-13);
+    assert_prints(influence.lower[1], "-2.4", 1e-13);
+    assert_prints(influence.diagonal[1], "7.0875", 1e-13);
+    assert_relative_eq!(0.020 * influence.upper[0], 0.030 * influence.lower[1], max_relative = 1e-12);
+    assert_eq!((influence.lower[0], influence.upper[1]), (0.0, 0.0));
 }
 
 #[test]

@@ -15,8 +15,7 @@ fn compound(radii: [f64; 3], interference: f64, youngs_modulus: f64, inner_press
         interference: vec![interference],
         free_strain: vec![0.0; 2],
         inner_pressure,
-        outer_pressure: 0.0,
-        angular_speed: 0.0,
+        ..Stack::default()
     }
 }
 

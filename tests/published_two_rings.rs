@@ -52,9 +52,7 @@ fn solve(joint: &TwoRings, interference: f64) -> Solved {
         rings: vec![shaft, hub],
         interference: vec![interference],
         free_strain: vec![0.0; 2],
-        inner_pressure: 0.0,
-        outer_pressure: 0.0,
-        angular_speed: 0.0,
+        ..Stack::default()
     };
     let solution = stack.solve().unwrap();
     assert_close(solution.pressures[0], pressure, 1e-12);
