@@ -165,9 +165,7 @@ impl<'a> Kernel<'a> {
             rings: self.sections.clone(),
             interference: interference.to_vec(),
             free_strain: free_strain.to_vec(),
-            inner_pressure: 0.0,
-            outer_pressure: 0.0,
-            angular_speed: 0.0,
+            ..Stack::default()
         };
         let solution = stack.solve()?;
         Ok((stack, solution))
