@@ -5,6 +5,7 @@
 pub mod capacity;
 pub mod criteria;
 mod error;
+pub mod plastic;
 pub mod ring;
 pub mod stack;
 pub mod two_rings;
