@@ -2,6 +2,7 @@
 
 use approx::assert_relative_eq;
 use hubgrip::mechanics::plastic::tresca::TrescaHub;
+use hubgrip::mechanics::plastic::von_mises::VonMisesHub;
 use hubgrip::mechanics::plastic::{HubElasticity, HubLimitKind};
 
 const STEEL: HubElasticity = HubElasticity { youngs_modulus: 200e9, poisson: 0.3 };
@@ -39,4 +40,17 @@ fn thick_tresca_hub_meets_the_pressure_cap_before_it_is_fully_plastic() {
     assert_eq!(limit.kind, HubLimitKind::PressureCap);
     assert_relative_eq!(limit.pressure, 300e6, max_relative = 1e-12);
     assert_relative_eq!(limit.plastic_ratio, 1.83078058, max_relative = NINE_DIGITS);
+}
+
+#[test]
+fn von_mises_onset_zone_limit_and_bore_follow_the_check_values() {
+    let hub = VonMisesHub::new(300e6, 0.5).unwrap();
+    assert_relative_eq!(hub.onset_pressure(), 128.571429e6, max_relative = NINE_DIGITS);
+    assert_relative_eq!(hub.pressure(1.2).unwrap(), 171.221949e6, max_relative = NINE_DIGITS);
+    assert_relative_eq!(hub.limit().unwrap().pressure, 230.927337e6, max_relative = NINE_DIGITS);
+    assert_relative_eq!(hub.bore_strain(1.2, STEEL).unwrap(), 1.83429884e-3, max_relative = NINE_DIGITS);
+    assert_relative_eq!(VonMisesHub::least_fully_plastic_ratio(), 0.33766654, max_relative = 2e-8);
+    let limit = VonMisesHub::new(300e6, 0.3).unwrap().limit().unwrap();
+    assert_eq!(limit.kind, HubLimitKind::PressureCap);
+    assert_relative_eq!(limit.pressure, modified(300e6), max_relative = 1e-12);
 }
