@@ -1,3 +1,7 @@
-//! The hubgrip command line.
+//! The hubgrip command line: what was typed becomes one command, which runs and ends with one exit code.
 
-fn main() {}
+mod cli;
+
+fn main() -> std::process::ExitCode {
+    cli::main()
+}

@@ -1,7 +1,18 @@
 //! Everything that is computed about a joint, in one place, SI.
 
+mod assembly_of;
+mod cautions;
+mod compute;
 pub mod expression;
+mod verdicts;
+pub mod worksheet;
 
+pub use assembly_of::{bath_name, bath_temperature};
+pub use cautions::criterion_source;
+pub use compute::{FindingsError, after_smoothing, compute};
+pub use verdicts::failure;
+
+pub use crate::assembly::cautions::Caution;
 use crate::assembly::press::PressCurve;
 use crate::joint::{Bath, Joint};
 use crate::material::Range;
@@ -214,17 +225,6 @@ pub struct Verdict {
     pub ok: bool,
     /// At which pair and state.
     pub at: String,
-}
-
-/// A caution with what it belongs to.
-#[derive(Debug, Clone, PartialEq, Eq)]
-pub struct Caution {
-    /// Step or subject: `press`, `heat`, `cold`, `strength`, `hold`, `input`.
-    pub subject: &'static str,
-    /// The sentence.
-    pub text: String,
-    /// Where it comes from.
-    pub source: String,
 }
 
 /// A part of the worksheet.

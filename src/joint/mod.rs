@@ -78,6 +78,18 @@ pub struct Joint {
     pub digest: String,
 }
 
+impl Joint {
+    /// Length that carries: the hub's length less the relief, m.
+    pub fn engaged_length(&self) -> f64 {
+        self.length - self.relief
+    }
+
+    /// The innermost and the outermost ring.
+    pub fn shaft_and_hub(&self) -> (&Ring, &Ring) {
+        (&self.rings[0], &self.rings[self.rings.len() - 1])
+    }
+}
+
 /// One ring of the joint; the shaft is a ring whose inner diameter may be zero.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Ring {

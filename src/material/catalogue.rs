@@ -35,29 +35,37 @@ pub(super) const ENTRIES: &[Entry] = entries! {
     "34crnimo6-qt.yaml": "34CrNiMo6+QT", ["34CrNiMo6", "1.6582"];
     "42crmo4-qt.yaml": "42CrMo4+QT", ["42CrMo4", "1.7225", "AISI 4140", "SAE 4140", "AISI 4142", "SCM440"];
     "alloy-400.yaml": "Alloy-400", ["400", "N04400", "UNS N04400", "2.4360", "NiCu30Fe"];
-    "alloy-718.yaml": "Alloy-718", ["718", "N07718", "UNS N07718", "2.4668", "NiCr19Fe19Nb5Mo3", "AMS 5662", "AMS 5663"];
+    "alloy-718.yaml": "Alloy-718",
+        ["718", "N07718", "UNS N07718", "2.4668", "NiCr19Fe19Nb5Mo3", "AMS 5662", "AMS 5663"];
     "az91d.yaml": "AZ91D", ["MgAl9Zn1", "EN MCMgAl9Zn1", "EN-MC21120"];
     "c17200-tf00.yaml": "C17200-TF00", ["CuBe2", "C17200", "UNS C17200", "CW101C"];
     "c35e-n.yaml": "C35E+N", ["C35+N", "C35", "C35E", "1.1181", "1.0501", "AISI 1035", "SAE 1035", "Ck35"];
-    "c35e-qt.yaml": "C35E+QT", ["C35+QT", "C35", "C35E", "1.1181", "1.0501", "AISI 1035", "SAE 1035", "Ck35"];
+    "c35e-qt.yaml": "C35E+QT",
+        ["C35+QT", "C35", "C35E", "1.1181", "1.0501", "AISI 1035", "SAE 1035", "Ck35"];
     "c36000-h02.yaml": "C36000-H02", ["C36000", "UNS C36000", "CuZn36Pb3", "CW603N"];
     "c45-n.yaml": "C45+N", ["C45", "C45E", "1.0503", "1.1191", "AISI 1045", "SAE 1045", "Ck45", "C45E+N"];
-    "c45-qt.yaml": "C45+QT", ["C45", "C45E", "1.0503", "1.1191", "AISI 1045", "SAE 1045", "Ck45", "C45E+QT"];
+    "c45-qt.yaml": "C45+QT",
+        ["C45", "C45E", "1.0503", "1.1191", "AISI 1045", "SAE 1045", "Ck45", "C45E+QT"];
     "c95400.yaml": "C95400", ["CuAl11Fe3", "UNS C95400", "CuAl10Fe3"];
     "cu-etp-r290.yaml": "Cu-ETP-R290", ["Cu-ETP", "CW004A", "C11000", "UNS C11000", "E-Cu"];
     "cusn12-c-gc.yaml": "CuSn12-C-GC", ["CuSn12-C", "CuSn12", "CC483K", "2.1052"];
-    "cusn7zn4pb7-c-gc.yaml": "CuSn7Zn4Pb7-C-GC", ["CuSn7Zn4Pb7-C", "CC493K", "Rg 7", "C93200", "UNS C93200"];
+    "cusn7zn4pb7-c-gc.yaml": "CuSn7Zn4Pb7-C-GC",
+        ["CuSn7Zn4Pb7-C", "CC493K", "Rg 7", "C93200", "UNS C93200"];
     "cusn8-r450.yaml": "CuSn8-R450", ["CuSn8", "CW453K", "C52100", "UNS C52100", "2.1030"];
     "cuzn39pb3.yaml": "CuZn39Pb3", ["CW614N", "C38500", "UNS C38500", "2.0401", "Ms58"];
     "e335.yaml": "E335", ["1.0060", "St 60-2"];
     "ea1n.yaml": "EA1N", ["EN 13261 EA1N"];
-    "en-ac-42100-t6.yaml": "EN-AC-42100-T6", ["AlSi7Mg", "AlSi7Mg0.3", "EN AC-42100", "A356", "A356-T6", "42100-T6"];
+    "en-ac-42100-t6.yaml": "EN-AC-42100-T6",
+        ["AlSi7Mg", "AlSi7Mg0.3", "EN AC-42100", "A356", "A356-T6", "42100-T6"];
     "en-ac-46000-f.yaml": "EN-AC-46000-F", ["AlSi9Cu3", "AlSi9Cu3(Fe)", "EN AC-46000", "46000"];
-    "en-aw-2024-t351.yaml": "EN-AW-2024-T351", ["2024", "2024-T3", "2024-T4", "2024-T351", "EN AW-2024", "AlCu4Mg1", "A92024", "UNS A92024"];
+    "en-aw-2024-t351.yaml": "EN-AW-2024-T351",
+        ["2024", "2024-T3", "2024-T4", "2024-T351", "EN AW-2024", "AlCu4Mg1", "A92024", "UNS A92024"];
     "en-aw-5083-o.yaml": "EN-AW-5083-O", ["5083", "5083-O", "5083-H111", "EN AW-5083", "AlMg4.5Mn0.7"];
-    "en-aw-6061-t6.yaml": "EN-AW-6061-T6", ["6061", "6061-T6", "6061-T651", "EN AW-6061", "AlMg1SiCu", "A96061", "UNS A96061"];
+    "en-aw-6061-t6.yaml": "EN-AW-6061-T6",
+        ["6061", "6061-T6", "6061-T651", "EN AW-6061", "AlMg1SiCu", "A96061", "UNS A96061"];
     "en-aw-6082-t6.yaml": "EN-AW-6082-T6", ["6082", "6082-T6", "EN AW-6082", "AlSi1MgMn", "AlMgSi1"];
-    "en-aw-7075-t651.yaml": "EN-AW-7075-T651", ["7075", "7075-T6", "7075-T651", "EN AW-7075", "AlZn5.5MgCu", "A97075", "UNS A97075"];
+    "en-aw-7075-t651.yaml": "EN-AW-7075-T651",
+        ["7075", "7075-T6", "7075-T651", "EN AW-7075", "AlZn5.5MgCu", "A97075", "UNS A97075"];
     "en-gjl-200.yaml": "EN-GJL-200", ["GJL-200", "GG-20", "EN-JL1030", "5.1300"];
     "en-gjl-250.yaml": "EN-GJL-250", ["GJL-250", "GG-25", "EN-JL1040", "5.1301"];
     "en-gjl-300.yaml": "EN-GJL-300", ["GJL-300", "GG-30", "EN-JL1050", "5.1302"];
@@ -74,19 +82,25 @@ pub(super) const ENTRIES: &[Entry] = entries! {
     "pom-c.yaml": "POM-C", ["POM", "Acetal copolymer"];
     "s235jr.yaml": "S235JR", ["1.0038", "St 37-2", "RSt 37-2"];
     "s355j2.yaml": "S355J2", ["1.0577", "S355J2+N", "St 52-3"];
-    "ti-6al-4v.yaml": "Ti-6Al-4V", ["TiAl6V4", "R56400", "UNS R56400", "3.7165", "3.7164", "Titanium grade 5", "Ti Grade 5"];
+    "ti-6al-4v.yaml": "Ti-6Al-4V",
+        ["TiAl6V4", "R56400", "UNS R56400", "3.7165", "3.7164", "Titanium grade 5", "Ti Grade 5"];
     "titanium-grade-2.yaml": "Titanium-Grade-2", ["Ti Grade 2", "R50400", "UNS R50400", "3.7035"];
     "wc-10co.yaml": "WC-10Co", ["WC-Co 10", "Cemented carbide"];
     "x105crmo17.yaml": "X105CrMo17", ["1.4125", "AISI 440C", "440C", "S44004", "UNS S44004"];
-    "x17crni16-2-qt800.yaml": "X17CrNi16-2+QT800", ["X17CrNi16-2", "1.4057", "AISI 431", "431", "S43100", "UNS S43100"];
-    "x17crni16-2-qt900.yaml": "X17CrNi16-2+QT900", ["X17CrNi16-2", "1.4057", "AISI 431", "431", "S43100", "UNS S43100"];
+    "x17crni16-2-qt800.yaml": "X17CrNi16-2+QT800",
+        ["X17CrNi16-2", "1.4057", "AISI 431", "431", "S43100", "UNS S43100"];
+    "x17crni16-2-qt900.yaml": "X17CrNi16-2+QT900",
+        ["X17CrNi16-2", "1.4057", "AISI 431", "431", "S43100", "UNS S43100"];
     "x20cr13-qt700.yaml": "X20Cr13+QT700", ["X20Cr13", "1.4021", "AISI 420", "420", "S42000", "UNS S42000"];
     "x20cr13-qt800.yaml": "X20Cr13+QT800", ["X20Cr13", "1.4021", "AISI 420", "420", "S42000", "UNS S42000"];
-    "x2crnimo17-12-2.yaml": "X2CrNiMo17-12-2", ["1.4404", "AISI 316L", "316L", "S31603", "UNS S31603", "AISI 316", "316"];
-    "x2crnimon22-5-3.yaml": "X2CrNiMoN22-5-3", ["1.4462", "S31803", "S32205", "UNS S31803", "UNS S32205", "2205"];
+    "x2crnimo17-12-2.yaml": "X2CrNiMo17-12-2",
+        ["1.4404", "AISI 316L", "316L", "S31603", "UNS S31603", "AISI 316", "316"];
+    "x2crnimon22-5-3.yaml": "X2CrNiMoN22-5-3",
+        ["1.4462", "S31803", "S32205", "UNS S31803", "UNS S32205", "2205"];
     "x40crmov5-1-qt.yaml": "X40CrMoV5-1+QT", ["X40CrMoV5-1", "1.2344", "AISI H13"];
     "x5crni18-10.yaml": "X5CrNi18-10", ["1.4301", "AISI 304", "304", "S30400", "UNS S30400", "SUS304"];
-    "x5crnicunb16-4-p930.yaml": "X5CrNiCuNb16-4+P930", ["X5CrNiCuNb16-4", "1.4542", "17-4PH", "S17400", "UNS S17400", "AISI 630"];
+    "x5crnicunb16-4-p930.yaml": "X5CrNiCuNb16-4+P930",
+        ["X5CrNiCuNb16-4", "1.4542", "17-4PH", "S17400", "UNS S17400", "AISI 630"];
     "x6cr17.yaml": "X6Cr17", ["1.4016", "AISI 430", "430", "S43000", "UNS S43000"];
     "znal4cu1.yaml": "ZnAl4Cu1", ["ZP0410", "ZP5", "EN 12844 ZP0410", "AC41A", "Alloy 5"];
 };

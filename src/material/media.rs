@@ -62,7 +62,7 @@ pub mod alcohol_bath {
         195.15,
         195.15,
         201.15,
-        "CRC Handbook of Chemistry and Physics, 2005, p. 15-35, acetone; a table after Lee and Jensen has -72 °C for ethanol",
+        "acetone, CRC Handbook of Chemistry and Physics, 2005, p. 15-35; ethanol -72 °C after Lee and Jensen",
     );
     /// Film coefficient, stirred by the gas, W/(m²·K).
     pub const FILM_COEFFICIENT: Constant = within(100.0, 200.0, 400.0, super::TRADE);
@@ -83,7 +83,7 @@ pub mod liquid_nitrogen {
         199.0e3,
         199.2e3,
         201.0e3,
-        "reference text on the latent heat of nitrogen, quoting NIST (second-hand); 199 and 201 kJ/kg are printed",
+        "reference text on nitrogen, quoting NIST (second-hand); 199 and 201 kJ/kg are printed",
     );
     /// Density of the liquid, kg/m³.
     pub const DENSITY: Constant =
@@ -97,7 +97,7 @@ pub mod liquid_nitrogen {
         683.0,
         694.0,
         700.0,
-        "computed, 808/1.165 at 20 °C; a supplier has 696, a university safety policy 700, 683 at 15 °C (from memory)",
+        "computed, 808/1.165 at 20 °C; a supplier has 696, a safety policy 700, 683 at 15 °C (from memory)",
     );
     /// Film coefficient averaged over a cool-down from 20 to −190 °C, W/(m²·K).
     pub const FILM_COEFFICIENT: Constant = within(120.0, 150.0, 250.0, BOILING);

@@ -155,11 +155,9 @@ impl SmoothingRule {
     /// Where the rule comes from.
     pub fn source(self) -> &'static str {
         match self {
-            Self::Din7190Of2001 => {
-                "DIN 7190:2001, second-hand: reference list of Persson, Tribology Letters, 2023"
-            }
+            Self::Din7190Of2001 => "DIN 7190:2001, second-hand: B. N. J. Persson, Tribology Letters, 2023",
             Self::Din7190Part1Of2017 => {
-                "DIN 7190-1:2017, second-hand and not confirmed: reference list of Persson, Tribology Letters, 2023"
+                "DIN 7190-1:2017, second-hand, not confirmed: B. N. J. Persson, Tribology Letters, 2023"
             }
             Self::GbT5371 => "GB/T 5371:2004, least interference, as printed in an engineering handbook",
             Self::NfE22621 => {

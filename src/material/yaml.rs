@@ -184,6 +184,12 @@ strength:
   - {section_up_to: 100 mm, yield_strength: 305 MPa, tensile_strength: 580 MPa}
 ";
 
+    const TABLE: &str = "{means: [[100 degC, 12e-6 /K], [200 degC, 13e-6 /K]]}";
+
+    fn with_expansion(expansion: &str) -> Result<Material, Box<Diagnostic>> {
+        read(&DEMO.replacen(TABLE, expansion, 1), "demo", Origin::JointFile)
+    }
+
     /// The fault after `from` became `to`: the message, and the text under the caret.
     fn fault(from: &str, to: &str) -> (String, String) {
         assert!(DEMO.contains(from), "{from}");
@@ -237,23 +243,19 @@ strength:
     fn a_number_without_its_unit_stands_under_the_number() {
         let (message, meant) = fault("210 GPa", "210");
         assert!(message.contains("210") && meant == "210", "{message}");
-        let (message, meant) = fault("{means: [[100 degC, 12e-6 /K], [200 degC, 13e-6 /K]]}", "12e-6");
+        let (message, meant) = fault(TABLE, "12e-6");
         assert!(message.contains("unit") && meant == "12e-6", "{message}");
     }
 
     #[test]
     fn a_curve_that_is_not_known_is_mended() {
-        let table = "{means: [[100 degC, 12e-6 /K], [200 degC, 13e-6 /K]]}";
-        assert_eq!(fault(table, "ferittic steel").1, "ferittic steel");
-        assert_eq!(help(table, "ferittic steel").as_deref(), Some("did you mean `ferritic steel`?"));
+        assert_eq!(fault(TABLE, "ferittic steel").1, "ferittic steel");
+        assert_eq!(help(TABLE, "ferittic steel").as_deref(), Some("did you mean `ferritic steel`?"));
     }
 
     #[test]
     fn a_mean_coefficient_has_a_range() {
-        let with = |expansion: &str| {
-            let table = "{means: [[100 degC, 12e-6 /K], [200 degC, 13e-6 /K]]}";
-            read(&DEMO.replacen(table, expansion, 1), "demo", Origin::JointFile)
-        };
+        let with = with_expansion;
         let plain = with("12e-6 /K").unwrap().expansion;
         assert_eq!(plain.range(), (223.15, 623.15));
         assert!((plain.strain(323.15).unwrap() - 3.6e-4).abs() < 1e-15);
@@ -268,10 +270,7 @@ strength:
 
     #[test]
     fn tables_pass_zero_at_20_degrees() {
-        let with = |expansion: &str| {
-            let table = "{means: [[100 degC, 12e-6 /K], [200 degC, 13e-6 /K]]}";
-            read(&DEMO.replacen(table, expansion, 1), "demo", Origin::JointFile)
-        };
+        let with = with_expansion;
         let joined = with("{cold: ferritic steel, means: [[100 degC, 12e-6 /K]]}").unwrap().expansion;
         assert!(joined.points().contains(&(293.15, 0.0)));
         assert!((joined.range().0 - 77.0).abs() < 1e-9 && joined.range().1 == 373.15);
@@ -285,7 +284,8 @@ strength:
             .replace("100 degC, 12e-6", "120 degC, 12.4e-6")
             .replace("200 degC, 13e-6", "220 degC, 12.9e-6");
         let expansion = read(&text, "demo", Origin::JointFile).unwrap().expansion;
-        // By hand, ᾱ linear between 120 and 220 °C: 12.65e-6 · 150 = 1.8975e-3; taken as slopes it would be 1.8875e-3 or less.
+        // By hand, ᾱ linear from 120 to 220 °C: 12.65e-6 · 150 = 1.8975e-3. Read as slopes the table would
+        // give 12.4e-6 · 100 + 12.525e-6 · 50 = 1.866e-3.
         assert!((expansion.strain(443.15).unwrap() - 1.8975e-3).abs() < 1e-6);
     }
 

@@ -1,1 +1,24 @@
-//! Placeholder, to be filled.
+//! What is shown of the findings: HTML with drawings and plots.
+
+pub mod diagnostics;
+pub mod drawing;
+pub mod html;
+pub mod json;
+pub mod limits;
+pub mod materials;
+pub mod mathml;
+pub mod plot;
+pub mod terminal;
+
+mod hatch;
+mod svg;
+mod text_width;
+mod typeset;
+mod units;
+
+#[cfg(test)]
+mod page_tests;
+#[cfg(test)]
+mod sample;
+#[cfg(test)]
+mod well_formed;

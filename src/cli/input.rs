@@ -1,0 +1,82 @@
+//! What a command reads: joint files, the material library, what-ifs.
+
+use std::fs::File;
+use std::io::{self, IsTerminal, Read};
+use std::path::{Path, PathBuf};
+
+use clap::Args;
+use hubgrip::diagnostic::Diagnostic;
+use hubgrip::findings::{self, Findings};
+use hubgrip::joint::{read, set};
+use hubgrip::material::library::{self, Library};
+
+use super::exit::Failure;
+use super::output::Output;
+
+/// What-ifs, taken by every command that reads a joint file.
+#[derive(Debug, Args)]
+pub struct WhatIf {
+    /// Change a key of the joint file for this run, such as fit=H7/u6 or hub.outer_diameter=120mm
+    #[arg(long = "set", value_name = "KEY=VALUE", value_parser = key_value)]
+    pub set: Vec<(String, String)>,
+}
+
+fn key_value(text: &str) -> Result<(String, String), String> {
+    set::split(text).map_err(|wrong| wrong.help.unwrap_or(wrong.message))
+}
+
+/// The material library with the user's folders in front.
+pub fn library(folder: Option<&Path>, output: &Output) -> Result<Library, Failure> {
+    if let Some(folder) = folder
+        && !folder.is_dir()
+    {
+        return Err(Diagnostic::new("this is not a folder that can be read")
+            .in_file(folder)
+            .with_help("--materials takes a folder with material files (*.yaml)")
+            .into());
+    }
+    let library = Library::open(&library::user_folders(folder)).map_err(Failure::Input)?;
+    for hidden in library.hidden() {
+        output.remark(&format!("caution: {hidden}"));
+    }
+    Ok(library)
+}
+
+/// Reads a joint file and computes its findings.
+pub fn findings(path: &Path, set: &[(String, String)], library: &Library) -> Result<Findings, Failure> {
+    let name = shown(path);
+    let bytes = bytes(path)?;
+    let joint = read::read_bytes(&bytes, &name, set, library).map_err(Failure::Input)?;
+    findings::compute(joint).map_err(|error| Diagnostic::new(error.to_string()).in_file(name).into())
+}
+
+/// The name a file goes by in messages.
+fn shown(path: &Path) -> PathBuf {
+    if path == Path::new("-") { PathBuf::from("<stdin>") } else { path.to_path_buf() }
+}
+
+/// The bytes of a file or of standard input, one more than allowed at most.
+fn bytes(path: &Path) -> Result<Vec<u8>, Failure> {
+    let limit = read::LARGEST as u64 + 1;
+    let mut bytes = Vec::new();
+    let read = if path == Path::new("-") {
+        if io::stdin().is_terminal() {
+            eprintln!("reading a joint file from standard input; end it with Ctrl-D");
+        }
+        io::stdin().lock().take(limit).read_to_end(&mut bytes)
+    } else if path.is_dir() {
+        return Err(Diagnostic::new("this is a folder, not a joint file")
+            .in_file(path)
+            .with_help("name a file in it, such as joint.yaml")
+            .into());
+    } else {
+        File::open(path).and_then(|file| file.take(limit).read_to_end(&mut bytes))
+    };
+    match read {
+        Ok(_) => Ok(bytes),
+        Err(error) => Err(Diagnostic::new(format!("cannot read: {error}"))
+            .in_file(shown(path))
+            .with_help("hubgrip new -o joint.yaml writes a joint file to start from")
+            .into()),
+    }
+}

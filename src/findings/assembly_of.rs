@@ -1,0 +1,208 @@
+//! How the joint is put together: press curves, heating, chilling, and both shared.
+
+use super::{AssemblyFindings, BathFindings, FindingsError, PairFindings, ThermalRoute};
+use crate::assembly::joining::{BathRoute, Joining, Obstacle, Route};
+use crate::assembly::press::{self, PressCurve, PressInput};
+use crate::joint::{Bath, Joint};
+use crate::material::media;
+use crate::quantity::{Measure, UnitSystem, show};
+use crate::tolerance::Extremes;
+
+const CURVE_POINTS: usize = 120;
+
+/// Assembly of the joint by every route; the plan says which one was asked for.
+pub(super) fn assembly(
+    joint: &Joint,
+    extremes: &Extremes<PairFindings>,
+) -> Result<AssemblyFindings, FindingsError> {
+    let pressing = joint.friction.pressing.value;
+    let press = Extremes {
+        loosest: press_curve(joint, &extremes.loosest, pressing.low)?,
+        mean: press_curve(joint, &extremes.mean, 0.5 * (pressing.low + pressing.high))?,
+        tightest: press_curve(joint, &extremes.tightest, pressing.high)?,
+    };
+    let (shaft, hub) = joint.shaft_and_hub();
+    let hub_limit = hub_limit(joint);
+    let joining = Joining {
+        diameter: joint.diameter,
+        interference: extremes.tightest.interference,
+        clearance: joint.assembly.clearance.value,
+        hub: &hub.material.expansion,
+        shaft: &shaft.material.expansion,
+        shop_temperature: joint.assembly.shop_temperature,
+        hub_limit: hub_limit.as_ref().map(|(limit, _)| *limit),
+    };
+    let words = Words { display: joint.display, hub: &hub.name, shaft: &shaft.name };
+    let baths = [Bath::DryIce, Bath::LiquidNitrogen]
+        .into_iter()
+        .map(|bath| Ok(words.bath(bath, &joining.bath(bath_temperature(bath))?)))
+        .collect::<Result<Vec<_>, FindingsError>>()?;
+    Ok(AssemblyFindings {
+        press_rating: press::press_rating(press.tightest.peak_force),
+        press,
+        heat_hub: words.heat_hub(&joining.heat_hub(joint.assembly.shop_temperature)?),
+        chill_shaft: words.chill_shaft(&joining.chill_shaft()?),
+        baths,
+        clearance: joining.clearance,
+        needed: joining.needed()?.max(0.0),
+        hub_limit,
+    })
+}
+
+fn press_curve(joint: &Joint, pair: &PairFindings, friction: f64) -> Result<PressCurve, FindingsError> {
+    Ok(press::press_curve(
+        &press_input(joint, pair.pressure, pair.effective_interference, friction),
+        CURVE_POINTS,
+    )?)
+}
+
+/// The pressing-in of one pair.
+pub(super) fn press_input(joint: &Joint, pressure: f64, interference: f64, friction: f64) -> PressInput {
+    PressInput {
+        pressure,
+        interference: interference.max(0.0),
+        diameter: joint.diameter,
+        length: joint.engaged_length(),
+        friction,
+        chamfer_angle: joint.assembly.chamfer_angle.value,
+    }
+}
+
+/// Routes told in plain sentences.
+struct Words<'a> {
+    display: UnitSystem,
+    hub: &'a str,
+    shaft: &'a str,
+}
+
+impl Words<'_> {
+    fn temperature(&self, kelvin: f64) -> String {
+        show(Measure::Temperature, kelvin, self.display).to_string()
+    }
+
+    fn change(&self, metres: f64) -> String {
+        show(Measure::Deviation, metres, self.display).to_string()
+    }
+
+    fn obstacle(&self, part: &str, obstacle: &Obstacle) -> String {
+        match obstacle {
+            Obstacle::CurveEnds { end, clearance, wanted } => format!(
+                "the expansion data of the {part} end at {}, where the clearance is {} of the {} wanted",
+                self.temperature(*end),
+                self.change(*clearance),
+                self.change(*wanted)
+            ),
+            Obstacle::AboveLimit { needed, limit } => format!(
+                "the {part} would need {}, but must not go above {}",
+                self.temperature(*needed),
+                self.temperature(*limit)
+            ),
+        }
+    }
+
+    fn heat_hub(&self, route: &Route) -> ThermalRoute {
+        let statement = match (&route.obstacle, route.temperature) {
+            (Some(obstacle), _) => {
+                format!("heating the {} alone cannot do it: {}", self.hub, self.obstacle(self.hub, obstacle))
+            }
+            (None, Some(temperature)) => {
+                format!("heat the {} to at least {}", self.hub, self.temperature(temperature))
+            }
+            (None, None) => format!("no temperature of the {} was found", self.hub),
+        };
+        ThermalRoute { temperature: route.temperature, possible: route.possible(), statement }
+    }
+
+    fn chill_shaft(&self, route: &Route) -> ThermalRoute {
+        let statement = match (&route.obstacle, route.temperature) {
+            (Some(obstacle), _) => format!(
+                "chilling the {} alone cannot do it: {}",
+                self.shaft,
+                self.obstacle(self.shaft, obstacle)
+            ),
+            (None, Some(temperature)) => {
+                format!("chill the {} to at most {}", self.shaft, self.temperature(temperature))
+            }
+            (None, None) => format!("no temperature of the {} was found", self.shaft),
+        };
+        ThermalRoute { temperature: route.temperature, possible: route.possible(), statement }
+    }
+
+    fn bath(&self, bath: Bath, route: &BathRoute) -> BathFindings {
+        let name = bath_name(bath);
+        let hub = route.hub.as_ref();
+        let statement = match (route.shrinkage, hub) {
+            (None, _) => {
+                let why = route.obstacle.as_ref().map(|obstacle| self.obstacle(self.shaft, obstacle));
+                format!("{name} cannot be judged: {}", why.unwrap_or_default())
+            }
+            (Some(shrinkage), _) if route.alone => {
+                format!(
+                    "{name} gives {} of the {} needed: it clears alone",
+                    self.change(shrinkage),
+                    self.change(route.needed)
+                )
+            }
+            (Some(shrinkage), hub) => {
+                let besides = match hub.map(|hub| (&hub.obstacle, hub.temperature)) {
+                    Some((None, Some(temperature))) => {
+                        format!("heat the {} to at least {} as well", self.hub, self.temperature(temperature))
+                    }
+                    Some((Some(obstacle), _)) => {
+                        format!(
+                            "and heating the {} as well cannot do it: {}",
+                            self.hub,
+                            self.obstacle(self.hub, obstacle)
+                        )
+                    }
+                    _ => "no hub temperature makes up the rest".to_owned(),
+                };
+                format!(
+                    "{name} cannot do it alone, it gives {} of the {} needed: {besides}",
+                    self.change(shrinkage),
+                    self.change(route.needed)
+                )
+            }
+        };
+        BathFindings {
+            bath,
+            temperature: route.temperature,
+            shrinkage: route.shrinkage,
+            hub_temperature: hub.filter(|hub| hub.possible()).and_then(|hub| hub.temperature),
+            alone: route.alone,
+            statement,
+        }
+    }
+}
+
+/// The lower of the material's limit and the user's.
+fn hub_limit(joint: &Joint) -> Option<(f64, String)> {
+    let hub = joint.rings.last()?;
+    let material = hub
+        .material
+        .max_temperature
+        .as_ref()
+        .map(|limit| (limit.value, format!("limit of {}", hub.material.name)));
+    let user =
+        joint.assembly.hub_temperature_limit.map(|limit| (limit, "limit given in the joint file".to_owned()));
+    match (material, user) {
+        (Some(material), Some(user)) => Some(if user.0 < material.0 { user } else { material }),
+        (material, user) => material.or(user),
+    }
+}
+
+/// Temperature of a bath, K.
+pub fn bath_temperature(bath: Bath) -> f64 {
+    match bath {
+        Bath::DryIce => media::dry_ice::TEMPERATURE.value,
+        Bath::LiquidNitrogen => media::liquid_nitrogen::TEMPERATURE.value,
+    }
+}
+
+/// Name of a bath in a sentence.
+pub fn bath_name(bath: Bath) -> &'static str {
+    match bath {
+        Bath::DryIce => "dry ice",
+        Bath::LiquidNitrogen => "liquid nitrogen",
+    }
+}

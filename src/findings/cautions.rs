@@ -1,0 +1,189 @@
+//! Cautions and notes that the numbers of a joint call for.
+
+use super::{Caution, Findings};
+use crate::assembly::cautions::{self as practice, Process};
+use crate::joint::{Bath, Method};
+use crate::material::Kind;
+use crate::mechanics::criteria::DuctileCriterion;
+use crate::quantity::{Measure, show};
+use crate::tolerance::Character;
+
+/// Cautions: strength and grip first, then those of the method of assembly.
+pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
+    let mut all = Vec::new();
+    all.extend(yielding(findings));
+    all.extend(clearance(findings));
+    all.extend(input_remarks(findings));
+    all.extend(proportions(findings));
+    all.extend(polymers(findings));
+    all.extend(assembly(findings));
+    all
+}
+
+fn yielding(findings: &Findings) -> Vec<Caution> {
+    let joint = &findings.joint;
+    let Some(onset) = &findings.onset_of_yield else { return Vec::new() };
+    let unit = |m: f64| show(Measure::Deviation, m, joint.display).to_string();
+    let Some(ring) = joint.rings.get(onset.ring) else { return Vec::new() };
+    let brittle = ring.material.kind == Kind::Brittle;
+    let verb = if brittle { "break" } else { "yield" };
+    let beyond = findings.extremes.tightest.effective_interference > onset.interference;
+    if !beyond {
+        return Vec::new();
+    }
+    let pair = if findings.extremes.loosest.effective_interference > onset.interference {
+        "every pair"
+    } else if findings.extremes.mean.effective_interference > onset.interference {
+        "the mean and the tightest pair"
+    } else {
+        "the tightest pair"
+    };
+    vec![Caution {
+        subject: "strength",
+        text: format!(
+            "The {} begins to {verb} at an interference of {}; {pair} exceeds it (tightest {}). Elastic figures beyond \
+             that interference are not valid.",
+            ring.name,
+            unit(onset.interference),
+            unit(findings.extremes.tightest.effective_interference),
+        ),
+        source: criterion_source(brittle, joint.criterion).to_owned(),
+    }]
+}
+
+/// The published criterion by name.
+pub fn criterion_source(brittle: bool, criterion: DuctileCriterion) -> &'static str {
+    match (brittle, criterion) {
+        (true, _) => "greatest principal stress (Rankine) against tensile strength",
+        (false, DuctileCriterion::VonMises) => "von Mises criterion, plane stress",
+        (false, DuctileCriterion::Tresca) => "Tresca criterion with the axial stress zero counted",
+    }
+}
+
+fn clearance(findings: &Findings) -> Vec<Caution> {
+    let text = match findings.character {
+        Character::Interference => {
+            if findings.extremes.loosest.interference > 0.0 && findings.extremes.loosest.pressure <= 0.0 {
+                "At the loosest pair smoothing or temperature takes all of the interference: the pressure there is 0."
+            } else {
+                return Vec::new();
+            }
+        }
+        Character::Transition => {
+            "This is a transition fit: the loosest pair has clearance, its pressure is 0 and it holds nothing."
+        }
+        Character::Clearance => {
+            "This is a clearance fit: even the tightest pair does not grip, the pressure is 0 at every pair."
+        }
+    };
+    vec![Caution { subject: "hold", text: text.to_owned(), source: "ISO 286-1, clause 3.3".to_owned() }]
+}
+
+fn input_remarks(findings: &Findings) -> Vec<Caution> {
+    let remarks = findings.joint.remarks.iter();
+    remarks
+        .map(|remark| Caution {
+            subject: "input",
+            text: remark.clone(),
+            source: "the joint file as understood".to_owned(),
+        })
+        .collect()
+}
+
+/// Where the long-cylinder formulas are least exact.
+fn proportions(findings: &Findings) -> Vec<Caution> {
+    let joint = &findings.joint;
+    let mut all = Vec::new();
+    if joint.engaged_length() < 0.5 * joint.diameter {
+        all.push(Caution {
+            subject: "strength",
+            text: "The joint is shorter than half its diameter: under an overhanging shaft the mean pressure is 3 to 12 % \
+                   above the value for long cylinders."
+                .to_owned(),
+            source: "axisymmetric finite elements, frictionless, hub ratios 0.3 to 0.7 (own computation)".to_owned(),
+        });
+    }
+    all
+}
+
+fn polymers(findings: &Findings) -> Vec<Caution> {
+    let rings = findings.joint.rings.iter().filter(|ring| ring.material.kind == Kind::Polymer);
+    rings
+        .map(|ring| Caution {
+            subject: "hold",
+            text: format!(
+                "The {} is a polymer: it creeps, so the pressure falls with time; the figures are those of the first hour.",
+                ring.name
+            ),
+            source: "common practice, no source".to_owned(),
+        })
+        .collect()
+}
+
+fn assembly(findings: &Findings) -> Vec<Caution> {
+    let joint = &findings.joint;
+    let bath = match joint.assembly.bath {
+        Bath::DryIce => Process::DryIce,
+        Bath::LiquidNitrogen => Process::LiquidNitrogen,
+    };
+    let processes = match joint.assembly.method {
+        Method::Press => vec![Process::Press],
+        Method::HeatHub => vec![Process::HeatHub],
+        Method::ChillShaft => vec![bath],
+        Method::HeatAndChill => vec![Process::HeatHub, bath],
+    };
+    let mut all: Vec<Caution> = processes.into_iter().flat_map(practice::cautions).collect();
+    let chills = matches!(joint.assembly.method, Method::ChillShaft | Method::HeatAndChill);
+    if let (true, Some(shaft)) = (chills, joint.rings.first())
+        && let Some(text) = &shaft.material.low_temperature_caution
+    {
+        all.push(Caution {
+            subject: "cold",
+            text: format!("{}: {}", shaft.material.name, sentence(text)),
+            source: "material library".to_owned(),
+        });
+    }
+    all
+}
+
+/// A text that ends with a full stop.
+fn sentence(text: &str) -> String {
+    let text = text.trim();
+    if text.ends_with('.') { text.to_owned() } else { format!("{text}.") }
+}
+
+/// Why quantities do not exist, and what is not covered.
+pub(super) fn notes(findings: &Findings) -> Vec<String> {
+    let mut notes = Vec::new();
+    for (state, duty) in findings.joint.duty.iter().zip(&findings.duty) {
+        if duty.loosest.slip_safety.is_none() {
+            notes.push(format!(
+                "slip_safety of state {} does not exist: the state has neither torque nor axial force.",
+                state.name
+            ));
+        }
+    }
+    for (ring, stress) in findings.joint.rings.iter().zip(&findings.extremes.tightest.rings) {
+        if stress.strength.is_none() {
+            notes.push(format!(
+                "The safety of the {} does not exist: {} has no strength of the kind its criterion needs.",
+                ring.name, ring.material.name
+            ));
+        } else if stress.safety.is_none() {
+            let why = if ring.material.kind == Kind::Brittle {
+                "it is brittle and nowhere in tension"
+            } else {
+                "nothing stresses it"
+            };
+            notes
+                .push(format!("The safety of the {} at the tightest pair does not exist: {why}.", ring.name));
+        }
+    }
+    notes.push(
+        "Covered: elastic rings of uniform section in plane stress, at rest, uniform temperature in each part. Not covered: \
+         hub ends and edges (the edge pressure of a sharp hub on a through shaft is about 1.5 to 1.7 times the mean), axial \
+         friction while joining (0 to 10 % more pressure), form errors, creep, fretting."
+            .to_owned(),
+    );
+    notes
+}

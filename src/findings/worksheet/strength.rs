@@ -1,0 +1,246 @@
+//! Stiffness, contact pressure, stresses, capacity and strength at the shop temperature.
+
+use super::super::expression::{Expression, greatest, num, sym};
+use super::super::{Findings, PairFindings, RingStress};
+use super::Units;
+use super::sheet::Sheet;
+use crate::joint::{Joint, Ring};
+use crate::material::Kind;
+use crate::mechanics::criteria::DuctileCriterion;
+
+const LAME: &str = "Lamé; Timoshenko & Goodier, Theory of Elasticity, § 28";
+
+pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
+    let joint = &findings.joint;
+    let (Some(shaft), Some(hub)) = (joint.rings.first(), joint.rings.last()) else { return };
+    stiffness(sheet, joint, shaft, hub, units);
+    shop_strain(sheet, findings, shaft, hub, units);
+    pressures(sheet, findings, units);
+    capacity(sheet, findings, units);
+    sheet.section("Stress at the tightest pair, shop temperature");
+    hub_stress(sheet, findings, hub, units);
+    shaft_stress(sheet, findings, shaft, units);
+}
+
+fn stiffness(sheet: &mut Sheet, joint: &Joint, shaft: &Ring, hub: &Ring, units: &Units) {
+    sheet.section("Stiffness of both parts");
+    let length = |metres: f64| metres * units.per_metre;
+    sheet.input("D", "outer diameter of the hub", length(hub.outer_diameter), units.length, "joint file");
+    sheet.input("b", "bore of the shaft", length(shaft.inner_diameter), units.length, "joint file");
+    for (ring, index, name) in [(hub, "h", "hub"), (shaft, "s", "shaft")] {
+        let material = &ring.material;
+        sheet.input(
+            &format!("E_{index}"),
+            &format!("Young's modulus of the {name}"),
+            material.youngs_modulus.value * units.per_pascal,
+            units.pressure,
+            &material.youngs_modulus.source,
+        );
+        sheet.input(
+            &format!("nu_{index}"),
+            &format!("Poisson's ratio of the {name}"),
+            material.poisson.value,
+            "",
+            &material.poisson.source,
+        );
+    }
+    let _ = joint;
+    sheet.formula("C_h", "flexibility of the hub", ratio("D", "d") + sym("nu_h"), "", LAME, None);
+    sheet.formula("C_s", "flexibility of the shaft", ratio("d", "b") - sym("nu_s"), "", LAME, None);
+}
+
+/// (a² + b²)/(a² − b²).
+fn ratio(outer: &str, inner: &str) -> Expression {
+    let square = |symbol: &str| sym(symbol).power(2);
+    (square(outer) + square(inner)) / (square(outer) - square(inner))
+}
+
+/// Free strains at the shop temperature; written as inputs since they are read from curves.
+fn shop_strain(sheet: &mut Sheet, findings: &Findings, shaft: &Ring, hub: &Ring, units: &Units) {
+    let joint = &findings.joint;
+    sheet.input(
+        "T_shop",
+        "shop temperature",
+        units.degrees(joint.assembly.shop_temperature),
+        units.temperature,
+        "joint file",
+    );
+    for (ring, symbol) in [(shaft, "eps_s"), (hub, "eps_h")] {
+        let strain = ring.material.expansion.strain(joint.assembly.shop_temperature).unwrap_or(0.0);
+        sheet.input(
+            symbol,
+            &format!("expansion of the {} from 20 °C to the shop temperature", ring.name),
+            strain,
+            "",
+            &ring.material.expansion.source,
+        );
+    }
+}
+
+fn pressures(sheet: &mut Sheet, findings: &Findings, units: &Units) {
+    sheet.section("Contact pressure, shop temperature, at rest");
+    for (symbol, interference, name, pair) in [
+        ("p_min", "W_min", "loosest", &findings.extremes.loosest),
+        ("p_m", "W_m", "mean", &findings.extremes.mean),
+        ("p_max", "W_max", "tightest", &findings.extremes.tightest),
+    ] {
+        sheet.formula(
+            symbol,
+            &format!("contact pressure, {name} pair"),
+            pressure(interference, "eps_s", "eps_h"),
+            units.pressure,
+            LAME,
+            Some(pair.pressure * units.per_pascal),
+        );
+    }
+}
+
+/// max(0, (W/1000 + d (ε_s − ε_h)) / (d (C_h/E_h + C_s/E_s))).
+pub(super) fn pressure(interference: &str, shaft_strain: &str, hub_strain: &str) -> Expression {
+    let grip = sym(interference) / num("1000") + sym("d") * (sym(shaft_strain) - sym(hub_strain));
+    let flexibility = sym("d") * (sym("C_h") / sym("E_h") + sym("C_s") / sym("E_s"));
+    greatest([num("0"), grip / flexibility])
+}
+
+fn capacity(sheet: &mut Sheet, findings: &Findings, units: &Units) {
+    let joint = &findings.joint;
+    sheet.section("Capacity at the loosest pair, shop temperature");
+    sheet.input("L", "length of the hub", joint.length * units.per_metre, units.length, "joint file");
+    sheet.input("r", "relief, carries nothing", joint.relief * units.per_metre, units.length, "joint file");
+    let engaged = joint.engaged_length() * units.per_metre;
+    sheet.formula(
+        "l",
+        "length that carries",
+        sym("L") - sym("r"),
+        units.length,
+        "length less relief",
+        Some(engaged),
+    );
+    sheet.input(
+        "mu_h",
+        "friction against slip, low end",
+        joint.friction.holding.value.low,
+        "",
+        &joint.friction.holding.source,
+    );
+    let pair = &findings.extremes.loosest;
+    sheet.formula(
+        "F_cap",
+        "axial force at slip",
+        axial("p_min"),
+        units.force,
+        "equilibrium; DIN 7190-1",
+        Some(pair.axial_capacity * units.per_newton),
+    );
+    sheet.formula(
+        "M_cap",
+        "torque at slip",
+        torque("F_cap", units),
+        units.torque,
+        "equilibrium; DIN 7190-1",
+        Some(pair.torque_capacity * units.per_newton_metre),
+    );
+}
+
+/// μ p π d l.
+pub(super) fn axial(pressure: &str) -> Expression {
+    sym("mu_h") * sym(pressure) * sym("pi") * sym("d") * sym("l")
+}
+
+/// F d/2 in the printed torque unit.
+pub(super) fn torque(axial: &str, units: &Units) -> Expression {
+    sym(axial) * sym("d") / num("2") / num(units.torque_divisor)
+}
+
+fn hub_stress(sheet: &mut Sheet, findings: &Findings, hub: &Ring, units: &Units) {
+    let pair: &PairFindings = &findings.extremes.tightest;
+    let Some(stress) = pair.rings.last() else { return };
+    let pa = |value: f64| Some(value * units.per_pascal);
+    sheet.formula(
+        "sigma_rh",
+        "radial stress at the hub bore",
+        -sym("p_max"),
+        units.pressure,
+        LAME,
+        pa(stress.bore.radial),
+    );
+    sheet.formula(
+        "sigma_th",
+        "hoop stress at the hub bore",
+        sym("p_max") * ratio("D", "d"),
+        units.pressure,
+        LAME,
+        pa(stress.bore.hoop),
+    );
+    let equivalent = match (hub.material.kind, findings.joint.criterion) {
+        (Kind::Brittle, _) => greatest([num("0"), sym("sigma_th")]),
+        (_, DuctileCriterion::VonMises) => von_mises("sigma_rh", "sigma_th"),
+        (_, DuctileCriterion::Tresca) => sym("sigma_th") - sym("sigma_rh"),
+    };
+    close(sheet, findings, hub, stress, "h", equivalent, units);
+}
+
+fn shaft_stress(sheet: &mut Sheet, findings: &Findings, shaft: &Ring, units: &Units) {
+    let Some(stress) = findings.extremes.tightest.rings.first() else { return };
+    let pa = |value: f64| Some(value * units.per_pascal);
+    let solid = shaft.inner_diameter == 0.0;
+    let (meaning, hoop, program) = if solid {
+        ("hoop stress in the solid shaft, everywhere", -sym("p_max"), stress.rim.hoop)
+    } else {
+        let wall = num("2") * sym("d").power(2) / (sym("d").power(2) - sym("b").power(2));
+        ("hoop stress at the shaft bore", -(sym("p_max") * wall), stress.bore.hoop)
+    };
+    sheet.formula("sigma_ts", meaning, hoop, units.pressure, LAME, pa(program));
+    let equivalent = match shaft.material.kind {
+        Kind::Brittle => greatest([num("0"), sym("sigma_ts")]),
+        Kind::Ductile | Kind::Polymer => sym("sigma_ts").call(super::super::expression::Function::Abs),
+    };
+    close(sheet, findings, shaft, stress, "s", equivalent, units);
+}
+
+fn von_mises(radial: &str, hoop: &str) -> Expression {
+    (sym(radial).power(2) + sym(hoop).power(2) - sym(radial) * sym(hoop)).root()
+}
+
+/// Equivalent stress, strength, safety.
+fn close(
+    sheet: &mut Sheet,
+    findings: &Findings,
+    ring: &Ring,
+    stress: &RingStress,
+    index: &str,
+    equivalent: Expression,
+    units: &Units,
+) {
+    let brittle = ring.material.kind == Kind::Brittle;
+    let source = super::super::cautions::criterion_source(brittle, findings.joint.criterion);
+    let symbol = format!("sigma_e{index}");
+    sheet.formula(
+        &symbol,
+        &format!("equivalent stress of the {}", ring.name),
+        equivalent,
+        units.pressure,
+        source,
+        Some(stress.equivalent * units.per_pascal),
+    );
+    let Some(strength) = stress.strength else { return };
+    let (name, meaning) = if brittle { ("R_m", "tensile strength") } else { ("R_e", "yield strength") };
+    let strength_symbol = format!("{name}{index}");
+    sheet.input(
+        &strength_symbol,
+        &format!("{meaning} of the {}", ring.name),
+        strength * units.per_pascal,
+        units.pressure,
+        &ring.strength.source,
+    );
+    if let Some(safety) = stress.safety {
+        sheet.formula(
+            &format!("S_{index}"),
+            &format!("safety of the {}", ring.name),
+            sym(&strength_symbol) / sym(&symbol),
+            "",
+            "strength over equivalent stress",
+            Some(safety),
+        );
+    }
+}

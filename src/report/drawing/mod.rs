@@ -1,0 +1,188 @@
+//! The joint in section, to scale, with its dimensions, materials and surfaces.
+
+mod dimension;
+mod labels;
+mod scale;
+mod section;
+
+use dimension::{Diameter, Length, TYPE};
+use maud::Markup;
+use scale::layout;
+use section::{Place, STUB, bands};
+
+use super::svg::{Frame, Lettering, QUIET, Sketch};
+use super::units::{Measure, Units};
+use crate::findings::Findings;
+use crate::joint::Joint;
+use crate::quantity::UnitSystem;
+
+/// Width of the drawing, mm on paper.
+const WIDTH: f64 = 170.0;
+/// First dimension line beside the shaft, and distance from one to the next, mm.
+const FIRST: f64 = 9.0;
+const NEXT: f64 = 6.5;
+
+/// The section drawing with what its caption says.
+pub struct SectionDrawing {
+    /// The drawing as an `svg` element, as wide as the text of a page.
+    pub svg: Markup,
+    /// Scale, exaggeration and breaks in words.
+    pub caption: String,
+}
+
+/// Draws the joint in axial section.
+pub fn section(findings: &Findings) -> SectionDrawing {
+    let joint = &findings.joint;
+    let units = Units { system: joint.display };
+    let radii: Vec<f64> = joint
+        .rings
+        .first()
+        .map(|ring| ring.inner_diameter / 2.0)
+        .into_iter()
+        .chain(joint.rings.iter().map(|ring| ring.outer_diameter / 2.0))
+        .collect();
+    let hollow = radii.first().is_some_and(|bore| *bore > 0.0);
+    let columns = (joint.fits.len(), 1 + usize::from(hollow));
+    let margin = |count: usize| FIRST + NEXT * (count.max(1) - 1) as f64 + 4.0;
+    let (left, right) = (margin(columns.0), margin(columns.1));
+    let room = (WIDTH - 2.0 * STUB - left - right).min(84.0);
+    let layout = layout(&radii, joint.length, room);
+
+    let interference: Vec<f64> =
+        joint.fits.iter().map(|fit| fit.limits.interference().tightest / 2.0).collect();
+    let (factor, bands) = bands(&interference, layout.scale);
+    let rows = labels::rows(joint, units, factor);
+    let spare = WIDTH - left - right - 2.0 * STUB - layout.axial.to;
+    let centre = labels::height(rows.len()) + 3.0 + layout.radial.last().map_or(0.0, |wall| wall.to);
+    let place_at = |hub_left: f64| Place {
+        hub_left,
+        hub_right: hub_left + layout.axial.to,
+        centre,
+        relief: (joint.relief * 1e3 * layout.scale).min(0.4 * layout.axial.to),
+    };
+    // As near to the middle of the sheet as the lettering on its right allows.
+    let place = [0.42, 0.3, 0.2, 0.1, 0.0]
+        .map(|share| place_at(left + STUB + share * spare))
+        .into_iter()
+        .find(|place| labels::reach(&rows, &layout, *place, &bands) <= WIDTH)
+        .unwrap_or_else(|| place_at(left + STUB));
+    let mut sketch = Sketch::default();
+    section::draw(&mut sketch, &layout, place, &bands);
+    let bottom = place.centre + layout.radial.last().map_or(0.0, |wall| wall.to);
+    let below = dimensions(&mut sketch, joint, units, &layout, place);
+    labels::draw(&mut sketch, &rows, &layout, place, &bands, WIDTH);
+    let height = bottom + below + 9.0;
+    let foot = Lettering::new(foot(&layout, units), TYPE).colour(QUIET);
+    sketch.text((0.0, height - 2.0), &foot);
+
+    let frame = Frame {
+        id: "section-drawing".into(),
+        class: "drawing",
+        title: "Section of the joint".into(),
+        description: description(joint, units),
+        width: WIDTH,
+        height,
+        unit: "mm",
+    };
+    SectionDrawing { svg: sketch.finish(&frame), caption: caption(&layout, factor, &interference) }
+}
+
+/// Draws all dimensions; returns how far they reach below the part, mm.
+fn dimensions(sketch: &mut Sketch, joint: &Joint, units: Units, layout: &scale::Layout, place: Place) -> f64 {
+    let size = |value: f64| units.reading(Measure::Size, value).number;
+    let mut diameters = Vec::new();
+    for (k, fit) in joint.fits.iter().enumerate() {
+        let from = if k == 0 { place.shaft_left() } else { place.hub_left };
+        let at = place.shaft_left() - FIRST - NEXT * k as f64;
+        let text = format!("Ø{} {}", size(fit.limits.nominal), fit.callout);
+        diameters.push(Diameter::new(from, at, layout.radial[k + 1].to, &text));
+    }
+    let mut column = place.shaft_right() + FIRST;
+    if let Some(bore) = joint.rings.first().map(|ring| ring.inner_diameter).filter(|bore| *bore > 0.0) {
+        let text = format!("Ø{}", size(bore));
+        diameters.push(Diameter::new(place.shaft_right(), column, layout.radial[0].to, &text));
+        column += NEXT;
+    }
+    if let (Some(ring), Some(wall)) = (joint.rings.last(), layout.radial.last()) {
+        let text = format!("Ø{}", size(ring.outer_diameter));
+        diameters.push(Diameter::new(place.hub_right, column, wall.to, &text));
+    }
+    let bottom = place.centre + layout.radial.last().map_or(0.0, |wall| wall.to);
+    let mut below: f64 = 0.0;
+    for diameter in &diameters {
+        diameter.draw(sketch, place.centre, bottom);
+        below = below.max(diameter.below());
+    }
+    below.max(lengths(sketch, joint, units, place, bottom))
+}
+
+/// Draws the hub's length and its relief below the part; returns how far they reach, mm.
+fn lengths(sketch: &mut Sketch, joint: &Joint, units: Units, place: Place, bottom: f64) -> f64 {
+    let size = |value: f64| units.reading(Measure::Size, value).number;
+    let line = |left: f64, right: f64, row: f64, text: String, beside: bool| Length {
+        left,
+        right,
+        from: bottom,
+        at: bottom + row,
+        text,
+        beside,
+    };
+    let edge = place.hub_right - place.relief;
+    if joint.relief > 0.0 {
+        line(place.hub_left, edge, 7.5, size(joint.length - joint.relief), false).draw(sketch);
+        line(edge, place.hub_right, 7.5, format!("relief {}", size(joint.relief)), true).draw(sketch);
+        line(place.hub_left, place.hub_right, 14.5, size(joint.length), false).draw(sketch);
+        17.0
+    } else {
+        line(place.hub_left, place.hub_right, 7.5, size(joint.length), false).draw(sketch);
+        10.0
+    }
+}
+
+fn foot(layout: &scale::Layout, units: Units) -> String {
+    let unit = match units.system {
+        UnitSystem::Metric => "millimetres",
+        UnitSystem::Inch => "inches",
+    };
+    format!("scale {} · sizes in {unit}", layout.scale_text)
+}
+
+fn caption(layout: &scale::Layout, factor: f64, interference: &[f64]) -> String {
+    let mut text = format!("Section, scale {} when printed at full size", layout.scale_text);
+    if layout.is_broken() {
+        text.push_str("; lengths between break lines are left out");
+    }
+    if interference.iter().any(|value| *value != 0.0) {
+        text.push_str(&format!(
+            "; the interference of the tightest pair, shown in colour, is drawn {} times too large",
+            super::typeset::number(&format!("{factor}"))
+        ));
+    }
+    text.push_str(
+        ". The shaft is drawn through and broken off: its length outside the hub is not part of the input.",
+    );
+    text
+}
+
+fn description(joint: &Joint, units: Units) -> String {
+    let size = |value: f64| units.text(Measure::Size, value);
+    let rings: Vec<String> = joint
+        .rings
+        .iter()
+        .map(|ring| {
+            let bore = if ring.inner_diameter > 0.0 {
+                format!("inner diameter {}", size(ring.inner_diameter))
+            } else {
+                "solid".to_owned()
+            };
+            format!(
+                "{} of {}, {bore}, outer diameter {}",
+                ring.name,
+                ring.material.name,
+                size(ring.outer_diameter)
+            )
+        })
+        .collect();
+    let fits: Vec<&str> = joint.fits.iter().map(|fit| fit.callout.as_str()).collect();
+    format!("{}; fit {}; length {}", rings.join("; "), fits.join(" and "), size(joint.length))
+}

@@ -1,0 +1,133 @@
+//! The loosest, mean and tightest pair side by side.
+
+use maud::{Markup, html};
+
+use super::Sheet;
+use super::table::{aligned, cell, pair_heads, range_cell, scrolling};
+use crate::findings::{PairFindings, RingStress};
+use crate::joint::{Ring, SmoothingAt};
+use crate::material::{Kind, Range};
+use crate::mechanics::criteria::DuctileCriterion;
+use crate::report::units::Measure;
+
+/// The table with a line on how the pairs are made.
+pub(super) fn body(sheet: Sheet) -> Markup {
+    let joint = &sheet.findings.joint;
+    let smoothing = match joint.smoothing.at {
+        SmoothingAt::Loosest => "lost at the loosest and the mean pair, kept at the tightest",
+        SmoothingAt::Both => "lost at every pair",
+        SmoothingAt::None => "kept at every pair",
+    };
+    let first = joint.fits.len() > 1;
+    html! {
+        p {
+            "At the shop temperature of " (sheet.units.text(Measure::Temperature, joint.assembly.shop_temperature))
+            " and at rest. The loosest pair is the largest hole with the smallest shaft, the tightest the smallest "
+            "hole with the largest shaft. Interference is diametral; what the roughness peaks lose is " (smoothing) "."
+            @if first { " Interference and pressure are those of the innermost mating surface; every ring is listed." }
+        }
+        (scrolling("The extreme pairs", "extremes", &table(sheet)))
+    }
+}
+
+fn table(sheet: Sheet) -> Markup {
+    let rings = &sheet.findings.joint.rings;
+    html! {
+        thead {
+            tr { th scope="col" { "Quantity" } th scope="col" { "Unit" } (pair_heads(sheet)) }
+        }
+        tbody {
+            (row(sheet, "interference", Measure::Deviation, |pair| Some(pair.interference)))
+            (row(sheet, "loss by smoothing", Measure::Deviation, |pair| Some(pair.smoothing)))
+            (row(sheet, "effective interference", Measure::Deviation, |pair| Some(pair.effective_interference)))
+            (row(sheet, "contact pressure", Measure::Pressure, |pair| Some(pair.pressure)))
+        }
+        @for (index, ring) in rings.iter().enumerate() {
+            tbody { (ring_rows(sheet, index, ring)) }
+        }
+        tbody {
+            tr.group { th colspan="5" scope="rowgroup" { "Capacity and forces" } }
+            (row(sheet, "torque at slip", Measure::Torque, |pair| Some(pair.torque_capacity)))
+            (row(sheet, "axial force at slip", Measure::Force, |pair| Some(pair.axial_capacity)))
+            (range_row(sheet, "press force, greatest", Measure::Force, |pair| pair.press_force))
+            (range_row(sheet, "release force", Measure::Force, |pair| pair.release_force))
+        }
+    }
+}
+
+fn ring_rows(sheet: Sheet, index: usize, ring: &Ring) -> Markup {
+    let solid = ring.inner_diameter <= 0.0;
+    let last = index + 1 == sheet.findings.joint.rings.len();
+    let inner = if solid { "at the centre" } else { "at the bore" };
+    let equivalent = match (ring.material.kind, sheet.findings.joint.criterion) {
+        (Kind::Brittle, _) => "greatest principal stress",
+        (_, DuctileCriterion::VonMises) => "equivalent stress, von Mises",
+        (_, DuctileCriterion::Tresca) => "equivalent stress, Tresca",
+    };
+    let strength = match ring.material.kind {
+        Kind::Brittle => "safety against fracture",
+        _ => "safety against yield",
+    };
+    let stress = |name: &str, value: fn(&RingStress) -> f64| {
+        row(sheet, name, Measure::Pressure, |pair| pair.rings.get(index).map(value))
+    };
+    html! {
+        tr.group { th colspan="5" scope="rowgroup" { (ring.name) " · " (ring.material.name) } }
+        @if solid && is_uniform(sheet, index) {
+            (stress("hoop and radial stress, throughout", |ring| ring.rim.hoop))
+        } @else {
+            (stress(&format!("hoop stress {inner}"), |ring| ring.bore.hoop))
+            @if index > 0 || solid { (stress(&format!("radial stress {inner}"), |ring| ring.bore.radial)) }
+            (stress("hoop stress at the outside", |ring| ring.rim.hoop))
+            @if !last { (stress("radial stress at the outside", |ring| ring.rim.radial)) }
+        }
+        (stress(equivalent, |ring| ring.equivalent))
+        (row(sheet, strength, Measure::Number, |pair| pair.rings.get(index).and_then(|ring| ring.safety)))
+        @if !solid {
+            (row(sheet, "change of inner diameter", Measure::Deviation, |pair| {
+                pair.rings.get(index).map(|ring| ring.bore_change)
+            }))
+        }
+        (row(sheet, "change of outer diameter", Measure::Deviation, |pair| {
+            pair.rings.get(index).map(|ring| ring.outer_change)
+        }))
+    }
+}
+
+/// Whether the stress of a ring is the same everywhere and in every direction, as in a solid shaft at rest.
+fn is_uniform(sheet: Sheet, index: usize) -> bool {
+    sheet.findings.extremes.named().iter().all(|(_, pair)| {
+        pair.rings.get(index).is_none_or(|ring| {
+            let of = [ring.bore.radial, ring.rim.hoop, ring.rim.radial];
+            of.iter().all(|stress| (stress - ring.bore.hoop).abs() < 1.0)
+        })
+    })
+}
+
+fn row(sheet: Sheet, name: &str, measure: Measure, value: impl Fn(&PairFindings) -> Option<f64>) -> Markup {
+    let extremes = &sheet.findings.extremes;
+    html! {
+        tr {
+            th scope="row" { (name) }
+            td.u { (sheet.units.unit(measure)) }
+            @for (_, pair) in extremes.named() {
+                @match (measure, value(pair)) {
+                    (Measure::Number, Some(value)) => (aligned(&super::table::safety(value))),
+                    (_, value) => (cell(sheet.units, measure, value)),
+                }
+            }
+        }
+    }
+}
+
+fn range_row(sheet: Sheet, name: &str, measure: Measure, value: fn(&PairFindings) -> Range) -> Markup {
+    html! {
+        tr {
+            th scope="row" { (name) }
+            td.u { (sheet.units.unit(measure)) }
+            @for (_, pair) in sheet.findings.extremes.named() {
+                (range_cell(sheet.units, measure, value(pair)))
+            }
+        }
+    }
+}

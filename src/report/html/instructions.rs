@@ -1,0 +1,296 @@
+//! What the fitter does, step by step, with the cautions beside the step they belong to.
+
+use maud::{Markup, html};
+
+use super::Sheet;
+use super::table::range_text;
+use crate::findings::{BathFindings, Caution, bath_name};
+use crate::joint::{Method, Ring};
+use crate::material::{REFERENCE_TEMPERATURE, Range};
+use crate::report::typeset::{prose, sentence};
+use crate::report::units::Measure;
+
+/// One step.
+struct Step {
+    title: &'static str,
+    text: String,
+    /// Subject of the cautions that belong to it.
+    cautions: Option<&'static str>,
+}
+
+impl Step {
+    fn new(title: &'static str, text: impl Into<String>) -> Self {
+        Self { title, text: text.into(), cautions: None }
+    }
+
+    fn with_cautions(mut self, subject: &'static str) -> Self {
+        self.cautions = Some(subject);
+        self
+    }
+}
+
+/// The numbered steps of the method asked for.
+pub(super) fn body(sheet: Sheet) -> Markup {
+    let method = sheet.findings.joint.assembly.method;
+    let mut steps = vec![check_parts(sheet), clean(sheet)];
+    match method {
+        Method::Press => steps.extend(press(sheet)),
+        Method::HeatHub => steps.extend(heat(sheet)),
+        Method::ChillShaft => steps.extend(chill(sheet)),
+        Method::HeatAndChill => steps.extend(heat_and_chill(sheet)),
+    }
+    steps.push(dismantle(sheet));
+    html! {
+        p { "Method: " strong { (super::inputs::method(method)) } ". All figures are for the tightest pair, unless the step says otherwise." }
+        ol.steps {
+            @for step in &steps {
+                li {
+                    strong { (step.title) "." } " " (step.text)
+                    @if let Some(subject) = step.cautions { (cautions(&sheet.findings.cautions, subject)) }
+                }
+            }
+        }
+        (other_routes(sheet))
+    }
+}
+
+fn cautions(all: &[Caution], subject: &str) -> Markup {
+    html! {
+        @if all.iter().any(|caution| caution.subject == subject) {
+            p.caution-head { strong { "Cautions" } }
+            ul.cautions {
+                @for caution in all.iter().filter(|caution| caution.subject == subject) {
+                    li { (prose(&caution.text)) " " span.source { (caution.source) } }
+                }
+            }
+        }
+    }
+}
+
+fn check_parts(sheet: Sheet) -> Step {
+    let joint = &sheet.findings.joint;
+    let mut sentences = Vec::new();
+    for (index, fit) in joint.fits.iter().enumerate() {
+        let size = |deviation: f64| sheet.units.text(Measure::Limit, fit.limits.nominal + deviation);
+        let name = |ring: Option<&Ring>, other: &str| {
+            ring.map_or_else(|| other.to_owned(), |ring| ring.name.clone())
+        };
+        let (inner, outer) = (name(joint.rings.get(index), "shaft"), name(joint.rings.get(index + 1), "hub"));
+        sentences.push(format!(
+            "Bore of the {outer}: {} to {}; {inner}: {} to {}.",
+            size(fit.limits.hole.lower),
+            size(fit.limits.hole.upper),
+            size(fit.limits.shaft.lower),
+            size(fit.limits.shaft.upper)
+        ));
+    }
+    Step::new(
+        "Measure both parts",
+        format!(
+            "At {}. {} Parts outside these limits are not covered by this sheet.",
+            sheet.units.text(Measure::Temperature, REFERENCE_TEMPERATURE),
+            sentences.join(" ")
+        ),
+    )
+}
+
+fn clean(sheet: Sheet) -> Step {
+    let angle = &sheet.findings.joint.assembly.chamfer_angle;
+    Step::new(
+        "Clean and deburr both seats",
+        format!(
+            "The lead-in chamfer has a half-angle of {} ({}). Mark the axial position to be reached.",
+            sheet.units.text(Measure::Angle, angle.value),
+            angle.source
+        ),
+    )
+}
+
+fn press(sheet: Sheet) -> Vec<Step> {
+    let findings = sheet.findings;
+    let units = sheet.units;
+    let force = |value: f64| units.brief(Measure::Force, value).text();
+    let press = &findings.assembly.press;
+    let friction = &findings.joint.friction.pressing;
+    let seated = if press.loosest.peak_force > 0.0 {
+        format!("between {} and {}", force(press.loosest.final_force), force(press.tightest.final_force))
+    } else {
+        format!("at most {}; the loosest pair slides in without force", force(press.tightest.final_force))
+    };
+    vec![
+        Step::new(
+            "Lubricate as the friction assumes",
+            format!(
+                "The forces hold for a coefficient of {} ({}).",
+                range_text(units, Measure::Number, friction.value),
+                friction.source
+            ),
+        ),
+        Step::new(
+            "Set up the press",
+            format!(
+                "Rating at least {}. Line up shaft and bore; the force must act along the axis.",
+                force(findings.assembly.press_rating)
+            ),
+        ),
+        Step::new(
+            "Press in with one stroke",
+            format!(
+                "Over {} of seat, from first touch. The force rises steadily. Stop when it passes {}: parts or friction are then not as assumed.",
+                units.text(Measure::Size, findings.joint.engaged_length()),
+                force(press.tightest.peak_force)
+            ),
+        )
+        .with_cautions("press"),
+        Step::new("Record the force when seated", format!("It must lie {seated}.")),
+    ]
+}
+
+/// Smallest bore and largest shaft at the surface that is joined, m, with the clearance wanted.
+fn gauge(sheet: Sheet) -> (f64, f64) {
+    let joint = &sheet.findings.joint;
+    let shop = joint.assembly.shop_temperature;
+    let clearance = sheet.findings.assembly.clearance;
+    let at_shop = |ring: Option<&Ring>, size: f64| {
+        size * (1.0 + ring.and_then(|ring| ring.material.expansion.strain(shop).ok()).unwrap_or(0.0))
+    };
+    let Some(fit) = joint.fits.last() else { return (0.0, 0.0) };
+    let (hub, shaft) = (joint.rings.last(), joint.rings.iter().rev().nth(1));
+    let bore = at_shop(hub, fit.limits.nominal + fit.limits.hole.lower);
+    let pin = at_shop(shaft, fit.limits.nominal + fit.limits.shaft.upper);
+    (pin + clearance, bore - clearance)
+}
+
+fn heat(sheet: Sheet) -> Vec<Step> {
+    let route = &sheet.findings.assembly.heat_hub;
+    let Some(hot) = route.temperature.filter(|_| route.possible) else {
+        return vec![impossible(&route.statement, "heat")];
+    };
+    let bore = sheet.units.text(Measure::Limit, gauge(sheet).0);
+    vec![
+        heat_to(sheet, hot),
+        Step::new(
+            "Check the bore hot",
+            format!("It must measure at least {bore} before the parts are joined."),
+        ),
+        join(),
+        cool(),
+    ]
+}
+
+fn heat_to(sheet: Sheet, hot: f64) -> Step {
+    let temperature = |value: f64| sheet.units.text(Measure::Temperature, value);
+    let limit = sheet
+        .findings
+        .assembly
+        .hub_limit
+        .as_ref()
+        .map(|(limit, reason)| format!(" Never above {} ({reason}).", temperature(*limit)))
+        .unwrap_or_default();
+    Step::new("Heat the outer part", format!("To {} right through, evenly.{limit}", temperature(hot)))
+        .with_cautions("heat")
+}
+
+fn join() -> Step {
+    Step::new(
+        "Join in one movement",
+        "Slip the parts together to the mark without stopping and hold them there until they grip. They seize as soon as the temperatures draw near each other: have everything ready before.",
+    )
+}
+
+fn cool() -> Step {
+    Step::new("Let the joint come to shop temperature", "In still air. Then check the axial position.")
+}
+
+fn chill(sheet: Sheet) -> Vec<Step> {
+    let findings = sheet.findings;
+    let route = &findings.assembly.chill_shaft;
+    let Some(cold) = route.temperature.filter(|_| route.possible) else {
+        return vec![impossible(&route.statement, "cold")];
+    };
+    let pin = sheet.units.text(Measure::Limit, gauge(sheet).1);
+    let temperature = |value: f64| sheet.units.text(Measure::Temperature, value);
+    let bath = findings.assembly.baths.iter().filter(|bath| bath.alone).map(|bath| bath.bath);
+    let baths: Vec<&str> = bath.map(bath_name).collect();
+    let how = if baths.is_empty() {
+        String::new()
+    } else {
+        format!(" {} is cold enough.", super::capital(&baths.join(" or ")))
+    };
+    vec![
+        Step::new("Chill the inner part", format!("To {} or below, right through.{how}", temperature(cold)))
+            .with_cautions("cold"),
+        Step::new(
+            "Check the shaft cold",
+            format!("It must measure at most {pin} before the parts are joined."),
+        ),
+        join(),
+        cool(),
+    ]
+}
+
+fn heat_and_chill(sheet: Sheet) -> Vec<Step> {
+    let findings = sheet.findings;
+    let wanted = findings.joint.assembly.bath;
+    let bath: Option<&BathFindings> = findings.assembly.baths.iter().find(|bath| bath.bath == wanted);
+    let Some((bath, hot)) = bath.and_then(|bath| bath.hub_temperature.map(|hot| (bath, hot))) else {
+        return vec![impossible(bath.map_or("The bath is not covered.", |bath| &bath.statement), "cold")];
+    };
+    let shrinkage = bath.shrinkage.map_or_else(String::new, |value| {
+        format!(" It shrinks by {}.", sheet.units.text(Measure::Deviation, value))
+    });
+    let mut steps = vec![
+        Step::new(
+            "Chill the inner part",
+            format!(
+                "In {} to {}, right through.{shrinkage}",
+                bath_name(bath.bath),
+                sheet.units.text(Measure::Temperature, bath.temperature)
+            ),
+        )
+        .with_cautions("cold"),
+    ];
+    if !bath.alone {
+        steps.push(heat_to(sheet, hot));
+    }
+    steps.extend([join(), cool()]);
+    steps
+}
+
+fn impossible(statement: &str, subject: &'static str) -> Step {
+    Step::new("NOT POSSIBLE as asked", sentence(statement)).with_cautions(subject)
+}
+
+fn dismantle(sheet: Sheet) -> Step {
+    let extremes = &sheet.findings.extremes;
+    let range = Range { low: extremes.loosest.release_force.low, high: extremes.tightest.release_force.high };
+    let force = |value: f64| sheet.units.brief(Measure::Force, value).text();
+    Step::new(
+        "To take it apart",
+        format!(
+            "Pushing out takes {} to {}, the least at the loosest pair and the low friction.",
+            force(range.low),
+            force(range.high)
+        ),
+    )
+}
+
+/// What the other methods would take, in the words of the findings.
+fn other_routes(sheet: Sheet) -> Markup {
+    let assembly = &sheet.findings.assembly;
+    let plan = &sheet.findings.joint.assembly;
+    let mut statements = Vec::new();
+    if plan.method != Method::HeatHub {
+        statements.push(&assembly.heat_hub.statement);
+    }
+    if plan.method != Method::ChillShaft {
+        statements.push(&assembly.chill_shaft.statement);
+    }
+    let other =
+        assembly.baths.iter().filter(|bath| plan.method != Method::HeatAndChill || bath.bath != plan.bath);
+    statements.extend(other.map(|bath| &bath.statement));
+    html! {
+        h3 { "Other ways" }
+        ul { @for statement in statements { li { (sentence(statement)) } } }
+    }
+}

@@ -1,0 +1,121 @@
+//! The report: one self-contained page that prints, is read from top to bottom, and is signed.
+//!
+//! The page is well-formed XML as well as HTML, needs no script and no network, and is the same to the byte
+//! for the same findings.
+
+mod answers;
+mod duty;
+mod extremes;
+mod inputs;
+mod instructions;
+mod materials;
+mod notes;
+mod pictures;
+mod table;
+mod title_block;
+mod worksheet;
+
+use maud::{Markup, PreEscaped, html};
+
+use super::units::Units;
+use crate::findings::Findings;
+
+const STYLE: &str = include_str!("style.css");
+
+/// What every part of the page is made from.
+#[derive(Clone, Copy)]
+struct Sheet<'a> {
+    findings: &'a Findings,
+    units: Units,
+}
+
+/// The report of a joint as one HTML file.
+///
+/// # Example
+/// ```no_run
+/// # fn findings() -> hubgrip::findings::Findings { unimplemented!() }
+/// let page = hubgrip::report::html::html(&findings());
+/// std::fs::write("joint.html", page)?;
+/// # Ok::<(), std::io::Error>(())
+/// ```
+pub fn html(findings: &Findings) -> String {
+    let sheet = Sheet { findings, units: Units { system: findings.joint.display } };
+    let title = title_block::title(&findings.joint);
+    let page = html! {
+        (PreEscaped("<!DOCTYPE html>\n"))
+        html lang="en" xmlns="http://www.w3.org/1999/xhtml" {
+            head {
+                // A closed tag, so that the page is XML too.
+                (PreEscaped("<meta charset=\"utf-8\"/>"))
+                (PreEscaped("<meta name=\"viewport\" content=\"width=device-width, initial-scale=1\"/>"))
+                (PreEscaped(format!("<meta name=\"generator\" content=\"hubgrip {}\"/>", env!("CARGO_PKG_VERSION"))))
+                title { (title) }
+                style { (PreEscaped(STYLE)) }
+            }
+            body {
+                (title_block::header(sheet))
+                (contents())
+                main {
+                    @for (number, part) in PARTS.iter().enumerate() {
+                        section id=(part.id) aria-labelledby=(format!("h-{}", part.id)) {
+                            h2 id=(format!("h-{}", part.id)) {
+                                span.number { (number + 1) } " " (part.heading)
+                            }
+                            ((part.body)(sheet))
+                        }
+                    }
+                }
+                (title_block::footer(sheet))
+            }
+        }
+    };
+    without_control_characters(&page.into_string())
+}
+
+/// One numbered part of the page.
+struct Part {
+    id: &'static str,
+    heading: &'static str,
+    body: fn(Sheet) -> Markup,
+}
+
+const PARTS: [Part; 10] = [
+    Part { id: "answers", heading: "Verdict", body: answers::body },
+    Part { id: "section", heading: "Section", body: pictures::section },
+    Part { id: "extremes", heading: "Extreme pairs", body: extremes::body },
+    Part { id: "pictures", heading: "Pictures", body: pictures::plots },
+    Part { id: "duty", heading: "Duty", body: duty::body },
+    Part { id: "assembly", heading: "Assembly", body: instructions::body },
+    Part { id: "worksheet", heading: "Worksheet", body: worksheet::body },
+    Part { id: "inputs", heading: "Inputs", body: inputs::body },
+    Part { id: "materials", heading: "Materials", body: materials::body },
+    Part { id: "notes", heading: "Cautions and notes", body: notes::body },
+];
+
+fn contents() -> Markup {
+    html! {
+        nav aria-label="Contents" {
+            ol {
+                @for part in &PARTS {
+                    li { a href=(format!("#{}", part.id)) { (part.heading) } }
+                }
+            }
+        }
+    }
+}
+
+/// XML allows no control characters but tab and line ends (XML 1.0, production 2).
+fn without_control_characters(page: &str) -> String {
+    page.chars()
+        .filter(|c| (!c.is_control() || matches!(c, '\n' | '\t')) && !matches!(c, '\u{FFFE}' | '\u{FFFF}'))
+        .collect()
+}
+
+/// First letter in upper case, for a heading or a sentence.
+fn capital(text: &str) -> String {
+    let mut letters = text.chars();
+    match letters.next() {
+        Some(first) => first.to_uppercase().chain(letters).collect(),
+        None => String::new(),
+    }
+}

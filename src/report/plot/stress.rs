@@ -1,0 +1,307 @@
+//! Stress through the walls at both extremes.
+
+use super::Plot;
+use super::axis::{Axis, bounds};
+use super::chart::{Chart, Margins, Pair, TYPE};
+use super::tags::Side;
+use crate::findings::{Findings, PairFindings, RingStress};
+use crate::joint::Ring;
+use crate::material::Kind;
+use crate::mechanics::criteria::{self, DuctileCriterion};
+use crate::mechanics::ring::{RingLoad, RingSection, Stress};
+use crate::report::svg::{Anchor, Lettering, Point};
+use crate::report::text_width::fitted;
+use crate::report::units::{Measure, Units};
+
+/// Points of each curve through one wall.
+const POINTS: usize = 41;
+/// Least share of the width that a wall is given.
+const LEAST_SHARE: f64 = 0.27;
+
+/// Stress in one ring against radius, Pa over m.
+struct Profile {
+    hoop: Vec<Point>,
+    radial: Vec<Point>,
+    equivalent: Vec<Point>,
+}
+
+/// Hoop, radial and equivalent stress against radius, with strength and allowable stress of each ring.
+///
+/// None when no pair grips: nothing is stressed then.
+pub fn stress(findings: &Findings) -> Option<Plot> {
+    if findings.extremes.tightest.rings.iter().all(|ring| ring.equivalent < 1.0) {
+        return None;
+    }
+    let joint = &findings.joint;
+    let units = Units { system: joint.display };
+    let walls = Walls::new(&joint.rings);
+    let tightest = profiles(findings, &findings.extremes.tightest);
+    let loosest = profiles(findings, &findings.extremes.loosest);
+    let on_axis = |value: f64| units.on_axis(Measure::Pressure, value);
+
+    let curves = tightest.iter().chain(&loosest).flat_map(|p| [&p.hoop, &p.radial, &p.equivalent]);
+    let (low, high) = bounds(curves.flatten().map(|point| on_axis(point.1)));
+    let shown = |limit: f64| on_axis(limit) <= 2.2 * high.max(-low);
+    let limits = limits(findings);
+    let top = limits.iter().map(|limit| limit.value).filter(|v| shown(*v)).map(on_axis).fold(high, f64::max);
+    let span = (top - low).max(1e-9);
+    let y_axis = Axis::new(
+        low - 0.06 * span,
+        top + 0.1 * span,
+        7,
+        format!("stress, {}", units.unit(Measure::Pressure)),
+    );
+    let mut chart = Chart::new(
+        walls.axis(units),
+        y_axis,
+        370.0,
+        Margins { left: 62.0, right: 130.0, top: 50.0, bottom: 44.0 },
+    );
+
+    chart.rule((0.0, 0.0), (1.0, 0.0));
+    for index in 1..joint.rings.len() {
+        let (from, _) = walls.ends(index);
+        chart.rule((from, chart.y.from), (from, chart.y.to));
+    }
+    for (pair, profiles) in [(Pair::Loosest, &loosest), (Pair::Tightest, &tightest)] {
+        for (index, profile) in profiles.iter().enumerate() {
+            draw(&mut chart, &walls, units, index, profile, pair);
+        }
+    }
+    for limit in limits.iter().filter(|limit| shown(limit.value)) {
+        let (from, to) = walls.ends(limit.ring);
+        let y = on_axis(limit.value);
+        let last = limit.ring + 1 == joint.rings.len();
+        let name = format!("{} {}", limit.name, units.brief(Measure::Pressure, limit.value).number);
+        let at = if last { (to, y) } else { (0.5 * (from + to), y) };
+        chart.limit((from, y), (to, y), name, at, if last { Side::Right } else { Side::Above });
+    }
+    name_pairs(&mut chart, units, &tightest, &loosest);
+    for (index, profile) in tightest.iter().enumerate() {
+        label(&mut chart, &walls, findings, index, profile);
+    }
+
+    let caption = caption(findings, &limits, &shown);
+    let title = "Stress through the walls, at the shop temperature and at rest";
+    let names: Vec<(Point, String)> = joint
+        .rings
+        .iter()
+        .enumerate()
+        .map(|(index, ring)| {
+            let (from, to) = walls.ends(index);
+            (chart.place((0.5 * (from + to), chart.y.to)), ring.name.clone())
+        })
+        .collect();
+    let svg = chart.finish("plot-stress", title, &caption, |_, sketch| {
+        for ((x, y), name) in names {
+            let name = fitted(&name, TYPE, 120.0);
+            sketch.text((x, y - 8.0), &Lettering::new(name, TYPE).bold().anchor(Anchor::Middle));
+        }
+    });
+    Some(Plot { title: title.to_owned(), svg, caption })
+}
+
+/// The walls side by side, each at least a good quarter of the width; the radius is stretched to fit.
+struct Walls {
+    radii: Vec<f64>,
+    places: Vec<f64>,
+    stretched: bool,
+}
+
+impl Walls {
+    fn new(rings: &[Ring]) -> Self {
+        let mut radii: Vec<f64> = rings.iter().map(|ring| ring.outer_diameter / 2.0).collect();
+        radii.insert(0, rings.first().map_or(0.0, |ring| ring.inner_diameter / 2.0));
+        let span = radii[radii.len() - 1] - radii[0];
+        let least = LEAST_SHARE.min(0.8 / rings.len().max(1) as f64);
+        let shares: Vec<f64> = radii.windows(2).map(|pair| ((pair[1] - pair[0]) / span).max(least)).collect();
+        let sum: f64 = shares.iter().sum();
+        let mut place = 0.0;
+        let mut places = vec![0.0];
+        for share in &shares {
+            place += share / sum;
+            places.push(place);
+        }
+        Self { radii, places, stretched: (sum - 1.0).abs() > 1e-9 }
+    }
+
+    fn ends(&self, ring: usize) -> (f64, f64) {
+        (self.places[ring], self.places[ring + 1])
+    }
+
+    /// Place of a radius within a ring.
+    fn place(&self, ring: usize, radius: f64) -> f64 {
+        let (from, to) = self.ends(ring);
+        from + (to - from) * (radius - self.radii[ring]) / (self.radii[ring + 1] - self.radii[ring])
+    }
+
+    fn axis(&self, units: Units) -> Axis {
+        let ticks = self
+            .radii
+            .iter()
+            .zip(&self.places)
+            .map(|(radius, place)| (*place, units.reading(Measure::Size, *radius).number))
+            .collect();
+        let note = if self.stretched { "; walls not to scale" } else { "" };
+        Axis { from: 0.0, to: 1.0, ticks, title: format!("radius, {}{note}", units.unit(Measure::Size)) }
+    }
+}
+
+/// A strength drawn over the width of one ring.
+struct Limit {
+    ring: usize,
+    value: f64,
+    name: String,
+}
+
+fn limits(findings: &Findings) -> Vec<Limit> {
+    let require = &findings.joint.require;
+    let mut limits = Vec::new();
+    for (index, ring) in findings.joint.rings.iter().enumerate() {
+        let Some(strength) = findings.extremes.tightest.rings.get(index).and_then(|ring| ring.strength)
+        else {
+            continue;
+        };
+        let (name, safety) = match ring.material.kind {
+            Kind::Brittle => ("tensile strength", require.fracture_safety),
+            _ => ("yield", require.yield_safety),
+        };
+        limits.push(Limit { ring: index, value: strength, name: name.to_owned() });
+        if safety > 1.0 {
+            limits.push(Limit { ring: index, value: strength / safety, name: "allowable".to_owned() });
+        }
+    }
+    limits
+}
+
+fn profiles(findings: &Findings, pair: &PairFindings) -> Vec<Profile> {
+    let joint = &findings.joint;
+    joint.rings.iter().zip(&pair.rings).map(|(ring, stress)| profile(ring, stress, joint.criterion)).collect()
+}
+
+/// Stress through one wall from the pressures on its faces; a uniform temperature stresses no free ring.
+fn profile(ring: &Ring, stress: &RingStress, criterion: DuctileCriterion) -> Profile {
+    let (inner, outer) = (ring.inner_diameter / 2.0, ring.outer_diameter / 2.0);
+    let material = &ring.material;
+    let load = RingLoad {
+        inner_pressure: if inner > 0.0 { -stress.bore.radial } else { 0.0 },
+        outer_pressure: -stress.rim.radial,
+        ..RingLoad::default()
+    };
+    let mut profile = Profile { hoop: vec![], radial: vec![], equivalent: vec![] };
+    let section = RingSection::new(
+        inner,
+        outer,
+        material.youngs_modulus.value,
+        material.poisson.value,
+        material.density.value,
+    );
+    let Ok(section) = section else { return profile };
+    for step in 0..POINTS {
+        let radius = inner + (outer - inner) * step as f64 / (POINTS - 1) as f64;
+        let Ok(stress) = section.stress_at(&load, radius) else { continue };
+        profile.hoop.push((radius, stress.hoop));
+        profile.radial.push((radius, stress.radial));
+        profile.equivalent.push((radius, equivalent(material.kind, criterion, stress)));
+    }
+    profile
+}
+
+fn equivalent(kind: Kind, criterion: DuctileCriterion, stress: Stress) -> f64 {
+    let Stress { radial, hoop } = stress;
+    match (kind, criterion) {
+        (Kind::Brittle, _) => criteria::greatest_principal(radial, hoop),
+        (_, DuctileCriterion::VonMises) => criteria::von_mises(radial, hoop),
+        (_, DuctileCriterion::Tresca) => criteria::tresca(radial, hoop),
+    }
+}
+
+fn draw(chart: &mut Chart, walls: &Walls, units: Units, ring: usize, profile: &Profile, pair: Pair) {
+    let nothing = profile.equivalent.iter().chain(&profile.radial).all(|point| point.1.abs() < 1.0);
+    if nothing {
+        return;
+    }
+    for (points, width) in [(&profile.radial, 1.0), (&profile.hoop, 1.5), (&profile.equivalent, 2.6)] {
+        let points = points
+            .iter()
+            .map(|(radius, stress)| (walls.place(ring, *radius), units.on_axis(Measure::Pressure, *stress)))
+            .collect();
+        chart.curve(points, pair.pen(width));
+    }
+}
+
+/// Names the curves of the tightest pair at the mating surface, where they are furthest apart.
+///
+/// Radial stress is the same on both sides of a mating surface, so it is named once, outside of it.
+fn label(chart: &mut Chart, walls: &Walls, findings: &Findings, ring: usize, profile: &Profile) {
+    let units = Units { system: findings.joint.display };
+    let last = ring + 1 == findings.joint.rings.len();
+    let (from, to) = walls.ends(ring);
+    let (x, side) = if last { (from, Side::Right) } else { (to, Side::Left) };
+    let end = |curve: &[Point]| {
+        let point = if last { curve.first() } else { curve.last() };
+        point.map_or(0.0, |point| point.1)
+    };
+    let equivalent = match findings.joint.rings[ring].material.kind {
+        Kind::Brittle => "greatest tension",
+        _ => "equivalent",
+    };
+    let mut names: Vec<(String, f64)> = vec![(equivalent.to_owned(), end(&profile.equivalent))];
+    let number = |value: f64| units.brief(Measure::Pressure, value).number;
+    let near = |a: f64, b: f64| number(a) == number(b);
+    let (hoop, radial) = (end(&profile.hoop), end(&profile.radial));
+    match names.iter_mut().find(|(_, value)| near(*value, hoop)) {
+        Some((name, _)) => name.push_str(", hoop"),
+        None => names.push(("hoop".to_owned(), hoop)),
+    }
+    match names.iter_mut().find(|(_, value)| near(*value, radial)) {
+        Some((name, _)) => name.push_str(", radial"),
+        None if last => names.push(("radial".to_owned(), radial)),
+        None => {}
+    }
+    names.sort_by(|a, b| b.1.total_cmp(&a.1));
+    for (name, value) in names {
+        let at = (x, units.on_axis(Measure::Pressure, value));
+        chart.mark(at, Pair::Tightest);
+        let text = format!("{name} {}", number(value));
+        chart.tag(at, text, Pair::Tightest.colour(), side);
+    }
+}
+
+/// Names both pairs at the rim of the outermost ring.
+fn name_pairs(chart: &mut Chart, units: Units, tightest: &[Profile], loosest: &[Profile]) {
+    for (pair, name, profiles) in
+        [(Pair::Tightest, "tightest", tightest), (Pair::Loosest, "loosest", loosest)]
+    {
+        let Some(end) = profiles.last().and_then(|profile| profile.equivalent.last()) else { continue };
+        let at = (chart.x.to, units.on_axis(Measure::Pressure, end.1));
+        chart.tag(at, name, pair.colour(), Side::Right);
+    }
+}
+
+fn caption(findings: &Findings, limits: &[Limit], shown: &dyn Fn(f64) -> bool) -> String {
+    let units = Units { system: findings.joint.display };
+    let mut text = String::new();
+    for (index, (ring, stress)) in
+        findings.joint.rings.iter().zip(&findings.extremes.tightest.rings).enumerate()
+    {
+        let Some(strength) = stress.strength else { continue };
+        let kind = if ring.material.kind == Kind::Brittle { "tensile strength" } else { "yield" };
+        let share = 100.0 * stress.equivalent / strength;
+        if index > 0 {
+            text.push(' ');
+        }
+        text.push_str(&format!(
+            "At the tightest pair the {} reaches {}, {share:.0} % of {kind} ({}).",
+            ring.name,
+            units.brief(Measure::Pressure, stress.equivalent).text(),
+            units.brief(Measure::Pressure, strength).text(),
+        ));
+        let hidden = limits.iter().any(|limit| limit.ring == index && !shown(limit.value));
+        if hidden {
+            text.push_str(" Its limit lies above the picture.");
+        }
+    }
+    text.push_str(" Thick: equivalent stress; middle: hoop; thin: radial.");
+    text
+}

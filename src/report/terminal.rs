@@ -1,0 +1,350 @@
+//! Findings as text for an 80-column terminal: the three answers first.
+
+use std::fmt::Write;
+
+use anstyle::{AnsiColor, Style};
+use comfy_table::{CellAlignment, Table, presets};
+
+use crate::findings::{Findings, PairFindings, Question, Verdict, VerdictUnit};
+use crate::joint::Method;
+use crate::quantity::{Measure, UnitSystem, display_unit, show};
+use crate::tolerance::{Character, Extremes};
+
+/// Width of the text.
+pub const WIDTH: usize = 80;
+
+const GOOD: Style = AnsiColor::Green.on_default().bold();
+const BAD: Style = AnsiColor::Red.on_default().bold();
+const HEADING: Style = Style::new().bold();
+
+/// The title and the three answers alone.
+pub fn summary(findings: &Findings) -> String {
+    let mut out = String::new();
+    title(&mut out, findings);
+    answers(&mut out, findings);
+    out
+}
+
+/// The findings as text; styled with ANSI codes that the writer strips where they are not wanted.
+pub fn text(findings: &Findings) -> String {
+    let mut out = String::new();
+    title(&mut out, findings);
+    answers(&mut out, findings);
+    extremes(&mut out, findings);
+    duty(&mut out, findings);
+    assembly(&mut out, findings);
+    defaults(&mut out, findings);
+    cautions(&mut out, findings);
+    notes(&mut out, findings);
+    out
+}
+
+/// Appends a line; writing to a string cannot fail.
+fn line(out: &mut String, text: impl AsRef<str>) {
+    out.push_str(text.as_ref().trim_end());
+    out.push('\n');
+}
+
+fn heading(out: &mut String, text: &str) {
+    line(out, "");
+    line(out, format!("{HEADING}{text}{HEADING:#}"));
+}
+
+/// Wrapped text with a hanging indent.
+fn paragraph(out: &mut String, first: &str, text: &str) {
+    let rest = " ".repeat(first.chars().count());
+    let options =
+        textwrap::Options::new(WIDTH).initial_indent(first).subsequent_indent(&rest).break_words(false);
+    for wrapped in textwrap::wrap(text, options) {
+        line(out, wrapped);
+    }
+}
+
+fn title(out: &mut String, findings: &Findings) {
+    let joint = &findings.joint;
+    let mut name = if joint.title.is_empty() { "Joint".to_owned() } else { joint.title.clone() };
+    if let Some(drawing) = &joint.drawing {
+        let _ = write!(name, " · {drawing}");
+    }
+    let name = plain(&name);
+    for wrapped in textwrap::wrap(&name, WIDTH) {
+        line(out, format!("{HEADING}{wrapped}{HEADING:#}"));
+    }
+    let size = show(Measure::Size, joint.diameter, joint.display);
+    let callout = joint.fits.first().map_or("", |fit| fit.callout.as_str());
+    let interference = &findings.extremes;
+    let unit = display_unit(Measure::Deviation, joint.display).name;
+    let from = show(Measure::Deviation, interference.loosest.interference, joint.display).number;
+    let to = show(Measure::Deviation, interference.tightest.interference, joint.display).number;
+    paragraph(
+        out,
+        "",
+        &format!(
+            "{size}  {callout}: {} fit, interference {from} to {to} {unit}",
+            character_name(findings.character)
+        ),
+    );
+    for (key, value) in &joint.set {
+        paragraph(out, "set ", &plain(&format!("{key} = {value}")));
+    }
+}
+
+/// Text without control characters, so that a file cannot steer the terminal.
+pub fn plain(text: &str) -> String {
+    text.chars().map(|c| if c.is_control() { ' ' } else { c }).collect()
+}
+
+/// The kind of fit in a word.
+pub fn character_name(character: Character) -> &'static str {
+    match character {
+        Character::Clearance => "clearance",
+        Character::Transition => "transition",
+        Character::Interference => "interference",
+    }
+}
+
+/// The question in a word, as heading.
+pub fn question_name(question: Question) -> &'static str {
+    match question {
+        Question::Hold => "hold",
+        Question::Strength => "strength",
+        Question::Assembly => "assembly",
+    }
+}
+
+/// A verdict's number with its unit.
+pub fn verdict_value(value: f64, unit: VerdictUnit, system: UnitSystem) -> String {
+    match unit {
+        VerdictUnit::Safety => safety(value),
+        VerdictUnit::Force => show(Measure::Force, value, system).to_string(),
+        VerdictUnit::Temperature => show(Measure::Temperature, value, system).to_string(),
+    }
+}
+
+/// A safety factor, rounded down so that a printed figure never passes what the number fails.
+pub fn safety(value: f64) -> String {
+    if value >= 100.0 {
+        "over 100".to_owned()
+    } else {
+        format!("{:.2}", (value * 100.0 + 1e-9).floor() / 100.0)
+    }
+}
+
+fn answers(out: &mut String, findings: &Findings) {
+    line(out, "");
+    let mut last = None;
+    for verdict in &findings.verdicts {
+        let name = if last == Some(verdict.question) { "" } else { question_name(verdict.question) };
+        last = Some(verdict.question);
+        let (style, word) = match (verdict.ok, verdict.required) {
+            (true, Some(_)) => (GOOD, "met"),
+            (true, None) => (HEADING, "-"),
+            (false, _) => (BAD, "NOT MET"),
+        };
+        let sentence = verdict_sentence(verdict, findings.joint.display);
+        let indent = format!("{:10}{:9}", name.to_uppercase(), word);
+        let hang = " ".repeat(indent.chars().count());
+        let options = textwrap::Options::new(WIDTH).initial_indent(&indent).subsequent_indent(&hang);
+        for (index, wrapped) in textwrap::wrap(&sentence, options).into_iter().enumerate() {
+            if index == 0 {
+                let rest: String = wrapped.chars().skip(19).collect();
+                line(
+                    out,
+                    format!("{HEADING}{:10}{HEADING:#}{style}{word:9}{style:#}{rest}", name.to_uppercase()),
+                );
+            } else {
+                line(out, wrapped);
+            }
+        }
+    }
+}
+
+/// One verdict as a sentence without its word met or NOT MET.
+pub fn verdict_sentence(verdict: &Verdict, system: UnitSystem) -> String {
+    let value = |number| verdict_value(number, verdict.unit, system);
+    let found = verdict.found.map_or_else(|| "does not exist".to_owned(), value);
+    let bound = match verdict.unit {
+        VerdictUnit::Safety => "at least",
+        VerdictUnit::Force => "at most",
+        VerdictUnit::Temperature => "limit",
+    };
+    let required =
+        verdict.required.map_or_else(String::new, |number| format!(" ({bound} {})", value(number)));
+    format!("{} {found}{required}; {}", verdict.subject, verdict.at)
+}
+
+fn table(header: &[String]) -> Table {
+    let mut table = Table::new();
+    table.load_style(presets::NOTHING).set_header(header.to_vec());
+    table
+}
+
+/// A table whose columns from `numbers` on are right-aligned.
+fn print_table(out: &mut String, mut table: Table, numbers: usize) {
+    for (index, column) in table.column_iter_mut().enumerate() {
+        column.set_padding((if index == 0 { 0 } else { 1 }, 1));
+        if index >= numbers {
+            column.set_cell_alignment(CellAlignment::Right);
+        }
+    }
+    for row in table.lines() {
+        line(out, row);
+    }
+}
+
+fn extremes(out: &mut String, findings: &Findings) {
+    heading(out, "Extreme pairs, shop temperature, at rest");
+    let mut table = table(&["", "loosest", "mean", "tightest"].map(str::to_owned));
+    for (name, values) in extreme_rows(findings) {
+        let cell = |value: Option<String>| value.unwrap_or_else(|| "-".to_owned());
+        table.add_row(vec![name, cell(values.loosest), cell(values.mean), cell(values.tightest)]);
+    }
+    print_table(out, table, 1);
+}
+
+/// The rows of the table of extremes, ready to print: name with unit, and three numbers.
+pub fn extreme_rows(findings: &Findings) -> Vec<(String, Extremes<Option<String>>)> {
+    let joint = &findings.joint;
+    let system = joint.display;
+    let measured = |name: &str,
+                    measure: Measure,
+                    value: fn(&PairFindings) -> f64|
+     -> (String, Extremes<Option<String>>) {
+        let unit = display_unit(measure, system).name;
+        (
+            format!("{name}, {unit}"),
+            findings.extremes.as_ref().map(|pair| Some(show(measure, value(pair), system).number)),
+        )
+    };
+    let mut rows = vec![
+        measured("interference", Measure::Deviation, |pair| pair.interference),
+        measured("lost by smoothing", Measure::Deviation, |pair| pair.smoothing),
+        measured("interference that grips", Measure::Deviation, |pair| pair.effective_interference),
+        measured("contact pressure", Measure::Pressure, |pair| pair.pressure),
+        measured("  with the loss", Measure::Pressure, |pair| pair.pressure_smoothed),
+        measured("  without the loss", Measure::Pressure, |pair| pair.pressure_unsmoothed),
+    ];
+    for (index, ring) in joint.rings.iter().enumerate() {
+        let unit = display_unit(Measure::Pressure, system).name;
+        let cell = |pair: &PairFindings, value: fn(&crate::findings::RingStress) -> f64| {
+            pair.rings.get(index).map(|stress| show(Measure::Pressure, value(stress), system).number)
+        };
+        let solid = ring.inner_diameter == 0.0;
+        let place = if solid { "everywhere" } else { "at the bore" };
+        rows.push((
+            format!("{} hoop stress {place}, {unit}", ring.name),
+            findings.extremes.as_ref().map(|pair| cell(pair, |stress| stress.bore.hoop)),
+        ));
+        rows.push((
+            format!("{} equivalent stress, {unit}", ring.name),
+            findings.extremes.as_ref().map(|pair| cell(pair, |stress| stress.equivalent)),
+        ));
+        rows.push((
+            format!("{} safety against {}", ring.name, crate::findings::failure(ring)),
+            findings
+                .extremes
+                .as_ref()
+                .map(|pair| pair.rings.get(index).and_then(|stress| stress.safety).map(safety)),
+        ));
+    }
+    rows.push(measured("torque at slip", Measure::Torque, |pair| pair.torque_capacity));
+    rows.push(measured("axial force at slip", Measure::Force, |pair| pair.axial_capacity));
+    rows.push(measured("peak press-in force", Measure::Force, |pair| pair.press_force.high));
+    rows.push(measured("release force", Measure::Force, |pair| pair.release_force.high));
+    rows
+}
+
+fn duty(out: &mut String, findings: &Findings) {
+    let joint = &findings.joint;
+    let system = joint.display;
+    heading(out, "Duty states");
+    let unit = |measure| display_unit(measure, system).name;
+    let mut table = table(&[
+        "state".to_owned(),
+        "pair".to_owned(),
+        unit(Measure::Pressure).to_owned(),
+        format!("torque {}", unit(Measure::Torque)),
+        format!("axial {}", unit(Measure::Force)),
+        "slip".to_owned(),
+        "strength".to_owned(),
+    ]);
+    for (state, duty) in joint.duty.iter().zip(&findings.duty) {
+        for (pair, found) in [("loosest", &duty.loosest), ("tightest", &duty.tightest)] {
+            let least = found.rings.iter().filter_map(|stress| stress.safety).min_by(f64::total_cmp);
+            let name = if pair == "loosest" { plain(&state.name) } else { String::new() };
+            table.add_row(vec![
+                name,
+                pair.to_owned(),
+                show(Measure::Pressure, found.pressure, system).number,
+                show(Measure::Torque, found.torque_capacity, system).number,
+                show(Measure::Force, found.axial_capacity, system).number,
+                found.slip_safety.map_or_else(|| "-".to_owned(), safety),
+                least.map_or_else(|| "-".to_owned(), safety),
+            ]);
+        }
+    }
+    print_table(out, table, 2);
+}
+
+fn assembly(out: &mut String, findings: &Findings) {
+    let joint = &findings.joint;
+    let system = joint.display;
+    let assembly = &findings.assembly;
+    heading(out, "Assembly");
+    let force = |value| show(Measure::Force, value, system).to_string();
+    let chosen = |is: bool| if is { "* " } else { "  " };
+    let method = joint.assembly.method;
+    let press = &assembly.press;
+    paragraph(
+        out,
+        chosen(method == Method::Press),
+        &format!(
+            "press: peak {} (loosest pair, low friction) to {} (tightest pair, high friction); look for a press of {}",
+            force(press.loosest.peak_force),
+            force(press.tightest.peak_force),
+            force(assembly.press_rating)
+        ),
+    );
+    paragraph(out, chosen(method == Method::HeatHub), &assembly.heat_hub.statement);
+    paragraph(out, chosen(method == Method::ChillShaft), &assembly.chill_shaft.statement);
+    for bath in &assembly.baths {
+        let is_chosen = method == Method::HeatAndChill && bath.bath == joint.assembly.bath;
+        paragraph(out, chosen(is_chosen), &bath.statement);
+    }
+    paragraph(
+        out,
+        "  ",
+        &format!(
+            "thermal joining opens {} for the tightest pair, of which {} is clearance; * marks the chosen method",
+            show(Measure::Deviation, assembly.needed, system),
+            show(Measure::Deviation, assembly.clearance, system)
+        ),
+    );
+}
+
+fn defaults(out: &mut String, findings: &Findings) {
+    if findings.joint.defaults.is_empty() {
+        return;
+    }
+    heading(out, "Defaults taken");
+    for default in &findings.joint.defaults {
+        paragraph(out, "  ", &format!("{}: {} ({})", default.key, default.value, default.source));
+    }
+}
+
+fn cautions(out: &mut String, findings: &Findings) {
+    if findings.cautions.is_empty() {
+        return;
+    }
+    heading(out, "Cautions");
+    for caution in &findings.cautions {
+        paragraph(out, "! ", &caution.text);
+    }
+}
+
+fn notes(out: &mut String, findings: &Findings) {
+    heading(out, "Notes");
+    for note in &findings.notes {
+        paragraph(out, "  ", note);
+    }
+}
