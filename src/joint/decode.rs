@@ -119,7 +119,9 @@ impl<'t> Value<'t> {
     fn known_entries(&self, entries: &'t [Entry], known: &'static [&'static str]) -> Vec<(&'t str, NodeId)> {
         let mut kept = Vec::with_capacity(entries.len());
         for entry in entries {
-            if entry.repeated {
+            if self.faults.full() {
+                self.faults.count();
+            } else if entry.repeated {
                 let fault = Fault::key(entry.value, format!("`{}` stands twice in this section", entry.key))
                     .help("keep one of the two");
                 self.faults.add(fault);

@@ -25,7 +25,7 @@ pub(crate) const NOT_YET: &[&str] = &[
 ];
 
 /// The sections with their keys, for a key that was put into the wrong one.
-const SECTIONS: &[(&str, &[&str])] = &[
+pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
     ("shaft", &["name", "material", "bore", "roughness", "section"]),
     ("hub", &["name", "material", "outer_diameter", "roughness", "section"]),
     ("fit", &["hole", "measured"]),

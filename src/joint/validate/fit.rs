@@ -7,7 +7,7 @@ use crate::joint::file::{FitKeys, JointFile, LimitKeys, MeasuredKeys};
 use crate::joint::leaf::{FitText, LimitsText};
 use crate::joint::tree::NodeId;
 use crate::joint::written::{At, Refused, TextOr, Written};
-use crate::quantity::{self, Kind, Length, UnitSystem};
+use crate::quantity::{self, Kind, Length, QuantityError, UnitSystem};
 use crate::tolerance::{FitCallout, Limits, Member, MemberCallout, ToleranceError};
 
 const EXAMPLE: &str = "H7/s6";
@@ -171,7 +171,12 @@ fn member(
 
 fn of_member_text(text: &str, member: Member) -> Result<MemberCallout, Refused> {
     if text.starts_with(|c: char| c.is_ascii_digit() || matches!(c, '±' | '+' | '-' | '.')) {
-        let (lower, upper) = quantity::parse_plus_minus(Kind::Length, text)?;
+        let (lower, upper) = quantity::parse_plus_minus(Kind::Length, text).map_err(|error| {
+            let both = "write ±10 um, or both deviations: {lower: 53 um, upper: 72 um}".to_owned();
+            let help =
+                if matches!(error, QuantityError::NotPlusMinus { .. }) { Some(both) } else { error.help() };
+            Refused { message: error.to_string(), help }
+        })?;
         return Ok(MemberCallout::Deviations(Limits { lower, upper }));
     }
     MemberCallout::parse(text, member)

@@ -204,7 +204,9 @@ fn in_place(draft: &Draft<'_>, node: NodeId) -> Option<Arc<Material>> {
     let record = match MaterialRecord::deserialize(draft.reader(node)) {
         Ok(record) => record,
         Err(refusal) => {
-            draft.faults.add(refusal.fault(node));
+            if !draft.faults.touch_within(draft.tree, node) {
+                draft.faults.add(refusal.fault(node));
+            }
             return None;
         }
     };
