@@ -10,11 +10,11 @@ use crate::assembly::AssemblyError;
 use crate::assembly::press;
 use crate::joint::{DutyState, Joint, Ring, SmoothingAt};
 use crate::material::{Kind, Range};
+use crate::mechanics::MechanicsError;
 use crate::mechanics::capacity;
 use crate::mechanics::criteria::{self, DuctileCriterion};
 use crate::mechanics::ring::{RingLoad, RingSection, Stress};
 use crate::mechanics::stack::{Stack, StackSolution};
-use crate::mechanics::MechanicsError;
 use crate::numerics::interpolation::InterpolationError;
 use crate::tolerance::Extremes;
 
@@ -73,7 +73,8 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         .collect::<Result<Vec<_>, FindingsError>>()?;
     let onset_of_yield = kernel.onset_of_yield()?;
     let assembly = assembly_of::assembly(&joint, &extremes)?;
-    let character = joint.fits.first().map_or(crate::tolerance::Character::Clearance, |fit| fit.limits.character());
+    let character =
+        joint.fits.first().map_or(crate::tolerance::Character::Clearance, |fit| fit.limits.character());
     let mut findings = Findings {
         joint,
         character,
@@ -112,8 +113,11 @@ fn pair_interferences(joint: &Joint) -> Extremes<PairInterference> {
             SmoothingAt::None => false,
         };
         let made: Vec<f64> = joint.fits.iter().map(|fit| pick(fit.limits.interference())).collect();
-        let smoothed: Vec<f64> =
-            made.iter().zip(&joint.smoothing.loss).map(|(made, loss)| after_smoothing(*made, *loss)).collect();
+        let smoothed: Vec<f64> = made
+            .iter()
+            .zip(&joint.smoothing.loss)
+            .map(|(made, loss)| after_smoothing(*made, *loss))
+            .collect();
         let effective = if takes_loss { smoothed.clone() } else { made.clone() };
         let lost = made.iter().zip(&effective).map(|(made, effective)| made - effective).collect();
         PairInterference { made, lost, effective, smoothed }
@@ -152,14 +156,16 @@ impl<'a> Kernel<'a> {
         })
     }
 
-    fn solve(&self, interference: &[f64], free_strain: &[f64]) -> Result<(Stack, StackSolution), MechanicsError> {
+    fn solve(
+        &self,
+        interference: &[f64],
+        free_strain: &[f64],
+    ) -> Result<(Stack, StackSolution), MechanicsError> {
         let stack = Stack {
             rings: self.sections.clone(),
             interference: interference.to_vec(),
             free_strain: free_strain.to_vec(),
-            inner_pressure: 0.0,
-            outer_pressure: 0.0,
-            angular_speed: 0.0,
+            ..Stack::default()
         };
         let solution = stack.solve()?;
         Ok((stack, solution))
@@ -175,8 +181,9 @@ impl<'a> Kernel<'a> {
         let pressure = grip(&solution);
         let friction = &self.joint.friction;
         let capacity = self.capacity(pressure, friction.holding.value.low);
-        let peak = |friction: f64| -> Result<f64, AssemblyError> {
-            Ok(press::peak_force(&assembly_of::press_input(self.joint, pressure, first(&pair.effective), friction))?)
+        let peak = |friction: f64| {
+            let input = assembly_of::press_input(self.joint, pressure, first(&pair.effective), friction);
+            press::peak_force(&input)
         };
         let release = |friction: f64| capacity::axial(friction, pressure, self.joint.diameter, self.engaged);
         Ok(PairFindings {
@@ -189,7 +196,10 @@ impl<'a> Kernel<'a> {
             rings: self.stresses(&stack, &solution)?,
             torque_capacity: capacity.torque,
             axial_capacity: capacity.axial,
-            press_force: Range { low: peak(friction.pressing.value.low)?, high: peak(friction.pressing.value.high)? },
+            press_force: Range {
+                low: peak(friction.pressing.value.low)?,
+                high: peak(friction.pressing.value.high)?,
+            },
             release_force: Range {
                 low: release(friction.release.value.low),
                 high: release(friction.release.value.high),
@@ -230,7 +240,12 @@ impl<'a> Kernel<'a> {
     }
 
     /// Onset of yield (or fracture) at the shop temperature, at rest: every stress is linear in the pressure.
+    ///
+    /// With more than two rings there is no one interference at which yield starts.
     fn onset_of_yield(&self) -> Result<Option<OnsetOfYield>, FindingsError> {
+        if self.sections.len() != 2 {
+            return Ok(None);
+        }
         let cold = vec![0.0; self.sections.len()];
         let unit = self.joint.diameter * 1e-3;
         let (stack, solution) = self.solve(&[unit], &cold)?;
@@ -285,10 +300,10 @@ pub(super) fn free_strains(joint: &Joint, temperatures: &[f64]) -> Result<Vec<f6
         .iter()
         .zip(temperatures)
         .map(|(ring, temperature)| {
-            ring.material.expansion.strain(*temperature).map_err(|cause| FindingsError::Expansion {
-                material: ring.material.name.clone(),
-                cause,
-            })
+            ring.material
+                .expansion
+                .strain(*temperature)
+                .map_err(|cause| FindingsError::Expansion { material: ring.material.name.clone(), cause })
         })
         .collect()
 }

@@ -110,18 +110,26 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
         ok,
         at: at.to_owned(),
     };
+    let (shaft, hub) = findings.joint.shaft_and_hub();
     let limit = assembly.hub_limit.as_ref().map(|(limit, _)| *limit);
     match findings.joint.assembly.method {
         Method::Press => {
             let force = assembly.press.tightest.peak_force;
             let allowed = findings.joint.require.press_force;
             let ok = allowed.is_none_or(|allowed| force <= allowed);
-            vec![verdict("peak press force", VerdictUnit::Force, allowed, Some(force), ok, "tightest pair, high friction")]
+            vec![verdict(
+                "peak press force",
+                VerdictUnit::Force,
+                allowed,
+                Some(force),
+                ok,
+                "tightest pair, high friction",
+            )]
         }
         Method::HeatHub => {
             let route = &assembly.heat_hub;
             vec![verdict(
-                "hub temperature",
+                &format!("{} temperature", hub.name),
                 VerdictUnit::Temperature,
                 limit,
                 route.temperature,
@@ -132,7 +140,7 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
         Method::ChillShaft => {
             let bath = assembly.baths.iter().find(|bath| bath.bath == findings.joint.assembly.bath);
             vec![verdict(
-                "shaft temperature",
+                &format!("{} temperature", shaft.name),
                 VerdictUnit::Temperature,
                 bath.map(|bath| bath.temperature),
                 assembly.chill_shaft.temperature,
@@ -145,7 +153,7 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
             let found = bath.and_then(|bath| bath.hub_temperature);
             let ok = found.is_some_and(|found| limit.is_none_or(|limit| found <= limit));
             vec![verdict(
-                "hub temperature besides the bath",
+                &format!("{} temperature besides the bath", hub.name),
                 VerdictUnit::Temperature,
                 limit,
                 found,

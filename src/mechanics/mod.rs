@@ -5,6 +5,8 @@
 pub mod capacity;
 pub mod criteria;
 mod error;
+pub mod influence;
+pub mod plastic;
 pub mod ring;
 pub mod stack;
 pub mod two_rings;

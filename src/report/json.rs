@@ -10,7 +10,7 @@ use serde::Serialize;
 use crate::findings::Findings;
 use crate::tolerance::callout::{Resolved, ResolvedMember};
 use crate::tolerance::{Limits, Member};
-use shape::{Document, ExtremeInterferences, MemberDocument, LimitsDocument, Microns};
+use shape::{Document, ExtremeInterferences, LimitsDocument, MemberDocument, Microns};
 
 /// The findings of a joint as JSON text with a line break at its end.
 pub fn to_json(findings: &Findings) -> String {

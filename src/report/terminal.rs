@@ -53,7 +53,8 @@ fn heading(out: &mut String, text: &str) {
 /// Wrapped text with a hanging indent.
 fn paragraph(out: &mut String, first: &str, text: &str) {
     let rest = " ".repeat(first.chars().count());
-    let options = textwrap::Options::new(WIDTH).initial_indent(first).subsequent_indent(&rest).break_words(false);
+    let options =
+        textwrap::Options::new(WIDTH).initial_indent(first).subsequent_indent(&rest).break_words(false);
     for wrapped in textwrap::wrap(text, options) {
         line(out, wrapped);
     }
@@ -78,7 +79,10 @@ fn title(out: &mut String, findings: &Findings) {
     paragraph(
         out,
         "",
-        &format!("{size}  {callout}: {} fit, interference {from} to {to} {unit}", character_name(findings.character)),
+        &format!(
+            "{size}  {callout}: {} fit, interference {from} to {to} {unit}",
+            character_name(findings.character)
+        ),
     );
     for (key, value) in &joint.set {
         paragraph(out, "set ", &plain(&format!("{key} = {value}")));
@@ -119,7 +123,11 @@ pub fn verdict_value(value: f64, unit: VerdictUnit, system: UnitSystem) -> Strin
 
 /// A safety factor, rounded down so that a printed figure never passes what the number fails.
 pub fn safety(value: f64) -> String {
-    if value >= 100.0 { "over 100".to_owned() } else { format!("{:.2}", (value * 100.0 + 1e-9).floor() / 100.0) }
+    if value >= 100.0 {
+        "over 100".to_owned()
+    } else {
+        format!("{:.2}", (value * 100.0 + 1e-9).floor() / 100.0)
+    }
 }
 
 fn answers(out: &mut String, findings: &Findings) {
@@ -140,7 +148,10 @@ fn answers(out: &mut String, findings: &Findings) {
         for (index, wrapped) in textwrap::wrap(&sentence, options).into_iter().enumerate() {
             if index == 0 {
                 let rest: String = wrapped.chars().skip(19).collect();
-                line(out, format!("{HEADING}{:10}{HEADING:#}{style}{word:9}{style:#}{rest}", name.to_uppercase()));
+                line(
+                    out,
+                    format!("{HEADING}{:10}{HEADING:#}{style}{word:9}{style:#}{rest}", name.to_uppercase()),
+                );
             } else {
                 line(out, wrapped);
             }
@@ -157,7 +168,8 @@ pub fn verdict_sentence(verdict: &Verdict, system: UnitSystem) -> String {
         VerdictUnit::Force => "at most",
         VerdictUnit::Temperature => "limit",
     };
-    let required = verdict.required.map_or_else(String::new, |number| format!(" ({bound} {})", value(number)));
+    let required =
+        verdict.required.map_or_else(String::new, |number| format!(" ({bound} {})", value(number)));
     format!("{} {found}{required}; {}", verdict.subject, verdict.at)
 }
 
@@ -180,9 +192,6 @@ fn print_table(out: &mut String, mut table: Table, numbers: usize) {
     }
 }
 
-
-
-
 fn extremes(out: &mut String, findings: &Findings) {
     heading(out, "Extreme pairs, shop temperature, at rest");
     let mut table = table(&["", "loosest", "mean", "tightest"].map(str::to_owned));
@@ -197,9 +206,15 @@ fn extremes(out: &mut String, findings: &Findings) {
 pub fn extreme_rows(findings: &Findings) -> Vec<(String, Extremes<Option<String>>)> {
     let joint = &findings.joint;
     let system = joint.display;
-    let measured = |name: &str, measure: Measure, value: fn(&PairFindings) -> f64| -> (String, Extremes<Option<String>>) {
+    let measured = |name: &str,
+                    measure: Measure,
+                    value: fn(&PairFindings) -> f64|
+     -> (String, Extremes<Option<String>>) {
         let unit = display_unit(measure, system).name;
-        (format!("{name}, {unit}"), findings.extremes.as_ref().map(|pair| Some(show(measure, value(pair), system).number)))
+        (
+            format!("{name}, {unit}"),
+            findings.extremes.as_ref().map(|pair| Some(show(measure, value(pair), system).number)),
+        )
     };
     let mut rows = vec![
         measured("interference", Measure::Deviation, |pair| pair.interference),

@@ -63,10 +63,29 @@ fn smoothing(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let rule = joint.smoothing.rule.as_str();
     match joint.smoothing.factor {
         Some(factor) => {
-            sheet.input("Rz_s", "roughness of the shaft", shaft.roughness.value * units.small_per_metre, units.small, &shaft.roughness.source);
-            sheet.input("Rz_h", "roughness of the hub bore", hub.roughness.value * units.small_per_metre, units.small, &hub.roughness.source);
+            sheet.input(
+                "Rz_s",
+                "roughness of the shaft",
+                shaft.roughness.value * units.small_per_metre,
+                units.small,
+                &shaft.roughness.source,
+            );
+            sheet.input(
+                "Rz_h",
+                "roughness of the hub bore",
+                hub.roughness.value * units.small_per_metre,
+                units.small,
+                &hub.roughness.source,
+            );
             sheet.input("f", "share of the peaks that flattens", factor, "", rule);
-            sheet.formula("G", "loss by smoothing", sym("f") * (sym("Rz_s") + sym("Rz_h")), units.small, rule, Some(loss * units.small_per_metre));
+            sheet.formula(
+                "G",
+                "loss by smoothing",
+                sym("f") * (sym("Rz_s") + sym("Rz_h")),
+                units.small,
+                rule,
+                Some(loss * units.small_per_metre),
+            );
         }
         None => sheet.input("G", "loss by smoothing", loss * units.small_per_metre, units.small, rule),
     }
@@ -77,7 +96,8 @@ fn smoothing(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         ("W_m", "U_m", "mean", lost_at_loosest, &findings.extremes.mean),
         ("W_max", "U_max", "tightest", lost_at_tightest, &findings.extremes.tightest),
     ] {
-        let source = if lost { "effective interference, loss taken" } else { "effective interference, loss kept" };
+        let source =
+            if lost { "effective interference, loss taken" } else { "effective interference, loss kept" };
         sheet.formula(
             symbol,
             &format!("interference that grips, {name} pair"),

@@ -36,7 +36,13 @@ fn stiffness(sheet: &mut Sheet, joint: &Joint, shaft: &Ring, hub: &Ring, units: 
             units.pressure,
             &material.youngs_modulus.source,
         );
-        sheet.input(&format!("nu_{index}"), &format!("Poisson's ratio of the {name}"), material.poisson.value, "", &material.poisson.source);
+        sheet.input(
+            &format!("nu_{index}"),
+            &format!("Poisson's ratio of the {name}"),
+            material.poisson.value,
+            "",
+            &material.poisson.source,
+        );
     }
     let _ = joint;
     sheet.formula("C_h", "flexibility of the hub", ratio("D", "d") + sym("nu_h"), "", LAME, None);
@@ -52,7 +58,13 @@ fn ratio(outer: &str, inner: &str) -> Expression {
 /// Free strains at the shop temperature; written as inputs since they are read from curves.
 fn shop_strain(sheet: &mut Sheet, findings: &Findings, shaft: &Ring, hub: &Ring, units: &Units) {
     let joint = &findings.joint;
-    sheet.input("T_shop", "shop temperature", units.degrees(joint.assembly.shop_temperature), units.temperature, "joint file");
+    sheet.input(
+        "T_shop",
+        "shop temperature",
+        units.degrees(joint.assembly.shop_temperature),
+        units.temperature,
+        "joint file",
+    );
     for (ring, symbol) in [(shaft, "eps_s"), (hub, "eps_h")] {
         let strain = ring.material.expansion.strain(joint.assembly.shop_temperature).unwrap_or(0.0);
         sheet.input(
@@ -96,8 +108,21 @@ fn capacity(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     sheet.input("L", "length of the hub", joint.length * units.per_metre, units.length, "joint file");
     sheet.input("r", "relief, carries nothing", joint.relief * units.per_metre, units.length, "joint file");
     let engaged = joint.engaged_length() * units.per_metre;
-    sheet.formula("l", "length that carries", sym("L") - sym("r"), units.length, "length less relief", Some(engaged));
-    sheet.input("mu_h", "friction against slip, low end", joint.friction.holding.value.low, "", &joint.friction.holding.source);
+    sheet.formula(
+        "l",
+        "length that carries",
+        sym("L") - sym("r"),
+        units.length,
+        "length less relief",
+        Some(engaged),
+    );
+    sheet.input(
+        "mu_h",
+        "friction against slip, low end",
+        joint.friction.holding.value.low,
+        "",
+        &joint.friction.holding.source,
+    );
     let pair = &findings.extremes.loosest;
     sheet.formula(
         "F_cap",
@@ -131,8 +156,22 @@ fn hub_stress(sheet: &mut Sheet, findings: &Findings, hub: &Ring, units: &Units)
     let pair: &PairFindings = &findings.extremes.tightest;
     let Some(stress) = pair.rings.last() else { return };
     let pa = |value: f64| Some(value * units.per_pascal);
-    sheet.formula("sigma_rh", "radial stress at the hub bore", -sym("p_max"), units.pressure, LAME, pa(stress.bore.radial));
-    sheet.formula("sigma_th", "hoop stress at the hub bore", sym("p_max") * ratio("D", "d"), units.pressure, LAME, pa(stress.bore.hoop));
+    sheet.formula(
+        "sigma_rh",
+        "radial stress at the hub bore",
+        -sym("p_max"),
+        units.pressure,
+        LAME,
+        pa(stress.bore.radial),
+    );
+    sheet.formula(
+        "sigma_th",
+        "hoop stress at the hub bore",
+        sym("p_max") * ratio("D", "d"),
+        units.pressure,
+        LAME,
+        pa(stress.bore.hoop),
+    );
     let equivalent = match (hub.material.kind, findings.joint.criterion) {
         (Kind::Brittle, _) => greatest([num("0"), sym("sigma_th")]),
         (_, DuctileCriterion::VonMises) => von_mises("sigma_rh", "sigma_th"),

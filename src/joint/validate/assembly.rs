@@ -10,7 +10,7 @@ use crate::quantity::{Angle, Kind, Temperature, written};
 /// Clearance while joining, as a share of the diameter, when the file is silent.
 const CLEARANCE_SHARE: f64 = 1e-3;
 const CLEARANCE_SOURCE: &str =
-    "a thousandth of the diameter, after DIN 7190 (lecture sheet on interference fits, second-hand)";
+    "a thousandth of the diameter, after DIN 7190 (course sheet on interference fits, second-hand)";
 
 /// Angle of the lead-in chamfer, degrees, when the file is silent.
 const CHAMFER_DEGREES: f64 = 5.0;

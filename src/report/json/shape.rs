@@ -3,7 +3,9 @@
 use serde::Serialize;
 
 use super::{finite, microns};
-use crate::findings::{DutyFindings, Findings, PairFindings, Question, RingStress, StateFindings, Verdict, VerdictUnit};
+use crate::findings::{
+    DutyFindings, Findings, PairFindings, Question, RingStress, StateFindings, Verdict, VerdictUnit,
+};
 use crate::joint::{Joint, Method};
 use crate::tolerance::{Extremes, FitLimits};
 
@@ -258,7 +260,12 @@ impl Document {
                 pressure_mpa: mega(onset.pressure),
                 interference_um: microns(onset.interference),
             }),
-            duty: joint.duty.iter().zip(&findings.duty).map(|(state, found)| Duty::of(state, found)).collect(),
+            duty: joint
+                .duty
+                .iter()
+                .zip(&findings.duty)
+                .map(|(state, found)| Duty::of(state, found))
+                .collect(),
             assembly: Assembly::of(findings),
             verdicts: findings.verdicts.iter().map(VerdictLine::of).collect(),
             defaults: joint
@@ -299,7 +306,9 @@ impl Pair {
     fn of(joint: &Joint, pair: &PairFindings, pick: fn(Extremes<f64>) -> f64) -> Self {
         let shaft = pair.rings.first();
         let hub = pair.rings.last();
-        let of = |ring: Option<&RingStress>, value: fn(&RingStress) -> f64| ring.and_then(|ring| mega(value(ring)));
+        let of = |ring: Option<&RingStress>, value: fn(&RingStress) -> f64| {
+            ring.and_then(|ring| mega(value(ring)))
+        };
         Self {
             interference_um: microns(pair.interference),
             smoothing_um: microns(pair.smoothing),
@@ -330,7 +339,12 @@ impl Pair {
                     open: pair.pressure <= 0.0,
                 })
                 .collect(),
-            rings: joint.rings.iter().zip(&pair.rings).map(|(ring, stress)| RingLine::of(&ring.name, stress)).collect(),
+            rings: joint
+                .rings
+                .iter()
+                .zip(&pair.rings)
+                .map(|(ring, stress)| RingLine::of(&ring.name, stress))
+                .collect(),
         }
     }
 }
@@ -389,7 +403,9 @@ impl Assembly {
         let (method, hub, shaft) = match plan.method {
             Method::Press => ("press", None, None),
             Method::HeatHub => ("heat hub", assembly.heat_hub.temperature, Some(plan.shop_temperature)),
-            Method::ChillShaft => ("chill shaft", Some(plan.shop_temperature), assembly.chill_shaft.temperature),
+            Method::ChillShaft => {
+                ("chill shaft", Some(plan.shop_temperature), assembly.chill_shaft.temperature)
+            }
             Method::HeatAndChill => (
                 "heat and chill",
                 chosen.and_then(|bath| bath.hub_temperature),

@@ -1,0 +1,259 @@
+//! Check values of the closed forms: one ring, two rings, a stack, strength, capacity.
+//!
+//! Unless a test says otherwise the numbers come from the closed form, computed independently with two methods
+//! and written to the digits shown; the equation's textbook stands at each test. All steel: 200 GPa, ν = 0.3,
+//! 7800 kg/m³, 12e-6 /K.
+
+mod printed;
+
+use approx::assert_relative_eq;
+use hubgrip::mechanics::criteria::{greatest_principal, tresca, von_mises};
+use hubgrip::mechanics::ring::{RingLoad, RingSection};
+use hubgrip::mechanics::stack::Stack;
+use hubgrip::mechanics::two_rings::TwoRings;
+use hubgrip::mechanics::{MechanicsError, capacity};
+use printed::{MPA, assert_prints};
+
+const MICRON: f64 = 1e-6;
+
+fn steel_ring(inner_mm: f64, outer_mm: f64) -> RingSection {
+    RingSection::new(inner_mm * 1e-3, outer_mm * 1e-3, 200e9, 0.3, 7800.0).unwrap()
+}
+
+fn steel_stack(radii_mm: &[f64], interference_um: &[f64]) -> Stack {
+    Stack {
+        rings: radii_mm.windows(2).map(|faces| steel_ring(faces[0], faces[1])).collect(),
+        interference: interference_um.iter().map(|value| value * MICRON).collect(),
+        free_strain: vec![0.0; radii_mm.len() - 1],
+        ..Stack::default()
+    }
+}
+
+fn steel_joint() -> TwoRings {
+    TwoRings {
+        diameter: 0.05,
+        hub_outer_diameter: 0.1,
+        shaft_bore: 0.0,
+        hub_youngs_modulus: 200e9,
+        hub_poisson: 0.3,
+        shaft_youngs_modulus: 200e9,
+        shaft_poisson: 0.3,
+    }
+}
+
+#[test]
+fn pressure_of_two_rings() {
+    // Timoshenko & Goodier, Theory of Elasticity, § 28.
+    assert_prints(steel_joint().pressure(50.0 * MICRON).unwrap(), "75.000000", MPA);
+    let aluminium_hub =
+        TwoRings { shaft_bore: 0.02, hub_youngs_modulus: 70e9, hub_poisson: 0.33, ..steel_joint() };
+    assert_prints(aluminium_hub.pressure(50.0 * MICRON).unwrap(), "29.473684", MPA);
+    assert_eq!(steel_joint().pressure(-10.0 * MICRON).unwrap(), 0.0);
+}
+
+#[test]
+fn one_ring_under_pressure() {
+    // Lamé; Timoshenko & Goodier, § 28.
+    let ring = steel_ring(25.0, 50.0);
+    let load = RingLoad { inner_pressure: 50e6, ..RingLoad::default() };
+    assert_prints(ring.stress_at(&load, 0.025).unwrap().hoop, "83.333333", MPA);
+    assert_prints(ring.stress_at(&load, 0.050).unwrap().hoop, "33.333333", MPA);
+    assert_prints(ring.stress_at(&load, 0.025).unwrap().radial, "-50.000000", MPA);
+    assert!(ring.stress_at(&load, 0.050).unwrap().radial.abs() < 1e-6);
+    assert_prints(ring.displacement_at(&load, 0.025).unwrap(), "12.2916667", MICRON);
+    assert_prints(ring.displacement_at(&load, 0.050).unwrap(), "8.33333333", MICRON);
+}
+
+#[test]
+fn one_ring_turning() {
+    // Timoshenko & Goodier, § 32.
+    let ring = steel_ring(25.0, 50.0);
+    let load = RingLoad { angular_speed: 1000.0, ..RingLoad::default() };
+    assert_prints(ring.stress_at(&load, 0.025).unwrap().hoop, "16.940625", MPA);
+    assert_prints(ring.stress_at(&load, 0.050).unwrap().hoop, "7.434375", MPA);
+    assert_prints(ring.displacement_at(&load, 0.025).unwrap(), "2.117578125", MICRON);
+    assert_prints(ring.displacement_at(&load, 0.050).unwrap(), "1.85859375", MICRON);
+}
+
+#[test]
+fn one_solid_ring_turning() {
+    // Timoshenko & Goodier, § 32; a solid ring is not the limit of a vanishing bore, which doubles the stress.
+    let solid = steel_ring(0.0, 25.0);
+    let load = RingLoad { angular_speed: 1000.0, ..RingLoad::default() };
+    let centre = solid.stress_at(&load, 0.0).unwrap();
+    assert_prints(centre.radial, "2.0109375", MPA);
+    assert_prints(centre.hoop, "2.0109375", MPA);
+    assert_prints(solid.stress_at(&load, 0.025).unwrap().hoop, "0.853125", MPA);
+    assert_prints(solid.displacement_at(&load, 0.025).unwrap(), "0.106640625", MICRON);
+    let pinhole = steel_ring(25e-6, 25.0);
+    let at_hole = pinhole.stress_at(&load, pinhole.inner_radius()).unwrap();
+    assert_relative_eq!(at_hole.hoop, 2.0 * centre.hoop, max_relative = 1e-9);
+}
+
+#[test]
+fn strength_criteria_at_a_hub_bore() {
+    // Timoshenko & Goodier, § 28: σφ = p (1 + Q²)/(1 − Q²), σv = p √(3 + Q⁴)/(1 − Q²), σt = 2p/(1 − Q²), Q = 0.5.
+    let hub = steel_ring(25.0, 50.0);
+    let load = RingLoad { inner_pressure: 75e6, ..RingLoad::default() };
+    let bore = hub.stress_at(&load, 0.025).unwrap();
+    assert_prints(bore.hoop, "125.000000", MPA);
+    assert_prints(von_mises(bore.radial, bore.hoop), "175.000000", MPA);
+    assert_prints(tresca(bore.radial, bore.hoop), "200.000000", MPA);
+    assert_prints(greatest_principal(bore.radial, bore.hoop), "125.000000", MPA);
+}
+
+#[test]
+fn strength_criteria_of_a_shaft() {
+    // Timoshenko & Goodier, § 28: hollow bore σφ = −2p/(1 − q²), σr = 0; solid σr = σφ = −p everywhere.
+    let pressed = |pressure: f64| RingLoad { outer_pressure: pressure, ..RingLoad::default() };
+    let hollow = steel_ring(10.0, 25.0);
+    let bore = hollow.stress_at(&pressed(126e6), 0.010).unwrap();
+    assert!(bore.radial.abs() < 1e-6);
+    // Yield of the hollow shaft, q = 0.4, at 300 MPa: p = 126 MPa by Tresca and von Mises alike.
+    assert_prints(-bore.hoop, "300.000000", MPA);
+    assert_prints(tresca(bore.radial, bore.hoop), "300.000000", MPA);
+    assert_prints(von_mises(bore.radial, bore.hoop), "300.000000", MPA);
+    let solid = steel_ring(0.0, 25.0);
+    for radius in [0.0, 0.010, 0.025] {
+        let stress = solid.stress_at(&pressed(300e6), radius).unwrap();
+        assert_prints(stress.radial, "-300.000000", MPA);
+        assert_prints(stress.hoop, "-300.000000", MPA);
+        // Leaving out the axial principal stress zero would give no shear at all here.
+        assert_prints(tresca(stress.radial, stress.hoop), "300.000000", MPA);
+        assert_prints(von_mises(stress.radial, stress.hoop), "300.000000", MPA);
+        assert_eq!(greatest_principal(stress.radial, stress.hoop), 0.0);
+    }
+}
+
+#[test]
+fn greatest_pressure_in_a_brittle_hub() {
+    // Rankine (greatest principal stress): p (1 + Q²)/(1 − Q²) ≤ Rm/S; Rm = 250 MPa, S = 2.5, Q = 0.5.
+    let hub = steel_ring(25.0, 50.0);
+    let load = RingLoad { inner_pressure: 60e6, ..RingLoad::default() };
+    let bore = hub.stress_at(&load, 0.025).unwrap();
+    assert_prints(greatest_principal(bore.radial, bore.hoop), "100.000000", MPA);
+    assert_prints(250e6 / 2.5 / steel_joint().hub_hoop_factor(), "60.000000", MPA);
+}
+
+#[test]
+fn pressures_of_three_rings() {
+    // Lamé for each ring; Timoshenko & Goodier, § 28.
+    let radii = [10.0, 20.0, 30.0, 50.0];
+    let stack = steel_stack(&radii, &[20.0, 30.0]);
+    let solution = stack.solve().unwrap();
+    assert_prints(solution.pressures[0], "57.812500", MPA);
+    assert_prints(solution.pressures[1], "40.740741", MPA);
+    let filled = Stack { inner_pressure: 100e6, ..stack }.solve().unwrap();
+    assert_prints(filled.pressures[0], "79.687500", MPA);
+    assert_prints(filled.pressures[1], "48.148148", MPA);
+}
+
+#[test]
+fn influence_of_pressure_on_the_gaps() {
+    // Lamé; Timoshenko & Goodier, § 28. r M is symmetric by Betti's theorem: 20 · 3.6 = 30 · 2.4.
+    let influence = steel_stack(&[10.0, 20.0, 30.0, 50.0], &[20.0, 30.0]).influence().unwrap();
+    assert_prints(influence.diagonal[0], "4.2666667", 1e-13);
+    assert_prints(influence.upper[0], "-3.6", 1e-13);
+    assert_prints(influence.lower[1], "-2.4", 1e-13);
+    assert_prints(influence.diagonal[1], "7.0875", 1e-13);
+    assert_relative_eq!(0.020 * influence.upper[0], 0.030 * influence.lower[1], max_relative = 1e-12);
+    assert_eq!((influence.lower[0], influence.upper[1]), (0.0, 0.0));
+}
+
+#[test]
+fn a_clearance_that_its_neighbour_closes_and_one_that_stays_open() {
+    // Lamé for each ring with p ≥ 0, gap ≥ 0, p · gap = 0 at each interface.
+    let radii = [10.0, 20.0, 30.0, 50.0];
+    let closed = steel_stack(&radii, &[20.0, -10.0]).solve().unwrap();
+    assert_prints(closed.pressures[0], "24.479167", MPA);
+    assert_prints(closed.pressures[1], "1.234568", MPA);
+    let open = steel_stack(&radii, &[20.0, -20.0]).solve().unwrap();
+    assert_prints(open.pressures[0], "23.4375", MPA);
+    assert_eq!(open.pressures[1], 0.0);
+    assert_eq!(open.open, [false, true]);
+    assert_prints(open.gaps[1], "4.375", MICRON);
+}
+
+#[test]
+fn pressure_falls_with_the_square_of_the_speed() {
+    // Timoshenko & Goodier, § 32: p = p(0) − κ ω², κ = 6.0328125 Pa s².
+    let turning = Stack { angular_speed: 1000.0, ..steel_stack(&[0.0, 25.0, 50.0], &[50.0]) };
+    assert_prints(turning.solve().unwrap().pressures[0], "68.9671875", MPA);
+    assert_relative_eq!(turning.solve().unwrap().pressures[0], 75e6 - 6.0328125e6, max_relative = 1e-13);
+}
+
+#[test]
+fn pressure_of_a_warm_aluminium_hub() {
+    // Lamé with the free strain α ΔT; hub 70 GPa, 0.33, 23e-6 /K.
+    let joint = |hub_rise: f64, shaft_rise: f64| {
+        let mut stack = steel_stack(&[0.0, 25.0, 50.0], &[50.0]);
+        stack.rings[1] = RingSection::new(0.025, 0.05, 70e9, 0.33, 2700.0).unwrap();
+        stack.free_strain = vec![12e-6 * shaft_rise, 23e-6 * hub_rise];
+        stack.solve().unwrap().pressures[0]
+    };
+    assert_prints(joint(0.0, 0.0), "31.226766", MPA);
+    assert_prints(joint(40.0, 40.0), "17.486989", MPA);
+    assert_prints(joint(20.0, 0.0), "16.862454", MPA);
+}
+
+#[test]
+fn capacity_and_combined_load() {
+    // Equilibrium; Kollmann, Welle-Nabe-Verbindungen (1984): 75 MPa, 50 mm by 40 mm, friction 0.12.
+    let (torque, axial) = (capacity::torque(0.12, 75e6, 0.05, 0.04), capacity::axial(0.12, 75e6, 0.05, 0.04));
+    assert_prints(torque, "1413.71669", 1.0);
+    assert_prints(axial, "56548.6678", 1.0);
+    assert_prints(capacity::slip_safety(500.0, 5000.0, torque, axial), "2.74301330", 1.0);
+    let weaker = capacity::axial(0.1, 75e6, 0.05, 0.04);
+    assert_prints(capacity::slip_safety(500.0, 5000.0, torque, weaker), "2.70819002", 1.0);
+    // Isotropic friction: the resultant √(F² + (2T/d)²) against µ p π d L.
+    let resultant = 5000.0_f64.hypot(2.0 * 500.0 / 0.05);
+    assert_relative_eq!(
+        capacity::slip_safety(500.0, 5000.0, torque, axial),
+        axial / resultant,
+        max_relative = 1e-12
+    );
+    assert_eq!(capacity::slip_safety(0.0, 0.0, torque, axial), f64::INFINITY);
+    assert_eq!(capacity::slip_safety(1.0, 0.0, 0.0, 0.0), 0.0);
+}
+
+#[test]
+fn what_no_formula_allows_is_an_error() {
+    let outside = |result: Result<RingSection, MechanicsError>| {
+        matches!(result, Err(MechanicsError::OutsideRange { .. }))
+    };
+    assert!(outside(RingSection::new(0.05, 0.05, 200e9, 0.3, 7800.0)));
+    assert!(outside(RingSection::new(-0.01, 0.05, 200e9, 0.3, 7800.0)));
+    assert!(outside(RingSection::new(0.01, 0.05, 0.0, 0.3, 7800.0)));
+    assert!(outside(RingSection::new(0.01, 0.05, 200e9, 0.5, 7800.0)));
+    assert!(outside(RingSection::new(0.01, 0.05, 200e9, 0.3, -1.0)));
+    assert!(outside(RingSection::new(0.01, f64::INFINITY, 200e9, 0.3, 1.0)));
+    assert!(outside(RingSection::new(0.01, f64::NAN, 200e9, 0.3, 1.0)));
+    assert!(TwoRings { shaft_bore: 0.05, ..steel_joint() }.pressure(1e-5).is_err());
+    assert!(TwoRings { hub_outer_diameter: 0.05, ..steel_joint() }.pressure(1e-5).is_err());
+    assert!(TwoRings { hub_youngs_modulus: 0.0, ..steel_joint() }.pressure(1e-5).is_err());
+    assert!(TwoRings { hub_poisson: 0.6, ..steel_joint() }.pressure(1e-5).is_err());
+    assert!(steel_joint().pressure(f64::NAN).is_err());
+
+    let good = steel_stack(&[0.0, 25.0, 50.0], &[50.0]);
+    assert!(matches!(
+        Stack { inner_pressure: 1e6, ..good.clone() }.solve(),
+        Err(MechanicsError::OutsideRange { .. })
+    ));
+    let mut apart = good.clone();
+    apart.rings[1] = steel_ring(26.0, 50.0);
+    assert!(matches!(apart.solve(), Err(MechanicsError::RingsDoNotMeet { inner: 0, .. })));
+    assert!(matches!(
+        Stack { interference: vec![], ..good.clone() }.solve(),
+        Err(MechanicsError::WrongCount { .. })
+    ));
+    assert!(matches!(
+        Stack { free_strain: vec![0.0], ..good.clone() }.solve(),
+        Err(MechanicsError::WrongCount { .. })
+    ));
+    assert!(Stack { interference: vec![f64::NAN], ..good.clone() }.solve().is_err());
+    assert!(Stack { outer_pressure: f64::INFINITY, ..good.clone() }.solve().is_err());
+    assert!(Stack { inner_pressure: f64::NAN, ..good }.solve().is_err());
+    let ring = steel_ring(25.0, 50.0);
+    assert!(ring.stress_at(&RingLoad::default(), 0.020).is_err());
+    assert!(ring.stress_at(&RingLoad { inner_pressure: f64::NAN, ..RingLoad::default() }, 0.030).is_err());
+}
