@@ -5,6 +5,7 @@
 pub mod capacity;
 pub mod criteria;
 mod error;
+pub mod governing;
 pub mod influence;
 pub mod ring;
 pub mod stack;
