@@ -35,4 +35,12 @@ pub enum MechanicsError {
         /// How many rings.
         rings: usize,
     },
+    /// A search that did not settle.
+    #[error("{what} did not settle after {steps} steps")]
+    NotSettled {
+        /// What was sought.
+        what: &'static str,
+        /// Steps taken.
+        steps: usize,
+    },
 }

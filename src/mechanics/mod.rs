@@ -8,6 +8,7 @@ mod error;
 pub mod governing;
 pub mod influence;
 pub mod ring;
+pub mod rotation;
 pub mod stack;
 pub mod two_rings;
 
