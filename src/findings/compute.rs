@@ -70,7 +70,8 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
     let onset_of_yield = onset_of_yield(&joint, &kernel)?;
     let service = service::service(&joint, &kernel, &pairs)?;
     let assembly = assembly_of::assembly(&joint, &extremes)?;
-    let character = joint.fits.get(joint.last_interface()).map_or(Character::Clearance, |fit| fit.limits.character());
+    let character =
+        joint.fits.get(joint.last_interface()).map_or(Character::Clearance, |fit| fit.limits.character());
     let mut findings = Findings {
         joint,
         character,

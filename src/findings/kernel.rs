@@ -36,7 +36,8 @@ pub(super) fn pair_interferences(joint: &Joint) -> Extremes<PairInterference> {
         };
         let made: Vec<f64> = joint.fits.iter().map(|fit| pick(fit.limits.interference())).collect();
         let losses = joint.smoothing.loss.iter().copied().chain(std::iter::repeat(0.0));
-        let smoothed: Vec<f64> = made.iter().zip(losses).map(|(made, loss)| after_smoothing(*made, loss)).collect();
+        let smoothed: Vec<f64> =
+            made.iter().zip(losses).map(|(made, loss)| after_smoothing(*made, loss)).collect();
         let effective = if takes_loss { smoothed.clone() } else { made.clone() };
         PairInterference { made, effective, smoothed }
     };
@@ -110,10 +111,10 @@ pub(super) fn free_strains(joint: &Joint, temperatures: &[f64]) -> Result<Vec<f6
         .iter()
         .zip(temperatures)
         .map(|(ring, temperature)| {
-            ring.material.expansion.strain(*temperature).map_err(|cause| FindingsError::Expansion {
-                material: ring.material.name.clone(),
-                cause,
-            })
+            ring.material
+                .expansion
+                .strain(*temperature)
+                .map_err(|cause| FindingsError::Expansion { material: ring.material.name.clone(), cause })
         })
         .collect()
 }
@@ -162,7 +163,11 @@ impl<'a> Kernel<'a> {
     }
 
     /// Mean contact pressure over the length at the interface joined last.
-    pub(super) fn pressure(&self, interference: &[f64], condition: &Condition) -> Result<f64, MechanicsError> {
+    pub(super) fn pressure(
+        &self,
+        interference: &[f64],
+        condition: &Condition,
+    ) -> Result<f64, MechanicsError> {
         Ok(mean_pressure(&self.solve(interference, condition)?, self.joint.last_interface()))
     }
 
@@ -190,7 +195,10 @@ impl<'a> Kernel<'a> {
             torque_capacity: least(&interfaces, |interface| interface.torque_capacity),
             axial_capacity: least(&interfaces, |interface| interface.axial_capacity),
             interfaces,
-            press_force: Range { low: peak(friction.pressing.value.low)?, high: peak(friction.pressing.value.high)? },
+            press_force: Range {
+                low: peak(friction.pressing.value.low)?,
+                high: peak(friction.pressing.value.high)?,
+            },
             release_force: Range {
                 low: release(friction.release.value.low),
                 high: release(friction.release.value.high),
@@ -198,7 +206,11 @@ impl<'a> Kernel<'a> {
         })
     }
 
-    pub(super) fn state(&self, state: &DutyState, pair: &PairInterference) -> Result<StateFindings, FindingsError> {
+    pub(super) fn state(
+        &self,
+        state: &DutyState,
+        pair: &PairInterference,
+    ) -> Result<StateFindings, FindingsError> {
         let condition = Condition::of_state(self.joint, state)?;
         let solved = self.solve(&pair.effective, &condition)?;
         let interfaces = self.interfaces(pair, &solved);
@@ -239,7 +251,9 @@ impl<'a> Kernel<'a> {
                 let diameter = self.joint.interface_diameter(k);
                 let axial: f64 = solved
                     .iter()
-                    .map(|piece| capacity::axial(friction, at(&piece.solution.pressures, k), diameter, piece.length))
+                    .map(|piece| {
+                        capacity::axial(friction, at(&piece.solution.pressures, k), diameter, piece.length)
+                    })
                     .sum();
                 let gap = solved.iter().map(|piece| at(&piece.solution.gaps, k)).fold(0.0, f64::max);
                 InterfaceFindings {

@@ -72,10 +72,12 @@ fn plastic(
     pairs: &Extremes<PairInterference>,
 ) -> Result<Option<PlasticFindings>, FindingsError> {
     let [shaft, hub] = joint.rings.as_slice() else { return Ok(None) };
-    let (Some(hub_yield), Some(shaft_yield)) = (hub.strength.yield_strength, shaft.strength.yield_strength) else {
+    let (Some(hub_yield), Some(shaft_yield)) = (hub.strength.yield_strength, shaft.strength.yield_strength)
+    else {
         return Ok(None);
     };
-    if !joint.slices.is_empty() || hub.material.kind != Kind::Ductile || shaft.material.kind != Kind::Ductile {
+    if !joint.slices.is_empty() || hub.material.kind != Kind::Ductile || shaft.material.kind != Kind::Ductile
+    {
         return Ok(None);
     }
     let solved = PlasticJoint::new(HubYield {
@@ -114,12 +116,14 @@ fn steps(
     if joint.rings.len() == 2 {
         return Ok(Vec::new());
     }
-    let mut interference: Vec<f64> = (0..joint.fits.len()).map(|k| -APART * joint.interface_diameter(k)).collect();
+    let mut interference: Vec<f64> =
+        (0..joint.fits.len()).map(|k| -APART * joint.interface_diameter(k)).collect();
     joint
         .order
         .iter()
         .map(|joined| {
-            if let (Some(own), Some(made)) = (interference.get_mut(*joined), tightest.effective.get(*joined)) {
+            if let (Some(own), Some(made)) = (interference.get_mut(*joined), tightest.effective.get(*joined))
+            {
                 *own = *made;
             }
             Ok(OrderStep { interface: *joined, rings: kernel.ring_stresses(&interference, &kernel.shop)? })

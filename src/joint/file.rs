@@ -6,7 +6,10 @@
 use schemars::JsonSchema;
 use serde::Deserialize;
 
-use super::leaf::{AllowWord, BathWord, CriterionWord, FlagWord, YieldRuleWord, DisplayWord, FrictionText, LimitsText, LubricationWord};
+use super::leaf::{
+    AllowWord, BathWord, CriterionWord, DisplayWord, FlagWord, FrictionText, LimitsText, LubricationWord,
+    YieldRuleWord,
+};
 use super::leaf::{FitText, MaterialName, UncertainSize};
 use super::leaf::{MaterialKeys, MethodWord, Roughness, SmoothingAtWord, SmoothingText, Version};
 use super::written::{At, Free, NotYet, TextOr, Written};
@@ -16,13 +19,7 @@ use crate::quantity::{Angle, Force, Length, Number, NumberRange, Pressure, Speed
 pub const VERSION: u32 = 1;
 
 /// Keys that are known but whose subject is not calculated yet, in any section.
-pub(crate) const NOT_YET: &[&str] = &[
-    "rings",
-    "fits",
-    "order",
-    "bearing",
-    "steps",
-];
+pub(crate) const NOT_YET: &[&str] = &["rings", "fits", "order", "bearing", "steps"];
 
 /// The sections with their keys, for a key that was put into the wrong one.
 pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
@@ -57,7 +54,15 @@ pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
     ("smoothing", &["factor", "rule", "at"]),
     (
         "require",
-        &["slip_safety", "yield_safety", "fracture_safety", "press_force", "allow", "plastic_share", "yield_rule"],
+        &[
+            "slip_safety",
+            "yield_safety",
+            "fracture_safety",
+            "press_force",
+            "allow",
+            "plastic_share",
+            "yield_rule",
+        ],
     ),
 ];
 

@@ -63,7 +63,10 @@ impl StateSheet<'_> {
             let (where_, what) = if rise == 0.0 {
                 ("", format!("expansion of the {} from 20 °C", ring.name))
             } else {
-                (" at its inner face", format!("expansion of the {} from 20 °C, mean over its section", ring.name))
+                (
+                    " at its inner face",
+                    format!("expansion of the {} from 20 °C, mean over its section", ring.name),
+                )
             };
             sheet.input(
                 &format!("T_{letter}{}", self.tag),
@@ -73,7 +76,13 @@ impl StateSheet<'_> {
                 "joint file",
             );
             let mean = strain + rise * mean_share(ring);
-            sheet.input(&self.name(&format!("eps_{letter}")), &what, mean, "", &ring.material.expansion.source);
+            sheet.input(
+                &self.name(&format!("eps_{letter}")),
+                &what,
+                mean,
+                "",
+                &ring.material.expansion.source,
+            );
         }
     }
 
@@ -89,10 +98,17 @@ impl StateSheet<'_> {
         for (letter, ring) in [("s", shaft), ("h", hub)] {
             let density = ring.material.density.value * units.per_kilogram_per_cubic_metre;
             let what = format!("density of the {}", ring.name);
-            sheet.input(&self.name(&format!("rho_{letter}")), &what, density, units.density, &ring.material.density.source);
+            sheet.input(
+                &self.name(&format!("rho_{letter}")),
+                &what,
+                density,
+                units.density,
+                &ring.material.density.source,
+            );
         }
         let growth = |letter: &str, other: &str| -> Expression {
-            let (rho, nu, modulus) = (self.name(&format!("rho_{letter}")), format!("nu_{letter}"), format!("E_{letter}"));
+            let (rho, nu, modulus) =
+                (self.name(&format!("rho_{letter}")), format!("nu_{letter}"), format!("E_{letter}"));
             sym(&rho) * sym(&speed).power(2) * sym("d") / (num("16") * sym(&modulus))
                 * ((num("3") + sym(&nu)) * sym(other).power(2) + (num("1") - sym(&nu)) * sym("d").power(2))
         };
@@ -128,7 +144,8 @@ impl StateSheet<'_> {
             equilibrium,
             Some(pair.torque_capacity * units.per_newton_metre),
         );
-        let (moment, force) = (self.state.torque * units.per_newton_metre, self.state.axial_force * units.per_newton);
+        let (moment, force) =
+            (self.state.torque * units.per_newton_metre, self.state.axial_force * units.per_newton);
         sheet.input(&moment_name, "torque", moment, units.torque, "joint file");
         sheet.input(&force_name, "axial force", force, units.force, "joint file");
         if pair.pressure <= 0.0 {

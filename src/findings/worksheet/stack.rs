@@ -30,7 +30,13 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
             let flexibility = format!("{}/{}", units.length, units.pressure);
             let pressure = interface.pressure * units.per_pascal;
             input(sheet, "p_", &format!("pressure at interface {number}"), pressure, units.pressure);
-            input(sheet, "q_", "gap without contact pressure", influence.free_gaps[k] * units.per_metre, units.length);
+            input(
+                sheet,
+                "q_",
+                "gap without contact pressure",
+                influence.free_gaps[k] * units.per_metre,
+                units.length,
+            );
             input(sheet, "M_d", "gap by its own pressure", influence.diagonal[k] * scale, &flexibility);
             if k > 0 {
                 input(sheet, "M_i", "gap by the pressure inside", influence.lower[k] * scale, &flexibility);

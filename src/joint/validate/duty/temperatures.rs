@@ -26,7 +26,9 @@ pub(super) fn of_state(
 ) -> Option<Heat> {
     let keys = &item.value;
     match (&keys.inner_temperature, &keys.outer_temperature) {
-        (None, None) => uniform(draft, keys, state, rings, shop).map(|inner| Heat { inner, rises: Vec::new() }),
+        (None, None) => {
+            uniform(draft, keys, state, rings, shop).map(|inner| Heat { inner, rises: Vec::new() })
+        }
         (Some(inner), Some(outer)) => {
             refuse_both(draft, keys);
             gradient(draft, inner, outer, rings?)
@@ -49,7 +51,9 @@ fn refuse_both(draft: &Draft<'_>, keys: &StateKeys) {
     for (key, given) in others {
         if let Some(given) = given {
             let fault = Fault::key(given.node, format!("`{key}` and a gradient are both given"));
-            draft.faults.add(fault.help("keep `inner_temperature` and `outer_temperature`, or the part's own"));
+            draft
+                .faults
+                .add(fault.help("keep `inner_temperature` and `outer_temperature`, or the part's own"));
         }
     }
 }
@@ -65,7 +69,8 @@ fn gradient(
     rings: &[Ring],
 ) -> Option<Heat> {
     let (from, to) = (draft.value(inner)?, draft.value(outer)?);
-    let within = within_curves(draft, inner, Some(from), rings) & within_curves(draft, outer, Some(to), rings);
+    let within =
+        within_curves(draft, inner, Some(from), rings) & within_curves(draft, outer, Some(to), rings);
     let mut resistances = Vec::new();
     for ring in rings {
         if ring.inner_diameter == 0.0 {
