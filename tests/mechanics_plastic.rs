@@ -1,5 +1,9 @@
 //! The elastic-plastic hub: closed-form check values, published examples, independent numerical solutions.
 
+#[path = "plastic/finite_elements.rs"]
+mod finite_elements;
+#[path = "plastic/numerical.rs"]
+mod numerical;
 #[path = "plastic/published.rs"]
 mod published;
 
