@@ -2,8 +2,12 @@
 
 #[path = "plastic/finite_elements.rs"]
 mod finite_elements;
+#[path = "plastic/flow_rule.rs"]
+mod flow_rule;
 #[path = "plastic/numerical.rs"]
 mod numerical;
+#[path = "plastic/properties.rs"]
+mod properties;
 #[path = "plastic/published.rs"]
 mod published;
 
