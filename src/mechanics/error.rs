@@ -2,6 +2,8 @@
 
 use thiserror::Error;
 
+use crate::numerics::root::RootError;
+
 /// An input outside the range in which a formula holds. Numbers are SI.
 #[derive(Debug, Clone, PartialEq, Error)]
 pub enum MechanicsError {
@@ -43,4 +45,7 @@ pub enum MechanicsError {
         /// Steps taken.
         steps: usize,
     },
+    /// A root that was not found.
+    #[error(transparent)]
+    Root(#[from] RootError),
 }

@@ -10,6 +10,7 @@ pub mod influence;
 pub mod ring;
 pub mod rotation;
 pub mod stack;
+pub mod temperature;
 pub mod two_rings;
 
 pub use error::MechanicsError;
