@@ -11,7 +11,7 @@ use hubgrip::mechanics::criteria::{greatest_principal, tresca, von_mises};
 use hubgrip::mechanics::ring::{RingLoad, RingSection};
 use hubgrip::mechanics::stack::Stack;
 use hubgrip::mechanics::two_rings::TwoRings;
-use hubgrip::mechanics::{MechanicsError, capacity};
+use hubgrip::mechanics::{MechanicsError, capacity, rotation};
 use printed::{MPA, assert_prints};
 
 const MICRON: f64 = 1e-6;
@@ -256,4 +256,33 @@ fn what_no_formula_allows_is_an_error() {
     let ring = steel_ring(25.0, 50.0);
     assert!(ring.stress_at(&RingLoad::default(), 0.020).is_err());
     assert!(ring.stress_at(&RingLoad { inner_pressure: f64::NAN, ..RingLoad::default() }, 0.030).is_err());
+}
+
+#[test]
+fn loosening_speed_of_two_rings() {
+    // Timoshenko & Goodier, § 32: ω = √(2 E δ/((3 + ν) ρ a b²)) for a solid shaft of the hub's material.
+    let stack = steel_stack(&[0.0, 25.0, 50.0], &[50.0]);
+    let speed = rotation::loosening_speed(&stack.rings[0], &stack.rings[1], 50e-6).unwrap().unwrap();
+    assert_prints(speed, "3525.9059", 1.0);
+    let closed_form = (2.0 * 200e9 * 50e-6 / (3.3 * 7800.0 * 0.025 * 0.050_f64.powi(2))).sqrt();
+    assert_relative_eq!(speed, closed_form, max_relative = 1e-13);
+    assert_relative_eq!(stack.loosening_speeds().unwrap()[0].unwrap(), speed, max_relative = 1e-12);
+}
+
+#[test]
+fn a_joint_that_speed_does_not_loosen() {
+    // A dense, soft shaft grows more than a light, stiff hub that is hardly larger.
+    let shaft = RingSection::new(0.010, 0.025, 70e9, 0.33, 8000.0).unwrap();
+    let hub = RingSection::new(0.025, 0.026, 400e9, 0.2, 2000.0).unwrap();
+    assert_eq!(rotation::loosening_speed(&shaft, &hub, 10e-6).unwrap(), None);
+    let stack = Stack {
+        rings: vec![shaft, hub],
+        interference: vec![10e-6],
+        free_strain: vec![0.0; 2],
+        ..Stack::default()
+    };
+    assert_eq!(stack.loosening_speeds().unwrap(), [None]);
+    // A clearance is loose at standstill.
+    assert_eq!(rotation::loosening_speed(&shaft, &hub, -10e-6).unwrap(), Some(0.0));
+    assert_eq!(Stack { interference: vec![-10e-6], ..stack }.loosening_speeds().unwrap(), [Some(0.0)]);
 }

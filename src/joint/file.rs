@@ -6,29 +6,20 @@
 use schemars::JsonSchema;
 use serde::Deserialize;
 
-use super::leaf::{BathWord, CriterionWord, DisplayWord, FrictionText, LimitsText, LubricationWord};
+use super::leaf::{
+    AllowWord, BathWord, CriterionWord, DisplayWord, FlagWord, FrictionText, LimitsText, LubricationWord,
+    YieldRuleWord,
+};
 use super::leaf::{FitText, MaterialName, UncertainSize};
 use super::leaf::{MaterialKeys, MethodWord, Roughness, SmoothingAtWord, SmoothingText, Version};
 use super::written::{At, Line, NotYet, Note, TextOr, Written};
-use crate::quantity::{Angle, Force, Length, Number, NumberRange, Temperature, Torque};
+use crate::quantity::{Angle, Force, Length, Number, NumberRange, Pressure, Speed, Temperature, Torque};
 
 /// Version of the joint file that is read.
 pub const VERSION: u32 = 1;
 
 /// Keys that are known but whose subject is not calculated yet, in any section.
-pub(crate) const NOT_YET: &[&str] = &[
-    "rings",
-    "fits",
-    "order",
-    "bearing",
-    "allow",
-    "steps",
-    "speed",
-    "bending_moment",
-    "rotating_bending",
-    "inner_temperature",
-    "outer_temperature",
-];
+pub(crate) const NOT_YET: &[&str] = &["rings", "fits", "order", "bearing", "steps"];
 
 /// The sections with their keys, for a key that was put into the wrong one.
 pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
@@ -38,14 +29,41 @@ pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
     ("friction", &["holding", "pressing", "release", "lubrication"]),
     (
         "duty",
-        &["state", "torque", "axial_force", "temperature", "shaft_temperature", "hub_temperature", "speed"],
+        &[
+            "state",
+            "torque",
+            "axial_force",
+            "temperature",
+            "shaft_temperature",
+            "hub_temperature",
+            "speed",
+            "inner_temperature",
+            "outer_temperature",
+            "inner_pressure",
+            "outer_pressure",
+            "bending_moment",
+            "radial_force",
+            "rotating_bending",
+            "reversing",
+        ],
     ),
     (
         "assembly",
         &["method", "shop_temperature", "clearance", "chamfer_angle", "bath", "hub_temperature_limit"],
     ),
     ("smoothing", &["factor", "rule", "at"]),
-    ("require", &["slip_safety", "yield_safety", "fracture_safety", "press_force"]),
+    (
+        "require",
+        &[
+            "slip_safety",
+            "yield_safety",
+            "fracture_safety",
+            "press_force",
+            "allow",
+            "plastic_share",
+            "yield_rule",
+        ],
+    ),
 ];
 
 /// The sections that have `key`, such as `shaft` and `hub`; none when no section has it.
@@ -112,8 +130,6 @@ pub(crate) struct JointFile {
     pub(crate) order: Option<At<NotYet>>,
     #[schemars(skip)]
     pub(crate) bearing: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) allow: Option<At<NotYet>>,
 }
 
 /// The inner part.
@@ -227,16 +243,24 @@ pub(crate) struct StateKeys {
     pub(crate) shaft_temperature: Option<Written<Temperature>>,
     /// Temperature of the hub.
     pub(crate) hub_temperature: Option<Written<Temperature>>,
-    #[schemars(skip)]
-    pub(crate) speed: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) bending_moment: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) rotating_bending: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) inner_temperature: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) outer_temperature: Option<At<NotYet>>,
+    /// Rotational speed. Silent: at rest.
+    pub(crate) speed: Option<Written<Speed>>,
+    /// Temperature of the innermost face, with `outer_temperature`: steady conduction through the parts.
+    pub(crate) inner_temperature: Option<Written<Temperature>>,
+    /// Temperature of the outermost face.
+    pub(crate) outer_temperature: Option<Written<Temperature>>,
+    /// Pressure in the bore of the innermost part.
+    pub(crate) inner_pressure: Option<Written<Pressure>>,
+    /// Pressure round the outermost part.
+    pub(crate) outer_pressure: Option<Written<Pressure>>,
+    /// Bending moment about the middle of the joint.
+    pub(crate) bending_moment: Option<Written<Torque>>,
+    /// Radial force on the joint.
+    pub(crate) radial_force: Option<Written<Force>>,
+    /// Whether the bending turns with the shaft and so fatigues it.
+    pub(crate) rotating_bending: Option<Written<FlagWord>>,
+    /// Whether the torque reverses.
+    pub(crate) reversing: Option<Written<FlagWord>>,
 }
 
 /// How the joint is put together.
@@ -281,4 +305,10 @@ pub(crate) struct RequireKeys {
     pub(crate) fracture_safety: Option<Written<Number>>,
     /// Greatest press-in force.
     pub(crate) press_force: Option<Written<Force>>,
+    /// Whether a ductile hub may yield by design: elastic or plastic. Silent: elastic.
+    pub(crate) allow: Option<Written<AllowWord>>,
+    /// Greatest share of the hub's section that may be plastic. Silent: 0.3.
+    pub(crate) plastic_share: Option<Written<Number>>,
+    /// Yield rule of the elastic-plastic hub. Silent: Tresca.
+    pub(crate) yield_rule: Option<Written<YieldRuleWord>>,
 }

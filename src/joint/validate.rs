@@ -12,8 +12,9 @@ use super::draft::Draft;
 use super::file::{JointFile, RequireKeys};
 use super::leaf::{CriterionWord, DisplayWord};
 use super::written::{At, Written};
-use super::{Joint, Requirements};
+use super::{Allow, Joint, Requirements};
 use crate::mechanics::criteria::DuctileCriterion;
+use crate::mechanics::plastic::YieldRule;
 use crate::quantity::{Kind, Number, UnitSystem, written};
 
 /// The keys in the order of the joint file, which is the order of the defaults.
@@ -82,6 +83,8 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
         relief: relief?,
         rings: rings?,
         fits: vec![fit?],
+        order: vec![0],
+        slices: Vec::new(),
         friction: friction?,
         duty: duty?,
         assembly: assembly?,
@@ -110,11 +113,6 @@ fn refuse_what_is_not_calculated(draft: &Draft<'_>, file: &JointFile) {
         file.bearing.as_ref(),
         "bearing seats are not calculated",
         "give the ring's limits as a fit: `fit: {hole: {lower: -12 um, upper: 0 um}, shaft: k6}`",
-    );
-    draft.not_yet(
-        file.allow.as_ref(),
-        "only elastic joints are calculated",
-        "take the key out: a yield safety under 1 is reported as not met",
     );
 }
 
@@ -185,10 +183,56 @@ fn requirements(draft: &mut Draft<'_>, keys: Option<&At<RequireKeys>>) -> Option
             Some(force)
         }
     };
+    let (allow, yield_rule) = yielding_by_design(draft, keys)?;
     Some(Requirements {
         slip_safety: slip?,
         yield_safety: yielding?,
         fracture_safety: fracture?,
         press_force,
+        allow,
+        yield_rule,
     })
+}
+
+/// Share of the hub's section that may be plastic when the file is silent.
+const PLASTIC_SHARE: (f64, &str) = (0.3, "usual limit of elastic-plastic design (DIN 7190, from memory)");
+
+/// Whether the hub may yield by design, over how much of its section, and by which rule.
+fn yielding_by_design(draft: &mut Draft<'_>, keys: Option<&RequireKeys>) -> Option<(Allow, YieldRule)> {
+    let plastic = match keys.and_then(|keys| keys.allow.as_ref()) {
+        None => {
+            draft.default("require.allow", "elastic", "no part yields by design");
+            false
+        }
+        Some(given) => draft.value(given)?,
+    };
+    let rule = match keys.and_then(|keys| keys.yield_rule.as_ref()) {
+        None => YieldRule::default(),
+        Some(given) => draft.value(given)?,
+    };
+    let given = keys.and_then(|keys| keys.plastic_share.as_ref());
+    if !plastic {
+        if let Some(given) = given {
+            draft.refuse(given, "needs `allow: plastic`");
+        }
+        return Some((Allow::Elastic, rule));
+    }
+    let share = match given {
+        None => {
+            draft.default("require.plastic_share", written(Kind::Number, PLASTIC_SHARE.0), PLASTIC_SHARE.1);
+            PLASTIC_SHARE.0
+        }
+        Some(given) => {
+            let share = draft.value(given)?;
+            if !(share > 0.0 && share <= 1.0) {
+                draft.refuse(given, "must be more than 0 and at most 1");
+                return None;
+            }
+            share
+        }
+    };
+    if keys.is_some_and(|keys| keys.yield_rule.is_none()) {
+        draft.default("require.yield_rule", "Tresca", "the safe side for strength and for holding");
+    }
+    Some((Allow::Plastic { share }, rule))
 }

@@ -56,4 +56,12 @@ pub enum MechanicsError {
         /// Why it was not found.
         reason: RootError,
     },
+    /// A search that did not settle.
+    #[error("{what} did not settle after {steps} steps")]
+    NotSettled {
+        /// What was sought.
+        what: &'static str,
+        /// Steps taken.
+        steps: usize,
+    },
 }

@@ -5,9 +5,11 @@
 pub mod capacity;
 pub mod criteria;
 mod error;
+pub mod governing;
 pub mod influence;
 pub mod plastic;
 pub mod ring;
+pub mod rotation;
 pub mod stack;
 pub mod two_rings;
 

@@ -171,9 +171,7 @@ fn stresses(joint: &Joint, interference: Vec<f64>) -> Vec<RingStress> {
         rings: joint.rings.iter().map(section).collect(),
         free_strain: vec![0.0; joint.rings.len()],
         interference,
-        inner_pressure: 0.0,
-        outer_pressure: 0.0,
-        angular_speed: 0.0,
+        ..Stack::default()
     };
     let solution = stack.solve().unwrap();
     let of_ring = |(index, ring): (usize, &Ring)| {

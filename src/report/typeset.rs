@@ -19,11 +19,6 @@ pub(crate) fn number(plain: &str) -> String {
     text
 }
 
-/// A number with its unit, a thin space between; a pure number stands alone.
-pub(crate) fn with_unit(plain: &str, unit: &str) -> String {
-    if unit.is_empty() { number(plain) } else { format!("{}{THIN}{unit}", number(plain)) }
-}
-
 /// A unit as typeset: `um` as µm, `N.m` as N·m, `degC` as °C, `mm2` as mm².
 pub(crate) fn unit(plain: &str) -> String {
     let mut text = plain.replace("deg", "°").replace('.', "\u{00B7}");
@@ -165,8 +160,6 @@ mod tests {
     #[test]
     fn leaves_words_alone() {
         assert_eq!(number("none"), "none");
-        assert_eq!(with_unit("0.12", ""), "0.12");
-        assert_eq!(with_unit("60", "mm"), "60\u{202F}mm");
     }
 
     #[test]

@@ -4,7 +4,7 @@ use super::super::expression::{Expression, greatest, num, sym};
 use super::super::{Findings, PairFindings, RingStress};
 use super::Units;
 use super::sheet::Sheet;
-use crate::joint::{Joint, Ring};
+use crate::joint::Ring;
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
 
@@ -13,7 +13,7 @@ const LAME: &str = "Lamé; Timoshenko & Goodier, Theory of Elasticity, § 28";
 pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let joint = &findings.joint;
     let (Some(shaft), Some(hub)) = (joint.rings.first(), joint.rings.last()) else { return };
-    stiffness(sheet, joint, shaft, hub, units);
+    stiffness(sheet, shaft, hub, units);
     shop_strain(sheet, findings, shaft, hub, units);
     pressures(sheet, findings, units);
     capacity(sheet, findings, units);
@@ -22,7 +22,7 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     shaft_stress(sheet, findings, shaft, units);
 }
 
-fn stiffness(sheet: &mut Sheet, joint: &Joint, shaft: &Ring, hub: &Ring, units: &Units) {
+fn stiffness(sheet: &mut Sheet, shaft: &Ring, hub: &Ring, units: &Units) {
     sheet.section("Stiffness of both parts");
     let length = |metres: f64| metres * units.per_metre;
     sheet.input("D", "outer diameter of the hub", length(hub.outer_diameter), units.length, "joint file");
@@ -44,7 +44,6 @@ fn stiffness(sheet: &mut Sheet, joint: &Joint, shaft: &Ring, hub: &Ring, units: 
             &material.poisson.source,
         );
     }
-    let _ = joint;
     sheet.formula("C_h", "flexibility of the hub", ratio("D", "d") + sym("nu_h"), "", LAME, None);
     sheet.formula("C_s", "flexibility of the shaft", ratio("d", "b") - sym("nu_s"), "", LAME, None);
 }
@@ -97,9 +96,17 @@ fn pressures(sheet: &mut Sheet, findings: &Findings, units: &Units) {
 
 /// max(0, (W/1000 + d (ε_s − ε_h)) / (d (C_h/E_h + C_s/E_s))).
 pub(super) fn pressure(interference: &str, shaft_strain: &str, hub_strain: &str) -> Expression {
-    let grip = sym(interference) / num("1000") + sym("d") * (sym(shaft_strain) - sym(hub_strain));
-    let flexibility = sym("d") * (sym("C_h") / sym("E_h") + sym("C_s") / sym("E_s"));
-    greatest([num("0"), grip / flexibility])
+    greatest([num("0"), grip(interference, shaft_strain, hub_strain) / flexibility()])
+}
+
+/// Interference with the free strains: W/1000 + d (ε_s − ε_h).
+pub(super) fn grip(interference: &str, shaft_strain: &str, hub_strain: &str) -> Expression {
+    sym(interference) / num("1000") + sym("d") * (sym(shaft_strain) - sym(hub_strain))
+}
+
+/// Interference for each unit of pressure: d (C_h/E_h + C_s/E_s).
+pub(super) fn flexibility() -> Expression {
+    sym("d") * (sym("C_h") / sym("E_h") + sym("C_s") / sym("E_s"))
 }
 
 fn capacity(sheet: &mut Sheet, findings: &Findings, units: &Units) {

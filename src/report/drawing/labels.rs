@@ -41,14 +41,14 @@ pub(super) fn rows(joint: &Joint, units: Units, factor: f64) -> Vec<Label> {
             surface: Some(format!("Rz {}", units.text(Measure::Roughness, ring.roughness.value))),
         })
         .collect();
-    let tightest: Vec<String> = joint
-        .fits
-        .iter()
-        .map(|fit| units.text(Measure::Deviation, fit.limits.interference().tightest))
-        .collect();
+    let tightest: Vec<f64> = joint.fits.iter().map(|fit| fit.limits.interference().tightest).collect();
+    let grips = tightest.iter().any(|value| *value >= 0.0);
+    let sign = if grips { 1.0 } else { -1.0 };
+    let tightest: Vec<String> =
+        tightest.iter().map(|value| units.text(Measure::Deviation, sign * value)).collect();
     rows.push(Label {
         ring: None,
-        name: "interference".to_owned(),
+        name: if grips { "interference" } else { "clearance" }.to_owned(),
         text: format!("{}, drawn × {}", tightest.join(" and "), typeset::number(&format!("{factor}"))),
         surface: None,
     });

@@ -153,10 +153,13 @@ fn caption(layout: &scale::Layout, factor: f64, interference: &[f64]) -> String 
         text.push_str("; lengths between break lines are left out");
     }
     if interference.iter().any(|value| *value != 0.0) {
-        text.push_str(&format!(
-            "; the interference of the tightest pair, shown in colour, is drawn {} times too large",
-            super::typeset::number(&format!("{factor}"))
-        ));
+        let factor = super::typeset::number(&format!("{factor}"));
+        let what = if interference.iter().any(|value| *value > 0.0) {
+            "interference of the tightest pair, shown in colour,"
+        } else {
+            "clearance of the tightest pair"
+        };
+        text.push_str(&format!("; the {what} is drawn {factor} times too large"));
     }
     text.push_str(
         ". The shaft is drawn through and broken off: its length outside the hub is not part of the input.",

@@ -31,7 +31,7 @@ fn sentence(sheet: Sheet) -> String {
 }
 
 /// The verdict of a question that is furthest from being met, or nearest to its limit.
-fn governing(sheet: Sheet, question: Question) -> Option<&Verdict> {
+fn governing<'a>(sheet: Sheet<'a>, question: Question) -> Option<&'a Verdict> {
     let margin = |verdict: &Verdict| match (verdict.found, verdict.required) {
         (Some(found), Some(required)) if required > 0.0 => found / required,
         (Some(found), None) => 1e6 + found,
@@ -69,8 +69,7 @@ fn assembly(sheet: Sheet) -> String {
     let units = sheet.units;
     let assembly = &sheet.findings.assembly;
     let plan = &sheet.findings.joint.assembly;
-    let names = &sheet.findings.joint.rings;
-    let hub = names.last().map_or("hub", |ring| ring.name.as_str());
+    let (shaft, hub) = super::instructions::names(sheet);
     let temperature = |value: f64| units.text(Measure::Temperature, value);
     let missed = governing(sheet, Question::Assembly).filter(|verdict| !verdict.ok);
     if let Some(verdict) = missed {
@@ -88,14 +87,14 @@ fn assembly(sheet: Sheet) -> String {
             None => format!("heating the {hub} does not clear"),
         },
         Method::ChillShaft => match assembly.chill_shaft.temperature {
-            Some(cold) => format!("chill the inner part to {}", temperature(cold)),
+            Some(cold) => format!("chill the {shaft} to {}", temperature(cold)),
             None => "chilling alone does not clear".to_owned(),
         },
         Method::HeatAndChill => {
             let bath = assembly.baths.iter().find(|bath| bath.bath == plan.bath);
             match bath.and_then(|bath| bath.hub_temperature.map(|hot| (bath.temperature, hot))) {
                 Some((cold, hot)) => format!(
-                    "chill the inner part to {} and heat the {hub} to {}",
+                    "chill the {shaft} to {} and heat the {hub} to {}",
                     temperature(cold),
                     temperature(hot)
                 ),

@@ -4,7 +4,7 @@ use maud::{Markup, html};
 
 use super::Sheet;
 use super::table::{aligned, cell, pair_heads, range_cell, scrolling};
-use crate::findings::{PairFindings, RingStress};
+use crate::findings::{OnsetOfYield, PairFindings, RingStress};
 use crate::joint::{Ring, SmoothingAt};
 use crate::material::{Kind, Range};
 use crate::mechanics::criteria::DuctileCriterion;
@@ -27,7 +27,24 @@ pub(super) fn body(sheet: Sheet) -> Markup {
             @if first { " Interference and pressure are those of the innermost mating surface; every ring is listed." }
         }
         (scrolling("The extreme pairs", "extremes", &table(sheet)))
+        @if let Some(onset) = &sheet.findings.onset_of_yield { p { (first_yield(sheet, onset)) } }
     }
+}
+
+/// Where strength is reached first, and how far the tightest pair is from it.
+fn first_yield(sheet: Sheet, onset: &OnsetOfYield) -> String {
+    let units = sheet.units;
+    let ring = sheet.findings.joint.rings.get(onset.ring);
+    let name = ring.map_or("ring", |ring| ring.name.as_str());
+    let what = match ring.map(|ring| ring.material.kind) {
+        Some(Kind::Brittle) => "reaches its tensile strength",
+        _ => "begins to yield",
+    };
+    format!(
+        "The {name} is the first that {what}: at a contact pressure of {}, which is an effective interference of {}.",
+        units.brief(Measure::Pressure, onset.pressure).text(),
+        units.text(Measure::Deviation, onset.interference),
+    )
 }
 
 fn table(sheet: Sheet) -> Markup {

@@ -12,15 +12,15 @@ use crate::report::units::Measure;
 
 /// One step.
 struct Step {
-    title: &'static str,
+    title: String,
     text: String,
     /// Subject of the cautions that belong to it.
     cautions: Option<&'static str>,
 }
 
 impl Step {
-    fn new(title: &'static str, text: impl Into<String>) -> Self {
-        Self { title, text: text.into(), cautions: None }
+    fn new(title: impl Into<String>, text: impl Into<String>) -> Self {
+        Self { title: title.into(), text: text.into(), cautions: None }
     }
 
     fn with_cautions(mut self, subject: &'static str) -> Self {
@@ -65,6 +65,14 @@ fn cautions(all: &[Caution], subject: &str) -> Markup {
             }
         }
     }
+}
+
+/// Names of the two parts that are joined last: the outermost ring and the one inside of it.
+pub(super) fn names<'a>(sheet: Sheet<'a>) -> (&'a str, &'a str) {
+    let name = |ring: Option<&'a Ring>, other| ring.map_or(other, |ring| ring.name.as_str());
+    let mut rings = sheet.findings.joint.rings.iter().rev();
+    let hub = name(rings.next(), "hub");
+    (name(rings.next(), "shaft"), hub)
 }
 
 fn check_parts(sheet: Sheet) -> Step {
@@ -113,9 +121,9 @@ fn press(sheet: Sheet) -> Vec<Step> {
     let press = &findings.assembly.press;
     let friction = &findings.joint.friction.pressing;
     let seated = if press.loosest.peak_force > 0.0 {
-        format!("between {} and {}", force(press.loosest.final_force), force(press.tightest.final_force))
+        format!("lie between {} and {}", force(press.loosest.final_force), force(press.tightest.final_force))
     } else {
-        format!("at most {}; the loosest pair slides in without force", force(press.tightest.final_force))
+        format!("be at most {}; the loosest pair slides in without force", force(press.tightest.final_force))
     };
     vec![
         Step::new(
@@ -142,7 +150,7 @@ fn press(sheet: Sheet) -> Vec<Step> {
             ),
         )
         .with_cautions("press"),
-        Step::new("Record the force when seated", format!("It must lie {seated}.")),
+        Step::new("Record the force when seated", format!("It must {seated}.")),
     ]
 }
 
@@ -170,7 +178,7 @@ fn heat(sheet: Sheet) -> Vec<Step> {
     vec![
         heat_to(sheet, hot),
         Step::new(
-            "Check the bore hot",
+            format!("Check the bore of the {} hot", names(sheet).1),
             format!("It must measure at least {bore} before the parts are joined."),
         ),
         join(),
@@ -187,8 +195,11 @@ fn heat_to(sheet: Sheet, hot: f64) -> Step {
         .as_ref()
         .map(|(limit, reason)| format!(" Never above {} ({reason}).", temperature(*limit)))
         .unwrap_or_default();
-    Step::new("Heat the outer part", format!("To {} right through, evenly.{limit}", temperature(hot)))
-        .with_cautions("heat")
+    Step::new(
+        format!("Heat the {}", names(sheet).1),
+        format!("To {} right through, evenly.{limit}", temperature(hot)),
+    )
+    .with_cautions("heat")
 }
 
 fn join() -> Step {
@@ -218,10 +229,13 @@ fn chill(sheet: Sheet) -> Vec<Step> {
         format!(" {} is cold enough.", super::capital(&baths.join(" or ")))
     };
     vec![
-        Step::new("Chill the inner part", format!("To {} or below, right through.{how}", temperature(cold)))
-            .with_cautions("cold"),
         Step::new(
-            "Check the shaft cold",
+            format!("Chill the {}", names(sheet).0),
+            format!("To {} or below, right through.{how}", temperature(cold)),
+        )
+        .with_cautions("cold"),
+        Step::new(
+            format!("Check the {} cold", names(sheet).0),
             format!("It must measure at most {pin} before the parts are joined."),
         ),
         join(),
@@ -241,7 +255,7 @@ fn heat_and_chill(sheet: Sheet) -> Vec<Step> {
     });
     let mut steps = vec![
         Step::new(
-            "Chill the inner part",
+            format!("Chill the {}", names(sheet).0),
             format!(
                 "In {} to {}, right through.{shrinkage}",
                 bath_name(bath.bath),
@@ -267,11 +281,14 @@ fn dismantle(sheet: Sheet) -> Step {
     let force = |value: f64| sheet.units.brief(Measure::Force, value).text();
     Step::new(
         "To take it apart",
-        format!(
-            "Pushing out takes {} to {}, the least at the loosest pair and the low friction.",
-            force(range.low),
-            force(range.high)
-        ),
+        match range.low {
+            low if low > 0.0 => format!(
+                "Pushing out takes {} to {}, the least at the loosest pair and the low friction.",
+                force(low),
+                force(range.high)
+            ),
+            _ => format!("Pushing out takes up to {}; the loosest pair does not grip.", force(range.high)),
+        },
     )
 }
 

@@ -3,7 +3,7 @@
 use super::Plot;
 use super::axis::{Axis, bounds};
 use super::chart::{Chart, Margins, Pair, TYPE};
-use super::tags::Side;
+use super::tags::{Lean, Side};
 use crate::findings::{Findings, PairFindings, RingStress};
 use crate::joint::Ring;
 use crate::material::Kind;
@@ -247,6 +247,8 @@ fn label(chart: &mut Chart, walls: &Walls, findings: &Findings, ring: usize, pro
         _ => "equivalent",
     };
     let mut names: Vec<(String, f64)> = vec![(equivalent.to_owned(), end(&profile.equivalent))];
+    // A brittle part that is only compressed has no tension to name.
+    names.retain(|(_, value)| *value >= 1.0);
     let number = |value: f64| units.brief(Measure::Pressure, value).number;
     let near = |a: f64, b: f64| number(a) == number(b);
     let (hoop, radial) = (end(&profile.hoop), end(&profile.radial));
@@ -260,11 +262,12 @@ fn label(chart: &mut Chart, walls: &Walls, findings: &Findings, ring: usize, pro
         None => {}
     }
     names.sort_by(|a, b| b.1.total_cmp(&a.1));
-    for (name, value) in names {
+    for (place, (name, value)) in names.into_iter().enumerate() {
         let at = (x, units.on_axis(Measure::Pressure, value));
         chart.mark(at, Pair::Tightest);
         let text = format!("{name} {}", number(value));
-        chart.tag(at, text, Pair::Tightest.colour(), side);
+        let lean = if place == 0 { Lean::Up } else { Lean::Down };
+        chart.leaning_tag(at, text, Pair::Tightest.colour(), side, lean);
     }
 }
 
@@ -280,28 +283,39 @@ fn name_pairs(chart: &mut Chart, units: Units, tightest: &[Profile], loosest: &[
 }
 
 fn caption(findings: &Findings, limits: &[Limit], shown: &dyn Fn(f64) -> bool) -> String {
+    let rings = findings.joint.rings.iter().zip(&findings.extremes.tightest.rings);
+    let mut sentences: Vec<String> = rings
+        .enumerate()
+        .map(|(index, (ring, stress))| {
+            let hidden = limits.iter().any(|limit| limit.ring == index && !shown(limit.value));
+            ring_sentence(findings, ring, stress, hidden)
+        })
+        .collect();
+    sentences.push("Thick: equivalent stress; middle: hoop; thin: radial.".to_owned());
+    sentences.join(" ")
+}
+
+/// How far the ring is from its strength at the tightest pair.
+fn ring_sentence(findings: &Findings, ring: &Ring, stress: &RingStress, hidden: bool) -> String {
     let units = Units { system: findings.joint.display };
-    let mut text = String::new();
-    for (index, (ring, stress)) in
-        findings.joint.rings.iter().zip(&findings.extremes.tightest.rings).enumerate()
-    {
-        let Some(strength) = stress.strength else { continue };
-        let kind = if ring.material.kind == Kind::Brittle { "tensile strength" } else { "yield" };
-        let share = 100.0 * stress.equivalent / strength;
-        if index > 0 {
-            text.push(' ');
-        }
-        text.push_str(&format!(
-            "At the tightest pair the {} reaches {}, {share:.0} % of {kind} ({}).",
-            ring.name,
-            units.brief(Measure::Pressure, stress.equivalent).text(),
-            units.brief(Measure::Pressure, strength).text(),
-        ));
-        let hidden = limits.iter().any(|limit| limit.ring == index && !shown(limit.value));
-        if hidden {
-            text.push_str(" Its limit lies above the picture.");
-        }
+    let pressure = |value: f64| units.brief(Measure::Pressure, value).text();
+    let (name, brittle) = (&ring.name, ring.material.kind == Kind::Brittle);
+    if brittle && stress.equivalent < 1.0 {
+        return format!("At the tightest pair the {name} is in compression only.");
     }
-    text.push_str(" Thick: equivalent stress; middle: hoop; thin: radial.");
-    text
+    let Some(strength) = stress.strength else {
+        return format!(
+            "At the tightest pair the {name} reaches {}; its strength is not known.",
+            pressure(stress.equivalent)
+        );
+    };
+    let share = 100.0 * stress.equivalent / strength;
+    let kind = if brittle { "tensile strength" } else { "yield" };
+    let elastic = if share > 100.0 { ", computed as if it stayed elastic" } else { "" };
+    let above = if hidden { ", which lies above the picture" } else { "" };
+    format!(
+        "At the tightest pair the {name} reaches {}, {share:.0} % of {kind} ({}{above}){elastic}.",
+        pressure(stress.equivalent),
+        pressure(strength)
+    )
 }
