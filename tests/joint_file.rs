@@ -80,6 +80,7 @@ fn every_silent_key_leaves_a_default_with_its_source() {
             ("require.slip_safety", "1.5"),
             ("require.yield_safety", "1.2"),
             ("require.fracture_safety", "2.5"),
+            ("require.allow", "elastic"),
             ("display", "metric"),
         ]
     );

@@ -137,7 +137,7 @@ fn what_is_plainly_wrong_does_not_match_the_schema() {
         ("method: press ", "method: hammer ", "not one of the words"),
         ("joint_file: 1", "joint_file: 2", "not the constant"),
         ("fit: H7/u6", "fit: {hole: H7, shaft: {lowest: 3 um}}", "none of the shapes"),
-        ("torque: 500 N.m, axial", "torque: 500 N.m, speed: 10 rpm, axial", "speed is unknown"),
+        ("torque: 500 N.m, axial", "torque: 500 N.m, sped: 10 rpm, axial", "sped is unknown"),
         ("slip_safety: 1.5", "slip_safety:", "not of the type"),
     ] {
         let text = right.replacen(from, to, 1);

@@ -53,8 +53,8 @@ fn faults_in_a_change_name_the_option_not_a_line() {
     );
     assert_eq!(told(&[("length", "70")]).0, "--set length: 70 has no unit: write 70 mm");
     assert_eq!(
-        told(&[("duty.rated.speed", "100 rpm")]).0,
-        "--set duty.rated.speed: `speed` is not supported yet: the loss of contact pressure in rotation is not calculated"
+        told(&[("bearing", "6210")]).0,
+        "--set bearing: `bearing` is not supported yet: bearing seats are not calculated"
     );
     // A fault in the file itself still has its line.
     let found = set(&LEAST.replacen("70 mm", "70", 1), &[("hub.outer_diameter", "50mm")]).unwrap_err();
@@ -75,7 +75,7 @@ fn the_digest_is_that_of_the_file_and_follows_the_changes() {
 }
 
 proptest! {
-    #![proptest_config(ProptestConfig { cases: 400, ..ProptestConfig::default() })]
+    #![proptest_config(ProptestConfig { cases: 150, ..ProptestConfig::default() })]
 
     #[test]
     fn no_change_makes_the_reader_panic(key in "[a-z_.0-9]{0,12}", value in "[ -~]{0,12}") {

@@ -89,6 +89,27 @@ fn hostile_yaml_is_refused_quickly() {
 }
 
 #[test]
+fn texts_that_cannot_be_meant_are_refused_unread() {
+    let long = "x".repeat(300_000);
+    for (from, to, message) in [
+        ("fit: H7/u6", format!("fit: {long}"), "`fit` is longer than 200 characters"),
+        ("C45+N", long.clone(), "`material` is longer than 200 characters"),
+        ("fit: H7/u6", "fit: |\n  H7/\n  u6\n".to_owned(), "`fit` must stand on one line"),
+        ("fit: H7/u6", "fit: H7/u6\ntitle: \"\\e[31mred\"".to_owned(), "`title` holds a control character"),
+        ("C45+N}", "{name: \"\\e[2J\", kind: ductile}}".to_owned(), "`name` holds a control character"),
+        ("fit: H7/u6", "fit: H7/u6\nnote: \"a\\nb\\rc\"".to_owned(), "`note` holds a control character"),
+    ] {
+        let found = faults(&LEAST.replacen(from, &to, 1));
+        assert_eq!(found.len(), 1, "{}", found[0].message);
+        assert_eq!(found[0].message, message);
+    }
+    let found = faults(&format!("{LEAST}\"{}\\e\": 1\n", "k".repeat(100)));
+    assert_eq!(found[0].message, format!("unknown key `{}…`", "k".repeat(40)));
+    let two = joint(&format!("{LEAST}note: |\n  one\n  two\n"));
+    assert_eq!(two.note.as_deref(), Some("one\ntwo"));
+}
+
+#[test]
 fn a_file_of_another_version_gets_no_further() {
     let found = faults("joint_file: 2\ndiamter: 60\n");
     assert!(found.iter().any(|fault| fault.message == "written for joint_file 2, this hubgrip reads 1"));

@@ -12,7 +12,7 @@ use super::leaf::{
 };
 use super::leaf::{FitText, MaterialName, UncertainSize};
 use super::leaf::{MaterialKeys, MethodWord, Roughness, SmoothingAtWord, SmoothingText, Version};
-use super::written::{At, Free, NotYet, TextOr, Written};
+use super::written::{At, Line, NotYet, Note, TextOr, Written};
 use crate::quantity::{Angle, Force, Length, Number, NumberRange, Pressure, Speed, Temperature, Torque};
 
 /// Version of the joint file that is read.
@@ -86,13 +86,13 @@ pub(crate) struct JointFile {
     #[schemars(required)]
     pub(crate) joint_file: Option<Written<Version>>,
     /// What the joint is, in your words.
-    pub(crate) title: Option<Written<Free>>,
+    pub(crate) title: Option<Written<Line>>,
     /// Drawing number and revision.
-    pub(crate) drawing: Option<Written<Free>>,
+    pub(crate) drawing: Option<Written<Line>>,
     /// Whatever a reader should know.
-    pub(crate) note: Option<Written<Free>>,
+    pub(crate) note: Option<Written<Note>>,
     /// Date as it shall be printed.
-    pub(crate) date: Option<Written<Free>>,
+    pub(crate) date: Option<Written<Line>>,
     /// Nominal diameter of the mating surface.
     pub(crate) diameter: Option<Written<Length>>,
     /// Length of the hub along the shaft.
@@ -135,7 +135,7 @@ pub(crate) struct JointFile {
 #[serde(deny_unknown_fields)]
 pub(crate) struct ShaftKeys {
     /// What it is called. Silent: shaft.
-    pub(crate) name: Option<Written<Free>>,
+    pub(crate) name: Option<Written<Line>>,
     /// Material of the library by name, or written here with the keys of a library file.
     #[schemars(required)]
     pub(crate) material: Option<At<TextOr<MaterialName, MaterialKeys>>>,
@@ -154,7 +154,7 @@ pub(crate) struct ShaftKeys {
 #[serde(deny_unknown_fields)]
 pub(crate) struct HubKeys {
     /// What it is called. Silent: hub.
-    pub(crate) name: Option<Written<Free>>,
+    pub(crate) name: Option<Written<Line>>,
     /// Material of the library by name, or written here with the keys of a library file.
     #[schemars(required)]
     pub(crate) material: Option<At<TextOr<MaterialName, MaterialKeys>>>,
@@ -273,7 +273,7 @@ pub(crate) struct FrictionKeys {
 #[serde(deny_unknown_fields)]
 pub(crate) struct StateKeys {
     /// Its name.
-    pub(crate) state: Option<Written<Free>>,
+    pub(crate) state: Option<Written<Line>>,
     /// Torque to be carried.
     pub(crate) torque: Option<Written<Torque>>,
     /// Axial force to be carried.

@@ -40,7 +40,7 @@ assembly:
   hub_temperature_limit: 200 degC
 smoothing: {factor: 0.4, at: both}
 criterion: Tresca
-require: {slip_safety: 1.4, yield_safety: 1.1, fracture_safety: 2.2, press_force: 300 kN}
+require: {slip_safety: 1.4, yield_safety: 1.1, fracture_safety: 2.2, press_force: 300 kN, allow: elastic}
 display: inch
 ";
 

@@ -211,7 +211,9 @@ fn in_place(draft: &Draft<'_>, node: NodeId) -> Option<Arc<Material>> {
     if draft.faults.touch_within(draft.tree, node) {
         return None;
     }
-    match record.into_material("written in place", Origin::JointFile) {
+    let part = draft.tree.parent(node).and_then(|(part, _)| draft.tree.key(part)).unwrap_or("part");
+    let id = record.name.clone().unwrap_or_else(|| format!("material of the {part}"));
+    match record.into_material(&id, Origin::JointFile) {
         Ok(material) => Some(Arc::new(material)),
         Err(error) => {
             let (at, reached) = follow(draft, node, &error.path);
