@@ -197,7 +197,7 @@ pub(crate) struct ShaftStepKeys {
 #[serde(deny_unknown_fields)]
 pub(crate) struct RingKeys {
     /// What it is called. Silent: ring and its number.
-    pub(crate) name: Option<Written<Free>>,
+    pub(crate) name: Option<Written<Line>>,
     /// Material of the library by name, or written here with the keys of a library file.
     #[schemars(required)]
     pub(crate) material: Option<At<TextOr<MaterialName, MaterialKeys>>>,

@@ -3,6 +3,7 @@
 //! NaN and infinity never appear: a quantity that does not exist is `null`, and `notes` says why. Names are
 //! only ever added.
 
+mod service;
 mod shape;
 
 use serde::Serialize;
