@@ -11,6 +11,7 @@ use scale::layout;
 use section::{Place, STUB, bands};
 
 use super::svg::{Frame, Lettering, QUIET, Sketch};
+use super::text_width::text_width;
 use super::units::{Measure, Units};
 use crate::findings::Findings;
 use crate::joint::Joint;
@@ -71,9 +72,9 @@ pub fn section(findings: &Findings) -> SectionDrawing {
     let bottom = place.centre + layout.radial.last().map_or(0.0, |wall| wall.to);
     let below = dimensions(&mut sketch, joint, units, &layout, place);
     labels::draw(&mut sketch, &rows, &layout, place, &bands, WIDTH);
-    let height = bottom + below + 9.0;
+    let height = bottom + below + 7.0;
     let foot = Lettering::new(foot(&layout, units), TYPE).colour(QUIET);
-    sketch.text((0.0, height - 2.0), &foot);
+    sketch.text((0.0, height - 1.0), &foot);
 
     let frame = Frame {
         id: "section-drawing".into(),
@@ -94,7 +95,7 @@ fn dimensions(sketch: &mut Sketch, joint: &Joint, units: Units, layout: &scale::
     for (k, fit) in joint.fits.iter().enumerate() {
         let from = if k == 0 { place.shaft_left() } else { place.hub_left };
         let at = place.shaft_left() - FIRST - NEXT * k as f64;
-        let text = format!("Ø{} {}", size(fit.limits.nominal), fit.callout);
+        let text = dimension_text(&size(fit.limits.nominal), &fit.callout);
         diameters.push(Diameter::new(from, at, layout.radial[k + 1].to, &text));
     }
     let mut column = place.shaft_right() + FIRST;
@@ -114,6 +115,13 @@ fn dimensions(sketch: &mut Sketch, joint: &Joint, units: Units, layout: &scale::
         below = below.max(diameter.below());
     }
     below.max(lengths(sketch, joint, units, place, bottom))
+}
+
+/// The mating diameter with its fit; limits told in words are left to the page.
+fn dimension_text(size: &str, callout: &str) -> String {
+    const LONGEST: f64 = 36.0;
+    let text = format!("Ø{size} {callout}");
+    if text_width(&text, TYPE) <= LONGEST { text } else { format!("Ø{size}") }
 }
 
 /// Draws the hub's length and its relief below the part; returns how far they reach, mm.
@@ -161,9 +169,7 @@ fn caption(layout: &scale::Layout, factor: f64, interference: &[f64]) -> String 
         };
         text.push_str(&format!("; the {what} is drawn {factor} times too large"));
     }
-    text.push_str(
-        ". The shaft is drawn through and broken off: its length outside the hub is not part of the input.",
-    );
+    text.push_str(". The shaft is broken off: its length outside the hub is not part of the input.");
     text
 }
 
