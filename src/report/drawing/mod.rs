@@ -44,8 +44,8 @@ pub fn section(findings: &Findings) -> SectionDrawing {
         .collect();
     let hollow = radii.first().is_some_and(|bore| *bore > 0.0);
     let columns = (joint.fits.len(), 1 + usize::from(hollow));
-    let margin = |count: usize| FIRST + NEXT * (count.max(1) - 1) as f64 + 4.0;
-    let (left, right) = (margin(columns.0), margin(columns.1));
+    let margin = |first: f64, count: usize| first + NEXT * (count.max(1) - 1) as f64 + 4.0;
+    let (left, right) = (margin(FIRST, columns.0), margin(first_right(joint, units), columns.1));
     let room = (WIDTH - 2.0 * STUB - left - right).min(84.0);
     let layout = layout(&radii, joint.length, room);
 
@@ -98,7 +98,7 @@ fn dimensions(sketch: &mut Sketch, joint: &Joint, units: Units, layout: &scale::
         let text = dimension_text(&size(fit.limits.nominal), &fit.callout);
         diameters.push(Diameter::new(from, at, layout.radial[k + 1].to, &text));
     }
-    let mut column = place.shaft_right() + FIRST;
+    let mut column = place.shaft_right() + first_right(joint, units);
     if let Some(bore) = joint.rings.first().map(|ring| ring.inner_diameter).filter(|bore| *bore > 0.0) {
         let text = format!("Ø{}", size(bore));
         diameters.push(Diameter::new(place.shaft_right(), column, layout.radial[0].to, &text));
@@ -115,6 +115,19 @@ fn dimensions(sketch: &mut Sketch, joint: &Joint, units: Units, layout: &scale::
         below = below.max(diameter.below());
     }
     below.max(lengths(sketch, joint, units, place, bottom))
+}
+
+/// Distance of the first dimension line on the right from the shaft: clear of the lettering of the relief.
+fn first_right(joint: &Joint, units: Units) -> f64 {
+    if joint.relief <= 0.0 {
+        return FIRST;
+    }
+    let lettering = text_width(&relief_text(joint, units), TYPE);
+    FIRST.max(lettering + Length::BEFORE_TEXT + TYPE + 2.0 - STUB)
+}
+
+fn relief_text(joint: &Joint, units: Units) -> String {
+    format!("relief {}", units.reading(Measure::Size, joint.relief).number)
 }
 
 /// The mating diameter with its fit; limits told in words are left to the page.
@@ -138,7 +151,7 @@ fn lengths(sketch: &mut Sketch, joint: &Joint, units: Units, place: Place, botto
     let edge = place.hub_right - place.relief;
     if joint.relief > 0.0 {
         line(place.hub_left, edge, 7.5, size(joint.length - joint.relief), false).draw(sketch);
-        line(edge, place.hub_right, 7.5, format!("relief {}", size(joint.relief)), true).draw(sketch);
+        line(edge, place.hub_right, 7.5, relief_text(joint, units), true).draw(sketch);
         line(place.hub_left, place.hub_right, 14.5, size(joint.length), false).draw(sketch);
         17.0
     } else {
