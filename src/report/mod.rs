@@ -18,6 +18,10 @@ mod typeset;
 mod units;
 
 #[cfg(test)]
+mod figure_tests;
+#[cfg(test)]
+mod lettering;
+#[cfg(test)]
 mod page_tests;
 #[cfg(test)]
 mod sample;

@@ -8,7 +8,7 @@ use std::sync::{Arc, OnceLock};
 use crate::findings::{FaceStress, Findings, RingStress, compute};
 use crate::joint::*;
 use crate::material::library::Library;
-use crate::material::{Range, Sourced};
+use crate::material::{Kind, Range, Sourced};
 use crate::mechanics::criteria::{self, DuctileCriterion};
 use crate::mechanics::plastic::YieldRule;
 use crate::mechanics::ring::RingSection;
@@ -185,15 +185,18 @@ fn stresses(joint: &Joint, interference: Vec<f64>) -> Vec<RingStress> {
             FaceStress { radial, hoop, von_mises, tresca }
         };
         let (bore, rim) = (face(section.inner_radius()), face(section.outer_radius()));
-        let equivalent = bore.von_mises.max(rim.von_mises);
-        let strength = ring.strength.yield_strength;
+        let tension = |face: &FaceStress| criteria::greatest_principal(face.radial, face.hoop);
+        let (equivalent, strength) = match ring.material.kind {
+            Kind::Brittle => (tension(&bore).max(tension(&rim)), ring.strength.tensile_strength),
+            _ => (bore.von_mises.max(rim.von_mises), ring.strength.yield_strength),
+        };
         let change = |radius: f64| 2.0 * section.displacement_at(&load, radius).unwrap();
         RingStress {
             bore,
             rim,
             equivalent,
             strength,
-            safety: strength.map(|strength| strength / equivalent),
+            safety: strength.filter(|_| equivalent > 0.0).map(|strength| strength / equivalent),
             bore_change: change(section.inner_radius()),
             outer_change: change(section.outer_radius()),
         }
