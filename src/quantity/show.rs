@@ -130,8 +130,14 @@ pub fn show(measure: Measure, si: f64, system: UnitSystem) -> Shown {
     Shown { number, unit: unit.name }
 }
 
+/// What is shown of a number that does not exist.
+const NOT_FINITE: &str = "n/a";
+
 /// A number with so many decimals, trailing zeros dropped, never a negative zero.
 fn trimmed(value: f64, decimals: usize) -> String {
+    if !value.is_finite() {
+        return NOT_FINITE.to_owned();
+    }
     let text = format!("{value:.decimals$}");
     let text = if text.contains('.') { text.trim_end_matches('0').trim_end_matches('.') } else { &text };
     if text == "-0" { "0".to_owned() } else { text.to_owned() }
@@ -140,7 +146,8 @@ fn trimmed(value: f64, decimals: usize) -> String {
 /// A number to so many significant digits, trailing zeros behind the point dropped.
 ///
 /// A tie, as far as a double can tell one, goes away from zero, so that two ways of working out one number print
-/// alike. From 1e-4 to 1e15 it is written plainly, outside with an exponent. The text reads back as a number.
+/// alike. From 1e-4 to 1e15 it is written plainly, outside with an exponent. The text reads back as a number; NaN
+/// and infinity give `n/a`.
 ///
 /// # Example
 /// ```
@@ -150,7 +157,10 @@ fn trimmed(value: f64, decimals: usize) -> String {
 /// assert_eq!(number(-0.0, 3), "0");
 /// ```
 pub fn number(value: f64, significant_digits: usize) -> String {
-    if value == 0.0 || !value.is_finite() {
+    if !value.is_finite() {
+        return NOT_FINITE.to_owned();
+    }
+    if value == 0.0 {
         return "0".to_owned();
     }
     let digits = significant_digits.max(1);
