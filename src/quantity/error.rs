@@ -69,13 +69,13 @@ pub enum QuantityError {
         /// The text.
         given: String,
     },
-    /// A number so great or so small that a double cannot hold it.
-    #[error("{given} is out of the range of numbers")]
-    OutOfRange {
+    /// A number so close to zero that a double cannot hold it.
+    #[error("{given} is too close to zero to be held")]
+    TooSmall {
         /// The text.
         given: String,
     },
-    /// NaN or infinity.
+    /// NaN, infinity or too great for a number.
     #[error("{given} is not a finite number; {} is due", .kind.phrase())]
     NotFinite {
         /// What is due.
@@ -118,6 +118,9 @@ impl QuantityError {
                 Some(format!("the units of {} are {}", kind.phrase(), kind.unit_names()))
             }
             Self::UnknownUnit { near: Some(near), .. } => Some(format!("did you mean {near}?")),
+            Self::WrongKind { found: Kind::Mass, kind: Kind::Force, .. } => {
+                Some("a force in pounds is written lbf".to_owned())
+            }
             Self::UnknownUnit { kind, .. } | Self::WrongKind { kind, .. } => {
                 Some(format!("the units of {} are {}", kind.phrase(), kind.unit_names()))
             }
@@ -127,7 +130,7 @@ impl QuantityError {
                 Some("write the digits together, such as 1200.5".to_owned())
             }
             Self::Fraction { .. } => Some("write 3/8 in or 2-3/16 in, else a decimal number".to_owned()),
-            Self::OutOfRange { .. } => None,
+            Self::TooSmall { .. } => Some("write 0 if nothing is meant".to_owned()),
             Self::BelowAbsoluteZero { .. } => Some("temperatures are in degC, degF or K".to_owned()),
             Self::RangeOrder { .. } => Some("write the lesser value first, such as 0.08 to 0.14".to_owned()),
             Self::NotPlusMinus { .. } => Some("write ±10 um, +/- 10 um or +30 / -10 um".to_owned()),

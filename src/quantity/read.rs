@@ -43,7 +43,7 @@ pub(super) fn value(kind: Kind, scanned: &Scanned<'_>, unit: &str) -> Result<f64
         if !unit.is_empty() {
             return Err(QuantityError::UnitNotDue { given: given() });
         }
-        decimal(scanned, Scale::PowerOfTen(0))?
+        decimal(kind, scanned, Scale::PowerOfTen(0))?
     } else {
         in_unit(scanned, unit_of(kind, scanned.text, unit)?)?
     };
@@ -70,7 +70,7 @@ fn unit_of(kind: Kind, text: &str, spelling: &str) -> Result<&'static Unit, Quan
 
 fn in_unit(scanned: &Scanned<'_>, unit: &Unit) -> Result<f64, QuantityError> {
     match (scanned.amount, unit.scale) {
-        (Amount::Decimal { .. }, scale) => decimal(scanned, scale),
+        (Amount::Decimal { .. }, scale) => decimal(unit.kind, scanned, scale),
         (Amount::Fraction { negative, whole, numerator, denominator }, Scale::Ratio(up, down))
             if matches!(unit.name, "in" | "ft") =>
         {
@@ -83,7 +83,7 @@ fn in_unit(scanned: &Scanned<'_>, unit: &Unit) -> Result<f64, QuantityError> {
     }
 }
 
-fn decimal(scanned: &Scanned<'_>, scale: Scale) -> Result<f64, QuantityError> {
+fn decimal(kind: Kind, scanned: &Scanned<'_>, scale: Scale) -> Result<f64, QuantityError> {
     let Amount::Decimal { negative, digits, exponent } = scanned.amount else {
         return Err(QuantityError::Fraction { given: shown(scanned.text) });
     };
@@ -102,10 +102,13 @@ fn decimal(scanned: &Scanned<'_>, scale: Scale) -> Result<f64, QuantityError> {
             (number + zero_hundredths) * numerator / (100.0 * denominator)
         }
     };
+    if !si.is_finite() {
+        return Err(QuantityError::NotFinite { kind, given: shown(scanned.text) });
+    }
     let is_zero = !digits.contains(|c: char| ('1'..='9').contains(&c));
     let vanished = number == 0.0 || si == 0.0 && !matches!(scale, Scale::Shifted { .. });
-    if vanished && !is_zero || !si.is_finite() {
-        return Err(QuantityError::OutOfRange { given: shown(scanned.text) });
+    if vanished && !is_zero {
+        return Err(QuantityError::TooSmall { given: shown(scanned.text) });
     }
     Ok(si)
 }
