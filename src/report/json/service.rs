@@ -2,8 +2,7 @@
 
 use serde::Serialize;
 
-use super::shape::{celsius, mega};
-use super::{finite, microns};
+use super::number::{celsius, finite, mega, microns, millimetres, rpm};
 use crate::findings::{BendingFindings, Findings};
 use crate::mechanics::plastic::Regime;
 
@@ -27,7 +26,7 @@ impl Bending {
     }
 }
 
-/// What loosens the joint, which fits govern, the plastic hub, fatigue.
+/// What loosens the joint, which fits govern, the plastic hub, fatigue. Interfaces and fits count from 1.
 #[derive(Serialize)]
 pub(super) struct Service {
     loosening: Vec<Loosening>,
@@ -63,7 +62,7 @@ struct Step {
     equivalent_mpa: Vec<Option<f64>>,
 }
 
-/// The hub beyond its elastic limit at the tightest pair.
+/// The hub beyond its elastic limit at the tightest pair; null while it is elastic.
 #[derive(Serialize)]
 struct Plastic {
     rule: &'static str,
@@ -93,7 +92,7 @@ impl Service {
         let state = |index: usize| joint.duty.get(index).map(|state| state.name.clone());
         let loosening = service.loosening.iter().enumerate().map(|(index, loosening)| Loosening {
             interface: index + 1,
-            speed_rpm: loosening.speed.map(|speed| speed * 30.0 / std::f64::consts::PI),
+            speed_rpm: loosening.speed.map(rpm),
             temperature_c: loosening.temperature.map(celsius),
             outer_temperature_c: loosening.outer_temperature.map(celsius),
         });
@@ -140,7 +139,7 @@ fn plastic(findings: &Findings) -> Option<Plastic> {
         regime,
         pressure_mpa: mega(state.pressure),
         limit_pressure_mpa: mega(plastic.limits.limit_pressure),
-        plastic_diameter_mm: state.plastic_diameter * 1e3,
+        plastic_diameter_mm: millimetres(state.plastic_diameter),
         plastic_share: state.plastic_share,
         permanent_growth_um: microns(state.permanent.bore),
     })
