@@ -11,6 +11,7 @@ mod instructions;
 mod materials;
 mod notes;
 mod pictures;
+mod service;
 mod table;
 mod title_block;
 mod worksheet;
@@ -32,11 +33,13 @@ struct Sheet<'a> {
 /// The report of a joint as one HTML file.
 ///
 /// # Example
-/// ```no_run
-/// # fn findings() -> hubgrip::findings::Findings { unimplemented!() }
-/// let page = hubgrip::report::html::html(&findings());
-/// std::fs::write("joint.html", page)?;
-/// # Ok::<(), std::io::Error>(())
+/// ```
+/// use hubgrip::material::library::Library;
+/// use hubgrip::{findings, joint, report};
+/// let text = joint::template::find(None).unwrap().text;
+/// let joint = joint::read::read(text, "joint.yaml".as_ref(), &[], &Library::built_in()).unwrap();
+/// let page = report::html::html(&findings::compute(joint).unwrap());
+/// assert!(page.starts_with("<!DOCTYPE html>") && !page.contains("<script"));
 /// ```
 pub fn html(findings: &Findings) -> String {
     let sheet = Sheet { findings, units: Units { system: findings.joint.display } };
@@ -79,12 +82,13 @@ struct Part {
     body: fn(Sheet) -> Markup,
 }
 
-const PARTS: [Part; 10] = [
+const PARTS: [Part; 11] = [
     Part { id: "answers", heading: "Verdict", body: answers::body },
     Part { id: "section", heading: "Section", body: pictures::section },
     Part { id: "extremes", heading: "Extreme pairs", body: extremes::body },
     Part { id: "pictures", heading: "Pictures", body: pictures::plots },
     Part { id: "duty", heading: "Duty", body: duty::body },
+    Part { id: "service", heading: "At work", body: service::body },
     Part { id: "assembly", heading: "Assembly", body: instructions::body },
     Part { id: "worksheet", heading: "Worksheet", body: worksheet::body },
     Part { id: "inputs", heading: "Inputs", body: inputs::body },

@@ -1,7 +1,9 @@
-//! Plots: tolerance zones, stress through the walls, press force along the travel, diameters against temperature.
+//! Plots: tolerance zones, stress through the walls, press force along the travel, diameters against temperature,
+//! what is left of the grip at work.
 
 mod axis;
 mod chart;
+mod envelope;
 mod press;
 mod stress;
 mod tags;
@@ -10,6 +12,7 @@ mod zones;
 
 use maud::Markup;
 
+pub use envelope::envelope;
 pub use press::press_force;
 pub use stress::stress;
 pub use temperature::diameters;
