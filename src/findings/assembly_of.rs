@@ -21,10 +21,10 @@ pub(super) fn assembly(
         mean: press_curve(joint, &extremes.mean, 0.5 * (pressing.low + pressing.high))?,
         tightest: press_curve(joint, &extremes.tightest, pressing.high)?,
     };
-    let (shaft, hub) = joint.shaft_and_hub();
+    let (shaft, hub) = joint.joined_last();
     let hub_limit = hub_limit(joint);
     let joining = Joining {
-        diameter: joint.diameter,
+        diameter: joint.interface_diameter(joint.last_interface()),
         interference: extremes.tightest.interference,
         clearance: joint.assembly.clearance.value,
         hub: &hub.material.expansion,
@@ -61,7 +61,7 @@ pub(super) fn press_input(joint: &Joint, pressure: f64, interference: f64, frict
     PressInput {
         pressure,
         interference: interference.max(0.0),
-        diameter: joint.diameter,
+        diameter: joint.interface_diameter(joint.last_interface()),
         length: joint.engaged_length(),
         friction,
         chamfer_angle: joint.assembly.chamfer_angle.value,
@@ -177,7 +177,7 @@ impl Words<'_> {
 
 /// The lower of the material's limit and the user's.
 fn hub_limit(joint: &Joint) -> Option<(f64, String)> {
-    let hub = joint.rings.last()?;
+    let (_, hub) = joint.joined_last();
     let material = hub
         .material
         .max_temperature

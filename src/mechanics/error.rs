@@ -2,6 +2,7 @@
 
 use thiserror::Error;
 
+use crate::numerics::interpolation::InterpolationError;
 use crate::numerics::root::RootError;
 
 /// An input outside the range in which a formula holds. Numbers are SI.
@@ -56,4 +57,18 @@ pub enum MechanicsError {
         /// Why it was not found.
         reason: RootError,
     },
+    /// A search that did not settle.
+    #[error("{what} did not settle after {steps} steps")]
+    NotSettled {
+        /// What was sought.
+        what: &'static str,
+        /// Steps taken.
+        steps: usize,
+    },
+    /// A root that was not found.
+    #[error(transparent)]
+    Root(#[from] RootError),
+    /// A table that could not be read.
+    #[error(transparent)]
+    Interpolation(#[from] InterpolationError),
 }

@@ -65,18 +65,28 @@ impl Influence {
 
     /// Radial gaps under these pressures, m.
     pub fn gaps(&self, pressures: &[f64]) -> Vec<f64> {
+        self.gaps_from(&self.free_gaps, pressures)
+    }
+
+    /// M p + `free_gaps`, for other free gaps than the stack's own.
+    pub(super) fn gaps_from(&self, free_gaps: &[f64], pressures: &[f64]) -> Vec<f64> {
         let pressure = |k: usize| pressures.get(k).copied().unwrap_or(0.0);
-        (0..self.len())
-            .map(|k| {
-                let before = if k > 0 { self.lower[k] * pressure(k - 1) } else { 0.0 };
-                self.diagonal[k] * pressure(k) + before + self.upper[k] * pressure(k + 1) + self.free_gaps[k]
-            })
-            .collect()
+        let own = self.diagonal.iter().zip(&self.lower).zip(&self.upper).zip(free_gaps).enumerate();
+        own.map(|(k, (((diagonal, lower), upper), free_gap))| {
+            let before = if k > 0 { lower * pressure(k - 1) } else { 0.0 };
+            diagonal * pressure(k) + before + upper * pressure(k + 1) + free_gap
+        })
+        .collect()
     }
 
     /// Pressures that close these interfaces, the others being without pressure.
     pub(super) fn closing_pressures(&self, closed: &[bool]) -> Vec<f64> {
-        let right = self.free_gaps.iter().map(|gap| -gap).collect();
+        self.closing_pressures_from(&self.free_gaps, closed)
+    }
+
+    /// Pressures that take back `free_gaps` at these interfaces, the others being without pressure.
+    pub(super) fn closing_pressures_from(&self, free_gaps: &[f64], closed: &[bool]) -> Vec<f64> {
+        let right = free_gaps.iter().map(|gap| -gap).collect();
         eliminate(&self.lower, &self.diagonal, &self.upper, right, closed)
     }
 

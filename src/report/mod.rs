@@ -8,6 +8,7 @@ pub mod limits;
 pub mod materials;
 pub mod mathml;
 pub mod plot;
+pub mod service;
 pub mod terminal;
 
 mod hatch;

@@ -10,6 +10,7 @@ use crate::joint::*;
 use crate::material::library::Library;
 use crate::material::{Kind, Range, Sourced};
 use crate::mechanics::criteria::{self, DuctileCriterion};
+use crate::mechanics::plastic::YieldRule;
 use crate::mechanics::ring::RingSection;
 use crate::mechanics::stack::Stack;
 use crate::quantity::UnitSystem;
@@ -324,10 +325,9 @@ fn joint(spec: &Spec) -> Joint {
     });
     let range = |low, high| Sourced::new(Range { low, high }, "common practice, no source");
     let state = |name: &str, load: f64, temperature: f64| DutyState {
-        name: name.into(),
         torque: load * spec.torque,
         axial_force: spec.axial_force,
-        temperatures: vec![temperature; rings.len()],
+        ..DutyState::unloaded(name, vec![temperature; rings.len()])
     };
     Joint {
         title: spec.title.into(),
@@ -338,6 +338,8 @@ fn joint(spec: &Spec) -> Joint {
         length: spec.length / 1e3,
         relief: spec.relief / 1e3,
         fits: fits.collect(),
+        order: (0..rings.len() - 1).collect(),
+        slices: Vec::new(),
         friction: Friction {
             holding: range(0.12, 0.12),
             pressing: range(0.08, 0.14),
@@ -367,6 +369,8 @@ fn joint(spec: &Spec) -> Joint {
             yield_safety: 1.2,
             fracture_safety: 1.6,
             press_force: (spec.method == Method::Press).then_some(150e3),
+            allow: Allow::Elastic,
+            yield_rule: YieldRule::Tresca,
         },
         display: spec.display,
         defaults: [

@@ -5,7 +5,7 @@ use super::super::expression::{Expression, greatest, num, sym};
 use super::Units;
 use super::sheet::Sheet;
 use crate::joint::SmoothingAt;
-use crate::tolerance::{FitLimits, Member};
+use crate::tolerance::FitLimits;
 
 pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let joint = &findings.joint;
@@ -44,13 +44,12 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
 }
 
 fn limits(sheet: &mut Sheet, limits: &FitLimits, units: &Units, source: &str) {
-    for (member, symbol, meaning, deviation) in [
-        (Member::Hole, "EI", "lower deviation of the hole", limits.hole.lower),
-        (Member::Hole, "ES", "upper deviation of the hole", limits.hole.upper),
-        (Member::Shaft, "ei", "lower deviation of the shaft", limits.shaft.lower),
-        (Member::Shaft, "es", "upper deviation of the shaft", limits.shaft.upper),
+    for (symbol, meaning, deviation) in [
+        ("EI", "lower deviation of the hole", limits.hole.lower),
+        ("ES", "upper deviation of the hole", limits.hole.upper),
+        ("ei", "lower deviation of the shaft", limits.shaft.lower),
+        ("es", "upper deviation of the shaft", limits.shaft.upper),
     ] {
-        let _ = member;
         sheet.input(symbol, meaning, deviation * units.small_per_metre, units.small, source);
     }
 }
