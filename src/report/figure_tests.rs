@@ -142,7 +142,7 @@ fn captions_say_what_to_see_with_its_numbers() {
     let stress = plot::stress(&findings).unwrap().caption;
     let web = &findings.extremes.tightest.rings[1];
     let share = 100.0 * web.equivalent / web.strength.unwrap();
-    assert!(stress.contains(&format!("{share:.0} % of yield")), "{stress}");
+    assert!(stress.contains(&format!("{share:.0}\u{202F}% of yield")), "{stress}");
     assert!(stress.contains("as if it stayed elastic"), "{stress}");
     assert!(plot::tolerance_zones(&findings).caption.contains("152\u{202F}µm"));
     let transition = plot::tolerance_zones(&sample::transition()).caption;

@@ -11,6 +11,7 @@ use crate::mechanics::criteria::{self, DuctileCriterion};
 use crate::mechanics::ring::{RingLoad, RingSection, Stress};
 use crate::report::svg::Point;
 use crate::report::text_width::fitted;
+use crate::report::typeset::THIN;
 use crate::report::units::{Measure, Units};
 
 /// Points of each curve through one wall.
@@ -311,7 +312,7 @@ fn ring_sentence(findings: &Findings, ring: &Ring, stress: &RingStress, hidden: 
     let elastic = if share > 100.0 { ", computed as if it stayed elastic" } else { "" };
     let above = if hidden { ", which lies above the picture" } else { "" };
     format!(
-        "At the tightest pair the {name} reaches {}, {share:.0} % of {kind} ({}{above}){elastic}.",
+        "At the tightest pair the {name} reaches {}, {share:.0}{THIN}% of {kind} ({}{above}){elastic}.",
         pressure(stress.equivalent),
         pressure(strength)
     )
