@@ -11,7 +11,7 @@ use hubgrip::mechanics::criteria::{greatest_principal, tresca, von_mises};
 use hubgrip::mechanics::ring::{RingLoad, RingSection};
 use hubgrip::mechanics::stack::Stack;
 use hubgrip::mechanics::two_rings::TwoRings;
-use hubgrip::mechanics::{MechanicsError, capacity, rotation};
+use hubgrip::mechanics::{MechanicsError, capacity, rotation, temperature};
 use printed::{MPA, assert_prints};
 
 const MICRON: f64 = 1e-6;
@@ -285,4 +285,68 @@ fn a_joint_that_speed_does_not_loosen() {
     // A clearance is loose at standstill.
     assert_eq!(rotation::loosening_speed(&shaft, &hub, -10e-6).unwrap(), Some(0.0));
     assert_eq!(Stack { interference: vec![-10e-6], ..stack }.loosening_speeds().unwrap(), [Some(0.0)]);
+}
+
+#[test]
+fn loosening_temperature_of_two_rings() {
+    // Equal free growth of both faces: ΔT = δ/(d (αh − αs)); aluminium hub 23e-6, steel shaft 12e-6 /K.
+    assert_prints(temperature::loosening_rise(50e-6, 0.05, 23e-6, 12e-6).unwrap().unwrap(), "90.909091", 1.0);
+    // A hub that expands less loosens on cooling.
+    assert_prints(
+        temperature::loosening_rise(50e-6, 0.05, 12e-6, 23e-6).unwrap().unwrap(),
+        "-90.909091",
+        1.0,
+    );
+    assert_eq!(temperature::loosening_rise(50e-6, 0.05, 12e-6, 12e-6).unwrap(), None);
+    assert!(temperature::loosening_rise(-50e-6, 0.05, 23e-6, 12e-6).is_err());
+}
+
+#[test]
+fn loosening_temperature_along_a_curve() {
+    let mut stack = steel_stack(&[0.0, 25.0, 50.0], &[50.0]);
+    stack.rings[1] = RingSection::new(0.025, 0.05, 70e9, 0.33, 2700.0).unwrap();
+    let straight = |kelvin: f64| vec![12e-6 * (kelvin - 293.15), 23e-6 * (kelvin - 293.15)];
+    let found = |from: f64, to: f64| stack.loosening_temperature(0, straight, from, to).unwrap();
+    assert_prints(found(293.15, 600.0).unwrap() - 293.15, "90.909091", 1.0);
+    assert_eq!(found(293.15, 380.0), None);
+    assert_eq!(found(293.15, 20.0), None);
+    assert_eq!(found(500.0, 600.0), Some(500.0));
+    // Strain difference 11e-6 t + 2e-9 t² = 1e-3: t = (√(121e-12 + 8e-12) − 11e-6)/4e-9 by the quadratic formula.
+    let curved = |kelvin: f64| {
+        let rise = kelvin - 293.15;
+        vec![12e-6 * rise, 23e-6 * rise + 2e-9 * rise * rise]
+    };
+    let rise = ((129e-12_f64).sqrt() - 11e-6) / 4e-9;
+    let found = stack.loosening_temperature(0, curved, 293.15, 600.0).unwrap().unwrap();
+    assert_relative_eq!(found - 293.15, rise, max_relative = 1e-10);
+    assert!(stack.loosening_temperature(1, curved, 293.15, 600.0).is_err());
+    assert!(stack.loosening_temperature(0, |_| vec![f64::NAN; 2], 293.15, 600.0).is_err());
+}
+
+#[test]
+fn stress_of_a_ring_through_which_heat_flows() {
+    // Timoshenko & Goodier, 3rd ed., chapter 13 (there for a long cylinder, E/(1 − ν) in place of E): bore hotter
+    // by αΔT, σφ(a) = E αΔT/(2 ln(b/a)) (1 − 2 b²/(b² − a²) ln(b/a)), σφ(b) = E αΔT/(2 ln(b/a)) (1 − 2 a²/(b² − a²)
+    // ln(b/a)); 25/50 mm, 200 GPa, αΔT = 1.2e-3.
+    let ring = steel_ring(25.0, 50.0);
+    let load = RingLoad { free_strain: 1.2e-3, strain_rise: -1.2e-3, ..RingLoad::default() };
+    let logarithm = 2.0_f64.ln();
+    let scale = 200e9 * 1.2e-3 / (2.0 * logarithm);
+    let (bore, rim) = (ring.stress_at(&load, 0.025).unwrap(), ring.stress_at(&load, 0.050).unwrap());
+    assert_relative_eq!(bore.hoop, scale * (1.0 - 8.0 / 3.0 * logarithm), max_relative = 1e-12);
+    assert_relative_eq!(rim.hoop, scale * (1.0 - 2.0 / 3.0 * logarithm), max_relative = 1e-12);
+    assert!(bore.radial.abs() < 1e-6 && rim.radial.abs() < 1e-6);
+    // Both faces grow by the mean over the area.
+    let growth = temperature::free_growth(&ring, 1.2e-3, 0.0).unwrap();
+    assert_relative_eq!(ring.displacement_at(&load, 0.025).unwrap(), growth * 0.025, max_relative = 1e-12);
+    assert_relative_eq!(ring.displacement_at(&load, 0.050).unwrap(), growth * 0.050, max_relative = 1e-12);
+    // A thin wall: ±E αΔT/2 (the bending of a plate), here to the first order of the wall over the radius.
+    let thin = steel_ring(1000.0, 1000.1);
+    let face = |radius: f64| thin.stress_at(&load, radius).unwrap().hoop;
+    assert_relative_eq!(face(1.0), -0.5 * 200e9 * 1.2e-3, max_relative = 1e-4);
+    assert_relative_eq!(face(1.0001), 0.5 * 200e9 * 1.2e-3, max_relative = 1e-4);
+    let solid = steel_ring(0.0, 25.0);
+    assert!(solid.stress_at(&load, 0.010).is_err());
+    assert!(temperature::free_growth(&solid, 1e-3, 0.0).is_err());
+    assert_eq!(temperature::free_growth(&solid, 1e-3, 1e-3).unwrap(), 1e-3);
 }

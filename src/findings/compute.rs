@@ -3,9 +3,11 @@
 use thiserror::Error;
 
 use super::kernel::{Kernel, pair_interferences};
-use super::{DutyFindings, Findings, OnsetOfYield, assembly_of, cautions, service, verdicts, worksheet};
+use super::{
+    DutyFindings, Findings, OnsetOfYield, assembly_of, cautions, service, softening, verdicts, worksheet,
+};
 use crate::assembly::AssemblyError;
-use crate::joint::Joint;
+use crate::joint::{Allow, Joint};
 use crate::mechanics::MechanicsError;
 use crate::numerics::interpolation::InterpolationError;
 use crate::numerics::root::RootError;
@@ -52,12 +54,12 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
     }
     let kernel = Kernel::new(&joint)?;
     let pairs = pair_interferences(&joint);
-    let extremes = Extremes {
+    let mut extremes = Extremes {
         loosest: kernel.pair(&pairs.loosest)?,
         mean: kernel.pair(&pairs.mean)?,
         tightest: kernel.pair(&pairs.tightest)?,
     };
-    let duty = joint
+    let mut duty = joint
         .duty
         .iter()
         .map(|state| {
@@ -69,6 +71,9 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         .collect::<Result<Vec<_>, FindingsError>>()?;
     let onset_of_yield = onset_of_yield(&joint, &kernel)?;
     let service = service::service(&joint, &kernel, &pairs)?;
+    if let (Allow::Plastic { .. }, Some(plastic)) = (joint.require.allow, &service.plastic) {
+        softening::soften(&mut extremes, &mut duty, plastic);
+    }
     let assembly = assembly_of::assembly(&joint, &extremes)?;
     let character =
         joint.fits.get(joint.last_interface()).map_or(Character::Clearance, |fit| fit.limits.character());

@@ -151,6 +151,11 @@ impl<'a> Kernel<'a> {
         stack_of(self.pieces.first().map_or(&[], |piece| &piece.sections), interference, condition)
     }
 
+    /// The rings of every piece.
+    pub(super) fn stacks(&self, interference: &[f64], condition: &Condition) -> Vec<Stack> {
+        self.pieces.iter().map(|piece| stack_of(&piece.sections, interference, condition)).collect()
+    }
+
     fn solve(&self, interference: &[f64], condition: &Condition) -> Result<Vec<Solved>, MechanicsError> {
         self.pieces
             .iter()

@@ -6,6 +6,7 @@ mod compute;
 pub mod expression;
 mod kernel;
 mod service;
+mod softening;
 mod verdicts;
 pub mod worksheet;
 
@@ -13,8 +14,9 @@ pub use assembly_of::{bath_name, bath_temperature};
 pub use cautions::criterion_source;
 pub use compute::{FindingsError, compute};
 pub use kernel::after_smoothing;
-pub use service::{Loosening, OrderStep, PlasticFindings, ServiceFindings};
-pub use verdicts::failure;
+pub use service::{Fatigue, GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings};
+pub use softening::plastic_share_of_pressure;
+pub use verdicts::{combination, failure};
 
 pub use crate::assembly::cautions::Caution;
 use crate::assembly::press::PressCurve;
@@ -269,6 +271,8 @@ pub enum VerdictUnit {
     Force,
     /// Temperature, K.
     Temperature,
+    /// A share of the whole, 0 to 1.
+    Share,
 }
 
 /// One requirement with what was found.

@@ -23,8 +23,9 @@ pub(crate) const NOT_YET: &[&str] = &["rings", "fits", "order", "bearing", "step
 
 /// The sections with their keys, for a key that was put into the wrong one.
 pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
-    ("shaft", &["name", "material", "bore", "roughness", "section"]),
-    ("hub", &["name", "material", "outer_diameter", "roughness", "section"]),
+    ("shaft", &["name", "material", "bore", "roughness", "section", "steps"]),
+    ("hub", &["name", "material", "outer_diameter", "roughness", "section", "steps"]),
+    ("rings", &["name", "material", "bore", "outer_diameter", "roughness", "section"]),
     ("fit", &["hole", "measured"]),
     ("friction", &["holding", "pressing", "release", "lubrication"]),
     (
@@ -34,6 +35,7 @@ pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
             "torque",
             "axial_force",
             "temperature",
+            "temperatures",
             "shaft_temperature",
             "hub_temperature",
             "speed",
@@ -92,7 +94,6 @@ pub(crate) struct JointFile {
     /// Date as it shall be printed.
     pub(crate) date: Option<Written<Line>>,
     /// Nominal diameter of the mating surface.
-    #[schemars(required)]
     pub(crate) diameter: Option<Written<Length>>,
     /// Length of the hub along the shaft.
     #[schemars(required)]
@@ -100,13 +101,10 @@ pub(crate) struct JointFile {
     /// Part of the length that carries nothing: chamfers and grooves. Silent: 0 mm.
     pub(crate) relief: Option<Written<Length>>,
     /// The inner part.
-    #[schemars(required)]
     pub(crate) shaft: Option<At<ShaftKeys>>,
     /// The outer part.
-    #[schemars(required)]
     pub(crate) hub: Option<At<HubKeys>>,
     /// The fit: a callout such as H7/s6 or FN 4, or the limits of hole and shaft, or two measured parts.
-    #[schemars(required)]
     pub(crate) fit: Option<At<TextOr<FitText, FitKeys>>>,
     /// Coefficients of friction. Silent: from the library by pair of materials and method of assembly.
     pub(crate) friction: Option<At<TextOr<FrictionText, FrictionKeys>>>,
@@ -122,12 +120,12 @@ pub(crate) struct JointFile {
     pub(crate) require: Option<At<RequireKeys>>,
     /// Units on the terminal and in the report. Silent: metric.
     pub(crate) display: Option<Written<DisplayWord>>,
-    #[schemars(skip)]
-    pub(crate) rings: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) fits: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) order: Option<At<NotYet>>,
+    /// Two rings or more from the innermost outwards, in place of shaft and hub.
+    pub(crate) rings: Option<At<Vec<At<RingKeys>>>>,
+    /// The fits between neighbouring rings, one less than there are rings.
+    pub(crate) fits: Option<At<Vec<At<TextOr<FitText, FitKeys>>>>>,
+    /// Numbers of the fits in the order in which they are joined. Silent: from the innermost outwards.
+    pub(crate) order: Option<At<Vec<Written<Number>>>>,
     #[schemars(skip)]
     pub(crate) bearing: Option<At<NotYet>>,
 }
@@ -147,8 +145,8 @@ pub(crate) struct ShaftKeys {
     pub(crate) roughness: Option<Written<Roughness>>,
     /// Ruling section that picks its strength. Silent: its diameter.
     pub(crate) section: Option<Written<Length>>,
-    #[schemars(skip)]
-    pub(crate) steps: Option<At<NotYet>>,
+    /// A shaft whose bore changes: length and bore of each piece, from the end that enters first.
+    pub(crate) steps: Option<At<Vec<At<ShaftStepKeys>>>>,
 }
 
 /// The outer part.
@@ -160,15 +158,58 @@ pub(crate) struct HubKeys {
     /// Material of the library by name, or written here with the keys of a library file.
     #[schemars(required)]
     pub(crate) material: Option<At<TextOr<MaterialName, MaterialKeys>>>,
-    /// Its outer diameter.
-    #[schemars(required)]
+    /// Its outer diameter; the largest of the steps when it is stepped.
     pub(crate) outer_diameter: Option<Written<Length>>,
     /// Roughness of its bore, such as Rz 10 um.
     pub(crate) roughness: Option<Written<Roughness>>,
     /// Ruling section that picks its strength. Silent: the thickness of its wall.
     pub(crate) section: Option<Written<Length>>,
-    #[schemars(skip)]
-    pub(crate) steps: Option<At<NotYet>>,
+    /// A stepped hub: length and outer diameter of each piece, from the end that enters first.
+    pub(crate) steps: Option<At<Vec<At<HubStepKeys>>>>,
+}
+
+/// One piece of a stepped hub.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct HubStepKeys {
+    /// Its length along the shaft.
+    #[schemars(required)]
+    pub(crate) length: Option<Written<Length>>,
+    /// Outer diameter of the hub there.
+    #[schemars(required)]
+    pub(crate) outer_diameter: Option<Written<Length>>,
+}
+
+/// One piece of a shaft whose bore changes.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct ShaftStepKeys {
+    /// Its length along the shaft.
+    #[schemars(required)]
+    pub(crate) length: Option<Written<Length>>,
+    /// Bore of the shaft there.
+    #[schemars(required)]
+    pub(crate) bore: Option<Written<Length>>,
+}
+
+/// One of several rings.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct RingKeys {
+    /// What it is called. Silent: ring and its number.
+    pub(crate) name: Option<Written<Line>>,
+    /// Material of the library by name, or written here with the keys of a library file.
+    #[schemars(required)]
+    pub(crate) material: Option<At<TextOr<MaterialName, MaterialKeys>>>,
+    /// Bore of the innermost ring. Silent: 0 mm, a solid core.
+    pub(crate) bore: Option<Written<Length>>,
+    /// Its outer diameter.
+    #[schemars(required)]
+    pub(crate) outer_diameter: Option<Written<Length>>,
+    /// Roughness of its mating surfaces, such as Rz 6.3 um.
+    pub(crate) roughness: Option<Written<Roughness>>,
+    /// Ruling section that picks its strength. Silent: the thickness of its wall, or the diameter of a solid core.
+    pub(crate) section: Option<Written<Length>>,
 }
 
 /// The fit with hole and shaft apart, or two measured parts.
@@ -239,6 +280,8 @@ pub(crate) struct StateKeys {
     pub(crate) axial_force: Option<Written<Force>>,
     /// Temperature of all parts.
     pub(crate) temperature: Option<Written<Temperature>>,
+    /// Temperature of each ring, innermost first.
+    pub(crate) temperatures: Option<At<Vec<Written<Temperature>>>>,
     /// Temperature of the shaft.
     pub(crate) shaft_temperature: Option<Written<Temperature>>,
     /// Temperature of the hub.

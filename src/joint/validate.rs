@@ -6,20 +6,25 @@ mod duty;
 mod fit;
 mod friction;
 mod parts;
+mod rings;
 mod smoothing;
+mod steps;
 
+use super::diagnose::Fault;
 use super::draft::Draft;
-use super::file::{JointFile, RequireKeys};
+use super::file::{JointFile, RequireKeys, RingKeys};
 use super::leaf::{CriterionWord, DisplayWord};
 use super::written::{At, Written};
-use super::{Allow, Joint, Requirements};
+use super::{Allow, Fit, Joint, Requirements, Ring};
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::mechanics::plastic::YieldRule;
 use crate::quantity::{Kind, Number, UnitSystem, written};
 
 /// The keys in the order of the joint file, which is the order of the defaults.
-const ORDER: [&str; 12] = [
+const ORDER: [&str; 14] = [
     "relief",
+    "rings",
+    "order",
     "shaft",
     "hub",
     "fit",
@@ -52,15 +57,15 @@ const FRACTURE_SAFETY: (f64, &str) = (
 /// The joint, unless something is wrong.
 pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
     refuse_what_is_not_calculated(draft, file);
-    let root = draft.tree.root();
-    let diameter = draft
-        .required(root, "diameter", "60 mm", file.diameter.as_ref())
-        .and_then(|written| draft.positive(written));
     let (length, relief) = lengths(draft, file);
     let method = assembly::method(draft, file);
     let shop = assembly::shop_temperature(draft, file);
-    let rings = parts::rings(draft, file, diameter);
-    let fit = fit::fit(draft, file, diameter);
+    let Body { diameter, rings, fits, order } = match &file.rings {
+        Some(list) => many_rings(draft, file, list),
+        None => two_parts(draft, file),
+    };
+    let slices =
+        if file.rings.is_some() { Some(Vec::new()) } else { steps::slices(draft, file, diameter, length) };
     let friction = friction::friction(draft, file, rings.as_deref(), method);
     let duty = duty::states(draft, file, rings.as_deref(), shop);
     let assembly = assembly::plan(draft, file, rings.as_deref(), diameter, method, shop);
@@ -82,9 +87,9 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
         length: length?,
         relief: relief?,
         rings: rings?,
-        fits: vec![fit?],
-        order: vec![0],
-        slices: Vec::new(),
+        fits: fits?,
+        order: order?,
+        slices: slices?,
         friction: friction?,
         duty: duty?,
         assembly: assembly?,
@@ -99,16 +104,47 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
     })
 }
 
+/// What the joint consists of.
+struct Body {
+    diameter: Option<f64>,
+    rings: Option<Vec<Ring>>,
+    fits: Option<Vec<Fit>>,
+    order: Option<Vec<usize>>,
+}
+
+fn two_parts(draft: &mut Draft<'_>, file: &JointFile) -> Body {
+    for (key, node) in
+        [("fits", file.fits.as_ref().map(|at| at.node)), ("order", file.order.as_ref().map(|at| at.node))]
+    {
+        if let Some(node) = node {
+            let fault = Fault::key(node, format!("`{key}` goes with `rings`"));
+            draft.faults.add(fault.help("two parts have `shaft`, `hub` and one `fit`"));
+        }
+    }
+    let root = draft.tree.root();
+    let diameter = draft
+        .required(root, "diameter", "60 mm", file.diameter.as_ref())
+        .and_then(|written| draft.positive(written));
+    let rings = parts::rings(draft, file, diameter);
+    let fit = fit::fit(draft, file, diameter);
+    Body { diameter, rings, fits: fit.map(|fit| vec![fit]), order: Some(vec![0]) }
+}
+
+fn many_rings(draft: &mut Draft<'_>, file: &JointFile, list: &At<Vec<At<RingKeys>>>) -> Body {
+    rings::refuse_two_parts(draft, file);
+    let rings = rings::rings(draft, list);
+    let fits = rings::fits(draft, file, rings.as_deref());
+    let order = rings::order(draft, file, list.value.len().saturating_sub(1));
+    let diameter = rings.as_ref().and_then(|rings| rings.first()).map(|ring| ring.outer_diameter);
+    Body { diameter, rings, fits, order }
+}
+
 fn rank(key: &str) -> usize {
     let section = key.split('.').next().unwrap_or(key);
     ORDER.iter().position(|known| *known == section).unwrap_or(ORDER.len())
 }
 
 fn refuse_what_is_not_calculated(draft: &Draft<'_>, file: &JointFile) {
-    let two = "write `shaft:`, `hub:` and `fit:` for two parts";
-    draft.not_yet(file.rings.as_ref(), "only joints of two parts are calculated", two);
-    draft.not_yet(file.fits.as_ref(), "only one fit between two parts is calculated", two);
-    draft.not_yet(file.order.as_ref(), "two parts have no order of assembly", "take the key out");
     draft.not_yet(
         file.bearing.as_ref(),
         "bearing seats are not calculated",

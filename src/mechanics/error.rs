@@ -2,6 +2,7 @@
 
 use thiserror::Error;
 
+use crate::numerics::interpolation::InterpolationError;
 use crate::numerics::root::RootError;
 
 /// An input outside the range in which a formula holds. Numbers are SI.
@@ -64,4 +65,10 @@ pub enum MechanicsError {
         /// Steps taken.
         steps: usize,
     },
+    /// A root that was not found.
+    #[error(transparent)]
+    Root(#[from] RootError),
+    /// A table that could not be read.
+    #[error(transparent)]
+    Interpolation(#[from] InterpolationError),
 }

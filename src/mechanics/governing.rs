@@ -2,6 +2,7 @@
 
 use super::criteria;
 use super::error::MechanicsError;
+use super::ring::{RingLoad, Stress, check};
 use super::stack::{Stack, StackSolution};
 
 /// A pressure or a stress of a stack.
@@ -189,8 +190,8 @@ impl Stack {
                 let load = self.ring_load(ring, solution)?;
                 let stress = self.rings[ring].stress_at(&load, radius)?;
                 let (by_radial, by_hoop) = measure.slopes(stress.radial, stress.hoop);
-                for (interface, (radial, hoop)) in self.unit_stresses(ring, radius)? {
-                    slopes[interface] = by_radial * radial + by_hoop * hoop;
+                for (interface, unit) in self.unit_stresses(ring, radius)? {
+                    slopes[interface] = by_radial * unit.radial + by_hoop * unit.hoop;
                 }
             }
         }
@@ -198,18 +199,16 @@ impl Stack {
     }
 
     /// Stress at a place of a ring under a unit pressure at each of its interfaces.
-    fn unit_stresses(&self, ring: usize, radius: f64) -> Result<Vec<(usize, (f64, f64))>, MechanicsError> {
+    fn unit_stresses(&self, ring: usize, radius: f64) -> Result<Vec<(usize, Stress)>, MechanicsError> {
         let section = &self.rings[ring];
-        let mut stresses = Vec::new();
+        let mut stresses = Vec::with_capacity(2);
         if ring > 0 {
-            let inner = super::ring::RingLoad { inner_pressure: 1.0, ..Default::default() };
-            let stress = section.stress_at(&inner, radius)?;
-            stresses.push((ring - 1, (stress.radial, stress.hoop)));
+            let inner = RingLoad { inner_pressure: 1.0, ..RingLoad::default() };
+            stresses.push((ring - 1, section.stress_at(&inner, radius)?));
         }
         if ring < self.interference.len() {
-            let outer = super::ring::RingLoad { outer_pressure: 1.0, ..Default::default() };
-            let stress = section.stress_at(&outer, radius)?;
-            stresses.push((ring, (stress.radial, stress.hoop)));
+            let outer = RingLoad { outer_pressure: 1.0, ..RingLoad::default() };
+            stresses.push((ring, section.stress_at(&outer, radius)?));
         }
         Ok(stresses)
     }
@@ -221,7 +220,7 @@ impl Stack {
             }
         }
         for (loose, tight) in loosest.iter().zip(tightest) {
-            super::ring::check("loosest interference (m)", *loose, "at most the tightest", loose <= tight)?;
+            check("loosest interference (m)", *loose, "at most the tightest", loose <= tight)?;
         }
         Ok(())
     }

@@ -8,6 +8,7 @@ pub mod limits;
 pub mod materials;
 pub mod mathml;
 pub mod plot;
+pub mod service;
 pub mod terminal;
 
 mod hatch;
@@ -16,6 +17,10 @@ mod text_width;
 mod typeset;
 mod units;
 
+#[cfg(test)]
+mod figure_tests;
+#[cfg(test)]
+mod lettering;
 #[cfg(test)]
 mod page_tests;
 #[cfg(test)]

@@ -8,8 +8,9 @@ use std::sync::{Arc, OnceLock};
 use crate::findings::{FaceStress, Findings, RingStress, compute};
 use crate::joint::*;
 use crate::material::library::Library;
-use crate::material::{Range, Sourced};
+use crate::material::{Kind, Range, Sourced};
 use crate::mechanics::criteria::{self, DuctileCriterion};
+use crate::mechanics::plastic::YieldRule;
 use crate::mechanics::ring::RingSection;
 use crate::mechanics::stack::Stack;
 use crate::quantity::UnitSystem;
@@ -184,15 +185,18 @@ fn stresses(joint: &Joint, interference: Vec<f64>) -> Vec<RingStress> {
             FaceStress { radial, hoop, von_mises, tresca }
         };
         let (bore, rim) = (face(section.inner_radius()), face(section.outer_radius()));
-        let equivalent = bore.von_mises.max(rim.von_mises);
-        let strength = ring.strength.yield_strength;
+        let tension = |face: &FaceStress| criteria::greatest_principal(face.radial, face.hoop);
+        let (equivalent, strength) = match ring.material.kind {
+            Kind::Brittle => (tension(&bore).max(tension(&rim)), ring.strength.tensile_strength),
+            _ => (bore.von_mises.max(rim.von_mises), ring.strength.yield_strength),
+        };
         let change = |radius: f64| 2.0 * section.displacement_at(&load, radius).unwrap();
         RingStress {
             bore,
             rim,
             equivalent,
             strength,
-            safety: strength.map(|strength| strength / equivalent),
+            safety: strength.filter(|_| equivalent > 0.0).map(|strength| strength / equivalent),
             bore_change: change(section.inner_radius()),
             outer_change: change(section.outer_radius()),
         }
@@ -321,10 +325,9 @@ fn joint(spec: &Spec) -> Joint {
     });
     let range = |low, high| Sourced::new(Range { low, high }, "common practice, no source");
     let state = |name: &str, load: f64, temperature: f64| DutyState {
-        name: name.into(),
         torque: load * spec.torque,
         axial_force: spec.axial_force,
-        temperatures: vec![temperature; rings.len()],
+        ..DutyState::unloaded(name, vec![temperature; rings.len()])
     };
     Joint {
         title: spec.title.into(),
@@ -335,6 +338,8 @@ fn joint(spec: &Spec) -> Joint {
         length: spec.length / 1e3,
         relief: spec.relief / 1e3,
         fits: fits.collect(),
+        order: (0..rings.len() - 1).collect(),
+        slices: Vec::new(),
         friction: Friction {
             holding: range(0.12, 0.12),
             pressing: range(0.08, 0.14),
@@ -364,6 +369,8 @@ fn joint(spec: &Spec) -> Joint {
             yield_safety: 1.2,
             fracture_safety: 1.6,
             press_force: (spec.method == Method::Press).then_some(150e3),
+            allow: Allow::Elastic,
+            yield_rule: YieldRule::Tresca,
         },
         display: spec.display,
         defaults: [

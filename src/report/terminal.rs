@@ -32,6 +32,7 @@ pub fn text(findings: &Findings) -> String {
     answers(&mut out, findings);
     extremes(&mut out, findings);
     duty(&mut out, findings);
+    service(&mut out, findings);
     assembly(&mut out, findings);
     defaults(&mut out, findings);
     cautions(&mut out, findings);
@@ -71,7 +72,8 @@ fn title(out: &mut String, findings: &Findings) {
         line(out, format!("{HEADING}{wrapped}{HEADING:#}"));
     }
     let size = show(Measure::Size, joint.diameter, joint.display);
-    let callout = joint.fits.first().map_or("", |fit| fit.callout.as_str());
+    let callouts: Vec<&str> = joint.fits.iter().map(|fit| fit.callout.as_str()).collect();
+    let callout = callouts.join(", ");
     let interference = &findings.extremes;
     let unit = display_unit(Measure::Deviation, joint.display).name;
     let from = show(Measure::Deviation, interference.loosest.interference, joint.display).number;
@@ -118,6 +120,7 @@ pub fn verdict_value(value: f64, unit: VerdictUnit, system: UnitSystem) -> Strin
         VerdictUnit::Safety => safety(value),
         VerdictUnit::Force => show(Measure::Force, value, system).to_string(),
         VerdictUnit::Temperature => show(Measure::Temperature, value, system).to_string(),
+        VerdictUnit::Share => format!("{:.1} %", value * 100.0),
     }
 }
 
@@ -165,7 +168,7 @@ pub fn verdict_sentence(verdict: &Verdict, system: UnitSystem) -> String {
     let found = verdict.found.map_or_else(|| "does not exist".to_owned(), value);
     let bound = match verdict.unit {
         VerdictUnit::Safety => "at least",
-        VerdictUnit::Force => "at most",
+        VerdictUnit::Force | VerdictUnit::Share => "at most",
         VerdictUnit::Temperature => "limit",
     };
     let required =
@@ -284,6 +287,83 @@ fn duty(out: &mut String, findings: &Findings) {
         }
     }
     print_table(out, table, 2);
+}
+
+/// Interfaces of several rings, slices, what loosens the joint, yielding by design, bending and fatigue.
+fn service(out: &mut String, findings: &Findings) {
+    interfaces(out, findings);
+    slices(out, findings);
+    heading(out, "At work");
+    for sentence in super::service::sentences(findings) {
+        paragraph(out, "  ", &sentence);
+    }
+}
+
+fn interfaces(out: &mut String, findings: &Findings) {
+    let joint = &findings.joint;
+    if joint.rings.len() == 2 {
+        return;
+    }
+    heading(out, "Interfaces, shop temperature, at rest");
+    let unit = |measure| display_unit(measure, joint.display).name;
+    let mut table = table(&[
+        "between".to_owned(),
+        "fit".to_owned(),
+        format!("loosest {}", unit(Measure::Pressure)),
+        "mean".to_owned(),
+        "tightest".to_owned(),
+    ]);
+    for (index, fit) in joint.fits.iter().enumerate() {
+        let names = joint.rings.get(index..index + 2).unwrap_or_default();
+        let between: Vec<&str> = names.iter().map(|ring| ring.name.as_str()).collect();
+        let pressure = |pair: &PairFindings| {
+            pair.interfaces.get(index).map_or_else(String::new, |interface| {
+                if interface.open {
+                    "open".to_owned()
+                } else {
+                    show(Measure::Pressure, interface.pressure, joint.display).number
+                }
+            })
+        };
+        table.add_row(vec![
+            plain(&between.join(" / ")),
+            fit.callout.clone(),
+            pressure(&findings.extremes.loosest),
+            pressure(&findings.extremes.mean),
+            pressure(&findings.extremes.tightest),
+        ]);
+    }
+    print_table(out, table, 2);
+}
+
+fn slices(out: &mut String, findings: &Findings) {
+    let joint = &findings.joint;
+    if joint.slices.is_empty() {
+        return;
+    }
+    heading(out, "Along the joint: each slice by itself is good to 10 to 15 %, the total to a few percent");
+    let size = display_unit(Measure::Size, joint.display).name;
+    let pressure = display_unit(Measure::Pressure, joint.display).name;
+    let mut table = table(&[
+        format!("length {size}"),
+        format!("outer {size}"),
+        format!("bore {size}"),
+        format!("loosest {pressure}"),
+        format!("tightest {pressure}"),
+    ]);
+    for (loosest, tightest) in findings.extremes.loosest.slices.iter().zip(&findings.extremes.tightest.slices)
+    {
+        let size = |metres| show(Measure::Size, metres, joint.display).number;
+        let pressure = |pascals| show(Measure::Pressure, pascals, joint.display).number;
+        table.add_row(vec![
+            size(loosest.length),
+            size(loosest.hub_outer_diameter),
+            size(loosest.shaft_bore),
+            pressure(loosest.pressure),
+            pressure(tightest.pressure),
+        ]);
+    }
+    print_table(out, table, 0);
 }
 
 fn assembly(out: &mut String, findings: &Findings) {

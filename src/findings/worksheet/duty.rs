@@ -5,7 +5,7 @@ use super::super::kernel::Condition;
 use super::super::{Findings, StateFindings};
 use super::Units;
 use super::sheet::Sheet;
-use super::strength::{axial, flexibility, grip, torque};
+use super::strength::{axial, flexibility, grip, plastic_shares, torque};
 use crate::joint::{DutyState, Ring};
 
 const ROTATION: &str = "rotating disc, Timoshenko & Goodier, Theory of Elasticity, § 32";
@@ -42,14 +42,26 @@ impl StateSheet<'_> {
         let lost = self.rotation(sheet);
         let held = grip("W_min", &self.name("eps_s"), &self.name("eps_h"));
         let held = if lost { held - sym(&self.name("V_")) } else { held };
+        let share = plastic_shares(self.findings).map_or(1.0, |shares| shares[0]);
+        let elastic = if share < 1.0 { self.name("p_e") } else { self.name("p_") };
         sheet.formula(
-            &self.name("p_"),
+            &elastic,
             "contact pressure",
             super::super::expression::greatest([num("0"), held / flexibility()]),
             self.units.pressure,
             "Lamé with free thermal strains and rotation",
-            Some(pair.pressure * self.units.per_pascal),
+            Some(pair.pressure / share * self.units.per_pascal),
         );
+        if share < 1.0 {
+            sheet.formula(
+                &self.name("p_"),
+                "contact pressure of the hub that yields",
+                sym(&elastic) * sym("k_min"),
+                self.units.pressure,
+                "share of the shop temperature",
+                Some(pair.pressure * self.units.per_pascal),
+            );
+        }
         self.capacity(sheet, pair);
     }
 

@@ -1,10 +1,10 @@
 //! Stiffness, contact pressure, stresses, capacity and strength at the shop temperature.
 
 use super::super::expression::{Expression, greatest, num, sym};
-use super::super::{Findings, PairFindings, RingStress};
+use super::super::{Findings, PairFindings, RingStress, plastic_share_of_pressure};
 use super::Units;
 use super::sheet::Sheet;
-use crate::joint::Ring;
+use crate::joint::{Allow, Ring};
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
 
@@ -18,7 +18,9 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     pressures(sheet, findings, units);
     capacity(sheet, findings, units);
     sheet.section("Stress at the tightest pair, shop temperature");
-    hub_stress(sheet, findings, hub, units);
+    if plastic_shares(findings).is_none() {
+        hub_stress(sheet, findings, hub, units);
+    }
     shaft_stress(sheet, findings, shaft, units);
 }
 
@@ -89,7 +91,55 @@ fn pressures(sheet: &mut Sheet, findings: &Findings, units: &Units) {
             pressure(interference, "eps_s", "eps_h"),
             units.pressure,
             LAME,
-            Some(pair.pressure * units.per_pascal),
+            Some(elastic_pressure(pair) * units.per_pascal),
+        );
+    }
+    plastic(sheet, findings, units);
+}
+
+/// The elastic pressure of a pair, also where the hub yields by design.
+fn elastic_pressure(pair: &PairFindings) -> f64 {
+    if pair.smoothing > 0.0 { pair.pressure_smoothed } else { pair.pressure_unsmoothed }
+}
+
+/// Share that the plastic hub keeps of the elastic pressure, for each pair of a hub that yields by design.
+pub(super) fn plastic_shares(findings: &Findings) -> Option<[f64; 3]> {
+    let Allow::Plastic { .. } = findings.joint.require.allow else { return None };
+    let plastic = findings.service.plastic.as_ref()?;
+    let shares = [&plastic.loosest, &plastic.mean, &plastic.tightest].map(plastic_share_of_pressure);
+    shares.iter().any(|share| *share < 1.0).then_some(shares)
+}
+
+/// The pressures of the elastic-plastic hub, and the shares of the elastic ones that they are.
+fn plastic(sheet: &mut Sheet, findings: &Findings, units: &Units) {
+    if plastic_shares(findings).is_none() {
+        return;
+    }
+    let Some(plastic) = &findings.service.plastic else { return };
+    sheet.section(format!("Elastic-plastic hub, {} rule, at rest", findings.joint.require.yield_rule.name()));
+    let source = "elastic-plastic disc: Kollmann, Welle-Nabe-Verbindungen (1984); von Mises: Nadai (1950)";
+    for (tag, name, state) in [
+        ("min", "loosest", &plastic.loosest),
+        ("m", "mean", &plastic.mean),
+        ("max", "tightest", &plastic.tightest),
+    ] {
+        let symbol = format!("P_{tag}");
+        sheet.input(
+            &symbol,
+            &format!("pressure of the hub that yields, {name} pair"),
+            state.pressure * units.per_pascal,
+            units.pressure,
+            source,
+        );
+        let share = sym(&symbol) / sym(&format!("p_{tag}"));
+        let meaning = format!("share of the elastic pressure, {name} pair");
+        sheet.formula(
+            &format!("k_{tag}"),
+            &meaning,
+            share,
+            "",
+            "quotient",
+            Some(plastic_share_of_pressure(state)),
         );
     }
 }
@@ -134,7 +184,7 @@ fn capacity(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     sheet.formula(
         "F_cap",
         "axial force at slip",
-        axial("p_min"),
+        axial(if plastic_shares(findings).is_some() { "P_min" } else { "p_min" }),
         units.force,
         "equilibrium; DIN 7190-1",
         Some(pair.axial_capacity * units.per_newton),
@@ -191,11 +241,12 @@ fn shaft_stress(sheet: &mut Sheet, findings: &Findings, shaft: &Ring, units: &Un
     let Some(stress) = findings.extremes.tightest.rings.first() else { return };
     let pa = |value: f64| Some(value * units.per_pascal);
     let solid = shaft.inner_diameter == 0.0;
+    let pressure = || sym(if plastic_shares(findings).is_some() { "P_max" } else { "p_max" });
     let (meaning, hoop, program) = if solid {
-        ("hoop stress in the solid shaft, everywhere", -sym("p_max"), stress.rim.hoop)
+        ("hoop stress in the solid shaft, everywhere", -pressure(), stress.rim.hoop)
     } else {
         let wall = num("2") * sym("d").power(2) / (sym("d").power(2) - sym("b").power(2));
-        ("hoop stress at the shaft bore", -(sym("p_max") * wall), stress.bore.hoop)
+        ("hoop stress at the shaft bore", -(pressure() * wall), stress.bore.hoop)
     };
     sheet.formula("sigma_ts", meaning, hoop, units.pressure, LAME, pa(program));
     let equivalent = match shaft.material.kind {

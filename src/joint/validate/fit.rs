@@ -12,9 +12,19 @@ use crate::tolerance::{FitCallout, Limits, Member, MemberCallout, ToleranceError
 
 const EXAMPLE: &str = "H7/s6";
 
-/// The fit with its limits.
+/// The fit of two parts with its limits.
 pub(super) fn fit(draft: &mut Draft<'_>, file: &JointFile, diameter: Option<f64>) -> Option<Fit> {
     let given = draft.required(draft.tree.root(), "fit", EXAMPLE, file.fit.as_ref())?;
+    one(draft, given, diameter, units_of(file.diameter.as_ref()))
+}
+
+/// A fit at a nominal diameter that was written in these units.
+pub(super) fn one(
+    draft: &mut Draft<'_>,
+    given: &At<TextOr<FitText, FitKeys>>,
+    diameter: Option<f64>,
+    units: UnitSystem,
+) -> Option<Fit> {
     let (callout, written) = match &given.value {
         TextOr::Text(text) => {
             let written: Written<FitText> = At { node: given.node, value: text.clone() };
@@ -28,7 +38,7 @@ pub(super) fn fit(draft: &mut Draft<'_>, file: &JointFile, diameter: Option<f64>
         }
     };
     let nominal = diameter?;
-    let resolved = match callout.resolve_given_in(nominal, units_of(file.diameter.as_ref())) {
+    let resolved = match callout.resolve_given_in(nominal, units) {
         Ok(resolved) => resolved,
         Err(error) => return refused(draft, culprit(given, &error), &error),
     };
@@ -74,7 +84,7 @@ fn culprit(given: &At<TextOr<FitText, FitKeys>>, error: &ToleranceError) -> Node
 }
 
 /// Unit system in which a length was written.
-fn units_of(given: Option<&Written<Length>>) -> UnitSystem {
+pub(super) fn units_of(given: Option<&Written<Length>>) -> UnitSystem {
     let inch = given.is_some_and(|given| {
         let text = given.value.text.trim_end();
         ["in", "inch", "\"", "thou", "mil", "ft"].iter().any(|unit| text.ends_with(unit))

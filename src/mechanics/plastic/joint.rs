@@ -178,13 +178,6 @@ impl PlasticJoint {
     ///
     /// # Errors
     /// A share outside 0 … 1, or one beyond the pressure cap.
-    ///
-    /// # Example
-    /// ```no_run
-    /// # let joint: hubgrip::mechanics::plastic::PlasticJoint = todo!();
-    /// use hubgrip::mechanics::plastic::COMMON_PLASTIC_SHARE;
-    /// let greatest_interference = joint.interference_at_share(COMMON_PLASTIC_SHARE);
-    /// ```
     pub fn interference_at_share(&self, plastic_share: f64) -> Result<f64, MechanicsError> {
         let share = (0.0..=1.0).contains(&plastic_share);
         check("plastic share of the section", plastic_share, "between 0 and 1", share)?;

@@ -8,7 +8,7 @@
 //! Along a radius r² sin(5π/6 − x) e^(−√3 x) is constant; at the edge of the zone r = c, with m = (c/b)², the
 //! elastic outside gives cot(5π/6 − x_c) = m/√3.
 
-use std::f64::consts::{FRAC_PI_2, FRAC_PI_3, FRAC_PI_6, LN_2, PI};
+use std::f64::consts::{FRAC_PI_2, FRAC_PI_3, FRAC_PI_6};
 
 use super::growth;
 use super::hub::{
@@ -87,9 +87,10 @@ impl VonMisesHub {
             let kind = HubLimitKind::FullyPlastic;
             return Ok(HubLimit { pressure, plastic_ratio: 1.0 / self.diameter_ratio, kind });
         }
-        let front = root::bracketed(|m| self.bore_level(m) - LN_2, self.bore_front(), 1.0, 0.0).map_err(
-            |reason| MechanicsError::NotSolved { what: "plastic zone at the pressure cap", reason },
-        )?;
+        let front =
+            root::bracketed(|m| self.bore_level(m), self.bore_front(), 1.0, 0.0).map_err(|reason| {
+                MechanicsError::NotSolved { what: "plastic zone at the pressure cap", reason }
+            })?;
         let plastic_ratio = front.sqrt() / self.diameter_ratio;
         Ok(HubLimit { pressure: self.flow_stress(), plastic_ratio, kind: HubLimitKind::PressureCap })
     }
@@ -203,19 +204,20 @@ fn edge_angle(front: f64) -> f64 {
     5.0 * FRAC_PI_6 - SQRT_3.atan2(front)
 }
 
-/// √3 x − ln sin(5π/6 − x): it rises with ln r² within the zone, from ln 2 at x = 0.
+/// √3 x − ln(2 sin(5π/6 − x)): it rises with ln r² within the zone, from zero at x = 0.
 fn level_of(angle: f64) -> f64 {
-    SQRT_3 * angle - (5.0 * FRAC_PI_6 - angle).sin().ln()
+    let half = (0.5 * angle).sin();
+    SQRT_3 * angle - (SQRT_3 * angle.sin() - 2.0 * half * half).ln_1p()
 }
 
-/// The angle between 0 and `edge` at a level; 0 when rounding puts the level below ln 2.
+/// The angle between 0 and `edge` at a level; the nearer end when rounding puts the level outside.
 fn angle_of(level: f64, edge: f64) -> Result<f64, MechanicsError> {
-    if level <= LN_2 {
+    if level <= 0.0 {
         return Ok(0.0);
     }
     if level >= level_of(edge) {
         return Ok(edge);
     }
-    root::bracketed(|x| level_of(x) - level, 0.0, edge.min(PI), 0.0)
+    root::bracketed(|x| level_of(x) - level, 0.0, edge, 0.0)
         .map_err(|reason| MechanicsError::NotSolved { what: "state of the plastic zone", reason })
 }

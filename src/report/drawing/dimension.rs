@@ -78,6 +78,9 @@ pub(super) struct Length {
 }
 
 impl Length {
+    /// From the end of the line to the figure beside it, at most, mm.
+    pub(super) const BEFORE_TEXT: f64 = 2.0 * ARROW + 1.0;
+
     pub(super) fn lettering(&self) -> Lettering {
         Lettering::new(fitted(&self.text, TYPE, LONGEST), TYPE)
     }

@@ -11,6 +11,7 @@ use scale::layout;
 use section::{Place, STUB, bands};
 
 use super::svg::{Frame, Lettering, QUIET, Sketch};
+use super::text_width::text_width;
 use super::units::{Measure, Units};
 use crate::findings::Findings;
 use crate::joint::Joint;
@@ -43,8 +44,8 @@ pub fn section(findings: &Findings) -> SectionDrawing {
         .collect();
     let hollow = radii.first().is_some_and(|bore| *bore > 0.0);
     let columns = (joint.fits.len(), 1 + usize::from(hollow));
-    let margin = |count: usize| FIRST + NEXT * (count.max(1) - 1) as f64 + 4.0;
-    let (left, right) = (margin(columns.0), margin(columns.1));
+    let margin = |first: f64, count: usize| first + NEXT * (count.max(1) - 1) as f64 + 4.0;
+    let (left, right) = (margin(FIRST, columns.0), margin(first_right(joint, units), columns.1));
     let room = (WIDTH - 2.0 * STUB - left - right).min(84.0);
     let layout = layout(&radii, joint.length, room);
 
@@ -71,9 +72,9 @@ pub fn section(findings: &Findings) -> SectionDrawing {
     let bottom = place.centre + layout.radial.last().map_or(0.0, |wall| wall.to);
     let below = dimensions(&mut sketch, joint, units, &layout, place);
     labels::draw(&mut sketch, &rows, &layout, place, &bands, WIDTH);
-    let height = bottom + below + 9.0;
+    let height = bottom + below + 7.0;
     let foot = Lettering::new(foot(&layout, units), TYPE).colour(QUIET);
-    sketch.text((0.0, height - 2.0), &foot);
+    sketch.text((0.0, height - 1.0), &foot);
 
     let frame = Frame {
         id: "section-drawing".into(),
@@ -94,10 +95,10 @@ fn dimensions(sketch: &mut Sketch, joint: &Joint, units: Units, layout: &scale::
     for (k, fit) in joint.fits.iter().enumerate() {
         let from = if k == 0 { place.shaft_left() } else { place.hub_left };
         let at = place.shaft_left() - FIRST - NEXT * k as f64;
-        let text = format!("Ø{} {}", size(fit.limits.nominal), fit.callout);
+        let text = dimension_text(&size(fit.limits.nominal), &fit.callout);
         diameters.push(Diameter::new(from, at, layout.radial[k + 1].to, &text));
     }
-    let mut column = place.shaft_right() + FIRST;
+    let mut column = place.shaft_right() + first_right(joint, units);
     if let Some(bore) = joint.rings.first().map(|ring| ring.inner_diameter).filter(|bore| *bore > 0.0) {
         let text = format!("Ø{}", size(bore));
         diameters.push(Diameter::new(place.shaft_right(), column, layout.radial[0].to, &text));
@@ -116,6 +117,26 @@ fn dimensions(sketch: &mut Sketch, joint: &Joint, units: Units, layout: &scale::
     below.max(lengths(sketch, joint, units, place, bottom))
 }
 
+/// Distance of the first dimension line on the right from the shaft: clear of the lettering of the relief.
+fn first_right(joint: &Joint, units: Units) -> f64 {
+    if joint.relief <= 0.0 {
+        return FIRST;
+    }
+    let lettering = text_width(&relief_text(joint, units), TYPE);
+    FIRST.max(lettering + Length::BEFORE_TEXT + TYPE + 2.0 - STUB)
+}
+
+fn relief_text(joint: &Joint, units: Units) -> String {
+    format!("relief {}", units.reading(Measure::Size, joint.relief).number)
+}
+
+/// The mating diameter with its fit; limits told in words are left to the page.
+fn dimension_text(size: &str, callout: &str) -> String {
+    const LONGEST: f64 = 36.0;
+    let text = format!("Ø{size} {callout}");
+    if text_width(&text, TYPE) <= LONGEST { text } else { format!("Ø{size}") }
+}
+
 /// Draws the hub's length and its relief below the part; returns how far they reach, mm.
 fn lengths(sketch: &mut Sketch, joint: &Joint, units: Units, place: Place, bottom: f64) -> f64 {
     let size = |value: f64| units.reading(Measure::Size, value).number;
@@ -130,7 +151,7 @@ fn lengths(sketch: &mut Sketch, joint: &Joint, units: Units, place: Place, botto
     let edge = place.hub_right - place.relief;
     if joint.relief > 0.0 {
         line(place.hub_left, edge, 7.5, size(joint.length - joint.relief), false).draw(sketch);
-        line(edge, place.hub_right, 7.5, format!("relief {}", size(joint.relief)), true).draw(sketch);
+        line(edge, place.hub_right, 7.5, relief_text(joint, units), true).draw(sketch);
         line(place.hub_left, place.hub_right, 14.5, size(joint.length), false).draw(sketch);
         17.0
     } else {
@@ -161,9 +182,7 @@ fn caption(layout: &scale::Layout, factor: f64, interference: &[f64]) -> String 
         };
         text.push_str(&format!("; the {what} is drawn {factor} times too large"));
     }
-    text.push_str(
-        ". The shaft is drawn through and broken off: its length outside the hub is not part of the input.",
-    );
+    text.push_str(". The shaft is broken off: its length outside the hub is not part of the input.");
     text
 }
 

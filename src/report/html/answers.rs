@@ -122,6 +122,7 @@ fn shown(units: Units, unit: VerdictUnit, value: f64) -> String {
         VerdictUnit::Safety => safety(value),
         VerdictUnit::Force => units.brief(Measure::Force, value).text(),
         VerdictUnit::Temperature => units.text(Measure::Temperature, value),
+        VerdictUnit::Share => format!("{:.1}\u{2009}%", value * 100.0),
     }
 }
 
@@ -171,7 +172,7 @@ fn required(sheet: Sheet, verdict: &Verdict) -> String {
     let sense = match verdict.unit {
         VerdictUnit::Safety => "≥",
         VerdictUnit::Temperature if chilled => "≥",
-        VerdictUnit::Force | VerdictUnit::Temperature => "≤",
+        VerdictUnit::Force | VerdictUnit::Temperature | VerdictUnit::Share => "≤",
     };
     format!("{sense} {}", shown(sheet.units, verdict.unit, value))
 }

@@ -40,19 +40,21 @@ fn table(section: &WorksheetSection, number: usize, values: &mut Values) -> Mark
         }
         tbody {
             @for (index, line) in section.lines.iter().enumerate() {
-                (row(line, &format!("{number}.{}", index + 1), values))
+                @let repeated = index > 0 && section.lines[index - 1].source == line.source && line.source.len() > 24;
+                @let source = if repeated { "as the line above" } else { line.source.as_str() };
+                (row(line, &format!("{number}.{}", index + 1), source, values))
             }
         }
     }
 }
 
-fn row(line: &WorksheetLine, number: &str, values: &mut Values) -> Markup {
+fn row(line: &WorksheetLine, number: &str, source: &str, values: &mut Values) -> Markup {
     let known = values.clone();
     values.insert(line.symbol.clone(), line.printed.clone());
     html! {
         tr {
             th.no scope="row" { (number) }
-            td.what { (line.meaning) span.source { (line.source) } }
+            td.what { (line.meaning) span.source { (source) } }
             @match line.formula.as_ref().map_or(0, width) {
                 0..=34 => td { (chain(line, &known)) },
                 35..=52 => td.long { (chain(line, &known)) },

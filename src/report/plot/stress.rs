@@ -9,7 +9,7 @@ use crate::joint::Ring;
 use crate::material::Kind;
 use crate::mechanics::criteria::{self, DuctileCriterion};
 use crate::mechanics::ring::{RingLoad, RingSection, Stress};
-use crate::report::svg::{Anchor, Lettering, Point};
+use crate::report::svg::Point;
 use crate::report::text_width::fitted;
 use crate::report::units::{Measure, Units};
 
@@ -83,19 +83,16 @@ pub fn stress(findings: &Findings) -> Option<Plot> {
 
     let caption = caption(findings, &limits, &shown);
     let title = "Stress through the walls, at the shop temperature and at rest";
-    let names: Vec<(Point, String)> = joint
-        .rings
-        .iter()
-        .enumerate()
-        .map(|(index, ring)| {
-            let (from, to) = walls.ends(index);
-            (chart.place((0.5 * (from + to), chart.y.to)), ring.name.clone())
-        })
-        .collect();
+    let mut headings = Vec::new();
+    for (index, ring) in joint.rings.iter().enumerate() {
+        let (from, to) = walls.ends(index);
+        let room = (to - from) * (chart.place((1.0, 0.0)).0 - chart.place((0.0, 0.0)).0) - 6.0;
+        let top = (0.5 * (from + to), chart.y.to);
+        headings.push(chart.heading(top, 8.0, &fitted(&ring.name, TYPE, room)));
+    }
     let svg = chart.finish("plot-stress", title, &caption, |_, sketch| {
-        for ((x, y), name) in names {
-            let name = fitted(&name, TYPE, 120.0);
-            sketch.text((x, y - 8.0), &Lettering::new(name, TYPE).bold().anchor(Anchor::Middle));
+        for (at, heading) in &headings {
+            sketch.text(*at, heading);
         }
     });
     Some(Plot { title: title.to_owned(), svg, caption })
@@ -318,4 +315,36 @@ fn ring_sentence(findings: &Findings, ring: &Ring, stress: &RingStress, hidden: 
         pressure(stress.equivalent),
         pressure(strength)
     )
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::report::sample;
+
+    /// The profile is computed from the pressures, the faces by the findings: both must meet at the faces.
+    #[test]
+    fn the_curves_end_at_the_stresses_of_the_faces() {
+        for findings in [sample::hollow_shaft(), sample::fan_hub(), sample::three_rings()] {
+            let pair = &findings.extremes.tightest;
+            for (profile, ring) in profiles(&findings, pair).iter().zip(&pair.rings) {
+                let close = |a: f64, b: f64| assert!((a - b).abs() < 1.0, "{a} and {b} Pa");
+                close(profile.hoop[0].1, ring.bore.hoop);
+                close(profile.radial[0].1, ring.bore.radial);
+                close(profile.hoop[POINTS - 1].1, ring.rim.hoop);
+                close(profile.radial[POINTS - 1].1, ring.rim.radial);
+                let greatest = profile.equivalent.iter().map(|point| point.1).fold(0.0, f64::max);
+                close(greatest, ring.equivalent);
+            }
+        }
+    }
+
+    #[test]
+    fn a_thin_wall_is_given_room_and_the_axis_says_so() {
+        let walls = Walls::new(&sample::thin_bush().joint.rings);
+        let (from, to) = walls.ends(0);
+        assert!(to - from > 0.2 && walls.stretched);
+        assert!((walls.place(1, 0.055) - 1.0).abs() < 1e-12);
+        assert!(!Walls::new(&sample::fan_hub().joint.rings).stretched);
+    }
 }

@@ -96,7 +96,7 @@ fn one_fit(chart: &mut Chart, units: Units, fit: &Fit, left: f64) {
 
 fn draw_zones(chart: &Chart, sketch: &mut Sketch, units: Units, fit: &Fit, left: f64) {
     let on_axis = |value: f64| units.on_axis(Measure::Deviation, value);
-    let (hole, shaft) = fit.callout.split_once('/').unwrap_or(("", ""));
+    let (hole, shaft) = classes(&fit.callout);
     for (limits, zone, kind, name, class) in
         [(fit.limits.hole, HOLE, 1, "hole", hole), (fit.limits.shaft, SHAFT, 0, "shaft", shaft)]
     {
@@ -115,6 +115,19 @@ fn draw_zones(chart: &Chart, sketch: &mut Sketch, units: Units, fit: &Fit, left:
     }
 }
 
+/// Tolerance classes of hole and shaft when the callout is made of both, such as H7/s6.
+fn classes(callout: &str) -> (&str, &str) {
+    let is_class = |text: &str| {
+        text.len() <= 5
+            && text.starts_with(|c: char| c.is_ascii_alphabetic())
+            && text.ends_with(|c: char| c.is_ascii_digit())
+    };
+    match callout.split_once('/') {
+        Some((hole, shaft)) if is_class(hole) && is_class(shaft) => (hole, shaft),
+        _ => ("", ""),
+    }
+}
+
 /// A deviation with its sign, as on a drawing.
 fn signed(units: Units, value: f64) -> String {
     let number = units.reading(Measure::Deviation, value).number;
@@ -128,6 +141,13 @@ fn plain_interference(units: Units, value: f64) -> String {
     } else {
         units.text(Measure::Deviation, value)
     }
+}
+
+#[test]
+fn only_a_pair_of_classes_names_the_zones() {
+    assert_eq!(classes("H7/s6"), ("H7", "s6"));
+    assert_eq!(classes("FN 4"), ("", ""));
+    assert_eq!(classes("+30/0 µm"), ("", ""));
 }
 
 fn caption(fits: &[Fit], units: Units) -> String {

@@ -112,9 +112,25 @@ fn uniform(
             }
         }
         let temperature = draft.value(all)?;
-        return checked(draft, all, temperature, rings.unwrap_or_default()).map(|t| vec![t; 2]);
+        let count = rings.map_or(2, <[Ring]>::len);
+        return checked(draft, all, temperature, rings.unwrap_or_default()).map(|t| vec![t; count]);
+    }
+    if let Some(list) = &keys.temperatures {
+        return of_list(draft, list, rings?);
     }
     let mut found = Vec::new();
+    if rings.is_some_and(|rings| rings.len() > 2) {
+        for (key, given) in parts {
+            if let Some(given) = given {
+                let fault = Fault::key(given.node, format!("`{key}` is for two parts"));
+                draft.faults.add(fault.help("give `temperature`, or `temperatures` with one for each ring"));
+            }
+        }
+        let shop = shop?;
+        let value = written(Kind::Temperature, shop);
+        draft.default(format!("duty.{state}.temperature"), value, "the shop temperature");
+        return Some(vec![shop; rings?.len()]);
+    }
     for (number, (key, given)) in parts.into_iter().enumerate() {
         found.push(match given {
             Some(given) => {
@@ -127,6 +143,22 @@ fn uniform(
             }),
         });
     }
+    found.into_iter().collect()
+}
+
+/// One temperature for each ring, innermost first.
+fn of_list(draft: &Draft<'_>, list: &At<Vec<Written<Temperature>>>, rings: &[Ring]) -> Option<Vec<f64>> {
+    if list.value.len() != rings.len() {
+        let fault = format!("`temperatures` has {} for {} rings", list.value.len(), rings.len());
+        draft.faults.add(Fault::value(list.node, fault).help("give one for each ring, innermost first"));
+        return None;
+    }
+    let found: Vec<Option<f64>> = list
+        .value
+        .iter()
+        .zip(rings)
+        .map(|(given, ring)| checked(draft, given, draft.value(given)?, std::slice::from_ref(ring)))
+        .collect();
     found.into_iter().collect()
 }
 
