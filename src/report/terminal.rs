@@ -307,13 +307,13 @@ fn interfaces(out: &mut String, findings: &Findings) {
     heading(out, "Interfaces, shop temperature, at rest");
     let unit = |measure| display_unit(measure, joint.display).name;
     let mut table = table(&[
+        "interface".to_owned(),
         "between".to_owned(),
-        "fit".to_owned(),
         format!("loosest {}", unit(Measure::Pressure)),
         "mean".to_owned(),
         "tightest".to_owned(),
     ]);
-    for (index, fit) in joint.fits.iter().enumerate() {
+    for index in 0..joint.fits.len() {
         let names = joint.rings.get(index..index + 2).unwrap_or_default();
         let between: Vec<&str> = names.iter().map(|ring| ring.name.as_str()).collect();
         let pressure = |pair: &PairFindings| {
@@ -326,8 +326,8 @@ fn interfaces(out: &mut String, findings: &Findings) {
             })
         };
         table.add_row(vec![
+            (index + 1).to_string(),
             plain(&between.join(" / ")),
-            fit.callout.clone(),
             pressure(&findings.extremes.loosest),
             pressure(&findings.extremes.mean),
             pressure(&findings.extremes.tightest),
@@ -341,7 +341,7 @@ fn slices(out: &mut String, findings: &Findings) {
     if joint.slices.is_empty() {
         return;
     }
-    heading(out, "Along the joint: each slice by itself is good to 10 to 15 %, the total to a few percent");
+    heading(out, "Along the joint: a slice is good to 10 to 15 %, the total to a few percent");
     let size = display_unit(Measure::Size, joint.display).name;
     let pressure = display_unit(Measure::Pressure, joint.display).name;
     let mut table = table(&[
