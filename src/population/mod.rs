@@ -1,0 +1,7 @@
+//! Many joints from one: which fit to choose, what a whole table of joints does.
+//!
+//! | module | subject |
+//! |---|---|
+//! | [`kernel`] | a joint of two rings prepared once and evaluated without allocation |
+
+pub mod kernel;
