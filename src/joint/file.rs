@@ -45,7 +45,7 @@ const SECTIONS: &[(&str, &[&str])] = &[
         &["method", "shop_temperature", "clearance", "chamfer_angle", "bath", "hub_temperature_limit"],
     ),
     ("smoothing", &["factor", "rule", "at"]),
-    ("require", &["slip_safety", "yield_safety", "fracture_safety", "press_force"]),
+    ("require", &["slip_safety", "yield_safety", "fracture_safety", "press_force", "hub_temperature"]),
 ];
 
 /// The sections that have `key`, such as `shaft` and `hub`; none when no section has it.
@@ -281,4 +281,6 @@ pub(crate) struct RequireKeys {
     pub(crate) fracture_safety: Option<Written<Number>>,
     /// Greatest press-in force.
     pub(crate) press_force: Option<Written<Force>>,
+    /// Highest hub temperature while joining, such as what the oven gives; the limit of its material holds as well.
+    pub(crate) hub_temperature: Option<Written<Temperature>>,
 }

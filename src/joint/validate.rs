@@ -11,6 +11,7 @@ mod smoothing;
 use super::draft::Draft;
 use super::file::{JointFile, RequireKeys};
 use super::leaf::{CriterionWord, DisplayWord};
+use super::read::FitKey;
 use super::written::{At, Written};
 use super::{Joint, Requirements};
 use crate::mechanics::criteria::DuctileCriterion;
@@ -49,7 +50,7 @@ const FRACTURE_SAFETY: (f64, &str) = (
 );
 
 /// The joint, unless something is wrong.
-pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
+pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) -> Option<Joint> {
     refuse_what_is_not_calculated(draft, file);
     let root = draft.tree.root();
     let diameter = draft
@@ -59,7 +60,11 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
     let method = assembly::method(draft, file);
     let shop = assembly::shop_temperature(draft, file);
     let rings = parts::rings(draft, file, diameter);
-    let fit = fit::fit(draft, file, diameter);
+    let fits = if fit_key == FitKey::Optional && file.fit.is_none() {
+        Some(Vec::new())
+    } else {
+        fit::fit(draft, file, diameter).map(|fit| vec![fit])
+    };
     let friction = friction::friction(draft, file, rings.as_deref(), method);
     let duty = duty::states(draft, file, rings.as_deref(), shop);
     let assembly = assembly::plan(draft, file, rings.as_deref(), diameter, method, shop);
@@ -81,7 +86,7 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
         length: length?,
         relief: relief?,
         rings: rings?,
-        fits: vec![fit?],
+        fits: fits?,
         friction: friction?,
         duty: duty?,
         assembly: assembly?,

@@ -2,6 +2,8 @@
 //!
 //! | module | subject |
 //! |---|---|
+//! | [`mod@choose`] | which standard fits meet the requirements, ranked |
 //! | [`kernel`] | a joint of two rings prepared once and evaluated without allocation |
 
+pub mod choose;
 pub mod kernel;
