@@ -1,5 +1,6 @@
 //! Choosing a fit, held against the full computation.
 
+mod common;
 mod random_joints;
 
 use std::collections::BTreeSet;
@@ -8,7 +9,9 @@ use std::path::Path;
 use hubgrip::findings::{Findings, FindingsError, compute};
 use hubgrip::joint::{Fit, Joint, read};
 use hubgrip::material::library::Library;
-use hubgrip::population::choose::{Basis, Choice, ChooseError, Options, Parameter, Standard, choose};
+use hubgrip::population::choose::{
+    Basis, Choice, ChooseError, Options, Parameter, Standard, WORKSHOP, choose,
+};
 use hubgrip::tolerance::ansi_b4_1;
 use hubgrip::tolerance::iso286::{Grade, ToleranceClass, defined_classes};
 use hubgrip::tolerance::{FitCallout, FitLimits, Limits, Member};
@@ -244,19 +247,26 @@ fn the_smallest_change_lets_a_fit_in() {
         assert!(!nearest.meets_all() && nearest.least_margin() < 0.0);
         for change in &choice.changes {
             told += 1;
+            let to = &change.smallest;
             let fits = match change.parameter.key() {
                 Some(key) if key != "friction.holding" => {
-                    let set = [(key.to_owned(), change.written.clone())];
+                    let set = [(key.to_owned(), to.written.clone())];
                     let changed =
                         read::read_without_fit(parts.text().as_bytes(), file, &set, &library).unwrap();
                     choose(changed, ISO).unwrap().fits
                 }
-                _ => choose(change.parameter.changed(&joint, change.to).unwrap(), ISO).unwrap().fits,
+                _ => choose(change.parameter.changed(&joint, to.to).unwrap(), ISO).unwrap().fits,
             };
-            assert_eq!(fits[0].callout, change.lets_in, "{change:?}");
-            let most = change.from + 0.97 * (change.to - change.from);
+            assert_eq!(fits[0].callout, to.lets_in, "{change:?}");
+            let most = change.from + 0.97 * (to.to - change.from);
             let less = change.parameter.changed(&joint, most).unwrap();
             assert!(choose(less, ISO).unwrap().fits.is_empty(), "{change:?}");
+            if let Some(workshop) = &change.for_workshop {
+                let changed = change.parameter.changed(&joint, workshop.to).unwrap();
+                let options = Options { finest: Grade::numbered(WORKSHOP), ..ISO };
+                assert_eq!(choose(changed, options).unwrap().fits[0].callout, workshop.lets_in);
+                assert!((workshop.to / change.from).ln().abs() >= (to.to / change.from).ln().abs());
+            }
         }
         if closed == 6 {
             break;
@@ -313,4 +323,92 @@ fn without_a_load_there_is_nothing_to_choose_by() {
     let large = HUB.replace("60 mm", "4 m").replace("outer_diameter: 120 mm", "outer_diameter: 6 m");
     let large = joint(&large.replace("C45+N", "C45+N, section: 20 mm"));
     assert!(matches!(choose(large, ISO), Err(ChooseError::Tolerance(_))));
+}
+
+fn chosen(text: &str, more: &[&str]) -> (i32, String, String) {
+    let folder = tempfile::tempdir().unwrap();
+    std::fs::write(folder.path().join("joint.yaml"), text).unwrap();
+    let output = common::hubgrip_in(folder.path(), &[&["choose", "joint.yaml"], more].concat());
+    (output.status.code().unwrap(), common::stdout(&output), common::stderr(&output))
+}
+
+#[test]
+fn the_command_lists_the_fits_within_80_columns() {
+    let (code, text, errors) = chosen(HUB, &[]);
+    assert_eq!((code, errors.as_str()), (0, ""));
+    assert!(text.contains("H7/s6 *"), "{text}");
+    assert!(text.lines().all(|line| line.chars().count() <= 80), "{text}");
+    let (_, all, _) = chosen(HUB, &["--all"]);
+    assert!(all.lines().count() > 500 && all.lines().all(|line| line.chars().count() <= 80));
+    let (code, text, _) = chosen(HUB, &["--finest", "IT6"]);
+    assert!(code == 0 && !text.contains("/s5"), "{text}");
+}
+
+#[test]
+fn the_command_says_what_stands_in_the_way() {
+    let (code, text, errors) = chosen(HUB, &["--set", "duty.0.torque=4kN.m"]);
+    assert_eq!((code, errors.as_str()), (1, ""));
+    for said in
+        ["None of", "are lacking even without any tolerance", "Nearest is", "length of the hub (length)"]
+    {
+        let joined = text.split_whitespace().collect::<Vec<_>>().join(" ");
+        assert!(joined.contains(said), "no `{said}` in {text}");
+    }
+    assert!(text.lines().all(|line| line.chars().count() <= 80), "{text}");
+    let (code, text, _) = chosen(HUB, &["--standard", "ansi"]);
+    assert!(code < 2 && text.contains("of 28 fits"), "{text}");
+}
+
+#[test]
+fn bad_input_is_told_with_a_way_out() {
+    let (code, _, errors) = chosen(&HUB.replace("torque: 200 N.m", "torque: 0 N.m"), &[]);
+    assert!(code == 2 && errors.contains("add a state"), "{errors}");
+    let (code, _, errors) = chosen(HUB, &["--finest", "19"]);
+    assert!(code == 2 && errors.contains("grades are"), "{errors}");
+    let (code, _, errors) = chosen(HUB, &["--standard", "ansi", "--finest", "6"]);
+    assert!(code == 2 && errors.contains("--standard iso"), "{errors}");
+    let (code, _, errors) = chosen(&HUB.replace("60 mm", "60"), &["--json"]);
+    let error: serde_json::Value = serde_json::from_str(&errors).unwrap();
+    assert!(code == 2 && error["error"]["line"] == 2, "{errors}");
+}
+
+#[test]
+fn json_holds_every_fit_and_no_number_that_is_none() {
+    let (code, text, _) = chosen(HUB, &["--json"]);
+    let found: serde_json::Value = serde_json::from_str(&text).unwrap();
+    assert_eq!(code, 0);
+    let fits = found["fits"].as_array().unwrap();
+    assert_eq!(fits.len(), choose(joint(HUB), ISO).unwrap().fits.len());
+    let fit = fits.iter().find(|fit| fit["fit"] == "H7/s6").unwrap();
+    assert_eq!((fit["loosest_um"].as_f64(), fit["tightest_um"].as_f64()), (Some(23.0), Some(72.0)));
+    assert_eq!(fit["preferred_by"][0], "ISO 286-1");
+    assert!(found["window"]["least_um"].as_f64() < Some(23.0));
+    let (code, text, _) = chosen(HUB, &["--json", "--set", "duty.0.torque=4kN.m"]);
+    let found: serde_json::Value = serde_json::from_str(&text).unwrap();
+    assert_eq!(code, 1);
+    assert!(found["fits"].as_array().unwrap().is_empty() && found["nearest"]["ok"] == false);
+    assert!(found["changes"][0]["smallest"]["lets_in"].is_string());
+}
+
+#[test]
+fn the_page_needs_nothing_else_and_escapes_what_it_shows() {
+    let folder = tempfile::tempdir().unwrap();
+    std::fs::write(folder.path().join("joint.yaml"), HUB.to_owned() + "title: <script>alert(1)</script>\n")
+        .unwrap();
+    let arguments = ["choose", "joint.yaml", "-o", "choice.html", "--quiet"];
+    let output = common::hubgrip_in(folder.path(), &arguments);
+    assert_eq!((output.status.code(), output.stdout.len()), (Some(0), 0));
+    let page = std::fs::read_to_string(folder.path().join("choice.html")).unwrap();
+    assert!(page.starts_with("<!DOCTYPE html>") && page.contains("plot-windows"));
+    assert!(!page.contains("<script") && !page.contains("NaN") && !page.contains("http-equiv"));
+    assert_eq!(page.matches("<svg").count(), 1);
+    common::hubgrip_in(folder.path(), &["choose", "joint.yaml", "-o", "again.html", "--quiet"]);
+    assert_eq!(page, std::fs::read_to_string(folder.path().join("again.html")).unwrap());
+}
+
+#[test]
+fn the_example_finds_fits() {
+    let example = Path::new(env!("CARGO_MANIFEST_DIR")).join("examples/choose/hub-without-fit.yaml");
+    let (code, text, errors) = chosen(&std::fs::read_to_string(example).unwrap(), &[]);
+    assert_eq!((code, errors.as_str()), (0, ""), "{text}");
 }

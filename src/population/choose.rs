@@ -18,7 +18,8 @@ use crate::tolerance::{FitCallout, FitLimits, ToleranceError};
 use super::kernel::KernelError;
 pub use candidate::{Basis, Standard};
 use candidate::{Candidate, Candidates};
-pub use change::{Change, Parameter};
+use change::Wanted;
+pub use change::{Change, Opening, Parameter, WORKSHOP};
 use judge::Judge;
 pub use judge::{Edge, Requirement, Subject, Window};
 
@@ -66,7 +67,7 @@ pub struct Choice {
     pub fits: Vec<ChosenFit>,
     /// The fit written in the joint file.
     pub given: Option<ChosenFit>,
-    /// When no fit meets them: the one that comes nearest.
+    /// When no fit meets them: the one that comes nearest, of grade IT5 or coarser.
     pub nearest: Option<ChosenFit>,
     /// When no fit meets them: the smallest changes that let one in.
     pub changes: Vec<Change>,
@@ -156,26 +157,27 @@ pub fn choose(joint: Joint, options: Options) -> Result<Choice, ChooseError> {
         Some(fit) => Some(written_fit(&judge, &requirements, &window, fit)?),
         None => None,
     };
+    let considered = candidates.count();
     let (nearest, changes) = if fits.is_empty() {
-        let narrowest = candidate::narrowest(&candidates);
-        let nearest = nearest(&window, &narrowest);
+        let workshop = workshop(&joint, options)?;
+        let any = Wanted::of(candidates);
+        let nearest = workshop.as_ref().unwrap_or(&any).nearest(&window);
         let nearest =
             nearest.map(|nearest| evaluated(&judge, &requirements, &window, nearest)).transpose()?;
-        (nearest, change::changes(&joint, &candidates, &narrowest)?)
+        (nearest, change::changes(&joint, &any, workshop.as_ref())?)
     } else {
         (None, Vec::new())
     };
-    Ok(Choice {
-        considered: candidates.count(),
-        options,
-        requirements,
-        window,
-        fits,
-        given,
-        nearest,
-        changes,
-        joint,
-    })
+    Ok(Choice { considered, options, requirements, window, fits, given, nearest, changes, joint })
+}
+
+/// The fits of grades that are made for fits, when the options let finer ones in as well.
+fn workshop(joint: &Joint, options: Options) -> Result<Option<Wanted>, ChooseError> {
+    let grade = Grade::numbered(WORKSHOP);
+    if options.standard != Standard::Iso286 || options.finest >= grade {
+        return Ok(None);
+    }
+    Ok(Some(Wanted::of(Candidates::at(joint.diameter, options.standard, grade)?)))
 }
 
 /// The fits that meet all requirements, best first.
@@ -205,12 +207,6 @@ fn ranked(
             .then(b_fit.least_margin().total_cmp(&a_fit.least_margin()))
     });
     Ok(fits.into_iter().map(|(_, fit)| fit).collect())
-}
-
-/// The candidate that lies deepest in the window, or the least outside it.
-fn nearest(window: &Window, candidates: &[Candidate]) -> Option<Candidate> {
-    let margin = |candidate: &Candidate| window.margin(candidate.loosest, candidate.tightest);
-    candidates.iter().copied().max_by(|a, b| margin(a).total_cmp(&margin(b)))
 }
 
 fn evaluated(

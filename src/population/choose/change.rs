@@ -4,13 +4,14 @@
 //! lies outside, zero where the first one comes in. Going away from the present value in small steps brackets
 //! that zero, a bracketed root finds it, and the search is run again with the number as it would be written.
 
-use super::candidate::{Candidate, Candidates};
-use super::judge::Judge;
-use super::{ChooseError, ranked};
+use super::candidate::{Candidate, Candidates, narrowest};
+use super::judge::{Judge, Window};
+use super::{ChooseError, ChosenFit, ranked};
 use crate::joint::{Joint, Ring};
 use crate::material::{Kind as MaterialKind, Range};
 use crate::numerics::root::bracketed;
 use crate::quantity::{Kind, UnitSystem, parse};
+use crate::tolerance::iso286::Grade;
 
 /// A number of the joint that may be changed.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -124,13 +125,30 @@ pub struct Change {
     pub parameter: Parameter,
     /// Its present value, SI.
     pub from: f64,
-    /// The value that lets a fit in, SI; exactly that of [`Change::written`].
+    /// The smallest change, whatever fit it lets in.
+    pub smallest: Opening,
+    /// The smallest change that lets in a fit of [`WORKSHOP`] grades, when the first one does not.
+    pub for_workshop: Option<Opening>,
+}
+
+/// A value of a number and the fit that it lets in.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Opening {
+    /// The value, SI; exactly that of [`Opening::written`].
     pub to: f64,
     /// The value as it would be written, rounded away from the present one.
     pub written: String,
     /// The first of the fits that then meet the requirements.
     pub lets_in: String,
+    /// Finest grade of ISO 286 in that fit.
+    pub finest_grade: Option<Grade>,
 }
+
+/// Number of the finest grade that is made for fits; finer ones are for gauges.
+///
+/// That IT01 to IT4 are for gauges and IT5 to IT11 for fits is the usual reading of ISO 286 in textbooks, from
+/// memory.
+pub const WORKSHOP: u8 = 5;
 
 /// How a number is written: so many decimals of a unit.
 #[derive(Debug, Clone, Copy)]
@@ -165,40 +183,64 @@ impl Writing {
 /// Ratio of two neighbouring values while a change of sign is sought.
 const STEP: f64 = 1.02;
 
+/// Fits to let in, with those among them that come first into any window.
+#[derive(Debug, Clone)]
+pub(super) struct Wanted {
+    candidates: Candidates,
+    narrowest: Vec<Candidate>,
+}
+
+impl Wanted {
+    pub(super) fn of(candidates: Candidates) -> Self {
+        Self { narrowest: narrowest(&candidates), candidates }
+    }
+
+    /// The fit that lies deepest in a window, or the least outside it.
+    pub(super) fn nearest(&self, window: &Window) -> Option<Candidate> {
+        let margin = |fit: &Candidate| window.margin(fit.loosest, fit.tightest);
+        self.narrowest.iter().copied().max_by(|a, b| margin(a).total_cmp(&margin(b)))
+    }
+}
+
 /// The smallest change of each number that lets a fit in, where there is one.
 pub(super) fn changes(
     joint: &Joint,
-    candidates: &Candidates,
-    narrowest: &[Candidate],
+    any: &Wanted,
+    workshop: Option<&Wanted>,
 ) -> Result<Vec<Change>, ChooseError> {
     let mut changes = Vec::new();
     for parameter in Parameter::ALL {
         let Some(present) = parameter.of(joint) else { continue };
-        let search = Search { joint, candidates, narrowest, parameter, present };
-        changes.extend(search.smallest()?);
+        let search = |wanted| Search { joint, wanted, parameter, present }.smallest();
+        let Some(smallest) = search(any)? else { continue };
+        let fine = smallest.finest_grade < Grade::numbered(WORKSHOP);
+        let for_workshop = match workshop {
+            Some(workshop) if fine => search(workshop)?,
+            _ => None,
+        };
+        changes.push(Change { parameter, from: present, smallest, for_workshop });
     }
     Ok(changes)
 }
 
 struct Search<'a> {
     joint: &'a Joint,
-    candidates: &'a Candidates,
-    narrowest: &'a [Candidate],
+    wanted: &'a Wanted,
     parameter: Parameter,
     present: f64,
 }
 
 impl Search<'_> {
     /// The smaller of the change upwards and the change downwards.
-    fn smallest(&self) -> Result<Option<Change>, ChooseError> {
+    fn smallest(&self) -> Result<Option<Opening>, ChooseError> {
         let (low, high) = self.parameter.ends(self.joint, self.present);
         let ways = [self.towards(high)?, self.towards(low)?];
-        let size = |change: &Change| (change.to / change.from).ln().abs();
+        let size = |opening: &Opening| (opening.to / self.present).ln().abs();
         Ok(ways.into_iter().flatten().min_by(|a, b| size(a).total_cmp(&size(b))))
     }
 
     /// The first change that lets a fit in on the way to an end.
-    fn towards(&self, end: f64) -> Result<Option<Change>, ChooseError> {
+    fn towards(&self, end: f64) -> Result<Option<Opening>, ChooseError> {
         let upwards = end > self.present;
         let factor = if upwards { STEP } else { 1.0 / STEP };
         let within = |value: f64| if upwards { value <= end } else { value >= end };
@@ -219,12 +261,12 @@ impl Search<'_> {
         let Some(joint) = self.parameter.changed(self.joint, value) else { return OUTSIDE };
         let Ok(judge) = Judge::of(&joint) else { return OUTSIDE };
         let window = Judge::window(&judge.requirements());
-        let margins = self.narrowest.iter().map(|fit| window.margin(fit.loosest, fit.tightest));
+        let margins = self.wanted.narrowest.iter().map(|fit| window.margin(fit.loosest, fit.tightest));
         margins.fold(OUTSIDE, f64::max).min(1.0)
     }
 
     /// The root as it would be written, with the search run again.
-    fn written(&self, root: f64, upwards: bool) -> Result<Option<Change>, ChooseError> {
+    fn written(&self, root: f64, upwards: bool) -> Result<Option<Opening>, ChooseError> {
         let writing = self.parameter.writing(self.joint.display);
         let Some(first) = writing.count(root, upwards) else { return Ok(None) };
         for further in 0..3 {
@@ -234,15 +276,9 @@ impl Search<'_> {
             let judge = Judge::of(&joint)?;
             let requirements = judge.requirements();
             let window = Judge::window(&requirements);
-            if let Some(fit) = ranked(&judge, &requirements, &window, self.candidates)?.into_iter().next() {
-                let lets_in = fit.callout;
-                return Ok(Some(Change {
-                    parameter: self.parameter,
-                    from: self.present,
-                    to,
-                    written,
-                    lets_in,
-                }));
+            let fits = ranked(&judge, &requirements, &window, &self.wanted.candidates)?;
+            if let Some(ChosenFit { callout: lets_in, finest_grade, .. }) = fits.into_iter().next() {
+                return Ok(Some(Opening { to, written, lets_in, finest_grade }));
             }
         }
         Ok(None)

@@ -6,6 +6,7 @@ mod press;
 mod stress;
 mod tags;
 mod temperature;
+mod windows;
 mod zones;
 
 use maud::Markup;
@@ -14,6 +15,7 @@ pub use press::press_force;
 pub use stress::stress;
 pub(in crate::report) use temperature::bath_name;
 pub use temperature::diameters;
+pub use windows::interference_windows;
 pub use zones::tolerance_zones;
 
 /// A plot with the sentence that says what to see.
