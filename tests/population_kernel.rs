@@ -6,7 +6,7 @@ use hubgrip::findings::{Findings, RingStress, compute};
 use hubgrip::joint::{Bath, Joint, Method};
 use hubgrip::material::library::Library;
 use hubgrip::population::kernel::joining::PlainJoining;
-use hubgrip::population::kernel::{PairKind, PlainJoint, RingValues};
+use hubgrip::population::kernel::{KernelError, PairKind, Part, Place, PlainJoint, RingValues};
 
 /// Rounding of a few dozen operations on doubles; nothing that subtracts nearly equal numbers is compared.
 const ROUNDING: f64 = 1e-12;
@@ -93,6 +93,46 @@ fn same_joining(joint: &Joint, findings: &Findings) {
     }
 }
 
+/// The least safeties, the onset of yield and the edges, against the verdicts.
+fn same_verdicts(plain: &PlainJoint, joint: &Joint, findings: &Findings) {
+    let made = &findings.extremes;
+    let loosest = plain.effective(made.loosest.interference, PairKind::Loosest);
+    let tightest = plain.effective(made.tightest.interference, PairKind::Tightest);
+    for (part, ring) in [(Part::Shaft, &joint.rings[0]), (Part::Hub, &joint.rings[1])] {
+        let subject = format!("{} safety against", ring.name);
+        let verdict = findings.verdicts.iter().find(|verdict| verdict.subject.starts_with(&subject)).unwrap();
+        let least = plain.least_safety(part, loosest, tightest);
+        same_option(least.map(|(safety, _)| safety), verdict.found);
+    }
+    let onset = findings.onset_of_yield.as_ref().map(|onset| (onset.pressure, onset.ring));
+    let own = plain.onset().map(|(pressure, part)| (pressure, if part == Part::Shaft { 0 } else { 1 }));
+    same_option(own.map(|own| own.0), onset.map(|onset| onset.0));
+    assert_eq!(own.map(|own| own.1), onset.map(|onset| onset.1));
+    for (condition, duty) in plain.states.iter().zip(&findings.duty) {
+        let change = duty.tightest.bending.as_ref().map(|bending| bending.edge_change);
+        same_option(condition.edge_change, change);
+    }
+}
+
+#[test]
+fn what_the_kernel_does_not_cover_is_refused() {
+    let text = |more: &str| {
+        format!(
+            "joint_file: 1\ndiameter: 60 mm\nlength: 70 mm\nshaft: {{material: C45+N}}\nfit: H7/s6\n{more}\n"
+        )
+    };
+    let read = |text: &str| {
+        let file = std::path::Path::new("test.yaml");
+        PlainJoint::of(&hubgrip::joint::read::read(text, file, &[], &Library::built_in()).unwrap())
+    };
+    let hub = "hub: {material: C45+N, outer_diameter: 120 mm}";
+    assert!(read(&text(hub)).is_ok());
+    assert_eq!(read(&text(&format!("{hub}\nrequire: {{allow: plastic}}"))), Err(KernelError::MayYield));
+    let steps = "hub: {material: C45+N, steps: [{length: 30 mm, outer_diameter: 90 mm}, \
+                 {length: 40 mm, outer_diameter: 120 mm}]}";
+    assert_eq!(read(&text(steps)), Err(KernelError::Stepped));
+}
+
 fn refused_at_some_pair(joint: &Joint) -> bool {
     let plain = PlainJoint::of(joint).unwrap();
     let made = joint.fits[0].limits.interference();
@@ -105,7 +145,7 @@ fn refused_at_some_pair(joint: &Joint) -> bool {
 fn the_kernel_gives_what_the_full_computation_gives() {
     let library = Library::built_in();
     let mut random = random_joints::stream(1);
-    let (mut compared, mut loose, mut hot) = (0, 0, 0);
+    let (mut compared, mut loose, mut hot, mut moved) = (0, 0, 0, 0);
     for _ in 0..400 {
         let Some(joint) = random_joints::parts(&mut random).joint(&library) else { continue };
         // Where temperature alone closes a pair, the press formulas refuse it, in both ways alike.
@@ -114,13 +154,18 @@ fn the_kernel_gives_what_the_full_computation_gives() {
             continue;
         };
         same_findings(&PlainJoint::of(&joint).unwrap(), &findings);
+        same_verdicts(&PlainJoint::of(&joint).unwrap(), &joint, &findings);
         same_joining(&joint, &findings);
         compared += 1;
+        moved += usize::from(joint.duty.iter().any(|state| state.speed > 0.0 || state.inner_pressure > 0.0));
         loose += usize::from(findings.extremes.loosest.pressure == 0.0);
         hot += usize::from(joint.assembly.method != Method::Press);
     }
     assert!(compared > 300, "only {compared} joints could be read");
-    assert!(loose > 10 && hot > 50, "{loose} loose and {hot} hot joints are too few");
+    assert!(
+        loose > 10 && hot > 50 && moved > 50,
+        "{loose} loose, {hot} hot and {moved} moved joints are too few"
+    );
 }
 
 #[test]
@@ -172,6 +217,8 @@ fn a_joint_computed_by_hand() {
     assert!((pair.axial_capacity - 56_548.667_8).abs() < 1e-4);
     let (safety, state) = plain.least_slip_safety(50e-6).unwrap();
     assert!((safety - 2.743_013_30).abs() < 1e-8 && state == 0);
-    assert_eq!(plain.highest_pressure(50e-6), (pair.pressure, None));
+    let place = Place { state: None, pair: PairKind::Tightest };
+    assert_eq!(plain.least_safety(Part::Hub, 50e-6, 50e-6), Some((pair.hub.safety.unwrap(), place)));
+    assert_eq!(plain.onset().unwrap().1, Part::Hub);
     assert_eq!(PlainJoining::of(&joint).unwrap().by_method(Method::Press, Bath::DryIce, 50e-6), None);
 }

@@ -29,7 +29,9 @@ fn every_formula_of_every_example_gives_its_printed_result() {
                 let values: Vec<f64> = parsed
                     .var_names()
                     .iter()
-                    .map(|name| *printed.get(name).unwrap_or_else(|| panic!("{text}: {name} has no printed value")))
+                    .map(|name| {
+                        *printed.get(name).unwrap_or_else(|| panic!("{text}: {name} has no printed value"))
+                    })
                     .collect();
                 let worked = parsed.eval(&values).expect("the formula can be worked");
                 assert_eq!(

@@ -58,7 +58,7 @@ impl Process {
 }
 
 const MEMORY: &str = "common practice, from memory";
-const OXYGEN_LAW: &str = "19.5 % is the limit of 29 CFR 1910.134; CGA P-12 and SB-2 for the practice";
+const OXYGEN_LAW: &str = "19.5 % is the limit of 29 CFR 1910.134 (clause from memory); CGA P-12 and SB-2 for the practice (from memory)";
 
 /// The usual cautions for a process, the one that defers to local codes first.
 ///
@@ -384,6 +384,7 @@ mod tests {
 
     fn material(name: &str, kind: Kind, condition: Option<&str>) -> Material {
         Material {
+            family: crate::material::Family::default(),
             id: name.to_owned(),
             name: name.to_owned(),
             designations: Vec::new(),

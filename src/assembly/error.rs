@@ -63,6 +63,33 @@ pub enum AssemblyError {
         /// The temperature asked for, K.
         given: f64,
     },
+    /// A standard's table has no row for a size.
+    #[error("{table} has no row for {} mm", *.given * 1e3)]
+    NotInTable {
+        /// The standard.
+        table: &'static str,
+        /// The size asked for, m.
+        given: f64,
+    },
+    /// A transient could not be followed any further.
+    #[error("the temperatures could not be followed beyond {time} s")]
+    NotSettled {
+        /// Time reached, s.
+        time: f64,
+    },
+    /// A temperature lies on the wrong side: the surroundings can never bring the part there.
+    #[error(
+        "a part at {:.1} °C in surroundings at {:.1} °C never reaches {:.1} °C",
+        celsius(*.start), celsius(*.surroundings), celsius(*.wanted)
+    )]
+    NeverReached {
+        /// Temperature of the part at the start, K.
+        start: f64,
+        /// Temperature of the surroundings, K.
+        surroundings: f64,
+        /// Temperature wanted, K.
+        wanted: f64,
+    },
     /// A table could not be built or read.
     #[error(transparent)]
     Table(#[from] InterpolationError),

@@ -31,15 +31,20 @@ pub struct Arguments {
 
 pub fn run(arguments: &Arguments, output: &Output) -> Result<Ending, Failure> {
     if arguments.list {
-        let names: Vec<String> =
-            template::TEMPLATES.iter().map(|template| format!("{:10} {}\n", template.kind, template.subject)).collect();
+        let names: Vec<String> = template::TEMPLATES
+            .iter()
+            .map(|template| format!("{:10} {}\n", template.kind, template.subject))
+            .collect();
         output.result(&names.concat())?;
         return Ok(Ending::Met);
     }
     let template = template::find(arguments.kind.as_deref())?;
     match &arguments.output {
         Some(path) if path.exists() && path.as_os_str() != "-" => {
-            Err(Diagnostic::new("the file exists and is not overwritten").in_file(path).with_help("choose another name").into())
+            Err(Diagnostic::new("the file exists and is not overwritten")
+                .in_file(path)
+                .with_help("choose another name")
+                .into())
         }
         Some(path) => output.file(path, template.text).map(|()| Ending::Met),
         None => output.result(template.text).map(|()| Ending::Met),

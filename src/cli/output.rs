@@ -63,7 +63,9 @@ impl Output {
     /// Standard output, refused when it is a terminal and the text is not for reading.
     pub fn not_for_terminal(&self, text: &str, help: &str) -> Result<(), Failure> {
         if io::stdout().is_terminal() {
-            return Err(Diagnostic::new("the report is an HTML file, not text for a terminal").with_help(help).into());
+            return Err(Diagnostic::new("the report is an HTML file, not text for a terminal")
+                .with_help(help)
+                .into());
         }
         self.result(text)
     }

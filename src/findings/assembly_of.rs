@@ -1,8 +1,8 @@
 //! How the joint is put together: press curves, heating, chilling, and both shared.
 
 use super::{AssemblyFindings, BathFindings, FindingsError, PairFindings, ThermalRoute};
-use crate::assembly::press::{self, PressCurve, PressInput};
 use crate::assembly::joining::{BathRoute, Joining, Obstacle, Route};
+use crate::assembly::press::{self, PressCurve, PressInput};
 use crate::joint::{Bath, Joint};
 use crate::material::media;
 use crate::quantity::{Measure, UnitSystem, show};
@@ -21,10 +21,10 @@ pub(super) fn assembly(
         mean: press_curve(joint, &extremes.mean, 0.5 * (pressing.low + pressing.high))?,
         tightest: press_curve(joint, &extremes.tightest, pressing.high)?,
     };
-    let (shaft, hub) = joint.shaft_and_hub();
+    let (shaft, hub) = joint.joined_last();
     let hub_limit = hub_limit(joint);
     let joining = Joining {
-        diameter: joint.diameter,
+        diameter: joint.interface_diameter(joint.last_interface()),
         interference: extremes.tightest.interference,
         clearance: joint.assembly.clearance.value,
         hub: &hub.material.expansion,
@@ -50,7 +50,10 @@ pub(super) fn assembly(
 }
 
 fn press_curve(joint: &Joint, pair: &PairFindings, friction: f64) -> Result<PressCurve, FindingsError> {
-    Ok(press::press_curve(&press_input(joint, pair.pressure, pair.effective_interference, friction), CURVE_POINTS)?)
+    Ok(press::press_curve(
+        &press_input(joint, pair.pressure, pair.effective_interference, friction),
+        CURVE_POINTS,
+    )?)
 }
 
 /// The pressing-in of one pair.
@@ -58,7 +61,7 @@ pub(super) fn press_input(joint: &Joint, pressure: f64, interference: f64, frict
     PressInput {
         pressure,
         interference: interference.max(0.0),
-        diameter: joint.diameter,
+        diameter: joint.interface_diameter(joint.last_interface()),
         length: joint.engaged_length(),
         friction,
         chamfer_angle: joint.assembly.chamfer_angle.value,
@@ -99,8 +102,12 @@ impl Words<'_> {
 
     fn heat_hub(&self, route: &Route) -> ThermalRoute {
         let statement = match (&route.obstacle, route.temperature) {
-            (Some(obstacle), _) => format!("heating the {} alone cannot do it: {}", self.hub, self.obstacle(self.hub, obstacle)),
-            (None, Some(temperature)) => format!("heat the {} to at least {}", self.hub, self.temperature(temperature)),
+            (Some(obstacle), _) => {
+                format!("heating the {} alone cannot do it: {}", self.hub, self.obstacle(self.hub, obstacle))
+            }
+            (None, Some(temperature)) => {
+                format!("heat the {} to at least {}", self.hub, self.temperature(temperature))
+            }
             (None, None) => format!("no temperature of the {} was found", self.hub),
         };
         ThermalRoute { temperature: route.temperature, possible: route.possible(), statement }
@@ -108,8 +115,14 @@ impl Words<'_> {
 
     fn chill_shaft(&self, route: &Route) -> ThermalRoute {
         let statement = match (&route.obstacle, route.temperature) {
-            (Some(obstacle), _) => format!("chilling the {} alone cannot do it: {}", self.shaft, self.obstacle(self.shaft, obstacle)),
-            (None, Some(temperature)) => format!("chill the {} to at most {}", self.shaft, self.temperature(temperature)),
+            (Some(obstacle), _) => format!(
+                "chilling the {} alone cannot do it: {}",
+                self.shaft,
+                self.obstacle(self.shaft, obstacle)
+            ),
+            (None, Some(temperature)) => {
+                format!("chill the {} to at most {}", self.shaft, self.temperature(temperature))
+            }
             (None, None) => format!("no temperature of the {} was found", self.shaft),
         };
         ThermalRoute { temperature: route.temperature, possible: route.possible(), statement }
@@ -124,7 +137,11 @@ impl Words<'_> {
                 format!("{name} cannot be judged: {}", why.unwrap_or_default())
             }
             (Some(shrinkage), _) if route.alone => {
-                format!("{name} gives {} of the {} needed: it clears alone", self.change(shrinkage), self.change(route.needed))
+                format!(
+                    "{name} gives {} of the {} needed: it clears alone",
+                    self.change(shrinkage),
+                    self.change(route.needed)
+                )
             }
             (Some(shrinkage), hub) => {
                 let besides = match hub.map(|hub| (&hub.obstacle, hub.temperature)) {
@@ -132,7 +149,11 @@ impl Words<'_> {
                         format!("heat the {} to at least {} as well", self.hub, self.temperature(temperature))
                     }
                     Some((Some(obstacle), _)) => {
-                        format!("and heating the {} as well cannot do it: {}", self.hub, self.obstacle(self.hub, obstacle))
+                        format!(
+                            "and heating the {} as well cannot do it: {}",
+                            self.hub,
+                            self.obstacle(self.hub, obstacle)
+                        )
                     }
                     _ => "no hub temperature makes up the rest".to_owned(),
                 };
@@ -156,10 +177,14 @@ impl Words<'_> {
 
 /// The lower of the material's limit and the user's.
 fn hub_limit(joint: &Joint) -> Option<(f64, String)> {
-    let hub = joint.rings.last()?;
-    let material =
-        hub.material.max_temperature.as_ref().map(|limit| (limit.value, format!("limit of {}", hub.material.name)));
-    let user = joint.assembly.hub_temperature_limit.map(|limit| (limit, "limit given in the joint file".to_owned()));
+    let (_, hub) = joint.joined_last();
+    let material = hub
+        .material
+        .max_temperature
+        .as_ref()
+        .map(|limit| (limit.value, format!("limit of {}", hub.material.name)));
+    let user =
+        joint.assembly.hub_temperature_limit.map(|limit| (limit, "limit given in the joint file".to_owned()));
     match (material, user) {
         (Some(material), Some(user)) => Some(if user.0 < material.0 { user } else { material }),
         (material, user) => material.or(user),

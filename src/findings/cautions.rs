@@ -134,16 +134,22 @@ fn assembly(findings: &Findings) -> Vec<Caution> {
     };
     let mut all: Vec<Caution> = processes.into_iter().flat_map(practice::cautions).collect();
     let chills = matches!(joint.assembly.method, Method::ChillShaft | Method::HeatAndChill);
-    if let (true, Some(shaft)) = (chills, joint.rings.first()) {
-        if let Some(text) = &shaft.material.low_temperature_caution {
-            all.push(Caution {
-                subject: "cold",
-                text: format!("{}: {text}.", shaft.material.name),
-                source: "material library".to_owned(),
-            });
-        }
+    if let (true, Some(shaft)) = (chills, joint.rings.first())
+        && let Some(text) = &shaft.material.low_temperature_caution
+    {
+        all.push(Caution {
+            subject: "cold",
+            text: format!("{}: {}", shaft.material.name, sentence(text)),
+            source: "material library".to_owned(),
+        });
     }
     all
+}
+
+/// A text that ends with a full stop.
+fn sentence(text: &str) -> String {
+    let text = text.trim();
+    if text.ends_with('.') { text.to_owned() } else { format!("{text}.") }
 }
 
 /// Why quantities do not exist, and what is not covered.
@@ -169,7 +175,8 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
             } else {
                 "nothing stresses it"
             };
-            notes.push(format!("The safety of the {} at the tightest pair does not exist: {why}.", ring.name));
+            notes
+                .push(format!("The safety of the {} at the tightest pair does not exist: {why}.", ring.name));
         }
     }
     notes.push(

@@ -4,13 +4,19 @@ mod assembly_of;
 mod cautions;
 mod compute;
 pub mod expression;
+mod kernel;
+mod service;
+mod softening;
 mod verdicts;
 pub mod worksheet;
 
 pub use assembly_of::{bath_name, bath_temperature};
 pub use cautions::criterion_source;
-pub use compute::{FindingsError, after_smoothing, compute};
-pub use verdicts::failure;
+pub use compute::{FindingsError, compute};
+pub use kernel::after_smoothing;
+pub use service::{Fatigue, GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings};
+pub use softening::plastic_share_of_pressure;
+pub use verdicts::{combination, failure};
 
 pub use crate::assembly::cautions::Caution;
 use crate::assembly::press::PressCurve;
@@ -29,6 +35,8 @@ pub struct Findings {
     pub extremes: Extremes<PairFindings>,
     /// Each service state.
     pub duty: Vec<DutyFindings>,
+    /// What speed, heat, yielding and order of assembly do.
+    pub service: ServiceFindings,
     /// How it is put together.
     pub assembly: AssemblyFindings,
     /// Onset of yield of the joint, when an elastic limit exists.
@@ -58,8 +66,12 @@ pub struct PairFindings {
     pub pressure_smoothed: f64,
     /// Contact pressure had it been kept, Pa.
     pub pressure_unsmoothed: f64,
-    /// Stress in each ring, innermost first.
+    /// Stress in each ring, innermost first; of a stepped joint, in the slice where it is greatest.
     pub rings: Vec<RingStress>,
+    /// Each interface, from the innermost outwards.
+    pub interfaces: Vec<InterfaceFindings>,
+    /// The slices of a stepped joint; empty when it is of one section.
+    pub slices: Vec<SliceFindings>,
     /// Torque at which the joint slips, N·m.
     pub torque_capacity: f64,
     /// Axial force at which it slips, N.
@@ -122,8 +134,61 @@ pub struct StateFindings {
     pub axial_capacity: f64,
     /// Safety against slip; none when the state has neither torque nor axial force.
     pub slip_safety: Option<f64>,
+    /// What bending does to the edges; none without bending moment and radial force.
+    pub bending: Option<BendingFindings>,
+    /// Each interface, from the innermost outwards.
+    pub interfaces: Vec<InterfaceFindings>,
     /// Stress in each ring.
     pub rings: Vec<RingStress>,
+}
+
+/// One interface of a pair. With two rings there is one.
+#[derive(Debug, Clone, PartialEq)]
+pub struct InterfaceFindings {
+    /// Its diameter, m.
+    pub diameter: f64,
+    /// Diametral interference as made, m.
+    pub interference: f64,
+    /// Diametral interference that grips, m.
+    pub effective_interference: f64,
+    /// Contact pressure, Pa; mean over the length of a stepped joint.
+    pub pressure: f64,
+    /// Diametral gap, m; zero where it is closed.
+    pub gap: f64,
+    /// Whether it is open.
+    pub open: bool,
+    /// Torque at which it slips, N·m.
+    pub torque_capacity: f64,
+    /// Axial force at which it slips, N.
+    pub axial_capacity: f64,
+}
+
+/// One slice of a stepped joint.
+#[derive(Debug, Clone, PartialEq)]
+pub struct SliceFindings {
+    /// Its length, m.
+    pub length: f64,
+    /// Outer diameter of the hub there, m.
+    pub hub_outer_diameter: f64,
+    /// Bore of the shaft there, m.
+    pub shaft_bore: f64,
+    /// Contact pressure, Pa.
+    pub pressure: f64,
+    /// Stress in both parts.
+    pub rings: Vec<RingStress>,
+}
+
+/// What bending does to the pressure at the edges of the seat.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct BendingFindings {
+    /// Change of pressure at the edges, Pa.
+    pub edge_change: f64,
+    /// Least pressure at an edge, Pa; negative means that it gapes.
+    pub least_edge: f64,
+    /// Greatest pressure at an edge, Pa.
+    pub greatest_edge: f64,
+    /// Bending moment at which an edge begins to gape, N·m.
+    pub limiting_moment: f64,
 }
 
 /// Where the first ring starts to yield (or break, when brittle).
@@ -206,6 +271,8 @@ pub enum VerdictUnit {
     Force,
     /// Temperature, K.
     Temperature,
+    /// A share of the whole, 0 to 1.
+    Share,
 }
 
 /// One requirement with what was found.

@@ -1,14 +1,16 @@
 //! The three questions answered: each requirement with what was found, at which pair and state.
 
 use super::{Findings, Question, RingStress, Verdict, VerdictUnit};
-use crate::joint::{Method, Ring};
+use crate::joint::{Allow, Method, Ring};
 use crate::material::Kind;
+use crate::mechanics::plastic::Regime;
 
 /// Verdicts in the order hold, strength, assembly.
 pub(super) fn verdicts(findings: &Findings) -> Vec<Verdict> {
     let mut verdicts = hold(findings);
     verdicts.extend(strength(findings));
     verdicts.extend(assembly(findings));
+    verdicts.sort_by_key(|verdict| verdict.question);
     verdicts
 }
 
@@ -44,27 +46,85 @@ fn hold(findings: &Findings) -> Vec<Verdict> {
     verdicts
 }
 
-/// One verdict for each ring: its least safety at the tightest pair over the shop and every state.
+/// One verdict for each ring: its least safety over the shop and every state, at the combination of interferences
+/// that governs it. A hub that may yield by design is judged by its plastic share instead.
 fn strength(findings: &Findings) -> Vec<Verdict> {
     let joint = &findings.joint;
-    joint
-        .rings
-        .iter()
-        .enumerate()
-        .map(|(index, ring)| {
-            let required = required_strength_safety(findings, ring);
-            let (found, place) = least_safety(findings, index);
-            Verdict {
-                question: Question::Strength,
-                subject: format!("{} safety against {}", ring.name, failure(ring)),
-                required: Some(required),
-                found,
+    let hub = joint.rings.len() - 1;
+    let mut verdicts: Vec<Verdict> = Vec::new();
+    for (index, ring) in joint.rings.iter().enumerate() {
+        if index == hub
+            && let Some(verdict) = plastic_share(findings)
+        {
+            verdicts.push(verdict);
+            continue;
+        }
+        let required = required_strength_safety(findings, ring);
+        let (found, at) = least_safety(findings, index);
+        verdicts.push(Verdict {
+            question: Question::Strength,
+            subject: format!("{} safety against {}", ring.name, failure(ring)),
+            required: Some(required),
+            found,
+            unit: VerdictUnit::Safety,
+            ok: found.is_none_or(|found| found >= required),
+            at,
+        });
+    }
+    verdicts.extend(edges(findings));
+    verdicts
+}
+
+/// The hub that may yield: the share of its section that is plastic at the tightest pair.
+fn plastic_share(findings: &Findings) -> Option<Verdict> {
+    let Allow::Plastic { share } = findings.joint.require.allow else { return None };
+    let state = &findings.service.plastic.as_ref()?.tightest;
+    let (_, hub) = findings.joint.shaft_and_hub();
+    let carried = matches!(state.regime, Regime::Elastic | Regime::ElasticPlastic);
+    Some(Verdict {
+        question: Question::Strength,
+        subject: format!("plastic share of the {}", hub.name),
+        required: Some(share),
+        found: Some(state.plastic_share),
+        unit: VerdictUnit::Share,
+        ok: carried && state.plastic_share <= share,
+        at: "tightest pair, shop temperature, at rest".to_owned(),
+    })
+}
+
+/// Edges under bending: closed at the loosest pair, elastic at the tightest.
+fn edges(findings: &Findings) -> Vec<Verdict> {
+    let mut verdicts = Vec::new();
+    for (state, duty) in findings.joint.duty.iter().zip(&findings.duty) {
+        if let Some(bending) = &duty.loosest.bending {
+            let found =
+                if bending.edge_change > 0.0 { duty.loosest.pressure / bending.edge_change } else { 0.0 };
+            verdicts.push(Verdict {
+                question: Question::Hold,
+                subject: "safety against a gaping edge".to_owned(),
+                required: Some(1.0),
+                found: Some(found),
                 unit: VerdictUnit::Safety,
-                ok: found.is_none_or(|found| found >= required),
-                at: format!("tightest pair, {place}"),
-            }
-        })
-        .collect()
+                ok: found >= 1.0,
+                at: format!("loosest pair, {}", state.name),
+            });
+        }
+        if let (Some(bending), Some(onset)) = (&duty.tightest.bending, &findings.onset_of_yield) {
+            let required =
+                findings.joint.rings.get(onset.ring).map(|ring| required_strength_safety(findings, ring));
+            let found = onset.pressure / bending.greatest_edge;
+            verdicts.push(Verdict {
+                question: Question::Strength,
+                subject: "safety of the loaded edge".to_owned(),
+                required,
+                found: Some(found),
+                unit: VerdictUnit::Safety,
+                ok: required.is_none_or(|required| found >= required),
+                at: format!("tightest pair, {}", state.name),
+            });
+        }
+    }
+    verdicts
 }
 
 /// What the criterion of a ring's kind guards against.
@@ -82,21 +142,46 @@ fn required_strength_safety(findings: &Findings, ring: &Ring) -> f64 {
     }
 }
 
+/// The least safety of a ring, and where it is found.
 fn least_safety(findings: &Findings, ring: usize) -> (Option<f64>, String) {
+    let joint = &findings.joint;
+    if let Some(governing) = findings.service.governing.get(ring) {
+        let state = governing.state.and_then(|index| joint.duty.get(index));
+        let place = state.map_or("shop temperature", |state| state.name.as_str());
+        return (governing.safety, format!("{}, {place}", combination(&governing.tight)));
+    }
     let safety = |rings: &[RingStress]| rings.get(ring).and_then(|stress| stress.safety);
-    let mut least = (safety(&findings.extremes.tightest.rings), "shop temperature".to_owned());
-    for (state, duty) in findings.joint.duty.iter().zip(&findings.duty) {
-        let found = safety(&duty.tightest.rings);
-        let lower = match (found, least.0) {
-            (Some(found), Some(best)) => found < best,
-            (Some(_), None) => true,
-            (None, _) => false,
-        };
-        if lower {
-            least = (found, state.name.clone());
+    let mut least = (safety(&findings.extremes.tightest.rings), "tightest pair, shop temperature".to_owned());
+    for (state, duty) in joint.duty.iter().zip(&findings.duty) {
+        for (pair, found) in [("tightest", &duty.tightest), ("loosest", &duty.loosest)] {
+            let found = safety(&found.rings);
+            let lower = match (found, least.0) {
+                (Some(found), Some(best)) => found < best,
+                (Some(_), None) => true,
+                (None, _) => false,
+            };
+            if lower {
+                least = (found, format!("{pair} pair, {}", state.name));
+            }
         }
     }
     least
+}
+
+/// A combination of interferences in words.
+pub fn combination(tight: &[bool]) -> String {
+    if tight.iter().all(|tight| *tight) {
+        return "every fit tightest".to_owned();
+    }
+    if !tight.iter().any(|tight| *tight) {
+        return "every fit loosest".to_owned();
+    }
+    let named: Vec<String> = tight
+        .iter()
+        .enumerate()
+        .map(|(index, tight)| format!("fit {} {}", index + 1, if *tight { "tightest" } else { "loosest" }))
+        .collect();
+    named.join(", ")
 }
 
 fn assembly(findings: &Findings) -> Vec<Verdict> {
@@ -110,18 +195,26 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
         ok,
         at: at.to_owned(),
     };
+    let (shaft, hub) = findings.joint.shaft_and_hub();
     let limit = assembly.hub_limit.as_ref().map(|(limit, _)| *limit);
     match findings.joint.assembly.method {
         Method::Press => {
             let force = assembly.press.tightest.peak_force;
             let allowed = findings.joint.require.press_force;
             let ok = allowed.is_none_or(|allowed| force <= allowed);
-            vec![verdict("peak press force", VerdictUnit::Force, allowed, Some(force), ok, "tightest pair, high friction")]
+            vec![verdict(
+                "peak press force",
+                VerdictUnit::Force,
+                allowed,
+                Some(force),
+                ok,
+                "tightest pair, high friction",
+            )]
         }
         Method::HeatHub => {
             let route = &assembly.heat_hub;
             vec![verdict(
-                "hub temperature",
+                &format!("{} temperature", hub.name),
                 VerdictUnit::Temperature,
                 limit,
                 route.temperature,
@@ -132,7 +225,7 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
         Method::ChillShaft => {
             let bath = assembly.baths.iter().find(|bath| bath.bath == findings.joint.assembly.bath);
             vec![verdict(
-                "shaft temperature",
+                &format!("{} temperature", shaft.name),
                 VerdictUnit::Temperature,
                 bath.map(|bath| bath.temperature),
                 assembly.chill_shaft.temperature,
@@ -145,7 +238,7 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
             let found = bath.and_then(|bath| bath.hub_temperature);
             let ok = found.is_some_and(|found| limit.is_none_or(|limit| found <= limit));
             vec![verdict(
-                "hub temperature besides the bath",
+                &format!("{} temperature besides the bath", hub.name),
                 VerdictUnit::Temperature,
                 limit,
                 found,

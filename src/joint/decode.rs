@@ -19,6 +19,9 @@ pub(crate) const AT: &str = "hubgrip::At";
 /// Name under which [`super::written::TextOr`] asks for a text or a section, whichever stands there.
 pub(crate) const TEXT_OR: &str = "hubgrip::TextOr";
 
+/// Most characters of a text that a message repeats.
+const LONGEST_SHOWN: usize = 40;
+
 /// One value of the tree, ready to be read.
 #[derive(Clone, Copy)]
 pub(crate) struct Value<'t> {
@@ -100,6 +103,15 @@ impl<'t> Value<'t> {
         }
     }
 
+    /// The text, or none of it when it holds signs that steer a terminal instead of being shown.
+    fn printable(&self, text: &'t str) -> &'t str {
+        if !text.contains(|c: char| c.is_control() && !matches!(c, '\n' | '\t')) {
+            return text;
+        }
+        self.faults.add(Fault::value(self.node, format!("{} holds a control character", self.name())));
+        ""
+    }
+
     /// Takes note that the value is not of the shape that is due.
     fn misshapen(&self, due: &str) {
         let is = match self.content() {
@@ -119,9 +131,14 @@ impl<'t> Value<'t> {
     fn known_entries(&self, entries: &'t [Entry], known: &'static [&'static str]) -> Vec<(&'t str, NodeId)> {
         let mut kept = Vec::with_capacity(entries.len());
         for entry in entries {
-            if entry.repeated {
-                let fault = Fault::key(entry.value, format!("`{}` stands twice in this section", entry.key))
-                    .help("keep one of the two");
+            if self.faults.full() {
+                self.faults.count();
+            } else if entry.repeated {
+                let fault = Fault::key(
+                    entry.value,
+                    format!("`{}` stands twice in this section", shortened(&entry.key)),
+                )
+                .help("keep one of the two");
                 self.faults.add(fault);
             } else if known.contains(&entry.key.as_str()) {
                 kept.push((entry.key.as_str(), entry.value));
@@ -135,9 +152,9 @@ impl<'t> Value<'t> {
     fn unknown(&self, entry: &Entry, known: &'static [&'static str]) -> Fault {
         let section = self.tree.key_path(self.node);
         let place = if section.is_empty() { String::new() } else { format!(" in `{section}`") };
-        let fault = Fault::key(entry.value, format!("unknown key `{}`{place}", entry.key));
+        let fault = Fault::key(entry.value, format!("unknown key `{}`{place}", shortened(&entry.key)));
         let offered = known.iter().copied().filter(|key| !file::NOT_YET.contains(key));
-        let help = if let Some(found) = did_you_mean(&entry.key, offered.clone()) {
+        let help = if let Some(found) = did_you_mean(&shortened(&entry.key), offered.clone()) {
             self.faults.add_meant(self.node, found);
             format!("did you mean `{found}`?")
         } else if let Some(owners) = file::sections_of(&entry.key) {
@@ -158,13 +175,14 @@ impl<'t> Value<'t> {
     }
 }
 
+/// The beginning of a text, on one line and without control characters.
 fn shortened(text: &str) -> String {
-    let line = text.lines().next().unwrap_or("");
-    if line.chars().count() <= 40 && line.len() == text.len() {
-        return line.to_owned();
+    let mut start: String =
+        text.chars().take(LONGEST_SHOWN).map(|c| if c.is_control() { '\u{fffd}' } else { c }).collect();
+    if text.chars().nth(LONGEST_SHOWN).is_some() {
+        start.push('…');
     }
-    let start: String = line.chars().take(40).collect();
-    format!("{start}…")
+    start
 }
 
 macro_rules! numbers {
@@ -185,7 +203,7 @@ impl<'de> Deserializer<'de> for Value<'de> {
     fn deserialize_any<V: Visitor<'de>>(self, visitor: V) -> Result<V::Value, Refusal> {
         match self.content() {
             Content::Null => visitor.visit_unit(),
-            Content::Scalar(text) => visitor.visit_borrowed_str(text),
+            Content::Scalar(text) => visitor.visit_borrowed_str(self.printable(text)),
             Content::List(items) => visitor.visit_seq(Items { value: self, items: items.iter() }),
             Content::Map(entries) => {
                 let entries = entries.iter().map(|entry| (entry.key.as_str(), entry.value)).collect();
@@ -197,7 +215,7 @@ impl<'de> Deserializer<'de> for Value<'de> {
 
     fn deserialize_str<V: Visitor<'de>>(self, visitor: V) -> Result<V::Value, Refusal> {
         match self.content() {
-            Content::Scalar(text) => visitor.visit_borrowed_str(text),
+            Content::Scalar(text) => visitor.visit_borrowed_str(self.printable(text)),
             _ => {
                 self.misshapen("one value");
                 visitor.visit_borrowed_str("")
@@ -252,7 +270,7 @@ impl<'de> Deserializer<'de> for Value<'de> {
     ) -> Result<V::Value, Refusal> {
         match (name, self.content()) {
             (AT, _) => visitor.visit_seq(Placed { value: self, told: false }),
-            (TEXT_OR, Content::Scalar(text)) => visitor.visit_borrowed_str(text),
+            (TEXT_OR, Content::Scalar(text)) => visitor.visit_borrowed_str(self.printable(text)),
             _ => visitor.visit_newtype_struct(self),
         }
         .map_err(|refusal: Refusal| refusal.at(self.node))

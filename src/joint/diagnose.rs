@@ -58,12 +58,23 @@ pub(crate) struct Faults {
 impl Faults {
     /// Takes note of a fault; only the first at a value is kept.
     pub(crate) fn add(&self, fault: Fault) {
+        if self.full() {
+            return self.count();
+        }
         let mut list = self.list.borrow_mut();
-        if list.len() >= MOST_KEPT {
-            self.dropped.set(self.dropped.get() + 1);
-        } else if !list.iter().any(|known| known.node == fault.node && known.part == fault.part) {
+        if !list.iter().any(|known| known.node == fault.node && known.part == fault.part) {
             list.push(fault);
         }
+    }
+
+    /// Whether so many faults are known that another one is only counted.
+    pub(crate) fn full(&self) -> bool {
+        self.list.borrow().len() >= MOST_KEPT
+    }
+
+    /// Counts a fault that is not kept.
+    pub(crate) fn count(&self) {
+        self.dropped.set(self.dropped.get() + 1);
     }
 
     /// Takes note of a key that is missing in a section; there may be several at one section.
@@ -152,54 +163,122 @@ impl Fault {
 }
 
 /// What the YAML reader says, in plain words, with the way out where one is known.
-pub(crate) fn yaml_message(text: &str, place: Option<Place>, told: &str) -> (String, Option<String>) {
-    if let Some(place) = place
-        && let Some(line) = text.lines().nth(place.line.saturating_sub(1))
-        && line.chars().take_while(|c| c.is_whitespace()).any(|c| c == '\t')
-    {
-        return ("a tab indents this line".into(), Some("indent with blanks, not with tabs".into()));
-    }
-    let message = plain(told);
-    let known: [(&str, &str, Option<&str>); 8] = [
-        (
-            "mapping values are not allowed",
-            "a second `: ` in one line, or a line that is not indented like its neighbours",
-            Some("put quotes round a text that holds `: `, and indent all keys of a section alike"),
-        ),
-        ("repetition limit exceeded", "the aliases expand too far", Some("write the values out")),
-        ("recursion limit exceeded", "nested too deeply", None),
-        (
-            "invalid type: enum",
-            "a YAML tag (a word that begins with `!`) has no meaning here",
-            Some("write the value without it"),
-        ),
-        (
-            "did not find expected key",
-            "a key is expected here",
-            Some("indent all keys of a section alike, and write `key: value`"),
-        ),
-        (
-            "could not find expected ':'",
-            "a key without `: ` and a value",
-            Some("write `key: value`, with a blank after the colon"),
-        ),
-        (
-            "found unexpected ':'",
-            "a key in braces without a value",
-            Some("write `{key: value, key: value}`, with a blank after each colon"),
-        ),
-        (
-            "did not find expected ',' or '}'",
-            "a brace is not closed, or a comma is missing",
-            Some("write `{key: value, key: value}`"),
-        ),
-    ];
-    for (pattern, message, help) in known {
-        if told.contains(pattern) {
-            return (message.to_owned(), help.map(str::to_owned));
+///
+/// What is not closed is shown where it opens.
+pub(crate) fn of_yaml(text: &str, error: &serde_yaml::Error) -> Diagnostic {
+    let told = error.to_string();
+    let place = odd_byte(&told).map(|at| place::of_byte(text, at)).or_else(|| place::of_error(text, error));
+    let (message, help, place) = match place {
+        Some(place) if tab_indents(text, place) => {
+            ("a tab indents this line".to_owned(), Some("indent with blanks, not with tabs"), Some(place))
         }
+        _ => match YAML_FAULTS.iter().find(|known| told.contains(known.pattern)) {
+            Some(known) => {
+                let opening = if known.at_opening { opening(text, &told) } else { None };
+                let place = opening.or(place);
+                (known.message.to_owned(), known.help, place)
+            }
+            None => (plain(&told), None, place),
+        },
+    };
+    let fault = Diagnostic { help: help.map(str::to_owned), ..Diagnostic::new(message) };
+    match place {
+        Some(place) => fault.at(text, place, 1),
+        None => fault,
     }
-    (message, None)
+}
+
+/// A message of the YAML reader with what it means to somebody who writes a joint file.
+struct YamlFault {
+    pattern: &'static str,
+    message: &'static str,
+    help: Option<&'static str>,
+    /// Shown where the unclosed thing opens, not where the reader noticed.
+    at_opening: bool,
+}
+
+const YAML_FAULTS: [YamlFault; 14] = [
+    fault(
+        "mapping values are not allowed",
+        "a second `: ` in one line, or a line that is not indented like its neighbours",
+        "put quotes round a text that holds `: `, and indent all keys of a section alike",
+    ),
+    fault("repetition limit exceeded", "the aliases expand too far", "write the values out"),
+    fault("recursion limit exceeded", "nested too deeply", "a joint file nests five levels at most"),
+    fault(
+        "invalid type: enum",
+        "a YAML tag (a word that begins with `!`) has no meaning here",
+        "write the value without it",
+    ),
+    fault(
+        "a plain word as key",
+        "a key must be a plain word",
+        "write `key: value`, such as `diameter: 60 mm`",
+    ),
+    fault(
+        "did not find expected key",
+        "a key is expected here",
+        "indent all keys of a section alike, and write `key: value`",
+    ),
+    fault(
+        "found character that cannot start",
+        "a text does not begin with this sign unless it is quoted",
+        "put quotes round the text",
+    ),
+    fault("did not find expected node content", "a value is expected here", "write `key: value`"),
+    fault(
+        "control characters are not allowed",
+        "a control character stands here",
+        "take it out; a joint file is plain text",
+    ),
+    fault("unknown anchor", "an alias without its anchor", "write the value out"),
+    YamlFault {
+        pattern: "could not find expected ':'",
+        message: "a key without `: ` and a value",
+        help: Some("write `key: value`, with a blank after the colon"),
+        at_opening: true,
+    },
+    fault(
+        "found unexpected ':'",
+        "a key in braces without a value",
+        "write `{key: value, key: value}`, with a blank after each colon",
+    ),
+    YamlFault {
+        pattern: "did not find expected ',' or",
+        message: "a brace or bracket is not closed, or a comma is missing in it",
+        help: Some("write `{key: value, key: value}`"),
+        at_opening: true,
+    },
+    YamlFault {
+        pattern: "while scanning a quoted scalar",
+        message: "a quote is not closed",
+        help: Some("close it, or take it out: most texts need no quotes"),
+        at_opening: true,
+    },
+];
+
+const fn fault(pattern: &'static str, message: &'static str, help: &'static str) -> YamlFault {
+    YamlFault { pattern, message, help: Some(help), at_opening: false }
+}
+
+fn tab_indents(text: &str, place: Place) -> bool {
+    let line = text.lines().nth(place.line.saturating_sub(1)).unwrap_or_default();
+    line.chars().take_while(|c| c.is_whitespace()).any(|c| c == '\t')
+}
+
+/// The second place in a message of the reader: where the thing begins that it was reading.
+fn opening(text: &str, told: &str) -> Option<Place> {
+    let (_, place) = told.split_once(", while")?.1.split_once(" at line ")?;
+    let (line, column) = place.split_once(" column ")?;
+    let place = Place { line: line.parse().ok()?, column: column.parse().ok()? };
+    let width = text.lines().nth(place.line.checked_sub(1)?)?.chars().count();
+    (place.column <= width).then_some(place)
+}
+
+/// The byte that a message of the reader complains of: a sign that no text file holds.
+fn odd_byte(told: &str) -> Option<usize> {
+    let (_, position) = told.split_once(" at position ")?;
+    position.split(|c: char| !c.is_ascii_digit()).next()?.parse().ok()
 }
 
 /// The message without the path before it and the places in it.

@@ -34,9 +34,9 @@ impl<'a> Draft<'a> {
         if self.faults.touch(written.node) {
             return None;
         }
-        if text.is_empty() {
+        if let Some(wrong) = unreadable::<L>(text) {
             let key = self.tree.key(written.node).unwrap_or("this");
-            self.faults.add(Fault::value(written.node, format!("`{key}` is an empty text")));
+            self.faults.add(Fault::value(written.node, format!("`{key}` {wrong}")));
             return None;
         }
         match L::read(text) {
@@ -130,5 +130,18 @@ impl<'a> Draft<'a> {
         source: impl Into<String>,
     ) {
         self.defaults.push(DefaultTaken { key: key.into(), value: value.into(), source: source.into() });
+    }
+}
+
+/// Why a text is not even looked at.
+fn unreadable<L: Leaf>(text: &str) -> Option<String> {
+    if text.is_empty() {
+        Some("is an empty text".to_owned())
+    } else if text.len() > L::LONGEST {
+        Some(format!("is longer than {} characters", L::LONGEST))
+    } else if !L::LINES && text.contains('\n') {
+        Some("must stand on one line".to_owned())
+    } else {
+        None
     }
 }

@@ -6,46 +6,67 @@
 use schemars::JsonSchema;
 use serde::Deserialize;
 
-use super::leaf::{BathWord, CriterionWord, DisplayWord, FrictionText, LimitsText, LubricationWord};
+use super::leaf::{
+    AllowWord, BathWord, CriterionWord, DisplayWord, FlagWord, FrictionText, LimitsText, LubricationWord,
+    YieldRuleWord,
+};
 use super::leaf::{FitText, MaterialName, UncertainSize};
 use super::leaf::{MaterialKeys, MethodWord, Roughness, SmoothingAtWord, SmoothingText, Version};
-use super::written::{At, Free, NotYet, TextOr, Written};
-use crate::quantity::{Angle, Force, Length, Number, NumberRange, Temperature, Torque};
+use super::written::{At, Line, NotYet, Note, TextOr, Written};
+use crate::quantity::{Angle, Force, Length, Number, NumberRange, Pressure, Speed, Temperature, Torque};
 
 /// Version of the joint file that is read.
 pub const VERSION: u32 = 1;
 
 /// Keys that are known but whose subject is not calculated yet, in any section.
-pub(crate) const NOT_YET: &[&str] = &[
-    "rings",
-    "fits",
-    "order",
-    "bearing",
-    "allow",
-    "steps",
-    "speed",
-    "bending_moment",
-    "rotating_bending",
-    "inner_temperature",
-    "outer_temperature",
-];
+pub(crate) const NOT_YET: &[&str] = &["rings", "fits", "order", "bearing", "steps"];
 
 /// The sections with their keys, for a key that was put into the wrong one.
-const SECTIONS: &[(&str, &[&str])] = &[
-    ("shaft", &["name", "material", "bore", "roughness", "section"]),
-    ("hub", &["name", "material", "outer_diameter", "roughness", "section"]),
+pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
+    ("shaft", &["name", "material", "bore", "roughness", "section", "steps"]),
+    ("hub", &["name", "material", "outer_diameter", "roughness", "section", "steps"]),
+    ("rings", &["name", "material", "bore", "outer_diameter", "roughness", "section"]),
     ("fit", &["hole", "measured"]),
     ("friction", &["holding", "pressing", "release", "lubrication"]),
     (
         "duty",
-        &["state", "torque", "axial_force", "temperature", "shaft_temperature", "hub_temperature", "speed"],
+        &[
+            "state",
+            "torque",
+            "axial_force",
+            "temperature",
+            "temperatures",
+            "shaft_temperature",
+            "hub_temperature",
+            "speed",
+            "inner_temperature",
+            "outer_temperature",
+            "inner_pressure",
+            "outer_pressure",
+            "bending_moment",
+            "radial_force",
+            "rotating_bending",
+            "reversing",
+        ],
     ),
     (
         "assembly",
         &["method", "shop_temperature", "clearance", "chamfer_angle", "bath", "hub_temperature_limit"],
     ),
     ("smoothing", &["factor", "rule", "at"]),
-    ("require", &["slip_safety", "yield_safety", "fracture_safety", "press_force", "hub_temperature"]),
+    (
+        "require",
+        &[
+            "slip_safety",
+            "yield_safety",
+            "fracture_safety",
+            "press_force",
+            "hub_temperature",
+            "allow",
+            "plastic_share",
+            "yield_rule",
+        ],
+    ),
 ];
 
 /// The sections that have `key`, such as `shaft` and `hub`; none when no section has it.
@@ -66,15 +87,14 @@ pub(crate) struct JointFile {
     #[schemars(required)]
     pub(crate) joint_file: Option<Written<Version>>,
     /// What the joint is, in your words.
-    pub(crate) title: Option<Written<Free>>,
+    pub(crate) title: Option<Written<Line>>,
     /// Drawing number and revision.
-    pub(crate) drawing: Option<Written<Free>>,
+    pub(crate) drawing: Option<Written<Line>>,
     /// Whatever a reader should know.
-    pub(crate) note: Option<Written<Free>>,
+    pub(crate) note: Option<Written<Note>>,
     /// Date as it shall be printed.
-    pub(crate) date: Option<Written<Free>>,
+    pub(crate) date: Option<Written<Line>>,
     /// Nominal diameter of the mating surface.
-    #[schemars(required)]
     pub(crate) diameter: Option<Written<Length>>,
     /// Length of the hub along the shaft.
     #[schemars(required)]
@@ -82,13 +102,10 @@ pub(crate) struct JointFile {
     /// Part of the length that carries nothing: chamfers and grooves. Silent: 0 mm.
     pub(crate) relief: Option<Written<Length>>,
     /// The inner part.
-    #[schemars(required)]
     pub(crate) shaft: Option<At<ShaftKeys>>,
     /// The outer part.
-    #[schemars(required)]
     pub(crate) hub: Option<At<HubKeys>>,
     /// The fit: a callout such as H7/s6 or FN 4, or the limits of hole and shaft, or two measured parts.
-    #[schemars(required)]
     pub(crate) fit: Option<At<TextOr<FitText, FitKeys>>>,
     /// Coefficients of friction. Silent: from the library by pair of materials and method of assembly.
     pub(crate) friction: Option<At<TextOr<FrictionText, FrictionKeys>>>,
@@ -104,16 +121,14 @@ pub(crate) struct JointFile {
     pub(crate) require: Option<At<RequireKeys>>,
     /// Units on the terminal and in the report. Silent: metric.
     pub(crate) display: Option<Written<DisplayWord>>,
-    #[schemars(skip)]
-    pub(crate) rings: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) fits: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) order: Option<At<NotYet>>,
+    /// Two rings or more from the innermost outwards, in place of shaft and hub.
+    pub(crate) rings: Option<At<Vec<At<RingKeys>>>>,
+    /// The fits between neighbouring rings, one less than there are rings.
+    pub(crate) fits: Option<At<Vec<At<TextOr<FitText, FitKeys>>>>>,
+    /// Numbers of the fits in the order in which they are joined. Silent: from the innermost outwards.
+    pub(crate) order: Option<At<Vec<Written<Number>>>>,
     #[schemars(skip)]
     pub(crate) bearing: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) allow: Option<At<NotYet>>,
 }
 
 /// The inner part.
@@ -121,7 +136,7 @@ pub(crate) struct JointFile {
 #[serde(deny_unknown_fields)]
 pub(crate) struct ShaftKeys {
     /// What it is called. Silent: shaft.
-    pub(crate) name: Option<Written<Free>>,
+    pub(crate) name: Option<Written<Line>>,
     /// Material of the library by name, or written here with the keys of a library file.
     #[schemars(required)]
     pub(crate) material: Option<At<TextOr<MaterialName, MaterialKeys>>>,
@@ -131,8 +146,8 @@ pub(crate) struct ShaftKeys {
     pub(crate) roughness: Option<Written<Roughness>>,
     /// Ruling section that picks its strength. Silent: its diameter.
     pub(crate) section: Option<Written<Length>>,
-    #[schemars(skip)]
-    pub(crate) steps: Option<At<NotYet>>,
+    /// A shaft whose bore changes: length and bore of each piece, from the end that enters first.
+    pub(crate) steps: Option<At<Vec<At<ShaftStepKeys>>>>,
 }
 
 /// The outer part.
@@ -140,19 +155,62 @@ pub(crate) struct ShaftKeys {
 #[serde(deny_unknown_fields)]
 pub(crate) struct HubKeys {
     /// What it is called. Silent: hub.
-    pub(crate) name: Option<Written<Free>>,
+    pub(crate) name: Option<Written<Line>>,
     /// Material of the library by name, or written here with the keys of a library file.
     #[schemars(required)]
     pub(crate) material: Option<At<TextOr<MaterialName, MaterialKeys>>>,
-    /// Its outer diameter.
-    #[schemars(required)]
+    /// Its outer diameter; the largest of the steps when it is stepped.
     pub(crate) outer_diameter: Option<Written<Length>>,
     /// Roughness of its bore, such as Rz 10 um.
     pub(crate) roughness: Option<Written<Roughness>>,
     /// Ruling section that picks its strength. Silent: the thickness of its wall.
     pub(crate) section: Option<Written<Length>>,
-    #[schemars(skip)]
-    pub(crate) steps: Option<At<NotYet>>,
+    /// A stepped hub: length and outer diameter of each piece, from the end that enters first.
+    pub(crate) steps: Option<At<Vec<At<HubStepKeys>>>>,
+}
+
+/// One piece of a stepped hub.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct HubStepKeys {
+    /// Its length along the shaft.
+    #[schemars(required)]
+    pub(crate) length: Option<Written<Length>>,
+    /// Outer diameter of the hub there.
+    #[schemars(required)]
+    pub(crate) outer_diameter: Option<Written<Length>>,
+}
+
+/// One piece of a shaft whose bore changes.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct ShaftStepKeys {
+    /// Its length along the shaft.
+    #[schemars(required)]
+    pub(crate) length: Option<Written<Length>>,
+    /// Bore of the shaft there.
+    #[schemars(required)]
+    pub(crate) bore: Option<Written<Length>>,
+}
+
+/// One of several rings.
+#[derive(Debug, Deserialize, JsonSchema)]
+#[serde(deny_unknown_fields)]
+pub(crate) struct RingKeys {
+    /// What it is called. Silent: ring and its number.
+    pub(crate) name: Option<Written<Line>>,
+    /// Material of the library by name, or written here with the keys of a library file.
+    #[schemars(required)]
+    pub(crate) material: Option<At<TextOr<MaterialName, MaterialKeys>>>,
+    /// Bore of the innermost ring. Silent: 0 mm, a solid core.
+    pub(crate) bore: Option<Written<Length>>,
+    /// Its outer diameter.
+    #[schemars(required)]
+    pub(crate) outer_diameter: Option<Written<Length>>,
+    /// Roughness of its mating surfaces, such as Rz 6.3 um.
+    pub(crate) roughness: Option<Written<Roughness>>,
+    /// Ruling section that picks its strength. Silent: the thickness of its wall, or the diameter of a solid core.
+    pub(crate) section: Option<Written<Length>>,
 }
 
 /// The fit with hole and shaft apart, or two measured parts.
@@ -216,27 +274,37 @@ pub(crate) struct FrictionKeys {
 #[serde(deny_unknown_fields)]
 pub(crate) struct StateKeys {
     /// Its name.
-    pub(crate) state: Option<Written<Free>>,
+    pub(crate) state: Option<Written<Line>>,
     /// Torque to be carried.
     pub(crate) torque: Option<Written<Torque>>,
     /// Axial force to be carried.
     pub(crate) axial_force: Option<Written<Force>>,
     /// Temperature of all parts.
     pub(crate) temperature: Option<Written<Temperature>>,
+    /// Temperature of each ring, innermost first.
+    pub(crate) temperatures: Option<At<Vec<Written<Temperature>>>>,
     /// Temperature of the shaft.
     pub(crate) shaft_temperature: Option<Written<Temperature>>,
     /// Temperature of the hub.
     pub(crate) hub_temperature: Option<Written<Temperature>>,
-    #[schemars(skip)]
-    pub(crate) speed: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) bending_moment: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) rotating_bending: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) inner_temperature: Option<At<NotYet>>,
-    #[schemars(skip)]
-    pub(crate) outer_temperature: Option<At<NotYet>>,
+    /// Rotational speed. Silent: at rest.
+    pub(crate) speed: Option<Written<Speed>>,
+    /// Temperature of the innermost face, with `outer_temperature`: steady conduction through the parts.
+    pub(crate) inner_temperature: Option<Written<Temperature>>,
+    /// Temperature of the outermost face.
+    pub(crate) outer_temperature: Option<Written<Temperature>>,
+    /// Pressure in the bore of the innermost part.
+    pub(crate) inner_pressure: Option<Written<Pressure>>,
+    /// Pressure round the outermost part.
+    pub(crate) outer_pressure: Option<Written<Pressure>>,
+    /// Bending moment about the middle of the joint.
+    pub(crate) bending_moment: Option<Written<Torque>>,
+    /// Radial force on the joint.
+    pub(crate) radial_force: Option<Written<Force>>,
+    /// Whether the bending turns with the shaft and so fatigues it.
+    pub(crate) rotating_bending: Option<Written<FlagWord>>,
+    /// Whether the torque reverses.
+    pub(crate) reversing: Option<Written<FlagWord>>,
 }
 
 /// How the joint is put together.
@@ -283,4 +351,10 @@ pub(crate) struct RequireKeys {
     pub(crate) press_force: Option<Written<Force>>,
     /// Highest hub temperature while joining, such as what the oven gives; the limit of its material holds as well.
     pub(crate) hub_temperature: Option<Written<Temperature>>,
+    /// Whether a ductile hub may yield by design: elastic or plastic. Silent: elastic.
+    pub(crate) allow: Option<Written<AllowWord>>,
+    /// Greatest share of the hub's section that may be plastic. Silent: 0.3.
+    pub(crate) plastic_share: Option<Written<Number>>,
+    /// Yield rule of the elastic-plastic hub. Silent: Tresca.
+    pub(crate) yield_rule: Option<Written<YieldRuleWord>>,
 }

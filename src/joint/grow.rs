@@ -28,14 +28,18 @@ pub(crate) fn tree_of(text: &str) -> Result<Tree, Box<Diagnostic>> {
         growth.tree.add(Content::Null, Origin::File, None);
         return Ok(growth.tree);
     };
-    Grow { growth: &mut growth, parent: None }.deserialize(first).map_err(|error| told(text, &error))?;
+    Grow { growth: &mut growth, parent: None }
+        .deserialize(first)
+        .map_err(|error| Box::new(diagnose::of_yaml(text, &error)))?;
     if let Some(second) = documents.next() {
-        return Err(second_document(text, place::of_root(second)));
+        return Err(second_document(text, place::of_root(text, second)));
     }
     let Growth { mut tree, unresolved } = growth;
     if unresolved && let Some(document) = serde_yaml::Deserializer::from_str(text).next() {
         let node = tree.root();
-        Fill { tree: &mut tree, node }.deserialize(document).map_err(|error| told(text, &error))?;
+        Fill { tree: &mut tree, node }
+            .deserialize(document)
+            .map_err(|error| Box::new(diagnose::of_yaml(text, &error)))?;
     }
     Ok(tree)
 }
@@ -248,22 +252,6 @@ fn refuse_deep_brackets(text: &str) -> Result<(), Box<Diagnostic>> {
 fn second_document(text: &str, place: Option<Place>) -> Box<Diagnostic> {
     let fault = Diagnostic::new("a second document begins here, and a joint file is one document")
         .with_help("put each joint in a file of its own and give `hubgrip check` several files");
-    Box::new(match place {
-        Some(place) => fault.at(text, place, 1),
-        None => fault,
-    })
-}
-
-/// An error of the YAML reader in plain words.
-fn told(text: &str, error: &serde_yaml::Error) -> Box<Diagnostic> {
-    let place = error.location().map(|at| Place { line: at.line(), column: at.column() });
-    let full = error.to_string();
-    let (message, help) = diagnose::yaml_message(text, place, &full);
-    let fault = Diagnostic::new(message);
-    let fault = match help {
-        Some(help) => fault.with_help(help),
-        None => fault,
-    };
     Box::new(match place {
         Some(place) => fault.at(text, place, 1),
         None => fault,

@@ -11,6 +11,7 @@ use super::{Bath, Method, SmoothingAt};
 use crate::material::friction::Lubrication;
 use crate::material::record::MaterialRecord;
 use crate::mechanics::criteria::DuctileCriterion;
+use crate::mechanics::plastic::YieldRule;
 use crate::quantity::{self, Kind, UnitSystem};
 
 words! {
@@ -57,6 +58,30 @@ words! {
     "oiled" => Lubrication::Oiled,
     "dry" => Lubrication::Dry,
     "degreased" => Lubrication::Degreased,
+}
+
+words! {
+    /// Yes or no.
+    FlagWord: bool, "yes or no",
+    "yes" => true,
+    "no" => false,
+    "true" => true,
+    "false" => false,
+}
+
+words! {
+    /// Whether a ductile hub may yield by design.
+    AllowWord: bool, "design of the hub",
+    "elastic" => false,
+    "plastic" => true,
+}
+
+words! {
+    /// Yield rule of the elastic-plastic hub.
+    YieldRuleWord: YieldRule, "yield rule",
+    "Tresca" => YieldRule::Tresca,
+    "modified Tresca" => YieldRule::ModifiedTresca,
+    "von Mises" => YieldRule::VonMises,
 }
 
 /// The version of the joint file.

@@ -30,6 +30,7 @@ use std::sync::Arc;
 
 use crate::material::{Material, Range, Sourced, Strength};
 use crate::mechanics::criteria::DuctileCriterion;
+use crate::mechanics::plastic::YieldRule;
 use crate::quantity::UnitSystem;
 use crate::tolerance::FitLimits;
 
@@ -56,6 +57,10 @@ pub struct Joint {
     pub fits: Vec<Fit>,
     /// Coefficients of friction.
     pub friction: Friction,
+    /// The interfaces in the order in which they are joined; a plain joint has the one interface 0.
+    pub order: Vec<usize>,
+    /// The joint along its length where hub or shaft is stepped; empty when both are of one section.
+    pub slices: Vec<Slice>,
     /// Service states; never empty.
     pub duty: Vec<DutyState>,
     /// How it is put together.
@@ -82,6 +87,22 @@ impl Joint {
     /// Length that carries: the hub's length less the relief, m.
     pub fn engaged_length(&self) -> f64 {
         self.length - self.relief
+    }
+
+    /// Diameter of an interface, m; the mating diameter when there is none of that number.
+    pub fn interface_diameter(&self, interface: usize) -> f64 {
+        self.rings.get(interface).map_or(self.diameter, |ring| ring.outer_diameter)
+    }
+
+    /// The rings inside and outside the interface that is joined last.
+    pub fn joined_last(&self) -> (&Ring, &Ring) {
+        let inside = self.last_interface().min(self.rings.len().saturating_sub(2));
+        (&self.rings[inside], &self.rings[inside + 1])
+    }
+
+    /// The interface that is joined last: the one that assembly is worked out for.
+    pub fn last_interface(&self) -> usize {
+        self.order.last().copied().unwrap_or(0)
     }
 
     /// The innermost and the outermost ring.
@@ -131,6 +152,29 @@ pub struct Friction {
     pub release: Sourced<Range>,
 }
 
+/// A piece of a stepped joint, from the end that enters first.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Slice {
+    /// Length along the shaft, m.
+    pub length: f64,
+    /// Outer diameter of the hub there, m.
+    pub hub_outer_diameter: f64,
+    /// Bore of the shaft there, m; zero when solid.
+    pub shaft_bore: f64,
+}
+
+/// Whether a ductile hub may yield by design.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub enum Allow {
+    /// Every part stays elastic with the safety required.
+    Elastic,
+    /// A ductile hub may become plastic over this share of its section at most.
+    Plastic {
+        /// Greatest share of the hub's section that may be plastic.
+        share: f64,
+    },
+}
+
 /// One service state.
 #[derive(Debug, Clone, PartialEq)]
 pub struct DutyState {
@@ -140,8 +184,44 @@ pub struct DutyState {
     pub torque: f64,
     /// Axial force, N, not negative.
     pub axial_force: f64,
-    /// Temperature of each ring, K, innermost first.
+    /// Temperature of each ring, K, innermost first; in a radial gradient that of its inner face.
     pub temperatures: Vec<f64>,
+    /// Temperature of the outer face less that of the inner face of each ring, K; empty without a gradient.
+    pub temperature_rises: Vec<f64>,
+    /// Angular speed, rad/s, not negative.
+    pub speed: f64,
+    /// Pressure inside the innermost ring, Pa.
+    pub inner_pressure: f64,
+    /// Pressure outside the outermost ring, Pa.
+    pub outer_pressure: f64,
+    /// Bending moment about the middle of the joint, N·m, not negative.
+    pub bending_moment: f64,
+    /// Radial force on the joint, N, not negative.
+    pub radial_force: f64,
+    /// Whether the bending turns with the shaft, so that it fatigues it.
+    pub rotating_bending: bool,
+    /// Whether the torque reverses.
+    pub reversing: bool,
+}
+
+impl DutyState {
+    /// A state at rest without load, each ring at its temperature (K).
+    pub fn unloaded(name: impl Into<String>, temperatures: Vec<f64>) -> Self {
+        Self {
+            name: name.into(),
+            torque: 0.0,
+            axial_force: 0.0,
+            temperatures,
+            temperature_rises: Vec::new(),
+            speed: 0.0,
+            inner_pressure: 0.0,
+            outer_pressure: 0.0,
+            bending_moment: 0.0,
+            radial_force: 0.0,
+            rotating_bending: false,
+            reversing: false,
+        }
+    }
 }
 
 /// Method of assembly.
@@ -219,6 +299,10 @@ pub struct Requirements {
     pub fracture_safety: f64,
     /// Greatest press-in force, N.
     pub press_force: Option<f64>,
+    /// Whether the hub may yield by design.
+    pub allow: Allow,
+    /// Yield rule of the elastic-plastic hub.
+    pub yield_rule: YieldRule,
 }
 
 /// A default that was taken because the file is silent.

@@ -63,19 +63,25 @@ pub(crate) fn of_byte(text: &str, index: usize) -> Place {
     Place { line, column }
 }
 
-/// Where the root of a document stands.
-pub(crate) fn of_root(document: serde_yaml::Deserializer<'_>) -> Option<Place> {
-    raised(Seek { steps: &[], part: Part::Value }.deserialize(document))
+/// Place of an error of the YAML reader.
+///
+/// Its byte counts, not its line: the reader also breaks lines at signs that editors do not break at.
+pub(crate) fn of_error(text: &str, error: &serde_yaml::Error) -> Option<Place> {
+    error.location().map(|at| of_byte(text, at.index()))
+}
+
+/// Where the root of a document of `text` stands.
+pub(crate) fn of_root(text: &str, document: serde_yaml::Deserializer<'_>) -> Option<Place> {
+    raised(text, Seek { steps: &[], part: Part::Value }.deserialize(document))
 }
 
 fn seek(text: &str, steps: &[usize], part: Part) -> Option<Place> {
     let document = serde_yaml::Deserializer::from_str(text).next()?;
-    raised(Seek { steps, part }.deserialize(document))
+    raised(text, Seek { steps, part }.deserialize(document))
 }
 
-fn raised(result: Result<(), serde_yaml::Error>) -> Option<Place> {
-    let at = result.err()?.location()?;
-    Some(Place { line: at.line(), column: at.column() })
+fn raised(text: &str, result: Result<(), serde_yaml::Error>) -> Option<Place> {
+    of_error(text, &result.err()?)
 }
 
 fn rest_of_line(text: &str, place: Place) -> &str {

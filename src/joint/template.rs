@@ -14,7 +14,7 @@ pub struct Template {
 }
 
 /// Every template; the first is the one for no word.
-pub const TEMPLATES: [Template; 5] = [
+pub const TEMPLATES: [Template; 6] = [
     Template {
         kind: "hub",
         subject: "a hub pressed onto a shaft, metric",
@@ -34,6 +34,11 @@ pub const TEMPLATES: [Template; 5] = [
         kind: "shrink",
         subject: "a rim heated onto a wheel centre",
         text: include_str!("template/shrink.yaml"),
+    },
+    Template {
+        kind: "chill",
+        subject: "a seat ring chilled and put into a warmed head",
+        text: include_str!("template/chill.yaml"),
     },
     Template {
         kind: "measured",

@@ -6,20 +6,26 @@ mod duty;
 mod fit;
 mod friction;
 mod parts;
+mod rings;
 mod smoothing;
+mod steps;
 
+use super::diagnose::Fault;
 use super::draft::Draft;
-use super::file::{JointFile, RequireKeys};
+use super::file::{JointFile, RequireKeys, RingKeys};
 use super::leaf::{CriterionWord, DisplayWord};
 use super::read::FitKey;
 use super::written::{At, Written};
-use super::{Joint, Requirements};
+use super::{Allow, Fit, Joint, Requirements, Ring};
 use crate::mechanics::criteria::DuctileCriterion;
+use crate::mechanics::plastic::YieldRule;
 use crate::quantity::{Kind, Number, UnitSystem, written};
 
 /// The keys in the order of the joint file, which is the order of the defaults.
-const ORDER: [&str; 12] = [
+const ORDER: [&str; 14] = [
     "relief",
+    "rings",
+    "order",
     "shaft",
     "hub",
     "fit",
@@ -52,19 +58,15 @@ const FRACTURE_SAFETY: (f64, &str) = (
 /// The joint, unless something is wrong.
 pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) -> Option<Joint> {
     refuse_what_is_not_calculated(draft, file);
-    let root = draft.tree.root();
-    let diameter = draft
-        .required(root, "diameter", "60 mm", file.diameter.as_ref())
-        .and_then(|written| draft.positive(written));
     let (length, relief) = lengths(draft, file);
     let method = assembly::method(draft, file);
     let shop = assembly::shop_temperature(draft, file);
-    let rings = parts::rings(draft, file, diameter);
-    let fits = if fit_key == FitKey::Optional && file.fit.is_none() {
-        Some(Vec::new())
-    } else {
-        fit::fit(draft, file, diameter).map(|fit| vec![fit])
+    let Body { diameter, rings, fits, order } = match &file.rings {
+        Some(list) => many_rings(draft, file, list),
+        None => two_parts(draft, file, fit_key),
     };
+    let slices =
+        if file.rings.is_some() { Some(Vec::new()) } else { steps::slices(draft, file, diameter, length) };
     let friction = friction::friction(draft, file, rings.as_deref(), method);
     let duty = duty::states(draft, file, rings.as_deref(), shop);
     let assembly = assembly::plan(draft, file, rings.as_deref(), diameter, method, shop);
@@ -87,6 +89,8 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) ->
         relief: relief?,
         rings: rings?,
         fits: fits?,
+        order: order?,
+        slices: slices?,
         friction: friction?,
         duty: duty?,
         assembly: assembly?,
@@ -101,25 +105,55 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) ->
     })
 }
 
+/// What the joint consists of.
+struct Body {
+    diameter: Option<f64>,
+    rings: Option<Vec<Ring>>,
+    fits: Option<Vec<Fit>>,
+    order: Option<Vec<usize>>,
+}
+
+fn two_parts(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) -> Body {
+    for (key, node) in
+        [("fits", file.fits.as_ref().map(|at| at.node)), ("order", file.order.as_ref().map(|at| at.node))]
+    {
+        if let Some(node) = node {
+            let fault = Fault::key(node, format!("`{key}` goes with `rings`"));
+            draft.faults.add(fault.help("two parts have `shaft`, `hub` and one `fit`"));
+        }
+    }
+    let root = draft.tree.root();
+    let diameter = draft
+        .required(root, "diameter", "60 mm", file.diameter.as_ref())
+        .and_then(|written| draft.positive(written));
+    let rings = parts::rings(draft, file, diameter);
+    let fits = if fit_key == FitKey::Optional && file.fit.is_none() {
+        Some(Vec::new())
+    } else {
+        fit::fit(draft, file, diameter).map(|fit| vec![fit])
+    };
+    Body { diameter, rings, fits, order: Some(vec![0]) }
+}
+
+fn many_rings(draft: &mut Draft<'_>, file: &JointFile, list: &At<Vec<At<RingKeys>>>) -> Body {
+    rings::refuse_two_parts(draft, file);
+    let rings = rings::rings(draft, list);
+    let fits = rings::fits(draft, file, rings.as_deref());
+    let order = rings::order(draft, file, list.value.len().saturating_sub(1));
+    let diameter = rings.as_ref().and_then(|rings| rings.first()).map(|ring| ring.outer_diameter);
+    Body { diameter, rings, fits, order }
+}
+
 fn rank(key: &str) -> usize {
     let section = key.split('.').next().unwrap_or(key);
     ORDER.iter().position(|known| *known == section).unwrap_or(ORDER.len())
 }
 
 fn refuse_what_is_not_calculated(draft: &Draft<'_>, file: &JointFile) {
-    let two = "write `shaft:`, `hub:` and `fit:` for two parts";
-    draft.not_yet(file.rings.as_ref(), "only joints of two parts are calculated", two);
-    draft.not_yet(file.fits.as_ref(), "only one fit between two parts is calculated", two);
-    draft.not_yet(file.order.as_ref(), "two parts have no order of assembly", "take the key out");
     draft.not_yet(
         file.bearing.as_ref(),
         "bearing seats are not calculated",
         "give the ring's limits as a fit: `fit: {hole: {lower: -12 um, upper: 0 um}, shaft: k6}`",
-    );
-    draft.not_yet(
-        file.allow.as_ref(),
-        "only elastic joints are calculated",
-        "take the key out: a yield safety under 1 is reported as not met",
     );
 }
 
@@ -190,10 +224,56 @@ fn requirements(draft: &mut Draft<'_>, keys: Option<&At<RequireKeys>>) -> Option
             Some(force)
         }
     };
+    let (allow, yield_rule) = yielding_by_design(draft, keys)?;
     Some(Requirements {
         slip_safety: slip?,
         yield_safety: yielding?,
         fracture_safety: fracture?,
         press_force,
+        allow,
+        yield_rule,
     })
+}
+
+/// Share of the hub's section that may be plastic when the file is silent.
+const PLASTIC_SHARE: (f64, &str) = (0.3, "usual limit of elastic-plastic design (DIN 7190, from memory)");
+
+/// Whether the hub may yield by design, over how much of its section, and by which rule.
+fn yielding_by_design(draft: &mut Draft<'_>, keys: Option<&RequireKeys>) -> Option<(Allow, YieldRule)> {
+    let plastic = match keys.and_then(|keys| keys.allow.as_ref()) {
+        None => {
+            draft.default("require.allow", "elastic", "no part yields by design");
+            false
+        }
+        Some(given) => draft.value(given)?,
+    };
+    let rule = match keys.and_then(|keys| keys.yield_rule.as_ref()) {
+        None => YieldRule::default(),
+        Some(given) => draft.value(given)?,
+    };
+    let given = keys.and_then(|keys| keys.plastic_share.as_ref());
+    if !plastic {
+        if let Some(given) = given {
+            draft.refuse(given, "needs `allow: plastic`");
+        }
+        return Some((Allow::Elastic, rule));
+    }
+    let share = match given {
+        None => {
+            draft.default("require.plastic_share", written(Kind::Number, PLASTIC_SHARE.0), PLASTIC_SHARE.1);
+            PLASTIC_SHARE.0
+        }
+        Some(given) => {
+            let share = draft.value(given)?;
+            if !(share > 0.0 && share <= 1.0) {
+                draft.refuse(given, "must be more than 0 and at most 1");
+                return None;
+            }
+            share
+        }
+    };
+    if keys.is_some_and(|keys| keys.yield_rule.is_none()) {
+        draft.default("require.yield_rule", "Tresca", "the safe side for strength and for holding");
+    }
+    Some((Allow::Plastic { share }, rule))
 }

@@ -174,6 +174,10 @@ impl From<QuantityError> for Refused {
 pub(crate) trait Leaf {
     /// What it means.
     type Value;
+    /// Longest text that is read, bytes (common practice, no source).
+    const LONGEST: usize = 200;
+    /// Whether the text may have several lines.
+    const LINES: bool = false;
 
     /// The meaning of a text.
     fn read(text: &str) -> Result<Self::Value, Refused>;
@@ -191,7 +195,7 @@ macro_rules! quantities {
     };
 }
 
-quantities!(Angle, Force, Length, Temperature, Torque, Number);
+quantities!(Angle, Force, Length, Number, Pressure, Speed, Temperature, Torque);
 
 impl Leaf for quantity::NumberRange {
     type Value = (f64, f64);
@@ -201,11 +205,15 @@ impl Leaf for quantity::NumberRange {
     }
 }
 
-/// Any text, which is shown and nothing else.
+/// One line of text, which is shown and nothing else.
 #[derive(Debug, Clone)]
-pub(crate) struct Free;
+pub(crate) struct Line;
 
-impl Leaf for Free {
+/// Text of any number of lines, which is shown and nothing else.
+#[derive(Debug, Clone)]
+pub(crate) struct Note;
+
+impl Leaf for Line {
     type Value = String;
 
     fn read(text: &str) -> Result<String, Refused> {
@@ -213,19 +221,35 @@ impl Leaf for Free {
     }
 }
 
-impl JsonSchema for Free {
-    fn inline_schema() -> bool {
-        true
-    }
+impl Leaf for Note {
+    type Value = String;
+    const LONGEST: usize = 10_000;
+    const LINES: bool = true;
 
-    fn schema_name() -> Cow<'static, str> {
-        "Text".into()
-    }
-
-    fn json_schema(_: &mut SchemaGenerator) -> Schema {
-        json_schema!({ "type": ["string", "number"] })
+    fn read(text: &str) -> Result<String, Refused> {
+        Ok(text.trim().to_owned())
     }
 }
+
+macro_rules! shown_texts {
+    ($($name:ident),*) => {
+        $(impl JsonSchema for $name {
+            fn inline_schema() -> bool {
+                true
+            }
+
+            fn schema_name() -> Cow<'static, str> {
+                stringify!($name).into()
+            }
+
+            fn json_schema(_: &mut SchemaGenerator) -> Schema {
+                json_schema!({ "type": ["string", "number"] })
+            }
+        })*
+    };
+}
+
+shown_texts!(Line, Note);
 
 /// One of a few words.
 pub(crate) trait Words {

@@ -2,6 +2,9 @@
 
 use thiserror::Error;
 
+use crate::numerics::interpolation::InterpolationError;
+use crate::numerics::root::RootError;
+
 /// An input outside the range in which a formula holds. Numbers are SI.
 #[derive(Debug, Clone, PartialEq, Error)]
 pub enum MechanicsError {
@@ -35,4 +38,37 @@ pub enum MechanicsError {
         /// How many rings.
         rings: usize,
     },
+    /// The shaft would yield.
+    #[error(
+        "the shaft yields at a contact pressure of {limit} Pa and the joint asks for {pressure} Pa; \
+         a plastic shaft is not covered"
+    )]
+    ShaftYields {
+        /// Contact pressure the joint asks for, Pa.
+        pressure: f64,
+        /// Contact pressure at which the shaft begins to yield, Pa.
+        limit: f64,
+    },
+    /// A root was not found.
+    #[error("{what} was not found: {reason}")]
+    NotSolved {
+        /// What was sought.
+        what: &'static str,
+        /// Why it was not found.
+        reason: RootError,
+    },
+    /// A search that did not settle.
+    #[error("{what} did not settle after {steps} steps")]
+    NotSettled {
+        /// What was sought.
+        what: &'static str,
+        /// Steps taken.
+        steps: usize,
+    },
+    /// A root that was not found.
+    #[error(transparent)]
+    Root(#[from] RootError),
+    /// A table that could not be read.
+    #[error(transparent)]
+    Interpolation(#[from] InterpolationError),
 }

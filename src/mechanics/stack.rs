@@ -1,19 +1,21 @@
 //! A stack of rings: all interface pressures from one tridiagonal system, with interfaces that may open.
 
-use nalgebra::DVector;
-
 use super::error::MechanicsError;
+use super::influence::Influence;
 use super::ring::{RingLoad, RingSection, check};
 
 /// Rings from the innermost outwards with what acts on them.
-#[derive(Debug, Clone, PartialEq)]
+#[derive(Debug, Clone, PartialEq, Default)]
 pub struct Stack {
     /// The rings.
     pub rings: Vec<RingSection>,
     /// Diametral interference at each interface, m; negative is clearance.
     pub interference: Vec<f64>,
-    /// Free thermal strain of each ring.
+    /// Free thermal strain of each ring; with a strain rise, that at its inner face.
     pub free_strain: Vec<f64>,
+    /// Free strain of each ring at its outer face less that at its inner face, in steady radial conduction; empty
+    /// when every ring is of one temperature.
+    pub strain_rise: Vec<f64>,
     /// Pressure inside the innermost ring, Pa.
     pub inner_pressure: f64,
     /// Pressure outside the outermost ring, Pa.
@@ -34,35 +36,80 @@ pub struct StackSolution {
 }
 
 impl Stack {
-    /// Solves for the one set of pressures p ≥ 0 and gaps g ≥ 0 with p g = 0 at each interface.
+    /// Solves for the one set of pressures and gaps of which one is zero at each interface and none negative.
+    ///
+    /// g = M p + q, p ≥ 0, g ≥ 0, p g = 0
+    ///
+    /// p contact pressure (Pa), g radial gap (m), M and q as in [`Influence`].
+    ///
+    /// An interface that would need a pull opens, and its neighbours then carry other pressures than with it
+    /// closed. Holds for elastic rings in plane stress; an open ring stays concentric.
+    ///
+    /// Source: Lamé's solution for each ring (Timoshenko & Goodier, *Theory of Elasticity*, 3rd ed., §§ 28, 32);
+    /// M has no positive term off its diagonal, so closing every interface that overlaps, again and again, only
+    /// raises the pressures and ends at the one solution (R. Chandrasekaran, *Opsearch* 7 (1970) 263–268).
     ///
     /// # Errors
     /// Rings that do not meet, lists of the wrong length, pressure inside a solid core, numbers not finite.
+    ///
+    /// # Example
+    /// ```
+    /// use hubgrip::mechanics::{ring::RingSection, stack::Stack};
+    /// let steel = |inner, outer| RingSection::new(inner, outer, 200e9, 0.3, 7800.0).unwrap();
+    /// let stack = Stack {
+    ///     rings: vec![steel(0.010, 0.020), steel(0.020, 0.030), steel(0.030, 0.050)],
+    ///     interference: vec![20e-6, -20e-6],
+    ///     free_strain: vec![0.0; 3],
+    ///     ..Stack::default()
+    /// };
+    /// let solution = stack.solve().unwrap();
+    /// assert!((solution.pressures[0] - 23.4375e6).abs() < 1e-3);
+    /// assert_eq!(solution.open, [false, true]);
+    /// assert!((solution.gaps[1] - 4.375e-6).abs() < 1e-15);
+    /// ```
     pub fn solve(&self) -> Result<StackSolution, MechanicsError> {
-        self.check()?;
-        let system = System::of(self)?;
-        let count = self.interference.len();
-        let all_closed = vec![true; count];
-        let pressures = system.solve(&all_closed);
+        let influence = self.influence()?;
+        let count = influence.len();
+        let pressures = influence.closing_pressures(&vec![true; count]);
         if pressures.iter().all(|pressure| *pressure >= 0.0) {
             return Ok(StackSolution { pressures, gaps: vec![0.0; count], open: vec![false; count] });
         }
-        // The matrix has no positive off-diagonal term, so closing every interface that overlaps, again and again,
-        // only ever raises the pressures and ends at the one solution (R. Chandrasekaran, Opsearch 7 (1970) 263-268).
         let mut closed = vec![false; count];
         let mut pressures = vec![0.0; count];
         for _ in 0..=count {
-            let gaps = system.gaps(&pressures);
+            let gaps = influence.gaps(&pressures);
             let overlapping: Vec<usize> = (0..count).filter(|k| !closed[*k] && gaps[*k] < 0.0).collect();
             if overlapping.is_empty() {
                 break;
             }
             overlapping.into_iter().for_each(|k| closed[k] = true);
-            pressures = system.solve(&closed);
+            pressures = influence.closing_pressures(&closed);
         }
-        let gaps = system.gaps(&pressures);
+        let gaps = influence.gaps(&pressures);
         let gaps = gaps.iter().zip(&closed).map(|(gap, closed)| if *closed { 0.0 } else { *gap }).collect();
         Ok(StackSolution { pressures, gaps, open: closed.iter().map(|closed| !closed).collect() })
+    }
+
+    /// Influence of the pressures on the gaps.
+    ///
+    /// # Errors
+    /// As [`Self::solve`].
+    ///
+    /// # Example
+    /// ```
+    /// use hubgrip::mechanics::{ring::RingSection, stack::Stack};
+    /// let steel = |inner, outer| RingSection::new(inner, outer, 200e9, 0.3, 7800.0).unwrap();
+    /// let stack = Stack {
+    ///     rings: vec![steel(0.010, 0.020), steel(0.020, 0.030), steel(0.030, 0.050)],
+    ///     interference: vec![20e-6, 30e-6],
+    ///     free_strain: vec![0.0; 3],
+    ///     ..Stack::default()
+    /// };
+    /// assert!((stack.influence().unwrap().lower[1] + 2.4e-13).abs() < 1e-25);
+    /// ```
+    pub fn influence(&self) -> Result<Influence, MechanicsError> {
+        self.check()?;
+        Influence::of(self)
     }
 
     /// What acts on ring `index` in a solution.
@@ -70,27 +117,46 @@ impl Stack {
     /// # Errors
     /// An index that is no ring.
     pub fn ring_load(&self, index: usize, solution: &StackSolution) -> Result<RingLoad, MechanicsError> {
-        let wrong = MechanicsError::WrongCount { what: "ring numbers", count: index, rings: self.rings.len() };
-        let free_strain = *self.free_strain.get(index).ok_or(wrong)?;
+        if index >= self.rings.len() {
+            return Err(MechanicsError::WrongCount {
+                what: "ring numbers",
+                count: index,
+                rings: self.rings.len(),
+            });
+        }
+        let free = self.load_without_contact(index);
         let inner = index.checked_sub(1).and_then(|k| solution.pressures.get(k)).copied();
         let outer = solution.pressures.get(index).copied();
         Ok(RingLoad {
-            inner_pressure: inner.unwrap_or(self.inner_pressure),
-            outer_pressure: outer.unwrap_or(self.outer_pressure),
-            angular_speed: self.angular_speed,
-            free_strain,
+            inner_pressure: inner.unwrap_or(free.inner_pressure),
+            outer_pressure: outer.unwrap_or(free.outer_pressure),
+            ..free
         })
+    }
+
+    /// What acts on ring `index` without its neighbours.
+    pub(super) fn load_without_contact(&self, index: usize) -> RingLoad {
+        let last = index + 1 == self.rings.len();
+        RingLoad {
+            inner_pressure: if index == 0 { self.inner_pressure } else { 0.0 },
+            outer_pressure: if last { self.outer_pressure } else { 0.0 },
+            angular_speed: self.angular_speed,
+            free_strain: self.free_strain.get(index).copied().unwrap_or(0.0),
+            strain_rise: self.strain_rise.get(index).copied().unwrap_or(0.0),
+        }
     }
 
     fn check(&self) -> Result<(), MechanicsError> {
         let rings = self.rings.len();
-        let counts = [
-            ("interferences", self.interference.len(), rings.saturating_sub(1)),
-            ("free strains", self.free_strain.len(), rings),
-        ];
         if rings < 2 {
             return Err(MechanicsError::WrongCount { what: "rings", count: rings, rings: 2 });
         }
+        let rises = if self.strain_rise.is_empty() { rings } else { self.strain_rise.len() };
+        let counts = [
+            ("interferences", self.interference.len(), rings - 1),
+            ("free strains", self.free_strain.len(), rings),
+            ("strain rises", rises, rings),
+        ];
         for (what, count, wanted) in counts {
             if count != wanted {
                 return Err(MechanicsError::WrongCount { what, count, rings });
@@ -102,87 +168,9 @@ impl Stack {
                 return Err(MechanicsError::RingsDoNotMeet { inner, ends, begins });
             }
         }
-        for value in self.interference.iter().chain(&self.free_strain) {
-            check("interference or strain", *value, "finite", true)?;
+        for interference in &self.interference {
+            check("interference (m)", *interference, "finite", true)?;
         }
-        check("speed (rad/s)", self.angular_speed, "finite", true)
-    }
-}
-
-/// Radial gaps g = M p + q, with M tridiagonal.
-struct System {
-    diagonal: DVector<f64>,
-    lower: DVector<f64>,
-    upper: DVector<f64>,
-    free_gaps: DVector<f64>,
-}
-
-impl System {
-    fn of(stack: &Stack) -> Result<Self, MechanicsError> {
-        let count = stack.interference.len();
-        let mut system = Self {
-            diagonal: DVector::zeros(count),
-            lower: DVector::zeros(count),
-            upper: DVector::zeros(count),
-            free_gaps: DVector::zeros(count),
-        };
-        let inner_unit = RingLoad { inner_pressure: 1.0, ..RingLoad::default() };
-        let outer_unit = RingLoad { outer_pressure: 1.0, ..RingLoad::default() };
-        for k in 0..count {
-            let (inside, outside) = (&stack.rings[k], &stack.rings[k + 1]);
-            let radius = inside.outer_radius();
-            let outside_by_own = outside.displacement_at(&inner_unit, outside.inner_radius())?;
-            let inside_by_own = inside.displacement_at(&outer_unit, radius)?;
-            system.diagonal[k] = outside_by_own - inside_by_own;
-            if k > 0 {
-                system.lower[k] = -inside.displacement_at(&inner_unit, radius)?;
-            }
-            if k + 1 < count {
-                system.upper[k] = outside.displacement_at(&outer_unit, outside.inner_radius())?;
-            }
-            let free = |index: usize| RingLoad {
-                inner_pressure: if index == 0 { stack.inner_pressure } else { 0.0 },
-                outer_pressure: if index + 1 == stack.rings.len() { stack.outer_pressure } else { 0.0 },
-                angular_speed: stack.angular_speed,
-                free_strain: stack.free_strain[index],
-            };
-            let outside_free = outside.displacement_at(&free(k + 1), outside.inner_radius())?;
-            let inside_free = inside.displacement_at(&free(k), radius)?;
-            system.free_gaps[k] = outside_free - inside_free - 0.5 * stack.interference[k];
-        }
-        Ok(system)
-    }
-
-    /// Pressures with these interfaces closed (gap 0) and the others open (pressure 0), by elimination.
-    fn solve(&self, closed: &[bool]) -> Vec<f64> {
-        let count = closed.len();
-        let mut pivot = self.diagonal.clone();
-        let mut right = -&self.free_gaps;
-        for k in 1..count {
-            if closed[k] && closed[k - 1] {
-                let factor = self.lower[k] / pivot[k - 1];
-                pivot[k] -= factor * self.upper[k - 1];
-                right[k] -= factor * right[k - 1];
-            }
-        }
-        let mut pressures = vec![0.0; count];
-        for k in (0..count).rev() {
-            if closed[k] {
-                let next = if k + 1 < count { self.upper[k] * pressures[k + 1] } else { 0.0 };
-                pressures[k] = (right[k] - next) / pivot[k];
-            }
-        }
-        pressures
-    }
-
-    fn gaps(&self, pressures: &[f64]) -> Vec<f64> {
-        let count = pressures.len();
-        (0..count)
-            .map(|k| {
-                let before = if k > 0 { self.lower[k] * pressures[k - 1] } else { 0.0 };
-                let after = if k + 1 < count { self.upper[k] * pressures[k + 1] } else { 0.0 };
-                self.diagonal[k] * pressures[k] + before + after + self.free_gaps[k]
-            })
-            .collect()
+        Ok(())
     }
 }

@@ -20,8 +20,8 @@ pub use candidate::{Basis, Standard};
 use candidate::{Candidate, Candidates};
 use change::Wanted;
 pub use change::{Change, Opening, Parameter, WORKSHOP};
-use judge::Judge;
-pub use judge::{Edge, Requirement, Subject, Window};
+use judge::{Judge, Made};
+pub use judge::{Requirement, Subject, Window};
 
 /// Which fits are gone through.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -267,14 +267,10 @@ fn found(
     limits: &FitLimits,
 ) -> Result<Vec<(Option<f64>, bool)>, ChooseError> {
     let interference = limits.interference();
-    let at =
-        |subject: Subject| if subject.at_loosest() { interference.loosest } else { interference.tightest };
+    let made = Made { loosest: interference.loosest, tightest: interference.tightest };
     let mut found: Vec<(Option<f64>, bool)> = requirements
         .iter()
-        .map(|requirement| {
-            let made = at(requirement.subject);
-            (judge.found(requirement.subject, made), judge.meets(requirement.subject, made))
-        })
+        .map(|requirement| (judge.found(requirement.subject, made), judge.meets(requirement.subject, made)))
         .collect();
     let close = requirements.iter().zip(&found).any(|(requirement, (found, _))| {
         matches!((found, requirement.required), (Some(found), Some(required))
@@ -294,24 +290,18 @@ fn found(
 impl Choice {
     /// The requirement that sets the least interference, and the one that sets the greatest.
     pub fn binding(&self) -> (Option<&Requirement>, Option<&Requirement>) {
-        let at = |loosest: bool, edge: Option<f64>| {
-            self.requirements.iter().find(|requirement| {
-                requirement.subject.at_loosest() == loosest
-                    && match requirement.edge {
-                        Edge::None => false,
-                        Edge::At(found) => edge == Some(found),
-                        Edge::NeverMet => true,
-                    }
-            })
-        };
-        (at(true, Some(self.window.least)), at(false, self.window.greatest))
+        let least = self.requirements.iter().find(|wanted| wanted.least == Some(self.window.least));
+        let greatest = self.window.greatest;
+        let above = self.requirements.iter().find(|wanted| greatest.is_some() && wanted.greatest == greatest);
+        (least, above)
     }
 
-    /// What a pair of this interference as made (m) gives for a requirement.
+    /// What a fit without tolerance of this interference as made (m) gives for a requirement.
     ///
     /// # Errors
     /// As [`choose`].
     pub fn found_at(&self, requirement: &Requirement, made: f64) -> Result<Option<f64>, ChooseError> {
+        let made = Made { loosest: made, tightest: made };
         Ok(Judge::of(&self.joint)?.found(requirement.subject, made))
     }
 }

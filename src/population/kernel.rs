@@ -1,8 +1,11 @@
 //! A joint of two rings, prepared once and then evaluated as often as wanted without allocation.
 //!
 //! The numbers are those of [`compute`](crate::findings::compute), to rounding: the same formulas with what does
-//! not change from pair to pair taken out. At rest every stress and every capacity is proportional to the
-//! contact pressure, so a pair of parts costs one division for each condition.
+//! not change from pair to pair taken out. The contact pressure is linear in the interference until the parts
+//! open, and every stress is linear in the pressure; temperature, speed and pressures from outside shift both.
+//!
+//! Covered are two rings of one section each that stay elastic. More rings, stepped parts and a hub that may yield
+//! by design are left to the full computation.
 //!
 //! [`PlainJoint::of`] prepares; [`PlainJoint::pair`] and [`PlainJoint::state`] evaluate one pair;
 //! [`PlainJoint::pressures`] and its neighbours go through arrays in loops that the compiler can vectorise.
@@ -18,12 +21,13 @@ use thiserror::Error;
 use crate::assembly::AssemblyError;
 use crate::assembly::press::{self, PressInput};
 use crate::findings::after_smoothing;
-use crate::joint::{DutyState, Joint, SmoothingAt};
+use crate::joint::{Allow, DutyState, Joint, Ring, SmoothingAt};
 use crate::material::Range;
+use crate::mechanics::ring::RingLoad;
 use crate::mechanics::{MechanicsError, capacity};
 use crate::numerics::interpolation::InterpolationError;
 
-pub use ring::{PlainRing, RingValues};
+pub use ring::{PlainRing, RingBase, RingValues};
 
 /// Why a joint cannot be evaluated by the kernel; the full computation may still cover it.
 #[derive(Debug, Clone, PartialEq, Error)]
@@ -31,6 +35,12 @@ pub enum KernelError {
     /// It is not a joint of two rings.
     #[error("a joint of {0} rings is not a plain joint: it must have two")]
     NotTwoRings(usize),
+    /// Its hub or shaft is stepped.
+    #[error("a stepped joint is not a plain joint: hub and shaft must be of one section")]
+    Stepped,
+    /// Its hub may yield by design.
+    #[error("a joint whose hub may yield by design is not a plain joint: it must be elastic")]
+    MayYield,
     /// A ring was refused by the ring formulas.
     #[error(transparent)]
     Mechanics(#[from] MechanicsError),
@@ -58,10 +68,12 @@ pub enum PairKind {
     Tightest,
 }
 
-/// The shop or a service state: what temperature does to the interference, and what load there is.
+/// The shop or a service state: what it does to the interference, what load there is.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Condition {
-    /// Interference that the temperatures add, m: d (ε_shaft − ε_hub).
+    /// Interference that temperature, speed and pressures from outside add, m; negative when they take some.
+    pub added_interference: f64,
+    /// The part of it that comes from the temperatures of the mating faces alone, m: d (ε_shaft − ε_hub).
     pub thermal_interference: f64,
     /// Torque, N·m.
     pub torque: f64,
@@ -69,6 +81,12 @@ pub struct Condition {
     pub axial_force: f64,
     /// Safety against slip for each pascal of contact pressure, 1/Pa; none when there is no load.
     pub slip_safety_per_pressure: Option<f64>,
+    /// Change of the contact pressure at the edges by bending and radial force, Pa; none without them.
+    pub edge_change: Option<f64>,
+    /// Stress of the shaft without contact.
+    pub shaft: RingBase,
+    /// Stress of the hub without contact.
+    pub hub: RingBase,
 }
 
 /// How the rings give way: p = U / ( d (C_h/E_h + C_s/E_s) ).
@@ -93,6 +111,24 @@ impl Elasticity {
     pub fn flexibility(&self) -> f64 {
         self.hub_factor / self.hub_modulus + self.shaft_factor / self.shaft_modulus
     }
+}
+
+/// One of the two parts.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Part {
+    /// The inner one.
+    Shaft,
+    /// The outer one.
+    Hub,
+}
+
+/// Where a least safety is found.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub struct Place {
+    /// Number of the service state; none is the shop.
+    pub state: Option<usize>,
+    /// The pair of parts.
+    pub pair: PairKind,
 }
 
 /// A joint of two rings, prepared. SI throughout.
@@ -202,6 +238,12 @@ impl PlainJoint {
         let [inner, outer] = joint.rings.as_slice() else {
             return Err(KernelError::NotTwoRings(joint.rings.len()));
         };
+        if !joint.slices.is_empty() {
+            return Err(KernelError::Stepped);
+        }
+        if joint.require.allow != Allow::Elastic {
+            return Err(KernelError::MayYield);
+        }
         let shaft = PlainRing::inner(inner, joint.criterion)?;
         let hub = PlainRing::outer(outer, joint.criterion)?;
         let elasticity = Elasticity {
@@ -211,13 +253,8 @@ impl PlainJoint {
             shaft_factor: -shaft.rim_hoop - inner.material.poisson.value,
             shaft_modulus: inner.material.youngs_modulus.value,
         };
-        let shop = DutyState {
-            name: String::new(),
-            torque: 0.0,
-            axial_force: 0.0,
-            temperatures: vec![joint.assembly.shop_temperature; 2],
-        };
-        let states = joint.duty.iter().map(|state| condition(joint, state)).collect::<Result<_, _>>()?;
+        let conditions = Conditions { joint, inner, outer };
+        let states = joint.duty.iter().map(|state| conditions.of_state(state)).collect::<Result<_, _>>()?;
         Ok(Self {
             diameter: joint.diameter,
             engaged_length: joint.engaged_length(),
@@ -228,7 +265,7 @@ impl PlainJoint {
             pressing: joint.friction.pressing.value,
             release: joint.friction.release.value,
             chamfer_angle: joint.assembly.chamfer_angle.value,
-            shop: condition(joint, &shop)?,
+            shop: conditions.at_rest(joint.assembly.shop_temperature)?,
             states,
             shaft,
             hub,
@@ -255,15 +292,15 @@ impl PlainJoint {
     /// Contact pressure (Pa) of an interference that grips (m); zero when the parts do not touch.
     #[inline]
     pub fn pressure(&self, condition: &Condition, effective: f64) -> f64 {
-        ((effective + condition.thermal_interference) * self.pressure_per_interference).max(0.0)
+        ((effective + condition.added_interference) * self.pressure_per_interference).max(0.0)
     }
 
     /// Contact pressures (Pa) of interferences that grip (m); the two slices go together to the shorter end.
     #[inline]
     pub fn pressures(&self, condition: &Condition, effective: &[f64], pressures: &mut [f64]) {
-        let (gain, thermal) = (self.pressure_per_interference, condition.thermal_interference);
+        let (gain, added) = (self.pressure_per_interference, condition.added_interference);
         for (pressure, effective) in pressures.iter_mut().zip(effective) {
-            *pressure = ((effective + thermal) * gain).max(0.0);
+            *pressure = ((effective + added) * gain).max(0.0);
         }
     }
 
@@ -296,8 +333,8 @@ impl PlainJoint {
             smoothing: made - effective,
             effective_interference: effective,
             pressure,
-            shaft: self.shaft.values(pressure),
-            hub: self.hub.values(pressure),
+            shaft: self.shaft.values(pressure, &self.shop.shaft),
+            hub: self.hub.values(pressure, &self.shop.hub),
             torque_capacity: self.torque_capacity(pressure),
             axial_capacity: self.axial_capacity(pressure),
             press_force: Range {
@@ -317,8 +354,8 @@ impl PlainJoint {
             torque_capacity: self.torque_capacity(pressure),
             axial_capacity: self.axial_capacity(pressure),
             slip_safety: condition.slip_safety_per_pressure.map(|gain| gain * pressure),
-            shaft: self.shaft.values(pressure),
-            hub: self.hub.values(pressure),
+            shaft: self.shaft.values(pressure, &condition.shaft),
+            hub: self.hub.values(pressure, &condition.hub),
         }
     }
 
@@ -351,19 +388,41 @@ impl PlainJoint {
         least
     }
 
-    /// Highest contact pressure (Pa) over the shop and every state, with its state; none is the shop.
+    /// Least safety of a part over the shop and every state, at both pairs in a state, and where it is.
     ///
-    /// Stress rises with the pressure, so every ring has its least safety there.
-    #[inline]
-    pub fn highest_pressure(&self, effective: f64) -> (f64, Option<usize>) {
-        let mut highest = (self.pressure(&self.shop, effective), None);
-        for (number, condition) in self.states.iter().enumerate() {
+    /// The interferences that grip are those of the loosest and the tightest pair, m.
+    pub fn least_safety(&self, part: Part, loosest: f64, tightest: f64) -> Option<(f64, Place)> {
+        let safety = |condition: &Condition, effective: f64| {
             let pressure = self.pressure(condition, effective);
-            if pressure > highest.0 {
-                highest = (pressure, Some(number));
+            match part {
+                Part::Shaft => self.shaft.safety(pressure, &condition.shaft),
+                Part::Hub => self.hub.safety(pressure, &condition.hub),
             }
+        };
+        let mut least: Option<(f64, Place)> = None;
+        let mut take = |found: Option<f64>, state: Option<usize>, pair: PairKind| {
+            if let Some(found) = found
+                && least.is_none_or(|(least, _)| found < least)
+            {
+                least = Some((found, Place { state, pair }));
+            }
+        };
+        take(safety(&self.shop, tightest), None, PairKind::Tightest);
+        for (number, condition) in self.states.iter().enumerate() {
+            take(safety(condition, tightest), Some(number), PairKind::Tightest);
+            take(safety(condition, loosest), Some(number), PairKind::Loosest);
         }
-        highest
+        least
+    }
+
+    /// Contact pressure (Pa) at which the first part reaches its strength at rest, and which part that is.
+    pub fn onset(&self) -> Option<(f64, Part)> {
+        let shaft = self.shaft.pressure_at_strength().map(|pressure| (pressure, Part::Shaft));
+        let hub = self.hub.pressure_at_strength().map(|pressure| (pressure, Part::Hub));
+        match (shaft, hub) {
+            (Some(shaft), Some(hub)) => Some(if hub.0 < shaft.0 { hub } else { shaft }),
+            (shaft, hub) => shaft.or(hub),
+        }
     }
 
     fn axial_capacity(&self, pressure: f64) -> f64 {
@@ -375,25 +434,103 @@ impl PlainJoint {
     }
 }
 
-fn condition(joint: &Joint, state: &DutyState) -> Result<Condition, KernelError> {
-    let strain = |index: usize| match (joint.rings.get(index), state.temperatures.get(index)) {
-        (Some(ring), Some(temperature)) => ring
-            .material
-            .expansion
-            .strain(*temperature)
-            .map_err(|cause| KernelError::Expansion { material: ring.material.name.clone(), cause }),
-        _ => Err(KernelError::NotTwoRings(state.temperatures.len())),
-    };
-    let loaded = state.torque != 0.0 || state.axial_force != 0.0;
-    let (friction, diameter, length) =
-        (joint.friction.holding.value.low, joint.diameter, joint.engaged_length());
-    let unit_torque = capacity::torque(friction, 1.0, diameter, length);
-    let unit_axial = capacity::axial(friction, 1.0, diameter, length);
-    let gain = || capacity::slip_safety(state.torque, state.axial_force, unit_torque, unit_axial);
-    Ok(Condition {
-        thermal_interference: joint.diameter * (strain(0)? - strain(1)?),
-        torque: state.torque,
-        axial_force: state.axial_force,
-        slip_safety_per_pressure: loaded.then(gain),
-    })
+/// What the conditions of a joint are made from.
+struct Conditions<'a> {
+    joint: &'a Joint,
+    inner: &'a Ring,
+    outer: &'a Ring,
+}
+
+impl Conditions<'_> {
+    /// At rest, without load, both parts at one temperature (K).
+    fn at_rest(&self, temperature: f64) -> Result<Condition, KernelError> {
+        let thermal =
+            self.joint.diameter * (strain(self.inner, temperature)? - strain(self.outer, temperature)?);
+        Ok(Condition {
+            added_interference: thermal,
+            thermal_interference: thermal,
+            torque: 0.0,
+            axial_force: 0.0,
+            slip_safety_per_pressure: None,
+            edge_change: None,
+            shaft: RingBase::default(),
+            hub: RingBase::default(),
+        })
+    }
+
+    fn of_state(&self, state: &DutyState) -> Result<Condition, KernelError> {
+        let joint = self.joint;
+        let [at_shaft, at_hub] = state.temperatures.as_slice() else {
+            return Err(KernelError::NotTwoRings(state.temperatures.len()));
+        };
+        let (shaft_strain, hub_strain) = (strain(self.inner, *at_shaft)?, strain(self.outer, *at_hub)?);
+        let thermal = joint.diameter * (shaft_strain - hub_strain);
+        let (shaft, hub, added) = if quiet(state) {
+            (RingBase::default(), RingBase::default(), thermal)
+        } else {
+            let rise =
+                |ring: &Ring, number: usize, from: f64, own: f64| match state.temperature_rises.get(number) {
+                    Some(rise) => strain(ring, from + rise).map(|outside| outside - own),
+                    None => Ok(0.0),
+                };
+            let load = RingLoad { angular_speed: state.speed, ..RingLoad::default() };
+            let shaft_load = RingLoad {
+                inner_pressure: state.inner_pressure,
+                free_strain: shaft_strain,
+                strain_rise: rise(self.inner, 0, *at_shaft, shaft_strain)?,
+                ..load
+            };
+            let hub_load = RingLoad {
+                outer_pressure: state.outer_pressure,
+                free_strain: hub_strain,
+                strain_rise: rise(self.outer, 1, *at_hub, hub_strain)?,
+                ..load
+            };
+            let (shaft, shaft_growth) = ring::base(self.inner, &shaft_load, 0.5 * self.inner.outer_diameter)?;
+            let (hub, hub_growth) = ring::base(self.outer, &hub_load, 0.5 * self.outer.inner_diameter)?;
+            (shaft, hub, 2.0 * (shaft_growth - hub_growth))
+        };
+        Ok(Condition {
+            added_interference: added,
+            thermal_interference: thermal,
+            torque: state.torque,
+            axial_force: state.axial_force,
+            slip_safety_per_pressure: self.slip_safety_per_pressure(state),
+            edge_change: self.edge_change(state),
+            shaft,
+            hub,
+        })
+    }
+
+    fn slip_safety_per_pressure(&self, state: &DutyState) -> Option<f64> {
+        let joint = self.joint;
+        let axial =
+            capacity::axial(joint.friction.holding.value.low, 1.0, joint.diameter, joint.engaged_length());
+        let loaded = state.torque > 0.0 || state.axial_force > 0.0;
+        let torque = axial * joint.diameter / 2.0;
+        loaded.then(|| capacity::slip_safety(state.torque, state.axial_force, torque, axial))
+    }
+
+    /// As the findings have it: 12 M/(π d L²) + 2 F/(π d L).
+    fn edge_change(&self, state: &DutyState) -> Option<f64> {
+        if state.bending_moment == 0.0 && state.radial_force == 0.0 {
+            return None;
+        }
+        let (diameter, length) = (self.joint.diameter, self.joint.engaged_length());
+        let radial = 2.0 * state.radial_force / (PI * diameter * length);
+        Some(12.0 / (PI * diameter * length * length) * state.bending_moment + radial)
+    }
+}
+
+/// Whether nothing but uniform temperatures acts on the rings besides the contact.
+fn quiet(state: &DutyState) -> bool {
+    state.speed == 0.0
+        && state.inner_pressure == 0.0
+        && state.outer_pressure == 0.0
+        && state.temperature_rises.is_empty()
+}
+
+fn strain(ring: &Ring, temperature: f64) -> Result<f64, KernelError> {
+    let outside = |cause| KernelError::Expansion { material: ring.material.name.clone(), cause };
+    ring.material.expansion.strain(temperature).map_err(outside)
 }

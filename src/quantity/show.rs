@@ -139,7 +139,8 @@ fn trimmed(value: f64, decimals: usize) -> String {
 
 /// A number to so many significant digits, trailing zeros behind the point dropped.
 ///
-/// From 1e-4 to 1e15 it is written plainly, outside with an exponent. The text reads back as a number.
+/// A tie, as far as a double can tell one, goes away from zero, so that two ways of working out one number print
+/// alike. From 1e-4 to 1e15 it is written plainly, outside with an exponent. The text reads back as a number.
 ///
 /// # Example
 /// ```
@@ -153,7 +154,7 @@ pub fn number(value: f64, significant_digits: usize) -> String {
         return "0".to_owned();
     }
     let digits = significant_digits.max(1);
-    let scientific = format!("{value:.*e}", digits - 1);
+    let scientific = format!("{:.*e}", digits - 1, value * (1.0 + 16.0 * f64::EPSILON));
     let (mantissa, exponent) = scientific.split_once('e').unwrap_or((&scientific, "0"));
     let exponent: i32 = exponent.parse().unwrap_or(0);
     if !(-4..15).contains(&exponent) {

@@ -69,9 +69,8 @@ fn requirements(out: &mut String, choice: &Choice) {
     heading(out, &format!("Allowed interference: {}", words::window(choice)));
     let mut rows = table(&[format!("{unit}, pair"), "requirement".to_owned()]);
     for requirement in &choice.requirements {
-        let pair = if requirement.subject.at_loosest() { "loosest" } else { "tightest" };
         rows.add_row(vec![
-            format!("{}, {pair}", words::edge(choice, requirement)),
+            format!("{}, {}", words::edge(choice, requirement), words::pair(requirement)),
             words::requirement(choice, requirement),
         ]);
     }

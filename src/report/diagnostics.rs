@@ -124,7 +124,10 @@ mod tests {
 
     #[test]
     fn the_mark_stands_under_the_place() {
-        assert_eq!(told("length: 70", 9, 2), "f.yaml:1:9: error: wrong\n   |\n 1 | length: 70\n   |         ^^\n");
+        assert_eq!(
+            told("length: 70", 9, 2),
+            "f.yaml:1:9: error: wrong\n   |\n 1 | length: 70\n   |         ^^\n"
+        );
     }
 
     #[test]

@@ -3,6 +3,7 @@
 //! NaN and infinity never appear: a quantity that does not exist is `null`, and `notes` says why. Names are
 //! only ever added.
 
+mod service;
 mod shape;
 
 use serde::Serialize;
@@ -10,7 +11,7 @@ use serde::Serialize;
 use crate::findings::Findings;
 use crate::tolerance::callout::{Resolved, ResolvedMember};
 use crate::tolerance::{Limits, Member};
-use shape::{Document, ExtremeInterferences, MemberDocument, LimitsDocument, Microns};
+use shape::{Document, ExtremeInterferences, LimitsDocument, MemberDocument, Microns};
 
 /// The findings of a joint as JSON text with a line break at its end.
 pub fn to_json(findings: &Findings) -> String {

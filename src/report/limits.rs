@@ -18,10 +18,25 @@ pub fn fit_text(callout: &str, fit: &Resolved, system: UnitSystem) -> String {
     member(&mut out, "shaft", limits.nominal, &limits.shaft, system);
     let interference = limits.interference();
     let unit = display_unit(Measure::Deviation, system).name;
-    let _ = writeln!(out, "\n{:34}{:>14}  {:>12}  {:>12}", "", format!("interference, {unit}"), "hole", "shaft");
-    pair(&mut out, "loosest  (least-material pair)", interference.loosest, &limits.least_material(), limits.nominal, system);
+    let _ =
+        writeln!(out, "\n{:34}{:>14}  {:>12}  {:>12}", "", format!("interference, {unit}"), "hole", "shaft");
+    pair(
+        &mut out,
+        "loosest  (least-material pair)",
+        interference.loosest,
+        &limits.least_material(),
+        limits.nominal,
+        system,
+    );
     pair(&mut out, "mean", interference.mean, &limits.pairs().mean, limits.nominal, system);
-    pair(&mut out, "tightest (maximum-material pair)", interference.tightest, &limits.maximum_material(), limits.nominal, system);
+    pair(
+        &mut out,
+        "tightest (maximum-material pair)",
+        interference.tightest,
+        &limits.maximum_material(),
+        limits.nominal,
+        system,
+    );
     out.push('\n');
     remark(&mut out, "hole:  ", &fit.hole_source);
     remark(&mut out, "shaft: ", &fit.shaft_source);

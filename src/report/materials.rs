@@ -111,7 +111,9 @@ fn strength(values: &mut Values, material: &Material) {
             Some(limit) => format!(", section to {}", written(Quantity::Length, limit)),
             None => String::new(),
         };
-        for (name, strength) in [("yield_strength", row.yield_strength), ("tensile_strength", row.tensile_strength)] {
+        for (name, strength) in
+            [("yield_strength", row.yield_strength), ("tensile_strength", row.tensile_strength)]
+        {
             if let Some(strength) = strength {
                 values.line(format!("{name}{section}"), written(Quantity::Pressure, strength), &row.source);
             }
@@ -125,7 +127,9 @@ fn expansion(values: &mut Values, material: &Material) {
     let (from, to) = expansion.range();
     let range = format!("{} to {}", written(Quantity::Temperature, from), written(Quantity::Temperature, to));
     values.line("expansion".to_owned(), range, &expansion.source);
-    for (celsius, name) in [(-196.0, "-196"), (-78.5, "-78.5"), (100.0, "100"), (200.0, "200"), (300.0, "300")] {
+    for (celsius, name) in
+        [(-196.0, "-196"), (-78.5, "-78.5"), (100.0, "100"), (200.0, "200"), (300.0, "300")]
+    {
         if let Ok(mean) = expansion.mean_coefficient(celsius + 273.15) {
             let value = format!("{} um/m.K", number(mean * 1e6, 3));
             values.line(format!("  mean from 20 to {name} degC"), value, &expansion.source);

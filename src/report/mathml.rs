@@ -1,11 +1,11 @@
 //! Formulas as MathML Core, with letters or with the numbers put in.
 //!
 //! Only elements of MathML Core (W3C, *MathML Core*, 2024) are used: `mi`, `mn`, `mo`, `mtext`, `mspace`,
-//! `mrow`, `mfrac`, `msqrt`, `msub`, `msup`. Plain names become Greek letters: `sigma_max` is σ with index max.
+//! `mrow`, `mfrac`, `msqrt`, `msub`, `msup`, `msubsup`. Plain names become Greek letters: `sigma_max` is σ with index max.
 
 use maud::{Markup, html};
 
-use super::typeset::{MINUS, THIN, is_number, number, split_exponent};
+use super::typeset::{self, MINUS, THIN, is_number, number, split_exponent};
 use crate::findings::expression::{Expression, Function, Symbol};
 
 /// A formula in letters, such as p = δ/(d·c), without the `math` element round it.
@@ -24,15 +24,16 @@ pub fn symbol(symbol: &Symbol) -> Markup {
     if symbol.index.is_empty() {
         return letter;
     }
+    html! { msub { (letter) (index(symbol)) } }
+}
+
+fn index(symbol: &Symbol) -> Markup {
     let parts: Vec<&str> = symbol.index.split('_').filter(|part| !part.is_empty()).collect();
     html! {
-        msub {
-            (letter)
-            mrow {
-                @for (place, part) in parts.iter().enumerate() {
-                    @if place > 0 { mo { "," } }
-                    (index_part(part))
-                }
+        mrow {
+            @for (place, part) in parts.iter().enumerate() {
+                @if place > 0 { mo { "," } }
+                (index_part(part))
             }
         }
     }
@@ -55,7 +56,7 @@ pub fn printed_number(plain: &str) -> Markup {
 pub fn with_unit(plain: &str, unit: &str) -> Markup {
     html! {
         (printed_number(plain))
-        @if !unit.is_empty() { mtext { (THIN) (unit) } }
+        @if !unit.is_empty() { mtext { (THIN) (typeset::unit(unit)) } }
     }
 }
 
@@ -160,9 +161,7 @@ impl Setter<'_> {
             Expression::Quotient(a, b) => {
                 html! { mfrac { mrow { (self.set(a)) } mrow { (self.set(b)) } } }
             }
-            Expression::Power(base, exponent) => {
-                html! { msup { mrow { (self.base(base)) } mn { (exponent) } } }
-            }
+            Expression::Power(base, exponent) => self.power(base, *exponent),
             Expression::Root(inner) => html! { msqrt { (self.set(inner)) } },
             Expression::Negative(inner) => {
                 html! { mrow { mo form="prefix" { (MINUS) } (self.inside(inner, PRODUCT)) } }
@@ -171,6 +170,16 @@ impl Setter<'_> {
             Expression::Call(function, inner) => self.function(function.name(), std::slice::from_ref(inner)),
             Expression::Greatest(all) => self.function("max", all),
             Expression::Least(all) => self.function("min", all),
+        }
+    }
+
+    /// A power; an index and the exponent stand one above the other.
+    fn power(&self, base: &Expression, exponent: u8) -> Markup {
+        match base {
+            Expression::Symbol(name) if !name.index.is_empty() && self.value_of(name).is_none() => {
+                html! { msubsup { (identifier(&name.letter)) (index(name)) mn { (exponent) } } }
+            }
+            _ => html! { msup { mrow { (self.base(base)) } mn { (exponent) } } },
         }
     }
 
@@ -298,6 +307,12 @@ mod tests {
         );
         assert_eq!(symbol(&Symbol::new("DeltaT")).into_string(), "<mi>ΔT</mi>");
         assert_eq!(symbol(&Symbol::new("Rz")).into_string(), "<mi>Rz</mi>");
+    }
+
+    #[test]
+    fn an_exponent_stands_above_the_index() {
+        let markup = set(&sym("Q_h").power(2));
+        assert_eq!(markup, "<msubsup><mi>Q</mi><mrow><mi>h</mi></mrow><mn>2</mn></msubsup>");
     }
 
     #[test]

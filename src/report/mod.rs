@@ -3,12 +3,13 @@
 pub mod choose;
 pub mod diagnostics;
 pub mod drawing;
+pub mod html;
 pub mod json;
 pub mod limits;
 pub mod materials;
-pub mod html;
 pub mod mathml;
 pub mod plot;
+pub mod service;
 pub mod terminal;
 
 mod hatch;
@@ -18,13 +19,8 @@ mod typeset;
 mod units;
 
 #[cfg(test)]
+mod page_tests;
+#[cfg(test)]
 mod sample;
 #[cfg(test)]
-mod dump {
-    #[test]
-    fn dump() {
-        for (name, findings) in super::sample::all() {
-            std::fs::write(format!("/tmp/gfx/{name}.html"), super::html::html(&findings)).unwrap();
-        }
-    }
-}
+mod well_formed;

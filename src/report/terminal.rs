@@ -32,6 +32,7 @@ pub fn text(findings: &Findings) -> String {
     answers(&mut out, findings);
     extremes(&mut out, findings);
     duty(&mut out, findings);
+    service(&mut out, findings);
     assembly(&mut out, findings);
     defaults(&mut out, findings);
     cautions(&mut out, findings);
@@ -53,7 +54,8 @@ pub(super) fn heading(out: &mut String, text: &str) {
 /// Wrapped text with a hanging indent.
 pub(super) fn paragraph(out: &mut String, first: &str, text: &str) {
     let rest = " ".repeat(first.chars().count());
-    let options = textwrap::Options::new(WIDTH).initial_indent(first).subsequent_indent(&rest).break_words(false);
+    let options =
+        textwrap::Options::new(WIDTH).initial_indent(first).subsequent_indent(&rest).break_words(false);
     for wrapped in textwrap::wrap(text, options) {
         line(out, wrapped);
     }
@@ -70,7 +72,8 @@ fn title(out: &mut String, findings: &Findings) {
         line(out, format!("{HEADING}{wrapped}{HEADING:#}"));
     }
     let size = show(Measure::Size, joint.diameter, joint.display);
-    let callout = joint.fits.first().map_or("", |fit| fit.callout.as_str());
+    let callouts: Vec<&str> = joint.fits.iter().map(|fit| fit.callout.as_str()).collect();
+    let callout = callouts.join(", ");
     let interference = &findings.extremes;
     let unit = display_unit(Measure::Deviation, joint.display).name;
     let from = show(Measure::Deviation, interference.loosest.interference, joint.display).number;
@@ -78,7 +81,10 @@ fn title(out: &mut String, findings: &Findings) {
     paragraph(
         out,
         "",
-        &format!("{size}  {callout}: {} fit, interference {from} to {to} {unit}", character_name(findings.character)),
+        &format!(
+            "{size}  {callout}: {} fit, interference {from} to {to} {unit}",
+            character_name(findings.character)
+        ),
     );
     for (key, value) in &joint.set {
         paragraph(out, "set ", &plain(&format!("{key} = {value}")));
@@ -114,12 +120,17 @@ pub fn verdict_value(value: f64, unit: VerdictUnit, system: UnitSystem) -> Strin
         VerdictUnit::Safety => safety(value),
         VerdictUnit::Force => show(Measure::Force, value, system).to_string(),
         VerdictUnit::Temperature => show(Measure::Temperature, value, system).to_string(),
+        VerdictUnit::Share => format!("{:.1} %", value * 100.0),
     }
 }
 
 /// A safety factor, rounded down so that a printed figure never passes what the number fails.
 pub fn safety(value: f64) -> String {
-    if value >= 100.0 { "over 100".to_owned() } else { format!("{:.2}", (value * 100.0 + 1e-9).floor() / 100.0) }
+    if value >= 100.0 {
+        "over 100".to_owned()
+    } else {
+        format!("{:.2}", (value * 100.0 + 1e-9).floor() / 100.0)
+    }
 }
 
 fn answers(out: &mut String, findings: &Findings) {
@@ -140,7 +151,10 @@ fn answers(out: &mut String, findings: &Findings) {
         for (index, wrapped) in textwrap::wrap(&sentence, options).into_iter().enumerate() {
             if index == 0 {
                 let rest: String = wrapped.chars().skip(19).collect();
-                line(out, format!("{HEADING}{:10}{HEADING:#}{style}{word:9}{style:#}{rest}", name.to_uppercase()));
+                line(
+                    out,
+                    format!("{HEADING}{:10}{HEADING:#}{style}{word:9}{style:#}{rest}", name.to_uppercase()),
+                );
             } else {
                 line(out, wrapped);
             }
@@ -154,10 +168,11 @@ pub fn verdict_sentence(verdict: &Verdict, system: UnitSystem) -> String {
     let found = verdict.found.map_or_else(|| "does not exist".to_owned(), value);
     let bound = match verdict.unit {
         VerdictUnit::Safety => "at least",
-        VerdictUnit::Force => "at most",
+        VerdictUnit::Force | VerdictUnit::Share => "at most",
         VerdictUnit::Temperature => "limit",
     };
-    let required = verdict.required.map_or_else(String::new, |number| format!(" ({bound} {})", value(number)));
+    let required =
+        verdict.required.map_or_else(String::new, |number| format!(" ({bound} {})", value(number)));
     format!("{} {found}{required}; {}", verdict.subject, verdict.at)
 }
 
@@ -180,9 +195,6 @@ pub(super) fn print_table(out: &mut String, mut table: Table, numbers: usize) {
     }
 }
 
-
-
-
 fn extremes(out: &mut String, findings: &Findings) {
     heading(out, "Extreme pairs, shop temperature, at rest");
     let mut table = table(&["", "loosest", "mean", "tightest"].map(str::to_owned));
@@ -197,9 +209,15 @@ fn extremes(out: &mut String, findings: &Findings) {
 pub fn extreme_rows(findings: &Findings) -> Vec<(String, Extremes<Option<String>>)> {
     let joint = &findings.joint;
     let system = joint.display;
-    let measured = |name: &str, measure: Measure, value: fn(&PairFindings) -> f64| -> (String, Extremes<Option<String>>) {
+    let measured = |name: &str,
+                    measure: Measure,
+                    value: fn(&PairFindings) -> f64|
+     -> (String, Extremes<Option<String>>) {
         let unit = display_unit(measure, system).name;
-        (format!("{name}, {unit}"), findings.extremes.as_ref().map(|pair| Some(show(measure, value(pair), system).number)))
+        (
+            format!("{name}, {unit}"),
+            findings.extremes.as_ref().map(|pair| Some(show(measure, value(pair), system).number)),
+        )
     };
     let mut rows = vec![
         measured("interference", Measure::Deviation, |pair| pair.interference),
@@ -269,6 +287,83 @@ fn duty(out: &mut String, findings: &Findings) {
         }
     }
     print_table(out, table, 2);
+}
+
+/// Interfaces of several rings, slices, what loosens the joint, yielding by design, bending and fatigue.
+fn service(out: &mut String, findings: &Findings) {
+    interfaces(out, findings);
+    slices(out, findings);
+    heading(out, "At work");
+    for sentence in super::service::sentences(findings) {
+        paragraph(out, "  ", &sentence);
+    }
+}
+
+fn interfaces(out: &mut String, findings: &Findings) {
+    let joint = &findings.joint;
+    if joint.rings.len() == 2 {
+        return;
+    }
+    heading(out, "Interfaces, shop temperature, at rest");
+    let unit = |measure| display_unit(measure, joint.display).name;
+    let mut table = table(&[
+        "between".to_owned(),
+        "fit".to_owned(),
+        format!("loosest {}", unit(Measure::Pressure)),
+        "mean".to_owned(),
+        "tightest".to_owned(),
+    ]);
+    for (index, fit) in joint.fits.iter().enumerate() {
+        let names = joint.rings.get(index..index + 2).unwrap_or_default();
+        let between: Vec<&str> = names.iter().map(|ring| ring.name.as_str()).collect();
+        let pressure = |pair: &PairFindings| {
+            pair.interfaces.get(index).map_or_else(String::new, |interface| {
+                if interface.open {
+                    "open".to_owned()
+                } else {
+                    show(Measure::Pressure, interface.pressure, joint.display).number
+                }
+            })
+        };
+        table.add_row(vec![
+            plain(&between.join(" / ")),
+            fit.callout.clone(),
+            pressure(&findings.extremes.loosest),
+            pressure(&findings.extremes.mean),
+            pressure(&findings.extremes.tightest),
+        ]);
+    }
+    print_table(out, table, 2);
+}
+
+fn slices(out: &mut String, findings: &Findings) {
+    let joint = &findings.joint;
+    if joint.slices.is_empty() {
+        return;
+    }
+    heading(out, "Along the joint: each slice by itself is good to 10 to 15 %, the total to a few percent");
+    let size = display_unit(Measure::Size, joint.display).name;
+    let pressure = display_unit(Measure::Pressure, joint.display).name;
+    let mut table = table(&[
+        format!("length {size}"),
+        format!("outer {size}"),
+        format!("bore {size}"),
+        format!("loosest {pressure}"),
+        format!("tightest {pressure}"),
+    ]);
+    for (loosest, tightest) in findings.extremes.loosest.slices.iter().zip(&findings.extremes.tightest.slices)
+    {
+        let size = |metres| show(Measure::Size, metres, joint.display).number;
+        let pressure = |pascals| show(Measure::Pressure, pascals, joint.display).number;
+        table.add_row(vec![
+            size(loosest.length),
+            size(loosest.hub_outer_diameter),
+            size(loosest.shaft_bore),
+            pressure(loosest.pressure),
+            pressure(tightest.pressure),
+        ]);
+    }
+    print_table(out, table, 0);
 }
 
 fn assembly(out: &mut String, findings: &Findings) {

@@ -19,9 +19,41 @@ pub(crate) fn number(plain: &str) -> String {
     text
 }
 
-/// A number with its unit, a thin space between; a pure number stands alone.
-pub(crate) fn with_unit(plain: &str, unit: &str) -> String {
-    if unit.is_empty() { number(plain) } else { format!("{}{THIN}{unit}", number(plain)) }
+/// A unit as typeset: `um` as µm, `N.m` as N·m, `degC` as °C, `mm2` as mm².
+pub(crate) fn unit(plain: &str) -> String {
+    let mut text = plain.replace("deg", "°").replace('.', "\u{00B7}");
+    for (name, typeset) in [("um", "µm"), ("uin", "µin")] {
+        if text == name {
+            text = typeset.to_owned();
+        }
+    }
+    let mut set = String::new();
+    let mut letter_before = false;
+    for c in text.chars() {
+        set.push(if letter_before && c.is_ascii_digit() { superscript(c) } else { c });
+        letter_before = c.is_alphabetic();
+    }
+    set
+}
+
+/// Running text with a true minus before every negative number, begun with a capital and ended with a stop.
+pub(crate) fn sentence(text: &str) -> String {
+    let text = prose(text.trim());
+    let mut letters = text.chars();
+    let Some(first) = letters.next() else { return String::new() };
+    let stop = if text.ends_with(['.', '!', '?']) { "" } else { "." };
+    format!("{}{}{stop}", first.to_uppercase(), letters.as_str())
+}
+
+/// Running text with a true minus before every negative number.
+pub(crate) fn prose(text: &str) -> String {
+    let letters: Vec<char> = text.chars().collect();
+    let is_minus = |place: usize| {
+        letters[place] == '-'
+            && letters.get(place + 1).is_some_and(char::is_ascii_digit)
+            && (place == 0 || matches!(letters[place - 1], ' ' | '('))
+    };
+    (0..letters.len()).map(|place| if is_minus(place) { MINUS } else { letters[place] }).collect()
 }
 
 /// Mantissa and exponent of a plain number; the exponent without a plus sign and leading zeros.
@@ -118,10 +150,16 @@ mod tests {
     }
 
     #[test]
+    fn sets_units_and_sentences() {
+        let units = ["um", "N.m", "degC", "mm2", "kg/m3", "10^-6"].map(unit);
+        assert_eq!(units, ["µm", "N·m", "°C", "mm²", "kg/m³", "10^-6"]);
+        assert_eq!(sentence("cold to -78.5 °C"), "Cold to −78.5 °C.");
+        assert_eq!(prose("EN-GJL-250 and 2-3 at (-5)"), "EN-GJL-250 and 2-3 at (−5)");
+    }
+
+    #[test]
     fn leaves_words_alone() {
         assert_eq!(number("none"), "none");
-        assert_eq!(with_unit("0.12", ""), "0.12");
-        assert_eq!(with_unit("60", "mm"), "60\u{202F}mm");
     }
 
     #[test]

@@ -29,7 +29,8 @@ pub fn findings(path: &Path) -> Findings {
 
 /// Findings of the text of a joint file.
 pub fn findings_of(text: &str) -> Findings {
-    let joint = read::read(text, Path::new("test.yaml"), &[], &Library::built_in()).expect("the joint file is right");
+    let joint =
+        read::read(text, Path::new("test.yaml"), &[], &Library::built_in()).expect("the joint file is right");
     compute(joint).expect("the findings can be computed")
 }
 

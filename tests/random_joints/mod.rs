@@ -86,7 +86,13 @@ pub fn parts(random: &mut impl Rng) -> Parts {
         let share = random.random_range(0.2..1.0);
         let axial = if random.random_bool(0.4) { share * torque / (diameter * 1e-3) } else { 0.0 };
         let hot = random.random_bool(0.5);
-        let temperatures = if hot {
+        let temperatures = if hot && random.random_bool(0.2) {
+            format!(
+                ", inner_temperature: {} degC, outer_temperature: {} degC",
+                random.random_range(10..70),
+                random.random_range(10..70)
+            )
+        } else if hot {
             format!(
                 ", shaft_temperature: {} degC, hub_temperature: {} degC",
                 random.random_range(0..90),
@@ -95,8 +101,24 @@ pub fn parts(random: &mut impl Rng) -> Parts {
         } else {
             String::new()
         };
+        let mut more = temperatures;
+        if random.random_bool(0.3) {
+            // A rim speed of up to 150 m/s.
+            let speed = random.random_range(10.0..150.0f64) / (outer * 0.5e-3) * 30.0 / std::f64::consts::PI;
+            more += &format!(", speed: {speed:.0} rpm");
+        }
+        if random.random_bool(0.15) {
+            more += &format!(", outer_pressure: {} MPa", random.random_range(1..40));
+        }
+        if bore > 0.0 && random.random_bool(0.3) {
+            more += &format!(", inner_pressure: {} MPa", random.random_range(1..120));
+        }
+        if random.random_bool(0.2) {
+            let moment = share * torque * random.random_range(0.01..0.6);
+            more += &format!(", bending_moment: {moment:.3} N.m, radial_force: {:.0} N", 0.1 * axial);
+        }
         duty.push(format!(
-            "{{state: state {number}, torque: {:.3} N.m, axial_force: {axial:.1} N{temperatures}}}",
+            "{{state: state {number}, torque: {:.3} N.m, axial_force: {axial:.1} N{more}}}",
             share * torque
         ));
     }

@@ -25,8 +25,20 @@ fn press(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         return;
     }
     sheet.section("Peak press-in force at the tightest pair");
-    sheet.input("mu_p", "friction while pressing, high end", joint.friction.pressing.value.high, "", &joint.friction.pressing.source);
-    sheet.input("phi", "half-angle of the lead-in chamfer", joint.assembly.chamfer_angle.value, "rad", &joint.assembly.chamfer_angle.source);
+    sheet.input(
+        "mu_p",
+        "friction while pressing, high end",
+        joint.friction.pressing.value.high,
+        "",
+        &joint.friction.pressing.source,
+    );
+    sheet.input(
+        "phi",
+        "half-angle of the lead-in chamfer",
+        joint.assembly.chamfer_angle.value,
+        "rad",
+        &joint.assembly.chamfer_angle.source,
+    );
     let tan = || sym("phi").call(Function::Tan);
     sheet.formula(
         "c",
@@ -36,7 +48,14 @@ fn press(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         EQUILIBRIUM,
         Some(curve.lead_in * units.per_metre),
     );
-    sheet.formula("K", "wedge factor of the chamfer", (sym("mu_p") + tan()) / (num("1") - sym("mu_p") * tan()), "", EQUILIBRIUM, None);
+    sheet.formula(
+        "K",
+        "wedge factor of the chamfer",
+        (sym("mu_p") + tan()) / (num("1") - sym("mu_p") * tan()),
+        "",
+        EQUILIBRIUM,
+        None,
+    );
     sheet.formula(
         "s_peak",
         "travel at the peak",
@@ -45,12 +64,14 @@ fn press(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         EQUILIBRIUM,
         Some(curve.peak_travel * units.per_metre),
     );
-    let leaving = sym("K") * (sym("c").power(2) - (sym("s_peak") - sym("l")).power(2)) / (num("2") * sym("c"));
+    let pressure = if super::strength::plastic_shares(findings).is_some() { "P_max" } else { "p_max" };
+    let leaving =
+        sym("K") * (sym("c").power(2) - (sym("s_peak") - sym("l")).power(2)) / (num("2") * sym("c"));
     let seat = sym("mu_p") * (sym("s_peak") - sym("c"));
     sheet.formula(
         "F_peak",
         "peak press-in force",
-        sym("pi") * sym("d") * sym("p_max") * (leaving + seat),
+        sym("pi") * sym("d") * sym(pressure) * (leaving + seat),
         units.force,
         EQUILIBRIUM,
         Some(curve.peak_force * units.per_newton),
@@ -63,30 +84,64 @@ fn heat(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let (Some(shaft), Some(hub)) = (joint.rings.first(), joint.rings.last()) else { return };
     let (shaft_temperature, hub_temperature) = match joint.assembly.method {
         Method::HeatAndChill => {
-            let Some(bath) = findings.assembly.baths.iter().find(|bath| bath.bath == joint.assembly.bath) else { return };
+            let Some(bath) = findings.assembly.baths.iter().find(|bath| bath.bath == joint.assembly.bath)
+            else {
+                return;
+            };
             (bath.temperature, bath.hub_temperature)
         }
         _ => (joint.assembly.shop_temperature, findings.assembly.heat_hub.temperature),
     };
     let Some(hub_temperature) = hub_temperature else { return };
     sheet.section("Hub temperature for the tightest pair");
-    sheet.input("j", "clearance while joining", findings.assembly.clearance * units.small_per_metre, units.small, &joint.assembly.clearance.source);
-    sheet.input("T_sj", "temperature of the shaft", units.degrees(shaft_temperature), units.temperature, "method of assembly");
+    sheet.input(
+        "j",
+        "clearance while joining",
+        findings.assembly.clearance * units.small_per_metre,
+        units.small,
+        &joint.assembly.clearance.source,
+    );
+    sheet.input(
+        "T_sj",
+        "temperature of the shaft",
+        units.degrees(shaft_temperature),
+        units.temperature,
+        "method of assembly",
+    );
     let Ok(shaft_strain) = shaft.material.expansion.strain(shaft_temperature) else { return };
-    sheet.input("eps_sj", "expansion of the shaft from 20 °C", shaft_strain, "", &shaft.material.expansion.source);
+    sheet.input(
+        "eps_sj",
+        "expansion of the shaft from 20 °C",
+        shaft_strain,
+        "",
+        &shaft.material.expansion.source,
+    );
     let thousand = || num("1000");
     sheet.formula(
         "eps_hj",
         "expansion that the hub needs",
-        ((sym("j") + sym("U_max")) / thousand() + (sym("d") + sym("U_max") / thousand()) * sym("eps_sj")) / sym("d"),
+        ((sym("j") + sym("U_max")) / thousand() + (sym("d") + sym("U_max") / thousand()) * sym("eps_sj"))
+            / sym("d"),
         "",
         JOINING,
         hub.material.expansion.strain(hub_temperature).ok(),
     );
     let Some(alpha) = mean_coefficient(&hub.material, hub_temperature, units) else { return };
     let unit = if units.temperature == "degC" { "1/K" } else { "1/degF" };
-    sheet.input("alpha", "mean expansion of the hub from 20 °C to that temperature, from its curve", alpha, unit, &hub.material.expansion.source);
-    sheet.input("T_ref", "reference temperature of sizes", units.degrees(REFERENCE_TEMPERATURE), units.temperature, "ISO 1");
+    sheet.input(
+        "alpha",
+        "mean expansion of the hub from 20 °C to that temperature, from its curve",
+        alpha,
+        unit,
+        &hub.material.expansion.source,
+    );
+    sheet.input(
+        "T_ref",
+        "reference temperature of sizes",
+        units.degrees(REFERENCE_TEMPERATURE),
+        units.temperature,
+        "ISO 1",
+    );
     sheet.formula(
         "T_h",
         "hub temperature for joining",

@@ -1,83 +1,186 @@
 //! Each loaded service state at the loosest pair.
 
-use super::super::Findings;
-use super::super::compute::free_strains;
-use super::super::expression::{num, sym};
+use super::super::expression::{Expression, num, sym};
+use super::super::kernel::Condition;
+use super::super::{Findings, StateFindings};
 use super::Units;
 use super::sheet::Sheet;
-use super::strength::{pressure, torque};
+use super::strength::{axial, flexibility, grip, plastic_shares, torque};
+use crate::joint::{DutyState, Ring};
+
+const ROTATION: &str = "rotating disc, Timoshenko & Goodier, Theory of Elasticity, § 32";
 
 pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let joint = &findings.joint;
     for (index, (state, duty)) in joint.duty.iter().zip(&findings.duty).enumerate() {
-        let Some(safety) = duty.loosest.slip_safety else { continue };
-        let Ok(strains) = free_strains(joint, &state.temperatures) else { continue };
-        let tag = index + 1;
-        let name = |symbol: &str| format!("{symbol}{tag}");
-        sheet.section(format!("Duty state {}: slip at the loosest pair", state.name));
-        let parts = ["s", "h"].into_iter().zip(&joint.rings).zip(state.temperatures.iter().zip(&strains));
-        for ((letter, ring), (temperature, strain)) in parts {
+        let Ok(condition) = Condition::of_state(joint, state) else { continue };
+        let sheet_of_state = StateSheet { findings, units, state, condition, tag: index + 1 };
+        sheet_of_state.write(sheet, &duty.loosest);
+    }
+}
+
+/// One state with the number that its symbols carry.
+struct StateSheet<'a> {
+    findings: &'a Findings,
+    units: &'a Units,
+    state: &'a DutyState,
+    condition: Condition,
+    tag: usize,
+}
+
+impl StateSheet<'_> {
+    fn name(&self, symbol: &str) -> String {
+        format!("{symbol}{}", self.tag)
+    }
+
+    fn write(&self, sheet: &mut Sheet, pair: &StateFindings) {
+        if pair.slip_safety.is_none() && self.state.speed == 0.0 {
+            return;
+        }
+        sheet.section(format!("Duty state {}: the loosest pair", self.state.name));
+        self.heat(sheet);
+        let lost = self.rotation(sheet);
+        let held = grip("W_min", &self.name("eps_s"), &self.name("eps_h"));
+        let held = if lost { held - sym(&self.name("V_")) } else { held };
+        let share = plastic_shares(self.findings).map_or(1.0, |shares| shares[0]);
+        let elastic = if share < 1.0 { self.name("p_e") } else { self.name("p_") };
+        sheet.formula(
+            &elastic,
+            "contact pressure",
+            super::super::expression::greatest([num("0"), held / flexibility()]),
+            self.units.pressure,
+            "Lamé with free thermal strains and rotation",
+            Some(pair.pressure / share * self.units.per_pascal),
+        );
+        if share < 1.0 {
+            sheet.formula(
+                &self.name("p_"),
+                "contact pressure of the hub that yields",
+                sym(&elastic) * sym("k_min"),
+                self.units.pressure,
+                "share of the shop temperature",
+                Some(pair.pressure * self.units.per_pascal),
+            );
+        }
+        self.capacity(sheet, pair);
+    }
+
+    /// Free strain of both parts; in a gradient the mean over the section, which bore and rim both follow.
+    fn heat(&self, sheet: &mut Sheet) {
+        let units = self.units;
+        for (number, (letter, ring)) in ["s", "h"].into_iter().zip(&self.findings.joint.rings).enumerate() {
+            let temperature = self.state.temperatures.get(number).copied().unwrap_or_default();
+            let strain = self.condition.strain.get(number).copied().unwrap_or_default();
+            let rise = self.condition.rise.get(number).copied().unwrap_or_default();
+            let (where_, what) = if rise == 0.0 {
+                ("", format!("expansion of the {} from 20 °C", ring.name))
+            } else {
+                (
+                    " at its inner face",
+                    format!("expansion of the {} from 20 °C, mean over its section", ring.name),
+                )
+            };
             sheet.input(
-                &format!("T_{letter}{tag}"),
-                &format!("temperature of the {}", ring.name),
-                units.degrees(*temperature),
+                &format!("T_{letter}{}", self.tag),
+                &format!("temperature of the {}{where_}", ring.name),
+                units.degrees(temperature),
                 units.temperature,
                 "joint file",
             );
+            let mean = strain + rise * mean_share(ring);
             sheet.input(
-                &format!("eps_{letter}{tag}"),
-                &format!("expansion of the {} from 20 °C", ring.name),
-                *strain,
+                &self.name(&format!("eps_{letter}")),
+                &what,
+                mean,
                 "",
                 &ring.material.expansion.source,
             );
         }
+    }
+
+    /// Interference that rotation takes; false at rest.
+    fn rotation(&self, sheet: &mut Sheet) -> bool {
+        let (units, joint) = (self.units, &self.findings.joint);
+        let [shaft, hub] = joint.rings.as_slice() else { return false };
+        if self.state.speed == 0.0 {
+            return false;
+        }
+        let speed = self.name("w_");
+        sheet.input(&speed, "angular speed", self.state.speed, "rad/s", "joint file");
+        for (letter, ring) in [("s", shaft), ("h", hub)] {
+            let density = ring.material.density.value * units.per_kilogram_per_cubic_metre;
+            let what = format!("density of the {}", ring.name);
+            sheet.input(
+                &self.name(&format!("rho_{letter}")),
+                &what,
+                density,
+                units.density,
+                &ring.material.density.source,
+            );
+        }
+        let growth = |letter: &str, other: &str| -> Expression {
+            let (rho, nu, modulus) =
+                (self.name(&format!("rho_{letter}")), format!("nu_{letter}"), format!("E_{letter}"));
+            sym(&rho) * sym(&speed).power(2) * sym("d") / (num("16") * sym(&modulus))
+                * ((num("3") + sym(&nu)) * sym(other).power(2) + (num("1") - sym(&nu)) * sym("d").power(2))
+        };
+        for (symbol, meaning, formula) in [
+            ("v_h", "growth of the free hub's bore by rotation", growth("h", "D")),
+            ("v_s", "growth of the free shaft by rotation", growth("s", "b")),
+            ("V_", "interference that rotation takes", sym(&self.name("v_h")) - sym(&self.name("v_s"))),
+        ] {
+            sheet.formula(&self.name(symbol), meaning, formula, units.length, ROTATION, None);
+        }
+        true
+    }
+
+    fn capacity(&self, sheet: &mut Sheet, pair: &StateFindings) {
+        let Some(safety) = pair.slip_safety else { return };
+        let units = self.units;
+        let (axial_name, torque_name) = (self.name("F_cap"), self.name("M_cap"));
+        let (force_name, moment_name) = (self.name("F_"), self.name("M_"));
+        let equilibrium = "equilibrium; DIN 7190-1";
         sheet.formula(
-            &name("p_"),
-            "contact pressure",
-            pressure("W_min", &name("eps_s"), &name("eps_h")),
-            units.pressure,
-            "Lamé with free thermal strains",
-            Some(duty.loosest.pressure * units.per_pascal),
+            &axial_name,
+            "axial force at slip",
+            axial(&self.name("p_")),
+            units.force,
+            equilibrium,
+            Some(pair.axial_capacity * units.per_newton),
         );
-        slip(sheet, findings, index, safety, units);
+        sheet.formula(
+            &torque_name,
+            "torque at slip",
+            torque(&axial_name, units),
+            units.torque,
+            equilibrium,
+            Some(pair.torque_capacity * units.per_newton_metre),
+        );
+        let (moment, force) =
+            (self.state.torque * units.per_newton_metre, self.state.axial_force * units.per_newton);
+        sheet.input(&moment_name, "torque", moment, units.torque, "joint file");
+        sheet.input(&force_name, "axial force", force, units.force, "joint file");
+        if pair.pressure <= 0.0 {
+            return;
+        }
+        let share = |load: &str, capacity: &str| (sym(load) / sym(capacity)).power(2);
+        sheet.formula(
+            &self.name("S_"),
+            "safety against slip",
+            num("1") / (share(&moment_name, &torque_name) + share(&force_name, &axial_name)).root(),
+            "",
+            "resultant of both friction shares; Kollmann, Welle-Nabe-Verbindungen (1984)",
+            Some(safety),
+        );
     }
 }
 
-fn slip(sheet: &mut Sheet, findings: &Findings, index: usize, safety: f64, units: &Units) {
-    let state = &findings.joint.duty[index];
-    let pair = &findings.duty[index].loosest;
-    let tag = index + 1;
-    let (axial_name, torque_name) = (format!("F_cap{tag}"), format!("M_cap{tag}"));
-    let (force_name, moment_name) = (format!("F_{tag}"), format!("M_{tag}"));
-    sheet.formula(
-        &axial_name,
-        "axial force at slip",
-        super::strength::axial(&format!("p_{tag}")),
-        units.force,
-        "equilibrium; DIN 7190-1",
-        Some(pair.axial_capacity * units.per_newton),
-    );
-    sheet.formula(
-        &torque_name,
-        "torque at slip",
-        torque(&axial_name, units),
-        units.torque,
-        "equilibrium; DIN 7190-1",
-        Some(pair.torque_capacity * units.per_newton_metre),
-    );
-    sheet.input(&moment_name, "torque", state.torque * units.per_newton_metre, units.torque, "joint file");
-    sheet.input(&force_name, "axial force", state.axial_force * units.per_newton, units.force, "joint file");
-    if pair.pressure <= 0.0 {
-        return;
+/// Where the mean over the section lies between the strain of the inner and that of the outer face, when the strain
+/// follows the logarithm of the radius: b²/(b² − a²) − 1/(2 ln(b/a)).
+fn mean_share(ring: &Ring) -> f64 {
+    if ring.inner_diameter == 0.0 {
+        return 0.0;
     }
-    let share = |load: &str, capacity: &str| (sym(load) / sym(capacity)).power(2);
-    sheet.formula(
-        &format!("S_{tag}"),
-        "safety against slip",
-        num("1") / (share(&moment_name, &torque_name) + share(&force_name, &axial_name)).root(),
-        "",
-        "resultant of both friction shares; Kollmann, Welle-Nabe-Verbindungen (1984)",
-        Some(safety),
-    );
+    let ratio = ring.outer_diameter / ring.inner_diameter;
+    ratio * ratio / (ratio * ratio - 1.0) - 0.5 / ratio.ln()
 }

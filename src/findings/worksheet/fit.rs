@@ -5,7 +5,7 @@ use super::super::expression::{Expression, greatest, num, sym};
 use super::Units;
 use super::sheet::Sheet;
 use crate::joint::SmoothingAt;
-use crate::tolerance::{FitLimits, Member};
+use crate::tolerance::FitLimits;
 
 pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let joint = &findings.joint;
@@ -44,13 +44,12 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
 }
 
 fn limits(sheet: &mut Sheet, limits: &FitLimits, units: &Units, source: &str) {
-    for (member, symbol, meaning, deviation) in [
-        (Member::Hole, "EI", "lower deviation of the hole", limits.hole.lower),
-        (Member::Hole, "ES", "upper deviation of the hole", limits.hole.upper),
-        (Member::Shaft, "ei", "lower deviation of the shaft", limits.shaft.lower),
-        (Member::Shaft, "es", "upper deviation of the shaft", limits.shaft.upper),
+    for (symbol, meaning, deviation) in [
+        ("EI", "lower deviation of the hole", limits.hole.lower),
+        ("ES", "upper deviation of the hole", limits.hole.upper),
+        ("ei", "lower deviation of the shaft", limits.shaft.lower),
+        ("es", "upper deviation of the shaft", limits.shaft.upper),
     ] {
-        let _ = member;
         sheet.input(symbol, meaning, deviation * units.small_per_metre, units.small, source);
     }
 }
@@ -63,10 +62,29 @@ fn smoothing(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let rule = joint.smoothing.rule.as_str();
     match joint.smoothing.factor {
         Some(factor) => {
-            sheet.input("Rz_s", "roughness of the shaft", shaft.roughness.value * units.small_per_metre, units.small, &shaft.roughness.source);
-            sheet.input("Rz_h", "roughness of the hub bore", hub.roughness.value * units.small_per_metre, units.small, &hub.roughness.source);
+            sheet.input(
+                "Rz_s",
+                "roughness of the shaft",
+                shaft.roughness.value * units.small_per_metre,
+                units.small,
+                &shaft.roughness.source,
+            );
+            sheet.input(
+                "Rz_h",
+                "roughness of the hub bore",
+                hub.roughness.value * units.small_per_metre,
+                units.small,
+                &hub.roughness.source,
+            );
             sheet.input("f", "share of the peaks that flattens", factor, "", rule);
-            sheet.formula("G", "loss by smoothing", sym("f") * (sym("Rz_s") + sym("Rz_h")), units.small, rule, Some(loss * units.small_per_metre));
+            sheet.formula(
+                "G",
+                "loss by smoothing",
+                sym("f") * (sym("Rz_s") + sym("Rz_h")),
+                units.small,
+                rule,
+                Some(loss * units.small_per_metre),
+            );
         }
         None => sheet.input("G", "loss by smoothing", loss * units.small_per_metre, units.small, rule),
     }
@@ -77,7 +95,8 @@ fn smoothing(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         ("W_m", "U_m", "mean", lost_at_loosest, &findings.extremes.mean),
         ("W_max", "U_max", "tightest", lost_at_tightest, &findings.extremes.tightest),
     ] {
-        let source = if lost { "effective interference, loss taken" } else { "effective interference, loss kept" };
+        let source =
+            if lost { "effective interference, loss taken" } else { "effective interference, loss kept" };
         sheet.formula(
             symbol,
             &format!("interference that grips, {name} pair"),

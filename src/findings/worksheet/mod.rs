@@ -7,6 +7,8 @@ mod assembly;
 mod duty;
 mod fit;
 mod sheet;
+mod slices;
+mod stack;
 mod strength;
 
 use super::{Findings, WorksheetSection};
@@ -24,10 +26,16 @@ pub(super) fn worksheet(findings: &Findings) -> Vec<WorksheetSection> {
 pub fn worked(findings: &Findings) -> (Vec<WorksheetSection>, Vec<String>) {
     let mut sheet = Sheet::new();
     let units = Units::of(findings.joint.display);
-    fit::write(&mut sheet, findings, &units);
-    strength::write(&mut sheet, findings, &units);
-    duty::write(&mut sheet, findings, &units);
-    assembly::write(&mut sheet, findings, &units);
+    if findings.joint.rings.len() > 2 {
+        stack::write(&mut sheet, findings, &units);
+    } else if !findings.joint.slices.is_empty() {
+        slices::write(&mut sheet, findings, &units);
+    } else {
+        fit::write(&mut sheet, findings, &units);
+        strength::write(&mut sheet, findings, &units);
+        duty::write(&mut sheet, findings, &units);
+        assembly::write(&mut sheet, findings, &units);
+    }
     sheet.finish()
 }
 
@@ -46,6 +54,8 @@ struct Units {
     /// Torque in force times length, divided by this, is in the printed torque unit.
     torque_divisor: &'static str,
     temperature: &'static str,
+    density: &'static str,
+    per_kilogram_per_cubic_metre: f64,
 }
 
 const PSI: f64 = 6894.757293168361;
@@ -68,6 +78,8 @@ impl Units {
                 per_newton_metre: 1.0,
                 torque_divisor: "1000",
                 temperature: "degC",
+                density: "t/mm3",
+                per_kilogram_per_cubic_metre: 1e-12,
             },
             UnitSystem::Inch => Self {
                 length: "in",
@@ -82,6 +94,8 @@ impl Units {
                 per_newton_metre: 1.0 / (POUND_FORCE * INCH * 12.0),
                 torque_divisor: "12",
                 temperature: "degF",
+                density: "lbf.s2/in4",
+                per_kilogram_per_cubic_metre: INCH.powi(4) / POUND_FORCE,
             },
         }
     }

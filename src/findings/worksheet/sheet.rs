@@ -56,10 +56,10 @@ impl Sheet {
                 return;
             }
         };
-        if let (Some(program), Ok(worked)) = (program, printed.parse::<f64>()) {
-            if (worked - program).abs() > AGREEMENT * program.abs().max(f64::MIN_POSITIVE) {
-                self.drifts.push(format!("{symbol}: worked by hand {worked}, by the program {program}"));
-            }
+        if let (Some(program), Ok(worked)) = (program, printed.parse::<f64>())
+            && (worked - program).abs() > AGREEMENT * program.abs().max(f64::MIN_POSITIVE)
+        {
+            self.drifts.push(format!("{symbol}: worked by hand {worked}, by the program {program}"));
         }
         self.push(symbol, meaning, Some(formula), printed, unit, source);
     }

@@ -1,10 +1,10 @@
 //! Stiffness, contact pressure, stresses, capacity and strength at the shop temperature.
 
 use super::super::expression::{Expression, greatest, num, sym};
-use super::super::{Findings, PairFindings, RingStress};
+use super::super::{Findings, PairFindings, RingStress, plastic_share_of_pressure};
 use super::Units;
 use super::sheet::Sheet;
-use crate::joint::{Joint, Ring};
+use crate::joint::{Allow, Ring};
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
 
@@ -13,16 +13,18 @@ const LAME: &str = "Lamé; Timoshenko & Goodier, Theory of Elasticity, § 28";
 pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let joint = &findings.joint;
     let (Some(shaft), Some(hub)) = (joint.rings.first(), joint.rings.last()) else { return };
-    stiffness(sheet, joint, shaft, hub, units);
+    stiffness(sheet, shaft, hub, units);
     shop_strain(sheet, findings, shaft, hub, units);
     pressures(sheet, findings, units);
     capacity(sheet, findings, units);
     sheet.section("Stress at the tightest pair, shop temperature");
-    hub_stress(sheet, findings, hub, units);
+    if plastic_shares(findings).is_none() {
+        hub_stress(sheet, findings, hub, units);
+    }
     shaft_stress(sheet, findings, shaft, units);
 }
 
-fn stiffness(sheet: &mut Sheet, joint: &Joint, shaft: &Ring, hub: &Ring, units: &Units) {
+fn stiffness(sheet: &mut Sheet, shaft: &Ring, hub: &Ring, units: &Units) {
     sheet.section("Stiffness of both parts");
     let length = |metres: f64| metres * units.per_metre;
     sheet.input("D", "outer diameter of the hub", length(hub.outer_diameter), units.length, "joint file");
@@ -36,9 +38,14 @@ fn stiffness(sheet: &mut Sheet, joint: &Joint, shaft: &Ring, hub: &Ring, units: 
             units.pressure,
             &material.youngs_modulus.source,
         );
-        sheet.input(&format!("nu_{index}"), &format!("Poisson's ratio of the {name}"), material.poisson.value, "", &material.poisson.source);
+        sheet.input(
+            &format!("nu_{index}"),
+            &format!("Poisson's ratio of the {name}"),
+            material.poisson.value,
+            "",
+            &material.poisson.source,
+        );
     }
-    let _ = joint;
     sheet.formula("C_h", "flexibility of the hub", ratio("D", "d") + sym("nu_h"), "", LAME, None);
     sheet.formula("C_s", "flexibility of the shaft", ratio("d", "b") - sym("nu_s"), "", LAME, None);
 }
@@ -52,7 +59,13 @@ fn ratio(outer: &str, inner: &str) -> Expression {
 /// Free strains at the shop temperature; written as inputs since they are read from curves.
 fn shop_strain(sheet: &mut Sheet, findings: &Findings, shaft: &Ring, hub: &Ring, units: &Units) {
     let joint = &findings.joint;
-    sheet.input("T_shop", "shop temperature", units.degrees(joint.assembly.shop_temperature), units.temperature, "joint file");
+    sheet.input(
+        "T_shop",
+        "shop temperature",
+        units.degrees(joint.assembly.shop_temperature),
+        units.temperature,
+        "joint file",
+    );
     for (ring, symbol) in [(shaft, "eps_s"), (hub, "eps_h")] {
         let strain = ring.material.expansion.strain(joint.assembly.shop_temperature).unwrap_or(0.0);
         sheet.input(
@@ -78,16 +91,72 @@ fn pressures(sheet: &mut Sheet, findings: &Findings, units: &Units) {
             pressure(interference, "eps_s", "eps_h"),
             units.pressure,
             LAME,
-            Some(pair.pressure * units.per_pascal),
+            Some(elastic_pressure(pair) * units.per_pascal),
+        );
+    }
+    plastic(sheet, findings, units);
+}
+
+/// The elastic pressure of a pair, also where the hub yields by design.
+fn elastic_pressure(pair: &PairFindings) -> f64 {
+    if pair.smoothing > 0.0 { pair.pressure_smoothed } else { pair.pressure_unsmoothed }
+}
+
+/// Share that the plastic hub keeps of the elastic pressure, for each pair of a hub that yields by design.
+pub(super) fn plastic_shares(findings: &Findings) -> Option<[f64; 3]> {
+    let Allow::Plastic { .. } = findings.joint.require.allow else { return None };
+    let plastic = findings.service.plastic.as_ref()?;
+    let shares = [&plastic.loosest, &plastic.mean, &plastic.tightest].map(plastic_share_of_pressure);
+    shares.iter().any(|share| *share < 1.0).then_some(shares)
+}
+
+/// The pressures of the elastic-plastic hub, and the shares of the elastic ones that they are.
+fn plastic(sheet: &mut Sheet, findings: &Findings, units: &Units) {
+    if plastic_shares(findings).is_none() {
+        return;
+    }
+    let Some(plastic) = &findings.service.plastic else { return };
+    sheet.section(format!("Elastic-plastic hub, {} rule, at rest", findings.joint.require.yield_rule.name()));
+    let source = "elastic-plastic disc: Kollmann, Welle-Nabe-Verbindungen (1984); von Mises: Nadai (1950)";
+    for (tag, name, state) in [
+        ("min", "loosest", &plastic.loosest),
+        ("m", "mean", &plastic.mean),
+        ("max", "tightest", &plastic.tightest),
+    ] {
+        let symbol = format!("P_{tag}");
+        sheet.input(
+            &symbol,
+            &format!("pressure of the hub that yields, {name} pair"),
+            state.pressure * units.per_pascal,
+            units.pressure,
+            source,
+        );
+        let share = sym(&symbol) / sym(&format!("p_{tag}"));
+        let meaning = format!("share of the elastic pressure, {name} pair");
+        sheet.formula(
+            &format!("k_{tag}"),
+            &meaning,
+            share,
+            "",
+            "quotient",
+            Some(plastic_share_of_pressure(state)),
         );
     }
 }
 
 /// max(0, (W/1000 + d (ε_s − ε_h)) / (d (C_h/E_h + C_s/E_s))).
 pub(super) fn pressure(interference: &str, shaft_strain: &str, hub_strain: &str) -> Expression {
-    let grip = sym(interference) / num("1000") + sym("d") * (sym(shaft_strain) - sym(hub_strain));
-    let flexibility = sym("d") * (sym("C_h") / sym("E_h") + sym("C_s") / sym("E_s"));
-    greatest([num("0"), grip / flexibility])
+    greatest([num("0"), grip(interference, shaft_strain, hub_strain) / flexibility()])
+}
+
+/// Interference with the free strains: W/1000 + d (ε_s − ε_h).
+pub(super) fn grip(interference: &str, shaft_strain: &str, hub_strain: &str) -> Expression {
+    sym(interference) / num("1000") + sym("d") * (sym(shaft_strain) - sym(hub_strain))
+}
+
+/// Interference for each unit of pressure: d (C_h/E_h + C_s/E_s).
+pub(super) fn flexibility() -> Expression {
+    sym("d") * (sym("C_h") / sym("E_h") + sym("C_s") / sym("E_s"))
 }
 
 fn capacity(sheet: &mut Sheet, findings: &Findings, units: &Units) {
@@ -96,13 +165,26 @@ fn capacity(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     sheet.input("L", "length of the hub", joint.length * units.per_metre, units.length, "joint file");
     sheet.input("r", "relief, carries nothing", joint.relief * units.per_metre, units.length, "joint file");
     let engaged = joint.engaged_length() * units.per_metre;
-    sheet.formula("l", "length that carries", sym("L") - sym("r"), units.length, "length less relief", Some(engaged));
-    sheet.input("mu_h", "friction against slip, low end", joint.friction.holding.value.low, "", &joint.friction.holding.source);
+    sheet.formula(
+        "l",
+        "length that carries",
+        sym("L") - sym("r"),
+        units.length,
+        "length less relief",
+        Some(engaged),
+    );
+    sheet.input(
+        "mu_h",
+        "friction against slip, low end",
+        joint.friction.holding.value.low,
+        "",
+        &joint.friction.holding.source,
+    );
     let pair = &findings.extremes.loosest;
     sheet.formula(
         "F_cap",
         "axial force at slip",
-        axial("p_min"),
+        axial(if plastic_shares(findings).is_some() { "P_min" } else { "p_min" }),
         units.force,
         "equilibrium; DIN 7190-1",
         Some(pair.axial_capacity * units.per_newton),
@@ -131,8 +213,22 @@ fn hub_stress(sheet: &mut Sheet, findings: &Findings, hub: &Ring, units: &Units)
     let pair: &PairFindings = &findings.extremes.tightest;
     let Some(stress) = pair.rings.last() else { return };
     let pa = |value: f64| Some(value * units.per_pascal);
-    sheet.formula("sigma_rh", "radial stress at the hub bore", -sym("p_max"), units.pressure, LAME, pa(stress.bore.radial));
-    sheet.formula("sigma_th", "hoop stress at the hub bore", sym("p_max") * ratio("D", "d"), units.pressure, LAME, pa(stress.bore.hoop));
+    sheet.formula(
+        "sigma_rh",
+        "radial stress at the hub bore",
+        -sym("p_max"),
+        units.pressure,
+        LAME,
+        pa(stress.bore.radial),
+    );
+    sheet.formula(
+        "sigma_th",
+        "hoop stress at the hub bore",
+        sym("p_max") * ratio("D", "d"),
+        units.pressure,
+        LAME,
+        pa(stress.bore.hoop),
+    );
     let equivalent = match (hub.material.kind, findings.joint.criterion) {
         (Kind::Brittle, _) => greatest([num("0"), sym("sigma_th")]),
         (_, DuctileCriterion::VonMises) => von_mises("sigma_rh", "sigma_th"),
@@ -145,11 +241,12 @@ fn shaft_stress(sheet: &mut Sheet, findings: &Findings, shaft: &Ring, units: &Un
     let Some(stress) = findings.extremes.tightest.rings.first() else { return };
     let pa = |value: f64| Some(value * units.per_pascal);
     let solid = shaft.inner_diameter == 0.0;
+    let pressure = || sym(if plastic_shares(findings).is_some() { "P_max" } else { "p_max" });
     let (meaning, hoop, program) = if solid {
-        ("hoop stress in the solid shaft, everywhere", -sym("p_max"), stress.rim.hoop)
+        ("hoop stress in the solid shaft, everywhere", -pressure(), stress.rim.hoop)
     } else {
         let wall = num("2") * sym("d").power(2) / (sym("d").power(2) - sym("b").power(2));
-        ("hoop stress at the shaft bore", -(sym("p_max") * wall), stress.bore.hoop)
+        ("hoop stress at the shaft bore", -(pressure() * wall), stress.bore.hoop)
     };
     sheet.formula("sigma_ts", meaning, hoop, units.pressure, LAME, pa(program));
     let equivalent = match shaft.material.kind {

@@ -1,12 +1,13 @@
 //! The service states.
 
-use super::assembly::within_curves;
+mod temperatures;
+
 use crate::joint::diagnose::Fault;
 use crate::joint::draft::Draft;
 use crate::joint::file::{JointFile, StateKeys};
+use crate::joint::leaf::FlagWord;
 use crate::joint::written::{At, Leaf, Written};
 use crate::joint::{DutyState, Ring};
-use crate::quantity::{Kind, Temperature, written};
 
 /// The service states; one at the shop temperature without load when the file names none.
 pub(super) fn states(
@@ -17,9 +18,8 @@ pub(super) fn states(
 ) -> Option<Vec<DutyState>> {
     let Some(list) = &file.duty else {
         draft.default("duty", "[{state: shop}]", "one state at the shop temperature, at rest, without load");
-        let temperatures = vec![shop?; 2];
-        let state = DutyState { name: "shop".into(), torque: 0.0, axial_force: 0.0, temperatures };
-        return Some(vec![state]);
+        let temperatures = vec![shop?; rings.map_or(2, <[Ring]>::len)];
+        return Some(vec![DutyState::unloaded("shop", temperatures)]);
     };
     if list.value.is_empty() && !draft.faults.touch(list.node) {
         let fault = Fault::value(list.node, "`duty` lists no state");
@@ -28,35 +28,11 @@ pub(super) fn states(
     let mut names: Vec<String> = Vec::new();
     let mut states = Vec::new();
     for (number, item) in list.value.iter().enumerate() {
-        refuse_what_is_not_calculated(draft, &item.value);
         let name = name(draft, &item.value, number, &names);
         states.push(state(draft, item, &name, rings, shop));
         names.push(name);
     }
     states.into_iter().collect()
-}
-
-fn refuse_what_is_not_calculated(draft: &Draft<'_>, keys: &StateKeys) {
-    draft.not_yet(
-        keys.speed.as_ref(),
-        "the loss of contact pressure in rotation is not calculated",
-        "take the key out for a slow joint; a fast one is not safe to judge without it",
-    );
-    let bending = "bending of the joint is not calculated";
-    draft.not_yet(
-        keys.bending_moment.as_ref(),
-        bending,
-        "judge it by hand, and give torque and axial force here",
-    );
-    draft.not_yet(
-        keys.rotating_bending.as_ref(),
-        bending,
-        "judge it by hand, and give torque and axial force here",
-    );
-    let gradient = "a part is taken at one temperature throughout";
-    let instead = "give `shaft_temperature` and `hub_temperature`, each the mean over the part";
-    draft.not_yet(keys.inner_temperature.as_ref(), gradient, instead);
-    draft.not_yet(keys.outer_temperature.as_ref(), gradient, instead);
 }
 
 fn name(draft: &Draft<'_>, keys: &StateKeys, number: usize, before: &[String]) -> String {
@@ -79,13 +55,49 @@ fn state(
     let keys = &item.value;
     let torque = load(draft, name, "torque", "0 N.m", keys.torque.as_ref());
     let axial_force = load(draft, name, "axial_force", "0 N", keys.axial_force.as_ref());
-    let temperatures = temperatures(draft, keys, name, rings, shop);
+    let heat = temperatures::of_state(draft, item, name, rings, shop);
+    let inner_pressure = size(draft, keys.inner_pressure.as_ref());
+    if let (Some(given), Some(core)) = (&keys.inner_pressure, rings.and_then(<[Ring]>::first))
+        && core.inner_diameter == 0.0
+    {
+        draft.refuse(given, &format!("cannot act: the {} is solid", core.name));
+    }
+    let outer_pressure = size(draft, keys.outer_pressure.as_ref());
+    let speed = size(draft, keys.speed.as_ref());
+    let bending_moment = size(draft, keys.bending_moment.as_ref());
+    let radial_force = size(draft, keys.radial_force.as_ref());
+    let rotating_bending = flag(draft, keys.rotating_bending.as_ref());
+    let reversing = flag(draft, keys.reversing.as_ref());
+    let heat = heat?;
     Some(DutyState {
-        name: name.to_owned(),
         torque: torque?,
         axial_force: axial_force?,
-        temperatures: temperatures?,
+        temperature_rises: heat.rises,
+        speed: speed?,
+        inner_pressure: inner_pressure?,
+        outer_pressure: outer_pressure?,
+        bending_moment: bending_moment?,
+        radial_force: radial_force?,
+        rotating_bending: rotating_bending?,
+        reversing: reversing?,
+        ..DutyState::unloaded(name, heat.inner)
     })
+}
+
+/// A size that is zero when the file is silent, and never negative.
+fn size<L: Leaf<Value = f64>>(draft: &Draft<'_>, given: Option<&Written<L>>) -> Option<f64> {
+    match given {
+        None => Some(0.0),
+        Some(given) => draft.not_negative(given),
+    }
+}
+
+/// No when the file is silent.
+fn flag(draft: &Draft<'_>, given: Option<&Written<FlagWord>>) -> Option<bool> {
+    match given {
+        None => Some(false),
+        Some(given) => draft.value(given),
+    }
 }
 
 fn load<L: Leaf<Value = f64>>(
@@ -105,45 +117,4 @@ fn load<L: Leaf<Value = f64>>(
     }
     draft.refuse(given, "is negative: give its size, the joint holds alike in both directions");
     None
-}
-
-/// Temperature of the shaft and of the hub, K.
-fn temperatures(
-    draft: &mut Draft<'_>,
-    keys: &StateKeys,
-    state: &str,
-    rings: Option<&[Ring]>,
-    shop: Option<f64>,
-) -> Option<Vec<f64>> {
-    let parts = [("shaft_temperature", &keys.shaft_temperature), ("hub_temperature", &keys.hub_temperature)];
-    if let Some(all) = &keys.temperature {
-        for (key, given) in parts {
-            if let Some(given) = given {
-                let fault = Fault::key(given.node, format!("`{key}` and `temperature` are both given"));
-                draft
-                    .faults
-                    .add(fault.help("`temperature` is for all parts: keep it, or give each part its own"));
-            }
-        }
-        let temperature = draft.value(all)?;
-        return checked(draft, all, temperature, rings.unwrap_or_default()).map(|t| vec![t; 2]);
-    }
-    let mut found = Vec::new();
-    for (number, (key, given)) in parts.into_iter().enumerate() {
-        found.push(match given {
-            Some(given) => {
-                let ring = rings.and_then(|rings| rings.get(number..=number)).unwrap_or_default();
-                draft.value(given).and_then(|temperature| checked(draft, given, temperature, ring))
-            }
-            None => shop.inspect(|shop| {
-                let value = written(Kind::Temperature, *shop);
-                draft.default(format!("duty.{state}.{key}"), value, "the shop temperature");
-            }),
-        });
-    }
-    found.into_iter().collect()
-}
-
-fn checked(draft: &Draft<'_>, given: &Written<Temperature>, temperature: f64, rings: &[Ring]) -> Option<f64> {
-    within_curves(draft, given, Some(temperature), rings).then_some(temperature)
 }

@@ -7,14 +7,24 @@ use crate::joint::file::{FitKeys, JointFile, LimitKeys, MeasuredKeys};
 use crate::joint::leaf::{FitText, LimitsText};
 use crate::joint::tree::NodeId;
 use crate::joint::written::{At, Refused, TextOr, Written};
-use crate::quantity::{self, Kind, Length, UnitSystem};
+use crate::quantity::{self, Kind, Length, QuantityError, UnitSystem};
 use crate::tolerance::{FitCallout, Limits, Member, MemberCallout, ToleranceError};
 
 const EXAMPLE: &str = "H7/s6";
 
-/// The fit with its limits.
+/// The fit of two parts with its limits.
 pub(super) fn fit(draft: &mut Draft<'_>, file: &JointFile, diameter: Option<f64>) -> Option<Fit> {
     let given = draft.required(draft.tree.root(), "fit", EXAMPLE, file.fit.as_ref())?;
+    one(draft, given, diameter, units_of(file.diameter.as_ref()))
+}
+
+/// A fit at a nominal diameter that was written in these units.
+pub(super) fn one(
+    draft: &mut Draft<'_>,
+    given: &At<TextOr<FitText, FitKeys>>,
+    diameter: Option<f64>,
+    units: UnitSystem,
+) -> Option<Fit> {
     let (callout, written) = match &given.value {
         TextOr::Text(text) => {
             let written: Written<FitText> = At { node: given.node, value: text.clone() };
@@ -28,7 +38,7 @@ pub(super) fn fit(draft: &mut Draft<'_>, file: &JointFile, diameter: Option<f64>
         }
     };
     let nominal = diameter?;
-    let resolved = match callout.resolve_given_in(nominal, units_of(file.diameter.as_ref())) {
+    let resolved = match callout.resolve_given_in(nominal, units) {
         Ok(resolved) => resolved,
         Err(error) => return refused(draft, culprit(given, &error), &error),
     };
@@ -74,7 +84,7 @@ fn culprit(given: &At<TextOr<FitText, FitKeys>>, error: &ToleranceError) -> Node
 }
 
 /// Unit system in which a length was written.
-fn units_of(given: Option<&Written<Length>>) -> UnitSystem {
+pub(super) fn units_of(given: Option<&Written<Length>>) -> UnitSystem {
     let inch = given.is_some_and(|given| {
         let text = given.value.text.trim_end();
         ["in", "inch", "\"", "thou", "mil", "ft"].iter().any(|unit| text.ends_with(unit))
@@ -171,7 +181,12 @@ fn member(
 
 fn of_member_text(text: &str, member: Member) -> Result<MemberCallout, Refused> {
     if text.starts_with(|c: char| c.is_ascii_digit() || matches!(c, '±' | '+' | '-' | '.')) {
-        let (lower, upper) = quantity::parse_plus_minus(Kind::Length, text)?;
+        let (lower, upper) = quantity::parse_plus_minus(Kind::Length, text).map_err(|error| {
+            let both = "write ±10 um, or both deviations: {lower: 53 um, upper: 72 um}".to_owned();
+            let help =
+                if matches!(error, QuantityError::NotPlusMinus { .. }) { Some(both) } else { error.help() };
+            Refused { message: error.to_string(), help }
+        })?;
         return Ok(MemberCallout::Deviations(Limits { lower, upper }));
     }
     MemberCallout::parse(text, member)

@@ -97,9 +97,13 @@ fn of_library(
     method: Method,
     lubrication: Option<Lubrication>,
 ) -> Option<FrictionSet> {
-    let [inner, outer] = rings else { return None };
-    let (inner, outer) = (&inner.material, &outer.material);
-    let set = from_library(outer, inner, friction_method(method), lubrication);
+    // Of several pairs the one that holds least counts.
+    let pairs = rings.windows(2).map(|pair| {
+        let (inner, outer) = (&pair[0].material, &pair[1].material);
+        (from_library(outer, inner, friction_method(method), lubrication), inner, outer)
+    });
+    let least = |set: &FrictionSet| set.holding.value.low;
+    let (set, inner, outer) = pairs.min_by(|a, b| least(&a.0).total_cmp(&least(&b.0)))?;
     if lubrication.is_none() {
         let (word, source) = match set.lubrication {
             Lubrication::Oiled => {

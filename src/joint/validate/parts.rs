@@ -16,22 +16,22 @@ use crate::material::roughness::{self, Member};
 use crate::material::{Material, Origin, Sourced};
 use crate::quantity::{Kind, Length, written};
 
-const BAR_SECTION: &str =
+pub(super) const BAR_SECTION: &str =
     "the diameter of a bar (common practice for ruling sections of heat-treated steel, no source)";
-const WALL_SECTION: &str =
+pub(super) const WALL_SECTION: &str =
     "the thickness of the wall (common practice for ruling sections of heat-treated steel, no source)";
 
 /// A part as far as both kinds of part are alike.
-struct Part<'f> {
-    key: &'static str,
-    node: NodeId,
-    name: Option<String>,
-    material: Option<Arc<Material>>,
-    material_node: Option<NodeId>,
-    section: Option<&'f Written<Length>>,
-    inner: Option<f64>,
-    outer: Option<f64>,
-    roughness: Option<Sourced<f64>>,
+pub(super) struct Part<'f> {
+    pub(super) key: String,
+    pub(super) node: NodeId,
+    pub(super) name: Option<String>,
+    pub(super) material: Option<Arc<Material>>,
+    pub(super) material_node: Option<NodeId>,
+    pub(super) section: Option<&'f Written<Length>>,
+    pub(super) inner: Option<f64>,
+    pub(super) outer: Option<f64>,
+    pub(super) roughness: Option<Sourced<f64>>,
 }
 
 /// Shaft and hub.
@@ -43,15 +43,14 @@ pub(super) fn rings(draft: &mut Draft<'_>, file: &JointFile, diameter: Option<f6
     let hub = draft.required(root, "hub", example, file.hub.as_ref());
     let hub = hub.and_then(|at| {
         let keys = &at.value;
-        draft.not_yet(
-            keys.steps.as_ref(),
-            "a hub of one outer diameter is calculated",
-            "give `outer_diameter`",
-        );
-        let outer = draft.required(at.node, "outer_diameter", "110 mm", keys.outer_diameter.as_ref());
-        let outer = outer.and_then(|given| larger_than_joint(draft, given, file, diameter));
+        let outer = match (&keys.outer_diameter, &keys.steps) {
+            (None, Some(steps)) => super::steps::largest_outer_diameter(draft, steps),
+            (given, _) => draft
+                .required(at.node, "outer_diameter", "110 mm", given.as_ref())
+                .and_then(|given| larger_than_joint(draft, given, file, diameter)),
+        };
         let part = Part {
-            key: "hub",
+            key: "hub".to_owned(),
             node: at.node,
             name: draft.optional(keys.name.as_ref()),
             material: material(draft, at.node, "EN-GJL-250", keys.material.as_ref()),
@@ -73,10 +72,9 @@ fn shaft_ring(
     diameter: Option<f64>,
 ) -> Option<Ring> {
     let keys = &at.value;
-    draft.not_yet(keys.steps.as_ref(), "a shaft of one bore is calculated", "give `bore`");
     let material_found = material(draft, at.node, "C45+N", keys.material.as_ref());
     let part = Part {
-        key: "shaft",
+        key: "shaft".to_owned(),
         node: at.node,
         name: draft.optional(keys.name.as_ref()),
         material: material_found,
@@ -89,7 +87,7 @@ fn shaft_ring(
     ring(draft, part, |_, outer| outer, BAR_SECTION)
 }
 
-fn ring(
+pub(super) fn ring(
     draft: &mut Draft<'_>,
     part: Part<'_>,
     usual_section: impl Fn(f64, f64) -> f64,
@@ -111,7 +109,7 @@ fn ring(
         return None;
     };
     Some(Ring {
-        name: part.name.unwrap_or_else(|| part.key.to_owned()),
+        name: part.name.unwrap_or(part.key),
         material,
         section,
         strength,
@@ -177,7 +175,7 @@ fn called_diameter(draft: &Draft<'_>, file: &JointFile) -> String {
     file.diameter.as_ref().map_or_else(|| "diameter".to_owned(), |given| draft.called(given))
 }
 
-fn material(
+pub(super) fn material(
     draft: &Draft<'_>,
     part: NodeId,
     example: &str,
@@ -204,14 +202,18 @@ fn in_place(draft: &Draft<'_>, node: NodeId) -> Option<Arc<Material>> {
     let record = match MaterialRecord::deserialize(draft.reader(node)) {
         Ok(record) => record,
         Err(refusal) => {
-            draft.faults.add(refusal.fault(node));
+            if !draft.faults.touch_within(draft.tree, node) {
+                draft.faults.add(refusal.fault(node));
+            }
             return None;
         }
     };
     if draft.faults.touch_within(draft.tree, node) {
         return None;
     }
-    match record.into_material("written in place", Origin::JointFile) {
+    let part = draft.tree.parent(node).and_then(|(part, _)| draft.tree.key(part)).unwrap_or("part");
+    let id = record.name.clone().unwrap_or_else(|| format!("material of the {part}"));
+    match record.into_material(&id, Origin::JointFile) {
         Ok(material) => Some(Arc::new(material)),
         Err(error) => {
             let (at, reached) = follow(draft, node, &error.path);
@@ -238,7 +240,7 @@ fn follow(draft: &Draft<'_>, node: NodeId, path: &[Step]) -> (NodeId, bool) {
     (at, true)
 }
 
-fn roughness(
+pub(super) fn roughness(
     draft: &mut Draft<'_>,
     part: &str,
     given: Option<&Written<Roughness>>,

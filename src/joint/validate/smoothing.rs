@@ -43,9 +43,9 @@ pub(super) fn smoothing(
         Some(At { value: TextOr::Keys(keys), .. }) => of_keys(draft, keys, method),
     };
     let Share { factor, rule } = share?;
-    let [shaft, hub] = rings? else { return None };
-    let loss = factor * (shaft.roughness.value + hub.roughness.value);
-    Some(Smoothing { loss: vec![loss], factor: Some(factor), rule, at: at? })
+    let neighbours = rings?.windows(2);
+    let loss = neighbours.map(|pair| factor * (pair[0].roughness.value + pair[1].roughness.value));
+    Some(Smoothing { loss: loss.collect(), factor: Some(factor), rule, at: at? })
 }
 
 /// How a method joins, as far as friction and smoothing are concerned.

@@ -4,9 +4,9 @@
 //! rounding. The clearance wanted is turned into the strain that a part must reach, and that into a
 //! temperature on its expansion curve.
 
-use super::KernelError;
+use super::{KernelError, strain};
 use crate::findings::bath_temperature;
-use crate::joint::{Bath, Joint, Method, Ring};
+use crate::joint::{Bath, Joint, Method};
 use crate::material::Expansion;
 use crate::numerics::root::bracketed;
 
@@ -137,12 +137,6 @@ impl<'a> PlainJoining<'a> {
         let open = self.diameter * (hub_strain - shaft_strain) - interference * (1.0 + shaft_strain);
         open >= self.clearance
     }
-}
-
-fn strain(ring: &Ring, temperature: f64) -> Result<f64, KernelError> {
-    let expansion = &ring.material.expansion;
-    let outside = |cause| KernelError::Expansion { material: ring.material.name.clone(), cause };
-    expansion.strain(temperature).map_err(outside)
 }
 
 /// First temperature along the pieces of a curve at which `surplus` of the strain rises to zero.

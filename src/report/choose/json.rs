@@ -3,9 +3,7 @@
 use serde::Serialize;
 
 use super::words;
-use crate::population::choose::{
-    Choice, ChosenFit, Edge, Opening, Parameter, Requirement, Standard, Subject,
-};
+use crate::population::choose::{Choice, ChosenFit, Opening, Parameter, Requirement, Standard, Subject};
 use crate::tolerance::Limits;
 
 #[derive(Serialize)]
@@ -42,8 +40,9 @@ struct RequirementLine {
     required: Option<f64>,
     unit: &'static str,
     pair: &'static str,
-    met_by: &'static str,
-    edge_um: Option<f64>,
+    least_um: Option<f64>,
+    greatest_um: Option<f64>,
+    never_met: bool,
 }
 
 #[derive(Serialize)]
@@ -166,7 +165,9 @@ fn requirement(choice: &Choice, wanted: &Requirement) -> RequirementLine {
     RequirementLine {
         subject: words::subject(choice, wanted.subject),
         state: match wanted.subject {
-            Subject::Slip(number) => choice.joint.duty.get(number).map(|state| state.name.clone()),
+            Subject::Slip(number) | Subject::GapingEdge(number) | Subject::LoadedEdge(number) => {
+                choice.joint.duty.get(number).map(|state| state.name.clone())
+            }
             _ => None,
         },
         required: wanted.required.map(|required| if kelvin { required - 273.15 } else { required }),
@@ -175,17 +176,10 @@ fn requirement(choice: &Choice, wanted: &Requirement) -> RequirementLine {
             _ if kelvin => "degC",
             _ => "",
         },
-        pair: if wanted.subject.at_loosest() { "loosest" } else { "tightest" },
-        met_by: match (wanted.edge, wanted.subject.at_loosest()) {
-            (Edge::None, _) => "any",
-            (Edge::NeverMet, _) => "none",
-            (Edge::At(_), true) => "edge and more",
-            (Edge::At(_), false) => "edge and less",
-        },
-        edge_um: match wanted.edge {
-            Edge::At(edge) => microns(edge),
-            _ => None,
-        },
+        pair: words::pair(wanted),
+        least_um: wanted.least.and_then(microns),
+        greatest_um: wanted.greatest.and_then(microns),
+        never_met: wanted.never_met,
     }
 }
 

@@ -82,7 +82,7 @@ fn allowed(choice: &Choice) -> Markup {
                     @for requirement in &choice.requirements {
                         tr {
                             td { (words::edge(choice, requirement)) }
-                            td { @if requirement.subject.at_loosest() { "loosest" } @else { "tightest" } }
+                            td { (words::pair(requirement)) }
                             td { (words::requirement(choice, requirement)) }
                         }
                     }

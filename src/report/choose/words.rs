@@ -3,7 +3,7 @@
 use crate::findings::{bath_name, failure};
 use crate::joint::{Method, Ring};
 use crate::population::choose::{
-    Basis, Change, Choice, ChosenFit, Edge, Opening, Parameter, Requirement, Subject, WORKSHOP,
+    Basis, Change, Choice, ChosenFit, Opening, Parameter, Requirement, Subject, WORKSHOP,
 };
 use crate::quantity::{Measure, UnitSystem, display_unit, show};
 use crate::report::terminal::safety;
@@ -30,9 +30,12 @@ pub(super) fn subject(choice: &Choice, subject: Subject) -> String {
     };
     match subject {
         Subject::Slip(number) => {
-            let state = joint.duty.get(number).map_or("", |state| state.name.as_str());
-            format!("safety against slip, {state}")
+            format!("safety against slip, {}", state_name(choice, number))
         }
+        Subject::GapingEdge(number) => {
+            format!("safety against a gaping edge, {}", state_name(choice, number))
+        }
+        Subject::LoadedEdge(number) => format!("safety of the loaded edge, {}", state_name(choice, number)),
         Subject::ShaftStrength => strength(joint.rings.first()),
         Subject::HubStrength => strength(joint.rings.get(1)),
         Subject::PressForce => "peak press force".to_owned(),
@@ -44,31 +47,40 @@ pub(super) fn subject(choice: &Choice, subject: Subject) -> String {
     }
 }
 
+fn state_name(choice: &Choice, number: usize) -> &str {
+    choice.joint.duty.get(number).map_or("", |state| state.name.as_str())
+}
+
+/// Whether what is judged is a safety, not a force or a temperature.
+pub(super) fn is_safety(subject: Subject) -> bool {
+    !matches!(subject, Subject::PressForce | Subject::HubTemperature | Subject::ShaftTemperature)
+}
+
 /// A number of a requirement with its unit.
 pub(super) fn value(subject: Subject, number: f64, system: UnitSystem) -> String {
     match subject {
-        Subject::Slip(_) | Subject::ShaftStrength | Subject::HubStrength => safety(number),
         Subject::PressForce => show(Measure::Force, number, system).to_string(),
         Subject::HubTemperature | Subject::ShaftTemperature => {
             show(Measure::Temperature, number, system).to_string()
         }
+        _ => safety(number),
     }
 }
 
 /// The requirement with the number it is held against.
 pub(super) fn requirement(choice: &Choice, requirement: &Requirement) -> String {
     let joint = &choice.joint;
+    let in_state = |name: &str, number: usize| (name.to_owned(), format!(", {}", state_name(choice, number)));
     let (name, state) = match requirement.subject {
-        Subject::Slip(number) => {
-            let state = joint.duty.get(number).map_or("", |state| state.name.as_str());
-            ("safety against slip".to_owned(), format!(", {state}"))
-        }
+        Subject::Slip(number) => in_state("safety against slip", number),
+        Subject::GapingEdge(number) => in_state("safety against a gaping edge", number),
+        Subject::LoadedEdge(number) => in_state("safety of the loaded edge", number),
         other => (subject(choice, other), String::new()),
     };
     let bound = match requirement.subject {
-        Subject::Slip(_) | Subject::ShaftStrength | Subject::HubStrength => "at least",
         Subject::PressForce | Subject::HubTemperature => "at most",
         Subject::ShaftTemperature => "the bath has",
+        _ => "at least",
     };
     match requirement.required {
         Some(required) => {
@@ -116,14 +128,28 @@ pub(super) fn window(choice: &Choice) -> String {
     }
 }
 
-/// Where a requirement has its edge.
+/// The interferences that meet a requirement, without the unit.
 pub(super) fn edge(choice: &Choice, requirement: &Requirement) -> String {
     let system = choice.joint.display;
-    match (requirement.edge, requirement.subject.at_loosest()) {
-        (Edge::None, _) => "any".to_owned(),
-        (Edge::NeverMet, _) => "none".to_owned(),
-        (Edge::At(edge), true) => format!("{} or more", rounded_up(edge, system)),
-        (Edge::At(edge), false) => format!("{} or less", rounded_down(edge, system)),
+    let (least, greatest) = (
+        requirement.least.map(|least| rounded_up(least, system)),
+        requirement.greatest.map(|greatest| rounded_down(greatest, system)),
+    );
+    match (least, greatest) {
+        _ if requirement.never_met => "none".to_owned(),
+        (None, None) => "any".to_owned(),
+        (Some(least), None) => format!("{least} or more"),
+        (None, Some(greatest)) => format!("{greatest} or less"),
+        (Some(least), Some(greatest)) => format!("{least} to {greatest}"),
+    }
+}
+
+/// The pair that a requirement bounds.
+pub(super) fn pair(requirement: &Requirement) -> &'static str {
+    match (requirement.subject, requirement.least) {
+        (Subject::Slip(_) | Subject::GapingEdge(_), _) => "loosest",
+        (_, Some(_)) => "both",
+        (_, None) => "tightest",
     }
 }
 
@@ -176,9 +202,7 @@ pub(super) fn joining_heading(choice: &Choice) -> Option<String> {
 /// The requirement on joining with its number.
 fn joining(choice: &Choice) -> Option<(usize, Subject)> {
     let subjects = choice.requirements.iter().map(|requirement| requirement.subject).enumerate();
-    let mut joining = subjects.filter(|(_, subject)| {
-        matches!(subject, Subject::PressForce | Subject::HubTemperature | Subject::ShaftTemperature)
-    });
+    let mut joining = subjects.filter(|(_, subject)| !is_safety(*subject));
     joining.next()
 }
 
@@ -241,7 +265,7 @@ pub(super) fn blocking(choice: &Choice) -> Vec<String> {
     let mut said: Vec<String> = choice
         .requirements
         .iter()
-        .filter(|wanted| wanted.edge == Edge::NeverMet)
+        .filter(|wanted| wanted.never_met)
         .map(|wanted| format!("No interference gives {}.", requirement(choice, wanted)))
         .collect();
     let (Some(below), Some(greatest)) = (below, choice.window.greatest) else { return said };

@@ -14,6 +14,10 @@ const ROW: f64 = 5.6;
 /// How far a leader leans to the right for each mm that it rises.
 const LEAN: f64 = 0.18;
 
+/// Level part of a leader before its lettering, and room for the surface sign, mm.
+const SHOULDER: f64 = 2.6;
+const SIGN: f64 = 9.0;
+
 /// One row of lettering with what it points at.
 #[derive(Debug, Clone)]
 pub(super) struct Label {
@@ -37,14 +41,14 @@ pub(super) fn rows(joint: &Joint, units: Units, factor: f64) -> Vec<Label> {
             surface: Some(format!("Rz {}", units.text(Measure::Roughness, ring.roughness.value))),
         })
         .collect();
-    let tightest: Vec<String> = joint
-        .fits
-        .iter()
-        .map(|fit| units.text(Measure::Deviation, fit.limits.interference().tightest))
-        .collect();
+    let tightest: Vec<f64> = joint.fits.iter().map(|fit| fit.limits.interference().tightest).collect();
+    let grips = tightest.iter().any(|value| *value >= 0.0);
+    let sign = if grips { 1.0 } else { -1.0 };
+    let tightest: Vec<String> =
+        tightest.iter().map(|value| units.text(Measure::Deviation, sign * value)).collect();
     rows.push(Label {
         ring: None,
-        name: "interference".to_owned(),
+        name: if grips { "interference" } else { "clearance" }.to_owned(),
         text: format!("{}, drawn × {}", tightest.join(" and "), typeset::number(&format!("{factor}"))),
         surface: None,
     });
@@ -66,13 +70,39 @@ pub(super) fn draw(
     width: f64,
 ) {
     for (row, label) in rows.iter().enumerate() {
-        let baseline = ROW * (row as f64 + 1.0) - 1.4;
+        let baseline = baseline(row);
         let target = target(label, row, rows.len(), layout, place, bands);
         let bend = (target.0 + LEAN * (target.1 - baseline), baseline - 0.35 * TYPE);
-        let start = bend.0 + 2.6;
+        let start = bend.0 + SHOULDER;
         sketch.path(&chain(&[target, bend, (start - 0.6, bend.1)]), NARROW);
         sketch.dot(target, 0.5, INK, Pen::solid("#ffffff", 0.2));
         lettering(sketch, label, (start, baseline), width - start - 1.0);
+    }
+}
+
+/// How far to the right the rows reach when none is cut, mm.
+pub(super) fn reach(rows: &[Label], layout: &Layout, place: Place, bands: &[Band]) -> f64 {
+    let end = |(row, label): (usize, &Label)| {
+        let target = target(label, row, rows.len(), layout, place, bands);
+        target.0 + LEAN * (target.1 - baseline(row)) + SHOULDER + label.width() + 1.5
+    };
+    rows.iter().enumerate().map(end).fold(0.0, f64::max)
+}
+
+fn baseline(row: usize) -> f64 {
+    ROW * (row as f64 + 1.0) - 1.4
+}
+
+impl Label {
+    fn surface(&self) -> Option<Lettering> {
+        self.surface.as_ref().map(|text| Lettering::new(text, TYPE))
+    }
+
+    /// Width of the whole row when nothing is cut, mm.
+    fn width(&self) -> f64 {
+        let surface = self.surface().map_or(0.0, |text| text.width() + SIGN);
+        let name = Lettering::new(&self.name, TYPE).bold().width();
+        name + 1.6 + Lettering::new(&self.text, TYPE).width() + surface
     }
 }
 
@@ -98,8 +128,8 @@ fn along(row: usize, rows: usize, place: Place) -> f64 {
 }
 
 fn lettering(sketch: &mut Sketch, label: &Label, at: Point, room: f64) {
-    let surface = label.surface.as_ref().map(|text| Lettering::new(text, TYPE));
-    let taken = surface.as_ref().map_or(0.0, |text| text.width() + 9.0);
+    let surface = label.surface();
+    let taken = surface.as_ref().map_or(0.0, |text| text.width() + SIGN);
     let name = Lettering::new(fitted(&label.name, TYPE, 0.4 * room), TYPE).bold();
     let after = at.0 + name.width() + 1.6;
     let text = Lettering::new(fitted(&label.text, TYPE, room - taken - name.width() - 1.6), TYPE);

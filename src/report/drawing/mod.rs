@@ -53,18 +53,22 @@ pub fn section(findings: &Findings) -> SectionDrawing {
     let (factor, bands) = bands(&interference, layout.scale);
     let rows = labels::rows(joint, units, factor);
     let spare = WIDTH - left - right - 2.0 * STUB - layout.axial.to;
-    let hub_left = left + STUB + 0.42 * spare;
-    let rim = layout.radial.last().map_or(0.0, |wall| wall.to);
-    let place = Place {
+    let centre = labels::height(rows.len()) + 3.0 + layout.radial.last().map_or(0.0, |wall| wall.to);
+    let place_at = |hub_left: f64| Place {
         hub_left,
         hub_right: hub_left + layout.axial.to,
-        centre: labels::height(rows.len()) + 3.0 + rim,
+        centre,
         relief: (joint.relief * 1e3 * layout.scale).min(0.4 * layout.axial.to),
     };
-
+    // As near to the middle of the sheet as the lettering on its right allows.
+    let place = [0.42, 0.3, 0.2, 0.1, 0.0]
+        .map(|share| place_at(left + STUB + share * spare))
+        .into_iter()
+        .find(|place| labels::reach(&rows, &layout, *place, &bands) <= WIDTH)
+        .unwrap_or_else(|| place_at(left + STUB));
     let mut sketch = Sketch::default();
     section::draw(&mut sketch, &layout, place, &bands);
-    let bottom = place.centre + rim;
+    let bottom = place.centre + layout.radial.last().map_or(0.0, |wall| wall.to);
     let below = dimensions(&mut sketch, joint, units, &layout, place);
     labels::draw(&mut sketch, &rows, &layout, place, &bands, WIDTH);
     let height = bottom + below + 9.0;
@@ -149,10 +153,13 @@ fn caption(layout: &scale::Layout, factor: f64, interference: &[f64]) -> String 
         text.push_str("; lengths between break lines are left out");
     }
     if interference.iter().any(|value| *value != 0.0) {
-        text.push_str(&format!(
-            "; the interference of the tightest pair, shown in colour, is drawn {} times too large",
-            super::typeset::number(&format!("{factor}"))
-        ));
+        let factor = super::typeset::number(&format!("{factor}"));
+        let what = if interference.iter().any(|value| *value > 0.0) {
+            "interference of the tightest pair, shown in colour,"
+        } else {
+            "clearance of the tightest pair"
+        };
+        text.push_str(&format!("; the {what} is drawn {factor} times too large"));
     }
     text.push_str(
         ". The shaft is drawn through and broken off: its length outside the hub is not part of the input.",

@@ -31,7 +31,7 @@ fn sentence(sheet: Sheet) -> String {
 }
 
 /// The verdict of a question that is furthest from being met, or nearest to its limit.
-fn governing(sheet: Sheet, question: Question) -> Option<&Verdict> {
+fn governing<'a>(sheet: Sheet<'a>, question: Question) -> Option<&'a Verdict> {
     let margin = |verdict: &Verdict| match (verdict.found, verdict.required) {
         (Some(found), Some(required)) if required > 0.0 => found / required,
         (Some(found), None) => 1e6 + found,
@@ -69,8 +69,7 @@ fn assembly(sheet: Sheet) -> String {
     let units = sheet.units;
     let assembly = &sheet.findings.assembly;
     let plan = &sheet.findings.joint.assembly;
-    let names = &sheet.findings.joint.rings;
-    let hub = names.last().map_or("hub", |ring| ring.name.as_str());
+    let (shaft, hub) = super::instructions::names(sheet);
     let temperature = |value: f64| units.text(Measure::Temperature, value);
     let missed = governing(sheet, Question::Assembly).filter(|verdict| !verdict.ok);
     if let Some(verdict) = missed {
@@ -78,21 +77,24 @@ fn assembly(sheet: Sheet) -> String {
     }
     match plan.method {
         Method::Press => {
-            format!("press in with up to {}", units.text(Measure::Force, assembly.press.tightest.peak_force))
+            format!(
+                "press in with up to {}",
+                units.brief(Measure::Force, assembly.press.tightest.peak_force).text()
+            )
         }
         Method::HeatHub => match assembly.heat_hub.temperature {
             Some(hot) => format!("heat the {hub} to {}", temperature(hot)),
             None => format!("heating the {hub} does not clear"),
         },
         Method::ChillShaft => match assembly.chill_shaft.temperature {
-            Some(cold) => format!("chill the inner part to {}", temperature(cold)),
+            Some(cold) => format!("chill the {shaft} to {}", temperature(cold)),
             None => "chilling alone does not clear".to_owned(),
         },
         Method::HeatAndChill => {
             let bath = assembly.baths.iter().find(|bath| bath.bath == plan.bath);
             match bath.and_then(|bath| bath.hub_temperature.map(|hot| (bath.temperature, hot))) {
                 Some((cold, hot)) => format!(
-                    "chill the inner part to {} and heat the {hub} to {}",
+                    "chill the {shaft} to {} and heat the {hub} to {}",
                     temperature(cold),
                     temperature(hot)
                 ),
@@ -118,8 +120,9 @@ fn shortfall(units: Units, verdict: &Verdict, found: Option<f64>) -> String {
 fn shown(units: Units, unit: VerdictUnit, value: f64) -> String {
     match unit {
         VerdictUnit::Safety => safety(value),
-        VerdictUnit::Force => units.text(Measure::Force, value),
+        VerdictUnit::Force => units.brief(Measure::Force, value).text(),
         VerdictUnit::Temperature => units.text(Measure::Temperature, value),
+        VerdictUnit::Share => format!("{:.1}\u{2009}%", value * 100.0),
     }
 }
 
@@ -141,8 +144,8 @@ fn table(sheet: Sheet) -> Markup {
                 th scope="col" { "Judged" }
                 th.r scope="col" { "Required" }
                 th.r scope="col" { "Found" }
-                th scope="col" { "At" }
                 th scope="col" { "Result" }
+                th scope="col" { "At" }
             }
         }
         tbody {
@@ -151,24 +154,27 @@ fn table(sheet: Sheet) -> Markup {
                 tr.first[first] {
                     th scope="row" { (if first { question(verdict.question) } else { "" }) }
                     td { (verdict.subject) }
-                    td.r { (required(sheet.units, verdict)) }
+                    td.r { (required(sheet, verdict)) }
                     td.r { (verdict.found.map_or_else(|| NONE.to_owned(), |value| shown(sheet.units, verdict.unit, value))) }
-                    td { (verdict.at) }
                     td.result.missed[!verdict.ok] { (result(verdict)) }
+                    td { (verdict.at) }
                 }
             }
         }
     }
 }
 
-/// The requirement with its sense: a safety is a least value, a force or temperature a greatest one.
-fn required(units: Units, verdict: &Verdict) -> String {
+/// The requirement with its sense: a safety is a least value, a force or temperature a greatest one, but a
+/// chilled shaft must not have to be colder than its bath.
+fn required(sheet: Sheet, verdict: &Verdict) -> String {
     let Some(value) = verdict.required else { return "none set".to_owned() };
+    let chilled = sheet.findings.joint.assembly.method == Method::ChillShaft;
     let sense = match verdict.unit {
         VerdictUnit::Safety => "≥",
-        VerdictUnit::Force | VerdictUnit::Temperature => "≤",
+        VerdictUnit::Temperature if chilled => "≥",
+        VerdictUnit::Force | VerdictUnit::Temperature | VerdictUnit::Share => "≤",
     };
-    format!("{sense} {}", shown(units, verdict.unit, value))
+    format!("{sense} {}", shown(sheet.units, verdict.unit, value))
 }
 
 fn result(verdict: &Verdict) -> &'static str {

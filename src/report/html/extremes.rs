@@ -4,7 +4,7 @@ use maud::{Markup, html};
 
 use super::Sheet;
 use super::table::{aligned, cell, pair_heads, range_cell, scrolling};
-use crate::findings::{PairFindings, RingStress};
+use crate::findings::{OnsetOfYield, PairFindings, RingStress};
 use crate::joint::{Ring, SmoothingAt};
 use crate::material::{Kind, Range};
 use crate::mechanics::criteria::DuctileCriterion;
@@ -27,7 +27,24 @@ pub(super) fn body(sheet: Sheet) -> Markup {
             @if first { " Interference and pressure are those of the innermost mating surface; every ring is listed." }
         }
         (scrolling("The extreme pairs", "extremes", &table(sheet)))
+        @if let Some(onset) = &sheet.findings.onset_of_yield { p { (first_yield(sheet, onset)) } }
     }
+}
+
+/// Where strength is reached first, and how far the tightest pair is from it.
+fn first_yield(sheet: Sheet, onset: &OnsetOfYield) -> String {
+    let units = sheet.units;
+    let ring = sheet.findings.joint.rings.get(onset.ring);
+    let name = ring.map_or("ring", |ring| ring.name.as_str());
+    let what = match ring.map(|ring| ring.material.kind) {
+        Some(Kind::Brittle) => "reaches its tensile strength",
+        _ => "begins to yield",
+    };
+    format!(
+        "The {name} is the first that {what}: at a contact pressure of {}, which is an effective interference of {}.",
+        units.brief(Measure::Pressure, onset.pressure).text(),
+        units.text(Measure::Deviation, onset.interference),
+    )
 }
 
 fn table(sheet: Sheet) -> Markup {
@@ -46,7 +63,7 @@ fn table(sheet: Sheet) -> Markup {
             tbody { (ring_rows(sheet, index, ring)) }
         }
         tbody {
-            tr { th.group colspan="5" scope="rowgroup" { "Capacity and forces" } }
+            tr.group { th colspan="5" scope="rowgroup" { "Capacity and forces" } }
             (row(sheet, "torque at slip", Measure::Torque, |pair| Some(pair.torque_capacity)))
             (row(sheet, "axial force at slip", Measure::Force, |pair| Some(pair.axial_capacity)))
             (range_row(sheet, "press force, greatest", Measure::Force, |pair| pair.press_force))
@@ -57,6 +74,7 @@ fn table(sheet: Sheet) -> Markup {
 
 fn ring_rows(sheet: Sheet, index: usize, ring: &Ring) -> Markup {
     let solid = ring.inner_diameter <= 0.0;
+    let last = index + 1 == sheet.findings.joint.rings.len();
     let inner = if solid { "at the centre" } else { "at the bore" };
     let equivalent = match (ring.material.kind, sheet.findings.joint.criterion) {
         (Kind::Brittle, _) => "greatest principal stress",
@@ -71,11 +89,15 @@ fn ring_rows(sheet: Sheet, index: usize, ring: &Ring) -> Markup {
         row(sheet, name, Measure::Pressure, |pair| pair.rings.get(index).map(value))
     };
     html! {
-        tr { th.group colspan="5" scope="rowgroup" { (ring.name) " · " (ring.material.name) } }
-        (stress(&format!("hoop stress {inner}"), |ring| ring.bore.hoop))
-        (stress(&format!("radial stress {inner}"), |ring| ring.bore.radial))
-        (stress("hoop stress at the outside", |ring| ring.rim.hoop))
-        (stress("radial stress at the outside", |ring| ring.rim.radial))
+        tr.group { th colspan="5" scope="rowgroup" { (ring.name) " · " (ring.material.name) } }
+        @if solid && is_uniform(sheet, index) {
+            (stress("hoop and radial stress, throughout", |ring| ring.rim.hoop))
+        } @else {
+            (stress(&format!("hoop stress {inner}"), |ring| ring.bore.hoop))
+            @if index > 0 || solid { (stress(&format!("radial stress {inner}"), |ring| ring.bore.radial)) }
+            (stress("hoop stress at the outside", |ring| ring.rim.hoop))
+            @if !last { (stress("radial stress at the outside", |ring| ring.rim.radial)) }
+        }
         (stress(equivalent, |ring| ring.equivalent))
         (row(sheet, strength, Measure::Number, |pair| pair.rings.get(index).and_then(|ring| ring.safety)))
         @if !solid {
@@ -87,6 +109,16 @@ fn ring_rows(sheet: Sheet, index: usize, ring: &Ring) -> Markup {
             pair.rings.get(index).map(|ring| ring.outer_change)
         }))
     }
+}
+
+/// Whether the stress of a ring is the same everywhere and in every direction, as in a solid shaft at rest.
+fn is_uniform(sheet: Sheet, index: usize) -> bool {
+    sheet.findings.extremes.named().iter().all(|(_, pair)| {
+        pair.rings.get(index).is_none_or(|ring| {
+            let of = [ring.bore.radial, ring.rim.hoop, ring.rim.radial];
+            of.iter().all(|stress| (stress - ring.bore.hoop).abs() < 1.0)
+        })
+    })
 }
 
 fn row(sheet: Sheet, name: &str, measure: Measure, value: impl Fn(&PairFindings) -> Option<f64>) -> Markup {

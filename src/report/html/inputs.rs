@@ -4,10 +4,10 @@ use maud::{Markup, html};
 
 use super::Sheet;
 use super::table::{range_text, safety, scrolling};
+use crate::findings::bath_name;
 use crate::joint::{Joint, Method, Ring, SmoothingAt};
 use crate::material::{Kind, Range};
 use crate::mechanics::criteria::DuctileCriterion;
-use crate::report::plot::bath_name;
 use crate::report::units::Measure;
 
 /// One value of the joint file.
@@ -58,13 +58,13 @@ pub(super) fn body(sheet: Sheet) -> Markup {
         }
         @for (heading, rows) in groups.iter().filter(|(_, rows)| !rows.is_empty()) {
             tbody {
-                tr { th.group colspan="3" scope="rowgroup" { (heading) } }
+                tr.group { th colspan="3" scope="rowgroup" { (heading) } }
                 @for input in rows { (row(joint, input)) }
             }
         }
         @if !others.is_empty() {
             tbody {
-                tr { th.group colspan="3" scope="rowgroup" { "Other defaults taken" } }
+                tr.group { th colspan="3" scope="rowgroup" { "Other defaults taken" } }
                 @for input in &others { (row(joint, input)) }
             }
         }
@@ -87,7 +87,9 @@ fn row(joint: &Joint, input: &Input) -> Markup {
                     Some(default) => { strong { "default" } " · " (default.source) }
                     None => {
                         @if set { "set on the command line" } @else { "given" }
-                        @if let Some(source) = &input.source { " · " (source) }
+                        @if let Some(source) = input.source.as_ref().filter(|source| !source.contains("joint file")) {
+                            " · " (source)
+                        }
                     }
                 }
             }

@@ -4,23 +4,23 @@ use maud::{Markup, html};
 
 use super::Sheet;
 use super::table::range_text;
-use crate::findings::{BathFindings, Caution};
+use crate::findings::{BathFindings, Caution, bath_name};
 use crate::joint::{Method, Ring};
-use crate::material::Range;
-use crate::report::plot::bath_name;
+use crate::material::{REFERENCE_TEMPERATURE, Range};
+use crate::report::typeset::{prose, sentence};
 use crate::report::units::Measure;
 
 /// One step.
 struct Step {
-    title: &'static str,
+    title: String,
     text: String,
     /// Subject of the cautions that belong to it.
     cautions: Option<&'static str>,
 }
 
 impl Step {
-    fn new(title: &'static str, text: impl Into<String>) -> Self {
-        Self { title, text: text.into(), cautions: None }
+    fn new(title: impl Into<String>, text: impl Into<String>) -> Self {
+        Self { title: title.into(), text: text.into(), cautions: None }
     }
 
     fn with_cautions(mut self, subject: &'static str) -> Self {
@@ -57,13 +57,22 @@ pub(super) fn body(sheet: Sheet) -> Markup {
 fn cautions(all: &[Caution], subject: &str) -> Markup {
     html! {
         @if all.iter().any(|caution| caution.subject == subject) {
+            p.caution-head { strong { "Cautions" } }
             ul.cautions {
                 @for caution in all.iter().filter(|caution| caution.subject == subject) {
-                    li { strong { "Caution. " } (caution.text) " " span.source { (caution.source) } }
+                    li { (prose(&caution.text)) " " span.source { (caution.source) } }
                 }
             }
         }
     }
+}
+
+/// Names of the two parts that are joined last: the outermost ring and the one inside of it.
+pub(super) fn names<'a>(sheet: Sheet<'a>) -> (&'a str, &'a str) {
+    let name = |ring: Option<&'a Ring>, other| ring.map_or(other, |ring| ring.name.as_str());
+    let mut rings = sheet.findings.joint.rings.iter().rev();
+    let hub = name(rings.next(), "hub");
+    (name(rings.next(), "shaft"), hub)
 }
 
 fn check_parts(sheet: Sheet) -> Step {
@@ -84,8 +93,12 @@ fn check_parts(sheet: Sheet) -> Step {
         ));
     }
     Step::new(
-        "Measure both parts at 20 °C",
-        format!("{} Parts outside these limits are not covered by this sheet.", sentences.join(" ")),
+        "Measure both parts",
+        format!(
+            "At {}. {} Parts outside these limits are not covered by this sheet.",
+            sheet.units.text(Measure::Temperature, REFERENCE_TEMPERATURE),
+            sentences.join(" ")
+        ),
     )
 }
 
@@ -104,13 +117,13 @@ fn clean(sheet: Sheet) -> Step {
 fn press(sheet: Sheet) -> Vec<Step> {
     let findings = sheet.findings;
     let units = sheet.units;
-    let force = |value: f64| units.text(Measure::Force, value);
+    let force = |value: f64| units.brief(Measure::Force, value).text();
     let press = &findings.assembly.press;
     let friction = &findings.joint.friction.pressing;
     let seated = if press.loosest.peak_force > 0.0 {
-        format!("between {} and {}", force(press.loosest.final_force), force(press.tightest.final_force))
+        format!("lie between {} and {}", force(press.loosest.final_force), force(press.tightest.final_force))
     } else {
-        format!("at most {}; the loosest pair slides in without force", force(press.tightest.final_force))
+        format!("be at most {}; the loosest pair slides in without force", force(press.tightest.final_force))
     };
     vec![
         Step::new(
@@ -131,13 +144,13 @@ fn press(sheet: Sheet) -> Vec<Step> {
         Step::new(
             "Press in with one stroke",
             format!(
-                "Travel {} from first touch. The force rises steadily. Stop when it passes {}: parts or friction are then not as assumed.",
-                units.text(Measure::Size, press.tightest.peak_travel.max(findings.joint.length - findings.joint.relief)),
+                "Over {} of seat, from first touch. The force rises steadily. Stop when it passes {}: parts or friction are then not as assumed.",
+                units.text(Measure::Size, findings.joint.engaged_length()),
                 force(press.tightest.peak_force)
             ),
         )
         .with_cautions("press"),
-        Step::new("Record the force when seated", format!("It must lie {seated}.")),
+        Step::new("Record the force when seated", format!("It must {seated}.")),
     ]
 }
 
@@ -165,7 +178,7 @@ fn heat(sheet: Sheet) -> Vec<Step> {
     vec![
         heat_to(sheet, hot),
         Step::new(
-            "Check the bore hot",
+            format!("Check the bore of the {} hot", names(sheet).1),
             format!("It must measure at least {bore} before the parts are joined."),
         ),
         join(),
@@ -182,8 +195,11 @@ fn heat_to(sheet: Sheet, hot: f64) -> Step {
         .as_ref()
         .map(|(limit, reason)| format!(" Never above {} ({reason}).", temperature(*limit)))
         .unwrap_or_default();
-    Step::new("Heat the outer part", format!("To {} right through, evenly.{limit}", temperature(hot)))
-        .with_cautions("heat")
+    Step::new(
+        format!("Heat the {}", names(sheet).1),
+        format!("To {} right through, evenly.{limit}", temperature(hot)),
+    )
+    .with_cautions("heat")
 }
 
 fn join() -> Step {
@@ -213,10 +229,13 @@ fn chill(sheet: Sheet) -> Vec<Step> {
         format!(" {} is cold enough.", super::capital(&baths.join(" or ")))
     };
     vec![
-        Step::new("Chill the inner part", format!("To {} or below, right through.{how}", temperature(cold)))
-            .with_cautions("cold"),
         Step::new(
-            "Check the shaft cold",
+            format!("Chill the {}", names(sheet).0),
+            format!("To {} or below, right through.{how}", temperature(cold)),
+        )
+        .with_cautions("cold"),
+        Step::new(
+            format!("Check the {} cold", names(sheet).0),
             format!("It must measure at most {pin} before the parts are joined."),
         ),
         join(),
@@ -236,7 +255,7 @@ fn heat_and_chill(sheet: Sheet) -> Vec<Step> {
     });
     let mut steps = vec![
         Step::new(
-            "Chill the inner part",
+            format!("Chill the {}", names(sheet).0),
             format!(
                 "In {} to {}, right through.{shrinkage}",
                 bath_name(bath.bath),
@@ -253,31 +272,42 @@ fn heat_and_chill(sheet: Sheet) -> Vec<Step> {
 }
 
 fn impossible(statement: &str, subject: &'static str) -> Step {
-    Step::new("NOT POSSIBLE as asked", statement.to_owned()).with_cautions(subject)
+    Step::new("NOT POSSIBLE as asked", sentence(statement)).with_cautions(subject)
 }
 
 fn dismantle(sheet: Sheet) -> Step {
     let extremes = &sheet.findings.extremes;
     let range = Range { low: extremes.loosest.release_force.low, high: extremes.tightest.release_force.high };
+    let force = |value: f64| sheet.units.brief(Measure::Force, value).text();
     Step::new(
         "To take it apart",
-        format!(
-            "Pushing out takes {} {}.",
-            range_text(sheet.units, Measure::Force, range),
-            sheet.units.unit(Measure::Force)
-        ),
+        match range.low {
+            low if low > 0.0 => format!(
+                "Pushing out takes {} to {}, the least at the loosest pair and the low friction.",
+                force(low),
+                force(range.high)
+            ),
+            _ => format!("Pushing out takes up to {}; the loosest pair does not grip.", force(range.high)),
+        },
     )
 }
 
 /// What the other methods would take, in the words of the findings.
 fn other_routes(sheet: Sheet) -> Markup {
     let assembly = &sheet.findings.assembly;
+    let plan = &sheet.findings.joint.assembly;
+    let mut statements = Vec::new();
+    if plan.method != Method::HeatHub {
+        statements.push(&assembly.heat_hub.statement);
+    }
+    if plan.method != Method::ChillShaft {
+        statements.push(&assembly.chill_shaft.statement);
+    }
+    let other =
+        assembly.baths.iter().filter(|bath| plan.method != Method::HeatAndChill || bath.bath != plan.bath);
+    statements.extend(other.map(|bath| &bath.statement));
     html! {
         h3 { "Other ways" }
-        ul {
-            li { (assembly.heat_hub.statement) }
-            li { (assembly.chill_shaft.statement) }
-            @for bath in &assembly.baths { li { (bath.statement) } }
-        }
+        ul { @for statement in statements { li { (sentence(statement)) } } }
     }
 }

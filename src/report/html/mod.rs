@@ -80,20 +80,16 @@ struct Part {
 }
 
 const PARTS: [Part; 10] = [
-    Part {
-        id: "answers",
-        heading: "Does it hold, does it keep its strength, how is it joined",
-        body: answers::body,
-    },
-    Part { id: "section", heading: "The joint in section", body: pictures::section },
-    Part { id: "extremes", heading: "The extreme pairs", body: extremes::body },
+    Part { id: "answers", heading: "Verdict", body: answers::body },
+    Part { id: "section", heading: "Section", body: pictures::section },
+    Part { id: "extremes", heading: "Extreme pairs", body: extremes::body },
     Part { id: "pictures", heading: "Pictures", body: pictures::plots },
     Part { id: "duty", heading: "Duty", body: duty::body },
-    Part { id: "assembly", heading: "Assembly instructions", body: instructions::body },
+    Part { id: "assembly", heading: "Assembly", body: instructions::body },
     Part { id: "worksheet", heading: "Worksheet", body: worksheet::body },
-    Part { id: "inputs", heading: "Inputs as understood", body: inputs::body },
+    Part { id: "inputs", heading: "Inputs", body: inputs::body },
     Part { id: "materials", heading: "Materials", body: materials::body },
-    Part { id: "notes", heading: "Cautions, validity and notes", body: notes::body },
+    Part { id: "notes", heading: "Cautions and notes", body: notes::body },
 ];
 
 fn contents() -> Markup {

@@ -4,6 +4,7 @@ use maud::{Markup, html};
 
 use super::{Sheet, capital};
 use crate::findings::Caution;
+use crate::report::typeset::{prose, sentence};
 
 /// Subjects of cautions in the order they are printed, with their headings.
 const SUBJECTS: [(&str, &str); 6] = [
@@ -25,14 +26,14 @@ pub(super) fn body(sheet: Sheet) -> Markup {
             h4 { (heading) }
             ul.cautions {
                 @for caution in findings.cautions.iter().filter(|caution| caution.subject == subject) {
-                    li { (caution.text) " " span.source { (caution.source) } }
+                    li { (prose(&caution.text)) " " span.source { (caution.source) } }
                 }
             }
         }
         h3 { "Validity and notes" }
         @if findings.notes.is_empty() { p { "None." } }
         ul {
-            @for note in &findings.notes { li { (note) } }
+            @for note in &findings.notes { li { (sentence(note)) } }
         }
     }
 }

@@ -16,7 +16,7 @@ pub(super) fn plots(sheet: Sheet) -> Markup {
     let findings = sheet.findings;
     let plots = [
         Some(plot::tolerance_zones(findings)),
-        Some(plot::stress(findings)),
+        plot::stress(findings),
         plot::press_force(findings),
         plot::diameters(findings),
     ];

@@ -53,7 +53,11 @@ fn row(line: &WorksheetLine, number: &str, values: &mut Values) -> Markup {
         tr {
             th.no scope="row" { (number) }
             td.what { (line.meaning) span.source { (line.source) } }
-            td.formula class=[line.formula.as_ref().and_then(size)] { (chain(line, &known)) }
+            @match line.formula.as_ref().map_or(0, width) {
+                0..=34 => td { (chain(line, &known)) },
+                35..=52 => td.long { (chain(line, &known)) },
+                _ => td.longer { (chain(line, &known)) },
+            }
         }
     }
 }
@@ -86,16 +90,7 @@ fn has_known_symbols(formula: &Expression, known: &Values) -> bool {
     formula.symbols().iter().any(|symbol| known.contains_key(symbol))
 }
 
-/// Smaller type for a formula that would not fit the page: by its width in letters.
-fn size(formula: &Expression) -> Option<&'static str> {
-    match width(formula) {
-        0..=34 => None,
-        35..=52 => Some("long"),
-        _ => Some("longer"),
-    }
-}
-
-/// About how many letters wide the formula is with numbers put in.
+/// About how many letters wide the formula is with numbers put in; a wide one is set in smaller type.
 fn width(formula: &Expression) -> usize {
     match formula {
         Expression::Number(text) => text.chars().count(),

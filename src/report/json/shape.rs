@@ -2,10 +2,14 @@
 
 use serde::Serialize;
 
+use super::service::{Bending, Service};
 use super::{finite, microns};
-use crate::findings::{DutyFindings, Findings, PairFindings, Question, RingStress, StateFindings, Verdict, VerdictUnit};
+use crate::findings::{
+    DutyFindings, Findings, InterfaceFindings, PairFindings, Question, RingStress, SliceFindings,
+    StateFindings, Verdict, VerdictUnit,
+};
 use crate::joint::{Joint, Method};
-use crate::tolerance::{Extremes, FitLimits};
+use crate::tolerance::FitLimits;
 
 /// Everything.
 #[derive(Serialize)]
@@ -22,6 +26,7 @@ pub(super) struct Document {
     extremes: ExtremePairs,
     onset_of_yield: Option<Onset>,
     duty: Vec<Duty>,
+    service: Service,
     assembly: Assembly,
     verdicts: Vec<VerdictLine>,
     defaults: Vec<Default>,
@@ -114,6 +119,7 @@ struct Pair {
     release_force_n: Option<f64>,
     release_force_low_n: Option<f64>,
     interfaces: Vec<Interface>,
+    slices: Vec<SliceLine>,
     rings: Vec<RingLine>,
 }
 
@@ -123,7 +129,44 @@ struct Interface {
     diameter_mm: f64,
     interference_um: f64,
     pressure_mpa: Option<f64>,
+    gap_um: f64,
     open: bool,
+    torque_capacity_nm: Option<f64>,
+    axial_capacity_n: Option<f64>,
+}
+
+impl Interface {
+    fn of(found: &InterfaceFindings) -> Self {
+        Self {
+            diameter_mm: found.diameter * 1e3,
+            interference_um: microns(found.interference),
+            pressure_mpa: mega(found.pressure),
+            gap_um: microns(found.gap),
+            open: found.open,
+            torque_capacity_nm: finite(found.torque_capacity),
+            axial_capacity_n: finite(found.axial_capacity),
+        }
+    }
+}
+
+/// One slice of a stepped joint; none when it is of one section.
+#[derive(Serialize)]
+struct SliceLine {
+    length_mm: f64,
+    hub_outer_diameter_mm: f64,
+    shaft_bore_mm: f64,
+    pressure_mpa: Option<f64>,
+}
+
+impl SliceLine {
+    fn of(found: &SliceFindings) -> Self {
+        Self {
+            length_mm: found.length * 1e3,
+            hub_outer_diameter_mm: found.hub_outer_diameter * 1e3,
+            shaft_bore_mm: found.shaft_bore * 1e3,
+            pressure_mpa: mega(found.pressure),
+        }
+    }
 }
 
 /// One ring, from the innermost outwards; at a solid ring `bore` is its centre.
@@ -166,6 +209,8 @@ struct State {
     torque_capacity_nm: Option<f64>,
     axial_capacity_n: Option<f64>,
     slip_safety: Option<f64>,
+    interfaces: Vec<Interface>,
+    bending: Option<Bending>,
     hub_yield_safety: Option<f64>,
     shaft_yield_safety: Option<f64>,
 }
@@ -224,11 +269,11 @@ struct MaterialLine {
     section_mm: f64,
 }
 
-fn mega(pascals: f64) -> Option<f64> {
+pub(super) fn mega(pascals: f64) -> Option<f64> {
     finite(pascals * 1e-6)
 }
 
-fn celsius(kelvin: f64) -> f64 {
+pub(super) fn celsius(kelvin: f64) -> f64 {
     let exact = kelvin - 273.15;
     let rounded = (exact * 1e9).round() / 1e9;
     rounded + 0.0
@@ -237,7 +282,6 @@ fn celsius(kelvin: f64) -> f64 {
 impl Document {
     pub(super) fn of(findings: &Findings) -> Self {
         let joint = &findings.joint;
-        let pair = |pair: &PairFindings, pick: fn(Extremes<f64>) -> f64| Pair::of(joint, pair, pick);
         Self {
             findings: 1,
             version: env!("CARGO_PKG_VERSION"),
@@ -249,16 +293,22 @@ impl Document {
             character: super::super::terminal::character_name(findings.character),
             fit: joint.fits.first().map(|fit| Fit::of(&fit.limits)),
             extremes: ExtremePairs {
-                loosest: pair(&findings.extremes.loosest, |interference| interference.loosest),
-                mean: pair(&findings.extremes.mean, |interference| interference.mean),
-                tightest: pair(&findings.extremes.tightest, |interference| interference.tightest),
+                loosest: Pair::of(joint, &findings.extremes.loosest),
+                mean: Pair::of(joint, &findings.extremes.mean),
+                tightest: Pair::of(joint, &findings.extremes.tightest),
             },
             onset_of_yield: findings.onset_of_yield.as_ref().map(|onset| Onset {
                 ring: joint.rings.get(onset.ring).map(|ring| ring.name.clone()).unwrap_or_default(),
                 pressure_mpa: mega(onset.pressure),
                 interference_um: microns(onset.interference),
             }),
-            duty: joint.duty.iter().zip(&findings.duty).map(|(state, found)| Duty::of(state, found)).collect(),
+            duty: joint
+                .duty
+                .iter()
+                .zip(&findings.duty)
+                .map(|(state, found)| Duty::of(state, found))
+                .collect(),
+            service: Service::of(findings),
             assembly: Assembly::of(findings),
             verdicts: findings.verdicts.iter().map(VerdictLine::of).collect(),
             defaults: joint
@@ -296,10 +346,12 @@ fn materials(findings: &Findings) -> Vec<MaterialLine> {
 }
 
 impl Pair {
-    fn of(joint: &Joint, pair: &PairFindings, pick: fn(Extremes<f64>) -> f64) -> Self {
+    fn of(joint: &Joint, pair: &PairFindings) -> Self {
         let shaft = pair.rings.first();
         let hub = pair.rings.last();
-        let of = |ring: Option<&RingStress>, value: fn(&RingStress) -> f64| ring.and_then(|ring| mega(value(ring)));
+        let of = |ring: Option<&RingStress>, value: fn(&RingStress) -> f64| {
+            ring.and_then(|ring| mega(value(ring)))
+        };
         Self {
             interference_um: microns(pair.interference),
             smoothing_um: microns(pair.smoothing),
@@ -320,17 +372,14 @@ impl Pair {
             press_force_low_n: finite(pair.press_force.low),
             release_force_n: finite(pair.release_force.high),
             release_force_low_n: finite(pair.release_force.low),
-            interfaces: joint
-                .fits
+            interfaces: pair.interfaces.iter().map(Interface::of).collect(),
+            slices: pair.slices.iter().map(SliceLine::of).collect(),
+            rings: joint
+                .rings
                 .iter()
-                .map(|fit| Interface {
-                    diameter_mm: fit.limits.nominal * 1e3,
-                    interference_um: microns(pick(fit.limits.interference())),
-                    pressure_mpa: mega(pair.pressure),
-                    open: pair.pressure <= 0.0,
-                })
+                .zip(&pair.rings)
+                .map(|(ring, stress)| RingLine::of(&ring.name, stress))
                 .collect(),
-            rings: joint.rings.iter().zip(&pair.rings).map(|(ring, stress)| RingLine::of(&ring.name, stress)).collect(),
         }
     }
 }
@@ -375,6 +424,8 @@ impl State {
             torque_capacity_nm: finite(found.torque_capacity),
             axial_capacity_n: finite(found.axial_capacity),
             slip_safety: found.slip_safety.and_then(finite),
+            interfaces: found.interfaces.iter().map(Interface::of).collect(),
+            bending: found.bending.as_ref().map(Bending::of),
             hub_yield_safety: safety(found.rings.last()),
             shaft_yield_safety: safety(found.rings.first()),
         }
@@ -389,7 +440,9 @@ impl Assembly {
         let (method, hub, shaft) = match plan.method {
             Method::Press => ("press", None, None),
             Method::HeatHub => ("heat hub", assembly.heat_hub.temperature, Some(plan.shop_temperature)),
-            Method::ChillShaft => ("chill shaft", Some(plan.shop_temperature), assembly.chill_shaft.temperature),
+            Method::ChillShaft => {
+                ("chill shaft", Some(plan.shop_temperature), assembly.chill_shaft.temperature)
+            }
             Method::HeatAndChill => (
                 "heat and chill",
                 chosen.and_then(|bath| bath.hub_temperature),
@@ -429,7 +482,7 @@ impl VerdictLine {
     fn of(verdict: &Verdict) -> Self {
         let number = |value: f64| match verdict.unit {
             VerdictUnit::Temperature => celsius(value),
-            VerdictUnit::Safety | VerdictUnit::Force => value,
+            VerdictUnit::Safety | VerdictUnit::Force | VerdictUnit::Share => value,
         };
         Self {
             question: match verdict.question {
@@ -441,7 +494,7 @@ impl VerdictLine {
             required: verdict.required.map(number).and_then(finite),
             found: verdict.found.map(number).and_then(finite),
             unit: match verdict.unit {
-                VerdictUnit::Safety => "1",
+                VerdictUnit::Safety | VerdictUnit::Share => "1",
                 VerdictUnit::Force => "N",
                 VerdictUnit::Temperature => "degC",
             },

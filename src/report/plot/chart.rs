@@ -6,7 +6,7 @@ use maud::{Markup, PreEscaped, html};
 use plotters::prelude::*;
 
 use super::axis::Axis;
-use super::tags::{self, Placer, Side, Tag};
+use super::tags::{self, Lean, Placer, Side, Tag};
 use crate::report::svg::{FONT, Frame, INK, LOOSEST, Lettering, Pen, Point, QUIET, Sketch, TIGHTEST, chain};
 
 /// Size of a figure, px; it is as wide as the text.
@@ -96,8 +96,20 @@ impl Chart {
 
     /// Lettering that belongs to a point of the chart.
     pub(super) fn tag(&mut self, at: Point, text: impl Into<String>, colour: &'static str, side: Side) {
+        self.leaning_tag(at, text, colour, side, Lean::Either);
+    }
+
+    /// Lettering that gives way upwards or downwards only.
+    pub(super) fn leaning_tag(
+        &mut self,
+        at: Point,
+        text: impl Into<String>,
+        colour: &'static str,
+        side: Side,
+        lean: Lean,
+    ) {
         let lettering = Lettering::new(text, TYPE).colour(colour);
-        self.tags.push(Tag { at: self.place(at), lettering, side });
+        self.tags.push(Tag { at: self.place(at), lettering, side, lean });
     }
 
     /// A limit: a thin dash-dot line with its name.

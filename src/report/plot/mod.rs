@@ -13,7 +13,6 @@ use maud::Markup;
 
 pub use press::press_force;
 pub use stress::stress;
-pub(in crate::report) use temperature::bath_name;
 pub use temperature::diameters;
 pub use windows::interference_windows;
 pub use zones::tolerance_zones;

@@ -29,7 +29,7 @@ pub fn press_force(findings: &Findings) -> Option<Plot> {
     let force = |value: f64| units.on_axis(Measure::Force, value);
     let (lower, upper) = (on_axis(low), on_axis(high));
     let limits: Vec<(f64, &str)> = [
-        (Some(assembly.press_rating), "press rating to look for"),
+        (Some(assembly.press_rating), "press rating"),
         (findings.joint.require.press_force, "greatest force allowed"),
     ]
     .into_iter()
@@ -52,7 +52,7 @@ pub fn press_force(findings: &Findings) -> Option<Plot> {
     chart.curve(lower.clone(), Pair::Loosest.pen(1.8));
     for (value, name) in limits.iter().filter(|(value, _)| shown(*value)) {
         let y = force(*value);
-        let text = format!("{name} {}", units.text(Measure::Force, *value));
+        let text = format!("{name} {}", units.brief(Measure::Force, *value).text());
         chart.limit((0.0, y), (chart.x.to, y), text, (0.3 * chart.x.to, y), Side::Above);
     }
     peaks(&mut chart, units, low, high);
@@ -64,19 +64,22 @@ pub fn press_force(findings: &Findings) -> Option<Plot> {
         _ => "Were the parts pressed together cold instead, the force",
     }
     .to_owned();
-    let least =
-        if low.peak_force > 0.0 { units.text(Measure::Force, low.peak_force) } else { "nothing".to_owned() };
+    let least = if low.peak_force > 0.0 {
+        units.brief(Measure::Force, low.peak_force).text()
+    } else {
+        "nothing".to_owned()
+    };
     caption.push_str(&format!(
         " climbs with the travel and must end between {least} (loosest pair, friction {}) and {} (tightest pair, friction {}), reached at {} of travel.",
         number(friction.low),
-        units.text(Measure::Force, high.peak_force),
+        units.brief(Measure::Force, high.peak_force).text(),
         number(friction.high),
-        units.text(Measure::Size, high.peak_travel),
+        units.brief(Measure::Size, high.peak_travel).text(),
     ));
     for (value, name) in limits.iter().filter(|(value, _)| !shown(*value)) {
         caption.push_str(&format!(
             " The {name}, {}, lies above the picture.",
-            units.text(Measure::Force, *value)
+            units.brief(Measure::Force, *value).text()
         ));
     }
     let title = "Press force along the travel";
@@ -95,7 +98,7 @@ fn peaks(chart: &mut Chart, units: Units, low: &PressCurve, high: &PressCurve) {
         );
         if curve.peak_force > 0.0 {
             chart.mark(at, pair);
-            let text = format!("{name}, {}", units.text(Measure::Force, curve.peak_force));
+            let text = format!("{name}, {}", units.brief(Measure::Force, curve.peak_force).text());
             chart.tag(at, text, pair.colour(), Side::Right);
         } else {
             chart.tag((chart.x.to, 0.0), format!("{name}: no grip"), pair.colour(), Side::Right);

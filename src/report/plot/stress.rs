@@ -3,11 +3,12 @@
 use super::Plot;
 use super::axis::{Axis, bounds};
 use super::chart::{Chart, Margins, Pair, TYPE};
-use super::tags::Side;
+use super::tags::{Lean, Side};
 use crate::findings::{Findings, PairFindings, RingStress};
 use crate::joint::Ring;
 use crate::material::Kind;
-use crate::mechanics::criteria::DuctileCriterion;
+use crate::mechanics::criteria::{self, DuctileCriterion};
+use crate::mechanics::ring::{RingLoad, RingSection, Stress};
 use crate::report::svg::{Anchor, Lettering, Point};
 use crate::report::text_width::fitted;
 use crate::report::units::{Measure, Units};
@@ -25,7 +26,12 @@ struct Profile {
 }
 
 /// Hoop, radial and equivalent stress against radius, with strength and allowable stress of each ring.
-pub fn stress(findings: &Findings) -> Plot {
+///
+/// None when no pair grips: nothing is stressed then.
+pub fn stress(findings: &Findings) -> Option<Plot> {
+    if findings.extremes.tightest.rings.iter().all(|ring| ring.equivalent < 1.0) {
+        return None;
+    }
     let joint = &findings.joint;
     let units = Units { system: joint.display };
     let walls = Walls::new(&joint.rings);
@@ -49,7 +55,7 @@ pub fn stress(findings: &Findings) -> Plot {
         walls.axis(units),
         y_axis,
         370.0,
-        Margins { left: 62.0, right: 112.0, top: 50.0, bottom: 44.0 },
+        Margins { left: 62.0, right: 130.0, top: 50.0, bottom: 44.0 },
     );
 
     chart.rule((0.0, 0.0), (1.0, 0.0));
@@ -66,7 +72,7 @@ pub fn stress(findings: &Findings) -> Plot {
         let (from, to) = walls.ends(limit.ring);
         let y = on_axis(limit.value);
         let last = limit.ring + 1 == joint.rings.len();
-        let name = format!("{} {}", limit.name, units.reading(Measure::Pressure, limit.value).number);
+        let name = format!("{} {}", limit.name, units.brief(Measure::Pressure, limit.value).number);
         let at = if last { (to, y) } else { (0.5 * (from + to), y) };
         chart.limit((from, y), (to, y), name, at, if last { Side::Right } else { Side::Above });
     }
@@ -92,7 +98,7 @@ pub fn stress(findings: &Findings) -> Plot {
             sketch.text((x, y - 8.0), &Lettering::new(name, TYPE).bold().anchor(Anchor::Middle));
         }
     });
-    Plot { title: title.to_owned(), svg, caption }
+    Some(Plot { title: title.to_owned(), svg, caption })
 }
 
 /// The walls side by side, each at least a good quarter of the width; the radius is stretched to fit.
@@ -173,35 +179,40 @@ fn profiles(findings: &Findings, pair: &PairFindings) -> Vec<Profile> {
     joint.rings.iter().zip(&pair.rings).map(|(ring, stress)| profile(ring, stress, joint.criterion)).collect()
 }
 
+/// Stress through one wall from the pressures on its faces; a uniform temperature stresses no free ring.
 fn profile(ring: &Ring, stress: &RingStress, criterion: DuctileCriterion) -> Profile {
     let (inner, outer) = (ring.inner_diameter / 2.0, ring.outer_diameter / 2.0);
-    let (inside, outside) = (if inner > 0.0 { -stress.bore.radial } else { 0.0 }, -stress.rim.radial);
+    let material = &ring.material;
+    let load = RingLoad {
+        inner_pressure: if inner > 0.0 { -stress.bore.radial } else { 0.0 },
+        outer_pressure: -stress.rim.radial,
+        ..RingLoad::default()
+    };
     let mut profile = Profile { hoop: vec![], radial: vec![], equivalent: vec![] };
+    let section = RingSection::new(
+        inner,
+        outer,
+        material.youngs_modulus.value,
+        material.poisson.value,
+        material.density.value,
+    );
+    let Ok(section) = section else { return profile };
     for step in 0..POINTS {
         let radius = inner + (outer - inner) * step as f64 / (POINTS - 1) as f64;
-        let (radial, hoop) = lame(inner, outer, inside, outside, radius);
-        profile.hoop.push((radius, hoop));
-        profile.radial.push((radius, radial));
-        profile.equivalent.push((radius, equivalent(ring.material.kind, criterion, radial, hoop)));
+        let Ok(stress) = section.stress_at(&load, radius) else { continue };
+        profile.hoop.push((radius, stress.hoop));
+        profile.radial.push((radius, stress.radial));
+        profile.equivalent.push((radius, equivalent(material.kind, criterion, stress)));
     }
     profile
 }
 
-fn lame(a: f64, b: f64, inside: f64, outside: f64, r: f64) -> (f64, f64) {
-    if a <= 0.0 {
-        return (-outside, -outside);
-    }
-    let wall = b * b - a * a;
-    let mean = (inside * a * a - outside * b * b) / wall;
-    let swing = (inside - outside) * a * a * b * b / (wall * r * r);
-    (mean - swing, mean + swing)
-}
-
-fn equivalent(kind: Kind, criterion: DuctileCriterion, radial: f64, hoop: f64) -> f64 {
+fn equivalent(kind: Kind, criterion: DuctileCriterion, stress: Stress) -> f64 {
+    let Stress { radial, hoop } = stress;
     match (kind, criterion) {
-        (Kind::Brittle, _) => radial.max(hoop).max(0.0),
-        (_, DuctileCriterion::VonMises) => (radial * radial + hoop * hoop - radial * hoop).sqrt(),
-        (_, DuctileCriterion::Tresca) => (radial - hoop).abs().max(radial.abs()).max(hoop.abs()),
+        (Kind::Brittle, _) => criteria::greatest_principal(radial, hoop),
+        (_, DuctileCriterion::VonMises) => criteria::von_mises(radial, hoop),
+        (_, DuctileCriterion::Tresca) => criteria::tresca(radial, hoop),
     }
 }
 
@@ -236,7 +247,9 @@ fn label(chart: &mut Chart, walls: &Walls, findings: &Findings, ring: usize, pro
         _ => "equivalent",
     };
     let mut names: Vec<(String, f64)> = vec![(equivalent.to_owned(), end(&profile.equivalent))];
-    let number = |value: f64| units.reading(Measure::Pressure, value).number;
+    // A brittle part that is only compressed has no tension to name.
+    names.retain(|(_, value)| *value >= 1.0);
+    let number = |value: f64| units.brief(Measure::Pressure, value).number;
     let near = |a: f64, b: f64| number(a) == number(b);
     let (hoop, radial) = (end(&profile.hoop), end(&profile.radial));
     match names.iter_mut().find(|(_, value)| near(*value, hoop)) {
@@ -249,11 +262,12 @@ fn label(chart: &mut Chart, walls: &Walls, findings: &Findings, ring: usize, pro
         None => {}
     }
     names.sort_by(|a, b| b.1.total_cmp(&a.1));
-    for (name, value) in names {
+    for (place, (name, value)) in names.into_iter().enumerate() {
         let at = (x, units.on_axis(Measure::Pressure, value));
         chart.mark(at, Pair::Tightest);
         let text = format!("{name} {}", number(value));
-        chart.tag(at, text, Pair::Tightest.colour(), side);
+        let lean = if place == 0 { Lean::Up } else { Lean::Down };
+        chart.leaning_tag(at, text, Pair::Tightest.colour(), side, lean);
     }
 }
 
@@ -269,28 +283,39 @@ fn name_pairs(chart: &mut Chart, units: Units, tightest: &[Profile], loosest: &[
 }
 
 fn caption(findings: &Findings, limits: &[Limit], shown: &dyn Fn(f64) -> bool) -> String {
+    let rings = findings.joint.rings.iter().zip(&findings.extremes.tightest.rings);
+    let mut sentences: Vec<String> = rings
+        .enumerate()
+        .map(|(index, (ring, stress))| {
+            let hidden = limits.iter().any(|limit| limit.ring == index && !shown(limit.value));
+            ring_sentence(findings, ring, stress, hidden)
+        })
+        .collect();
+    sentences.push("Thick: equivalent stress; middle: hoop; thin: radial.".to_owned());
+    sentences.join(" ")
+}
+
+/// How far the ring is from its strength at the tightest pair.
+fn ring_sentence(findings: &Findings, ring: &Ring, stress: &RingStress, hidden: bool) -> String {
     let units = Units { system: findings.joint.display };
-    let mut text = String::new();
-    for (index, (ring, stress)) in
-        findings.joint.rings.iter().zip(&findings.extremes.tightest.rings).enumerate()
-    {
-        let Some(strength) = stress.strength else { continue };
-        let kind = if ring.material.kind == Kind::Brittle { "tensile strength" } else { "yield" };
-        let share = 100.0 * stress.equivalent / strength;
-        if index > 0 {
-            text.push(' ');
-        }
-        text.push_str(&format!(
-            "At the tightest pair the {} reaches {}, {share:.0} % of {kind} ({}).",
-            ring.name,
-            units.text(Measure::Pressure, stress.equivalent),
-            units.text(Measure::Pressure, strength),
-        ));
-        let hidden = limits.iter().any(|limit| limit.ring == index && !shown(limit.value));
-        if hidden {
-            text.push_str(" Its limit lies above the picture.");
-        }
+    let pressure = |value: f64| units.brief(Measure::Pressure, value).text();
+    let (name, brittle) = (&ring.name, ring.material.kind == Kind::Brittle);
+    if brittle && stress.equivalent < 1.0 {
+        return format!("At the tightest pair the {name} is in compression only.");
     }
-    text.push_str(" Thick: equivalent stress; middle: hoop; thin: radial.");
-    text
+    let Some(strength) = stress.strength else {
+        return format!(
+            "At the tightest pair the {name} reaches {}; its strength is not known.",
+            pressure(stress.equivalent)
+        );
+    };
+    let share = 100.0 * stress.equivalent / strength;
+    let kind = if brittle { "tensile strength" } else { "yield" };
+    let elastic = if share > 100.0 { ", computed as if it stayed elastic" } else { "" };
+    let above = if hidden { ", which lies above the picture" } else { "" };
+    format!(
+        "At the tightest pair the {name} reaches {}, {share:.0} % of {kind} ({}{above}){elastic}.",
+        pressure(stress.equivalent),
+        pressure(strength)
+    )
 }

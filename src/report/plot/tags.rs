@@ -55,6 +55,16 @@ pub(super) struct Tag {
     pub at: Point,
     pub lettering: Lettering,
     pub side: Side,
+    /// Where it goes when there is no room straight beside the point.
+    pub lean: Lean,
+}
+
+/// Direction in which a tag gives way.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) enum Lean {
+    Either,
+    Up,
+    Down,
 }
 
 /// Air between a tag and its point, px.
@@ -157,7 +167,12 @@ fn candidates(tag: &Tag, width: f64, height: f64) -> Vec<(Box, f64)> {
                     }
                 };
                 let place = Box { left, top, right: left + width, bottom: top + height };
-                all.push((place, OTHER_SIDE * turn as f64));
+                let against = match tag.lean {
+                    Lean::Up => shift > 0.0,
+                    Lean::Down => shift < 0.0,
+                    Lean::Either => false,
+                };
+                all.push((place, OTHER_SIDE * (turn as f64 + f64::from(u8::from(against)))));
             }
         }
     }
@@ -187,17 +202,16 @@ mod tests {
         Box { left: 0.0, top: 0.0, right: 300.0, bottom: 200.0 }
     }
 
+    fn tag(text: &str, at: Point) -> Tag {
+        Tag { at, lettering: Lettering::new(text, 12.0), side: Side::Right, lean: Lean::Either }
+    }
+
     #[test]
     fn twenty_tags_at_one_point_do_not_touch() {
         let mut placer = Placer::new(frame(), vec![], vec![]);
         let mut sketch = Sketch::default();
         for number in 0..20 {
-            let tag = Tag {
-                at: (150.0, 100.0),
-                lettering: Lettering::new(format!("label {number}"), 12.0),
-                side: Side::Right,
-            };
-            placer.place(&mut sketch, &tag);
+            placer.place(&mut sketch, &tag(&format!("label {number}"), (150.0, 100.0)));
         }
         assert_eq!(placer.taken.len(), 20);
         for (i, one) in placer.taken.iter().enumerate() {
@@ -207,11 +221,19 @@ mod tests {
     }
 
     #[test]
+    fn a_tag_gives_way_in_the_direction_asked_for() {
+        for (lean, above) in [(Lean::Up, true), (Lean::Down, false)] {
+            let taken = Box { left: 100.0, top: 90.0, right: 300.0, bottom: 110.0 };
+            let mut placer = Placer::new(frame(), vec![taken], vec![]);
+            placer.place(&mut Sketch::default(), &Tag { lean, ..tag("curve", (100.0, 100.0)) });
+            assert_eq!(placer.taken[1].bottom <= 90.0, above, "{lean:?}");
+        }
+    }
+
+    #[test]
     fn a_tag_at_the_edge_goes_inside() {
         let mut placer = Placer::new(frame(), vec![], vec![]);
-        let tag =
-            Tag { at: (299.0, 1.0), lettering: Lettering::new("at the corner", 12.0), side: Side::Right };
-        placer.place(&mut Sketch::default(), &tag);
+        placer.place(&mut Sketch::default(), &tag("at the corner", (299.0, 1.0)));
         assert!(placer.taken[0].right <= 300.0 && placer.taken[0].top >= 0.0);
     }
 
@@ -219,8 +241,7 @@ mod tests {
     fn a_tag_keeps_off_the_curve_when_it_can() {
         let curve = along(&[(0.0, 100.0), (300.0, 100.0)], 3.0);
         let mut placer = Placer::new(frame(), vec![], curve.clone());
-        let tag = Tag { at: (100.0, 100.0), lettering: Lettering::new("curve", 12.0), side: Side::Right };
-        placer.place(&mut Sketch::default(), &tag);
+        placer.place(&mut Sketch::default(), &tag("curve", (100.0, 100.0)));
         assert!(curve.iter().all(|point| !placer.taken[0].contains(*point)));
     }
 }

@@ -4,8 +4,8 @@ use super::Plot;
 use super::axis::{Axis, bounds};
 use super::chart::{Chart, Margins, Pair};
 use super::tags::Side;
-use crate::findings::Findings;
-use crate::joint::{Bath, Method, Ring};
+use crate::findings::{Findings, bath_name};
+use crate::joint::{Method, Ring};
 use crate::report::svg::{INK, Pen, Point, QUIET};
 use crate::report::units::{Measure, Units};
 
@@ -161,14 +161,6 @@ fn named_temperatures(chart: &mut Chart, findings: &Findings, units: Units) {
     line(findings.joint.assembly.shop_temperature, "shop".to_owned());
     if let Some((limit, _)) = &assembly.hub_limit {
         line(*limit, format!("limit {}", units.text(Measure::Temperature, *limit)));
-    }
-}
-
-/// Name of a bath.
-pub(in crate::report) fn bath_name(bath: Bath) -> &'static str {
-    match bath {
-        Bath::DryIce => "dry ice",
-        Bath::LiquidNitrogen => "liquid nitrogen",
     }
 }
 

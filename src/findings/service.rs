@@ -1,0 +1,319 @@
+//! The joint at work: what loosens it, and what yielding by design gives.
+
+use super::kernel::{Condition, Kernel, PairInterference, free_strains};
+use super::{FindingsError, RingStress};
+use crate::joint::{DutyState, Joint};
+use crate::material::{Kind, Range};
+use crate::mechanics::criteria::DuctileCriterion;
+use crate::mechanics::finite_length::{LengthFactors, ShaftEnds, length_factors};
+use crate::mechanics::governing::{Extreme, StackQuantity, StressMeasure};
+use crate::mechanics::notch;
+use crate::mechanics::plastic::{HubYield, PlasticJoint, PlasticLimits, PlasticState};
+use crate::mechanics::two_rings::TwoRings;
+use crate::tolerance::Extremes;
+
+/// What speed, heat, yielding and order of assembly do.
+#[derive(Debug, Clone, PartialEq, Default)]
+pub struct ServiceFindings {
+    /// What opens each interface of the loosest pair, from the innermost outwards.
+    pub loosening: Vec<Loosening>,
+    /// The elastic-plastic hub at the tightest pair; none when it does not apply.
+    pub plastic: Option<PlasticFindings>,
+    /// Stresses after each step of assembly at the tightest pair; empty with two rings.
+    pub steps: Vec<OrderStep>,
+    /// The combination of loosest and tightest interferences that governs each ring; empty with two rings.
+    pub governing: Vec<GoverningRing>,
+    /// Pressure at the mean and at a sharp edge over the thick-walled cylinder; none outside its validity.
+    pub length_factors: Option<LengthFactors>,
+    /// Fatigue of the shaft at the hub edge for each state with rotating bending.
+    pub fatigue: Vec<Fatigue>,
+}
+
+/// Which extreme of each interference governs the strength of a ring.
+#[derive(Debug, Clone, PartialEq)]
+pub struct GoverningRing {
+    /// Whether each interface is at its tightest, innermost first; otherwise at its loosest.
+    pub tight: Vec<bool>,
+    /// Name of the duty state, or none for the shop temperature.
+    pub state: Option<usize>,
+    /// Greatest equivalent stress at either face, Pa.
+    pub equivalent: f64,
+    /// Strength over it; none without strength or stress.
+    pub safety: Option<f64>,
+}
+
+/// Rotating bending of the shaft at the hub edge.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Fatigue {
+    /// Index of the duty state.
+    pub state: usize,
+    /// Nominal bending stress of the shaft, Pa.
+    pub nominal_stress: f64,
+    /// Notch factor at the hub edge, by DIN 743-2 and the range of tests.
+    pub notch_factor: Range,
+    /// Strength of the plain shaft in rotating bending, Pa: a share of its tensile strength.
+    pub plain_strength: f64,
+    /// Safety over the range of the notch factor.
+    pub safety: Range,
+}
+
+/// What opens one interface of the loosest pair.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Loosening {
+    /// Angular speed at shop temperature, rad/s; none when no speed opens it.
+    pub speed: Option<f64>,
+    /// Temperature of all parts, at rest, K; none when none within the expansion data opens it.
+    pub temperature: Option<f64>,
+    /// Temperature of the parts outside it alone, the others at shop temperature, at rest, K.
+    pub outer_temperature: Option<f64>,
+}
+
+/// The hub beyond its elastic limit, at rest, at the shop temperature.
+#[derive(Debug, Clone, PartialEq)]
+pub struct PlasticFindings {
+    /// Where yield begins and where the pressure ends.
+    pub limits: PlasticLimits,
+    /// The loosest pair.
+    pub loosest: PlasticState,
+    /// The mean pair.
+    pub mean: PlasticState,
+    /// The tightest pair.
+    pub tightest: PlasticState,
+    /// The solved joint, for curves.
+    pub joint: PlasticJoint,
+}
+
+/// The rings after one step of assembly.
+#[derive(Debug, Clone, PartialEq)]
+pub struct OrderStep {
+    /// The interface that is joined in this step.
+    pub interface: usize,
+    /// Stress in each ring; rings that are not joined yet are free of stress.
+    pub rings: Vec<RingStress>,
+}
+
+/// Service findings of a joint.
+pub(super) fn service(
+    joint: &Joint,
+    kernel: &Kernel<'_>,
+    pairs: &Extremes<PairInterference>,
+) -> Result<ServiceFindings, FindingsError> {
+    let (shaft, hub) = joint.shaft_and_hub();
+    let slenderness = joint.engaged_length() / joint.diameter;
+    let ratio = joint.diameter / hub.outer_diameter;
+    let simple = joint.rings.len() == 2 && joint.slices.is_empty() && shaft.inner_diameter == 0.0;
+    Ok(ServiceFindings {
+        loosening: loosening(joint, kernel, &pairs.loosest)?,
+        plastic: plastic(joint, kernel, pairs)?,
+        steps: steps(joint, kernel, &pairs.tightest)?,
+        governing: governing(joint, kernel, pairs)?,
+        length_factors: if simple {
+            length_factors(slenderness, ratio, ShaftEnds::Through).ok()
+        } else {
+            None
+        },
+        fatigue: fatigue(joint),
+    })
+}
+
+/// Speed and temperatures that open each interface of the loosest pair; of a stepped joint the speed at which the
+/// first slice opens (the temperatures open every slice alike).
+fn loosening(
+    joint: &Joint,
+    kernel: &Kernel<'_>,
+    loosest: &PairInterference,
+) -> Result<Vec<Loosening>, FindingsError> {
+    let stack = kernel.stack(&loosest.effective, &kernel.shop);
+    let mut speeds = stack.loosening_speeds()?;
+    for other in kernel.stacks(&loosest.effective, &kernel.shop).iter().skip(1) {
+        for (speed, own) in speeds.iter_mut().zip(other.loosening_speeds()?) {
+            *speed = match (*speed, own) {
+                (Some(known), Some(own)) => Some(known.min(own)),
+                (known, own) => known.or(own),
+            };
+        }
+    }
+    let shop = joint.assembly.shop_temperature;
+    let search = |interface: usize, heated: &dyn Fn(usize) -> bool| -> Result<Option<f64>, FindingsError> {
+        let strain = |temperature: f64| -> Vec<f64> {
+            let temperatures: Vec<f64> =
+                (0..joint.rings.len()).map(|ring| if heated(ring) { temperature } else { shop }).collect();
+            free_strains(joint, &temperatures).unwrap_or_else(|_| vec![f64::NAN; joint.rings.len()])
+        };
+        let moved = joint.rings.iter().enumerate().filter(|(ring, _)| heated(*ring));
+        let limits = moved.map(|(_, ring)| ring.material.expansion.range().1);
+        let end = limits.fold(f64::INFINITY, f64::min);
+        if end <= shop {
+            return Ok(None);
+        }
+        Ok(stack.loosening_temperature(interface, strain, shop, end)?)
+    };
+    speeds
+        .into_iter()
+        .enumerate()
+        .map(|(interface, speed)| {
+            Ok(Loosening {
+                speed,
+                temperature: search(interface, &|_| true)?,
+                outer_temperature: search(interface, &|ring| ring > interface)?,
+            })
+        })
+        .collect()
+}
+
+/// The combination that governs each ring, over the shop temperature and every state; nothing with two rings, where
+/// the tightest pair governs.
+fn governing(
+    joint: &Joint,
+    kernel: &Kernel<'_>,
+    pairs: &Extremes<PairInterference>,
+) -> Result<Vec<GoverningRing>, FindingsError> {
+    if joint.rings.len() == 2 {
+        return Ok(Vec::new());
+    }
+    let mut conditions = vec![(None, kernel.shop.clone())];
+    for (index, state) in joint.duty.iter().enumerate() {
+        conditions.push((Some(index), Condition::of_state(joint, state)?));
+    }
+    (0..joint.rings.len()).map(|ring| governing_ring(joint, kernel, pairs, &conditions, ring)).collect()
+}
+
+fn governing_ring(
+    joint: &Joint,
+    kernel: &Kernel<'_>,
+    pairs: &Extremes<PairInterference>,
+    conditions: &[(Option<usize>, Condition)],
+    index: usize,
+) -> Result<GoverningRing, FindingsError> {
+    let ring = &joint.rings[index];
+    let (measure, strength) = match (ring.material.kind, joint.criterion) {
+        (Kind::Brittle, _) => (StressMeasure::GreatestPrincipal, ring.strength.tensile_strength),
+        (_, DuctileCriterion::VonMises) => (StressMeasure::VonMises, ring.strength.yield_strength),
+        (_, DuctileCriterion::Tresca) => (StressMeasure::Tresca, ring.strength.yield_strength),
+    };
+    let loosest = loosest_for_stress(pairs);
+    let mut worst = GoverningRing { tight: Vec::new(), state: None, equivalent: -1.0, safety: None };
+    for (state, condition) in conditions {
+        let stack = kernel.stack(&pairs.tightest.effective, condition);
+        for radius in [0.5 * ring.inner_diameter, 0.5 * ring.outer_diameter] {
+            let quantity = StackQuantity::Stress { ring: index, radius, measure };
+            let found = stack.governing(&loosest, &pairs.tightest.effective, quantity, Extreme::Greatest)?;
+            if found.value > worst.equivalent {
+                worst.equivalent = found.value;
+                worst.tight = found.tight;
+                worst.state = *state;
+            }
+        }
+    }
+    worst.safety = strength.filter(|_| worst.equivalent > 0.0).map(|strength| strength / worst.equivalent);
+    Ok(worst)
+}
+
+/// The loosest interferences, never above the tightest.
+fn loosest_for_stress(pairs: &Extremes<PairInterference>) -> Vec<f64> {
+    let both = pairs.loosest.effective.iter().zip(&pairs.tightest.effective);
+    both.map(|(loosest, tightest)| loosest.min(*tightest)).collect()
+}
+
+/// Strength of plain steel in rotating bending as a share of its tensile strength: 0.45 to 0.5 is usual; from memory.
+const PLAIN_SHARE: f64 = 0.45;
+
+/// Notch factors found in tests on pressed members in reversed bending: one half to one third of the plain strength
+/// (Horger & Maulbetsch, J. Applied Mechanics 3 (1936) A91-A98, abstract).
+const TESTED_NOTCH: Range = Range { low: 2.0, high: 3.0 };
+
+fn fatigue(joint: &Joint) -> Vec<Fatigue> {
+    let states = joint.duty.iter().enumerate().filter(|(_, state)| state.rotating_bending);
+    states.filter_map(|(index, state)| fatigue_of(joint, index, state)).collect()
+}
+
+fn fatigue_of(joint: &Joint, index: usize, state: &DutyState) -> Option<Fatigue> {
+    let (shaft, _) = joint.shaft_and_hub();
+    let tensile = shaft.strength.tensile_strength?;
+    if state.bending_moment == 0.0 {
+        return None;
+    }
+    let (outer, inner) = (shaft.outer_diameter, shaft.inner_diameter);
+    let nominal_stress =
+        32.0 * state.bending_moment * outer / (std::f64::consts::PI * (outer.powi(4) - inner.powi(4)));
+    let formula = notch::press_fit_bending(tensile).unwrap_or(TESTED_NOTCH.high);
+    let notch_factor = Range { low: formula.min(TESTED_NOTCH.low), high: formula.max(TESTED_NOTCH.high) };
+    let plain_strength = PLAIN_SHARE * tensile;
+    Some(Fatigue {
+        state: index,
+        nominal_stress,
+        notch_factor,
+        plain_strength,
+        safety: Range {
+            low: plain_strength / (notch_factor.high * nominal_stress),
+            high: plain_strength / (notch_factor.low * nominal_stress),
+        },
+    })
+}
+
+/// The elastic-plastic joint; none unless a ductile hub sits on a shaft of two rings of one section.
+fn plastic(
+    joint: &Joint,
+    kernel: &Kernel<'_>,
+    pairs: &Extremes<PairInterference>,
+) -> Result<Option<PlasticFindings>, FindingsError> {
+    let [shaft, hub] = joint.rings.as_slice() else { return Ok(None) };
+    let (Some(hub_yield), Some(shaft_yield)) = (hub.strength.yield_strength, shaft.strength.yield_strength)
+    else {
+        return Ok(None);
+    };
+    if !joint.slices.is_empty() || hub.material.kind != Kind::Ductile || shaft.material.kind != Kind::Ductile
+    {
+        return Ok(None);
+    }
+    let solved = PlasticJoint::new(HubYield {
+        rings: TwoRings {
+            diameter: joint.diameter,
+            hub_outer_diameter: hub.outer_diameter,
+            shaft_bore: shaft.inner_diameter,
+            hub_youngs_modulus: hub.material.youngs_modulus.value,
+            hub_poisson: hub.material.poisson.value,
+            shaft_youngs_modulus: shaft.material.youngs_modulus.value,
+            shaft_poisson: shaft.material.poisson.value,
+        },
+        rule: joint.require.yield_rule,
+        hub_yield_strength: hub_yield,
+        shaft_yield_strength: shaft_yield,
+    })?;
+    let strain = |ring: usize| kernel.shop.strain.get(ring).copied().unwrap_or(0.0);
+    let by_temperature = (strain(0) - strain(1)) * joint.diameter;
+    let at = |pair: &PairInterference| {
+        let interference = pair.effective.first().copied().unwrap_or(0.0) + by_temperature;
+        solved.solve(interference.max(0.0)).ok()
+    };
+    let states = (at(&pairs.loosest), at(&pairs.mean), at(&pairs.tightest));
+    let (Some(loosest), Some(mean), Some(tightest)) = states else { return Ok(None) };
+    Ok(Some(PlasticFindings { limits: *solved.limits(), loosest, mean, tightest, joint: solved }))
+}
+
+/// Clearance that keeps parts apart which are not joined yet, as a share of the diameter.
+const APART: f64 = 0.1;
+
+/// The rings of the tightest pair after each step of assembly, at the shop temperature.
+fn steps(
+    joint: &Joint,
+    kernel: &Kernel<'_>,
+    tightest: &PairInterference,
+) -> Result<Vec<OrderStep>, FindingsError> {
+    if joint.rings.len() == 2 {
+        return Ok(Vec::new());
+    }
+    let mut interference: Vec<f64> =
+        (0..joint.fits.len()).map(|k| -APART * joint.interface_diameter(k)).collect();
+    joint
+        .order
+        .iter()
+        .map(|joined| {
+            if let (Some(own), Some(made)) = (interference.get_mut(*joined), tightest.effective.get(*joined))
+            {
+                *own = *made;
+            }
+            Ok(OrderStep { interface: *joined, rings: kernel.ring_stresses(&interference, &kernel.shop)? })
+        })
+        .collect()
+}
