@@ -61,6 +61,7 @@ pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
             "yield_safety",
             "fracture_safety",
             "press_force",
+            "hub_temperature",
             "allow",
             "plastic_share",
             "yield_rule",
@@ -348,6 +349,8 @@ pub(crate) struct RequireKeys {
     pub(crate) fracture_safety: Option<Written<Number>>,
     /// Greatest press-in force.
     pub(crate) press_force: Option<Written<Force>>,
+    /// Highest hub temperature while joining, such as what the oven gives; the limit of its material holds as well.
+    pub(crate) hub_temperature: Option<Written<Temperature>>,
     /// Whether a ductile hub may yield by design: elastic or plastic. Silent: elastic.
     pub(crate) allow: Option<Written<AllowWord>>,
     /// Greatest share of the hub's section that may be plastic. Silent: 0.3.

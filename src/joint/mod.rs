@@ -259,7 +259,8 @@ pub struct AssemblyPlan {
     pub chamfer_angle: Sourced<f64>,
     /// Bath used when the method chills and shares.
     pub bath: Bath,
-    /// Highest hub temperature allowed by the user, K; the material's own limit holds as well.
+    /// Highest hub temperature allowed by the user, K, the lower of `assembly.hub_temperature_limit` and
+    /// `require.hub_temperature`; the material's own limit holds as well.
     pub hub_temperature_limit: Option<f64>,
 }
 

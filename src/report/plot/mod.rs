@@ -8,6 +8,7 @@ mod press;
 mod stress;
 mod tags;
 mod temperature;
+mod windows;
 mod zones;
 
 use maud::Markup;
@@ -16,6 +17,7 @@ pub use envelope::envelope;
 pub use press::press_force;
 pub use stress::stress;
 pub use temperature::diameters;
+pub use windows::interference_windows;
 pub use zones::tolerance_zones;
 
 /// A plot with the sentence that says what to see.
