@@ -3,11 +3,11 @@
 use super::quadrature::{POINTS, rule, series};
 
 /// A series has converged when its last coefficients are below this share of the greatest.
-const CONVERGED: f64 = 1e-14;
+const CONVERGED: f64 = 1e-12;
 /// Share of a population that is not followed up any more.
 const NEGLIGIBLE: f64 = 1e-22;
 /// Most halvings of the stretch between two kinks.
-const DEPTH: usize = 14;
+const DEPTH: usize = 10;
 
 /// A density with its panels.
 #[derive(Debug, Clone, PartialEq)]
@@ -112,6 +112,15 @@ impl Curve {
     /// Ends of all panels, rising.
     pub fn edges(&self) -> impl Iterator<Item = f64> + '_ {
         self.panels.iter().map(|panel| panel.low).chain(self.panels.last().map(|panel| panel.high))
+    }
+
+    /// Integral of this density times that of `other` mirrored about `z`, between two neighbouring panel ends.
+    pub(super) fn product(&self, other: &Self, z: f64, from: f64, to: f64) -> f64 {
+        let middle = 0.5 * (from + to);
+        let (Some(one), Some(two)) = (self.panel(middle), other.panel(z - middle)) else { return 0.0 };
+        super::quadrature::integral(from, to, |x| {
+            series(&one.density, one.place(x)) * series(&two.density, two.place(z - x))
+        })
     }
 
     /// Density at `x`.

@@ -1,7 +1,6 @@
 //! The law of a quantity: values one by one or a density; sums, mappings, shares, expectations.
 
 use super::curve::Curve;
-use super::quadrature;
 use crate::population::distribution::{Atom, Distribution, Shape};
 
 /// Law of a quantity.
@@ -201,8 +200,9 @@ fn convolution(a: &Curve, b: &Curve) -> Curve {
         cuts.push(to);
         cuts.sort_by(f64::total_cmp);
         cuts.windows(2)
-            .map(|piece| quadrature::integral(piece[0], piece[1], |x| a.density(x) * b.density(z - x)))
-            .sum()
+            .map(|piece| a.product(b, z, piece[0], piece[1]))
+            .sum::<f64>()
+            .max(0.0)
     };
     Curve::new(density, sums(a.kinks(), b.kinks()))
 }
