@@ -190,7 +190,8 @@ pub struct Event {
 impl Event {
     /// Whether both engines agree.
     pub fn agrees(&self) -> bool {
-        self.counted.agrees_with(self.probability) && self.counted_below_required.agrees_with(self.below_required)
+        self.counted.agrees_with(self.probability)
+            && self.counted_below_required.agrees_with(self.below_required)
     }
 }
 
@@ -203,15 +204,16 @@ pub fn scatter(model: Model, settings: Settings) -> Result<Scatter, ScatterError
         return Err(ScatterError::Samples { given: settings.samples });
     }
     let analysis = Analysis::of(&model)?;
-    let simulation = Simulation::run(&model, settings.slip_safety, settings.samples, settings.seed, |quantity| {
-        analysis.support(quantity)
-    });
+    let simulation =
+        Simulation::run(&model, settings.slip_safety, settings.samples, settings.seed, |quantity| {
+            analysis.support(quantity)
+        });
     let quantities = Quantity::ALL
         .into_iter()
         .map(|quantity| spread(&analysis, &simulation, quantity))
         .collect::<Result<Vec<_>, _>>()?;
-    let slips = slips(&model, &analysis, &simulation, settings.slip_safety)?;
-    let failures = failures(&model, &analysis, &simulation)?;
+    let slips = slips(&model, &analysis, &simulation, settings.slip_safety);
+    let failures = failures(&model, &analysis, &simulation);
     let shares = shares::shares(&model);
     Ok(Scatter { settings, quantities, slips, failures, shares, model })
 }
@@ -260,42 +262,32 @@ fn curve(analysis: &Analysis<'_>, quantity: Quantity) -> Vec<(f64, f64, f64)> {
         .collect()
 }
 
-fn slips(
-    model: &Model,
-    analysis: &Analysis<'_>,
-    simulation: &Simulation,
-    required: f64,
-) -> Result<Vec<Event>, ScatterError> {
+fn slips(model: &Model, analysis: &Analysis<'_>, simulation: &Simulation, required: f64) -> Vec<Event> {
     model
         .states
         .iter()
         .zip(&simulation.slips)
-        .filter(|(state, _)| state.force > 0.0)
-        .map(|(state, counted)| {
-            Ok(Event {
-                what: "slip".to_owned(),
-                at: state.name.clone(),
-                probability: analysis.slip(state, 1.0)?,
-                counted: counted[0],
-                below_required: analysis.slip(state, required)?,
-                counted_below_required: counted[1],
-                required,
-            })
+        .enumerate()
+        .filter(|(_, (state, _))| state.force > 0.0)
+        .map(|(number, (state, counted))| Event {
+            what: "slip".to_owned(),
+            at: state.name.clone(),
+            probability: analysis.slip(number, 1.0),
+            counted: counted[0],
+            below_required: analysis.slip(number, required),
+            counted_below_required: counted[1],
+            required,
         })
         .collect()
 }
 
-fn failures(
-    model: &Model,
-    analysis: &Analysis<'_>,
-    simulation: &Simulation,
-) -> Result<Vec<Event>, ScatterError> {
+fn failures(model: &Model, analysis: &Analysis<'_>, simulation: &Simulation) -> Vec<Event> {
     let mut events = Vec::new();
     for (ring, counted) in model.rings.iter().zip(&simulation.failures) {
         let mut worst: Option<Event> = None;
         for (condition, counted) in counted.iter().enumerate() {
-            let probability = analysis.exceeds(condition, ring.pressure)?;
-            let below_required = analysis.exceeds(condition, ring.pressure / ring.required)?;
+            let probability = analysis.exceeds(condition, ring.pressure);
+            let below_required = analysis.exceeds(condition, ring.pressure / ring.required);
             let higher = worst.as_ref().is_none_or(|worst| {
                 (probability, below_required) > (worst.probability, worst.below_required)
             });
@@ -313,5 +305,5 @@ fn failures(
         }
         events.extend(worst);
     }
-    Ok(events)
+    events
 }

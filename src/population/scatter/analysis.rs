@@ -27,6 +27,8 @@ pub struct Analysis<'a> {
     log_ratio: Law,
     friction: Law,
     pressing: Law,
+    /// Thermal interference of each state.
+    thermals: Vec<Law>,
     /// Kinks of the share of grips below a value, with loss and without.
     kinks: [Vec<f64>; 2],
 }
@@ -61,8 +63,10 @@ impl<'a> Analysis<'a> {
         with_loss.extend(made.kinks().into_iter().filter(|kink| *kink <= 0.0));
         with_loss.push(0.0);
         let kinks = [made.kinks(), with_loss];
+        let thermals = model.states.iter().map(|state| thermal(model, state)).collect::<Result<_, _>>()?;
         Ok(Self {
             model,
+            thermals,
             pressing: Law::of(&population.pressing),
             made,
             smoothed,
@@ -92,36 +96,46 @@ impl<'a> Analysis<'a> {
         if loss && t >= 0.0 { self.smoothed.above(t) } else { self.made.above(t) }
     }
 
-    /// Probability that a joint slips in a state under `safety` times its load.
-    pub fn slip(&self, state: &State, safety: f64) -> Result<f64, ScatterError> {
-        let force = safety * state.force;
+    /// Probability that a joint slips in state number `state` under `safety` times its load.
+    pub fn slip(&self, state: usize, safety: f64) -> f64 {
+        let Some(State { force, .. }) = self.model.states.get(state) else { return 0.0 };
+        let force = safety * force;
         if force <= 0.0 {
-            return Ok(0.0);
+            return 0.0;
         }
         let loss = self.model.loss_when_holding;
         let gain = force / self.model.area();
         let at = |thermal: f64| {
-            self.over(&self.log_ratio, |log| gain * log.exp(), |t| (t / gain).ln(), loss, thermal, |t| {
-                self.grip_below(loss, t)
-            })
+            self.over(
+                &self.log_ratio,
+                |log| gain * log.exp(),
+                |t| (t / gain).ln(),
+                loss,
+                thermal,
+                |t| self.grip_below(loss, t),
+            )
         };
-        Ok(self.over_temperature(state, at)?.clamp(0.0, 1.0))
+        self.thermals[state].expect(&[], at).clamp(0.0, 1.0)
     }
 
     /// Probability that the contact pressure exceeds `pressure` in a condition.
-    pub fn exceeds(&self, condition: usize, pressure: f64) -> Result<f64, ScatterError> {
+    pub fn exceeds(&self, condition: usize, pressure: f64) -> f64 {
         let loss = self.model.loss_under_stress;
         let at = |thermal: f64| {
-            self.over(&self.compliance, |c| pressure * c, |t| t / pressure, loss, thermal, |t| {
-                self.grip_above(loss, t)
-            })
+            self.over(
+                &self.compliance,
+                |c| pressure * c,
+                |t| t / pressure,
+                loss,
+                thermal,
+                |t| self.grip_above(loss, t),
+            )
         };
-        let state = condition.checked_sub(1).and_then(|state| self.model.states.get(state));
-        let share = match state {
-            Some(state) => self.over_temperature(state, at)?,
+        let share = match condition.checked_sub(1).and_then(|state| self.thermals.get(state)) {
+            Some(thermal) => thermal.expect(&[], at),
             None => at(self.model.shop_thermal),
         };
-        Ok(share.clamp(0.0, 1.0))
+        share.clamp(0.0, 1.0)
     }
 
     /// Expected share over a law: the threshold of the grip is `of(x)` less the thermal interference.
@@ -139,46 +153,6 @@ impl<'a> Analysis<'a> {
         law.expect(&breaks, |x| share(of(x) - thermal))
     }
 
-    /// Expected value over the temperatures of a state.
-    fn over_temperature(&self, state: &State, at: impl Fn(f64) -> f64) -> Result<f64, ScatterError> {
-        if !self.model.scatters_in_temperature() {
-            return Ok(at(state.thermal));
-        }
-        Ok(self.thermal(state)?.expect(&[], at))
-    }
-
-    /// Law of the thermal interference of a state.
-    fn thermal(&self, state: &State) -> Result<Law, ScatterError> {
-        let Some(warm) = &state.warm else { return Ok(Law::fixed(state.thermal)) };
-        let population = &self.model.population;
-        let diameter = self.model.diameter;
-        let part = |offset: &Distribution, only_shaft: bool| -> Result<Law, ScatterError> {
-            let value = |offset: f64| {
-                let (hot, cold) = if only_shaft { (offset, 0.0) } else { (0.0, offset) };
-                warm.thermal(diameter, hot, cold) - state.thermal
-            };
-            let (low, high) = offset.support();
-            let rises = value(high) > value(low);
-            let steps: Vec<f64> = (0..=32).map(|i| value(low + (high - low) * f64::from(i) / 32.0)).collect();
-            if high > low && !steps.windows(2).all(|pair| (pair[1] > pair[0]) == rises && pair[1] != pair[0]) {
-                return Err(ScatterError::NotMonotone { state: state.name.clone() });
-            }
-            let back = |y: f64| {
-                let x = root::bracketed(|x| value(x) - y, low, high, 0.0).unwrap_or(if (y > value(low)) == rises {
-                    high
-                } else {
-                    low
-                });
-                let step = 1e-4 * (high - low);
-                let (a, b) = ((x - step).max(low), (x + step).min(high));
-                (x, ((b - a) / (value(b) - value(a))).abs())
-            };
-            Ok(Law::of(offset).mapped(value, back))
-        };
-        let sum = part(&population.shaft_temperature, true)?.sum(&part(&population.hub_temperature, false)?);
-        Ok(sum.scaled(1.0, state.thermal))
-    }
-
     /// Share of pairs with a quantity strictly below `x`.
     pub fn below(&self, quantity: Quantity, x: f64) -> f64 {
         self.share(quantity, x, true)
@@ -191,9 +165,9 @@ impl<'a> Analysis<'a> {
 
     fn share(&self, quantity: Quantity, x: f64, below: bool) -> f64 {
         let model = self.model;
-        let side = |loss: bool, t: f64| if below { self.grip_below(loss, t) } else { self.grip_above(loss, t) };
-        let (hold, stress, thermal) =
-            (model.loss_when_holding, model.loss_under_stress, model.shop_thermal);
+        let side =
+            |loss: bool, t: f64| if below { self.grip_below(loss, t) } else { self.grip_above(loss, t) };
+        let (hold, stress, thermal) = (model.loss_when_holding, model.loss_under_stress, model.shop_thermal);
         match quantity {
             Quantity::Interference => return if below { self.made.below(x) } else { self.made.above(x) },
             Quantity::EffectiveInterference => return side(hold, x),
@@ -203,12 +177,16 @@ impl<'a> Analysis<'a> {
         let found = match quantity {
             Quantity::Interference | Quantity::EffectiveInterference => 0.0,
             Quantity::Pressure | Quantity::HubStress => {
-                let (loss, pressure) = if quantity == Quantity::Pressure {
-                    (hold, x)
-                } else {
-                    (stress, x / model.hub_stress)
-                };
-                self.over(&self.compliance, |c| pressure * c, |t| t / pressure, loss, thermal, |t| side(loss, t))
+                let (loss, pressure) =
+                    if quantity == Quantity::Pressure { (hold, x) } else { (stress, x / model.hub_stress) };
+                self.over(
+                    &self.compliance,
+                    |c| pressure * c,
+                    |t| t / pressure,
+                    loss,
+                    thermal,
+                    |t| side(loss, t),
+                )
             }
             Quantity::TorqueCapacity => {
                 let gain = x / (model.area() * model.arm());
@@ -386,6 +364,39 @@ impl<'a> Analysis<'a> {
         let at_zero = (self.made.above(0.0) - self.smoothed.above(0.0)).max(0.0);
         open + closed + at_zero * function(0.0)
     }
+}
+
+/// Law of the thermal interference of a state.
+fn thermal(model: &Model, state: &State) -> Result<Law, ScatterError> {
+    let Some(warm) = state.warm.as_ref().filter(|_| model.scatters_in_temperature()) else {
+        return Ok(Law::fixed(state.thermal));
+    };
+    let population = &model.population;
+    let diameter = model.diameter;
+    let part = |offset: &Distribution, only_shaft: bool| -> Result<Law, ScatterError> {
+        let value = |offset: f64| {
+            let (hot, cold) = if only_shaft { (offset, 0.0) } else { (0.0, offset) };
+            warm.thermal(diameter, hot, cold) - state.thermal
+        };
+        let (low, high) = offset.support();
+        let rises = value(high) > value(low);
+        let steps: Vec<f64> = (0..=32).map(|i| value(low + (high - low) * f64::from(i) / 32.0)).collect();
+        if high > low && !steps.windows(2).all(|pair| (pair[1] > pair[0]) == rises && pair[1] != pair[0]) {
+            return Err(ScatterError::NotMonotone { state: state.name.clone() });
+        }
+        let back = |y: f64| {
+            let x = root::bracketed(|x| value(x) - y, low, high, 0.0)
+                .unwrap_or(if (y > value(low)) == rises { high } else { low });
+            // Four points: exact on the cubics of an expansion curve.
+            let step = 1e-3 * (high - low);
+            let wide = value(x + 2.0 * step) - value(x - 2.0 * step);
+            let near = value(x + step) - value(x - step);
+            (x, (12.0 * step / (8.0 * near - wide)).abs())
+        };
+        Ok(Law::of(offset).mapped(value, back))
+    };
+    let sum = part(&population.shaft_temperature, true)?.sum(&part(&population.hub_temperature, false)?);
+    Ok(sum.scaled(1.0, state.thermal))
 }
 
 /// Law of shaft minus hole; of two normals the normal itself.

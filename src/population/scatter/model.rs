@@ -193,7 +193,9 @@ impl Model {
                 return Err(ScatterError::ReachesZero { what });
             }
         }
-        for (what, friction) in [("friction", &population.friction), ("pressing_friction", &population.pressing)] {
+        for (what, friction) in
+            [("friction", &population.friction), ("pressing_friction", &population.pressing)]
+        {
             if friction.support().1 > 1.0 {
                 return Err(ScatterError::FrictionAboveOne { what });
             }

@@ -47,8 +47,9 @@ pub fn shares(model: &Model) -> Vec<Share> {
     let shaft_variance = shaft.expect(&[], |e| (given_shaft(e) - stiffness).powi(2));
 
     let square = |mean: f64, variance: f64| mean * mean + variance;
-    let torque_variance = square(grip, grip_variance) * square(friction, friction_variance) * stiffness_square
-        - (grip * friction * stiffness).powi(2);
+    let torque_variance =
+        square(grip, grip_variance) * square(friction, friction_variance) * stiffness_square
+            - (grip * friction * stiffness).powi(2);
     let of_torque = |variance: f64, others: f64| {
         if torque_variance > 0.0 { variance * others * others / torque_variance } else { 0.0 }
     };

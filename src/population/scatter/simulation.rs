@@ -164,15 +164,15 @@ impl<'a> Plan<'a> {
         let compliance_scatters = !(hub_modulus.is_fixed() && shaft_modulus.is_fixed());
         let follows = !loss_scatters && !compliance_scatters;
         let follow = Follow {
-            loss: model.smoothing_factor * (population.hub_roughness.mean() + population.shaft_roughness.mean()),
+            loss: model.smoothing_factor
+                * (population.hub_roughness.mean() + population.shaft_roughness.mean()),
             holds: model.loss_when_holding,
             stresses: model.loss_under_stress,
             thermal: model.shop_thermal,
             compliance: model.compliance(population.hub_modulus.mean(), population.shaft_modulus.mean()),
             hub_stress: model.hub_stress,
         };
-        let own =
-            [Quantity::EffectiveInterference, Quantity::Pressure, Quantity::HubStress].map(&histogram);
+        let own = [Quantity::EffectiveInterference, Quantity::Pressure, Quantity::HubStress].map(&histogram);
         Self {
             model,
             hole: Sampler::of(&population.hole),
@@ -222,7 +222,8 @@ impl Block {
     fn of(plan: &Plan<'_>) -> Self {
         let population = &plan.model.population;
         let zeros = || vec![0.0; BLOCK];
-        let compliance = plan.model.compliance(population.hub_modulus.mean(), population.shaft_modulus.mean());
+        let compliance =
+            plan.model.compliance(population.hub_modulus.mean(), population.shaft_modulus.mean());
         let roughness = population.hub_roughness.mean() + population.shaft_roughness.mean();
         Self {
             made: zeros(),
@@ -421,11 +422,7 @@ impl Tally {
                 .enumerate()
                 .map(|(state, counts)| told(if force(state) { counts } else { [0; 2] }))
                 .collect(),
-            failures: self
-                .failures
-                .into_iter()
-                .map(|ring| ring.into_iter().map(told).collect())
-                .collect(),
+            failures: self.failures.into_iter().map(|ring| ring.into_iter().map(told).collect()).collect(),
             spread: self.spread,
         }
     }
