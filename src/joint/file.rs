@@ -9,6 +9,7 @@ use serde::Deserialize;
 use super::leaf::{BathWord, CriterionWord, DisplayWord, FrictionText, LimitsText, LubricationWord};
 use super::leaf::{FitText, MaterialName, UncertainSize};
 use super::leaf::{MaterialKeys, MethodWord, Roughness, SmoothingAtWord, SmoothingText, Version};
+use super::population_keys::PopulationKeys;
 use super::written::{At, Free, NotYet, TextOr, Written};
 use crate::quantity::{Angle, Force, Length, Number, NumberRange, Temperature, Torque};
 
@@ -46,6 +47,21 @@ const SECTIONS: &[(&str, &[&str])] = &[
     ),
     ("smoothing", &["factor", "rule", "at"]),
     ("require", &["slip_safety", "yield_safety", "fracture_safety", "press_force"]),
+    (
+        "population",
+        &[
+            "hole",
+            "shaft",
+            "hub_roughness",
+            "shaft_roughness",
+            "friction",
+            "pressing_friction",
+            "hub_youngs_modulus",
+            "shaft_youngs_modulus",
+            "hub_temperature",
+            "shaft_temperature",
+        ],
+    ),
 ];
 
 /// The sections that have `key`, such as `shaft` and `hub`; none when no section has it.
@@ -102,6 +118,8 @@ pub(crate) struct JointFile {
     pub(crate) criterion: Option<Written<CriterionWord>>,
     /// What must be met.
     pub(crate) require: Option<At<RequireKeys>>,
+    /// How the parts scatter, for scatter and sort.
+    pub(crate) population: Option<At<PopulationKeys>>,
     /// Units on the terminal and in the report. Silent: metric.
     pub(crate) display: Option<Written<DisplayWord>>,
     #[schemars(skip)]

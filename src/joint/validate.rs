@@ -6,6 +6,7 @@ mod duty;
 mod fit;
 mod friction;
 mod parts;
+mod population;
 mod smoothing;
 
 use super::draft::Draft;
@@ -66,6 +67,7 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
     let smoothing = smoothing::smoothing(draft, file, rings.as_deref(), method);
     let criterion = criterion(draft, file);
     let require = requirements(draft, file.require.as_ref());
+    let population = population::population(draft, file);
     let display = display(draft, file);
     if !draft.faults.is_empty() {
         return None;
@@ -88,6 +90,7 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
         smoothing: smoothing?,
         criterion: criterion?,
         require: require?,
+        population,
         display: display?,
         defaults,
         remarks: std::mem::take(&mut draft.remarks),

@@ -1,6 +1,7 @@
 //! How a quantity scatters from part to part.
 
 mod error;
+pub mod measured;
 pub mod normal;
 
 pub use error::DistributionError;
@@ -166,7 +167,11 @@ impl Distribution {
                 _ => atoms.push(Atom { value, share: each }),
             }
         }
-        Ok(if let [only] = atoms.as_slice() { Self(Shape::Fixed(only.value)) } else { Self(Shape::Measured(atoms)) })
+        Ok(if let [only] = atoms.as_slice() {
+            Self(Shape::Fixed(only.value))
+        } else {
+            Self(Shape::Measured(atoms))
+        })
     }
 
     /// A normal from the process capability against limits: s = (upper − lower)/(6 Cp), the mean so far from the
@@ -281,9 +286,7 @@ impl Distribution {
                 (low.max(mean - REACH * sd), high.min(mean + REACH * sd))
             }
             Shape::Uniform { low, high } => (*low, *high),
-            Shape::SkewNormal { location, scale, .. } => {
-                (location - REACH * scale, location + REACH * scale)
-            }
+            Shape::SkewNormal { location, scale, .. } => (location - REACH * scale, location + REACH * scale),
             Shape::Measured(atoms) => {
                 (atoms.first().map_or(0.0, |atom| atom.value), atoms.last().map_or(0.0, |atom| atom.value))
             }
@@ -299,10 +302,15 @@ impl Distribution {
                 if x < *low || x > *high {
                     return 0.0;
                 }
-                normal::density((x - mean) / sd) / (sd * normal::between((low - mean) / sd, (high - mean) / sd))
+                normal::density((x - mean) / sd)
+                    / (sd * normal::between((low - mean) / sd, (high - mean) / sd))
             }
             Shape::Uniform { low, high } => {
-                if x < *low || x > *high { 0.0 } else { 1.0 / (high - low) }
+                if x < *low || x > *high {
+                    0.0
+                } else {
+                    1.0 / (high - low)
+                }
             }
             Shape::SkewNormal { location, scale, shape } => {
                 let z = (x - location) / scale;

@@ -8,6 +8,7 @@ pub mod analysis;
 pub mod model;
 pub mod shares;
 pub mod simulation;
+pub mod understood;
 
 use thiserror::Error;
 

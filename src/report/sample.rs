@@ -367,6 +367,7 @@ fn joint(spec: &Spec) -> Joint {
             fracture_safety: 1.6,
             press_force: (spec.method == Method::Press).then_some(150e3),
         },
+        population: Default::default(),
         display: spec.display,
         defaults: [
             ("friction.holding", "0.12", "common practice, no source"),

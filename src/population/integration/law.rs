@@ -81,10 +81,10 @@ impl Law {
             (Self::Atoms(a), Self::Atoms(b)) => {
                 let mut all = Vec::with_capacity(a.len() * b.len());
                 for one in a {
-                    all.extend(b.iter().map(|two| Atom {
-                        value: one.value + two.value,
-                        share: one.share * two.share,
-                    }));
+                    all.extend(
+                        b.iter()
+                            .map(|two| Atom { value: one.value + two.value, share: one.share * two.share }),
+                    );
                 }
                 Self::Atoms(in_order(all))
             }
@@ -199,10 +199,7 @@ fn convolution(a: &Curve, b: &Curve) -> Curve {
         cuts.extend(edges_b.iter().map(|y| z - y).filter(|x| *x > from && *x < to));
         cuts.push(to);
         cuts.sort_by(f64::total_cmp);
-        cuts.windows(2)
-            .map(|piece| a.product(b, z, piece[0], piece[1]))
-            .sum::<f64>()
-            .max(0.0)
+        cuts.windows(2).map(|piece| a.product(b, z, piece[0], piece[1])).sum::<f64>().max(0.0)
     };
     Curve::new(density, sums(a.kinks(), b.kinks()))
 }

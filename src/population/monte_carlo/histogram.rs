@@ -54,7 +54,8 @@ impl Histogram {
         let filled = || self.counts.iter().enumerate().filter(|(_, count)| **count > 0);
         let value = |class: usize| function(self.middle(class));
         let mean = filled().map(|(class, count)| *count as f64 * value(class)).sum::<f64>() / total;
-        let square = filled().map(|(class, count)| *count as f64 * (value(class) - mean).powi(2)).sum::<f64>();
+        let square =
+            filled().map(|(class, count)| *count as f64 * (value(class) - mean).powi(2)).sum::<f64>();
         (mean, (square / total).sqrt())
     }
 
