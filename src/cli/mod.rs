@@ -9,7 +9,9 @@ mod materials;
 mod new;
 mod output;
 mod report;
+mod scatter;
 mod schema;
+mod sort;
 
 use std::path::PathBuf;
 use std::process::ExitCode;
@@ -68,6 +70,8 @@ enum Command {
     Check(check::Arguments),
     Report(report::Arguments),
     Limits(limits::Arguments),
+    Scatter(scatter::Arguments),
+    Sort(sort::Arguments),
     Materials(materials::Arguments),
     New(new::Arguments),
     Schema(schema::Arguments),
@@ -80,6 +84,8 @@ impl Command {
         match self {
             Self::Check(arguments) => arguments.json,
             Self::Limits(arguments) => arguments.json,
+            Self::Scatter(arguments) => arguments.json,
+            Self::Sort(arguments) => arguments.json,
             _ => false,
         }
     }
@@ -106,6 +112,8 @@ fn run(line: CommandLine, output: &Output) -> Result<Ending, Failure> {
         Command::Check(arguments) => check::run(&arguments, folder, output),
         Command::Report(arguments) => report::run(&arguments, folder, output),
         Command::Limits(arguments) => limits::run(&arguments, output),
+        Command::Scatter(arguments) => scatter::run(&arguments, folder, output),
+        Command::Sort(arguments) => sort::run(&arguments, folder, output),
         Command::Materials(arguments) => materials::run(&arguments, folder, output),
         Command::New(arguments) => new::run(&arguments, output),
         Command::Schema(arguments) => schema::run(&arguments, output),

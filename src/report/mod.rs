@@ -8,6 +8,8 @@ pub mod limits;
 pub mod materials;
 pub mod mathml;
 pub mod plot;
+pub mod scatter;
+pub mod sort;
 pub mod terminal;
 
 mod hatch;

@@ -16,8 +16,9 @@
 use std::f64::consts::PI;
 use std::sync::Arc;
 
-use super::ScatterError;
-use crate::material::Material;
+use super::{Quantity, ScatterError};
+use crate::findings::after_smoothing;
+use crate::material::{Material, Range};
 use crate::population::distribution::Distribution;
 
 /// What scatters from pair to pair.
@@ -74,6 +75,19 @@ pub struct Model {
     pub states: Vec<State>,
     /// Rings that can give way.
     pub rings: Vec<Limit>,
+    /// The arithmetic limits, to stand beside the statistical ones.
+    pub arithmetic: Arithmetic,
+}
+
+/// The extreme pairs and the ranges of friction: what can happen at worst.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Arithmetic {
+    /// Interference of the loosest and of the tightest pair, m.
+    pub interference: Range,
+    /// Friction against slip.
+    pub friction: Range,
+    /// Friction while pressing in.
+    pub pressing: Range,
 }
 
 /// A service state.
@@ -145,6 +159,34 @@ impl Model {
         let pressure = (grip + self.shop_thermal).max(0.0) / compliance;
         let along = friction * self.engaged_length + grip.max(0.0) * self.chamfer_factor(friction);
         PI * self.diameter * pressure * along
+    }
+
+    /// Least and greatest value of a quantity by the arithmetic limits; roughness and moduli are at their means.
+    pub fn limits(&self, quantity: Quantity) -> (f64, f64) {
+        let population = &self.population;
+        let loss =
+            self.smoothing_factor * (population.hub_roughness.mean() + population.shaft_roughness.mean());
+        let compliance = self.compliance(population.hub_modulus.mean(), population.shaft_modulus.mean());
+        let Arithmetic { interference, friction, pressing } = self.arithmetic;
+        let grip = |made: f64, taken: bool| if taken { after_smoothing(made, loss) } else { made };
+        let hold = |made: f64| grip(made, self.loss_when_holding);
+        let stress = |made: f64| grip(made, self.loss_under_stress);
+        let pressure = |grip: f64| (grip + self.shop_thermal).max(0.0) / compliance;
+        let ends = |of: &dyn Fn(f64) -> f64| (of(interference.low), of(interference.high));
+        match quantity {
+            Quantity::Interference => (interference.low, interference.high),
+            Quantity::EffectiveInterference => ends(&hold),
+            Quantity::Pressure => ends(&|made| pressure(hold(made))),
+            Quantity::HubStress => ends(&|made| pressure(stress(made)) * self.hub_stress),
+            Quantity::TorqueCapacity => {
+                let (low, high) = ends(&|made| pressure(hold(made)) * self.area() * self.arm());
+                (low * friction.low, high * friction.high)
+            }
+            Quantity::PressForce => (
+                self.press_force(stress(interference.low), compliance, pressing.low),
+                self.press_force(stress(interference.high), compliance, pressing.high),
+            ),
+        }
     }
 
     /// Conditions in which a ring may give way: the shop first, then each state.

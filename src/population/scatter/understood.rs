@@ -3,7 +3,7 @@
 use thiserror::Error;
 
 use super::ScatterError;
-use super::model::{Limit, Model, Population, State, Warm};
+use super::model::{Arithmetic, Limit, Model, Population, State, Warm};
 use crate::diagnostic::Diagnostic;
 use crate::findings::failure;
 use crate::joint::population::{Bounds, Variation};
@@ -156,6 +156,14 @@ pub fn understood(joint: &Joint, read: &mut ReadList<'_>) -> Result<Understood, 
         shop_thermal: plain.shop.thermal_interference,
         states: states.collect(),
         rings: rings.collect(),
+        arithmetic: Arithmetic {
+            interference: match joint.fits.first().map(|fit| fit.limits.interference()) {
+                Some(extremes) => Range { low: extremes.loosest, high: extremes.tightest },
+                None => Range { low: 0.0, high: 0.0 },
+            },
+            friction: joint.friction.holding.value,
+            pressing: joint.friction.pressing.value,
+        },
     };
     model.check()?;
     Ok(Understood { model, assumed })

@@ -2,6 +2,7 @@
 
 mod axis;
 mod chart;
+mod population;
 mod press;
 mod stress;
 mod tags;
@@ -10,6 +11,7 @@ mod zones;
 
 use maud::Markup;
 
+pub use population::population;
 pub use press::press_force;
 pub use stress::stress;
 pub use temperature::diameters;
