@@ -12,6 +12,7 @@ use super::leaf::{
 };
 use super::leaf::{FitText, MaterialName, UncertainSize};
 use super::leaf::{MaterialKeys, MethodWord, Roughness, SmoothingAtWord, SmoothingText, Version};
+use super::population_keys::PopulationKeys;
 use super::written::{At, Line, NotYet, Note, TextOr, Written};
 use crate::quantity::{Angle, Force, Length, Number, NumberRange, Pressure, Speed, Temperature, Torque};
 
@@ -67,6 +68,21 @@ pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
             "yield_rule",
         ],
     ),
+    (
+        "population",
+        &[
+            "hole",
+            "shaft",
+            "hub_roughness",
+            "shaft_roughness",
+            "friction",
+            "pressing_friction",
+            "hub_youngs_modulus",
+            "shaft_youngs_modulus",
+            "hub_temperature",
+            "shaft_temperature",
+        ],
+    ),
 ];
 
 /// The sections that have `key`, such as `shaft` and `hub`; none when no section has it.
@@ -119,6 +135,8 @@ pub(crate) struct JointFile {
     pub(crate) criterion: Option<Written<CriterionWord>>,
     /// What must be met.
     pub(crate) require: Option<At<RequireKeys>>,
+    /// How the parts scatter, for scatter and sort.
+    pub(crate) population: Option<At<PopulationKeys>>,
     /// Units on the terminal and in the report. Silent: metric.
     pub(crate) display: Option<Written<DisplayWord>>,
     /// Two rings or more from the innermost outwards, in place of shaft and hub.

@@ -6,6 +6,7 @@ mod duty;
 mod fit;
 mod friction;
 mod parts;
+mod population;
 mod rings;
 mod smoothing;
 mod steps;
@@ -73,6 +74,7 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) ->
     let smoothing = smoothing::smoothing(draft, file, rings.as_deref(), method);
     let criterion = criterion(draft, file);
     let require = requirements(draft, file.require.as_ref());
+    let population = population::population(draft, file);
     let display = display(draft, file);
     if !draft.faults.is_empty() {
         return None;
@@ -97,6 +99,7 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) ->
         smoothing: smoothing?,
         criterion: criterion?,
         require: require?,
+        population,
         display: display?,
         defaults,
         remarks: std::mem::take(&mut draft.remarks),

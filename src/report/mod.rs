@@ -9,7 +9,9 @@ pub mod limits;
 pub mod materials;
 pub mod mathml;
 pub mod plot;
+pub mod scatter;
 pub mod service;
+pub mod sort;
 pub mod terminal;
 
 mod hatch;

@@ -372,6 +372,7 @@ fn joint(spec: &Spec) -> Joint {
             allow: Allow::Elastic,
             yield_rule: YieldRule::Tresca,
         },
+        population: Default::default(),
         display: spec.display,
         defaults: [
             ("friction.holding", "0.12", "common practice, no source"),

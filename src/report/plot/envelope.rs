@@ -50,13 +50,16 @@ fn rpm(speed: f64) -> f64 {
 }
 
 fn draw(chart: &mut Chart, line: &EnvelopeLine, temperature: &dyn Fn(f64) -> f64) {
-    let points: Vec<Point> = line.points.iter().map(|(speed, kelvin)| (rpm(*speed), temperature(*kelvin))).collect();
+    let points: Vec<Point> =
+        line.points.iter().map(|(speed, kelvin)| (rpm(*speed), temperature(*kelvin))).collect();
     let Some(end) = points.last().copied() else { return };
     let (pen, colour, name) = match line.meaning {
         EnvelopeMeaning::Share(share) => {
             (Pen::solid(QUIET, 0.8), QUIET, format!("{:.0}\u{2009}% left", share * 100.0))
         }
-        EnvelopeMeaning::Required => (Pen::dashed(LOOSEST, 1.6, "6 3.5"), LOOSEST, "required safety".to_owned()),
+        EnvelopeMeaning::Required => {
+            (Pen::dashed(LOOSEST, 1.6, "6 3.5"), LOOSEST, "required safety".to_owned())
+        }
         EnvelopeMeaning::Slips => (Pen::solid(LOOSEST, 2.2), LOOSEST, "slips".to_owned()),
         EnvelopeMeaning::Opens => (Pen::solid(INK, 2.2), INK, "opens".to_owned()),
     };
@@ -85,10 +88,8 @@ fn caption(findings: &Findings, envelope: &Envelope, units: Units) -> String {
         .filter_map(|state| joint.duty.get(state.state).map(|duty| duty.name.as_str()))
         .collect();
     if !crossed.is_empty() {
-        caption.push_str(&format!(
-            " Beyond the required safety for the heaviest load: {}.",
-            crossed.join(", ")
-        ));
+        caption
+            .push_str(&format!(" Beyond the required safety for the heaviest load: {}.", crossed.join(", ")));
     }
     caption
 }

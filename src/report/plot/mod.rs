@@ -4,6 +4,7 @@
 mod axis;
 mod chart;
 mod envelope;
+mod population;
 mod press;
 mod stress;
 mod tags;
@@ -14,6 +15,7 @@ mod zones;
 use maud::Markup;
 
 pub use envelope::envelope;
+pub use population::population;
 pub use press::press_force;
 pub use stress::stress;
 pub use temperature::diameters;
