@@ -154,7 +154,8 @@ fn remark_on_idle_limits(draft: &mut Draft<'_>, file: &JointFile, method: Option
     let heats = matches!(method, Some(Method::HeatHub | Method::HeatAndChill));
     if require.hub_temperature.is_some() && !heats {
         draft.remarks.push(
-            "The limit require.hub_temperature is not judged: the method of assembly does not heat the hub.".into(),
+            "The limit require.hub_temperature is not judged: the method of assembly does not heat the hub."
+                .into(),
         );
     }
     if require.press_force.is_some() && method.is_some_and(|method| method != Method::Press) {
