@@ -122,7 +122,7 @@ pub(crate) struct JointFile {
     /// The outer part.
     pub(crate) hub: Option<At<HubKeys>>,
     /// The fit: a callout such as H7/s6 or FN 4, or the limits of hole and shaft, or two measured parts.
-    pub(crate) fit: Option<At<TextOr<FitText, FitKeys>>>,
+    pub(crate) fit: Option<GivenFit>,
     /// Coefficients of friction. Silent: from the library by pair of materials and method of assembly.
     pub(crate) friction: Option<At<TextOr<FrictionText, FrictionKeys>>>,
     /// Service states. Silent: one state at shop temperature without load.
@@ -142,7 +142,7 @@ pub(crate) struct JointFile {
     /// Two rings or more from the innermost outwards, in place of shaft and hub.
     pub(crate) rings: Option<At<Vec<At<RingKeys>>>>,
     /// The fits between neighbouring rings, one less than there are rings.
-    pub(crate) fits: Option<At<Vec<At<TextOr<FitText, FitKeys>>>>>,
+    pub(crate) fits: Option<At<Vec<GivenFit>>>,
     /// Numbers of the fits in the order in which they are joined. Silent: from the innermost outwards.
     pub(crate) order: Option<At<Vec<Written<Number>>>>,
     #[schemars(skip)]
@@ -230,6 +230,9 @@ pub(crate) struct RingKeys {
     /// Ruling section that picks its strength. Silent: the thickness of its wall, or the diameter of a solid core.
     pub(crate) section: Option<Written<Length>>,
 }
+
+/// A fit as a callout, or with keys.
+pub(crate) type GivenFit = At<TextOr<FitText, FitKeys>>;
 
 /// The fit with hole and shaft apart, or two measured parts.
 #[derive(Debug, Deserialize, JsonSchema)]
