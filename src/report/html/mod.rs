@@ -13,6 +13,7 @@ mod notes;
 mod pictures;
 mod table;
 mod title_block;
+mod work;
 mod worksheet;
 
 use maud::{Markup, PreEscaped, html};
@@ -84,7 +85,7 @@ const PARTS: [Part; 10] = [
     Part { id: "section", heading: "Section", body: pictures::section },
     Part { id: "extremes", heading: "Extreme pairs", body: extremes::body },
     Part { id: "pictures", heading: "Pictures", body: pictures::plots },
-    Part { id: "duty", heading: "Duty", body: duty::body },
+    Part { id: "duty", heading: "Duty and work", body: duty::body },
     Part { id: "assembly", heading: "Assembly", body: instructions::body },
     Part { id: "worksheet", heading: "Worksheet", body: worksheet::body },
     Part { id: "inputs", heading: "Inputs", body: inputs::body },

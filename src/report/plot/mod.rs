@@ -6,6 +6,7 @@ mod press;
 mod stress;
 mod tags;
 mod temperature;
+mod walls;
 mod zones;
 
 use maud::Markup;
