@@ -242,7 +242,7 @@ fn breaks(sketch: &mut Sketch, layout: &Layout, place: Place, segments: &[Segmen
     if layout.axial.broken {
         // Through the longest piece, where most is left out.
         let longest = segments.iter().max_by(|a, b| (a.right - a.left).total_cmp(&(b.right - b.left)));
-        for segment in longest {
+        if let Some(segment) = longest {
             for (from, to) in spans(segment.bore, segment.rim) {
                 gap(sketch, 0.5 * (segment.left + segment.right), (from - 0.6, to + 0.6), false);
             }

@@ -8,6 +8,7 @@ use crate::findings::{InterfaceFindings, OnsetOfYield, PairFindings, RingStress}
 use crate::joint::{Ring, SmoothingAt};
 use crate::material::{Kind, Range};
 use crate::mechanics::criteria::DuctileCriterion;
+use crate::report::plot;
 use crate::report::units::Measure;
 
 /// The table with a line on how the pairs are made.
@@ -25,6 +26,13 @@ pub(super) fn body(sheet: Sheet) -> Markup {
             "hole with the largest shaft. Interference is diametral; what the roughness peaks lose is " (smoothing) "."
         }
         (scrolling("The extreme pairs", "extremes", &table(sheet)))
+        @if plot::yields_by_design(sheet.findings) {
+            @let hub = joint.rings.last().map_or("hub", |ring| ring.name.as_str());
+            p {
+                "The stresses of the " (hub) " in this table are those of an elastic " (hub) ": they show how far it is "
+                "beyond its elastic limit. Part 4 shows it as it yields, part 5 tells how far."
+            }
+        }
         @if let Some(onset) = &sheet.findings.onset_of_yield { p { (first_yield(sheet, onset)) } }
     }
 }

@@ -11,10 +11,17 @@ mod zones;
 
 use maud::Markup;
 
+use crate::findings::Findings;
+
 pub use press::press_force;
 pub use stress::stress;
 pub use temperature::diameters;
 pub use zones::tolerance_zones;
+
+/// Whether the hub may yield and does, so that its elastic stresses are not those it has.
+pub(in crate::report) fn yields_by_design(findings: &Findings) -> bool {
+    walls::plastic(findings).is_some()
+}
 
 /// A plot with the sentence that says what to see.
 pub struct Plot {

@@ -9,7 +9,7 @@ use crate::joint::Fit;
 use crate::report::hatch::{self, Rectangle, hatching_of};
 use crate::report::svg::{Anchor, INK, Lettering, Pen, Point, QUIET, RULE, Sketch, closed};
 use crate::report::text_width::fitted;
-use crate::report::typeset::MINUS;
+use crate::report::typeset::{MINUS, sentence};
 use crate::report::units::{Measure, Units};
 use crate::tolerance::Limits;
 
@@ -166,5 +166,5 @@ fn caption(fits: &[Fit], units: Units) -> String {
             )
         })
         .collect();
-    sentences.join(" ")
+    sentence(&sentences.join(" "))
 }
