@@ -13,6 +13,7 @@
 //! | [`assembly`] | press force along the travel, joining temperatures, cautions |
 //! | [`joint`] | the joint file: shape, defaults, errors with line and column |
 //! | [`findings`] | what is computed, in one place; verdicts; the worksheet |
+//! | [`population`] | many joints: the fit to choose, a population of parts, a table of joints |
 //! | [`report`] | terminal text, JSON, HTML, drawings and plots |
 //!
 //! Everything below `joint` takes and returns SI numbers (m, Pa, N, N·m, K, kg, s, rad/s).
@@ -26,6 +27,7 @@ pub mod joint;
 pub mod material;
 pub mod mechanics;
 pub mod numerics;
+pub mod population;
 pub mod quantity;
 pub mod report;
 pub mod tolerance;

@@ -7,7 +7,7 @@ use std::path::{Path, PathBuf};
 use clap::Args;
 use hubgrip::diagnostic::Diagnostic;
 use hubgrip::findings::{self, Findings};
-use hubgrip::joint::{read, set};
+use hubgrip::joint::{Joint, read, set};
 use hubgrip::material::library::{self, Library};
 
 use super::exit::Failure;
@@ -44,14 +44,24 @@ pub fn library(folder: Option<&Path>, output: &Output) -> Result<Library, Failur
 
 /// Reads a joint file and computes its findings.
 pub fn findings(path: &Path, set: &[(String, String)], library: &Library) -> Result<Findings, Failure> {
-    let name = shown(path);
+    let joint = joint(path, set, library)?;
+    findings::compute(joint).map_err(|error| Diagnostic::new(error.to_string()).in_file(shown(path)).into())
+}
+
+/// Reads a joint file.
+pub fn joint(path: &Path, set: &[(String, String)], library: &Library) -> Result<Joint, Failure> {
     let bytes = bytes(path)?;
-    let joint = read::read_bytes(&bytes, &name, set, library).map_err(Failure::Input)?;
-    findings::compute(joint).map_err(|error| Diagnostic::new(error.to_string()).in_file(name).into())
+    read::read_bytes(&bytes, &shown(path), set, library).map_err(Failure::Input)
+}
+
+/// Reads a joint file whose fit is still to be chosen.
+pub fn joint_without_fit(path: &Path, set: &[(String, String)], library: &Library) -> Result<Joint, Failure> {
+    let bytes = bytes(path)?;
+    read::read_without_fit(&bytes, &shown(path), set, library).map_err(Failure::Input)
 }
 
 /// The name a file goes by in messages.
-fn shown(path: &Path) -> PathBuf {
+pub fn shown(path: &Path) -> PathBuf {
     if path == Path::new("-") { PathBuf::from("<stdin>") } else { path.to_path_buf() }
 }
 

@@ -1,6 +1,7 @@
 //! The command line: one file a command, one place where it ends.
 
 mod check;
+mod choose;
 mod completions;
 mod exit;
 mod input;
@@ -9,7 +10,9 @@ mod materials;
 mod new;
 mod output;
 mod report;
+mod scatter;
 mod schema;
+mod sort;
 
 use std::path::PathBuf;
 use std::process::ExitCode;
@@ -68,6 +71,9 @@ enum Command {
     Check(check::Arguments),
     Report(report::Arguments),
     Limits(limits::Arguments),
+    Choose(choose::Arguments),
+    Scatter(scatter::Arguments),
+    Sort(sort::Arguments),
     Materials(materials::Arguments),
     New(new::Arguments),
     Schema(schema::Arguments),
@@ -80,6 +86,9 @@ impl Command {
         match self {
             Self::Check(arguments) => arguments.json,
             Self::Limits(arguments) => arguments.json,
+            Self::Choose(arguments) => arguments.json,
+            Self::Scatter(arguments) => arguments.json,
+            Self::Sort(arguments) => arguments.json,
             _ => false,
         }
     }
@@ -106,6 +115,9 @@ fn run(line: CommandLine, output: &Output) -> Result<Ending, Failure> {
         Command::Check(arguments) => check::run(&arguments, folder, output),
         Command::Report(arguments) => report::run(&arguments, folder, output),
         Command::Limits(arguments) => limits::run(&arguments, output),
+        Command::Choose(arguments) => choose::run(&arguments, folder, output),
+        Command::Scatter(arguments) => scatter::run(&arguments, folder, output),
+        Command::Sort(arguments) => sort::run(&arguments, folder, output),
         Command::Materials(arguments) => materials::run(&arguments, folder, output),
         Command::New(arguments) => new::run(&arguments, output),
         Command::Schema(arguments) => schema::run(&arguments, output),

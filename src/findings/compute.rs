@@ -70,7 +70,7 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         })
         .collect::<Result<Vec<_>, FindingsError>>()?;
     let onset_of_yield = onset_of_yield(&joint, &kernel)?;
-    let service = service::service(&joint, &kernel, &pairs)?;
+    let service = service::service(&joint, &kernel, &pairs, &duty)?;
     if let (Allow::Plastic { .. }, Some(plastic)) = (joint.require.allow, &service.plastic) {
         softening::soften(&mut extremes, &mut duty, plastic);
     }

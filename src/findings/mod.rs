@@ -3,6 +3,7 @@
 mod assembly_of;
 mod cautions;
 mod compute;
+mod envelope;
 pub mod expression;
 mod kernel;
 mod service;
@@ -13,6 +14,7 @@ pub mod worksheet;
 pub use assembly_of::{bath_name, bath_temperature};
 pub use cautions::criterion_source;
 pub use compute::{FindingsError, compute};
+pub use envelope::{Envelope, EnvelopeLine, EnvelopeMeaning, EnvelopeState};
 pub use kernel::after_smoothing;
 pub use service::{Fatigue, GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings};
 pub use softening::plastic_share_of_pressure;

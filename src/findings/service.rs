@@ -1,7 +1,8 @@
 //! The joint at work: what loosens it, and what yielding by design gives.
 
+use super::envelope::{Envelope, envelope};
 use super::kernel::{Condition, Kernel, PairInterference, free_strains};
-use super::{FindingsError, RingStress};
+use super::{DutyFindings, FindingsError, RingStress};
 use crate::joint::{DutyState, Joint};
 use crate::material::{Kind, Range};
 use crate::mechanics::criteria::DuctileCriterion;
@@ -25,6 +26,8 @@ pub struct ServiceFindings {
     pub governing: Vec<GoverningRing>,
     /// Pressure at the mean and at a sharp edge over the thick-walled cylinder; none outside its validity.
     pub length_factors: Option<LengthFactors>,
+    /// What is left of the pressure at speed and with a hot hub; none where it cannot be drawn.
+    pub envelope: Option<Envelope>,
     /// Fatigue of the shaft at the hub edge for each state with rotating bending.
     pub fatigue: Vec<Fatigue>,
 }
@@ -97,13 +100,17 @@ pub(super) fn service(
     joint: &Joint,
     kernel: &Kernel<'_>,
     pairs: &Extremes<PairInterference>,
+    duty: &[DutyFindings],
 ) -> Result<ServiceFindings, FindingsError> {
+    let loosening = loosening(joint, kernel, &pairs.loosest)?;
+    let loosening_speed = loosening.first().and_then(|loosening| loosening.speed);
     let (shaft, hub) = joint.shaft_and_hub();
     let slenderness = joint.engaged_length() / joint.diameter;
     let ratio = joint.diameter / hub.outer_diameter;
     let simple = joint.rings.len() == 2 && joint.slices.is_empty() && shaft.inner_diameter == 0.0;
     Ok(ServiceFindings {
-        loosening: loosening(joint, kernel, &pairs.loosest)?,
+        envelope: envelope(joint, kernel, &pairs.loosest, duty, loosening_speed)?,
+        loosening,
         plastic: plastic(joint, kernel, pairs)?,
         steps: steps(joint, kernel, &pairs.tightest)?,
         governing: governing(joint, kernel, pairs)?,

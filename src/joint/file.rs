@@ -12,6 +12,7 @@ use super::leaf::{
 };
 use super::leaf::{FitText, MaterialName, UncertainSize};
 use super::leaf::{MaterialKeys, MethodWord, Roughness, SmoothingAtWord, SmoothingText, Version};
+use super::population_keys::PopulationKeys;
 use super::written::{At, Line, NotYet, Note, TextOr, Written};
 use crate::quantity::{Angle, Force, Length, Number, NumberRange, Pressure, Speed, Temperature, Torque};
 
@@ -19,7 +20,7 @@ use crate::quantity::{Angle, Force, Length, Number, NumberRange, Pressure, Speed
 pub const VERSION: u32 = 1;
 
 /// Keys that are known but whose subject is not calculated yet, in any section.
-pub(crate) const NOT_YET: &[&str] = &["rings", "fits", "order", "bearing", "steps"];
+pub(crate) const NOT_YET: &[&str] = &["bearing"];
 
 /// The sections with their keys, for a key that was put into the wrong one.
 pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
@@ -61,9 +62,25 @@ pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
             "yield_safety",
             "fracture_safety",
             "press_force",
+            "hub_temperature",
             "allow",
             "plastic_share",
             "yield_rule",
+        ],
+    ),
+    (
+        "population",
+        &[
+            "hole",
+            "shaft",
+            "hub_roughness",
+            "shaft_roughness",
+            "friction",
+            "pressing_friction",
+            "hub_youngs_modulus",
+            "shaft_youngs_modulus",
+            "hub_temperature",
+            "shaft_temperature",
         ],
     ),
 ];
@@ -105,7 +122,7 @@ pub(crate) struct JointFile {
     /// The outer part.
     pub(crate) hub: Option<At<HubKeys>>,
     /// The fit: a callout such as H7/s6 or FN 4, or the limits of hole and shaft, or two measured parts.
-    pub(crate) fit: Option<At<TextOr<FitText, FitKeys>>>,
+    pub(crate) fit: Option<GivenFit>,
     /// Coefficients of friction. Silent: from the library by pair of materials and method of assembly.
     pub(crate) friction: Option<At<TextOr<FrictionText, FrictionKeys>>>,
     /// Service states. Silent: one state at shop temperature without load.
@@ -118,12 +135,14 @@ pub(crate) struct JointFile {
     pub(crate) criterion: Option<Written<CriterionWord>>,
     /// What must be met.
     pub(crate) require: Option<At<RequireKeys>>,
+    /// How the parts scatter, for scatter and sort.
+    pub(crate) population: Option<At<PopulationKeys>>,
     /// Units on the terminal and in the report. Silent: metric.
     pub(crate) display: Option<Written<DisplayWord>>,
     /// Two rings or more from the innermost outwards, in place of shaft and hub.
     pub(crate) rings: Option<At<Vec<At<RingKeys>>>>,
     /// The fits between neighbouring rings, one less than there are rings.
-    pub(crate) fits: Option<At<Vec<At<TextOr<FitText, FitKeys>>>>>,
+    pub(crate) fits: Option<At<Vec<GivenFit>>>,
     /// Numbers of the fits in the order in which they are joined. Silent: from the innermost outwards.
     pub(crate) order: Option<At<Vec<Written<Number>>>>,
     #[schemars(skip)]
@@ -211,6 +230,9 @@ pub(crate) struct RingKeys {
     /// Ruling section that picks its strength. Silent: the thickness of its wall, or the diameter of a solid core.
     pub(crate) section: Option<Written<Length>>,
 }
+
+/// A fit as a callout, or with keys.
+pub(crate) type GivenFit = At<TextOr<FitText, FitKeys>>;
 
 /// The fit with hole and shaft apart, or two measured parts.
 #[derive(Debug, Deserialize, JsonSchema)]
@@ -348,6 +370,8 @@ pub(crate) struct RequireKeys {
     pub(crate) fracture_safety: Option<Written<Number>>,
     /// Greatest press-in force.
     pub(crate) press_force: Option<Written<Force>>,
+    /// Highest hub temperature while joining, such as what the oven gives; the limit of its material holds as well.
+    pub(crate) hub_temperature: Option<Written<Temperature>>,
     /// Whether a ductile hub may yield by design: elastic or plastic. Silent: elastic.
     pub(crate) allow: Option<Written<AllowWord>>,
     /// Greatest share of the hub's section that may be plastic. Silent: 0.3.

@@ -5,6 +5,7 @@
 //! | module | subject |
 //! |---|---|
 //! | [`read`](mod@read) | from text to joint, or to everything that is wrong |
+//! | [`population`] | how the parts scatter |
 //! | [`set`] | changes from the command line |
 //! | [`template`] | commented files to start from |
 //! | [`schema`](mod@schema) | JSON Schema for editors |
@@ -16,6 +17,8 @@ mod file;
 mod grow;
 mod leaf;
 mod place;
+pub mod population;
+mod population_keys;
 pub mod read;
 pub mod schema;
 pub mod set;
@@ -71,6 +74,8 @@ pub struct Joint {
     pub criterion: DuctileCriterion,
     /// What must be met.
     pub require: Requirements,
+    /// How the parts scatter; nothing said when the file is silent.
+    pub population: population::PopulationPlan,
     /// Units shown to the reader.
     pub display: UnitSystem,
     /// Every default that was taken, in the order of the joint file's keys.
@@ -259,7 +264,8 @@ pub struct AssemblyPlan {
     pub chamfer_angle: Sourced<f64>,
     /// Bath used when the method chills and shares.
     pub bath: Bath,
-    /// Highest hub temperature allowed by the user, K; the material's own limit holds as well.
+    /// Highest hub temperature allowed by the user, K, the lower of `assembly.hub_temperature_limit` and
+    /// `require.hub_temperature`; the material's own limit holds as well.
     pub hub_temperature_limit: Option<f64>,
 }
 

@@ -37,6 +37,23 @@ pub fn read(
     set: &[(String, String)],
     library: &Library,
 ) -> Result<Joint, Vec<Diagnostic>> {
+    read_as(text, file, set, library, FitKey::Required)
+}
+
+/// Whether a joint file must have the key `fit`.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(crate) enum FitKey {
+    Required,
+    Optional,
+}
+
+fn read_as(
+    text: &str,
+    file: &Path,
+    set: &[(String, String)],
+    library: &Library,
+    fit: FitKey,
+) -> Result<Joint, Vec<Diagnostic>> {
     let fault = |fault: Box<Diagnostic>| vec![fault.in_file(file)];
     refuse_unreadable(text.as_bytes()).map_err(fault)?;
     let plain = text.strip_prefix('\u{feff}').unwrap_or(text);
@@ -44,7 +61,7 @@ pub fn read(
     refuse_other_shapes(plain, &tree).map_err(fault)?;
     set::apply(&mut tree, set)?;
     let faults = Faults::default();
-    match understood(&tree, &faults, library) {
+    match understood(&tree, &faults, library, fit) {
         Some(joint) if faults.is_empty() => {
             Ok(Joint { set: set.to_vec(), digest: digest(text, set), ..joint })
         }
@@ -66,7 +83,40 @@ pub fn read_bytes(
     read(text, file, set, library)
 }
 
-fn understood(tree: &Tree, faults: &Faults, library: &Library) -> Option<Joint> {
+/// As [`read_bytes`], but the key `fit` may be missing: the joint then has no fit, for the one that chooses it.
+///
+/// # Errors
+/// As [`read_bytes`].
+///
+/// # Example
+/// ```
+/// use std::path::Path;
+/// use hubgrip::joint::read;
+/// use hubgrip::material::library::Library;
+///
+/// let text = "\
+/// joint_file: 1
+/// diameter: 60 mm
+/// length: 70 mm
+/// shaft: {material: C45+N}
+/// hub: {material: EN-GJL-250, outer_diameter: 110 mm}
+/// ";
+/// let (file, library) = (Path::new("joint.yaml"), Library::built_in());
+/// let joint = read::read_without_fit(text.as_bytes(), file, &[], &library).unwrap();
+/// assert!(joint.fits.is_empty());
+/// assert!(read::read(text, file, &[], &library).is_err());
+/// ```
+pub fn read_without_fit(
+    bytes: &[u8],
+    file: &Path,
+    set: &[(String, String)],
+    library: &Library,
+) -> Result<Joint, Vec<Diagnostic>> {
+    let text = text_of(bytes).map_err(|fault| vec![fault.in_file(file)])?;
+    read_as(text, file, set, library, FitKey::Optional)
+}
+
+fn understood(tree: &Tree, faults: &Faults, library: &Library, fit: FitKey) -> Option<Joint> {
     let root = tree.root();
     match JointFile::deserialize(Value { tree, node: root, faults }) {
         Ok(file) => {
@@ -77,7 +127,7 @@ fn understood(tree: &Tree, faults: &Faults, library: &Library) -> Option<Joint> 
             {
                 return None;
             }
-            validate::joint(&mut draft, &file)
+            validate::joint(&mut draft, &file, fit)
         }
         Err(refusal) => {
             faults.add(refusal.fault(root));

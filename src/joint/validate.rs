@@ -6,6 +6,7 @@ mod duty;
 mod fit;
 mod friction;
 mod parts;
+mod population;
 mod rings;
 mod smoothing;
 mod steps;
@@ -14,6 +15,7 @@ use super::diagnose::Fault;
 use super::draft::Draft;
 use super::file::{JointFile, RequireKeys, RingKeys};
 use super::leaf::{CriterionWord, DisplayWord};
+use super::read::FitKey;
 use super::written::{At, Written};
 use super::{Allow, Fit, Joint, Requirements, Ring};
 use crate::mechanics::criteria::DuctileCriterion;
@@ -55,14 +57,14 @@ const FRACTURE_SAFETY: (f64, &str) = (
 );
 
 /// The joint, unless something is wrong.
-pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
+pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) -> Option<Joint> {
     refuse_what_is_not_calculated(draft, file);
     let (length, relief) = lengths(draft, file);
     let method = assembly::method(draft, file);
     let shop = assembly::shop_temperature(draft, file);
     let Body { diameter, rings, fits, order } = match &file.rings {
         Some(list) => many_rings(draft, file, list),
-        None => two_parts(draft, file),
+        None => two_parts(draft, file, fit_key),
     };
     let slices =
         if file.rings.is_some() { Some(Vec::new()) } else { steps::slices(draft, file, diameter, length) };
@@ -72,6 +74,7 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
     let smoothing = smoothing::smoothing(draft, file, rings.as_deref(), method);
     let criterion = criterion(draft, file);
     let require = requirements(draft, file.require.as_ref());
+    let population = population::population(draft, file);
     let display = display(draft, file);
     if !draft.faults.is_empty() {
         return None;
@@ -96,6 +99,7 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile) -> Option<Joint> {
         smoothing: smoothing?,
         criterion: criterion?,
         require: require?,
+        population,
         display: display?,
         defaults,
         remarks: std::mem::take(&mut draft.remarks),
@@ -112,7 +116,7 @@ struct Body {
     order: Option<Vec<usize>>,
 }
 
-fn two_parts(draft: &mut Draft<'_>, file: &JointFile) -> Body {
+fn two_parts(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) -> Body {
     for (key, node) in
         [("fits", file.fits.as_ref().map(|at| at.node)), ("order", file.order.as_ref().map(|at| at.node))]
     {
@@ -126,8 +130,12 @@ fn two_parts(draft: &mut Draft<'_>, file: &JointFile) -> Body {
         .required(root, "diameter", "60 mm", file.diameter.as_ref())
         .and_then(|written| draft.positive(written));
     let rings = parts::rings(draft, file, diameter);
-    let fit = fit::fit(draft, file, diameter);
-    Body { diameter, rings, fits: fit.map(|fit| vec![fit]), order: Some(vec![0]) }
+    let fits = if fit_key == FitKey::Optional && file.fit.is_none() {
+        Some(Vec::new())
+    } else {
+        fit::fit(draft, file, diameter).map(|fit| vec![fit])
+    };
+    Body { diameter, rings, fits, order: Some(vec![0]) }
 }
 
 fn many_rings(draft: &mut Draft<'_>, file: &JointFile, list: &At<Vec<At<RingKeys>>>) -> Body {

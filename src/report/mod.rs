@@ -1,5 +1,6 @@
 //! What is shown of the findings: HTML with drawings and plots.
 
+pub mod choose;
 pub mod diagnostics;
 pub mod drawing;
 pub mod html;
@@ -8,7 +9,9 @@ pub mod limits;
 pub mod materials;
 pub mod mathml;
 pub mod plot;
+pub mod scatter;
 pub mod service;
+pub mod sort;
 pub mod terminal;
 
 mod hatch;

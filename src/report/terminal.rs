@@ -13,9 +13,9 @@ use crate::tolerance::{Character, Extremes};
 /// Width of the text.
 pub const WIDTH: usize = 80;
 
-const GOOD: Style = AnsiColor::Green.on_default().bold();
-const BAD: Style = AnsiColor::Red.on_default().bold();
-const HEADING: Style = Style::new().bold();
+pub(super) const GOOD: Style = AnsiColor::Green.on_default().bold();
+pub(super) const BAD: Style = AnsiColor::Red.on_default().bold();
+pub(super) const HEADING: Style = Style::new().bold();
 
 /// The title and the three answers alone.
 pub fn summary(findings: &Findings) -> String {
@@ -41,18 +41,18 @@ pub fn text(findings: &Findings) -> String {
 }
 
 /// Appends a line; writing to a string cannot fail.
-fn line(out: &mut String, text: impl AsRef<str>) {
+pub(super) fn line(out: &mut String, text: impl AsRef<str>) {
     out.push_str(text.as_ref().trim_end());
     out.push('\n');
 }
 
-fn heading(out: &mut String, text: &str) {
+pub(super) fn heading(out: &mut String, text: &str) {
     line(out, "");
     line(out, format!("{HEADING}{text}{HEADING:#}"));
 }
 
 /// Wrapped text with a hanging indent.
-fn paragraph(out: &mut String, first: &str, text: &str) {
+pub(super) fn paragraph(out: &mut String, first: &str, text: &str) {
     let rest = " ".repeat(first.chars().count());
     let options =
         textwrap::Options::new(WIDTH).initial_indent(first).subsequent_indent(&rest).break_words(false);
@@ -176,14 +176,14 @@ pub fn verdict_sentence(verdict: &Verdict, system: UnitSystem) -> String {
     format!("{} {found}{required}; {}", verdict.subject, verdict.at)
 }
 
-fn table(header: &[String]) -> Table {
+pub(super) fn table(header: &[String]) -> Table {
     let mut table = Table::new();
     table.load_style(presets::NOTHING).set_header(header.to_vec());
     table
 }
 
 /// A table whose columns from `numbers` on are right-aligned.
-fn print_table(out: &mut String, mut table: Table, numbers: usize) {
+pub(super) fn print_table(out: &mut String, mut table: Table, numbers: usize) {
     for (index, column) in table.column_iter_mut().enumerate() {
         column.set_padding((if index == 0 { 0 } else { 1 }, 1));
         if index >= numbers {
@@ -307,13 +307,13 @@ fn interfaces(out: &mut String, findings: &Findings) {
     heading(out, "Interfaces, shop temperature, at rest");
     let unit = |measure| display_unit(measure, joint.display).name;
     let mut table = table(&[
+        "interface".to_owned(),
         "between".to_owned(),
-        "fit".to_owned(),
         format!("loosest {}", unit(Measure::Pressure)),
         "mean".to_owned(),
         "tightest".to_owned(),
     ]);
-    for (index, fit) in joint.fits.iter().enumerate() {
+    for index in 0..joint.fits.len() {
         let names = joint.rings.get(index..index + 2).unwrap_or_default();
         let between: Vec<&str> = names.iter().map(|ring| ring.name.as_str()).collect();
         let pressure = |pair: &PairFindings| {
@@ -326,8 +326,8 @@ fn interfaces(out: &mut String, findings: &Findings) {
             })
         };
         table.add_row(vec![
+            (index + 1).to_string(),
             plain(&between.join(" / ")),
-            fit.callout.clone(),
             pressure(&findings.extremes.loosest),
             pressure(&findings.extremes.mean),
             pressure(&findings.extremes.tightest),
@@ -341,7 +341,7 @@ fn slices(out: &mut String, findings: &Findings) {
     if joint.slices.is_empty() {
         return;
     }
-    heading(out, "Along the joint: each slice by itself is good to 10 to 15 %, the total to a few percent");
+    heading(out, "Along the joint: a slice is good to 10 to 15 %, the total to a few percent");
     let size = display_unit(Measure::Size, joint.display).name;
     let pressure = display_unit(Measure::Pressure, joint.display).name;
     let mut table = table(&[

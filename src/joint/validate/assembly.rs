@@ -72,10 +72,16 @@ pub(super) fn plan(
             Some(Bath::DryIce)
         }
     };
-    let hub_temperature_limit = match keys.and_then(|keys| keys.hub_temperature_limit.as_ref()) {
-        Some(given) => Some(hub_limit(draft, given, shop)?),
-        None => None,
-    };
+    let limits = [
+        keys.and_then(|keys| keys.hub_temperature_limit.as_ref()),
+        file.require.as_ref().and_then(|at| at.value.hub_temperature.as_ref()),
+    ];
+    let mut hub_temperature_limit: Option<f64> = None;
+    for given in limits.into_iter().flatten() {
+        let limit = hub_limit(draft, given, shop)?;
+        hub_temperature_limit = Some(hub_temperature_limit.map_or(limit, |lower| lower.min(limit)));
+    }
+    remark_on_idle_limits(draft, file, method);
     Some(AssemblyPlan {
         method: method?,
         shop_temperature: shop?,
@@ -140,6 +146,23 @@ fn chamfer_angle(draft: &mut Draft<'_>, given: Option<&Written<Angle>>) -> Optio
     }
     draft.refuse(given, "must be more than 0 deg and less than 90 deg, counted from the axis");
     None
+}
+
+/// A limit of the other way to join is not judged, and that must not pass unseen.
+fn remark_on_idle_limits(draft: &mut Draft<'_>, file: &JointFile, method: Option<Method>) {
+    let Some(require) = file.require.as_ref().map(|at| &at.value) else { return };
+    let heats = matches!(method, Some(Method::HeatHub | Method::HeatAndChill));
+    if require.hub_temperature.is_some() && !heats {
+        draft.remarks.push(
+            "The limit require.hub_temperature is not judged: the method of assembly does not heat the hub."
+                .into(),
+        );
+    }
+    if require.press_force.is_some() && method.is_some_and(|method| method != Method::Press) {
+        draft
+            .remarks
+            .push("The limit require.press_force is not judged: the method of assembly is not press.".into());
+    }
 }
 
 fn hub_limit(draft: &Draft<'_>, given: &Written<Temperature>, shop: Option<f64>) -> Option<f64> {

@@ -142,7 +142,8 @@ impl Targets<'_> {
 
 /// Leaders that end within the hub stand at even distances along it.
 fn along(row: usize, rows: usize, place: Place) -> f64 {
-    let width = place.hub_right - place.hub_left - place.relief;
+    // Along a wide hub they stay together, so that the lettering has room on the right.
+    let width = (place.hub_right - place.hub_left - place.relief).min(13.0 * (rows as f64 - 1.0));
     place.hub_left + width * (row as f64 - 0.5) / (rows as f64 - 1.0)
 }
 

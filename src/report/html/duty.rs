@@ -4,12 +4,11 @@ use maud::{Markup, html};
 
 use super::Sheet;
 use super::table::{NONE, aligned, cell, safety, scrolling};
-use super::work;
 use crate::findings::StateFindings;
 use crate::joint::DutyState;
 use crate::report::units::Measure;
 
-/// The tables, then the joint at work.
+/// The tables.
 pub(super) fn body(sheet: Sheet) -> Markup {
     html! {
         (scrolling("Loads of the duty states", "duty", &loads(sheet)))
@@ -18,9 +17,6 @@ pub(super) fn body(sheet: Sheet) -> Markup {
             "Slip is judged at the loosest pair, strength at the tightest. Temperatures are those of the rings from the "
             "innermost outwards, in a radial gradient from face to face."
         }
-        (work::interfaces(sheet))
-        (work::slices(sheet))
-        (work::sentences(sheet))
     }
 }
 

@@ -2,8 +2,8 @@
 
 use maud::{Markup, html};
 
-use super::Sheet;
 use super::table::{aligned, cell, pair_heads, range_cell, scrolling};
+use super::{Sheet, part};
 use crate::findings::{InterfaceFindings, OnsetOfYield, PairFindings, RingStress};
 use crate::joint::{Ring, SmoothingAt};
 use crate::material::{Kind, Range};
@@ -30,7 +30,7 @@ pub(super) fn body(sheet: Sheet) -> Markup {
             @let hub = joint.rings.last().map_or("hub", |ring| ring.name.as_str());
             p {
                 "The stresses of the " (hub) " in this table are those of an elastic " (hub) ": they show how far it is "
-                "beyond its elastic limit. Part 4 shows it as it yields, part 5 tells how far."
+                "beyond its elastic limit. As it yields it is shown in " (part("pictures")) " and told in " (part("service")) "."
             }
         }
         @if let Some(onset) = &sheet.findings.onset_of_yield { p { (first_yield(sheet, onset)) } }

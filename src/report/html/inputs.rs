@@ -2,8 +2,8 @@
 
 use maud::{Markup, html};
 
-use super::Sheet;
 use super::table::{range_text, safety, scrolling};
+use super::{Sheet, part};
 use crate::findings::bath_name;
 use crate::joint::{Allow, Joint, Method, Ring, Slice, SmoothingAt};
 use crate::material::{Kind, Range};
@@ -73,7 +73,7 @@ pub(super) fn body(sheet: Sheet) -> Markup {
         }
     };
     html! {
-        p { "The duty states stand in part 5, the properties of the materials in part 9." }
+        p { "The duty states stand in " (part("duty")) ", the properties of the materials in " (part("materials")) "." }
         (scrolling("Inputs", "inputs", &table))
     }
 }

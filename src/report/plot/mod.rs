@@ -1,21 +1,28 @@
-//! Plots: tolerance zones, stress through the walls, press force along the travel, diameters against temperature.
+//! Plots: tolerance zones, stress through the walls, press force along the travel, diameters against temperature,
+//! what is left of the grip at work.
 
 mod axis;
 mod chart;
+mod envelope;
+mod population;
 mod press;
 mod stress;
 mod tags;
 mod temperature;
 mod walls;
+mod windows;
 mod zones;
 
 use maud::Markup;
 
 use crate::findings::Findings;
 
+pub use envelope::envelope;
+pub use population::population;
 pub use press::press_force;
 pub use stress::stress;
 pub use temperature::diameters;
+pub use windows::interference_windows;
 pub use zones::tolerance_zones;
 
 /// Whether the hub may yield and does, so that its elastic stresses are not those it has.

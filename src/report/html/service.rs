@@ -1,4 +1,4 @@
-//! The joint at work: every interface in every state, the slices of a stepped joint, and what loosens it.
+//! The joint at work: what loosens it, which fits govern, slices, yielding, bending, length.
 
 use maud::{Markup, html};
 
@@ -9,8 +9,17 @@ use crate::report::service;
 use crate::report::typeset::sentence;
 use crate::report::units::Measure;
 
+/// Sentences, then every interface and the slices of a stepped joint.
+pub(super) fn body(sheet: Sheet) -> Markup {
+    html! {
+        ul { @for text in service::sentences(sheet.findings) { li { (sentence(&text)) } } }
+        (interfaces(sheet))
+        (slices(sheet))
+    }
+}
+
 /// Contact pressure at each interface; with two rings the other tables say it all.
-pub(super) fn interfaces(sheet: Sheet) -> Markup {
+fn interfaces(sheet: Sheet) -> Markup {
     let findings = sheet.findings;
     let joint = &findings.joint;
     if joint.rings.len() == 2 {
@@ -61,7 +70,7 @@ fn pressure(sheet: Sheet, interface: Option<&InterfaceFindings>) -> Markup {
 }
 
 /// The slices of a stepped joint, from the end that enters first.
-pub(super) fn slices(sheet: Sheet) -> Markup {
+fn slices(sheet: Sheet) -> Markup {
     let extremes = &sheet.findings.extremes;
     if extremes.loosest.slices.is_empty() {
         return html! {};
@@ -97,16 +106,5 @@ pub(super) fn slices(sheet: Sheet) -> Markup {
         h3 { "Contact pressure along the joint" }
         (scrolling("Contact pressure along the joint", "slices", &table))
         p.small { "From the end that enters first. The total is good to a few per cent, each slice by itself to 10 to 15 %." }
-    }
-}
-
-/// What speed, heat, yielding, bending and length do.
-pub(super) fn sentences(sheet: Sheet) -> Markup {
-    let sentences = service::sentences(sheet.findings);
-    html! {
-        @if !sentences.is_empty() {
-            h3 { "At work" }
-            ul { @for text in &sentences { li { (sentence(text)) } } }
-        }
     }
 }
