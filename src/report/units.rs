@@ -16,6 +16,7 @@ pub(crate) enum Measure {
     Modulus,
     Force,
     Torque,
+    Speed,
     Temperature,
     Density,
     Expansion,
@@ -124,6 +125,7 @@ fn shared(measure: Measure) -> Option<quantity::Measure> {
         Measure::Pressure => quantity::Measure::Pressure,
         Measure::Force => quantity::Measure::Force,
         Measure::Torque => quantity::Measure::Torque,
+        Measure::Speed => quantity::Measure::Speed,
         Measure::Temperature => quantity::Measure::Temperature,
         _ => return None,
     })

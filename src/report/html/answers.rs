@@ -49,7 +49,7 @@ fn hold(sheet: Sheet) -> String {
     let Some(verdict) = governing(sheet, Question::Hold) else { return String::new() };
     match (verdict.ok, verdict.found) {
         (true, Some(found)) => format!("holds with {} against slip ({})", safety(found), verdict.at),
-        (true, None) => "nothing loads the joint in the duty states".to_owned(),
+        (true, None) => format!("holding is not judged ({})", verdict.at),
         (false, found) => format!("does NOT hold: {}", shortfall(sheet.units, verdict, found)),
     }
 }

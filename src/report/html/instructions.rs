@@ -41,7 +41,11 @@ pub(super) fn body(sheet: Sheet) -> Markup {
     }
     steps.push(dismantle(sheet));
     html! {
-        p { "Method: " strong { (super::inputs::method(method)) } ". All figures are for the tightest pair, unless the step says otherwise." }
+        p {
+            "Method: " strong { (super::inputs::method(method)) }
+            ". All figures are for the tightest pair, unless the step says otherwise."
+            @if sheet.findings.joint.fits.len() > 1 { " " (order(sheet)) }
+        }
         ol.steps {
             @for step in &steps {
                 li {
@@ -67,12 +71,22 @@ fn cautions(all: &[Caution], subject: &str) -> Markup {
     }
 }
 
-/// Names of the two parts that are joined last: the outermost ring and the one inside of it.
+/// Names of the two parts that are joined last, the inner one first.
 pub(super) fn names<'a>(sheet: Sheet<'a>) -> (&'a str, &'a str) {
-    let name = |ring: Option<&'a Ring>, other| ring.map_or(other, |ring| ring.name.as_str());
-    let mut rings = sheet.findings.joint.rings.iter().rev();
-    let hub = name(rings.next(), "hub");
-    (name(rings.next(), "shaft"), hub)
+    let (inner, outer) = sheet.findings.joint.joined_last();
+    (&inner.name, &outer.name)
+}
+
+/// In which order several rings are joined.
+fn order(sheet: Sheet) -> String {
+    let joint = &sheet.findings.joint;
+    let name = |ring: usize| joint.rings.get(ring).map_or("", |ring| ring.name.as_str());
+    let steps: Vec<String> = joint
+        .order
+        .iter()
+        .map(|interface| format!("the {} into the {}", name(*interface), name(interface + 1)))
+        .collect();
+    format!("Join in this order: {}. The steps below are for the last of them.", steps.join(", then "))
 }
 
 fn check_parts(sheet: Sheet) -> Step {
@@ -159,11 +173,9 @@ fn gauge(sheet: Sheet) -> (f64, f64) {
     let joint = &sheet.findings.joint;
     let shop = joint.assembly.shop_temperature;
     let clearance = sheet.findings.assembly.clearance;
-    let at_shop = |ring: Option<&Ring>, size: f64| {
-        size * (1.0 + ring.and_then(|ring| ring.material.expansion.strain(shop).ok()).unwrap_or(0.0))
-    };
-    let Some(fit) = joint.fits.last() else { return (0.0, 0.0) };
-    let (hub, shaft) = (joint.rings.last(), joint.rings.iter().rev().nth(1));
+    let at_shop = |ring: &Ring, size: f64| size * (1.0 + ring.material.expansion.strain(shop).unwrap_or(0.0));
+    let Some(fit) = joint.fits.get(joint.last_interface()) else { return (0.0, 0.0) };
+    let (shaft, hub) = joint.joined_last();
     let bore = at_shop(hub, fit.limits.nominal + fit.limits.hole.lower);
     let pin = at_shop(shaft, fit.limits.nominal + fit.limits.shaft.upper);
     (pin + clearance, bore - clearance)

@@ -96,6 +96,16 @@ const PARTS: [Part; 11] = [
     Part { id: "notes", heading: "Cautions and notes", body: notes::body },
 ];
 
+/// Number and link of a part, such as `part 5`.
+fn part(id: &str) -> Markup {
+    html! { a href=(format!("#{id}")) { "part " (number_of(id)) } }
+}
+
+/// Number of a part, before the number of a heading within it.
+fn number_of(id: &str) -> usize {
+    PARTS.iter().position(|part| part.id == id).map_or(0, |place| place + 1)
+}
+
 fn contents() -> Markup {
     html! {
         nav aria-label="Contents" {

@@ -4,8 +4,8 @@ use std::collections::BTreeMap;
 
 use maud::{Markup, html};
 
-use super::Sheet;
 use super::table::scrolling;
+use super::{Sheet, number_of};
 use crate::findings::expression::{Expression, Symbol};
 use crate::findings::{WorksheetLine, WorksheetSection};
 use crate::report::mathml;
@@ -22,7 +22,7 @@ pub(super) fn body(sheet: Sheet) -> Markup {
             "A number put in is the printed result of the line that defines its symbol, in the unit given there."
         }
         @for (index, section) in sheet.findings.worksheet.iter().enumerate() {
-            h3 { span.number { "7." (index + 1) } " " (section.title) }
+            h3 { span.number { (number_of("worksheet")) "." (index + 1) } " " (section.title) }
             (scrolling(&section.title, "worksheet", &table(section, index + 1, &mut values)))
             (plain_twin(section, &values))
         }

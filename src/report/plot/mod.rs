@@ -9,10 +9,13 @@ mod press;
 mod stress;
 mod tags;
 mod temperature;
+mod walls;
 mod windows;
 mod zones;
 
 use maud::Markup;
+
+use crate::findings::Findings;
 
 pub use envelope::envelope;
 pub use population::population;
@@ -21,6 +24,11 @@ pub use stress::stress;
 pub use temperature::diameters;
 pub use windows::interference_windows;
 pub use zones::tolerance_zones;
+
+/// Whether the hub may yield and does, so that its elastic stresses are not those it has.
+pub(in crate::report) fn yields_by_design(findings: &Findings) -> bool {
+    walls::plastic(findings).is_some()
+}
 
 /// A plot with the sentence that says what to see.
 pub struct Plot {

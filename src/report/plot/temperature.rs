@@ -16,8 +16,8 @@ const POINTS: usize = 49;
 pub fn diameters(findings: &Findings) -> Option<Plot> {
     let joint = &findings.joint;
     let units = Units { system: joint.display };
-    let [.., shaft, hub] = joint.rings.as_slice() else { return None };
-    let fit = joint.fits.last()?;
+    let fit = joint.fits.get(joint.last_interface())?;
+    let (shaft, hub) = joint.joined_last();
     let nominal = fit.limits.nominal;
     let (bore, pin) = (nominal + fit.limits.hole.lower, nominal + fit.limits.shaft.upper);
     let shop = joint.assembly.shop_temperature;
