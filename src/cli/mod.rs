@@ -1,5 +1,6 @@
 //! The command line: one file a command, one place where it ends.
 
+mod batch;
 mod check;
 mod choose;
 mod completions;
@@ -11,6 +12,7 @@ mod new;
 mod output;
 mod report;
 mod schema;
+mod whole;
 
 use std::path::PathBuf;
 use std::process::ExitCode;
@@ -70,6 +72,7 @@ enum Command {
     Report(report::Arguments),
     Limits(limits::Arguments),
     Choose(choose::Arguments),
+    Batch(batch::Arguments),
     Materials(materials::Arguments),
     New(new::Arguments),
     Schema(schema::Arguments),
@@ -110,6 +113,7 @@ fn run(line: CommandLine, output: &Output) -> Result<Ending, Failure> {
         Command::Report(arguments) => report::run(&arguments, folder, output),
         Command::Limits(arguments) => limits::run(&arguments, output),
         Command::Choose(arguments) => choose::run(&arguments, folder, output),
+        Command::Batch(arguments) => batch::run(&arguments, folder, output),
         Command::Materials(arguments) => materials::run(&arguments, folder, output),
         Command::New(arguments) => new::run(&arguments, output),
         Command::Schema(arguments) => schema::run(&arguments, output),
