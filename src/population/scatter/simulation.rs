@@ -377,8 +377,7 @@ impl Block {
                 warm.is_none().then_some(fixed),
             );
             let pressures = &pressures[..count];
-            let highest =
-                pressures.iter().fold(0.0, |highest: f64, p| if *p > highest { *p } else { highest });
+            let highest = greatest(pressures);
             for (ring, failures) in model.rings.iter().zip(&mut tally.failures) {
                 let Some(failures) = failures.get_mut(condition) else { continue };
                 let (limit, wanted) = (ring.pressure, ring.pressure / ring.required);
@@ -426,6 +425,19 @@ fn open(value: f64) -> f64 {
 #[inline]
 fn lesser(one: f64, other: f64) -> f64 {
     if one < other { one } else { other }
+}
+
+/// The greatest value, at least zero, in lanes that the compiler keeps in one register.
+fn greatest(values: &[f64]) -> f64 {
+    let mut lanes = [0.0f64; 8];
+    let parts = values.chunks_exact(lanes.len());
+    let rest = parts.remainder().iter().copied().fold(0.0, f64::max);
+    for part in parts {
+        for (lane, value) in lanes.iter_mut().zip(part) {
+            *lane = if *value > *lane { *value } else { *lane };
+        }
+    }
+    lanes.into_iter().fold(rest, f64::max)
 }
 
 /// How many values meet each of two conditions.
