@@ -51,7 +51,7 @@ fn counted(estimate: Estimate) -> String {
     let (low, high) = estimate.interval();
     if !estimate.is_quotable() {
         return format!(
-            "{} of {}, too few to quote a share (below 100/n); {} % sure: at most {}",
+            "{} of {}, no share is quoted below 100/n; {} % sure: at most {}",
             estimate.count,
             estimate.samples,
             CONFIDENCE * 100.0,
@@ -133,7 +133,7 @@ fn agreement(scatter: &Scatter) -> String {
         .map(|event| event.what.as_str())
         .collect();
     if apart.is_empty() {
-        "The two engines agree: every count lies within 4 standard errors of the integrated probability."
+        "The two engines agree: every count lies within 4 standard errors (and the grain of 4 counts) of what is integrated."
             .to_owned()
     } else {
         format!("THE TWO ENGINES DO NOT AGREE on {}: trust neither.", apart.join(", "))
@@ -153,11 +153,11 @@ fn quantities(out: &mut String, told: &Told<'_>) {
     let system = told.joint.display;
     let percent = |level: f64| format!("{} %", number(level * 100.0, 5));
     let picked = [0usize, 1, 3, 5, 6];
-    let _ = write!(out, "{:<25}{:>9}", "", "least*");
+    let _ = write!(out, "{:<25}{:>9}", "", "least");
     for index in picked {
         let _ = write!(out, "{:>9}", percent(LEVELS[index]));
     }
-    line(out, format!("{:>9}", "greatest*"));
+    line(out, format!("{:>9}", "greatest"));
     let row = |out: &mut String,
                name: &str,
                spread: &Spread,
@@ -188,8 +188,8 @@ fn quantities(out: &mut String, told: &Told<'_>) {
     }
     paragraph(
         out,
-        "* ",
-        "the arithmetic limits: the loosest and the tightest pair with the ends of the friction range; a share of the parts \
+        "",
+        "least and greatest are the arithmetic limits: the loosest and the tightest pair with the ends of the friction range; a share of the parts \
          may lie outside them when the distributions are not cut",
     );
     line(out, "");
