@@ -15,6 +15,7 @@ import json
 import math
 import os
 import platform
+import resource
 import subprocess
 import sys
 import tempfile
@@ -32,6 +33,7 @@ def population(arguments):
     import numpy as np
 
     n, seed, e_hub, e_shaft, strength = arguments
+    begin = time.process_time()
     rng = np.random.Generator(np.random.PCG64(seed))
     hole = rng.normal(12e-6, 4e-6, n)
     shaft = rng.normal(50e-6, 3e-6, n)
@@ -59,7 +61,7 @@ def population(arguments):
         (float(x.mean()), float(x.std()), np.percentile(x, LEVELS).tolist())
         for x in (interference, grip, pressure, hub_stress, torque, force)
     ]
-    return slip, yields, rows
+    return slip, yields, rows, time.process_time() - begin
 
 
 def numpy_side(samples, processes, moduli):
@@ -76,25 +78,29 @@ def numpy_side(samples, processes, moduli):
     slip = sum(one[0] for one in found) / len(found)
     yields = sum(one[1] for one in found) / len(found)
     torque = sum(one[2][4][0] for one in found) / len(found)
-    return len(work) * each / elapsed, slip, yields, torque
+    seconds = sum(one[3] for one in found)
+    return len(work) * each / elapsed, slip, yields, torque, len(work) * each / seconds
 
 
 def hubgrip_side(binary, samples, threads):
     """Samples per second of the whole process, and what it found."""
     environment = dict(os.environ, RAYON_NUM_THREADS=str(threads))
+    before = resource.getrusage(resource.RUSAGE_CHILDREN)
     start = time.perf_counter()
     run = subprocess.run(
         [binary, "scatter", str(JOINT), "--samples", str(samples), "--json"],
         check=True, capture_output=True, env=environment,
     )
     elapsed = time.perf_counter() - start
+    after = resource.getrusage(resource.RUSAGE_CHILDREN)
+    seconds = after.ru_utime + after.ru_stime - before.ru_utime - before.ru_stime
     found = json.loads(run.stdout)
     hub = next(event for event in found["yield"] if "hub" in event["what"])
     torque = next(q for q in found["quantities"] if q["quantity"] == "torque capacity")
     slip = found["slip"][0]
     return (
         samples / elapsed, slip["counted"]["count"] / samples, hub["counted"]["count"] / samples, torque["counted_mean"],
-        slip["probability"],
+        samples / seconds, slip["probability"],
     )
 
 
@@ -158,14 +164,17 @@ def main():
     for threads in sorted({1, cores}):
         ours = max((hubgrip_side(binary, 10 * options.samples, threads) for _ in range(options.runs)), key=lambda r: r[0])
         theirs = max((numpy_side(options.samples, threads, moduli) for _ in range(options.runs)), key=lambda r: r[0])
-        tolerance = 5 * math.sqrt(ours[4] / options.samples)
+        tolerance = 5 * math.sqrt(ours[5] / options.samples)
         if abs(ours[1] - theirs[1]) > tolerance or abs(ours[3] / theirs[3] - 1) > 1e-3:
             sys.exit(f"the two do not compute the same: {ours} against {theirs}")
-        rows.append((threads, ours[0], theirs[0]))
+        rows.append((threads, ours[0], theirs[0], ours[4], theirs[4]))
     lines = [
-        "| cores | hubgrip scatter, pairs/s | numpy script, pairs/s | ratio |",
-        "|--:|--:|--:|--:|",
-        *(f"| {n} | {a / 1e6:.1f} million | {b / 1e6:.2f} million | {a / b:.1f} |" for n, a, b in rows),
+        "| cores | hubgrip scatter, million pairs/s | numpy script | ratio | ns of a core for a pair | numpy script | ratio |",
+        "|--:|--:|--:|--:|--:|--:|--:|",
+        *(
+            f"| {n} | {a / 1e6:.1f} | {b / 1e6:.2f} | {a / b:.1f} | {1e9 / c:.1f} | {1e9 / d:.0f} | {c / d:.1f} |"
+            for n, a, b, c, d in rows
+        ),
         "",
         f"Measured by `python3 benches/compare.py` on {machine()}, numpy {numpy.__version__}, "
         f"Python {platform.python_version()}; the fastest of {options.runs} runs, start of the process included.",

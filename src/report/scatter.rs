@@ -189,14 +189,14 @@ fn quantities(out: &mut String, told: &Told<'_>) {
          may lie outside them when the distributions are not cut",
     );
     line(out, "");
-    line(out, format!("{:<25}{:>14}{:>14}{:>14}{:>13}", "", "mean", "counted", "sd", "counted"));
+    line(out, format!("{:<26}{:>14}{:>14}{:>13}{:>13}", "", "mean", "counted", "sd", "counted"));
     for spread in &told.scatter.quantities {
         let unit = display_unit(measure(spread.quantity), system);
         let value = |si: f64| number(si * unit.per_si, 5);
         line(
             out,
             format!(
-                "{:<25}{:>14}{:>14}{:>14}{:>13}",
+                "{:<26}{:>14}{:>14}{:>13}{:>13}",
                 format!("{}, {}", spread.quantity.name(), unit.name),
                 value(spread.moments.0),
                 value(spread.sampled_moments.0),

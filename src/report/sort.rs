@@ -88,7 +88,7 @@ fn table(out: &mut String, sorted: &Sorted<'_>) {
     line(
         out,
         format!(
-            "{:>2} {:>15} {:>15} {:>7} {:>7} {:>8} {:>14} {:>7}",
+            "{:>2} {:>14} {:>14} {:>7} {:>7} {:>8} {:>14} {:>7}",
             "",
             format!("holes, {unit}"),
             format!("shafts, {unit}"),
@@ -109,7 +109,7 @@ fn table(out: &mut String, sorted: &Sorted<'_>) {
         line(
             out,
             format!(
-                "{:>2} {:>15} {:>15} {:>7} {:>7} {:>8} {:>14} {:>7}",
+                "{:>2} {:>14} {:>14} {:>7} {:>7} {:>8} {:>14} {:>7}",
                 number + 1,
                 limits(group.hole),
                 limits(group.shaft),

@@ -41,8 +41,8 @@ impl Panel {
         let mut coefficients = [0.0; POINTS];
         for (n, coefficient) in coefficients.iter_mut().enumerate() {
             let mut sum = 0.0;
-            for i in 0..POINTS {
-                sum += rule.weights[i] * nodes[i] * rule.polynomials[n][i];
+            for ((weight, node), polynomial) in rule.weights.iter().zip(&nodes).zip(&rule.polynomials[n]) {
+                sum += weight * node * polynomial;
             }
             *coefficient = 0.5 * (2.0 * n as f64 + 1.0) * sum;
         }
