@@ -98,7 +98,8 @@ fn refuse_one_place_for_two(arguments: &Arguments) -> Result<(), Failure> {
     let is_stdout = |path: &PathBuf| path.as_os_str() == "-";
     let findings = arguments.output.as_ref().filter(|path| !is_stdout(path)).map(real);
     let errors = arguments.errors.as_ref().filter(|path| !is_stdout(path)).map(real);
-    let both_stdout = arguments.output.as_ref().is_none_or(is_stdout) && arguments.errors.as_ref().is_some_and(is_stdout);
+    let both_stdout =
+        arguments.output.as_ref().is_none_or(is_stdout) && arguments.errors.as_ref().is_some_and(is_stdout);
     if both_stdout || (findings.is_some() && findings == errors) {
         return Err(Diagnostic::new("findings and errors go to the same place")
             .with_help("give --errors a file of its own")
@@ -188,7 +189,8 @@ fn refused(error: BatchError, arguments: &Arguments) -> Failure {
     let place = |path: &Option<PathBuf>| path.clone().unwrap_or_else(|| PathBuf::from("<stdout>"));
     match error {
         BatchError::Head(faults) => {
-            let at_head = |fault: Diagnostic| if fault.place.is_some() { fault.in_file(&table) } else { fault };
+            let at_head =
+                |fault: Diagnostic| if fault.place.is_some() { fault.in_file(&table) } else { fault };
             Failure::Input(faults.into_iter().map(at_head).collect())
         }
         BatchError::Output(error) => unwritable(&place(&arguments.output), &error),

@@ -73,7 +73,8 @@ impl<R: Read> Source<R> {
     /// The heads of the columns.
     pub(super) fn heads(&mut self) -> Result<Vec<String>, BatchError> {
         let heads = self.reader.byte_headers().map_err(BatchError::of_csv)?;
-        let heads: Vec<String> = heads.iter().map(|head| String::from_utf8_lossy(head).into_owned()).collect();
+        let heads: Vec<String> =
+            heads.iter().map(|head| String::from_utf8_lossy(head).into_owned()).collect();
         self.since_row.set(0);
         Ok(heads)
     }
