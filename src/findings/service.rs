@@ -82,8 +82,26 @@ pub struct PlasticFindings {
     pub mean: PlasticState,
     /// The tightest pair.
     pub tightest: PlasticState,
+    /// What the states leave of the hub; none unless it may yield by design.
+    pub worn: Option<WornHub>,
     /// The solved joint, for curves.
     pub joint: PlasticJoint,
+}
+
+/// A hub that has been through the hardest of all states, at the loosest and the tightest pair.
+///
+/// Its bore stays larger by its permanent growth, and from then on the joint is elastic with an interference that is
+/// less by it.
+#[derive(Debug, Clone, PartialEq)]
+pub struct WornHub {
+    /// Permanent growth of the bore of the loosest pair, m.
+    pub loosest: f64,
+    /// Permanent growth of the bore of the tightest pair, m.
+    pub tightest: f64,
+    /// The hub of the tightest pair under its hardest load.
+    pub hardest: PlasticState,
+    /// Index of the state with that load; none when it is the assembly.
+    pub state: Option<usize>,
 }
 
 /// The rings after one step of assembly.
@@ -101,6 +119,7 @@ pub(super) fn service(
     kernel: &Kernel<'_>,
     pairs: &Extremes<PairInterference>,
     duty: &[DutyFindings],
+    plastic: Option<PlasticFindings>,
 ) -> Result<ServiceFindings, FindingsError> {
     let loosening = loosening(joint, kernel, &pairs.loosest)?;
     let loosening_speed = loosening.first().and_then(|loosening| loosening.speed);
@@ -111,7 +130,7 @@ pub(super) fn service(
     Ok(ServiceFindings {
         envelope: envelope(joint, kernel, &pairs.loosest, duty, loosening_speed)?,
         loosening,
-        plastic: plastic(joint, kernel, pairs)?,
+        plastic,
         steps: steps(joint, kernel, &pairs.tightest)?,
         governing: governing(joint, kernel, pairs)?,
         length_factors: if simple {
@@ -130,9 +149,9 @@ fn loosening(
     kernel: &Kernel<'_>,
     loosest: &PairInterference,
 ) -> Result<Vec<Loosening>, FindingsError> {
-    let stack = kernel.stack(&loosest.effective, &kernel.shop);
+    let stack = kernel.stack(&loosest.grip, &kernel.shop);
     let mut speeds = stack.loosening_speeds()?;
-    for other in kernel.stacks(&loosest.effective, &kernel.shop).iter().skip(1) {
+    for other in kernel.stacks(&loosest.grip, &kernel.shop).iter().skip(1) {
         for (speed, own) in speeds.iter_mut().zip(other.loosening_speeds()?) {
             *speed = match (*speed, own) {
                 (Some(known), Some(own)) => Some(known.min(own)),
@@ -259,7 +278,7 @@ fn fatigue_of(joint: &Joint, index: usize, state: &DutyState) -> Option<Fatigue>
 }
 
 /// The elastic-plastic joint; none unless a ductile hub sits on a shaft of two rings of one section.
-fn plastic(
+pub(super) fn plastic(
     joint: &Joint,
     kernel: &Kernel<'_>,
     pairs: &Extremes<PairInterference>,
@@ -295,7 +314,7 @@ fn plastic(
     };
     let states = (at(&pairs.loosest), at(&pairs.mean), at(&pairs.tightest));
     let (Some(loosest), Some(mean), Some(tightest)) = states else { return Ok(None) };
-    Ok(Some(PlasticFindings { limits: *solved.limits(), loosest, mean, tightest, joint: solved }))
+    Ok(Some(PlasticFindings { limits: *solved.limits(), loosest, mean, tightest, worn: None, joint: solved }))
 }
 
 /// Clearance that keeps parts apart which are not joined yet, as a share of the diameter.

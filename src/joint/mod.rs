@@ -207,6 +207,8 @@ pub struct DutyState {
     pub rotating_bending: bool,
     /// Whether the torque reverses.
     pub reversing: bool,
+    /// Share of the contact pressure that relaxation leaves for holding, above 0 and at most 1.
+    pub relaxation: f64,
 }
 
 impl DutyState {
@@ -225,6 +227,7 @@ impl DutyState {
             radial_force: 0.0,
             rotating_bending: false,
             reversing: false,
+            relaxation: 1.0,
         }
     }
 }
