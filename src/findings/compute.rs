@@ -79,7 +79,7 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         let mut parts = Parts { pairs: &mut pairs, extremes: &mut extremes, duty: &mut duty };
         softening::soften(&joint, &kernel, plastic, &mut parts)?;
     }
-    let service = service::service(&joint, &kernel, &pairs, &duty, plastic)?;
+    let service = service::service(&joint, &kernel, &pairs, &extremes.tightest, &duty, plastic)?;
     let assembly = assembly_of::assembly(&joint, &extremes)?;
     let character =
         joint.fits.get(joint.last_interface()).map_or(Character::Clearance, |fit| fit.limits.character());

@@ -431,7 +431,8 @@ fn ring_stress(
     let (bore, rim) = (face(bore), face(rim));
     let (equivalent, strength) = match (ring.material.kind, criterion) {
         (Kind::Brittle, _) => {
-            let tension = |face: &FaceStress| criteria::greatest_principal(face.radial, face.hoop).max(0.0);
+            let share = ring.tension_share();
+            let tension = |face: &FaceStress| criteria::brittle(face.radial, face.hoop, share);
             (tension(&bore).max(tension(&rim)), ring.strength.tensile_strength)
         }
         (_, DuctileCriterion::VonMises) => (bore.von_mises.max(rim.von_mises), ring.strength.yield_strength),

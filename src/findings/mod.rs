@@ -17,7 +17,7 @@ pub use compute::{FindingsError, compute};
 pub use envelope::{Envelope, EnvelopeLine, EnvelopeMeaning, EnvelopeState};
 pub use kernel::after_smoothing;
 pub use service::{
-    Fatigue, GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings, WornHub,
+    Fatigue, GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings, ThinLiner, WornHub,
 };
 pub use verdicts::{combination, failure};
 

@@ -2,9 +2,10 @@
 
 use super::envelope::{Envelope, envelope};
 use super::kernel::{Condition, Kernel, PairInterference, free_strains};
-use super::{DutyFindings, FindingsError, RingStress};
+use super::{DutyFindings, FindingsError, InterfaceFindings, PairFindings, RingStress};
 use crate::joint::{DutyState, Joint};
 use crate::material::{Kind, Range};
+use crate::mechanics::buckling::Liner;
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::mechanics::finite_length::{LengthFactors, ShaftEnds, length_factors};
 use crate::mechanics::governing::{Extreme, StackQuantity, StressMeasure};
@@ -26,6 +27,8 @@ pub struct ServiceFindings {
     pub governing: Vec<GoverningRing>,
     /// Pressure at the mean and at a sharp edge over the thick-walled cylinder; none outside its validity.
     pub length_factors: Option<LengthFactors>,
+    /// The innermost part under pressure from outside; none unless it is a tube with a thin wall.
+    pub liner: Option<ThinLiner>,
     /// What is left of the pressure at speed and with a hot hub; none where it cannot be drawn.
     pub envelope: Option<Envelope>,
     /// Fatigue of the shaft at the hub edge for each state with rotating bending.
@@ -58,6 +61,19 @@ pub struct Fatigue {
     pub plain_strength: f64,
     /// Safety over the range of the notch factor.
     pub safety: Range,
+}
+
+/// The wall of a thin bush, which the housing presses inwards. Pressures Pa.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct ThinLiner {
+    /// Wall over mean diameter.
+    pub slenderness: f64,
+    /// Greatest contact pressure of the tightest pair, at the shop temperature and in every state.
+    pub pressure: f64,
+    /// Pressure below which the wall cannot buckle even by itself.
+    pub free: f64,
+    /// Pressure at which it buckles inwards though the housing holds it round.
+    pub housed: f64,
 }
 
 /// What opens one interface of the loosest pair.
@@ -118,6 +134,7 @@ pub(super) fn service(
     joint: &Joint,
     kernel: &Kernel<'_>,
     pairs: &Extremes<PairInterference>,
+    tightest: &PairFindings,
     duty: &[DutyFindings],
     plastic: Option<PlasticFindings>,
 ) -> Result<ServiceFindings, FindingsError> {
@@ -129,6 +146,7 @@ pub(super) fn service(
     let simple = joint.rings.len() == 2 && joint.slices.is_empty() && shaft.inner_diameter == 0.0;
     Ok(ServiceFindings {
         envelope: envelope(joint, kernel, &pairs.loosest, duty, loosening_speed)?,
+        liner: liner(joint, tightest, duty),
         loosening,
         plastic,
         steps: steps(joint, kernel, &pairs.tightest)?,
@@ -213,7 +231,10 @@ fn governing_ring(
 ) -> Result<GoverningRing, FindingsError> {
     let ring = &joint.rings[index];
     let (measure, strength) = match (ring.material.kind, joint.criterion) {
-        (Kind::Brittle, _) => (StressMeasure::GreatestPrincipal, ring.strength.tensile_strength),
+        (Kind::Brittle, _) => {
+            let tension_share = ring.tension_share();
+            (StressMeasure::Brittle { tension_share }, ring.strength.tensile_strength)
+        }
         (_, DuctileCriterion::VonMises) => (StressMeasure::VonMises, ring.strength.yield_strength),
         (_, DuctileCriterion::Tresca) => (StressMeasure::Tresca, ring.strength.yield_strength),
     };
@@ -239,6 +260,25 @@ fn governing_ring(
 fn loosest_for_stress(pairs: &Extremes<PairInterference>) -> Vec<f64> {
     let both = pairs.loosest.effective.iter().zip(&pairs.tightest.effective);
     both.map(|(loosest, tightest)| loosest.min(*tightest)).collect()
+}
+
+/// The innermost part as a thin liner.
+fn liner(joint: &Joint, tightest: &PairFindings, duty: &[DutyFindings]) -> Option<ThinLiner> {
+    let bush = joint.rings.first()?;
+    let liner = Liner {
+        inner_diameter: bush.inner_diameter,
+        outer_diameter: bush.outer_diameter,
+        youngs_modulus: bush.material.youngs_modulus.value,
+        poisson: bush.material.poisson.value,
+    };
+    let innermost = |interfaces: &[InterfaceFindings]| interfaces.first().map_or(0.0, |found| found.pressure);
+    let states = duty.iter().map(|state| innermost(&state.tightest.interfaces));
+    Some(ThinLiner {
+        slenderness: liner.slenderness(),
+        pressure: states.fold(innermost(&tightest.interfaces), f64::max),
+        free: liner.free_pressure().ok()?,
+        housed: liner.housed_pressure().ok()?,
+    })
 }
 
 /// Strength of plain steel in rotating bending as a share of its tensile strength: 0.45 to 0.5 is usual; from memory.

@@ -80,7 +80,11 @@ impl PairInterference {
 }
 
 /// The rings under what grips; the hub with its elastic stresses, and with the growth that stays in its sizes.
-fn with_elastic_hub(softened: Vec<RingStress>, elastic: &[RingStress], worn: &PlasticState) -> Vec<RingStress> {
+fn with_elastic_hub(
+    softened: Vec<RingStress>,
+    elastic: &[RingStress],
+    worn: &PlasticState,
+) -> Vec<RingStress> {
     let mut rings = softened;
     if let (Some(hub), Some(elastic)) = (rings.last_mut(), elastic.last()) {
         *hub = RingStress {

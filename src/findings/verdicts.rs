@@ -133,6 +133,7 @@ fn edges(findings: &Findings) -> Vec<Verdict> {
 pub fn failure(ring: &Ring) -> &'static str {
     match ring.material.kind {
         Kind::Brittle => "fracture",
+        Kind::Polymer if ring.material.long_term_strength.is_some() => "creep",
         Kind::Ductile | Kind::Polymer => "yield",
     }
 }

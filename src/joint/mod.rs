@@ -31,7 +31,7 @@ pub use file::VERSION;
 
 use std::sync::Arc;
 
-use crate::material::{Material, Range, Sourced, Strength};
+use crate::material::{Kind, Material, Range, Sourced, Strength};
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::mechanics::plastic::YieldRule;
 use crate::quantity::UnitSystem;
@@ -133,6 +133,18 @@ pub struct Ring {
     pub outer_diameter: f64,
     /// Roughness Rz of the mating surface, m.
     pub roughness: Sourced<f64>,
+}
+
+impl Ring {
+    /// Tensile over compressive strength of a brittle ring; zero where either is not known, or the ring is not brittle.
+    pub fn tension_share(&self) -> f64 {
+        let compressive =
+            self.material.compressive_strength.as_ref().filter(|_| self.material.kind == Kind::Brittle);
+        match (self.strength.tensile_strength, compressive) {
+            (Some(tensile), Some(compressive)) => tensile / compressive.value,
+            _ => 0.0,
+        }
+    }
 }
 
 /// The fit at one interface.

@@ -242,6 +242,12 @@ fn shaft_stress(sheet: &mut Sheet, findings: &Findings, shaft: &Ring, units: &Un
     };
     sheet.formula("sigma_ts", meaning, hoop, units.pressure, LAME, pa(program));
     let equivalent = match shaft.material.kind {
+        Kind::Brittle if shaft.tension_share() > 0.0 => {
+            let meaning = format!("tensile over compressive strength of the {}", shaft.name);
+            let source = shaft.material.compressive_strength.as_ref().map_or("", |value| &value.source);
+            sheet.input("k_s", &meaning, shaft.tension_share(), "", source);
+            -(sym("sigma_ts") * sym("k_s"))
+        }
         Kind::Brittle => greatest([num("0"), sym("sigma_ts")]),
         Kind::Ductile | Kind::Polymer => sym("sigma_ts").call(super::super::expression::Function::Abs),
     };

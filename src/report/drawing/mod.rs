@@ -8,12 +8,12 @@ mod section;
 use dimension::{Diameter, Length, TYPE};
 use maud::Markup;
 use scale::layout;
-use section::{Place, STUB, bands};
+use section::{Place, STUB, Step, bands};
 
 use super::svg::{Frame, Lettering, QUIET, Sketch};
 use super::text_width::text_width;
 use super::units::{Measure, Units};
-use crate::findings::Findings;
+use crate::findings::{Findings, PairFindings};
 use crate::joint::Joint;
 use crate::quantity::UnitSystem;
 
@@ -22,6 +22,8 @@ const WIDTH: f64 = 170.0;
 /// First dimension line beside the shaft, and distance from one to the next, mm.
 const FIRST: f64 = 9.0;
 const NEXT: f64 = 6.5;
+/// Room for a note to the right of a dimension line, mm.
+const NOTE: f64 = 3.2;
 
 /// The section drawing with what its caption says.
 pub struct SectionDrawing {
@@ -44,8 +46,9 @@ pub fn section(findings: &Findings) -> SectionDrawing {
         .collect();
     let hollow = radii.first().is_some_and(|bore| *bore > 0.0);
     let columns = (joint.fits.len(), 1 + usize::from(hollow));
-    let margin = |first: f64, count: usize| first + NEXT * (count.max(1) - 1) as f64 + 4.0;
-    let (left, right) = (margin(FIRST, columns.0), margin(first_right(joint, units), columns.1));
+    let margin = |first: f64, next: f64, count: usize| first + next * (count.max(1) - 1) as f64 + 4.0;
+    let left = margin(FIRST, NEXT, columns.0);
+    let right = margin(first_right(joint, units), NEXT + NOTE, columns.1);
     let room = (WIDTH - 2.0 * STUB - left - right).min(84.0);
     let layout = layout(&radii, joint.length, room);
 
@@ -68,9 +71,9 @@ pub fn section(findings: &Findings) -> SectionDrawing {
         .find(|place| labels::reach(&rows, &layout, *place, &bands) <= WIDTH)
         .unwrap_or_else(|| place_at(left + STUB));
     let mut sketch = Sketch::default();
-    section::draw(&mut sketch, &layout, place, &bands);
+    section::draw(&mut sketch, &layout, place, &steps(joint), &bands);
     let bottom = place.centre + layout.radial.last().map_or(0.0, |wall| wall.to);
-    let below = dimensions(&mut sketch, joint, units, &layout, place);
+    let below = dimensions(&mut sketch, findings, units, &layout, place);
     labels::draw(&mut sketch, &rows, &layout, place, &bands, WIDTH);
     let height = bottom + below + 7.0;
     let foot = Lettering::new(foot(&layout, units), TYPE).colour(QUIET);
@@ -88,8 +91,51 @@ pub fn section(findings: &Findings) -> SectionDrawing {
     SectionDrawing { svg: sketch.finish(&frame), caption: caption(&layout, factor, &interference) }
 }
 
+/// The steps of the hub; none when it is of one section.
+fn steps(joint: &Joint) -> Vec<Step> {
+    let thickest = joint.slices.iter().map(|slice| slice.hub_outer_diameter).fold(0.0, f64::max);
+    let mut from = 0.0;
+    joint
+        .slices
+        .iter()
+        .map(|slice| {
+            let to = from + slice.length;
+            let along = (from / joint.length, to / joint.length);
+            from = to;
+            Step { along, wall: (slice.hub_outer_diameter - joint.diameter) / (thickest - joint.diameter) }
+        })
+        .collect()
+}
+
+/// Sizes of the innermost bore and of the outer diameter of an assembled joint, loosest to tightest, as written.
+fn assembled(findings: &Findings, units: Units) -> (Option<String>, Option<String>) {
+    let joint = &findings.joint;
+    let extremes = &findings.extremes;
+    let (Some(shaft), Some(hub)) = (joint.rings.first(), joint.rings.last()) else { return (None, None) };
+    let range = |size: f64, change: fn(&PairFindings) -> Option<f64>| {
+        let number = |pair| Some(units.reading(Measure::Size, size + change(pair)?).number);
+        Some(format!("assembled {} to {}", number(&extremes.loosest)?, number(&extremes.tightest)?))
+    };
+    if extremes.tightest.pressure <= 0.0 || !joint.slices.is_empty() {
+        return (None, None);
+    }
+    let bore = range(shaft.inner_diameter, |pair| Some(pair.rings.first()?.bore_change));
+    (
+        bore.filter(|_| shaft.inner_diameter > 0.0),
+        range(hub.outer_diameter, |pair| Some(pair.rings.last()?.outer_change)),
+    )
+}
+
 /// Draws all dimensions; returns how far they reach below the part, mm.
-fn dimensions(sketch: &mut Sketch, joint: &Joint, units: Units, layout: &scale::Layout, place: Place) -> f64 {
+fn dimensions(
+    sketch: &mut Sketch,
+    findings: &Findings,
+    units: Units,
+    layout: &scale::Layout,
+    place: Place,
+) -> f64 {
+    let joint = &findings.joint;
+    let (bore_note, outer_note) = assembled(findings, units);
     let size = |value: f64| units.reading(Measure::Size, value).number;
     let mut diameters = Vec::new();
     for (k, fit) in joint.fits.iter().enumerate() {
@@ -101,12 +147,13 @@ fn dimensions(sketch: &mut Sketch, joint: &Joint, units: Units, layout: &scale::
     let mut column = place.shaft_right() + first_right(joint, units);
     if let Some(bore) = joint.rings.first().map(|ring| ring.inner_diameter).filter(|bore| *bore > 0.0) {
         let text = format!("Ø{}", size(bore));
-        diameters.push(Diameter::new(place.shaft_right(), column, layout.radial[0].to, &text));
-        column += NEXT;
+        diameters
+            .push(Diameter::new(place.shaft_right(), column, layout.radial[0].to, &text).noted(bore_note));
+        column += NEXT + NOTE;
     }
     if let (Some(ring), Some(wall)) = (joint.rings.last(), layout.radial.last()) {
         let text = format!("Ø{}", size(ring.outer_diameter));
-        diameters.push(Diameter::new(place.hub_right, column, wall.to, &text));
+        diameters.push(Diameter::new(place.hub_right, column, wall.to, &text).noted(outer_note));
     }
     let bottom = place.centre + layout.radial.last().map_or(0.0, |wall| wall.to);
     let mut below: f64 = 0.0;

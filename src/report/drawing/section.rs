@@ -38,6 +38,15 @@ impl Place {
     }
 }
 
+/// A piece of a stepped hub on paper.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub(super) struct Step {
+    /// Where it begins and ends along the hub, as shares of its length.
+    pub along: (f64, f64),
+    /// Its wall over the thickest one.
+    pub wall: f64,
+}
+
 /// The interference at one mating surface on paper.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub(super) struct Band {
@@ -61,13 +70,13 @@ pub(super) fn bands(radial: &[f64], scale: f64) -> (f64, Vec<Band>) {
 }
 
 /// Draws the cut faces.
-pub(super) fn draw(sketch: &mut Sketch, layout: &Layout, place: Place, bands: &[Band]) {
+pub(super) fn draw(sketch: &mut Sketch, layout: &Layout, place: Place, steps: &[Step], bands: &[Band]) {
     for ring in 0..layout.radial.len() - 1 {
-        let faces = faces(layout, place, ring);
+        let faces = faces(layout, place, steps, ring);
         sketch.path(&lines(&faces, hatching_of(ring)), HATCH);
     }
     for ring in 0..layout.radial.len() - 1 {
-        outline(sketch, layout, place, ring);
+        outline(sketch, layout, place, steps, ring);
     }
     for (ring, band) in bands.iter().enumerate() {
         interference(sketch, layout, place, ring, *band);
@@ -86,19 +95,43 @@ fn relief_depth(layout: &Layout) -> f64 {
     layout.radial.get(2).map_or(0.0, |wall| (0.3 * (wall.to - wall.from)).min(1.4))
 }
 
+/// Left and right end of each step on paper, with its outer radius.
+fn stepped(layout: &Layout, place: Place, steps: &[Step]) -> Vec<(f64, f64, f64)> {
+    let wall = layout.radial[2];
+    let x = |share: f64| place.hub_left + share * (place.hub_right - place.hub_left);
+    let outer = |step: &Step| wall.from + step.wall * (wall.to - wall.from);
+    steps.iter().map(|step| (x(step.along.0), x(step.along.1), outer(step))).collect()
+}
+
 /// The hatched rectangles of a ring, upper half and lower half.
-fn faces(layout: &Layout, place: Place, ring: usize) -> Vec<Rectangle> {
+fn faces(layout: &Layout, place: Place, steps: &[Step], ring: usize) -> Vec<Rectangle> {
     let (left, right) = ends(place, ring);
     let wall = layout.radial[ring + 1];
     let mut upper = vec![];
     let relieved = ring == 1 && place.relief > 0.0;
-    let rectangle = |left, right, inner: f64| Rectangle {
+    let piece = |left, right, inner: f64, outer: f64| Rectangle {
         left,
         right,
-        top: place.centre - wall.to,
+        top: place.centre - outer,
         bottom: place.centre - inner,
     };
-    if relieved {
+    let rectangle = |left, right, inner: f64| piece(left, right, inner, wall.to);
+    if ring == 1 && !steps.is_empty() {
+        for (from, to, outer) in stepped(layout, place, steps) {
+            let edge = (right - place.relief).clamp(from, to);
+            if edge > from {
+                upper.push(piece(from, edge, wall.from, outer));
+            }
+            if to > edge {
+                upper.push(piece(
+                    edge,
+                    to,
+                    wall.from + relief_depth(layout).min(0.5 * (outer - wall.from)),
+                    outer,
+                ));
+            }
+        }
+    } else if relieved {
         upper.push(rectangle(left, right - place.relief, wall.from));
         upper.push(rectangle(right - place.relief, right, wall.from + relief_depth(layout)));
     } else {
@@ -113,7 +146,7 @@ fn faces(layout: &Layout, place: Place, ring: usize) -> Vec<Rectangle> {
 }
 
 /// Outline of a ring in both halves.
-fn outline(sketch: &mut Sketch, layout: &Layout, place: Place, ring: usize) {
+fn outline(sketch: &mut Sketch, layout: &Layout, place: Place, steps: &[Step], ring: usize) {
     let (left, right) = ends(place, ring);
     let wall = layout.radial[ring + 1];
     for side in [-1.0, 1.0] {
@@ -125,10 +158,18 @@ fn outline(sketch: &mut Sketch, layout: &Layout, place: Place, ring: usize) {
             }
             continue;
         }
-        let mut corners =
-            vec![(left, y(wall.from)), (left, y(wall.to)), (right, y(wall.to)), (right, y(wall.from))];
+        let mut corners = vec![(left, y(wall.from))];
+        if ring == 1 && !steps.is_empty() {
+            for (from, to, outer) in stepped(layout, place, steps) {
+                corners.extend([(from, y(outer)), (to, y(outer))]);
+            }
+        } else {
+            corners.extend([(left, y(wall.to)), (right, y(wall.to))]);
+        }
+        corners.push((right, y(wall.from)));
         if ring == 1 && place.relief > 0.0 {
-            let depth = wall.from + relief_depth(layout);
+            let last = steps.last().map_or(1.0, |step| step.wall) * (wall.to - wall.from);
+            let depth = wall.from + relief_depth(layout).min(0.5 * last);
             corners.pop();
             corners.extend([
                 (right, y(depth)),

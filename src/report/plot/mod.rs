@@ -1,6 +1,7 @@
 //! Plots: tolerance zones, stress through the walls, press force along the travel, diameters against temperature,
-//! what is left of the grip at work.
+//! pressure along a stepped joint, what is left of the grip at work.
 
+mod along;
 mod axis;
 mod chart;
 mod envelope;
@@ -14,6 +15,7 @@ mod zones;
 
 use maud::Markup;
 
+pub use along::along;
 pub use envelope::envelope;
 pub use population::population;
 pub use press::press_force;
