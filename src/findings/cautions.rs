@@ -16,6 +16,7 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     all.extend(input_remarks(findings));
     all.extend(proportions(findings));
     all.extend(polymers(findings));
+    all.extend(buckling(findings));
     all.extend(assembly(findings));
     all
 }
@@ -54,7 +55,9 @@ fn yielding(findings: &Findings) -> Vec<Caution> {
 /// The published criterion by name.
 pub fn criterion_source(brittle: bool, criterion: DuctileCriterion) -> &'static str {
     match (brittle, criterion) {
-        (true, _) => "greatest principal stress (Rankine) against tensile strength",
+        (true, _) => {
+            "greatest principal stress (Rankine) against tensile strength, compression against compressive strength"
+        }
         (false, DuctileCriterion::VonMises) => "von Mises criterion, plane stress",
         (false, DuctileCriterion::Tresca) => "Tresca criterion with the axial stress zero counted",
     }
@@ -112,12 +115,36 @@ fn polymers(findings: &Findings) -> Vec<Caution> {
         .map(|ring| Caution {
             subject: "hold",
             text: format!(
-                "The {} is a polymer: it creeps, so the pressure falls with time; the figures are those of the first hour.",
-                ring.name
+                "The {} is a polymer: it creeps, so the pressure falls with time; {}.",
+                ring.name,
+                if findings.joint.duty.iter().all(|state| state.relaxation < 1.0) {
+                    "holding counts the share that `relaxation` leaves, as given in the joint file, the stresses are those of \
+                     the first hour"
+                } else {
+                    "the figures are those of the first hour unless the state gives a `relaxation`"
+                }
             ),
             source: "common practice, no source".to_owned(),
         })
         .collect()
+}
+
+/// A thin bush that its housing may press in.
+fn buckling(findings: &Findings) -> Option<Caution> {
+    let liner = findings.service.liner.as_ref().filter(|liner| liner.pressure > liner.housed)?;
+    let (bush, _) = findings.joint.shaft_and_hub();
+    let pressure = |pascals| show(Measure::Pressure, pascals, findings.joint.display);
+    Some(Caution {
+        subject: "strength",
+        text: format!(
+            "The thin wall of the {} may buckle inwards: the tightest pair presses it with {}, and from {} on it can leave \
+             its housing in one place.",
+            bush.name,
+            pressure(liner.pressure),
+            pressure(liner.housed),
+        ),
+        source: "D. Glock, Der Stahlbau 46 (1977) 212-217 (from memory): liner in a rigid housing".to_owned(),
+    })
 }
 
 fn assembly(findings: &Findings) -> Vec<Caution> {
@@ -170,8 +197,8 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
                 ring.name, ring.material.name
             ));
         } else if stress.safety.is_none() {
-            let why = if ring.material.kind == Kind::Brittle {
-                "it is brittle and nowhere in tension"
+            let why = if ring.material.kind == Kind::Brittle && ring.tension_share() == 0.0 {
+                "it is brittle, nowhere in tension, and its compressive strength is not known"
             } else {
                 "nothing stresses it"
             };

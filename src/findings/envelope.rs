@@ -97,7 +97,7 @@ pub(super) fn envelope(
     if joint.rings.len() != 2 || !joint.slices.is_empty() {
         return Ok(None);
     }
-    let stack = kernel.stack(&loosest.effective, &kernel.shop);
+    let stack = kernel.stack(&loosest.grip, &kernel.shop);
     let influence = stack.influence()?;
     let mut turning = stack.clone();
     turning.angular_speed = 1.0;
@@ -140,8 +140,10 @@ fn lines(map: &Map<'_>, duty: &[DutyFindings], speed_to: f64) -> Vec<EnvelopeLin
     // Safety against slip is proportional to the pressure, so a state slips at its pressure over its safety.
     let slips = duty
         .iter()
-        .filter_map(|state| {
-            Some(state.loosest.pressure / state.loosest.slip_safety.filter(|safety| *safety > 0.0)?)
+        .zip(&map.joint.duty)
+        .filter_map(|(found, state)| {
+            let fresh = found.loosest.pressure / state.relaxation;
+            Some(fresh / found.loosest.slip_safety.filter(|safety| *safety > 0.0)?)
         })
         .fold(0.0, f64::max);
     if slips > 0.0 {
@@ -161,7 +163,7 @@ fn states(map: &Map<'_>, joint: &Joint, duty: &[DutyFindings]) -> Vec<EnvelopeSt
         .zip(duty)
         .enumerate()
         .filter_map(|(index, (state, found))| {
-            let pressure = found.loosest.pressure;
+            let pressure = found.loosest.pressure / state.relaxation;
             if pressure <= 0.0 {
                 return None;
             }

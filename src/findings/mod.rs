@@ -16,8 +16,9 @@ pub use cautions::criterion_source;
 pub use compute::{FindingsError, compute};
 pub use envelope::{Envelope, EnvelopeLine, EnvelopeMeaning, EnvelopeState};
 pub use kernel::after_smoothing;
-pub use service::{Fatigue, GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings};
-pub use softening::plastic_share_of_pressure;
+pub use service::{
+    Fatigue, GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings, ThinLiner, WornHub,
+};
 pub use verdicts::{combination, failure};
 
 pub use crate::assembly::cautions::Caution;

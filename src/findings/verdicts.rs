@@ -78,7 +78,9 @@ fn strength(findings: &Findings) -> Vec<Verdict> {
 /// The hub that may yield: the share of its section that is plastic at the tightest pair.
 fn plastic_share(findings: &Findings) -> Option<Verdict> {
     let Allow::Plastic { share } = findings.joint.require.allow else { return None };
-    let state = &findings.service.plastic.as_ref()?.tightest;
+    let worn = findings.service.plastic.as_ref()?.worn.as_ref()?;
+    let state = &worn.hardest;
+    let place = worn.state.and_then(|index| findings.joint.duty.get(index));
     let (_, hub) = findings.joint.shaft_and_hub();
     let carried = matches!(state.regime, Regime::Elastic | Regime::ElasticPlastic);
     Some(Verdict {
@@ -88,7 +90,7 @@ fn plastic_share(findings: &Findings) -> Option<Verdict> {
         found: Some(state.plastic_share),
         unit: VerdictUnit::Share,
         ok: carried && state.plastic_share <= share,
-        at: "tightest pair, shop temperature, at rest".to_owned(),
+        at: format!("tightest pair, {}", place.map_or("as assembled", |state| state.name.as_str())),
     })
 }
 
@@ -131,6 +133,7 @@ fn edges(findings: &Findings) -> Vec<Verdict> {
 pub fn failure(ring: &Ring) -> &'static str {
     match ring.material.kind {
         Kind::Brittle => "fracture",
+        Kind::Polymer if ring.material.long_term_strength.is_some() => "creep",
         Kind::Ductile | Kind::Polymer => "yield",
     }
 }

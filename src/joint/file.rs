@@ -48,6 +48,7 @@ pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
             "radial_force",
             "rotating_bending",
             "reversing",
+            "relaxation",
         ],
     ),
     (
@@ -326,6 +327,8 @@ pub(crate) struct StateKeys {
     pub(crate) rotating_bending: Option<Written<FlagWord>>,
     /// Whether the torque reverses.
     pub(crate) reversing: Option<Written<FlagWord>>,
+    /// Share of the contact pressure that relaxation leaves, 0 to 1. Silent: all of it.
+    pub(crate) relaxation: Option<Written<Number>>,
 }
 
 /// How the joint is put together.

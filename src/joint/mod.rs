@@ -31,7 +31,7 @@ pub use file::VERSION;
 
 use std::sync::Arc;
 
-use crate::material::{Material, Range, Sourced, Strength};
+use crate::material::{Kind, Material, Range, Sourced, Strength};
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::mechanics::plastic::YieldRule;
 use crate::quantity::UnitSystem;
@@ -135,6 +135,18 @@ pub struct Ring {
     pub roughness: Sourced<f64>,
 }
 
+impl Ring {
+    /// Tensile over compressive strength of a brittle ring; zero where either is not known, or the ring is not brittle.
+    pub fn tension_share(&self) -> f64 {
+        let compressive =
+            self.material.compressive_strength.as_ref().filter(|_| self.material.kind == Kind::Brittle);
+        match (self.strength.tensile_strength, compressive) {
+            (Some(tensile), Some(compressive)) => tensile / compressive.value,
+            _ => 0.0,
+        }
+    }
+}
+
 /// The fit at one interface.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Fit {
@@ -207,6 +219,8 @@ pub struct DutyState {
     pub rotating_bending: bool,
     /// Whether the torque reverses.
     pub reversing: bool,
+    /// Share of the contact pressure that relaxation leaves for holding, above 0 and at most 1.
+    pub relaxation: f64,
 }
 
 impl DutyState {
@@ -225,6 +239,7 @@ impl DutyState {
             radial_force: 0.0,
             rotating_bending: false,
             reversing: false,
+            relaxation: 1.0,
         }
     }
 }

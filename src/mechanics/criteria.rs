@@ -47,6 +47,29 @@ pub fn tresca(radial: f64, hoop: f64) -> f64 {
     (radial - hoop).abs().max(radial.abs()).max(hoop.abs())
 }
 
+/// Equivalent tension of a brittle material that stands more compression than tension, Pa.
+///
+/// σe = max(σ₁, −σ₃ R_m/R_c)
+///
+/// σ₁ greatest principal stress ([`greatest_principal`], Pa), σ₃ least one, or zero when all is tension (Pa), R_m/R_c
+/// `tension_share`, tensile over compressive strength; zero leaves compression out.
+///
+/// Plane stress, σz = 0; R_m/σe is the lesser of the safeties against both strengths. Where tension and compression
+/// meet it holds while the compression is not the greater, as in a hub's bore (modified Mohr hypothesis, of which this
+/// is that part). Source: the hypothesis of W. J. M. Rankine with both strengths; N. E. Dowling, *Mechanical Behavior
+/// of Materials*, chapter on fracture under combined stresses (from memory).
+///
+/// # Example
+/// ```
+/// use hubgrip::mechanics::criteria::brittle;
+/// assert_eq!(brittle(-75e6, 125e6, 0.25), 125e6);
+/// assert_eq!(brittle(0.0, -200e6, 0.25), 50e6);
+/// assert_eq!(brittle(0.0, -200e6, 0.0), 0.0);
+/// ```
+pub fn brittle(radial: f64, hoop: f64, tension_share: f64) -> f64 {
+    greatest_principal(radial, hoop).max(-radial.min(hoop) * tension_share)
+}
+
 /// Greatest principal stress, Pa, tension positive; zero where all is compression.
 ///
 /// σ₁ = max(σr, σφ, 0)

@@ -25,7 +25,7 @@ pub enum StackQuantity {
 }
 
 /// A stress, or an equivalent of the stresses, at a place.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+#[derive(Debug, Clone, Copy, PartialEq)]
 pub enum StressMeasure {
     /// Radial stress.
     Radial,
@@ -37,6 +37,11 @@ pub enum StressMeasure {
     Tresca,
     /// [`criteria::greatest_principal`].
     GreatestPrincipal,
+    /// [`criteria::brittle`].
+    Brittle {
+        /// Tensile over compressive strength; zero leaves compression out.
+        tension_share: f64,
+    },
 }
 
 /// Which extreme of a quantity is wanted.
@@ -312,6 +317,7 @@ impl StressMeasure {
             Self::VonMises => criteria::von_mises(radial, hoop),
             Self::Tresca => criteria::tresca(radial, hoop),
             Self::GreatestPrincipal => criteria::greatest_principal(radial, hoop),
+            Self::Brittle { tension_share } => criteria::brittle(radial, hoop, tension_share),
         }
     }
 
@@ -345,6 +351,16 @@ impl StressMeasure {
             Self::GreatestPrincipal if radial.max(hoop) <= 0.0 => (0.0, 0.0),
             Self::GreatestPrincipal if hoop >= radial => (0.0, 1.0),
             Self::GreatestPrincipal => (1.0, 0.0),
+            Self::Brittle { tension_share } => {
+                let least = radial.min(hoop);
+                if criteria::greatest_principal(radial, hoop) >= -least * tension_share {
+                    Self::GreatestPrincipal.slopes(radial, hoop)
+                } else if hoop <= radial {
+                    (0.0, -tension_share)
+                } else {
+                    (-tension_share, 0.0)
+                }
+            }
         }
     }
 }

@@ -5,7 +5,7 @@ use super::super::kernel::Condition;
 use super::super::{Findings, StateFindings};
 use super::Units;
 use super::sheet::Sheet;
-use super::strength::{axial, flexibility, grip, plastic_shares, torque};
+use super::strength::{axial, flexibility, grip, hub_yields, torque};
 use crate::joint::{DutyState, Ring};
 
 const ROTATION: &str = "rotating disc, Timoshenko & Goodier, Theory of Elasticity, § 32";
@@ -42,10 +42,11 @@ impl StateSheet<'_> {
         let lost = self.rotation(sheet);
         let held = grip("W_min", &self.name("eps_s"), &self.name("eps_h"));
         let held = if lost { held - sym(&self.name("V_")) } else { held };
-        let share = plastic_shares(self.findings).map_or(1.0, |shares| shares[0]);
-        let elastic = if share < 1.0 { self.name("p_e") } else { self.name("p_") };
+        let held = if hub_yields(self.findings) { held - sym("G_min") } else { held };
+        let share = self.state.relaxation;
+        let fresh = if share < 1.0 { self.name("p_e") } else { self.name("p_") };
         sheet.formula(
-            &elastic,
+            &fresh,
             "contact pressure",
             super::super::expression::greatest([num("0"), held / flexibility()]),
             self.units.pressure,
@@ -53,12 +54,14 @@ impl StateSheet<'_> {
             Some(pair.pressure / share * self.units.per_pascal),
         );
         if share < 1.0 {
+            let left = self.name("k_");
+            sheet.input(&left, "share that relaxation leaves", share, "", "joint file");
             sheet.formula(
                 &self.name("p_"),
-                "contact pressure of the hub that yields",
-                sym(&elastic) * sym("k_min"),
+                "contact pressure after relaxation",
+                sym(&fresh) * sym(&left),
                 self.units.pressure,
-                "share of the shop temperature",
+                "share of the fresh pressure",
                 Some(pair.pressure * self.units.per_pascal),
             );
         }

@@ -10,12 +10,12 @@ use dimension::{Diameter, Length, TYPE};
 use labels::Targets;
 use maud::Markup;
 use scale::layout;
-use section::{Place, STUB, bands};
+use section::{Place, STUB, Step, bands};
 
 use super::svg::{Frame, Lettering, QUIET, Sketch};
 use super::text_width::text_width;
 use super::units::{Measure, Units};
-use crate::findings::Findings;
+use crate::findings::{Findings, PairFindings};
 use crate::joint::Joint;
 use crate::quantity::UnitSystem;
 
@@ -24,6 +24,8 @@ const WIDTH: f64 = 170.0;
 /// First dimension line beside the shaft, and distance from one to the next, mm.
 const FIRST: f64 = 9.0;
 const NEXT: f64 = 6.5;
+/// Room for a note to the right of a dimension line, mm.
+const NOTE: f64 = 3.2;
 
 /// The section drawing with what its caption says.
 pub struct SectionDrawing {
@@ -41,6 +43,18 @@ pub fn section(findings: &Findings) -> SectionDrawing {
     let columns = columns(joint);
     let margin = |first: f64, count: usize| first + NEXT * (count.max(1) - 1) as f64 + 4.0;
     let (left, right) = (margin(FIRST, columns.0), margin(first_right(joint, units), columns.1));
+    let radii: Vec<f64> = joint
+        .rings
+        .first()
+        .map(|ring| ring.inner_diameter / 2.0)
+        .into_iter()
+        .chain(joint.rings.iter().map(|ring| ring.outer_diameter / 2.0))
+        .collect();
+    let hollow = radii.first().is_some_and(|bore| *bore > 0.0);
+    let columns = (joint.fits.len(), 1 + usize::from(hollow));
+    let margin = |first: f64, next: f64, count: usize| first + next * (count.max(1) - 1) as f64 + 4.0;
+    let left = margin(FIRST, NEXT, columns.0);
+    let right = margin(first_right(joint, units), NEXT + NOTE, columns.1);
     let room = (WIDTH - 2.0 * STUB - left - right).min(84.0);
     let layout = layout(&radii, joint.length, room);
 
@@ -73,6 +87,10 @@ pub fn section(findings: &Findings) -> SectionDrawing {
     let below = Dimensions { joint, units, layout: &layout, place, segments: &segments }.draw(&mut sketch);
     let targets = Targets { layout: &layout, place, segments: &segments, bands: &bands };
     labels::draw(&mut sketch, &rows, targets, WIDTH);
+    section::draw(&mut sketch, &layout, place, &steps(joint), &bands);
+    let bottom = place.centre + layout.radial.last().map_or(0.0, |wall| wall.to);
+    let below = dimensions(&mut sketch, findings, units, &layout, place);
+    labels::draw(&mut sketch, &rows, &layout, place, &bands, WIDTH);
     let height = bottom + below + 7.0;
     let foot = Lettering::new(foot(&layout, units), TYPE).colour(QUIET);
     sketch.text((0.0, height - 1.0), &foot);
@@ -146,6 +164,69 @@ impl Dimensions<'_> {
             }
         }
         all
+/// The steps of the hub; none when it is of one section.
+fn steps(joint: &Joint) -> Vec<Step> {
+    let thickest = joint.slices.iter().map(|slice| slice.hub_outer_diameter).fold(0.0, f64::max);
+    let mut from = 0.0;
+    joint
+        .slices
+        .iter()
+        .map(|slice| {
+            let to = from + slice.length;
+            let along = (from / joint.length, to / joint.length);
+            from = to;
+            Step { along, wall: (slice.hub_outer_diameter - joint.diameter) / (thickest - joint.diameter) }
+        })
+        .collect()
+}
+
+/// Sizes of the innermost bore and of the outer diameter of an assembled joint, loosest to tightest, as written.
+fn assembled(findings: &Findings, units: Units) -> (Option<String>, Option<String>) {
+    let joint = &findings.joint;
+    let extremes = &findings.extremes;
+    let (Some(shaft), Some(hub)) = (joint.rings.first(), joint.rings.last()) else { return (None, None) };
+    let range = |size: f64, change: fn(&PairFindings) -> Option<f64>| {
+        let number = |pair| Some(units.reading(Measure::Size, size + change(pair)?).number);
+        Some(format!("assembled {} to {}", number(&extremes.loosest)?, number(&extremes.tightest)?))
+    };
+    if extremes.tightest.pressure <= 0.0 || !joint.slices.is_empty() {
+        return (None, None);
+    }
+    let bore = range(shaft.inner_diameter, |pair| Some(pair.rings.first()?.bore_change));
+    (
+        bore.filter(|_| shaft.inner_diameter > 0.0),
+        range(hub.outer_diameter, |pair| Some(pair.rings.last()?.outer_change)),
+    )
+}
+
+/// Draws all dimensions; returns how far they reach below the part, mm.
+fn dimensions(
+    sketch: &mut Sketch,
+    findings: &Findings,
+    units: Units,
+    layout: &scale::Layout,
+    place: Place,
+) -> f64 {
+    let joint = &findings.joint;
+    let (bore_note, outer_note) = assembled(findings, units);
+    let size = |value: f64| units.reading(Measure::Size, value).number;
+    let mut diameters = Vec::new();
+    for (k, fit) in joint.fits.iter().enumerate() {
+        let from = if k == 0 { place.shaft_left() } else { place.hub_left };
+        let at = place.shaft_left() - FIRST - NEXT * k as f64;
+        let text = dimension_text(&size(fit.limits.nominal), &fit.callout);
+        diameters.push(Diameter::new(from, at, layout.radial[k + 1].to, &text));
+    }
+    let mut column = place.shaft_right() + first_right(joint, units);
+    if let Some(bore) = joint.rings.first().map(|ring| ring.inner_diameter).filter(|bore| *bore > 0.0) {
+        let text = format!("Ø{}", size(bore));
+        diameters
+            .push(Diameter::new(place.shaft_right(), column, layout.radial[0].to, &text).noted(bore_note));
+        column += NEXT + NOTE;
+    }
+    if let (Some(ring), Some(wall)) = (joint.rings.last(), layout.radial.last()) {
+        let text = format!("Ø{}", size(ring.outer_diameter));
+        diameters.push(Diameter::new(place.hub_right, column, wall.to, &text).noted(outer_note));
     }
 
     /// Draws the lengths of the pieces, of the relief and of the hub below the part; returns how far they reach, mm.

@@ -19,6 +19,12 @@ const WHY: &[(&str, &str)] = &[
         "where no temperature of the outer parts within their expansion curves opens the interface",
     ),
     ("plastic", "where the hub stays elastic, or is not one of two ductile rings of one section"),
+    ("growth_after_duty_um", "where the hub may not yield by design"),
+    (
+        "finite_length",
+        "where the shaft is hollow, or the proportions are outside those computed by finite elements",
+    ),
+    ("liner", "where the innermost part is not a tube with a wall of at most 5 % of its mean diameter"),
     ("governing.state", "where the ring is stressed most at the shop temperature, at rest"),
     ("governing.safety", "where nothing stresses the ring, or its strength is not known"),
     (

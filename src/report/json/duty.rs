@@ -23,6 +23,7 @@ pub(super) struct Duty {
     radial_force_n: f64,
     rotating_bending: bool,
     reversing: bool,
+    relaxation: f64,
     loosest: State,
     tightest: State,
 }
@@ -56,6 +57,7 @@ impl Duty {
             radial_force_n: state.radial_force,
             rotating_bending: state.rotating_bending,
             reversing: state.reversing,
+            relaxation: state.relaxation,
             loosest: State::of(joint, &found.loosest),
             tightest: State::of(joint, &found.tightest),
         }

@@ -1,6 +1,7 @@
 //! Plots: tolerance zones, stress through the walls, press force along the travel, diameters against temperature,
-//! what is left of the grip at work.
+//! pressure along a stepped joint, what is left of the grip at work.
 
+mod along;
 mod axis;
 mod chart;
 mod envelope;
@@ -17,6 +18,7 @@ use maud::Markup;
 
 use crate::findings::Findings;
 
+pub use along::along;
 pub use envelope::envelope;
 pub use population::population;
 pub use press::press_force;
