@@ -9,6 +9,7 @@ mod limits;
 mod materials;
 mod new;
 mod output;
+mod pressing;
 mod report;
 mod scatter;
 mod schema;
@@ -74,6 +75,7 @@ enum Command {
     Choose(choose::Arguments),
     Scatter(scatter::Arguments),
     Sort(sort::Arguments),
+    Pressing(pressing::Arguments),
     Materials(materials::Arguments),
     New(new::Arguments),
     Schema(schema::Arguments),
@@ -89,6 +91,7 @@ impl Command {
             Self::Choose(arguments) => arguments.json,
             Self::Scatter(arguments) => arguments.json,
             Self::Sort(arguments) => arguments.json,
+            Self::Pressing(arguments) => arguments.json,
             _ => false,
         }
     }
@@ -118,6 +121,7 @@ fn run(line: CommandLine, output: &Output) -> Result<Ending, Failure> {
         Command::Choose(arguments) => choose::run(&arguments, folder, output),
         Command::Scatter(arguments) => scatter::run(&arguments, folder, output),
         Command::Sort(arguments) => sort::run(&arguments, folder, output),
+        Command::Pressing(arguments) => pressing::run(&arguments, folder, output),
         Command::Materials(arguments) => materials::run(&arguments, folder, output),
         Command::New(arguments) => new::run(&arguments, output),
         Command::Schema(arguments) => schema::run(&arguments, output),

@@ -1,11 +1,12 @@
 //! Plots: tolerance zones, stress through the walls, press force along the travel, diameters against temperature,
-//! what is left of the grip at work.
+//! what is left of the grip at work, recorded press-in curves.
 
 mod axis;
 mod chart;
 mod envelope;
 mod population;
 mod press;
+mod records;
 mod stress;
 mod tags;
 mod temperature;
@@ -17,6 +18,7 @@ use maud::Markup;
 pub use envelope::envelope;
 pub use population::population;
 pub use press::press_force;
+pub use records::press_records;
 pub use stress::stress;
 pub use temperature::diameters;
 pub use windows::interference_windows;
