@@ -120,7 +120,8 @@ fn settings(arguments: &Arguments) -> Result<Settings, Failure> {
     let length = |option: &str, text: &str| {
         parse(Kind::Length, text).map_err(|error| {
             Failure::from(
-                Diagnostic::new(format!("--{option} {text}: {error}")).with_help("write a length such as 0.5mm"),
+                Diagnostic::new(format!("--{option} {text}: {error}"))
+                    .with_help("write a length such as 0.5mm"),
             )
         })
     };
@@ -135,7 +136,9 @@ fn settings(arguments: &Arguments) -> Result<Settings, Failure> {
     };
     let touch_within = length("touch-within", &arguments.touch_within)?;
     if touch_within < 0.0 {
-        return Err(Diagnostic::new("--touch-within is negative").with_help("write a length such as 0.5mm").into());
+        return Err(Diagnostic::new("--touch-within is negative")
+            .with_help("write a length such as 0.5mm")
+            .into());
     }
     if !(arguments.steepening >= 1.0 && arguments.steepening.is_finite()) {
         return Err(Diagnostic::new(format!("--steepening {}: this is below 1", arguments.steepening))
@@ -164,7 +167,9 @@ fn files(given: &[PathBuf]) -> Result<Vec<PathBuf>, Failure> {
         let mut found = Vec::new();
         for entry in fs::read_dir(path).map_err(unreadable)? {
             let file = entry.map_err(unreadable)?.path();
-            if file.extension().is_some_and(|extension| extension.eq_ignore_ascii_case("csv")) && file.is_file() {
+            if file.extension().is_some_and(|extension| extension.eq_ignore_ascii_case("csv"))
+                && file.is_file()
+            {
                 found.push(file);
             }
         }

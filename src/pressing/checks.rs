@@ -236,7 +236,12 @@ fn greatest(values: impl Iterator<Item = (f64, f64)>) -> Option<(f64, f64)> {
 }
 
 /// The checks of an engaged curve; the start is judged where the record is counted from first touch.
-pub(super) fn checks(record: &Engaged<'_>, lower: &Engaged<'_>, upper: &Engaged<'_>, shares: Shares) -> Vec<Check> {
+pub(super) fn checks(
+    record: &Engaged<'_>,
+    lower: &Engaged<'_>,
+    upper: &Engaged<'_>,
+    shares: Shares,
+) -> Vec<Check> {
     let check = |kind, found: Option<(f64, f64)>, low: Option<f64>, high: Option<f64>| Check {
         kind,
         found: found.map(|found| found.0),
@@ -255,7 +260,12 @@ pub(super) fn checks(record: &Engaged<'_>, lower: &Engaged<'_>, upper: &Engaged<
         plain(CheckKind::Slope, record.slope(), lower.slope(), upper.slope()),
         check(CheckKind::Peak, peak, first(lower.peak()), first(upper.peak())),
         plain(CheckKind::End, record.end(), lower.end(), upper.end()),
-        plain(CheckKind::Steepening, record.steepening(upper), Some(1.0 / shares.steepening), Some(shares.steepening)),
+        plain(
+            CheckKind::Steepening,
+            record.steepening(upper),
+            Some(1.0 / shares.steepening),
+            Some(shares.steepening),
+        ),
         check(CheckKind::Drop, record.drop(), None, of_peak(shares.drop)),
         check(CheckKind::Ripple, record.ripple(), None, of_peak(shares.ripple)),
     ]

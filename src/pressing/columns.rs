@@ -109,7 +109,13 @@ struct Header<'a> {
 }
 
 impl Header<'_> {
-    fn column(&self, what: &str, words: &[&str], kind: Kind, example: &str) -> Result<Column, Box<Diagnostic>> {
+    fn column(
+        &self,
+        what: &str,
+        words: &[&str],
+        kind: Kind,
+        example: &str,
+    ) -> Result<Column, Box<Diagnostic>> {
         let found: Vec<(usize, &Field<'_>)> =
             self.fields.iter().enumerate().filter(|(_, field)| has_word(field.text, words)).collect();
         match found.as_slice() {
@@ -117,7 +123,9 @@ impl Header<'_> {
             [(index, field)] => self.with_unit(*index, field, kind, example),
             [_, (_, second), ..] => {
                 let fault = self.fault(second, format!("two columns name a {what}"));
-                Err(Box::new(fault.with_help(format!("keep one column with the word `{}`", words.join("` or `")))))
+                Err(Box::new(
+                    fault.with_help(format!("keep one column with the word `{}`", words.join("` or `"))),
+                ))
             }
         }
     }
@@ -145,7 +153,9 @@ impl Header<'_> {
     ) -> Result<Column, Box<Diagnostic>> {
         let Some(unit) = unit(field.text, kind) else {
             let fault = self.fault(field, format!("the column `{}` has no unit", field.text));
-            return Err(Box::new(fault.with_help(format!("put the unit behind the name, such as `{example}`"))));
+            return Err(Box::new(
+                fault.with_help(format!("put the unit behind the name, such as `{example}`")),
+            ));
         };
         match quantity::parse(kind, &format!("1 {unit}")) {
             Ok(scale) => Ok(Column { index, name: field.text.to_owned(), unit: unit.to_owned(), scale }),
@@ -168,7 +178,8 @@ impl Header<'_> {
 
 /// Whether one of the words of a name is one of these.
 fn has_word(name: &str, words: &[&str]) -> bool {
-    name.split(|c: char| !c.is_alphanumeric()).any(|part| words.iter().any(|word| part.eq_ignore_ascii_case(word)))
+    name.split(|c: char| !c.is_alphanumeric())
+        .any(|part| words.iter().any(|word| part.eq_ignore_ascii_case(word)))
 }
 
 /// The unit in a name: between brackets, behind a stroke, or the last word when it is a unit.

@@ -70,23 +70,29 @@ impl Judged {
 /// Most points of a curve for a picture.
 pub const SHOWN: usize = 300;
 
+/// Checks that must be met before friction and interference are inferred: both must stay the same along the travel.
+const STEADY: [CheckKind; 2] = [CheckKind::Steepening, CheckKind::Drop];
+
 /// Judges a record.
 ///
 /// The first touch is where the climb of the force, carried back, begins, less what the same rule finds on the window's own
-/// curve. From there the record is laid over the window; the last 2 % of the engaged length and all beyond are not judged,
+/// curves: the chamfer shifts it by some hundredths of a millimetre, between that of the lower and that of the upper curve as the
+/// slope lies between theirs. From there the record is laid over the window; the last 2 % of the engaged length and all beyond are not judged,
 /// as there the part may meet its shoulder.
 pub fn judge(window: &Window, record: &Record, settings: &Settings) -> Judged {
     let judged_to = window.judged_to();
-    let upper_points = as_points(&window.upper, judged_to);
-    let top = window.top();
-    let bias = climb_begins(&upper_points, top).unwrap_or(0.0);
-    let touch = climb_begins(&record.points, top).map(|begins| begins - bias);
-    let origin = touch.unwrap_or(settings.touch_at);
-    let from_touch: Vec<Point> =
-        record.points.iter().map(|point| Point { travel: point.travel - origin, ..*point }).collect();
+    let (lower_points, upper_points) =
+        (as_points(&window.lower, judged_to), as_points(&window.upper, judged_to));
+    let (lower, upper) = (Engaged::new(window, &lower_points), Engaged::new(window, &upper_points));
+    let begins = climb_begins(&record.points, window.top());
+    let touch = begins.map(|begins| {
+        let slope = Engaged::new(window, &from(&record.points, begins)).slope();
+        let between = share_between(slope, lower.slope(), upper.slope());
+        let bias = |points: &[Point]| climb_begins(points, window.top()).unwrap_or(0.0);
+        begins - (1.0 - between) * bias(&lower_points) - between * bias(&upper_points)
+    });
+    let from_touch = from(&record.points, touch.unwrap_or(settings.touch_at));
     let engaged = Engaged::new(window, &from_touch);
-    let upper = Engaged::new(window, &upper_points);
-    let lower = Engaged::new(window, &as_points(&window.lower, judged_to));
     let shares = Shares {
         course: settings.force_uncertainty,
         drop: settings.drop,
@@ -96,6 +102,7 @@ pub fn judge(window: &Window, record: &Record, settings: &Settings) -> Judged {
     let mut all = vec![start(touch, settings)];
     all.extend(checks::checks(&engaged, &lower, &upper, shares));
     let reach = from_touch.last().map_or(0.0, |point| point.travel);
+    let steady = all.iter().all(|check| !STEADY.contains(&check.kind) || check.ok());
     let tells = tells(&all, window, reach);
     let least = from_touch.first().map_or(0.0, |point| point.travel);
     Judged {
@@ -103,8 +110,21 @@ pub fn judge(window: &Window, record: &Record, settings: &Settings) -> Judged {
         reach,
         tells,
         checks: all,
-        inferred: infer(window, &from_touch, settings.force_uncertainty),
+        inferred: infer(window, &from_touch, settings.force_uncertainty).filter(|_| steady),
         shown: gathered(&from_touch, least, reach, SHOWN),
+    }
+}
+
+/// A curve counted from another travel.
+fn from(points: &[Point], origin: f64) -> Vec<Point> {
+    points.iter().map(|point| Point { travel: point.travel - origin, ..*point }).collect()
+}
+
+/// Where a number lies between two others, 0 to 1; the middle when it is not known.
+fn share_between(value: Option<f64>, low: Option<f64>, high: Option<f64>) -> f64 {
+    match (value, low, high) {
+        (Some(value), Some(low), Some(high)) if high > low => ((value - low) / (high - low)).clamp(0.0, 1.0),
+        _ => 0.5,
     }
 }
 
@@ -129,24 +149,31 @@ fn tells(checks: &[Check], window: &Window, reach: f64) -> Vec<String> {
     let early = |kind: CheckKind| place(kind).is_some_and(|at| at < window.length / 3.0);
     let mut told: Vec<&str> = Vec::new();
     match side(CheckKind::Start) {
-        Side::Missing => told.push("The force never climbs: no part was pressed, or the force has the wrong sign."),
+        Side::Missing => {
+            told.push("The force never climbs: no part was pressed, or the force has the wrong sign.")
+        }
         Side::Above => told.push("The parts touch late: a part is short, not in place, or another one."),
         Side::Below => told.push("The parts touch early: a part is long, not in place, or has a burr."),
         Side::Within => {}
     }
     let drops = side(CheckKind::Drop) == Side::Above;
     let ripples = side(CheckKind::Ripple) == Side::Above;
-    if drops && early(CheckKind::Drop) || early(CheckKind::Course) && side(CheckKind::Course) == Side::Above && drops {
+    let hump = drops && (early(CheckKind::Drop) || early(CheckKind::Course));
+    if hump {
         told.push("A hump that falls again soon after the entry tells of a part that entered askew, or of a burr or a scraping edge.");
     } else if drops {
         told.push("A fall of the force on the way tells of galling that lets go, or of a part that cracks.");
     }
-    if ripples {
+    if ripples && !hump {
         told.push("Ripple tells of stick-slip, the first step to galling: look at lubricant and speed.");
     }
     match side(CheckKind::Steepening) {
-        Side::Above => told.push("A climb that steepens on the way tells of galling: the friction grows while the parts slide."),
-        Side::Below if !drops => told.push("A climb that flattens tells of a taper, a part that yields or lubricant that gets in."),
+        Side::Above => told.push(
+            "A climb that steepens on the way tells of galling: the friction grows while the parts slide.",
+        ),
+        Side::Below if !drops => {
+            told.push("A climb that flattens tells of a taper, a part that yields or lubricant that gets in.")
+        }
         _ => {}
     }
     let (slope, end) = (side(CheckKind::Slope), side(CheckKind::End));

@@ -25,8 +25,7 @@ pub(super) fn line(points: &[(f64, f64)]) -> Option<Line> {
     if spread <= 0.0 || !spread.is_finite() {
         return None;
     }
-    let slope =
-        points.iter().map(|point| (point.0 - mean_x) * (point.1 - mean_y)).sum::<f64>() / spread;
+    let slope = points.iter().map(|point| (point.0 - mean_x) * (point.1 - mean_y)).sum::<f64>() / spread;
     let intercept = mean_y - slope * mean_x;
     let residuals: f64 = points.iter().map(|point| (point.1 - intercept - slope * point.0).powi(2)).sum();
     Some(Line { slope, intercept, slope_error: (residuals / (count - 2.0) / spread).sqrt() })

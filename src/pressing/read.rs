@@ -81,7 +81,8 @@ impl<R: BufRead> Lines<R> {
             }
             self.number += 1;
             if read as u64 == LONGEST_LINE && self.buffer.last() != Some(&b'\n') {
-                let fault = at(Line { bytes: b"", number: self.number }, 1, 1, "this line is longer than 64 KiB");
+                let fault =
+                    at(Line { bytes: b"", number: self.number }, 1, 1, "this line is longer than 64 KiB");
                 return Err(Box::new(fault.with_help("a record has one row a line, in text")));
             }
             if self.number == 1 {
@@ -126,9 +127,11 @@ fn header<R: BufRead>(lines: &mut Lines<R>) -> Result<Columns, Box<Diagnostic>> 
     }
     match blamed {
         Some((_, text, number)) => columns::columns(&text, number),
-        None => Err(Box::new(Diagnostic::new("the record is empty").with_help(
-            "a record is CSV with a header such as `travel (mm),force (kN)` and one row a line",
-        ))),
+        None => {
+            Err(Box::new(Diagnostic::new("the record is empty").with_help(
+                "a record is CSV with a header such as `travel (mm),force (kN)` and one row a line",
+            )))
+        }
     }
 }
 
@@ -166,7 +169,9 @@ impl Rows {
                 self.columns.travel.unit
             );
             let fault = at(line, travel.0.column, travel.0.text.chars().count(), &message);
-            return Err(Box::new(fault.with_help("end the record where the ram stops; leave out the return stroke")));
+            return Err(Box::new(
+                fault.with_help("end the record where the ram stops; leave out the return stroke"),
+            ));
         }
         if self.count == 0 {
             self.first = travel.1;
@@ -205,7 +210,12 @@ impl Rows {
         let value = |field: Option<Field<'t>>, column: &columns::Column| {
             let Some(field) = field else {
                 let message = format!("this row has no column {} (`{}`)", column.index + 1, column.name);
-                return Err(Box::new(at(Line { bytes: text.as_bytes(), number }, 1, text.chars().count(), &message)));
+                return Err(Box::new(at(
+                    Line { bytes: text.as_bytes(), number },
+                    1,
+                    text.chars().count(),
+                    &message,
+                )));
             };
             match decimal(field.text, columns.separator) {
                 Some(value) if (value * column.scale).is_finite() => Ok((field, value * column.scale)),
@@ -227,7 +237,8 @@ impl Rows {
             fault
         };
         if self.count < FEWEST_ROWS {
-            let fault = end(format!("the record has {} rows; a curve needs {FEWEST_ROWS} or more", self.count));
+            let fault =
+                end(format!("the record has {} rows; a curve needs {FEWEST_ROWS} or more", self.count));
             return Err(Box::new(fault.with_help("record more points along the travel")));
         }
         if self.last <= self.first {
@@ -311,7 +322,11 @@ mod tests {
         let head = "travel (mm),force (kN)\n";
         let good = body(',', false);
         for (text, message, place) in [
-            (format!("{head}{good}30.1,nan\n"), "`nan` in column `force (kN)` is not a finite number", (32, 6)),
+            (
+                format!("{head}{good}30.1,nan\n"),
+                "`nan` in column `force (kN)` is not a finite number",
+                (32, 6),
+            ),
             (format!("{head}{good}31,1e400\n"), "`1e400` in column", (32, 4)),
             (format!("{head}{good}28.5,3\n"), "the travel goes back from 29.5 to 28.5 mm", (32, 1)),
             (format!("{head}{good}31,\n"), "there is no number in column `force (kN)`", (32, 4)),

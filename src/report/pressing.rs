@@ -248,8 +248,7 @@ fn inferred_sentences(inferred: Option<&Inferred>, window: &Window, system: Unit
     };
     let pressure = |value: f64| show(Measure::Pressure, value, system).to_string();
     let deviation = |value: f64| show(Measure::Deviation, value, system).to_string();
-    let mut all =
-        vec![format!("Friction times contact pressure: {}.", bounded(inferred.product, pressure))];
+    let mut all = vec![format!("Friction times contact pressure: {}.", bounded(inferred.product, pressure))];
     let friction = bounded(inferred.friction, |value| number(value, 3));
     if inferred.measured {
         all.push(format!(
@@ -285,14 +284,27 @@ fn many(out: &mut String, told: &Told<'_>, entries: &[Entry]) {
     line(
         out,
         format!(
-            "{:<26}{:>8}{:>10}{:>9}{:>9}{:>9}  {}",
+            "{:<26}{:>9}{:>9}{:>9}{:>9}{:>9}  {}",
             "record",
-            format!("start {}", unit(CheckUnit::Travel)),
-            unit(CheckUnit::Slope),
-            format!("peak {}", unit(CheckUnit::Force)),
-            format!("end {}", unit(CheckUnit::Force)),
-            "friction",
+            "start",
+            "slope",
+            "peak",
+            "end",
+            if told.window.measured { "friction" } else { "μ·p" },
             "verdict"
+        ),
+    );
+    let of_product = if told.window.measured { "" } else { display_unit(Measure::Pressure, system).name };
+    line(
+        out,
+        format!(
+            "{:<26}{:>9}{:>9}{:>9}{:>9}{:>9}",
+            "",
+            unit(CheckUnit::Travel),
+            unit(CheckUnit::Slope),
+            unit(CheckUnit::Force),
+            unit(CheckUnit::Force),
+            of_product
         ),
     );
     for entry in entries {
@@ -304,7 +316,7 @@ fn many(out: &mut String, told: &Told<'_>, entries: &[Entry]) {
 }
 
 fn row(entry: &Entry, system: UnitSystem) -> String {
-    let name = tail(&plain(&entry.file), 25);
+    let name = tail(&plain(short(&entry.file)), 25);
     let Ok(seen) = &entry.outcome else {
         return format!("{name:<26}{:>45}  {BAD}NOT READ{BAD:#}", "");
     };
@@ -313,16 +325,29 @@ fn row(entry: &Entry, system: UnitSystem) -> String {
         let found = judged.check(kind).and_then(|check| check.found);
         found.map_or("–".to_owned(), |found| number(in_unit(found, kind.unit(), system), 3))
     };
-    let friction = judged.inferred.map(|inferred| inferred.friction.best).filter(|best| best.is_finite());
     format!(
-        "{name:<26}{:>8}{:>10}{:>9}{:>9}{:>9}  {}",
+        "{name:<26}{:>9}{:>9}{:>9}{:>9}{:>9}  {}",
         cell(CheckKind::Start),
         cell(CheckKind::Slope),
         cell(CheckKind::Peak),
         cell(CheckKind::End),
-        friction.map_or("–".to_owned(), |friction| number(friction, 3)),
+        friction_or_product(judged, system),
         verdict(judged.ok())
     )
+}
+
+/// The friction of measured parts, else friction times pressure.
+fn friction_or_product(judged: &Judged, system: UnitSystem) -> String {
+    let best = judged.inferred.map(|inferred| match inferred.measured {
+        true => inferred.friction.best,
+        false => display_unit(Measure::Pressure, system).of(inferred.product.best),
+    });
+    best.filter(|best| best.is_finite()).map_or("–".to_owned(), |best| number(best, 3))
+}
+
+/// A file without its folder.
+fn short(name: &str) -> &str {
+    name.rsplit(['/', '\\']).next().unwrap_or(name)
 }
 
 /// The end of a name that is too long.
@@ -357,7 +382,11 @@ fn unmet(judged: &Judged) -> String {
         .checks
         .iter()
         .filter(|check| !check.ok())
-        .map(|check| if check.kind == CheckKind::Course { "course within the window" } else { check.kind.name() })
+        .map(
+            |check| {
+                if check.kind == CheckKind::Course { "course within the window" } else { check.kind.name() }
+            },
+        )
         .collect();
     names.join(", ")
 }

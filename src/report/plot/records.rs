@@ -20,8 +20,9 @@ const OUT: &str = "#9b1c1c";
 /// Records counted from first touch, over the band between the loosest and the tightest pair.
 pub fn press_records(id: &str, window: &Window, records: &[(&str, &Judged)], system: UnitSystem) -> Plot {
     let units = Units { system };
-    let on_axes =
-        |travel: f64, force: f64| (units.on_axis(Measure::Size, travel), units.on_axis(Measure::Force, force));
+    let on_axes = |travel: f64, force: f64| {
+        (units.on_axis(Measure::Size, travel), units.on_axis(Measure::Force, force))
+    };
     let course = |points: &[(f64, f64)]| -> Vec<Point> { points.iter().map(|p| on_axes(p.0, p.1)).collect() };
     let (lower, upper) = (course(&window.lower), course(&window.upper));
     let drawn = drawn(records);
@@ -40,9 +41,14 @@ pub fn press_records(id: &str, window: &Window, records: &[(&str, &Judged)], sys
             7,
             format!("travel from first touch, {}", units.unit(Measure::Size)),
         ),
-        Axis::new(0.0, units.on_axis(Measure::Force, 1.08 * top), 6, format!("press force, {}", units.unit(Measure::Force))),
+        Axis::new(
+            0.0,
+            units.on_axis(Measure::Force, 1.08 * top),
+            6,
+            format!("press force, {}", units.unit(Measure::Force)),
+        ),
         340.0,
-        Margins { left: 62.0, right: 170.0, top: 30.0, bottom: 44.0 },
+        Margins { left: 62.0, right: 146.0, top: 30.0, bottom: 44.0 },
     );
     let inside = |points: &mut Vec<Point>| {
         let (x, y) = ((chart.x.from, chart.x.to), (chart.y.from, chart.y.to));
@@ -79,7 +85,7 @@ pub fn press_records(id: &str, window: &Window, records: &[(&str, &Judged)], sys
     let names = curves.iter().filter(|(_, ok, _)| !*ok || single).take(MOST_NAMES);
     for (name, ok, points) in names {
         if let Some(last) = points.last() {
-            chart.tag(*last, fitted(short(name), 12.0, 150.0), if *ok { INK } else { OUT }, Side::Right);
+            chart.tag(*last, fitted(short(name), 12.0, 130.0), if *ok { INK } else { OUT }, Side::Right);
         }
     }
     let x = units.on_axis(Measure::Size, window.judged_to());

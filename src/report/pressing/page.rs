@@ -3,11 +3,11 @@
 use maud::{Markup, PreEscaped, html as markup};
 
 use super::{
-    Count, Entry, Seen, Told, allowed, cautions, count, in_unit, inferred_sentences, place, read_as, unit_name,
-    unmet, value,
+    Count, Entry, Seen, Told, allowed, cautions, count, friction_or_product, in_unit, inferred_sentences,
+    place, read_as, short, unit_name, unmet, value,
 };
 use crate::pressing::checks::{CheckKind, CheckUnit};
-use crate::quantity::number;
+use crate::quantity::{Measure, display_unit, number};
 use crate::report::plot::{self, Plot};
 use crate::report::typeset::{self, prose};
 
@@ -94,19 +94,28 @@ fn all_records(told: &Told<'_>) -> Markup {
     let cell = |seen: &Seen, kind: CheckKind| {
         let check = seen.judged.check(kind);
         let found = check.and_then(|check| check.found);
-        let text = found.map_or("–".to_owned(), |found| typeset::number(&number(in_unit(found, kind.unit(), system), 3)));
+        let text = found.map_or("–".to_owned(), |found| {
+            typeset::number(&number(in_unit(found, kind.unit(), system), 3))
+        });
         let missed = check.is_some_and(|check| !check.ok());
         markup! { td.r { span.missed[missed] { (text) } } }
     };
-    let shown = [CheckKind::Start, CheckKind::Slope, CheckKind::Peak, CheckKind::End, CheckKind::Drop, CheckKind::Ripple];
+    let shown = [
+        CheckKind::Start,
+        CheckKind::Slope,
+        CheckKind::Peak,
+        CheckKind::End,
+        CheckKind::Drop,
+        CheckKind::Ripple,
+    ];
     let row = |entry: &Entry| {
         markup! {
             tr {
-                th scope="row" { (entry.file) }
+                th scope="row" { (short(&entry.file)) }
                 @match &entry.outcome {
                     Ok(seen) => {
                         @for kind in shown { (cell(seen, kind)) }
-                        td.r { (friction(seen)) }
+                        td.r { (friction_or_product(&seen.judged, system)) }
                         td { span.missed[!seen.judged.ok()] { (if seen.judged.ok() { "within" } else { "OUT" }) } }
                     }
                     Err(fault) => {
@@ -125,28 +134,24 @@ fn all_records(told: &Told<'_>) -> Markup {
                     thead {
                         tr {
                             th scope="col" { "Record" }
-                            @for kind in shown { th.r scope="col" { (kind.name()) span.unit { (unit(kind.unit())) } } }
-                            th.r scope="col" { "friction" }
+                            @for kind in shown { th.r scope="col" { (kind.key()) span.unit { (unit(kind.unit())) } } }
+                            th.r scope="col" { @if told.window.measured { "friction" } @else { "friction × pressure" span.unit { (display_unit(Measure::Pressure, system).name) } } }
                             th scope="col" { "Verdict" }
                         }
                     }
                     tbody { @for entry in told.entries { (row(entry)) } }
                 }
             }
-            p.small { "A number that is not met is bold. The friction is the best value for the mean pair; its limits stand in the JSON." }
+            p.small { "A number that is not met is bold. Limits of what is inferred stand in the JSON." }
         }
     }
-}
-
-fn friction(seen: &Seen) -> String {
-    let best = seen.judged.inferred.map(|inferred| inferred.friction.best).filter(|best| best.is_finite());
-    best.map_or("–".to_owned(), |best| number(best, 3))
 }
 
 /// A section for the only record, or for each record that is out or not readable.
 fn each(told: &Told<'_>) -> Markup {
     let only = told.entries.len() == 1;
-    let picked = told.entries.iter().filter(|entry| only || !matches!(&entry.outcome, Ok(seen) if seen.judged.ok()));
+    let picked =
+        told.entries.iter().filter(|entry| only || !matches!(&entry.outcome, Ok(seen) if seen.judged.ok()));
     let mut pictures = 0;
     let sections: Vec<Markup> = picked
         .map(|entry| match &entry.outcome {
