@@ -10,6 +10,7 @@ mod limits;
 mod materials;
 mod new;
 mod output;
+mod pressing;
 mod report;
 mod scatter;
 mod schema;
@@ -77,6 +78,7 @@ enum Command {
     Scatter(scatter::Arguments),
     Sort(sort::Arguments),
     Batch(batch::Arguments),
+    Pressing(pressing::Arguments),
     Materials(materials::Arguments),
     New(new::Arguments),
     Schema(schema::Arguments),
@@ -92,6 +94,7 @@ impl Command {
             Self::Choose(arguments) => arguments.json,
             Self::Scatter(arguments) => arguments.json,
             Self::Sort(arguments) => arguments.json,
+            Self::Pressing(arguments) => arguments.json,
             _ => false,
         }
     }
@@ -122,6 +125,7 @@ fn run(line: CommandLine, output: &Output) -> Result<Ending, Failure> {
         Command::Scatter(arguments) => scatter::run(&arguments, folder, output),
         Command::Sort(arguments) => sort::run(&arguments, folder, output),
         Command::Batch(arguments) => batch::run(&arguments, folder, output),
+        Command::Pressing(arguments) => pressing::run(&arguments, folder, output),
         Command::Materials(arguments) => materials::run(&arguments, folder, output),
         Command::New(arguments) => new::run(&arguments, output),
         Command::Schema(arguments) => schema::run(&arguments, output),

@@ -9,6 +9,7 @@ pub mod limits;
 pub mod materials;
 pub mod mathml;
 pub mod plot;
+pub mod pressing;
 pub mod scatter;
 pub mod service;
 pub mod sort;

@@ -1,5 +1,6 @@
 //! Plots: tolerance zones, stress through the walls, press force along the travel, diameters against temperature,
 //! pressure along a stepped joint, what is left of the grip at work.
+//! what is left of the grip at work, recorded press-in curves.
 
 mod along;
 mod axis;
@@ -7,6 +8,7 @@ mod chart;
 mod envelope;
 mod population;
 mod press;
+mod records;
 mod stress;
 mod tags;
 mod temperature;
@@ -22,6 +24,7 @@ pub use along::along;
 pub use envelope::envelope;
 pub use population::population;
 pub use press::press_force;
+pub use records::press_records;
 pub use stress::stress;
 pub use temperature::diameters;
 pub use windows::interference_windows;
