@@ -199,19 +199,19 @@ fn both_engines_agree_over_random_populations() {
     for case in 0..24 {
         let hole = random(&mut generator, 12e-6, 6e-6);
         let shaft = random(&mut generator, 45e-6, 5e-6);
-        let friction = random(&mut generator, 0.12, 0.02);
+        let friction = random(&mut generator, 0.12, 0.012);
         let mut model = model(hole, shaft, friction, 0.0);
         model.smoothing_factor = 0.8;
         model.loss_under_stress = case % 2 == 0;
         model.shop_thermal = f64::from(case % 3) * 1e-6;
         model.states[0].thermal = f64::from(case % 5 - 2) * 3e-6;
-        model.population.hub_roughness = random(&mut generator, 6e-6, 1.5e-6);
-        model.population.shaft_roughness = random(&mut generator, 4e-6, 1e-6);
+        model.population.hub_roughness = random(&mut generator, 6e-6, 0.6e-6);
+        model.population.shaft_roughness = random(&mut generator, 4e-6, 0.4e-6);
         if case % 3 == 0 {
             model.population.hub_modulus = random(&mut generator, 200e9, 6e9);
             model.population.shaft_modulus = random(&mut generator, 205e9, 4e9);
         }
-        model.population.pressing = random(&mut generator, 0.11, 0.02);
+        model.population.pressing = random(&mut generator, 0.11, 0.012);
         let settings = Settings { samples: 100_000, seed: case as u64, slip_safety: 1.5 };
         let scatter = scatter(model, settings).unwrap();
         for event in scatter.slips.iter().chain(&scatter.failures) {

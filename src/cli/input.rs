@@ -60,6 +60,11 @@ pub fn joint_without_fit(path: &Path, set: &[(String, String)], library: &Librar
     read::read_without_fit(&bytes, &shown(path), set, library).map_err(Failure::Input)
 }
 
+/// The text of a joint file that a table completes.
+pub fn base(path: &Path) -> Result<String, Failure> {
+    read::text_to_complete(&bytes(path)?, &shown(path)).map_err(Failure::Input)
+}
+
 /// The name a file goes by in messages.
 pub fn shown(path: &Path) -> PathBuf {
     if path == Path::new("-") { PathBuf::from("<stdin>") } else { path.to_path_buf() }

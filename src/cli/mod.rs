@@ -1,5 +1,6 @@
 //! The command line: one file a command, one place where it ends.
 
+mod batch;
 mod check;
 mod choose;
 mod completions;
@@ -13,6 +14,7 @@ mod report;
 mod scatter;
 mod schema;
 mod sort;
+mod whole;
 
 use std::path::PathBuf;
 use std::process::ExitCode;
@@ -74,6 +76,7 @@ enum Command {
     Choose(choose::Arguments),
     Scatter(scatter::Arguments),
     Sort(sort::Arguments),
+    Batch(batch::Arguments),
     Materials(materials::Arguments),
     New(new::Arguments),
     Schema(schema::Arguments),
@@ -118,6 +121,7 @@ fn run(line: CommandLine, output: &Output) -> Result<Ending, Failure> {
         Command::Choose(arguments) => choose::run(&arguments, folder, output),
         Command::Scatter(arguments) => scatter::run(&arguments, folder, output),
         Command::Sort(arguments) => sort::run(&arguments, folder, output),
+        Command::Batch(arguments) => batch::run(&arguments, folder, output),
         Command::Materials(arguments) => materials::run(&arguments, folder, output),
         Command::New(arguments) => new::run(&arguments, output),
         Command::Schema(arguments) => schema::run(&arguments, output),

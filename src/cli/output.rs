@@ -1,14 +1,14 @@
 //! Where results go: standard output, or a file that is written whole or not at all.
 
-use std::fs;
 use std::io::{self, IsTerminal, Write};
-use std::path::{Path, PathBuf};
+use std::path::Path;
 
 use anstream::{AutoStream, ColorChoice};
 use hubgrip::diagnostic::Diagnostic;
 
 use super::Colour;
 use super::exit::Failure;
+use super::whole::Whole;
 
 /// The two streams with the colour that was asked for.
 pub struct Output {
@@ -57,7 +57,11 @@ impl Output {
         if path == Path::new("-") {
             return self.result(text);
         }
-        write_whole(path, text.as_bytes()).map_err(|error| unwritable(path, &error))
+        let written = Whole::create(path).and_then(|mut file| {
+            file.write_all(text.as_bytes())?;
+            file.finish()
+        });
+        written.map_err(|error| unwritable(path, &error))
     }
 
     /// Standard output, refused when it is a terminal and the text is not for reading.
@@ -71,7 +75,8 @@ impl Output {
     }
 }
 
-fn unwritable(path: &Path, error: &io::Error) -> Failure {
+/// An output that cannot be written; a reader that has gone is no error.
+pub fn unwritable(path: &Path, error: &io::Error) -> Failure {
     if error.kind() == io::ErrorKind::BrokenPipe {
         return Failure::PipeClosed;
     }
@@ -79,48 +84,4 @@ fn unwritable(path: &Path, error: &io::Error) -> Failure {
         .in_file(path)
         .with_help("give a file in a folder that exists and may be written")
         .into()
-}
-
-/// Writes through a temporary file in the same folder, so that the target is whole or untouched.
-///
-/// A device or pipe is written straight; a symbolic link keeps pointing where it does.
-fn write_whole(path: &Path, bytes: &[u8]) -> io::Result<()> {
-    let target = match fs::canonicalize(path) {
-        Ok(target) => target,
-        Err(error) if error.kind() == io::ErrorKind::NotFound => path.to_path_buf(),
-        Err(error) => return Err(error),
-    };
-    let existing = fs::metadata(&target).ok();
-    if existing.as_ref().is_some_and(fs::Metadata::is_dir) {
-        return Err(io::Error::new(io::ErrorKind::IsADirectory, "it is a folder"));
-    }
-    if existing.as_ref().is_some_and(|found| !found.is_file()) {
-        return fs::OpenOptions::new().write(true).open(&target)?.write_all(bytes);
-    }
-    let mut temporary = tempfile::Builder::new().prefix(".hubgrip-").tempfile_in(folder(&target))?;
-    temporary.write_all(bytes)?;
-    temporary.as_file().sync_all()?;
-    permissions(temporary.path(), existing.as_ref())?;
-    temporary.persist(&target).map_err(|error| error.error)?;
-    Ok(())
-}
-
-fn folder(target: &Path) -> PathBuf {
-    match target.parent() {
-        Some(parent) if parent != Path::new("") => parent.to_path_buf(),
-        _ => PathBuf::from("."),
-    }
-}
-
-/// A new file gets the usual mode, a replaced one keeps its own.
-#[cfg(unix)]
-fn permissions(path: &Path, existing: Option<&fs::Metadata>) -> io::Result<()> {
-    use std::os::unix::fs::PermissionsExt;
-    let mode = existing.map_or(0o644, |found| found.permissions().mode());
-    fs::set_permissions(path, fs::Permissions::from_mode(mode))
-}
-
-#[cfg(not(unix))]
-fn permissions(_: &Path, _: Option<&fs::Metadata>) -> io::Result<()> {
-    Ok(())
 }

@@ -83,6 +83,19 @@ pub fn read_bytes(
     read(text, file, set, library)
 }
 
+/// The text of a joint file that other values will complete: UTF-8 and YAML with keys, nothing else is asked yet.
+///
+/// # Errors
+/// What [`read_bytes`] would say before it looks at any key.
+pub fn text_to_complete(bytes: &[u8], file: &Path) -> Result<String, Vec<Diagnostic>> {
+    let fault = |fault: Box<Diagnostic>| vec![fault.in_file(file)];
+    let text = text_of(bytes).map_err(fault)?;
+    let plain = text.strip_prefix('\u{feff}').unwrap_or(text);
+    let tree = tree_of(plain).map_err(fault)?;
+    refuse_other_shapes(plain, &tree).map_err(fault)?;
+    Ok(text.to_owned())
+}
+
 /// As [`read_bytes`], but the key `fit` may be missing: the joint then has no fit, for the one that chooses it.
 ///
 /// # Errors

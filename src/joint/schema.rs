@@ -24,6 +24,53 @@ pub fn schema() -> String {
     text
 }
 
+/// Every key of the joint file by its path, such as `hub.outer_diameter`; `*` stands for the place in a list, as in
+/// `duty.*.torque`. The keys of a material written in place are among them.
+///
+/// # Example
+/// ```
+/// let keys = hubgrip::joint::schema::keys();
+/// assert!(keys.iter().any(|key| key == "hub.outer_diameter"));
+/// assert!(keys.iter().any(|key| key == "duty.*.torque"));
+/// ```
+pub fn keys() -> Vec<String> {
+    let generator = SchemaSettings::draft07().into_generator();
+    let schema = generator.into_root_schema_for::<JointFile>().to_value();
+    let mut keys = Vec::new();
+    collect_keys(&schema, &schema, "", DEEPEST_KEY, &mut keys);
+    keys.sort();
+    keys.dedup();
+    keys
+}
+
+/// Most sections a key lies within.
+const DEEPEST_KEY: usize = 6;
+
+/// The keys below a piece of the schema, through references, choices and lists.
+fn collect_keys(root: &Value, piece: &Value, path: &str, depth: usize, keys: &mut Vec<String>) {
+    if depth == 0 {
+        return;
+    }
+    if let Some(name) = piece.get("$ref").and_then(Value::as_str).and_then(|name| name.strip_prefix('#'))
+        && let Some(found) = root.pointer(name)
+    {
+        collect_keys(root, found, path, depth - 1, keys);
+    }
+    for choices in ["allOf", "anyOf", "oneOf"] {
+        for choice in piece.get(choices).and_then(Value::as_array).into_iter().flatten() {
+            collect_keys(root, choice, path, depth, keys);
+        }
+    }
+    let below = |key: &str| if path.is_empty() { key.to_owned() } else { format!("{path}.{key}") };
+    for (key, value) in piece.get("properties").and_then(Value::as_object).into_iter().flatten() {
+        keys.push(below(key));
+        collect_keys(root, value, &below(key), depth, keys);
+    }
+    if let Some(items) = piece.get("items") {
+        collect_keys(root, items, &below("*"), depth, keys);
+    }
+}
+
 /// Takes out the null that an optional key allows: a key without a value is refused.
 fn without_null(schema: &mut Value) {
     match schema {

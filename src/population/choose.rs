@@ -6,7 +6,7 @@
 
 mod candidate;
 mod change;
-mod judge;
+pub(in crate::population) mod judge;
 
 use thiserror::Error;
 

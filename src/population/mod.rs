@@ -2,6 +2,7 @@
 //!
 //! | module | subject |
 //! |---|---|
+//! | [`batch`] | a table of joints, one row a joint, streamed |
 //! | [`mod@choose`] | which standard fits meet the requirements, ranked |
 //! | [`kernel`] | a joint of two rings prepared once and evaluated without allocation |
 //! | [`distribution`] | how a size, a coefficient or a modulus scatters |
@@ -10,6 +11,7 @@
 //! | [`scatter`] | interference, pressure, stress, capacity of a population; chance of slip and of yield |
 //! | [`sort`] | selective assembly: groups, mates, exact matching of measured parts |
 
+pub mod batch;
 pub mod choose;
 pub mod distribution;
 pub mod integration;

@@ -16,7 +16,7 @@ use rayon::prelude::*;
 pub const CHUNK: u64 = 1 << 16;
 
 /// Samples that go through the formulas together.
-pub const BLOCK: usize = 1 << 10;
+pub const BLOCK: usize = 1 << 8;
 
 /// Most samples that are drawn.
 pub const MOST_SAMPLES: u64 = 10_000_000_000;

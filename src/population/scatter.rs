@@ -94,6 +94,16 @@ pub enum ScatterError {
         /// Key of the population.
         what: &'static str,
     },
+    /// Two measured lists have more different interferences than can be added to a scattering loss.
+    #[error(
+        "the measured holes and shafts have {count} different interferences: at most {most} can be added to a roughness that scatters"
+    )]
+    TooManyValues {
+        /// How many.
+        count: usize,
+        /// How many at most.
+        most: usize,
+    },
     /// A length or factor of the joint is not positive.
     #[error("a length or factor of the joint is {given}, it must be more than zero")]
     Geometry {

@@ -51,7 +51,7 @@ fn counted(estimate: Estimate) -> String {
     let (low, high) = estimate.interval();
     if !estimate.is_quotable() {
         return format!(
-            "{} of {}, too few to quote a share (below 100/n); {} % sure: at most {}",
+            "{} of {}, no share is quoted below 100/n; {} % sure: at most {}",
             estimate.count,
             estimate.samples,
             CONFIDENCE * 100.0,
@@ -133,10 +133,19 @@ fn agreement(scatter: &Scatter) -> String {
         .map(|event| event.what.as_str())
         .collect();
     if apart.is_empty() {
-        "The two engines agree: every count lies within 4 standard errors of the integrated probability."
+        "The two engines agree: every count lies within 4 standard errors (and the grain of 4 counts) of what is integrated."
             .to_owned()
     } else {
         format!("THE TWO ENGINES DO NOT AGREE on {}: trust neither.", apart.join(", "))
+    }
+}
+
+/// A name that fits a column.
+fn short_name(quantity: Quantity) -> &'static str {
+    match quantity {
+        Quantity::EffectiveInterference => "of it grips",
+        Quantity::TorqueCapacity => "torque",
+        other => other.name(),
     }
 }
 
@@ -151,45 +160,32 @@ fn shown(value: f64, quantity: Quantity, system: UnitSystem) -> String {
 
 fn quantities(out: &mut String, told: &Told<'_>) {
     let system = told.joint.display;
-    let percent = |level: f64| format!("{} %", number(level * 100.0, 5));
     let picked = [0usize, 1, 3, 5, 6];
-    let _ = write!(out, "{:<25}{:>9}", "", "least*");
-    for index in picked {
-        let _ = write!(out, "{:>9}", percent(LEVELS[index]));
+    let _ = write!(out, "{:<22}{:>8}", "", "least");
+    for level in picked.iter().filter_map(|index| LEVELS.get(*index)) {
+        let _ = write!(out, "{:>8}", format!("{}%", number(level * 100.0, 5)));
     }
-    line(out, format!("{:>9}", "greatest*"));
-    let row = |out: &mut String,
-               name: &str,
-               spread: &Spread,
-               pick: fn(&(f64, f64, f64)) -> f64,
-               ends: Option<(f64, f64)>| {
-        let cell = |value: f64| shown(value, spread.quantity, system);
-        let _ = write!(out, "{name:<25}{:>9}", ends.map_or(String::new(), |ends| cell(ends.0)));
-        for index in picked {
-            let _ =
-                write!(out, "{:>9}", spread.percentiles.get(index).map_or(String::new(), |p| cell(pick(p))));
-        }
-        line(out, format!("{:>9}", ends.map_or(String::new(), |ends| cell(ends.1))));
-    };
+    line(out, format!("{:>9}", "greatest"));
     for spread in &told.scatter.quantities {
+        let cell = |value: f64| shown(value, spread.quantity, system);
+        let (least, greatest) = told.scatter.model.limits(spread.quantity);
         let unit = display_unit(measure(spread.quantity), system).name;
-        let name = match spread.quantity {
-            Quantity::EffectiveInterference => "that grips",
-            other => other.name(),
-        };
-        row(
-            out,
-            &format!("{name}, {unit}"),
-            spread,
-            |p| p.1,
-            Some(told.scatter.model.limits(spread.quantity)),
-        );
-        row(out, "  counted", spread, |p| p.2, None);
+        let _ = write!(out, "{:<22}{:>8}", format!("{}, {unit}", short_name(spread.quantity)), cell(least));
+        let percentiles = || picked.iter().filter_map(|index| spread.percentiles.get(*index));
+        percentiles().for_each(|percentile| {
+            let _ = write!(out, "{:>8}", cell(percentile.1));
+        });
+        line(out, format!("{:>9}", cell(greatest)));
+        let _ = write!(out, "{:<30}", "  counted");
+        percentiles().for_each(|percentile| {
+            let _ = write!(out, "{:>8}", cell(percentile.2));
+        });
+        line(out, "");
     }
     paragraph(
         out,
-        "* ",
-        "the arithmetic limits: the loosest and the tightest pair with the ends of the friction range; a share of the parts \
+        "",
+        "least and greatest are the arithmetic limits: the loosest and the tightest pair with the ends of the friction range; a share of the parts \
          may lie outside them when the distributions are not cut",
     );
     line(out, "");

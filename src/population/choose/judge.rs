@@ -35,9 +35,9 @@ pub enum Subject {
 
 /// Interference of the loosest and of the tightest pair as made, m.
 #[derive(Debug, Clone, Copy, PartialEq)]
-pub(super) struct Made {
-    pub(super) loosest: f64,
-    pub(super) tightest: f64,
+pub(in crate::population) struct Made {
+    pub(in crate::population) loosest: f64,
+    pub(in crate::population) tightest: f64,
 }
 
 /// One requirement with the interferences that meet it.
@@ -81,16 +81,24 @@ impl Window {
     }
 }
 
+/// Which of the three questions are answered as required.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(in crate::population) struct Met {
+    pub(in crate::population) hold: bool,
+    pub(in crate::population) strength: bool,
+    pub(in crate::population) assembly: bool,
+}
+
 /// A joint with its requirements, ready to judge any interference.
 #[derive(Debug, Clone)]
-pub(super) struct Judge<'a> {
+pub(in crate::population) struct Judge<'a> {
     joint: &'a Joint,
     plain: PlainJoint,
     joining: PlainJoining<'a>,
 }
 
 impl<'a> Judge<'a> {
-    pub(super) fn of(joint: &'a Joint) -> Result<Self, KernelError> {
+    pub(in crate::population) fn of(joint: &'a Joint) -> Result<Self, KernelError> {
         let judge = Self { joint, plain: PlainJoint::of(joint)?, joining: PlainJoining::of(joint)? };
         // What the press formulas refuse whatever the interference is told at once.
         judge.plain.press_force(1.0, 1e-6, judge.plain.pressing.high)?;
@@ -99,6 +107,30 @@ impl<'a> Judge<'a> {
 
     pub(super) fn joint(&self) -> &Joint {
         self.joint
+    }
+
+    pub(in crate::population) fn plain(&self) -> &PlainJoint {
+        &self.plain
+    }
+
+    pub(in crate::population) fn joining(&self) -> &PlainJoining<'a> {
+        &self.joining
+    }
+
+    /// Whether a fit meets all that each of the three questions asks.
+    pub(in crate::population) fn verdicts(&self, made: Made) -> Met {
+        let mut met = Met { hold: true, strength: true, assembly: true };
+        self.each_subject(|subject| {
+            let ok = self.meets(subject, made);
+            match subject {
+                Subject::Slip(_) | Subject::GapingEdge(_) => met.hold &= ok,
+                Subject::ShaftStrength | Subject::HubStrength | Subject::LoadedEdge(_) => met.strength &= ok,
+                Subject::PressForce | Subject::HubTemperature | Subject::ShaftTemperature => {
+                    met.assembly &= ok;
+                }
+            }
+        });
+        met
     }
 
     /// Every requirement of the joint with its edges, in the order of the verdicts of a check.
@@ -124,25 +156,32 @@ impl<'a> Judge<'a> {
     }
 
     fn subjects(&self) -> Vec<Subject> {
+        let mut subjects = Vec::new();
+        self.each_subject(|subject| subjects.push(subject));
+        subjects
+    }
+
+    /// What is judged, in the order of the verdicts of a check.
+    fn each_subject(&self, mut take: impl FnMut(Subject)) {
         let states = &self.plain.states;
-        let numbers = |wanted: fn(&Condition) -> bool, subject: fn(usize) -> Subject| {
-            let all = states.iter().enumerate().filter(move |(_, state)| wanted(state));
-            all.map(move |(number, _)| subject(number))
+        let mut each = |wanted: fn(&Condition) -> bool, subject: fn(usize) -> Subject| {
+            let all = states.iter().enumerate().filter(|(_, state)| wanted(state));
+            all.for_each(|(number, _)| take(subject(number)));
         };
-        let mut subjects: Vec<Subject> =
-            numbers(|state| state.slip_safety_per_pressure.is_some(), Subject::Slip).collect();
-        subjects.extend(numbers(|state| state.edge_change.is_some(), Subject::GapingEdge));
-        subjects.extend([Subject::ShaftStrength, Subject::HubStrength]);
+        each(|state| state.slip_safety_per_pressure.is_some(), Subject::Slip);
+        each(|state| state.edge_change.is_some(), Subject::GapingEdge);
+        take(Subject::ShaftStrength);
+        take(Subject::HubStrength);
         if self.plain.onset().is_some() {
-            subjects.extend(numbers(|state| state.edge_change.is_some(), Subject::LoadedEdge));
+            let bent = states.iter().enumerate().filter(|(_, state)| state.edge_change.is_some());
+            bent.for_each(|(number, _)| take(Subject::LoadedEdge(number)));
         }
         match self.joint.assembly.method {
-            Method::Press if self.joint.require.press_force.is_some() => subjects.push(Subject::PressForce),
+            Method::Press if self.joint.require.press_force.is_some() => take(Subject::PressForce),
             Method::Press => {}
-            Method::HeatHub | Method::HeatAndChill => subjects.push(Subject::HubTemperature),
-            Method::ChillShaft => subjects.push(Subject::ShaftTemperature),
+            Method::HeatHub | Method::HeatAndChill => take(Subject::HubTemperature),
+            Method::ChillShaft => take(Subject::ShaftTemperature),
         }
-        subjects
     }
 
     fn required(&self, subject: Subject) -> Option<f64> {

@@ -170,9 +170,23 @@ impl Law {
     }
 }
 
+/// Values closer than this share of the whole span are one: sums of rounded measurements that only rounding parts.
+const ONE: f64 = 1e-10;
+
 fn in_order(mut atoms: Vec<Atom>) -> Vec<Atom> {
     atoms.sort_by(|a, b| a.value.total_cmp(&b.value));
-    atoms
+    let near = match atoms.as_slice() {
+        [first, .., last] => ONE * (last.value - first.value),
+        _ => 0.0,
+    };
+    let mut merged: Vec<Atom> = Vec::with_capacity(atoms.len());
+    for atom in atoms {
+        match merged.last_mut() {
+            Some(last) if atom.value - last.value <= near => last.share += atom.share,
+            _ => merged.push(atom),
+        }
+    }
+    merged
 }
 
 fn sums(a: &[f64], b: &[f64]) -> Vec<f64> {

@@ -32,7 +32,7 @@ impl Estimate {
         (share * (1.0 - share) / self.samples.max(1) as f64).sqrt()
     }
 
-    /// Whether the estimate may be quoted: not below P = 100/n, nor above 1 − 100/n unless it is 1 in truth.
+    /// Whether the estimate may be quoted: not below P = 100/n.
     pub fn is_quotable(&self) -> bool {
         self.count >= LEAST_COUNT
     }

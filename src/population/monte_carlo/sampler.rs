@@ -1,7 +1,7 @@
 //! Random values of a distribution, fast enough not to be the bottleneck.
 //!
 //! A continuous distribution is drawn through its quantile function, which is held as cubics on cells that narrow
-//! towards both tails by octaves of the remaining share, 2⁻¹ down to 2⁻⁵⁵: the relative width of a cell is the
+//! towards both tails by octaves of the remaining share, 2⁻¹ down to 2⁻⁵⁴: the relative width of a cell is the
 //! same everywhere, so the tails are as good as the middle.
 
 use rand::Rng;
@@ -14,15 +14,17 @@ const CELL_BITS: u32 = 5;
 /// Cells of one octave.
 const CELLS: usize = 1 << CELL_BITS;
 /// Octaves of the share on each side.
-const OCTAVES: usize = 54;
-/// Biased exponent with cell of the uppermost cell: shares just below one half.
-const UPPERMOST: usize = ((1023 - 2) << CELL_BITS) | (CELLS - 1);
+const OCTAVES: usize = 53;
+/// Biased exponent with cell of the uppermost cell of a whole number below 2⁵³, which stands for a share of 2⁻⁵⁴.
+const UPPERMOST: usize = ((1023 + 52) << CELL_BITS) | (CELLS - 1);
 
 /// Draws values of one distribution.
 #[derive(Debug, Clone)]
 pub enum Sampler {
     /// Always the same value.
     Fixed(f64),
+    /// Every value alike: lower limit and width.
+    Uniform(f64, f64),
     /// Through the quantile function.
     Quantile(Quantile),
     /// Skew normal: location, scale, δ, and the standard normal.
@@ -48,8 +50,13 @@ pub enum Sampler {
 /// A quantile function as cubics: lower half and upper half of the shares.
 #[derive(Debug, Clone)]
 pub struct Quantile {
-    cells: Vec<[f64; 4]>,
+    cells: Vec<Cell>,
 }
+
+/// A cubic in the mantissa, 1 to 2, of the share; never astride two lines of the cache.
+#[derive(Debug, Clone, Copy)]
+#[repr(align(32))]
+struct Cell([f64; 4]);
 
 impl Sampler {
     /// A sampler of a distribution.
@@ -71,13 +78,7 @@ impl Sampler {
                 };
                 Self::Quantile(Quantile::new(lower, upper))
             }
-            Shape::Uniform { low, high } => {
-                let width = high - low;
-                Self::Quantile(Quantile::new(
-                    |share| (low + share * width, width),
-                    |share| (high - share * width, -width),
-                ))
-            }
+            Shape::Uniform { low, high } => Self::Uniform(*low, high - low),
             Shape::SkewNormal { location, scale, shape } => Self::Skew {
                 location: *location,
                 scale: *scale,
@@ -107,6 +108,11 @@ impl Sampler {
     pub fn fill(&self, generator: &mut Xoshiro256PlusPlus, values: &mut [f64]) {
         match self {
             Self::Fixed(value) => values.fill(*value),
+            Self::Uniform(low, width) => {
+                for value in values {
+                    *value = low + width * share(generator.next_u64());
+                }
+            }
             Self::Quantile(quantile) => {
                 for value in values {
                     *value = quantile.value(generator.next_u64());
@@ -122,13 +128,19 @@ impl Sampler {
             }
             Self::Measured { values: measured, shares } => {
                 for value in values {
-                    let share = (generator.next_u64() >> 11) as f64 * 2f64.powi(-53);
+                    let share = share(generator.next_u64());
                     let index = shares.partition_point(|sum| *sum <= share).min(measured.len() - 1);
                     *value = measured[index];
                 }
             }
         }
     }
+}
+
+/// A share from 0 up to but not including 1, of 53 random bits.
+#[inline]
+fn share(bits: u64) -> f64 {
+    (bits >> 11) as i64 as f64 * 2f64.powi(-53)
 }
 
 /// z of a normal cut at a and b with a share of the kept part below it.
@@ -172,27 +184,29 @@ impl Quantile {
     /// The value of 64 random bits.
     #[inline]
     fn value(&self, bits: u64) -> f64 {
-        // The middle of one of 2⁵³ slices of 0 to 1/2; the lowest bit picks the half.
-        let share = ((bits >> 11) as f64 + 0.5) * 2f64.powi(-54);
-        let pattern = share.to_bits();
+        // An odd number below 2⁵³: the middle of one of 2⁵² slices of 0 to 1/2; the lowest bit picks the half.
+        let pattern = ((bits >> 11 | 1) as i64 as f64).to_bits();
         let number = UPPERMOST - (pattern >> (52 - CELL_BITS)) as usize;
-        let t = f64::from_bits((pattern << CELL_BITS) & ((1 << 52) - 1) | (1023 << 52)) - 1.0;
+        let t = f64::from_bits((pattern << CELL_BITS) & ((1 << 52) - 1) | (1023 << 52));
         match self.cells.get(2 * number + (bits & 1) as usize) {
-            Some([a, b, c, d]) => a + t * (b + t * (c + t * d)),
+            Some(Cell([a, b, c, d])) => a + t * (b + t * (c + t * d)),
             None => 0.0,
         }
     }
 }
 
 /// Cubic through value and slope at both ends of a cell.
-fn cell(number: usize, at: &impl Fn(f64) -> (f64, f64)) -> [f64; 4] {
-    let edge = |number: usize| f64::from_bits(((UPPERMOST - number) as u64) << (52 - CELL_BITS));
+fn cell(number: usize, at: &impl Fn(f64) -> (f64, f64)) -> Cell {
+    let edge =
+        |number: usize| f64::from_bits(((UPPERMOST - number) as u64) << (52 - CELL_BITS)) * 2f64.powi(-54);
     let low = edge(number);
     let high = if number == 0 { 0.5 } else { edge(number - 1) };
     let width = high - low;
     let ((y0, slope0), (y1, slope1)) = (at(low), at(high));
     let (m0, m1, rise) = (slope0 * width, slope1 * width, y1 - y0);
-    [y0, m0, 3.0 * rise - 2.0 * m0 - m1, m0 + m1 - 2.0 * rise]
+    // In t − 1 the coefficients are y0, m0, c, d; written out in t.
+    let (c, d) = (3.0 * rise - 2.0 * m0 - m1, m0 + m1 - 2.0 * rise);
+    Cell([y0 - m0 + c - d, m0 - 2.0 * c + 3.0 * d, c - 3.0 * d, d])
 }
 
 #[cfg(test)]
@@ -210,7 +224,7 @@ mod tests {
         let quantile = Quantile::normal(0.0, 1.0);
         for step in 1..4000 {
             let share = 0.5 * (-f64::from(step) * 0.007).exp();
-            let exact = normal::quantile(((share * 2f64.powi(54)).floor() + 0.5) * 2f64.powi(-54));
+            let exact = normal::quantile(((share * 2f64.powi(54)) as u64 | 1) as f64 * 2f64.powi(-54));
             assert!((quantile.value(bits(share, 0)) - exact).abs() < 2e-8, "{share}");
             assert!((quantile.value(bits(share, 1)) + exact).abs() < 2e-8, "{share}");
         }

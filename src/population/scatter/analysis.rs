@@ -14,6 +14,9 @@ use crate::population::distribution::Shape;
 use crate::population::distribution::{Distribution, DistributionError};
 use crate::population::integration::law::Law;
 
+/// Most different interferences of measured parts beside a roughness that scatters: the sum takes a second or so.
+const MOST_SUMS: usize = 1000;
+
 /// Laws of everything that the formulas need.
 pub struct Analysis<'a> {
     model: &'a Model,
@@ -49,6 +52,11 @@ impl<'a> Analysis<'a> {
             let part = |roughness: &Distribution| Law::of(roughness).scaled(-factor, 0.0);
             part(&population.shaft_roughness).sum(&part(&population.hub_roughness))
         };
+        if let (Law::Atoms(atoms), Law::Curve(_)) = (&made, &loss)
+            && atoms.len() > MOST_SUMS
+        {
+            return Err(ScatterError::TooManyValues { count: atoms.len(), most: MOST_SUMS });
+        }
         let smoothed = made.sum(&loss);
         let part = |modulus: &Distribution, factor: f64| {
             let gain = model.diameter * factor;

@@ -149,9 +149,10 @@ impl Model {
     /// Factor (K − μ)²/(4 K tan φ) of the chamfer in the press force.
     #[inline]
     pub fn chamfer_factor(&self, friction: f64) -> f64 {
+        // With K written out: tan φ (1 + μ²)²/(4 (1 − μ tan φ)(μ + tan φ)).
         let slope = self.chamfer_slope;
-        let wedge = (friction + slope) / (1.0 - friction * slope);
-        (wedge - friction) * (wedge - friction) / (4.0 * wedge * slope)
+        let square = 1.0 + friction * friction;
+        slope * square * square / (4.0 * (1.0 - friction * slope) * (friction + slope))
     }
 
     /// Greatest press-in force, N, of a grip (m), a compliance (m/Pa) and a friction.

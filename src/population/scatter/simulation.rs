@@ -200,6 +200,17 @@ impl<'a> Plan<'a> {
     }
 }
 
+impl Plan<'_> {
+    /// An earlier condition with the same temperatures: its pressures are the same.
+    fn earlier(&self, condition: usize) -> Option<usize> {
+        if self.temperature_scatters {
+            return None;
+        }
+        let thermal = self.model.thermal(condition);
+        (0..condition).find(|earlier| self.model.thermal(*earlier) == thermal)
+    }
+}
+
 /// Samples that go through the formulas together.
 struct Block {
     made: Vec<f64>,
@@ -276,9 +287,12 @@ impl Block {
         for (grips, taken) in
             [(&mut self.hold, model.loss_when_holding), (&mut self.stress, model.loss_under_stress)]
         {
-            let share = if taken { 1.0 } else { 0.0 };
+            if !taken {
+                grips.copy_from_slice(&self.made);
+                continue;
+            }
             for ((grip, made), loss) in grips.iter_mut().zip(&self.made).zip(&self.loss) {
-                *grip = made.min((made - share * loss).max(made.min(0.0)));
+                *grip = lesser(*made, open(made - loss));
             }
         }
         for ((gain, friction), stiffness) in self.gain.iter_mut().zip(&self.friction).zip(&self.stiffness) {
@@ -292,7 +306,7 @@ impl Block {
         let thermal = model.shop_thermal;
         let factor = model.area() * model.arm();
         for ((torque, grip), gain) in self.scratch.iter_mut().zip(&self.hold).zip(&self.gain) {
-            *torque = factor * gain * (grip + thermal).max(0.0);
+            *torque = factor * gain * open(grip + thermal);
         }
         tally.spread.torque.count(&self.scratch[..count]);
         self.press_forces(model);
@@ -300,11 +314,11 @@ impl Block {
         if let Some([effective, pressure, stress]) = &mut tally.spread.own {
             effective.count(&self.hold[..count]);
             for ((value, grip), stiffness) in self.scratch.iter_mut().zip(&self.hold).zip(&self.stiffness) {
-                *value = stiffness * (grip + thermal).max(0.0);
+                *value = stiffness * open(grip + thermal);
             }
             pressure.count(&self.scratch[..count]);
             for ((value, grip), stiffness) in self.scratch.iter_mut().zip(&self.stress).zip(&self.stiffness) {
-                *value = model.hub_stress * stiffness * (grip + thermal).max(0.0);
+                *value = model.hub_stress * stiffness * open(grip + thermal);
             }
             stress.count(&self.scratch[..count]);
         }
@@ -317,55 +331,123 @@ impl Block {
         for (((force, grip), stiffness), friction) in
             self.scratch.iter_mut().zip(&self.stress).zip(&self.stiffness).zip(&self.pressing)
         {
-            let along = friction * model.engaged_length + grip.max(0.0) * model.chamfer_factor(*friction);
-            *force = round * stiffness * (grip + thermal).max(0.0) * along;
+            let along = friction * model.engaged_length + open(*grip) * model.chamfer_factor(*friction);
+            *force = round * stiffness * open(grip + thermal) * along;
         }
     }
 
     fn events(&mut self, plan: &Plan<'_>, tally: &mut Tally, count: usize) {
         let model = plan.model;
         for condition in 0..model.conditions() {
-            let state = condition.checked_sub(1).and_then(|state| model.states.get(state));
-            match state.and_then(|state| state.warm.as_ref().map(|warm| (state, warm))) {
-                Some((_, warm)) if plan.temperature_scatters => {
-                    for ((thermal, shaft), hub) in
-                        self.other.iter_mut().zip(&self.warm_shaft).zip(&self.warm_hub)
-                    {
-                        *thermal = warm.thermal(model.diameter, *shaft, *hub);
-                    }
+            let number = condition.checked_sub(1);
+            let state = number.and_then(|number| model.states.get(number));
+            let warm = state.and_then(|state| state.warm.as_ref()).filter(|_| plan.temperature_scatters);
+            let fixed = model.thermal(condition);
+            if let Some(warm) = warm {
+                for ((thermal, shaft), hub) in self.other.iter_mut().zip(&self.warm_shaft).zip(&self.warm_hub)
+                {
+                    *thermal = warm.thermal(model.diameter, *shaft, *hub);
                 }
-                _ => self.other.fill(model.thermal(condition)),
             }
-            let thermal = &self.other[..count];
             if let Some(State { force, .. }) = state
                 && *force > 0.0
-                && let Some(slips) = condition.checked_sub(1).and_then(|state| tally.slips.get_mut(state))
+                && let Some(slips) = number.and_then(|number| tally.slips.get_mut(number))
             {
+                let held = held(
+                    &mut self.scratch,
+                    &self.hold,
+                    &self.gain,
+                    &self.other,
+                    warm.is_none().then_some(fixed),
+                );
                 let needed = force / model.area();
-                let wanted = plan.slip_safety * needed;
-                let mut found = [0u64; 2];
-                for ((grip, gain), thermal) in self.hold.iter().zip(&self.gain).zip(thermal) {
-                    let held = gain * (grip + thermal).max(0.0);
-                    found[0] += u64::from(held < needed);
-                    found[1] += u64::from(held < wanted);
-                }
+                let found =
+                    counts(&held[..count], |held| held < needed, |held| held < plan.slip_safety * needed);
                 slips[0] += found[0];
                 slips[1] += found[1];
             }
+            if warm.is_none() && plan.earlier(condition).is_some() {
+                continue;
+            }
+            let pressures = held(
+                &mut self.scratch,
+                &self.stress,
+                &self.stiffness,
+                &self.other,
+                warm.is_none().then_some(fixed),
+            );
+            let pressures = &pressures[..count];
+            let highest = greatest(pressures);
             for (ring, failures) in model.rings.iter().zip(&mut tally.failures) {
                 let Some(failures) = failures.get_mut(condition) else { continue };
                 let (limit, wanted) = (ring.pressure, ring.pressure / ring.required);
-                let mut found = [0u64; 2];
-                for ((grip, stiffness), thermal) in self.stress.iter().zip(&self.stiffness).zip(thermal) {
-                    let pressure = stiffness * (grip + thermal);
-                    found[0] += u64::from(pressure > limit);
-                    found[1] += u64::from(pressure > wanted);
+                if highest > limit.min(wanted) {
+                    let found = counts(pressures, |p| p > limit, |p| p > wanted);
+                    failures[0] += found[0];
+                    failures[1] += found[1];
                 }
-                failures[0] += found[0];
-                failures[1] += found[1];
             }
         }
     }
+}
+
+/// Gain times the grip with the thermal interference, zero when the pair is open; the thermal interference is one
+/// for all, or one for each.
+fn held<'s>(
+    into: &'s mut [f64],
+    grips: &[f64],
+    gains: &[f64],
+    thermals: &[f64],
+    fixed: Option<f64>,
+) -> &'s [f64] {
+    match fixed {
+        Some(thermal) => {
+            for ((held, grip), gain) in into.iter_mut().zip(grips).zip(gains) {
+                *held = gain * open(grip + thermal);
+            }
+        }
+        None => {
+            for (((held, grip), gain), thermal) in into.iter_mut().zip(grips).zip(gains).zip(thermals) {
+                *held = gain * open(grip + thermal);
+            }
+        }
+    }
+    into
+}
+
+/// The value, zero when it is negative: one instruction, where `max` minds NaN.
+#[inline]
+fn open(value: f64) -> f64 {
+    if value > 0.0 { value } else { 0.0 }
+}
+
+/// The lesser of two, likewise.
+#[inline]
+fn lesser(one: f64, other: f64) -> f64 {
+    if one < other { one } else { other }
+}
+
+/// The greatest value, at least zero, in lanes that the compiler keeps in one register.
+fn greatest(values: &[f64]) -> f64 {
+    let mut lanes = [0.0f64; 8];
+    let parts = values.chunks_exact(lanes.len());
+    let rest = parts.remainder().iter().copied().fold(0.0, f64::max);
+    for part in parts {
+        for (lane, value) in lanes.iter_mut().zip(part) {
+            *lane = if *value > *lane { *value } else { *lane };
+        }
+    }
+    lanes.into_iter().fold(rest, f64::max)
+}
+
+/// How many values meet each of two conditions.
+fn counts(values: &[f64], one: impl Fn(f64) -> bool, other: impl Fn(f64) -> bool) -> [u64; 2] {
+    let mut found = [0u64; 2];
+    for value in values {
+        found[0] += u64::from(one(*value));
+        found[1] += u64::from(other(*value));
+    }
+    found
 }
 
 /// Counts of some chunks.
@@ -409,7 +491,14 @@ impl Tally {
         self
     }
 
-    fn told(self, plan: &Plan<'_>, seed: u64, samples: u64) -> Simulation {
+    fn told(mut self, plan: &Plan<'_>, seed: u64, samples: u64) -> Simulation {
+        for failures in &mut self.failures {
+            for condition in 0..failures.len() {
+                if let Some(earlier) = plan.earlier(condition) {
+                    failures[condition] = failures[earlier];
+                }
+            }
+        }
         let samples = samples.min(monte_carlo::MOST_SAMPLES);
         let told = |counts: [u64; 2]| counts.map(|count| Estimate { count, samples });
         let force = |state: usize| plan.model.states.get(state).is_some_and(|state| state.force > 0.0);

@@ -147,7 +147,7 @@ impl Picture<'_> {
         self.extremes(&mut chart, 0.3);
         self.loads(&mut chart, loads, 0.5 * LEAST_POWER);
         let caption = format!(
-            "Integrated share of the pairs with less, and with more, than a {}, down to one in a million million.",
+            "Integrated share of the pairs below, and above, each value of the {}, down to one in a million million.",
             self.name()
         );
         let title = format!("Tails of the {}", self.name());
