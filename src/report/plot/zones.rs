@@ -70,7 +70,7 @@ fn one_fit(chart: &mut Chart, units: Units, fit: &Fit, left: f64) {
         }
     }
     let nominal = format!("nominal Ø{}", units.text(Measure::Size, fit.limits.nominal));
-    chart.tag((left + 0.01, 0.0), nominal, QUIET, Side::Below);
+    chart.tag((left + 0.52, 0.0), nominal, QUIET, Side::Below);
     let Limits { lower: hole_low, upper: hole_high } = fit.limits.hole;
     let Limits { lower: shaft_low, upper: shaft_high } = fit.limits.shaft;
     for (pair, place, from, to) in
