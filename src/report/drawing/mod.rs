@@ -10,7 +10,7 @@ use dimension::{Diameter, Length, TYPE};
 use labels::Targets;
 use maud::Markup;
 use scale::layout;
-use section::{Place, STUB, Step, bands};
+use section::{Place, STUB, bands};
 
 use super::svg::{Frame, Lettering, QUIET, Sketch};
 use super::text_width::text_width;
@@ -41,17 +41,6 @@ pub fn section(findings: &Findings) -> SectionDrawing {
     let units = Units { system: joint.display };
     let radii = profile::radii(joint);
     let columns = columns(joint);
-    let margin = |first: f64, count: usize| first + NEXT * (count.max(1) - 1) as f64 + 4.0;
-    let (left, right) = (margin(FIRST, columns.0), margin(first_right(joint, units), columns.1));
-    let radii: Vec<f64> = joint
-        .rings
-        .first()
-        .map(|ring| ring.inner_diameter / 2.0)
-        .into_iter()
-        .chain(joint.rings.iter().map(|ring| ring.outer_diameter / 2.0))
-        .collect();
-    let hollow = radii.first().is_some_and(|bore| *bore > 0.0);
-    let columns = (joint.fits.len(), 1 + usize::from(hollow));
     let margin = |first: f64, next: f64, count: usize| first + next * (count.max(1) - 1) as f64 + 4.0;
     let left = margin(FIRST, NEXT, columns.0);
     let right = margin(first_right(joint, units), NEXT + NOTE, columns.1);
@@ -84,13 +73,10 @@ pub fn section(findings: &Findings) -> SectionDrawing {
     let mut sketch = Sketch::default();
     section::draw(&mut sketch, &layout, place, &segments, &bands);
     let bottom = place.centre + layout.radial.last().map_or(0.0, |wall| wall.to);
-    let below = Dimensions { joint, units, layout: &layout, place, segments: &segments }.draw(&mut sketch);
+    let below =
+        Dimensions { findings, joint, units, layout: &layout, place, segments: &segments }.draw(&mut sketch);
     let targets = Targets { layout: &layout, place, segments: &segments, bands: &bands };
     labels::draw(&mut sketch, &rows, targets, WIDTH);
-    section::draw(&mut sketch, &layout, place, &steps(joint), &bands);
-    let bottom = place.centre + layout.radial.last().map_or(0.0, |wall| wall.to);
-    let below = dimensions(&mut sketch, findings, units, &layout, place);
-    labels::draw(&mut sketch, &rows, &layout, place, &bands, WIDTH);
     let height = bottom + below + 7.0;
     let foot = Lettering::new(foot(&layout, units), TYPE).colour(QUIET);
     sketch.text((0.0, height - 1.0), &foot);
@@ -117,6 +103,7 @@ fn columns(joint: &Joint) -> (usize, usize) {
 
 /// Everything that is dimensioned.
 struct Dimensions<'a> {
+    findings: &'a Findings,
     joint: &'a Joint,
     units: Units,
     layout: &'a scale::Layout,
@@ -143,90 +130,47 @@ impl Dimensions<'_> {
     /// Smaller diameters stand nearer to the part, so that no extension line crosses a figure.
     fn diameters(&self) -> Vec<Diameter> {
         let place = self.place;
-        let mut left: Vec<(f64, f64, String)> = Vec::new();
-        let mut right: Vec<(f64, f64, String)> = Vec::new();
+        let mut left: Vec<(f64, f64, String, Option<String>)> = Vec::new();
+        let mut right: Vec<(f64, f64, String, Option<String>)> = Vec::new();
         for (k, fit) in self.joint.fits.iter().enumerate() {
             let from = if k == 0 { place.shaft_left() } else { place.hub_left };
             let text = dimension_text(&self.size(fit.limits.nominal), &fit.callout);
-            left.push((self.layout.radial[k + 1].to, from, text));
+            left.push((self.layout.radial[k + 1].to, from, text, None));
         }
         let shaft = (place.shaft_left(), place.shaft_right());
         for one in [profile::bores(self.segments, shaft), profile::rims(self.segments)].concat() {
+            let note = if one.to_the_right { self.assembled(one.diameter) } else { None };
             let side = if one.to_the_right { &mut right } else { &mut left };
-            side.push((one.radius, one.from, format!("Ø{}", self.size(one.diameter))));
+            side.push((one.radius, one.from, format!("Ø{}", self.size(one.diameter)), note));
         }
         let first = (place.shaft_left() - FIRST, place.shaft_right() + first_right(self.joint, self.units));
         let mut all = Vec::new();
-        for (mut side, first, step) in [(left, first.0, -NEXT), (right, first.1, NEXT)] {
+        for (mut side, first, step) in [(left, first.0, -NEXT), (right, first.1, NEXT + NOTE)] {
             side.sort_by(|a, b| a.0.total_cmp(&b.0));
-            for (column, (radius, from, text)) in side.into_iter().enumerate() {
-                all.push(Diameter::new(from, first + step * column as f64, radius, &text));
+            for (column, (radius, from, text, note)) in side.into_iter().enumerate() {
+                all.push(Diameter::new(from, first + step * column as f64, radius, &text).noted(note));
             }
         }
         all
-/// The steps of the hub; none when it is of one section.
-fn steps(joint: &Joint) -> Vec<Step> {
-    let thickest = joint.slices.iter().map(|slice| slice.hub_outer_diameter).fold(0.0, f64::max);
-    let mut from = 0.0;
-    joint
-        .slices
-        .iter()
-        .map(|slice| {
-            let to = from + slice.length;
-            let along = (from / joint.length, to / joint.length);
-            from = to;
-            Step { along, wall: (slice.hub_outer_diameter - joint.diameter) / (thickest - joint.diameter) }
-        })
-        .collect()
-}
+    }
 
-/// Sizes of the innermost bore and of the outer diameter of an assembled joint, loosest to tightest, as written.
-fn assembled(findings: &Findings, units: Units) -> (Option<String>, Option<String>) {
-    let joint = &findings.joint;
-    let extremes = &findings.extremes;
-    let (Some(shaft), Some(hub)) = (joint.rings.first(), joint.rings.last()) else { return (None, None) };
-    let range = |size: f64, change: fn(&PairFindings) -> Option<f64>| {
-        let number = |pair| Some(units.reading(Measure::Size, size + change(pair)?).number);
+    /// Size of the innermost bore or of the outer diameter of the assembled joint, loosest to tightest, as written;
+    /// none of a stepped joint, whose size changes along it.
+    fn assembled(&self, diameter: f64) -> Option<String> {
+        let extremes = &self.findings.extremes;
+        if extremes.tightest.pressure <= 0.0 || !self.joint.slices.is_empty() {
+            return None;
+        }
+        let (shaft, hub) = self.joint.shaft_and_hub();
+        let change: fn(&PairFindings) -> Option<f64> = if diameter == hub.outer_diameter {
+            |pair| Some(pair.rings.last()?.outer_change)
+        } else if diameter == shaft.inner_diameter {
+            |pair| Some(pair.rings.first()?.bore_change)
+        } else {
+            return None;
+        };
+        let number = |pair| Some(self.size(diameter + change(pair)?));
         Some(format!("assembled {} to {}", number(&extremes.loosest)?, number(&extremes.tightest)?))
-    };
-    if extremes.tightest.pressure <= 0.0 || !joint.slices.is_empty() {
-        return (None, None);
-    }
-    let bore = range(shaft.inner_diameter, |pair| Some(pair.rings.first()?.bore_change));
-    (
-        bore.filter(|_| shaft.inner_diameter > 0.0),
-        range(hub.outer_diameter, |pair| Some(pair.rings.last()?.outer_change)),
-    )
-}
-
-/// Draws all dimensions; returns how far they reach below the part, mm.
-fn dimensions(
-    sketch: &mut Sketch,
-    findings: &Findings,
-    units: Units,
-    layout: &scale::Layout,
-    place: Place,
-) -> f64 {
-    let joint = &findings.joint;
-    let (bore_note, outer_note) = assembled(findings, units);
-    let size = |value: f64| units.reading(Measure::Size, value).number;
-    let mut diameters = Vec::new();
-    for (k, fit) in joint.fits.iter().enumerate() {
-        let from = if k == 0 { place.shaft_left() } else { place.hub_left };
-        let at = place.shaft_left() - FIRST - NEXT * k as f64;
-        let text = dimension_text(&size(fit.limits.nominal), &fit.callout);
-        diameters.push(Diameter::new(from, at, layout.radial[k + 1].to, &text));
-    }
-    let mut column = place.shaft_right() + first_right(joint, units);
-    if let Some(bore) = joint.rings.first().map(|ring| ring.inner_diameter).filter(|bore| *bore > 0.0) {
-        let text = format!("Ø{}", size(bore));
-        diameters
-            .push(Diameter::new(place.shaft_right(), column, layout.radial[0].to, &text).noted(bore_note));
-        column += NEXT + NOTE;
-    }
-    if let (Some(ring), Some(wall)) = (joint.rings.last(), layout.radial.last()) {
-        let text = format!("Ø{}", size(ring.outer_diameter));
-        diameters.push(Diameter::new(place.hub_right, column, wall.to, &text).noted(outer_note));
     }
 
     /// Draws the lengths of the pieces, of the relief and of the hub below the part; returns how far they reach, mm.

@@ -39,15 +39,6 @@ impl Place {
     }
 }
 
-/// A piece of a stepped hub on paper.
-#[derive(Debug, Clone, Copy, PartialEq)]
-pub(super) struct Step {
-    /// Where it begins and ends along the hub, as shares of its length.
-    pub along: (f64, f64),
-    /// Its wall over the thickest one.
-    pub wall: f64,
-}
-
 /// The interference at one mating surface on paper.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub(super) struct Band {
@@ -78,13 +69,6 @@ pub(super) fn draw(sketch: &mut Sketch, layout: &Layout, place: Place, segments:
     }
     for ring in 0..section.rings() {
         section.outline(sketch, ring);
-pub(super) fn draw(sketch: &mut Sketch, layout: &Layout, place: Place, steps: &[Step], bands: &[Band]) {
-    for ring in 0..layout.radial.len() - 1 {
-        let faces = faces(layout, place, steps, ring);
-        sketch.path(&lines(&faces, hatching_of(ring)), HATCH);
-    }
-    for ring in 0..layout.radial.len() - 1 {
-        outline(sketch, layout, place, steps, ring);
     }
     for (ring, band) in bands.iter().enumerate() {
         interference(sketch, layout, place, ring, *band);
@@ -131,62 +115,6 @@ impl Section<'_> {
     /// The upper cut faces of a ring: left, right, inner and outer radius.
     fn walls(&self, ring: usize) -> Vec<(f64, f64, f64, f64)> {
         let wall = self.layout.radial[ring + 1];
-/// Left and right end of each step on paper, with its outer radius.
-fn stepped(layout: &Layout, place: Place, steps: &[Step]) -> Vec<(f64, f64, f64)> {
-    let wall = layout.radial[2];
-    let x = |share: f64| place.hub_left + share * (place.hub_right - place.hub_left);
-    let outer = |step: &Step| wall.from + step.wall * (wall.to - wall.from);
-    steps.iter().map(|step| (x(step.along.0), x(step.along.1), outer(step))).collect()
-}
-
-/// The hatched rectangles of a ring, upper half and lower half.
-fn faces(layout: &Layout, place: Place, steps: &[Step], ring: usize) -> Vec<Rectangle> {
-    let (left, right) = ends(place, ring);
-    let wall = layout.radial[ring + 1];
-    let mut upper = vec![];
-    let relieved = ring == 1 && place.relief > 0.0;
-    let piece = |left, right, inner: f64, outer: f64| Rectangle {
-        left,
-        right,
-        top: place.centre - outer,
-        bottom: place.centre - inner,
-    };
-    let rectangle = |left, right, inner: f64| piece(left, right, inner, wall.to);
-    if ring == 1 && !steps.is_empty() {
-        for (from, to, outer) in stepped(layout, place, steps) {
-            let edge = (right - place.relief).clamp(from, to);
-            if edge > from {
-                upper.push(piece(from, edge, wall.from, outer));
-            }
-            if to > edge {
-                upper.push(piece(
-                    edge,
-                    to,
-                    wall.from + relief_depth(layout).min(0.5 * (outer - wall.from)),
-                    outer,
-                ));
-            }
-        }
-    } else if relieved {
-        upper.push(rectangle(left, right - place.relief, wall.from));
-        upper.push(rectangle(right - place.relief, right, wall.from + relief_depth(layout)));
-    } else {
-        upper.push(rectangle(left, right, wall.from));
-    }
-    let mirrored = upper.clone().into_iter().map(|face| Rectangle {
-        top: 2.0 * place.centre - face.bottom,
-        bottom: 2.0 * place.centre - face.top,
-        ..face
-    });
-    upper.into_iter().chain(mirrored).collect()
-}
-
-/// Outline of a ring in both halves.
-fn outline(sketch: &mut Sketch, layout: &Layout, place: Place, steps: &[Step], ring: usize) {
-    let (left, right) = ends(place, ring);
-    let wall = layout.radial[ring + 1];
-    for side in [-1.0, 1.0] {
-        let y = |radius: f64| place.centre + side * radius;
         if ring == 0 {
             return self
                 .bores()
@@ -258,24 +186,6 @@ fn outline(sketch: &mut Sketch, layout: &Layout, place: Place, steps: &[Step], r
             if let Some((_, _, next)) = bores.get(place + 1).filter(|(_, _, next)| next != bore) {
                 sketch.line((*right, y(*bore)), (*right, y(*next)), WIDE);
             }
-        let mut corners = vec![(left, y(wall.from))];
-        if ring == 1 && !steps.is_empty() {
-            for (from, to, outer) in stepped(layout, place, steps) {
-                corners.extend([(from, y(outer)), (to, y(outer))]);
-            }
-        } else {
-            corners.extend([(left, y(wall.to)), (right, y(wall.to))]);
-        }
-        corners.push((right, y(wall.from)));
-        if ring == 1 && place.relief > 0.0 {
-            let last = steps.last().map_or(1.0, |step| step.wall) * (wall.to - wall.from);
-            let depth = wall.from + relief_depth(layout).min(0.5 * last);
-            corners.pop();
-            corners.extend([
-                (right, y(depth)),
-                (right - place.relief, y(depth)),
-                (right - place.relief, y(wall.from)),
-            ]);
         }
     }
 }
