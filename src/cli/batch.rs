@@ -98,7 +98,8 @@ fn refuse_one_place_for_two(arguments: &Arguments) -> Result<(), Failure> {
     let is_stdout = |path: &PathBuf| path.as_os_str() == "-";
     let findings = arguments.output.as_ref().filter(|path| !is_stdout(path)).map(real);
     let errors = arguments.errors.as_ref().filter(|path| !is_stdout(path)).map(real);
-    let both_stdout = arguments.output.as_ref().is_none_or(is_stdout) && arguments.errors.as_ref().is_some_and(is_stdout);
+    let both_stdout =
+        arguments.output.as_ref().is_none_or(is_stdout) && arguments.errors.as_ref().is_some_and(is_stdout);
     if both_stdout || (findings.is_some() && findings == errors) {
         return Err(Diagnostic::new("findings and errors go to the same place")
             .with_help("give --errors a file of its own")
@@ -145,15 +146,15 @@ fn bar(size: Option<u64>, output: &Output) -> ProgressBar {
 /// Standard output, or a file that takes its name when it is complete.
 enum Sink {
     Stdout(io::BufWriter<io::Stdout>),
-    File(Whole),
+    File(Box<Whole>),
 }
 
 impl Sink {
     fn create(path: Option<&Path>) -> Result<Self, Failure> {
         match path {
-            Some(path) if path.as_os_str() != "-" => {
-                Whole::create(path).map(Self::File).map_err(|error| unwritable(path, &error))
-            }
+            Some(path) if path.as_os_str() != "-" => Whole::create(path)
+                .map(|file| Self::File(Box::new(file)))
+                .map_err(|error| unwritable(path, &error)),
             _ => Ok(Self::Stdout(io::BufWriter::new(io::stdout()))),
         }
     }
@@ -188,7 +189,8 @@ fn refused(error: BatchError, arguments: &Arguments) -> Failure {
     let place = |path: &Option<PathBuf>| path.clone().unwrap_or_else(|| PathBuf::from("<stdout>"));
     match error {
         BatchError::Head(faults) => {
-            let at_head = |fault: Diagnostic| if fault.place.is_some() { fault.in_file(&table) } else { fault };
+            let at_head =
+                |fault: Diagnostic| if fault.place.is_some() { fault.in_file(&table) } else { fault };
             Failure::Input(faults.into_iter().map(at_head).collect())
         }
         BatchError::Output(error) => unwritable(&place(&arguments.output), &error),

@@ -179,11 +179,14 @@ fn wanted_columns(names: &[String]) -> Result<Vec<OutputColumn>, BatchError> {
         match all.iter().find(|(known, _)| *known == name.trim()) {
             Some(column) => wanted.push(*column),
             None => {
-                let fault = Diagnostic::new(format!("--columns: there is no output column `{}`", name.trim()));
+                let fault =
+                    Diagnostic::new(format!("--columns: there is no output column `{}`", name.trim()));
                 let known = || all.iter().map(|(known, _)| *known);
                 faults.push(match did_you_mean(name, known()) {
                     Some(near) => fault.with_help(format!("did you mean `{near}`?")),
-                    None => fault.with_help(format!("the columns are {}", known().collect::<Vec<_>>().join(", "))),
+                    None => {
+                        fault.with_help(format!("the columns are {}", known().collect::<Vec<_>>().join(", ")))
+                    }
                 });
             }
         }

@@ -9,7 +9,8 @@ use crate::quantity::{Kind, parse};
 
 /// The text of a cell as it would be written in a joint file.
 pub(super) fn written<'a>(cell: &'a str, column: &Column) -> Cow<'a, str> {
-    let bare = !cell.is_empty() && cell.chars().all(|c| c.is_ascii_digit() || matches!(c, '+' | '-' | '.' | '/' | ' ' | 'e' | 'E'));
+    let bare = !cell.is_empty()
+        && cell.chars().all(|c| c.is_ascii_digit() || matches!(c, '+' | '-' | '.' | '/' | ' ' | 'e' | 'E'));
     if !bare || (column.unit.is_empty() && column.before.is_empty()) {
         return Cow::Borrowed(cell);
     }
@@ -32,7 +33,8 @@ pub(super) fn quantity(kind: Kind, cell: &str, column: &Column, unit: Option<&'s
         (Kind::Number, None) if column.unit.is_empty() => decimal(cell, 0),
         (_, Some(Unit { scale: Scale::PowerOfTen(power), .. })) => decimal(cell, *power),
         (_, Some(Unit { scale: Scale::Shifted { zero_hundredths, numerator, denominator }, .. })) => {
-            decimal(cell, 2).map(|hundredths| (hundredths + zero_hundredths) * numerator / (100.0 * denominator))
+            decimal(cell, 2)
+                .map(|hundredths| (hundredths + zero_hundredths) * numerator / (100.0 * denominator))
         }
         _ => None,
     };
@@ -93,7 +95,20 @@ mod tests {
             let column = column(unit);
             let known = unit_of(kind, &column);
             assert!(known.is_some(), "{unit}");
-            for cell in ["0", "60", "60.012", "0.1", "-3.5", "+7", "123456.789012345678", "1e3", "7 1/2", "60 mm", "x", ""] {
+            for cell in [
+                "0",
+                "60",
+                "60.012",
+                "0.1",
+                "-3.5",
+                "+7",
+                "123456.789012345678",
+                "1e3",
+                "7 1/2",
+                "60 mm",
+                "x",
+                "",
+            ] {
                 let short = quantity(kind, cell, &column, known);
                 let reader = parse(kind, &written(cell, &column)).ok();
                 assert_eq!(short.map(f64::to_bits), reader.map(f64::to_bits), "{cell} {unit}");

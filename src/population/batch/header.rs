@@ -136,8 +136,11 @@ mod tests {
 
     #[test]
     fn keys_units_and_symbols_are_told_apart() {
-        let found = heads(&["id", "diameter (mm)", "hub.roughness (Rz um)", "duty.rated.torque", " fit "]).unwrap();
-        let of = |index: usize| (found[index].key.as_deref(), found[index].before.as_str(), found[index].unit.as_str());
+        let found =
+            heads(&["id", "diameter (mm)", "hub.roughness (Rz um)", "duty.rated.torque", " fit "]).unwrap();
+        let of = |index: usize| {
+            (found[index].key.as_deref(), found[index].before.as_str(), found[index].unit.as_str())
+        };
         assert_eq!(of(0), (None, "", ""));
         assert_eq!(of(1), (Some("diameter"), "", "mm"));
         assert_eq!(of(2), (Some("hub.roughness"), "Rz ", "um"));

@@ -227,9 +227,8 @@ impl Outcome {
         let joint = &findings.joint;
         let least = |subject: &str| {
             let all = findings.verdicts.iter().filter(|verdict| verdict.subject.starts_with(subject));
-            let least = all.min_by(|a, b| {
-                a.found.unwrap_or(f64::INFINITY).total_cmp(&b.found.unwrap_or(f64::INFINITY))
-            });
+            let least = all
+                .min_by(|a, b| a.found.unwrap_or(f64::INFINITY).total_cmp(&b.found.unwrap_or(f64::INFINITY)));
             least.map_or_else(Least::default, |verdict| Least::of_verdict(verdict, joint))
         };
         let of_ring = |ring: Option<&Ring>| {

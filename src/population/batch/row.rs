@@ -139,6 +139,7 @@ fn told(fault: &Diagnostic) -> String {
         _ => String::new(),
     };
     let help = fault.help.as_ref().map_or_else(String::new, |help| format!(" ({help})"));
-    let line: String = format!("{place}{message}{help}").chars().map(|c| if c.is_control() { ' ' } else { c }).collect();
+    let line: String =
+        format!("{place}{message}{help}").chars().map(|c| if c.is_control() { ' ' } else { c }).collect();
     line
 }
