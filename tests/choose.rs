@@ -56,7 +56,7 @@ fn held_against_the_full_check(choice: &Choice, random: &mut impl Rng) -> (usize
     assert_eq!(listed.len(), choice.fits.len(), "a fit is listed twice");
     let mut seen = (0, 0);
     let sample =
-        (0..12).filter_map(|_| (!choice.fits.is_empty()).then(|| random.random_range(0..choice.fits.len())));
+        (0..12).filter(|_| !choice.fits.is_empty()).map(|_| random.random_range(0..choice.fits.len()));
     for number in sample.chain([0, choice.fits.len().saturating_sub(1)]).collect::<Vec<_>>() {
         let Some(fit) = choice.fits.get(number) else { continue };
         let resolved = FitCallout::parse(&fit.callout).unwrap().resolve(choice.joint.diameter).unwrap();

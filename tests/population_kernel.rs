@@ -213,7 +213,7 @@ fn a_joint_computed_by_hand() {
     same(pair.hub.safety.unwrap(), 2.0, 0.0);
     same(pair.shaft.equivalent, 75e6, 0.0);
     // T = μ p π d² L/2, F = μ p π d L and 1/S = √((T/T_cap)² + (F/F_cap)²): 1413.71669 N·m, 56548.6678 N, 2.7430133.
-    assert!((pair.torque_capacity - 1413.716_69).abs() < 1e-5);
+    assert!((pair.torque_capacity - 1_413.716_69).abs() < 1e-5);
     assert!((pair.axial_capacity - 56_548.667_8).abs() < 1e-4);
     let (safety, state) = plain.least_slip_safety(50e-6).unwrap();
     assert!((safety - 2.743_013_30).abs() < 1e-8 && state == 0);

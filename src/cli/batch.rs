@@ -146,15 +146,15 @@ fn bar(size: Option<u64>, output: &Output) -> ProgressBar {
 /// Standard output, or a file that takes its name when it is complete.
 enum Sink {
     Stdout(io::BufWriter<io::Stdout>),
-    File(Whole),
+    File(Box<Whole>),
 }
 
 impl Sink {
     fn create(path: Option<&Path>) -> Result<Self, Failure> {
         match path {
-            Some(path) if path.as_os_str() != "-" => {
-                Whole::create(path).map(Self::File).map_err(|error| unwritable(path, &error))
-            }
+            Some(path) if path.as_os_str() != "-" => Whole::create(path)
+                .map(|file| Self::File(Box::new(file)))
+                .map_err(|error| unwritable(path, &error)),
             _ => Ok(Self::Stdout(io::BufWriter::new(io::stdout()))),
         }
     }

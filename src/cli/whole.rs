@@ -13,8 +13,14 @@ use tempfile::NamedTempFile;
 pub struct Whole(Kind);
 
 enum Kind {
-    Beside { temporary: BufWriter<NamedTempFile>, target: PathBuf, existing: Option<fs::Metadata> },
+    Beside(Box<Beside>),
     Straight(BufWriter<File>),
+}
+
+struct Beside {
+    temporary: BufWriter<NamedTempFile>,
+    target: PathBuf,
+    existing: Option<fs::Metadata>,
 }
 
 impl Whole {
@@ -34,14 +40,15 @@ impl Whole {
             return Ok(Self(Kind::Straight(BufWriter::new(straight))));
         }
         let temporary = tempfile::Builder::new().prefix(".hubgrip-").tempfile_in(folder(&target))?;
-        Ok(Self(Kind::Beside { temporary: BufWriter::new(temporary), target, existing }))
+        Ok(Self(Kind::Beside(Box::new(Beside { temporary: BufWriter::new(temporary), target, existing }))))
     }
 
     /// Gives the complete file its name.
     pub fn finish(self) -> io::Result<()> {
         match self.0 {
             Kind::Straight(mut straight) => straight.flush(),
-            Kind::Beside { temporary, target, existing } => {
+            Kind::Beside(beside) => {
+                let Beside { temporary, target, existing } = *beside;
                 let temporary = temporary.into_inner().map_err(io::IntoInnerError::into_error)?;
                 temporary.as_file().sync_all()?;
                 permissions(temporary.path(), existing.as_ref())?;
@@ -55,14 +62,14 @@ impl Whole {
 impl Write for Whole {
     fn write(&mut self, bytes: &[u8]) -> io::Result<usize> {
         match &mut self.0 {
-            Kind::Beside { temporary, .. } => temporary.write(bytes),
+            Kind::Beside(beside) => beside.temporary.write(bytes),
             Kind::Straight(straight) => straight.write(bytes),
         }
     }
 
     fn flush(&mut self) -> io::Result<()> {
         match &mut self.0 {
-            Kind::Beside { temporary, .. } => temporary.flush(),
+            Kind::Beside(beside) => beside.temporary.flush(),
             Kind::Straight(straight) => straight.flush(),
         }
     }

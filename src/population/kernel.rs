@@ -11,6 +11,7 @@
 //! [`PlainJoint::pressures`] and its neighbours go through arrays in loops that the compiler can vectorise.
 //! [`joining`] finds the temperatures for joining hot or cold.
 
+mod condition;
 pub mod joining;
 mod ring;
 
@@ -21,12 +22,13 @@ use thiserror::Error;
 use crate::assembly::AssemblyError;
 use crate::assembly::press::{self, PressInput};
 use crate::findings::after_smoothing;
-use crate::joint::{Allow, DutyState, Joint, Ring, SmoothingAt};
+use crate::joint::{Allow, Joint, Ring, SmoothingAt};
 use crate::material::Range;
-use crate::mechanics::ring::RingLoad;
 use crate::mechanics::{MechanicsError, capacity};
 use crate::numerics::interpolation::InterpolationError;
 
+pub use condition::Condition;
+use condition::Conditions;
 pub use ring::{PlainRing, RingBase, RingValues};
 
 /// Why a joint cannot be evaluated by the kernel; the full computation may still cover it.
@@ -69,27 +71,6 @@ pub enum PairKind {
     Mean,
     /// Smallest hole with largest shaft.
     Tightest,
-}
-
-/// The shop or a service state: what it does to the interference, what load there is.
-#[derive(Debug, Clone, Copy, PartialEq)]
-pub struct Condition {
-    /// Interference that temperature, speed and pressures from outside add, m; negative when they take some.
-    pub added_interference: f64,
-    /// The part of it that comes from the temperatures of the mating faces alone, m: d (ε_shaft − ε_hub).
-    pub thermal_interference: f64,
-    /// Torque, N·m.
-    pub torque: f64,
-    /// Axial force, N.
-    pub axial_force: f64,
-    /// Safety against slip for each pascal of contact pressure, 1/Pa; none when there is no load.
-    pub slip_safety_per_pressure: Option<f64>,
-    /// Change of the contact pressure at the edges by bending and radial force, Pa; none without them.
-    pub edge_change: Option<f64>,
-    /// Stress of the shaft without contact.
-    pub shaft: RingBase,
-    /// Stress of the hub without contact.
-    pub hub: RingBase,
 }
 
 /// How the rings give way: p = U / ( d (C_h/E_h + C_s/E_s) ).
@@ -440,102 +421,7 @@ impl PlainJoint {
     }
 }
 
-/// What the conditions of a joint are made from.
-struct Conditions<'a> {
-    joint: &'a Joint,
-    inner: &'a Ring,
-    outer: &'a Ring,
-}
-
-impl Conditions<'_> {
-    /// At rest, without load, both parts at one temperature (K).
-    fn at_rest(&self, temperature: f64) -> Result<Condition, KernelError> {
-        let thermal =
-            self.joint.diameter * (strain(self.inner, temperature)? - strain(self.outer, temperature)?);
-        Ok(Condition {
-            added_interference: thermal,
-            thermal_interference: thermal,
-            torque: 0.0,
-            axial_force: 0.0,
-            slip_safety_per_pressure: None,
-            edge_change: None,
-            shaft: RingBase::default(),
-            hub: RingBase::default(),
-        })
-    }
-
-    fn of_state(&self, state: &DutyState) -> Result<Condition, KernelError> {
-        let joint = self.joint;
-        let [at_shaft, at_hub] = state.temperatures.as_slice() else {
-            return Err(KernelError::NotTwoRings(state.temperatures.len()));
-        };
-        let (shaft_strain, hub_strain) = (strain(self.inner, *at_shaft)?, strain(self.outer, *at_hub)?);
-        let thermal = joint.diameter * (shaft_strain - hub_strain);
-        let (shaft, hub, added) = if quiet(state) {
-            (RingBase::default(), RingBase::default(), thermal)
-        } else {
-            let rise =
-                |ring: &Ring, number: usize, from: f64, own: f64| match state.temperature_rises.get(number) {
-                    Some(rise) => strain(ring, from + rise).map(|outside| outside - own),
-                    None => Ok(0.0),
-                };
-            let load = RingLoad { angular_speed: state.speed, ..RingLoad::default() };
-            let shaft_load = RingLoad {
-                inner_pressure: state.inner_pressure,
-                free_strain: shaft_strain,
-                strain_rise: rise(self.inner, 0, *at_shaft, shaft_strain)?,
-                ..load
-            };
-            let hub_load = RingLoad {
-                outer_pressure: state.outer_pressure,
-                free_strain: hub_strain,
-                strain_rise: rise(self.outer, 1, *at_hub, hub_strain)?,
-                ..load
-            };
-            let (shaft, shaft_growth) = ring::base(self.inner, &shaft_load, 0.5 * self.inner.outer_diameter)?;
-            let (hub, hub_growth) = ring::base(self.outer, &hub_load, 0.5 * self.outer.inner_diameter)?;
-            (shaft, hub, 2.0 * (shaft_growth - hub_growth))
-        };
-        Ok(Condition {
-            added_interference: added,
-            thermal_interference: thermal,
-            torque: state.torque,
-            axial_force: state.axial_force,
-            slip_safety_per_pressure: self.slip_safety_per_pressure(state),
-            edge_change: self.edge_change(state),
-            shaft,
-            hub,
-        })
-    }
-
-    fn slip_safety_per_pressure(&self, state: &DutyState) -> Option<f64> {
-        let joint = self.joint;
-        let axial =
-            capacity::axial(joint.friction.holding.value.low, 1.0, joint.diameter, joint.engaged_length());
-        let loaded = state.torque > 0.0 || state.axial_force > 0.0;
-        let torque = axial * joint.diameter / 2.0;
-        loaded.then(|| capacity::slip_safety(state.torque, state.axial_force, torque, axial))
-    }
-
-    /// As the findings have it: 12 M/(π d L²) + 2 F/(π d L).
-    fn edge_change(&self, state: &DutyState) -> Option<f64> {
-        if state.bending_moment == 0.0 && state.radial_force == 0.0 {
-            return None;
-        }
-        let (diameter, length) = (self.joint.diameter, self.joint.engaged_length());
-        let radial = 2.0 * state.radial_force / (PI * diameter * length);
-        Some(12.0 / (PI * diameter * length * length) * state.bending_moment + radial)
-    }
-}
-
-/// Whether nothing but uniform temperatures acts on the rings besides the contact.
-fn quiet(state: &DutyState) -> bool {
-    state.speed == 0.0
-        && state.inner_pressure == 0.0
-        && state.outer_pressure == 0.0
-        && state.temperature_rises.is_empty()
-}
-
+/// Free thermal strain of a ring at a temperature (K).
 fn strain(ring: &Ring, temperature: f64) -> Result<f64, KernelError> {
     let outside = |cause| KernelError::Expansion { material: ring.material.name.clone(), cause };
     ring.material.expansion.strain(temperature).map_err(outside)

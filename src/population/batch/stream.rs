@@ -1,6 +1,7 @@
 //! A table streamed: blocks of rows read, worked out on all cores, written in their order.
 
-use std::cell::Cell;
+use std::cell::RefCell;
+use std::collections::VecDeque;
 use std::io::{self, Read, Write};
 use std::rc::Rc;
 
@@ -33,41 +34,76 @@ struct Worked {
     summary: Summary,
 }
 
-/// A reader that refuses a row without end.
+/// What a reader has let through.
+#[derive(Default)]
+struct Passed {
+    bytes: u64,
+    bytes_since_row: usize,
+    /// Places of the line feeds that no row has been found behind yet.
+    line_feeds: VecDeque<u64>,
+    lines: u64,
+}
+
+impl Passed {
+    /// Line on which the row began that ends before this byte, when it holds so many line feeds itself.
+    ///
+    /// The position of the CSV reader counts from the end of the row before, blank lines included.
+    fn line_of_row(&mut self, end: u64, held: usize) -> u64 {
+        let mut last = None;
+        while let Some(&at) = self.line_feeds.front().filter(|at| **at < end) {
+            self.line_feeds.pop_front();
+            self.lines += 1;
+            last = Some(at);
+        }
+        let own_end = u64::from(last.is_some_and(|last| last + 1 == end));
+        (1 + self.lines).saturating_sub(own_end + held as u64)
+    }
+}
+
+/// A reader that refuses a row without end, and remembers where lines end.
 pub(super) struct Bounded<R> {
     inner: R,
-    since_row: Rc<Cell<usize>>,
-    read: Rc<Cell<u64>>,
+    passed: Rc<RefCell<Passed>>,
 }
 
 impl<R: Read> Read for Bounded<R> {
     fn read(&mut self, buffer: &mut [u8]) -> io::Result<usize> {
-        if self.since_row.get() > LONGEST_ROW {
+        let mut passed = self.passed.borrow_mut();
+        if passed.bytes_since_row > LONGEST_ROW {
             return Err(io::Error::new(
                 io::ErrorKind::InvalidData,
                 "a row is longer than 1 MiB: a quote may not be closed",
             ));
         }
         let count = self.inner.read(buffer)?;
-        self.since_row.set(self.since_row.get() + count);
-        self.read.set(self.read.get() + count as u64);
+        let before = passed.bytes;
+        let feeds = buffer.iter().take(count).zip(before..).filter(|(byte, _)| **byte == b'\n');
+        passed.line_feeds.extend(feeds.map(|(_, at)| at));
+        passed.bytes += count as u64;
+        passed.bytes_since_row += count;
         Ok(count)
     }
+}
+
+/// A row with the line on which it begins.
+#[derive(Default)]
+struct Row {
+    line: u64,
+    record: ByteRecord,
 }
 
 /// A table that is being read.
 pub(super) struct Source<R> {
     reader: csv::Reader<Bounded<R>>,
-    since_row: Rc<Cell<usize>>,
-    read: Rc<Cell<u64>>,
+    passed: Rc<RefCell<Passed>>,
 }
 
 impl<R: Read> Source<R> {
     pub(super) fn new(input: R) -> Self {
-        let (since_row, read) = (Rc::new(Cell::new(0)), Rc::new(Cell::new(0)));
-        let bounded = Bounded { inner: input, since_row: Rc::clone(&since_row), read: Rc::clone(&read) };
+        let passed = Rc::new(RefCell::new(Passed::default()));
+        let bounded = Bounded { inner: input, passed: Rc::clone(&passed) };
         let reader = csv::ReaderBuilder::new().flexible(true).has_headers(true).from_reader(bounded);
-        Self { reader, since_row, read }
+        Self { reader, passed }
     }
 
     /// The heads of the columns.
@@ -75,20 +111,28 @@ impl<R: Read> Source<R> {
         let heads = self.reader.byte_headers().map_err(BatchError::of_csv)?;
         let heads: Vec<String> =
             heads.iter().map(|head| String::from_utf8_lossy(head).into_owned()).collect();
-        self.since_row.set(0);
+        self.passed.borrow_mut().bytes_since_row = 0;
         Ok(heads)
     }
 
     /// Fills a block with rows; fewer than its length at the end of the table.
-    fn fill(&mut self, block: &mut Vec<ByteRecord>) -> Result<usize, BatchError> {
-        block.resize_with(BLOCK, ByteRecord::new);
-        for (count, record) in block.iter_mut().enumerate() {
-            if !self.reader.read_byte_record(record).map_err(BatchError::of_csv)? {
+    fn fill(&mut self, block: &mut Vec<Row>) -> Result<usize, BatchError> {
+        block.resize_with(BLOCK, Row::default);
+        for (count, row) in block.iter_mut().enumerate() {
+            if !self.reader.read_byte_record(&mut row.record).map_err(BatchError::of_csv)? {
                 return Ok(count);
             }
-            self.since_row.set(0);
+            let end = self.reader.position().byte();
+            let held = row.record.as_slice().iter().filter(|byte| **byte == b'\n').count();
+            let mut passed = self.passed.borrow_mut();
+            row.line = passed.line_of_row(end, held);
+            passed.bytes_since_row = 0;
         }
         Ok(BLOCK)
+    }
+
+    fn bytes(&self) -> u64 {
+        self.passed.borrow().bytes
     }
 }
 
@@ -116,7 +160,7 @@ pub(super) fn stream<R: Read>(
             }
             summary.add(&worked.summary);
         }
-        progress(Progress { rows: summary.rows, bytes: source.read.get() });
+        progress(Progress { rows: summary.rows, bytes: source.bytes() });
         if count < BLOCK {
             break;
         }
@@ -148,12 +192,12 @@ fn heads(rows: &Rows<'_>, columns: &[OutputColumn], sinks: &mut Sinks<'_>) -> Re
     Ok(())
 }
 
-fn work(chunk: &[ByteRecord], rows: &Rows<'_>, columns: &[OutputColumn], apart: bool) -> Worked {
+fn work(chunk: &[Row], rows: &Rows<'_>, columns: &[OutputColumn], apart: bool) -> Worked {
     let mut worker = Worker::default();
     let mut worked = Worked::default();
     let (mut output, mut errors) = (Line::default(), Line::default());
-    for record in chunk {
-        let number = record.position().map_or(0, csv::Position::line);
+    for Row { line: number, record } in chunk {
+        let number = *number;
         worked.summary.rows += 1;
         let outcome = cells(record, rows).and_then(|cells| rows.outcome(&mut worker, &cells));
         if apart && let Err(error) = &outcome {

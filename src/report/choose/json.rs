@@ -219,7 +219,7 @@ fn member(limits: &Limits) -> MemberLine {
 
 /// Micrometres; none when the number is not finite.
 fn microns(metres: f64) -> Option<f64> {
-    metres.is_finite().then(|| metres * 1e6 + 0.0)
+    metres.is_finite().then_some(metres * 1e6 + 0.0)
 }
 
 /// Tabulated figures without the noise that the factor adds.
