@@ -2,7 +2,7 @@
 
 use super::{Caution, Findings};
 use crate::assembly::cautions::{self as practice, Process};
-use crate::joint::{Bath, Method};
+use crate::joint::{Allow, Bath, DutyState, Method};
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::quantity::{Measure, show};
@@ -179,6 +179,44 @@ fn sentence(text: &str) -> String {
     if text.ends_with('.') { text.to_owned() } else { format!("{text}.") }
 }
 
+/// A hub that may yield by design but is calculated as elastic.
+fn elastic_all_the_same(findings: &Findings) -> Option<String> {
+    let joint = &findings.joint;
+    if joint.require.allow == Allow::Elastic || findings.service.plastic.is_some() {
+        return None;
+    }
+    let why = if joint.rings.len() > 2 {
+        "there are more than two rings"
+    } else if !joint.slices.is_empty() {
+        "hub or shaft is stepped"
+    } else {
+        "the shaft would yield as well, or is not ductile"
+    };
+    Some(format!("The hub may yield by design but is calculated as elastic: {why}."))
+}
+
+/// Above this the fall of Young's modulus is worth a note: 100 °C, where that of steel has lost 1.4 %.
+const HOT: f64 = 373.15;
+
+fn hot_modulus(findings: &Findings) -> Option<String> {
+    let hottest = |state: &DutyState| state.temperatures.iter().copied().fold(0.0, f64::max);
+    let states: Vec<&str> = findings
+        .joint
+        .duty
+        .iter()
+        .filter(|state| hottest(state) > HOT)
+        .map(|state| state.name.as_str())
+        .collect();
+    if states.is_empty() {
+        return None;
+    }
+    Some(format!(
+        "Young's modulus is that of 20 °C in every state. That of steel is 1.4 % less at 100 °C, 5 % at 200 °C, 9 % at \
+         300 °C (SEW 310), and the pressure of a joint with it: mind that in {}.",
+        states.join(", ")
+    ))
+}
+
 /// Why quantities do not exist, and what is not covered.
 pub(super) fn notes(findings: &Findings) -> Vec<String> {
     let mut notes = Vec::new();
@@ -206,9 +244,11 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
                 .push(format!("The safety of the {} at the tightest pair does not exist: {why}.", ring.name));
         }
     }
+    notes.extend(elastic_all_the_same(findings));
+    notes.extend(hot_modulus(findings));
     notes.push(
-        "Covered: elastic rings of uniform section in plane stress, at rest, uniform temperature in each part. Not covered: \
-         hub ends and edges (the edge pressure of a sharp hub on a through shaft is about 1.5 to 1.7 times the mean), axial \
+        "Covered: rings in plane stress, elastic unless the hub may yield by design, with rotation, temperature and steady \
+         heat flow. Not covered: hub ends and edges (the edge pressure of a sharp hub on a through shaft is about 1.5 to 1.7 times the mean), axial \
          friction while joining (0 to 10 % more pressure), form errors, creep, fretting."
             .to_owned(),
     );

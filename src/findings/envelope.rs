@@ -102,7 +102,7 @@ pub(super) fn envelope(
     let mut turning = stack.clone();
     turning.angular_speed = 1.0;
     let turning = turning.influence()?;
-    let first = |values: &[f64]| values.first().copied().unwrap_or(0.0);
+    let first = |values: &nalgebra::DVector<f64>| values.get(0).copied().unwrap_or(0.0);
     let flexibility = first(&influence.diagonal);
     let at_rest = -first(&influence.free_gaps) / flexibility;
     if at_rest <= 0.0 {

@@ -126,8 +126,8 @@ impl Stack {
         if closed.len() != influence.len() {
             return Err(self.no_such("interfaces of a solution", closed.len()));
         }
-        let adjoint = influence.solve_transposed(right, &closed);
-        Ok(adjoint.into_iter().map(|value| 0.5 * value).collect())
+        let adjoint = influence.solve_transposed(right.into(), &closed);
+        Ok((0.5 * adjoint).data.into())
     }
 
     /// The combination of loosest and tightest interferences that gives the extreme of a quantity.
