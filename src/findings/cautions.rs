@@ -1,8 +1,6 @@
 //! Cautions and notes that the numbers of a joint call for.
 
-use super::{Caution, Findings};
-use crate::assembly::cautions::{self as practice, Process};
-use crate::joint::{Bath, Method};
+use super::{Caution, Findings, joining_cautions};
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::quantity::{Measure, show};
@@ -16,7 +14,7 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     all.extend(input_remarks(findings));
     all.extend(proportions(findings));
     all.extend(polymers(findings));
-    all.extend(assembly(findings));
+    all.extend(joining_cautions::cautions(findings));
     all
 }
 
@@ -120,38 +118,6 @@ fn polymers(findings: &Findings) -> Vec<Caution> {
         .collect()
 }
 
-fn assembly(findings: &Findings) -> Vec<Caution> {
-    let joint = &findings.joint;
-    let bath = match joint.assembly.bath {
-        Bath::DryIce => Process::DryIce,
-        Bath::LiquidNitrogen => Process::LiquidNitrogen,
-    };
-    let processes = match joint.assembly.method {
-        Method::Press => vec![Process::Press],
-        Method::HeatHub => vec![Process::HeatHub],
-        Method::ChillShaft => vec![bath],
-        Method::HeatAndChill => vec![Process::HeatHub, bath],
-    };
-    let mut all: Vec<Caution> = processes.into_iter().flat_map(practice::cautions).collect();
-    let chills = matches!(joint.assembly.method, Method::ChillShaft | Method::HeatAndChill);
-    if let (true, Some(shaft)) = (chills, joint.rings.first())
-        && let Some(text) = &shaft.material.low_temperature_caution
-    {
-        all.push(Caution {
-            subject: "cold",
-            text: format!("{}: {}", shaft.material.name, sentence(text)),
-            source: "material library".to_owned(),
-        });
-    }
-    all
-}
-
-/// A text that ends with a full stop.
-fn sentence(text: &str) -> String {
-    let text = text.trim();
-    if text.ends_with('.') { text.to_owned() } else { format!("{text}.") }
-}
-
 /// Why quantities do not exist, and what is not covered.
 pub(super) fn notes(findings: &Findings) -> Vec<String> {
     let mut notes = Vec::new();
@@ -179,6 +145,7 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
                 .push(format!("The safety of the {} at the tightest pair does not exist: {why}.", ring.name));
         }
     }
+    notes.extend(findings.assembly.times.gaps.iter().cloned());
     notes.push(
         "Covered: elastic rings of uniform section in plane stress, at rest, uniform temperature in each part. Not covered: \
          hub ends and edges (the edge pressure of a sharp hub on a through shaft is about 1.5 to 1.7 times the mean), axial \

@@ -10,6 +10,7 @@ pub mod materials;
 pub mod mathml;
 pub mod plot;
 pub mod scatter;
+pub mod seating;
 pub mod service;
 pub mod sort;
 pub mod terminal;

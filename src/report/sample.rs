@@ -356,6 +356,7 @@ fn joint(spec: &Spec) -> Joint {
             chamfer_angle: Sourced::new(5f64.to_radians(), "common practice, no source"),
             bath: Bath::LiquidNitrogen,
             hub_temperature_limit: None,
+            practice: Default::default(),
         },
         smoothing: Smoothing {
             loss: rings.windows(2).map(|p| 0.8 * (p[0].roughness.value + p[1].roughness.value)).collect(),

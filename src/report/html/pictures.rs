@@ -19,6 +19,7 @@ pub(super) fn plots(sheet: Sheet) -> Markup {
         plot::stress(findings),
         plot::press_force(findings),
         plot::diameters(findings),
+        plot::handling(findings),
         plot::envelope(findings),
     ];
     html! {

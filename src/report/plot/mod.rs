@@ -1,9 +1,10 @@
 //! Plots: tolerance zones, stress through the walls, press force along the travel, diameters against temperature,
-//! what is left of the grip at work.
+//! clearance against time, what is left of the grip at work.
 
 mod axis;
 mod chart;
 mod envelope;
+mod handling;
 mod population;
 mod press;
 mod stress;
@@ -15,6 +16,7 @@ mod zones;
 use maud::Markup;
 
 pub use envelope::envelope;
+pub use handling::handling;
 pub use population::population;
 pub use press::press_force;
 pub use stress::stress;
