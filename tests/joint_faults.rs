@@ -415,7 +415,13 @@ fn faults_of_the_keys_of_several_rings_and_of_service_have_their_place() {
         (STEPPED, "radial_force: 1 kN", "radial_force: 1 N.m", (8, 58), "is a torque"),
         (STEPPED, "reversing: no", "reversing: 3", (8, 103), "3"),
         (STEPPED, "{length: 20 mm, bore: 0 mm}", "{bore: 0 mm}", (4, 34), "`length` is missing"),
-        (STEPPED, "{length: 15 mm, outer_diameter: 75 mm}", "{length: 15 mm}", (5, 31), "`outer_diameter` is missing"),
+        (
+            STEPPED,
+            "{length: 15 mm, outer_diameter: 75 mm}",
+            "{length: 15 mm}",
+            (5, 31),
+            "`outer_diameter` is missing",
+        ),
         (
             STEPPED,
             "hub: {material: C45+N, steps: [{length: 15 mm",

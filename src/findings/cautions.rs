@@ -1,8 +1,7 @@
 //! Cautions and notes that the numbers of a joint call for.
 
-use super::{Caution, Findings};
-use crate::assembly::cautions::{self as practice, Process};
-use crate::joint::{Allow, Bath, DutyState, Method};
+use super::{Caution, Findings, joining_cautions};
+use crate::joint::{Allow, DutyState};
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::quantity::{Measure, show};
@@ -17,7 +16,7 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     all.extend(proportions(findings));
     all.extend(polymers(findings));
     all.extend(buckling(findings));
-    all.extend(assembly(findings));
+    all.extend(joining_cautions::cautions(findings));
     all
 }
 
@@ -147,38 +146,6 @@ fn buckling(findings: &Findings) -> Option<Caution> {
     })
 }
 
-fn assembly(findings: &Findings) -> Vec<Caution> {
-    let joint = &findings.joint;
-    let bath = match joint.assembly.bath {
-        Bath::DryIce => Process::DryIce,
-        Bath::LiquidNitrogen => Process::LiquidNitrogen,
-    };
-    let processes = match joint.assembly.method {
-        Method::Press => vec![Process::Press],
-        Method::HeatHub => vec![Process::HeatHub],
-        Method::ChillShaft => vec![bath],
-        Method::HeatAndChill => vec![Process::HeatHub, bath],
-    };
-    let mut all: Vec<Caution> = processes.into_iter().flat_map(practice::cautions).collect();
-    let chills = matches!(joint.assembly.method, Method::ChillShaft | Method::HeatAndChill);
-    if let (true, Some(shaft)) = (chills, joint.rings.first())
-        && let Some(text) = &shaft.material.low_temperature_caution
-    {
-        all.push(Caution {
-            subject: "cold",
-            text: format!("{}: {}", shaft.material.name, sentence(text)),
-            source: "material library".to_owned(),
-        });
-    }
-    all
-}
-
-/// A text that ends with a full stop.
-fn sentence(text: &str) -> String {
-    let text = text.trim();
-    if text.ends_with('.') { text.to_owned() } else { format!("{text}.") }
-}
-
 /// A hub that may yield by design but is calculated as elastic.
 fn elastic_all_the_same(findings: &Findings) -> Option<String> {
     let joint = &findings.joint;
@@ -246,6 +213,7 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
     }
     notes.extend(elastic_all_the_same(findings));
     notes.extend(hot_modulus(findings));
+    notes.extend(findings.assembly.times.gaps.iter().cloned());
     notes.push(
         "Covered: rings in plane stress, elastic unless the hub may yield by design, with rotation, temperature and steady \
          heat flow. Not covered: hub ends and edges (the edge pressure of a sharp hub on a through shaft is about 1.5 to 1.7 times the mean), axial \

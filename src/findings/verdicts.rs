@@ -200,7 +200,7 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
     };
     let (shaft, hub) = findings.joint.shaft_and_hub();
     let limit = assembly.hub_limit.as_ref().map(|(limit, _)| *limit);
-    match findings.joint.assembly.method {
+    let mut verdicts = match findings.joint.assembly.method {
         Method::Press => {
             let force = assembly.press.tightest.peak_force;
             let allowed = findings.joint.require.press_force;
@@ -249,5 +249,36 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
                 "tightest pair with clearance",
             )]
         }
+    };
+    verdicts.extend(handling(findings));
+    verdicts
+}
+
+/// The time from oven or bath to seated; nothing when the parts pass each other for ever and nothing is required.
+fn handling(findings: &Findings) -> Option<Verdict> {
+    let plan = &findings.joint.assembly;
+    if !plan.heats() && !plan.chills() {
+        return None;
     }
+    let required = plan.practice.handling_time;
+    let handling = findings.assembly.times.handling.as_ref();
+    let found = handling.and_then(|handling| handling.tightest.gone);
+    if found.is_none() && required.is_none() {
+        return None;
+    }
+    let ok = match (handling, found, required) {
+        (Some(_), Some(found), Some(required)) => found >= required,
+        (None, _, Some(_)) => false,
+        _ => true,
+    };
+    let from = if plan.heats() { "oven" } else { "bath" };
+    Some(Verdict {
+        question: Question::Assembly,
+        subject: format!("time from {from} to seated"),
+        required,
+        found,
+        unit: VerdictUnit::Time,
+        ok,
+        at: "tightest pair, until no clearance is left".to_owned(),
+    })
 }

@@ -6,15 +6,15 @@
 use schemars::JsonSchema;
 use serde::Deserialize;
 
+use super::assembly_keys::AssemblyKeys;
 use super::leaf::{
-    AllowWord, BathWord, CriterionWord, DisplayWord, FlagWord, FrictionText, LimitsText, LubricationWord,
-    YieldRuleWord,
+    AllowWord, CriterionWord, DisplayWord, FlagWord, FrictionText, LimitsText, LubricationWord, YieldRuleWord,
 };
 use super::leaf::{FitText, MaterialName, UncertainSize};
-use super::leaf::{MaterialKeys, MethodWord, Roughness, SmoothingAtWord, SmoothingText, Version};
+use super::leaf::{MaterialKeys, Roughness, SmoothingAtWord, SmoothingText, Version};
 use super::population_keys::PopulationKeys;
 use super::written::{At, Line, NotYet, Note, TextOr, Written};
-use crate::quantity::{Angle, Force, Length, Number, NumberRange, Pressure, Speed, Temperature, Torque};
+use crate::quantity::{Force, Length, Number, NumberRange, Pressure, Speed, Temperature, Torque};
 
 /// Version of the joint file that is read.
 pub const VERSION: u32 = 1;
@@ -53,7 +53,24 @@ pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
     ),
     (
         "assembly",
-        &["method", "shop_temperature", "clearance", "chamfer_angle", "bath", "hub_temperature_limit"],
+        &[
+            "method",
+            "shop_temperature",
+            "clearance",
+            "form_error",
+            "handling_allowance",
+            "chamfer_angle",
+            "bath",
+            "medium",
+            "oven_temperature",
+            "hub_temperature_limit",
+            "handling_time",
+            "transfer_time",
+            "chilled_length",
+            "room",
+            "vessel",
+            "temperature_lag",
+        ],
     ),
     ("smoothing", &["factor", "rule", "at"]),
     (
@@ -329,24 +346,6 @@ pub(crate) struct StateKeys {
     pub(crate) reversing: Option<Written<FlagWord>>,
     /// Share of the contact pressure that relaxation leaves, 0 to 1. Silent: all of it.
     pub(crate) relaxation: Option<Written<Number>>,
-}
-
-/// How the joint is put together.
-#[derive(Debug, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields)]
-pub(crate) struct AssemblyKeys {
-    /// Method. Silent: press.
-    pub(crate) method: Option<Written<MethodWord>>,
-    /// Temperature of the shop. Silent: 20 degC.
-    pub(crate) shop_temperature: Option<Written<Temperature>>,
-    /// Diametral clearance wanted while joining hot or cold. Silent: a thousandth of the diameter.
-    pub(crate) clearance: Option<Written<Length>>,
-    /// Angle of the lead-in chamfer to the axis. Silent: 5 deg.
-    pub(crate) chamfer_angle: Option<Written<Angle>>,
-    /// Cold bath. Silent: dry ice.
-    pub(crate) bath: Option<Written<BathWord>>,
-    /// Highest temperature the hub may have; the limit of its material holds as well.
-    pub(crate) hub_temperature_limit: Option<Written<Temperature>>,
 }
 
 /// Loss of interference by smoothing.

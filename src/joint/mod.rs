@@ -6,10 +6,12 @@
 //! |---|---|
 //! | [`read`](mod@read) | from text to joint, or to everything that is wrong |
 //! | [`population`] | how the parts scatter |
+//! | [`practice`] | oven, bath, room and handling |
 //! | [`set`] | changes from the command line |
 //! | [`template`] | commented files to start from |
 //! | [`schema`](mod@schema) | JSON Schema for editors |
 
+mod assembly_keys;
 mod decode;
 mod diagnose;
 mod draft;
@@ -19,6 +21,7 @@ mod leaf;
 mod place;
 pub mod population;
 mod population_keys;
+pub mod practice;
 pub mod read;
 pub mod schema;
 pub mod set;
@@ -282,6 +285,25 @@ pub struct AssemblyPlan {
     /// Highest hub temperature allowed by the user, K, the lower of `assembly.hub_temperature_limit` and
     /// `require.hub_temperature`; the material's own limit holds as well.
     pub hub_temperature_limit: Option<f64>,
+    /// Oven, bath, room and handling.
+    pub practice: practice::Practice,
+}
+
+impl AssemblyPlan {
+    /// Diametral clearance to be opened: the one wanted, the form error and the allowance for handling, m.
+    pub fn clearance_to_open(&self) -> f64 {
+        self.clearance.value + self.practice.form_error + self.practice.handling_allowance
+    }
+
+    /// Whether the hub is heated.
+    pub fn heats(&self) -> bool {
+        matches!(self.method, Method::HeatHub | Method::HeatAndChill)
+    }
+
+    /// Whether the shaft is chilled.
+    pub fn chills(&self) -> bool {
+        matches!(self.method, Method::ChillShaft | Method::HeatAndChill)
+    }
 }
 
 /// At which pairs the smoothing loss is taken.

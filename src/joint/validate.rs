@@ -7,6 +7,7 @@ mod fit;
 mod friction;
 mod parts;
 mod population;
+mod practice;
 mod rings;
 mod smoothing;
 mod steps;

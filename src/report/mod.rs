@@ -11,6 +11,7 @@ pub mod mathml;
 pub mod plot;
 pub mod pressing;
 pub mod scatter;
+pub mod seating;
 pub mod service;
 pub mod sort;
 pub mod terminal;

@@ -5,6 +5,7 @@ use std::fmt::Write;
 use anstyle::{AnsiColor, Style};
 use comfy_table::{CellAlignment, Table, presets};
 
+use super::seating::{self, time_allowed};
 use crate::findings::{Findings, PairFindings, Question, Verdict, VerdictUnit};
 use crate::joint::Method;
 use crate::quantity::{Measure, UnitSystem, display_unit, show};
@@ -121,6 +122,7 @@ pub fn verdict_value(value: f64, unit: VerdictUnit, system: UnitSystem) -> Strin
         VerdictUnit::Force => show(Measure::Force, value, system).to_string(),
         VerdictUnit::Temperature => show(Measure::Temperature, value, system).to_string(),
         VerdictUnit::Share => format!("{:.1} %", value * 100.0),
+        VerdictUnit::Time => time_allowed(value),
     }
 }
 
@@ -167,7 +169,7 @@ pub fn verdict_sentence(verdict: &Verdict, system: UnitSystem) -> String {
     let value = |number| verdict_value(number, verdict.unit, system);
     let found = verdict.found.map_or_else(|| "does not exist".to_owned(), value);
     let bound = match verdict.unit {
-        VerdictUnit::Safety => "at least",
+        VerdictUnit::Safety | VerdictUnit::Time => "at least",
         VerdictUnit::Force | VerdictUnit::Share => "at most",
         VerdictUnit::Temperature => "limit",
     };
@@ -375,6 +377,11 @@ fn assembly(out: &mut String, findings: &Findings) {
     let chosen = |is: bool| if is { "* " } else { "  " };
     let method = joint.assembly.method;
     let press = &assembly.press;
+    if let Some(text) = seating::headline(findings) {
+        for wrapped in textwrap::wrap(&text, WIDTH) {
+            line(out, format!("{HEADING}{wrapped}{HEADING:#}"));
+        }
+    }
     paragraph(
         out,
         chosen(method == Method::Press),
@@ -400,6 +407,22 @@ fn assembly(out: &mut String, findings: &Findings) {
             show(Measure::Deviation, assembly.clearance, system)
         ),
     );
+    for sentence in method_sentences(findings) {
+        paragraph(out, "  ", &plain(&sentence));
+    }
+}
+
+/// What the method asked for takes, and how the joint comes apart.
+fn method_sentences(findings: &Findings) -> Vec<String> {
+    let mut all: Vec<String> = seating::handling(findings).into_iter().collect();
+    all.extend(seating::soaks(findings));
+    all.extend(seating::cold_bath(findings));
+    all.extend(seating::coefficients(findings));
+    if findings.joint.assembly.method == Method::Press {
+        all.extend(seating::press(findings));
+    }
+    all.extend(seating::release(findings));
+    all
 }
 
 fn defaults(out: &mut String, findings: &Findings) {

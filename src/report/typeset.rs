@@ -45,6 +45,12 @@ pub(crate) fn sentence(text: &str) -> String {
     format!("{}{}{stop}", first.to_uppercase(), letters.as_str())
 }
 
+/// The text with its first letter in upper case.
+pub(crate) fn capital(text: &str) -> String {
+    let mut letters = text.chars();
+    letters.next().map_or_else(String::new, |first| first.to_uppercase().chain(letters).collect())
+}
+
 /// Running text with a true minus before every negative number and a thin space before every unit.
 pub(crate) fn prose(text: &str) -> String {
     let letters: Vec<char> = text.chars().collect();

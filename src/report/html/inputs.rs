@@ -213,6 +213,50 @@ fn assembly(sheet: Sheet) -> Vec<Input> {
     if let Some(limit) = plan.hub_temperature_limit {
         rows.push(Input::new("assembly.hub_temperature_limit", temperature(limit)));
     }
+    rows.extend(practice(sheet));
+    rows
+}
+
+/// Oven, bath, room and handling, as far as the method uses them.
+fn practice(sheet: Sheet) -> Vec<Input> {
+    let plan = &sheet.findings.joint.assembly;
+    let (practice, units) = (&plan.practice, sheet.units);
+    let volume = |cubic_metres: f64| format!("{}\u{202f}m³", crate::quantity::number(cubic_metres, 4));
+    let time = |seconds: f64| format!("{}\u{202f}s", crate::quantity::number(seconds, 6));
+    let mut rows = Vec::new();
+    if plan.heats() {
+        rows.push(Input::new("assembly.medium", practice.heating.name()));
+        if let Some(oven) = practice.oven_temperature {
+            rows.push(Input::new("assembly.oven_temperature", units.text(Measure::Temperature, oven)));
+        }
+    }
+    if plan.heats() || plan.chills() {
+        let deviation = |metres: f64| units.text(Measure::Deviation, metres);
+        rows.push(Input::new("assembly.form_error", deviation(practice.form_error)));
+        rows.push(Input::new("assembly.handling_allowance", deviation(practice.handling_allowance)));
+        rows.push(Input::new("assembly.transfer_time", time(practice.transfer_time)));
+        if let Some(needed) = practice.handling_time {
+            rows.push(Input::new("assembly.handling_time", time(needed)));
+        }
+    }
+    if plan.chills() {
+        if let Some(length) = practice.chilled_length {
+            rows.push(Input::new("assembly.chilled_length", units.text(Measure::Size, length)));
+        }
+        if let Some(room) = practice.room {
+            rows.push(Input::new("assembly.room.volume", volume(room.volume)));
+            let changes = crate::quantity::number(room.air_changes, 4);
+            rows.push(Input::new("assembly.room.air_changes", changes));
+        }
+        if let Some(vessel) = practice.vessel {
+            rows.push(Input::new("assembly.vessel.volume", volume(vessel.volume)));
+            if let Some(loss) = vessel.hourly_loss {
+                rows.push(Input::new("assembly.vessel.hourly_loss", volume(loss)));
+            }
+        }
+    }
+    let lag = crate::quantity::number(practice.temperature_lag, 4);
+    rows.push(Input::new("assembly.temperature_lag", lag));
     rows
 }
 

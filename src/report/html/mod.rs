@@ -18,6 +18,7 @@ mod worksheet;
 
 use maud::{Markup, PreEscaped, html};
 
+use super::typeset::capital;
 use super::units::Units;
 use crate::findings::Findings;
 
@@ -123,13 +124,4 @@ fn without_control_characters(page: &str) -> String {
     page.chars()
         .filter(|c| (!c.is_control() || matches!(c, '\n' | '\t')) && !matches!(c, '\u{FFFE}' | '\u{FFFF}'))
         .collect()
-}
-
-/// First letter in upper case, for a heading or a sentence.
-fn capital(text: &str) -> String {
-    let mut letters = text.chars();
-    match letters.next() {
-        Some(first) => first.to_uppercase().chain(letters).collect(),
-        None => String::new(),
-    }
 }

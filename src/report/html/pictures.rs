@@ -20,6 +20,7 @@ pub(super) fn plots(sheet: Sheet) -> Markup {
         plot::along(findings),
         plot::press_force(findings),
         plot::diameters(findings),
+        plot::handling(findings),
         plot::envelope(findings),
     ];
     html! {

@@ -134,7 +134,7 @@ impl VerdictLine {
     fn of(verdict: &Verdict) -> Self {
         let number = |value: f64| match verdict.unit {
             VerdictUnit::Temperature => celsius(value),
-            VerdictUnit::Safety | VerdictUnit::Force | VerdictUnit::Share => value,
+            VerdictUnit::Safety | VerdictUnit::Force | VerdictUnit::Share | VerdictUnit::Time => value,
         };
         Self {
             question: match verdict.question {
@@ -149,6 +149,7 @@ impl VerdictLine {
                 VerdictUnit::Safety | VerdictUnit::Share => "1",
                 VerdictUnit::Force => "N",
                 VerdictUnit::Temperature => "degC",
+                VerdictUnit::Time => "s",
             },
             ok: verdict.ok,
             at: verdict.at.clone(),

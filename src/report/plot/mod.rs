@@ -1,11 +1,11 @@
 //! Plots: tolerance zones, stress through the walls, press force along the travel, diameters against temperature,
-//! pressure along a stepped joint, what is left of the grip at work.
-//! what is left of the grip at work, recorded press-in curves.
+//! pressure along a stepped joint, clearance against time, what is left of the grip at work, recorded press-in curves.
 
 mod along;
 mod axis;
 mod chart;
 mod envelope;
+mod handling;
 mod population;
 mod press;
 mod records;
@@ -22,6 +22,7 @@ use crate::findings::Findings;
 
 pub use along::along;
 pub use envelope::envelope;
+pub use handling::handling;
 pub use population::population;
 pub use press::press_force;
 pub use records::press_records;
