@@ -405,21 +405,20 @@ fn faults_of_the_keys_of_several_rings_and_of_service_have_their_place() {
         (STEPPED, "outer_diameter: 75 mm", "outer_diameter: 45 mm", (5, 64), "not larger than"),
         (STEPPED, "bore: 20 mm", "bore: 50 mm", (4, 85), "not smaller than"),
         (STEPPED, "rotating_bending: yes", "rotating_bending: maybe", (8, 82), "maybe"),
-        (RINGS, "fits: [H7/s6, H7/u6]\n", "", (1, 1), "`fits` is missing"),
-        (RINGS, "speed: 1000 rpm", "temperatures: [20 degC]", (10, 58), ""),
+        (RINGS, "speed: 1000 rpm", "temperatures: [20 degC]", (10, 44), "both given"),
         (RINGS, "inner_pressure: 100 MPa", "inner_pressure: 100 mm", (10, 35), "is a length"),
         (RINGS, "inner_pressure: 100 MPa", "outer_pressure: -1 MPa", (10, 35), "must not be negative"),
         (RINGS, "speed: 1000 rpm", "relaxation: 0", (10, 56), "more than 0 and at most 1"),
         (RINGS, "speed: 1000 rpm", "relaxation: 1.5", (10, 56), "more than 0 and at most 1"),
         (STEPPED, "bending_moment: 100 N.m", "bending_moment: -100 N.m", (8, 35), "must not be negative"),
         (STEPPED, "radial_force: 1 kN", "radial_force: 1 N.m", (8, 58), "is a torque"),
-        (STEPPED, "reversing: no", "reversing: 3", (8, 103), "3"),
+        (STEPPED, "reversing: no", "reversing: 3", (8, 98), "3"),
         (STEPPED, "{length: 20 mm, bore: 0 mm}", "{bore: 0 mm}", (4, 34), "`length` is missing"),
         (
             STEPPED,
             "{length: 15 mm, outer_diameter: 75 mm}",
             "{length: 15 mm}",
-            (5, 31),
+            (5, 32),
             "`outer_diameter` is missing",
         ),
         (
@@ -442,6 +441,24 @@ fn faults_of_the_keys_of_several_rings_and_of_service_have_their_place() {
         assert_eq!(placed, Some(at), "{to}: {}", listed(&found));
         assert!(found[0].message.contains(words), "{to}: {}", listed(&found));
     }
+}
+
+#[test]
+fn the_fits_of_several_rings_are_asked_for() {
+    let found = faults(&RINGS.replacen("fits: [H7/s6, H7/u6]\norder: [2, 1]\n", "", 1));
+    assert_eq!(found.len(), 1, "{}", listed(&found));
+    assert_eq!(found[0].message, "`fits` is missing");
+}
+
+#[test]
+fn temperatures_are_given_once() {
+    let state = "inner_temperature: 80 degC, outer_temperature: 40 degC";
+    let all = "temperatures: [20 degC, 20 degC, 20 degC]";
+    let found = faults(&RINGS.replacen(state, &format!("temperature: 50 degC, {all}"), 1));
+    assert_eq!(found.len(), 1, "{}", listed(&found));
+    assert!(found[0].message.contains("both given"), "{}", found[0].message);
+    let found = faults(&RINGS.replacen(state, "temperatures: [20 degC]", 1));
+    assert_eq!(found[0].message, "`temperatures` has 1 for 3 rings");
 }
 
 #[test]

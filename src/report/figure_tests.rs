@@ -148,3 +148,65 @@ fn captions_say_what_to_see_with_its_numbers() {
     let transition = plot::tolerance_zones(&sample::transition()).caption;
     assert!(transition.contains("the loosest pair has a clearance of 10\u{202F}µm"), "{transition}");
 }
+
+fn of_text(text: &str) -> Findings {
+    let library = crate::material::library::Library::built_in();
+    let joint = crate::joint::read::read(text, std::path::Path::new("test.yaml"), &[], &library).unwrap();
+    crate::findings::compute(joint).unwrap()
+}
+
+#[test]
+fn a_stepped_joint_is_drawn_and_plotted_with_its_steps() {
+    let text = include_str!("../../examples/stepped-coupling.yaml");
+    for (outer, display) in
+        [("125 mm", "metric"), ("81 mm", "metric"), ("179 mm", "inch"), ("400 mm", "inch")]
+    {
+        let text = format!("{}display: {display}\n", text.replace("125 mm", outer));
+        let findings = of_text(&text);
+        check(outer, &drawing::section(&findings).svg.into_string());
+        let plot = plot::along(&findings).unwrap();
+        check(outer, &plot.svg.into_string());
+        assert!(plot.caption.contains("slice"), "{}", plot.caption);
+    }
+    assert!(plot::along(&sample::fan_hub()).is_none());
+    // 125 mm and 180 mm at 1 : 5 stand 12.5 mm and 18 mm from the centre line: the outline has both heights.
+    let stepped = drawing::section(&of_text(text)).svg.into_string();
+    let all = super::well_formed::elements(&stepped).unwrap();
+    let centre = all
+        .iter()
+        .filter(|e| e.name == "line" && e.attribute("stroke-dasharray").is_some())
+        .map(|e| e.number("y1"))
+        .next()
+        .unwrap();
+    let scale =
+        [1.0, 0.5, 0.2].into_iter().find(|s| stepped.contains(&format!("scale 1 : {}", 1.0 / s))).unwrap();
+    for diameter in [125.0, 180.0] {
+        let height = super::svg::digits(centre - 0.5 * diameter * scale);
+        assert!(
+            stepped.contains(&format!(",{height}")) || stepped.contains(&format!(" {height}")),
+            "{height}"
+        );
+    }
+}
+
+/// The bore that is left and the outer diameter stand beside their dimensions.
+#[test]
+fn sizes_of_the_assembled_joint_stand_at_their_dimensions() {
+    let text = include_str!("../../examples/bush-in-housing.yaml");
+    let findings = of_text(text);
+    let svg = drawing::section(&findings).svg.into_string();
+    check("bush", &svg);
+    let all = super::well_formed::elements(&svg).unwrap();
+    let notes: Vec<&str> = all
+        .iter()
+        .filter(|e| e.name == "text" && e.text.starts_with("assembled"))
+        .map(|e| e.text.as_str())
+        .collect();
+    assert_eq!(notes.len(), 2, "{notes:?}");
+    let bore = |pair: &crate::findings::PairFindings| 1e3 * (0.04 + pair.rings[0].bore_change);
+    let said: Vec<f64> = notes[0].split(' ').filter_map(|word| word.parse().ok()).collect();
+    for (said, pair) in said.iter().zip([&findings.extremes.loosest, &findings.extremes.tightest]) {
+        assert!((said - bore(pair)).abs() < 6e-4, "{notes:?} {}", bore(pair));
+    }
+    assert_eq!(said.len(), 2, "{notes:?}");
+}

@@ -24,7 +24,7 @@ pub(super) struct Diameter {
     /// Radius on paper.
     pub radius: f64,
     pub text: String,
-    /// Small lettering on the other side of the line, where it has room.
+    /// Small lettering on the other side of the line.
     note: Option<Lettering>,
 }
 
@@ -33,11 +33,10 @@ impl Diameter {
         Self { from, at, radius, text: fitted(text, TYPE, LONGEST), note: None }
     }
 
-    /// With a note, left out when it is longer than its line.
+    /// With a note.
     pub(super) fn noted(mut self, note: Option<String>) -> Self {
-        let note =
-            note.map(|text| Lettering::new(text, SMALL).upright().colour(QUIET).anchor(Anchor::Middle));
-        self.note = note.filter(|note| note.width() <= 2.0 * self.radius - 2.0 * ARROW);
+        self.note =
+            note.map(|text| Lettering::new(fitted(&text, SMALL, LONGEST), SMALL).upright().colour(QUIET));
         self
     }
 
@@ -50,9 +49,16 @@ impl Diameter {
         self.lettering().width() <= 2.0 * self.radius - 1.0
     }
 
-    /// How far the figure reaches below the part when it stands there, mm.
+    /// How far figure and note reach below the part when they stand there, mm.
     pub(super) fn below(&self) -> f64 {
-        if self.has_room() { 0.0 } else { 4.0 + self.lettering().width() }
+        let figure = if self.has_room() { 0.0 } else { 4.0 + self.lettering().width() };
+        let note = self.note.as_ref().filter(|note| !self.holds(note)).map_or(0.0, |note| 4.0 + note.width());
+        figure.max(note)
+    }
+
+    /// Whether the note has room beside the line.
+    fn holds(&self, note: &Lettering) -> bool {
+        note.width() <= 2.0 * self.radius - 2.0 * ARROW
     }
 
     /// Draws it about the centre line; `bottom` is the lowest edge of the part.
@@ -65,16 +71,21 @@ impl Diameter {
         let (top, base) = ((self.at, centre - self.radius), (self.at, centre + self.radius));
         let inside = 2.0 * self.radius >= 3.0 * ARROW;
         arrows(sketch, top, base, inside);
-        let baseline = self.at - 1.0;
-        if self.has_room() {
-            sketch.line(top, base, NARROW);
-            sketch.text((baseline, centre), &self.lettering().anchor(Anchor::Middle));
-            if let Some(note) = &self.note {
-                sketch.text((self.at + 0.7 + 0.8 * SMALL, centre), note);
+        let below = self.below();
+        let foot = if below > 0.0 { (self.at, bottom + below) } else { base };
+        sketch.line(top, foot, NARROW);
+        let beside = |room: bool, x: f64, text: Lettering| {
+            if room {
+                ((x, centre), text.anchor(Anchor::Middle))
+            } else {
+                ((x, bottom + 4.0), text.anchor(Anchor::End))
             }
-        } else {
-            sketch.line(top, (self.at, bottom + self.below()), NARROW);
-            sketch.text((baseline, bottom + 4.0), &self.lettering().anchor(Anchor::End));
+        };
+        let (at, figure) = beside(self.has_room(), self.at - 1.0, self.lettering());
+        sketch.text(at, &figure);
+        if let Some(note) = &self.note {
+            let (at, note) = beside(self.holds(note), self.at + 0.7 + 0.8 * SMALL, note.clone());
+            sketch.text(at, &note);
         }
     }
 }

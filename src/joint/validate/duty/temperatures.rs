@@ -4,6 +4,7 @@ use crate::joint::Ring;
 use crate::joint::diagnose::Fault;
 use crate::joint::draft::Draft;
 use crate::joint::file::StateKeys;
+use crate::joint::tree::NodeId;
 use crate::joint::validate::assembly::within_curves;
 use crate::joint::written::{At, Written};
 use crate::quantity::{Kind, Temperature, written};
@@ -44,13 +45,14 @@ pub(super) fn of_state(
 /// A gradient fixes every temperature: others beside it contradict it.
 fn refuse_both(draft: &Draft<'_>, keys: &StateKeys) {
     let others = [
-        ("temperature", &keys.temperature),
-        ("shaft_temperature", &keys.shaft_temperature),
-        ("hub_temperature", &keys.hub_temperature),
+        ("temperature", keys.temperature.as_ref().map(|at| at.node)),
+        ("temperatures", keys.temperatures.as_ref().map(|at| at.node)),
+        ("shaft_temperature", keys.shaft_temperature.as_ref().map(|at| at.node)),
+        ("hub_temperature", keys.hub_temperature.as_ref().map(|at| at.node)),
     ];
-    for (key, given) in others {
-        if let Some(given) = given {
-            let fault = Fault::key(given.node, format!("`{key}` and a gradient are both given"));
+    for (key, node) in others {
+        if let Some(node) = node {
+            let fault = Fault::key(node, format!("`{key}` and a gradient are both given"));
             draft
                 .faults
                 .add(fault.help("keep `inner_temperature` and `outer_temperature`, or the part's own"));
@@ -102,6 +104,9 @@ fn uniform(
     shop: Option<f64>,
 ) -> Option<Vec<f64>> {
     let parts = [("shaft_temperature", &keys.shaft_temperature), ("hub_temperature", &keys.hub_temperature)];
+    if let Some(list) = &keys.temperatures {
+        refuse_beside(draft, keys, list.node);
+    }
     if let Some(all) = &keys.temperature {
         for (key, given) in parts {
             if let Some(given) = given {
@@ -144,6 +149,19 @@ fn uniform(
         });
     }
     found.into_iter().collect()
+}
+
+/// `temperatures` names every ring: another temperature beside it contradicts it.
+fn refuse_beside(draft: &Draft<'_>, keys: &StateKeys, node: NodeId) {
+    let others = [
+        ("temperature", &keys.temperature),
+        ("shaft_temperature", &keys.shaft_temperature),
+        ("hub_temperature", &keys.hub_temperature),
+    ];
+    for (key, _) in others.into_iter().filter(|(_, given)| given.is_some()) {
+        let fault = Fault::key(node, format!("`{key}` and `temperatures` are both given"));
+        draft.faults.add(fault.help("`temperatures` has one for each ring: keep it, or the other"));
+    }
 }
 
 /// One temperature for each ring, innermost first.
