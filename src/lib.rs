@@ -13,7 +13,8 @@
 //! | [`assembly`] | press force along the travel, joining temperatures, cautions |
 //! | [`joint`] | the joint file: shape, defaults, errors with line and column |
 //! | [`findings`] | what is computed, in one place; verdicts; the worksheet |
-//! | [`population`] | many joints: the fit to choose, a table of joints |
+//! | [`pressing`] | a recorded press-in force judged against what the joint allows |
+//! | [`population`] | many joints: the fit to choose, a population of parts, a table of joints |
 //! | [`report`] | terminal text, JSON, HTML, drawings and plots |
 //!
 //! Everything below `joint` takes and returns SI numbers (m, Pa, N, N·m, K, kg, s, rad/s).
@@ -28,6 +29,7 @@ pub mod material;
 pub mod mechanics;
 pub mod numerics;
 pub mod population;
+pub mod pressing;
 pub mod quantity;
 pub mod report;
 pub mod tolerance;

@@ -124,7 +124,7 @@ fn a_temperature_that_steel_does_not_reach_is_refused() {
 
 #[test]
 fn total_contraction_to_liquid_nitrogen() {
-    // Karlsruhe Institute of Technology, cryogenic engineering lectures: steel 0.3 %, aluminium 0.4 % (rounded). 0.3 % is
+    // Karlsruhe Institute of Technology, cryogenic engineering courses: steel 0.3 %, aluminium 0.4 % (rounded). 0.3 % is
     // austenitic steel; the mean coefficient 8.5e-6 usual for ferritic steel gives 0.18 %, 18e-6 for aluminium 0.39 %.
     for (coefficient, contraction) in [(8.5e-6, 1.836e-3), (18e-6, 3.888e-3)] {
         let part = mean(coefficient);

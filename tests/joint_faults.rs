@@ -2,7 +2,7 @@
 
 mod joint_support;
 
-use joint_support::{FULL, LEAST, case, check, faults, listed, missing, place};
+use joint_support::{FULL, LEAST, case, check, faults, listed, missing, place, set};
 
 #[test]
 fn quantities_are_refused_at_their_place() {
@@ -328,26 +328,134 @@ fn what_is_not_calculated_yet_is_refused_by_name() {
         assert!(!found[0].help.as_deref().unwrap_or("").contains("did you mean"));
         (found[0].message.split(' ').next().unwrap_or("").to_owned(), place(&found[0]))
     };
-    for key in ["rings: []", "fits: [H7/s6]", "order: [a, b]", "bearing: 6210"] {
+    for key in ["bearing: 6210"] {
         let name = key.split(':').next().unwrap();
         assert_eq!(refused(&format!("{LEAST}{key}\n")), (format!("`{name}`"), Some((7, 1, name.len()))));
     }
-    for (from, to, name, at) in [
-        ("outer_diameter: 110 mm}", "outer_diameter: 110 mm, steps: []}", "`steps`", (5, 49, 5)),
-        ("shaft: {material: C45+N}", "shaft: {material: C45+N, steps: []}", "`steps`", (4, 26, 5)),
-        ("fit: H7/u6", "fit: {bearing: 6210, shaft: k6}", "`bearing`", (6, 7, 7)),
-    ] {
+    for (from, to, name, at) in [("fit: H7/u6", "fit: {bearing: 6210, shaft: k6}", "`bearing`", (6, 7, 7))] {
         assert_eq!(refused(&LEAST.replacen(from, to, 1)), (name.to_owned(), Some(at)));
+    }
+}
+
+/// A joint of three rings with everything that it needs.
+const RINGS: &str = "\
+joint_file: 1
+length: 60 mm
+rings:
+  - {material: C45+N, bore: 30 mm, outer_diameter: 60 mm}
+  - {material: C45+N, outer_diameter: 100 mm}
+  - {material: C45+N, outer_diameter: 160 mm}
+fits: [H7/s6, H7/u6]
+order: [2, 1]
+duty:
+  - {state: work, inner_pressure: 100 MPa, speed: 1000 rpm, inner_temperature: 80 degC, outer_temperature: 40 degC}
+";
+
+/// A stepped hub on a shaft whose bore changes.
+const STEPPED: &str = "\
+joint_file: 1
+diameter: 50 mm
+length: 40 mm
+shaft: {material: C45+N, steps: [{length: 20 mm, bore: 0 mm}, {length: 20 mm, bore: 20 mm}]}
+hub: {material: C45+N, steps: [{length: 15 mm, outer_diameter: 75 mm}, {length: 25 mm, outer_diameter: 100 mm}]}
+fit: H7/s6
+duty:
+  - {state: work, bending_moment: 100 N.m, radial_force: 1 kN, rotating_bending: yes, reversing: no}
+require: {allow: plastic, plastic_share: 0.2, yield_rule: von Mises}
+";
+
+#[test]
+fn the_keys_of_several_rings_and_of_service_are_read() {
+    let rings = set(RINGS, &[]).expect("the rings are read");
+    assert_eq!((rings.rings.len(), rings.order), (3, vec![1, 0]));
+    let drops: f64 = rings.duty[0].temperature_rises.iter().sum();
+    assert!((drops + 40.0).abs() < 1e-9, "the gradient ends at the outer temperature: {drops}");
+    let stepped = set(STEPPED, &[]).expect("the steps are read");
+    assert_eq!(stepped.slices.len(), 3);
+    assert!(stepped.duty[0].rotating_bending && !stepped.duty[0].reversing);
+}
+
+#[test]
+fn faults_of_the_keys_of_several_rings_and_of_service_have_their_place() {
+    for (text, from, to, at, words) in [
+        (RINGS, "fits: [H7/s6, H7/u6]", "fits: [H7/s6]", (7, 7), "3 rings need 2 fits"),
+        (RINGS, "order: [2, 1]", "order: [2, 2]", (8, 12), "stands twice"),
+        (RINGS, "order: [2, 1]", "order: [2, 3]", (8, 12), "is no fit"),
+        (RINGS, "order: [2, 1]", "order: [2]", (8, 8), "names 1 of 2 fits"),
+        (RINGS, "outer_diameter: 100 mm", "outer_diameter: 50 mm", (5, 39), "not larger than"),
+        (RINGS, "length: 60 mm", "length: 60 mm\ndiameter: 60 mm", (3, 1), "both given"),
+        (
+            RINGS,
+            "  - {material: C45+N, outer_diameter: 100 mm}",
+            "  - {material: C45+N, bore: 60 mm, outer_diameter: 100 mm}",
+            (5, 23),
+            "only the innermost",
+        ),
+        (RINGS, "bore: 30 mm, ", "", (10, 35), "is solid"),
+        (RINGS, ", outer_temperature: 40 degC", "", (10, 61), "one end of the gradient"),
+        (
+            RINGS,
+            "inner_temperature: 80 degC",
+            "temperature: 50 degC, inner_temperature: 80 degC",
+            (10, 61),
+            "both given",
+        ),
+        (RINGS, "speed: 1000 rpm", "speed: -1 rpm", (10, 51), "must not be negative"),
+        (STEPPED, "{length: 15 mm,", "{length: 10 mm,", (5, 24), "the steps are 35 mm long"),
+        (STEPPED, "outer_diameter: 75 mm", "outer_diameter: 45 mm", (5, 64), "not larger than"),
+        (STEPPED, "bore: 20 mm", "bore: 50 mm", (4, 85), "not smaller than"),
+        (STEPPED, "rotating_bending: yes", "rotating_bending: maybe", (8, 82), "maybe"),
+        (RINGS, "fits: [H7/s6, H7/u6]\n", "", (1, 1), "`fits` is missing"),
+        (RINGS, "speed: 1000 rpm", "temperatures: [20 degC]", (10, 58), ""),
+        (RINGS, "inner_pressure: 100 MPa", "inner_pressure: 100 mm", (10, 35), "is a length"),
+        (RINGS, "inner_pressure: 100 MPa", "outer_pressure: -1 MPa", (10, 35), "must not be negative"),
+        (RINGS, "speed: 1000 rpm", "relaxation: 0", (10, 56), "more than 0 and at most 1"),
+        (RINGS, "speed: 1000 rpm", "relaxation: 1.5", (10, 56), "more than 0 and at most 1"),
+        (STEPPED, "bending_moment: 100 N.m", "bending_moment: -100 N.m", (8, 35), "must not be negative"),
+        (STEPPED, "radial_force: 1 kN", "radial_force: 1 N.m", (8, 58), "is a torque"),
+        (STEPPED, "reversing: no", "reversing: 3", (8, 103), "3"),
+        (STEPPED, "{length: 20 mm, bore: 0 mm}", "{bore: 0 mm}", (4, 34), "`length` is missing"),
+        (
+            STEPPED,
+            "{length: 15 mm, outer_diameter: 75 mm}",
+            "{length: 15 mm}",
+            (5, 31),
+            "`outer_diameter` is missing",
+        ),
+        (
+            STEPPED,
+            "hub: {material: C45+N, steps: [{length: 15 mm",
+            "hub: {material: EN-GJL-250, steps: [{length: 15 mm",
+            (9, 18),
+            "is for a ductile hub",
+        ),
+        (STEPPED, "allow: plastic", "allow: yes", (9, 18), "yes"),
+        (STEPPED, "plastic_share: 0.2", "plastic_share: 1.2", (9, 42), "at most 1"),
+        (STEPPED, "allow: plastic", "allow: elastic", (9, 42), "needs `allow: plastic`"),
+        (STEPPED, "yield_rule: von Mises", "yield_rule: Mohr", (9, 59), "Mohr"),
+        (STEPPED, "fit: H7/s6", "fit: H7/s6\nfits: [H7/s6]", (7, 1), "goes with `rings`"),
+    ] {
+        assert!(text.contains(from), "{from} is not there to change");
+        let found = faults(&text.replacen(from, to, 1));
+        assert_eq!(found.len(), 1, "{to}: {}", listed(&found));
+        let placed = place(&found[0]).map(|(line, column, _)| (line, column));
+        assert_eq!(placed, Some(at), "{to}: {}", listed(&found));
+        assert!(found[0].message.contains(words), "{to}: {}", listed(&found));
     }
 }
 
 #[test]
 fn unsupported_keys_are_never_proposed() {
-    for (key, not) in [("ring", "rings"), ("ordr", "order"), ("bearng", "bearing")] {
-        let found = faults(&format!("{LEAST}{key}: 1\n"));
-        let help = found[0].help.as_deref().unwrap_or("");
-        assert!(!help.contains(&format!("`{not}`")), "{help}");
-    }
+    let found = faults(&format!(
+        "{LEAST}bearng: 1
+"
+    ));
+    assert!(!found[0].help.as_deref().unwrap_or("").contains("did you mean"), "{}", listed(&found));
+    let found = faults(&format!(
+        "{LEAST}ordr: 1
+"
+    ));
+    assert_eq!(found[0].help.as_deref(), Some("did you mean `order`?"));
 }
 
 #[test]

@@ -282,7 +282,7 @@ proptest! {
                 1 => influence.upper[row],
                 _ => 0.0,
             });
-            matrix.lu().solve(&-DVector::from_vec(influence.free_gaps)).unwrap()
+            matrix.lu().solve(&-&influence.free_gaps).unwrap()
         };
         let sum = linear(&stack) + linear(&warm) + linear(&turning) + linear(&pressed);
         for (together, sum) in solution.pressures.iter().zip(&sum) {

@@ -15,7 +15,8 @@ use approx::assert_relative_eq;
 use hubgrip::mechanics::plastic::tresca::TrescaHub;
 use hubgrip::mechanics::plastic::von_mises::VonMisesHub;
 use hubgrip::mechanics::plastic::{
-    CurveEnd, HubElasticity, HubLimitKind, HubYield, PlasticJoint, PlasticState, Regime, YieldRule, shaft,
+    CurveEnd, HubElasticity, HubLimit, HubLimitKind, HubYield, PlasticJoint, PlasticState, Regime, YieldRule,
+    shaft,
 };
 use hubgrip::mechanics::two_rings::TwoRings;
 use hubgrip::mechanics::{MechanicsError, criteria};
@@ -377,4 +378,68 @@ fn what_is_no_joint_is_refused() {
     assert!(joint.pressure_curve(1).is_err());
     let state = solved(YieldRule::Tresca);
     assert!(state.stress_at(0.02).is_err() && state.residual_at(0.051).is_err() && state.profile(1).is_err());
+}
+
+#[test]
+fn zone_and_pressure_invert_each_other() {
+    for ratio in [0.2, 0.5, 0.9] {
+        let tresca = TrescaHub::new(300e6, ratio).unwrap();
+        let von_mises = VonMisesHub::new(300e6, ratio).unwrap();
+        let limits = [tresca.limit().unwrap(), von_mises.limit().unwrap()];
+        // The pressure is flat where the zone meets the rim: rounding moves the zone by its square root.
+        let at_limit = [
+            tresca.plastic_ratio(limits[0].pressure).unwrap(),
+            von_mises.plastic_ratio(limits[1].pressure).unwrap(),
+        ];
+        for (found, limit) in at_limit.into_iter().zip(limits) {
+            assert_relative_eq!(found, limit.plastic_ratio, max_relative = 1e-7);
+        }
+        assert_relative_eq!(
+            tresca.plastic_ratio(tresca.onset_pressure()).unwrap(),
+            1.0,
+            max_relative = 1e-12
+        );
+        for share in [0.1, 0.5, 0.9] {
+            let zeta = limits.map(|limit| 1.0 + share * (limit.plastic_ratio - 1.0));
+            let back = tresca.plastic_ratio(tresca.pressure(zeta[0]).unwrap()).unwrap();
+            assert_relative_eq!(back, zeta[0], max_relative = 1e-12);
+            let back = von_mises.plastic_ratio(von_mises.pressure(zeta[1]).unwrap()).unwrap();
+            assert_relative_eq!(back, zeta[1], max_relative = 1e-12);
+        }
+        assert!(tresca.plastic_ratio(1.001 * limits[0].pressure).is_err());
+        assert!(von_mises.plastic_ratio(0.999 * von_mises.onset_pressure()).is_err());
+    }
+}
+
+#[test]
+fn pressure_cap_gives_way_to_full_plasticity_without_a_jump() {
+    let check = |limit: HubLimit, kind: HubLimitKind, cap: f64, ratio: f64| {
+        assert_eq!(limit.kind, kind, "{ratio}");
+        assert_relative_eq!(limit.pressure, cap, max_relative = 2e-9);
+        // The zone follows the square root of the distance from the edge, here of 1e-9.
+        assert_relative_eq!(limit.plastic_ratio, 1.0 / ratio, max_relative = 1e-4);
+    };
+    for (side, kind) in [(1.0 - 1e-9, HubLimitKind::PressureCap), (1.0 + 1e-9, HubLimitKind::FullyPlastic)] {
+        let ratio = side * (-1.0_f64).exp();
+        check(TrescaHub::new(300e6, ratio).unwrap().limit().unwrap(), kind, 300e6, ratio);
+        let ratio = side * VonMisesHub::least_fully_plastic_ratio();
+        check(VonMisesHub::new(300e6, ratio).unwrap().limit().unwrap(), kind, modified(300e6), ratio);
+    }
+}
+
+#[test]
+fn reverse_yield_begins_where_the_bore_is_left_at_the_yield_strength() {
+    // Tresca: p = Re (1 − Q²); modified: p = (Re + S0) (1 − Q²)/2, since the bore is left uniaxial.
+    let thick = TwoRings { hub_outer_diameter: 0.05 / 0.3, ..PLAIN };
+    for (rule, yield_difference) in [(YieldRule::Tresca, 300e6), (YieldRule::ModifiedTresca, modified(300e6))]
+    {
+        let joint = joint(thick, rule);
+        let threshold = 0.5 * (300e6 + yield_difference) * (1.0 - 0.09);
+        let hub = TrescaHub::new(yield_difference, 0.3).unwrap();
+        let flag = |pressure: f64| {
+            let interference = joint.interference_at(hub.plastic_ratio(pressure).unwrap()).unwrap();
+            joint.solve(interference).unwrap().permanent.reverse_yield
+        };
+        assert!(!flag(threshold * (1.0 - 1e-9)) && flag(threshold * (1.0 + 1e-9)), "{rule:?}");
+    }
 }

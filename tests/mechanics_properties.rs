@@ -288,12 +288,13 @@ proptest! {
     }
 }
 
-const MEASURES: [StressMeasure; 5] = [
+const MEASURES: [StressMeasure; 6] = [
     StressMeasure::Radial,
     StressMeasure::Hoop,
     StressMeasure::VonMises,
     StressMeasure::Tresca,
     StressMeasure::GreatestPrincipal,
+    StressMeasure::Brittle { tension_share: 0.3 },
 ];
 
 /// A quantity of a stack of at least two rings.

@@ -260,7 +260,7 @@ fn polymer_hub_whose_printed_stress_lost_a_factor_of_ten() {
 
 #[test]
 fn least_pressure_and_interference_for_a_torque() {
-    // Lecture example following NF E 22-621: 80 N·m with safety 3, friction 0.1, length 60 mm, 40/60/100 mm,
+    // Course example following NF E 22-621: 80 N·m with safety 3, friction 0.1, length 60 mm, 40/60/100 mm,
     // steel 206 GPa 0.3, aluminium 75 GPa 0.35.
     let joint = TwoRings {
         diameter: 0.06,

@@ -50,6 +50,26 @@ fn every_formula_of_every_example_gives_its_printed_result() {
     println!("{formulas} formulas worked");
 }
 
+/// What no example has: pressures from outside, relaxation, a hub strained further at work, a brittle bush.
+#[test]
+fn every_line_agrees_in_rarer_cases() {
+    let head = "joint_file: 1\ndiameter: 50 mm\nlength: 40 mm\n";
+    let cases = [
+        "shaft: {material: 42CrMo4+QT, bore: 20 mm}\nhub: {material: C45+N, outer_diameter: 90 mm}\nfit: H7/s6\nduty:\n  \
+         - {state: one, torque: 100 N.m, inner_pressure: 40 MPa, relaxation: 0.6}\n  - {state: two, axial_force: 1 kN, \
+         outer_pressure: 15 MPa, speed: 3000 rpm}\n",
+        "shaft: {material: 42CrMo4+QT}\nhub: {material: C45+N, outer_diameter: 90 mm}\nfit: {hole: {lower: 0 um, upper: 10 um}, \
+         shaft: {lower: 120 um, upper: 130 um}}\nrequire: {allow: plastic}\nduty: [{state: cold, torque: 10 N.m, \
+         hub_temperature: 0 degC}, {state: hot, torque: 10 N.m, hub_temperature: 50 degC, relaxation: 0.9}]\n",
+        "shaft: {name: bush, material: EN-GJL-250, bore: 36 mm}\nhub: {material: C45+N, outer_diameter: 90 mm}\nfit: H7/s6\n",
+    ];
+    for case in cases {
+        let findings = common::findings_of(&format!("{head}{case}"));
+        let (_, drifts) = worksheet::worked(&findings);
+        assert!(drifts.is_empty(), "{case}: {drifts:#?}");
+    }
+}
+
 #[test]
 fn every_line_agrees_with_the_programs_own_figure() {
     for path in common::examples() {

@@ -400,6 +400,8 @@ mod tests {
                 tensile_strength: None,
                 source: "test".into(),
             }],
+            compressive_strength: None,
+            long_term_strength: None,
             conductivity: None,
             specific_heat: None,
             max_temperature: Some(Sourced::new(473.15, "test limit")),

@@ -119,10 +119,22 @@ pub struct HandlingCourse {
     pub gone_in_air: Option<f64>,
 }
 
-/// Rings of each part in the coarser mesh.
-const RINGS: usize = 24;
-/// Allowed error of a step as a share of the greatest temperature difference.
-const TOLERANCE: f64 = 1e-7;
+/// Mesh and step control of a course.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Accuracy {
+    /// Rings of each part in the coarser of the two meshes, at least two.
+    pub rings: usize,
+    /// Allowed error of a step as a share of the greatest temperature difference.
+    pub tolerance: f64,
+}
+
+impl Accuracy {
+    /// Times to about 1e-5.
+    pub const FINE: Self = Self { rings: 24, tolerance: 1e-7 };
+    /// Times to about 1e-3, in a small part of the time.
+    pub const QUICK: Self = Self { rings: 8, tolerance: 1e-5 };
+}
+
 /// Longest time that is followed, in multiples of the time constant in air.
 const LONGEST: f64 = 40.0;
 
@@ -144,14 +156,20 @@ impl Handling {
     /// [`AssemblyError::OutsideRange`] for impossible numbers, [`AssemblyError::OutsideCurve`] or
     /// [`AssemblyError::Table`] when a curve does not cover the temperatures.
     pub fn course(&self, least: f64) -> Result<HandlingCourse, AssemblyError> {
-        self.check()?;
-        finite("least clearance (m)", least)?;
-        let coarse = self.run(least, Some(self.overlap_after), RINGS, TOLERANCE)?;
-        let fine = self.run(least, Some(self.overlap_after), 2 * RINGS, TOLERANCE)?;
+        self.course_with(least, Accuracy::FINE)
+    }
+
+    /// As [`Handling::course`] with a mesh and a step control of your own.
+    ///
+    /// # Errors
+    /// As [`Handling::course`].
+    pub fn course_with(&self, least: f64, accuracy: Accuracy) -> Result<HandlingCourse, AssemblyError> {
+        let (coarse, fine) = self.two_meshes(least, Some(self.overlap_after), accuracy)?;
+        let (coarse_air, fine_air) = self.two_meshes(least, None, accuracy)?;
         Ok(HandlingCourse {
             clearance_at_overlap: fine.at_overlap,
             gone: extrapolated(coarse.gone, fine.gone),
-            gone_in_air: self.time_in_air(least)?,
+            gone_in_air: extrapolated(coarse_air.gone, fine_air.gone),
             points: fine.points,
         })
     }
@@ -161,11 +179,23 @@ impl Handling {
     /// # Errors
     /// As [`Handling::course`].
     pub fn time_in_air(&self, least: f64) -> Result<Option<f64>, AssemblyError> {
+        let (coarse, fine) = self.two_meshes(least, None, Accuracy::FINE)?;
+        Ok(extrapolated(coarse.gone, fine.gone))
+    }
+
+    /// The same course on a mesh and on one twice as fine.
+    fn two_meshes(
+        &self,
+        least: f64,
+        overlap: Option<f64>,
+        accuracy: Accuracy,
+    ) -> Result<(Run, Run), AssemblyError> {
         self.check()?;
         finite("least clearance (m)", least)?;
-        let coarse = self.run(least, None, RINGS, TOLERANCE)?;
-        let fine = self.run(least, None, 2 * RINGS, TOLERANCE)?;
-        Ok(extrapolated(coarse.gone, fine.gone))
+        let Accuracy { rings, tolerance } = accuracy;
+        require(rings >= 2, "number of rings", rings as f64, "two or more")?;
+        positive("allowed error of a step", tolerance)?;
+        Ok((self.run(least, overlap, rings, tolerance)?, self.run(least, overlap, 2 * rings, tolerance)?))
     }
 
     pub(super) fn check(&self) -> Result<(), AssemblyError> {
@@ -361,12 +391,11 @@ mod tests {
     /// Half the rings and a coarser step change the time by less than 0.5 % (here by less than 0.01 %).
     #[test]
     fn mesh_and_step_do_not_matter() {
-        let time = |rings, tolerance| {
-            let gone = |rings| pair().run(0.0, Some(20.0), rings, tolerance).unwrap().gone;
-            extrapolated(gone(rings), gone(2 * rings)).unwrap()
-        };
-        let fine = time(RINGS, TOLERANCE);
-        assert_relative_eq!(time(RINGS / 2, TOLERANCE), fine, max_relative = 1e-4);
-        assert_relative_eq!(time(RINGS, 100.0 * TOLERANCE), fine, max_relative = 1e-4);
+        let time =
+            |rings, tolerance| pair().course_with(0.0, Accuracy { rings, tolerance }).unwrap().gone.unwrap();
+        let Accuracy { rings, tolerance } = Accuracy::FINE;
+        let fine = time(rings, tolerance);
+        assert_relative_eq!(time(rings / 2, tolerance), fine, max_relative = 1e-4);
+        assert_relative_eq!(time(rings, 100.0 * tolerance), fine, max_relative = 1e-4);
     }
 }

@@ -40,21 +40,55 @@ pub struct Soak {
 /// assert!(marks.to_90_percent.value < marks.to_99_percent.value);
 /// ```
 pub fn soak(part: &Conduction) -> Result<Soak, AssemblyError> {
-    let marks = [part.after(0.90)?, part.after(0.95)?, part.after(0.99)?];
+    Ok(soak_to(part, part.start())?.0)
+}
+
+/// The soak of a part, and the time until its volume mean has come to `wanted` (K), in one calculation.
+///
+/// The time is none when the mean never comes there: `wanted` lies beyond 99.9 % of the step.
+///
+/// # Errors
+/// As [`soak`].
+///
+/// # Example
+/// ```
+/// use hubgrip::assembly::conduction::{Body, Conduction, Substance, Surroundings};
+/// use hubgrip::assembly::film::Film;
+/// use hubgrip::assembly::soak::soak_to;
+/// let hub = Body { inner_diameter: 0.06, outer_diameter: 0.12, length: 0.06 };
+/// let steel = Substance::constant(50.0, 7800.0, 500.0).unwrap();
+/// let oven = Surroundings::all_round(523.15, Film::Gas { coefficient: 40.0, emissivity: 0.8 });
+/// let part = Conduction::new(hub, steel, oven, 293.15).unwrap().with_rings(4).unwrap();
+/// let (marks, wanted) = soak_to(&part, 453.15).unwrap();
+/// assert!(wanted.unwrap().value < marks.to_90_percent.value);
+/// assert!(soak_to(&part, 523.15).unwrap().1.is_none());
+/// ```
+pub fn soak_to(part: &Conduction, wanted: f64) -> Result<(Soak, Option<Estimate>), AssemblyError> {
+    let share = (wanted - part.start()) / (part.surroundings_temperature() - part.start());
+    let reached = share > 0.0 && share <= 0.999;
+    let mut shares = vec![0.90, 0.95, 0.99];
+    let place = shares.partition_point(|mark| *mark <= share);
+    if reached {
+        shares.insert(place, share);
+    }
+    let marks = shares.iter().map(|share| part.after(*share)).collect::<Result<Vec<_>, _>>()?;
     let (mut greatest_difference, mut greatest_difference_at) = (0.0, 0.0);
-    let times = part.times_observed(&marks, |profile| {
+    let mut times = part.times_observed(&marks, |profile| {
         let difference = (profile.inner - profile.outer).abs();
         if difference > greatest_difference {
             (greatest_difference, greatest_difference_at) = (difference, profile.time);
         }
     })?;
-    Ok(Soak {
+    let there = Estimate { value: 0.0, mesh_correction: 0.0 };
+    let to_wanted = if reached { Some(times.remove(place)) } else { (share <= 0.0).then_some(there) };
+    let soak = Soak {
         to_90_percent: times[0],
         to_95_percent: times[1],
         to_99_percent: times[2],
         greatest_difference,
         greatest_difference_at,
-    })
+    };
+    Ok((soak, to_wanted))
 }
 
 /// Soak time of the old shop rule, s: one hour for every inch (25.4 mm) of section.

@@ -15,14 +15,17 @@ pub enum Ending {
     Met,
     /// Some requirement is not met.
     NotMet,
+    /// Some of many inputs could not be read; the others have their results.
+    NotRead,
 }
 
 impl Ending {
-    /// 0 or 1.
+    /// 0, 1 or 2.
     pub fn code(self) -> ExitCode {
         match self {
             Self::Met => ExitCode::SUCCESS,
             Self::NotMet => ExitCode::from(1),
+            Self::NotRead => ExitCode::from(TROUBLE),
         }
     }
 }

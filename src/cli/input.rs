@@ -44,10 +44,14 @@ pub fn library(folder: Option<&Path>, output: &Output) -> Result<Library, Failur
 
 /// Reads a joint file and computes its findings.
 pub fn findings(path: &Path, set: &[(String, String)], library: &Library) -> Result<Findings, Failure> {
-    let name = shown(path);
+    let joint = joint(path, set, library)?;
+    findings::compute(joint).map_err(|error| Diagnostic::new(error.to_string()).in_file(shown(path)).into())
+}
+
+/// Reads a joint file.
+pub fn joint(path: &Path, set: &[(String, String)], library: &Library) -> Result<Joint, Failure> {
     let bytes = bytes(path)?;
-    let joint = read::read_bytes(&bytes, &name, set, library).map_err(Failure::Input)?;
-    findings::compute(joint).map_err(|error| Diagnostic::new(error.to_string()).in_file(name).into())
+    read::read_bytes(&bytes, &shown(path), set, library).map_err(Failure::Input)
 }
 
 /// Reads a joint file whose fit is still to be chosen.

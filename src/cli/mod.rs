@@ -10,8 +10,11 @@ mod limits;
 mod materials;
 mod new;
 mod output;
+mod pressing;
 mod report;
+mod scatter;
 mod schema;
+mod sort;
 mod whole;
 
 use std::path::PathBuf;
@@ -72,7 +75,10 @@ enum Command {
     Report(report::Arguments),
     Limits(limits::Arguments),
     Choose(choose::Arguments),
+    Scatter(scatter::Arguments),
+    Sort(sort::Arguments),
     Batch(batch::Arguments),
+    Pressing(pressing::Arguments),
     Materials(materials::Arguments),
     New(new::Arguments),
     Schema(schema::Arguments),
@@ -86,6 +92,9 @@ impl Command {
             Self::Check(arguments) => arguments.json,
             Self::Limits(arguments) => arguments.json,
             Self::Choose(arguments) => arguments.json,
+            Self::Scatter(arguments) => arguments.json,
+            Self::Sort(arguments) => arguments.json,
+            Self::Pressing(arguments) => arguments.json,
             _ => false,
         }
     }
@@ -113,7 +122,10 @@ fn run(line: CommandLine, output: &Output) -> Result<Ending, Failure> {
         Command::Report(arguments) => report::run(&arguments, folder, output),
         Command::Limits(arguments) => limits::run(&arguments, output),
         Command::Choose(arguments) => choose::run(&arguments, folder, output),
+        Command::Scatter(arguments) => scatter::run(&arguments, folder, output),
+        Command::Sort(arguments) => sort::run(&arguments, folder, output),
         Command::Batch(arguments) => batch::run(&arguments, folder, output),
+        Command::Pressing(arguments) => pressing::run(&arguments, folder, output),
         Command::Materials(arguments) => materials::run(&arguments, folder, output),
         Command::New(arguments) => new::run(&arguments, output),
         Command::Schema(arguments) => schema::run(&arguments, output),

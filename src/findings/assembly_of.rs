@@ -1,10 +1,13 @@
 //! How the joint is put together: press curves, heating, chilling, and both shared.
 
-use super::{AssemblyFindings, BathFindings, FindingsError, PairFindings, ThermalRoute};
+use super::cold_bath::cold_bath;
+use super::press_work::press_work;
+use super::times::{self, Times};
+use super::{AssemblyFindings, BathFindings, ConstantCoefficient, FindingsError, PairFindings, ThermalRoute};
 use crate::assembly::joining::{BathRoute, Joining, Obstacle, Route};
 use crate::assembly::press::{self, PressCurve, PressInput};
-use crate::joint::{Bath, Joint};
-use crate::material::media;
+use crate::joint::{Bath, Joint, Ring};
+use crate::material::{REFERENCE_TEMPERATURE, media};
 use crate::quantity::{Measure, UnitSystem, show};
 use crate::tolerance::Extremes;
 
@@ -26,7 +29,7 @@ pub(super) fn assembly(
     let joining = Joining {
         diameter: joint.interface_diameter(joint.last_interface()),
         interference: extremes.tightest.interference,
-        clearance: joint.assembly.clearance.value,
+        clearance: joint.assembly.clearance_to_open(),
         hub: &hub.material.expansion,
         shaft: &shaft.material.expansion,
         shop_temperature: joint.assembly.shop_temperature,
@@ -37,7 +40,7 @@ pub(super) fn assembly(
         .into_iter()
         .map(|bath| Ok(words.bath(bath, &joining.bath(bath_temperature(bath))?)))
         .collect::<Result<Vec<_>, FindingsError>>()?;
-    Ok(AssemblyFindings {
+    let mut assembly = AssemblyFindings {
         press_rating: press::press_rating(press.tightest.peak_force),
         press,
         heat_hub: words.heat_hub(&joining.heat_hub(joint.assembly.shop_temperature)?),
@@ -46,6 +49,52 @@ pub(super) fn assembly(
         clearance: joining.clearance,
         needed: joining.needed()?.max(0.0),
         hub_limit,
+        constant_coefficient: Vec::new(),
+        times: Times::default(),
+        cold_bath: None,
+        press_work: None,
+    };
+    assembly.press_work = press_work(joint, extremes, &assembly, &joining)?;
+    in_the_oven_and_bath(joint, extremes, &mut assembly)?;
+    Ok(assembly)
+}
+
+/// Times, amounts and the error of a constant coefficient, for a joint that is heated or chilled.
+fn in_the_oven_and_bath(
+    joint: &Joint,
+    extremes: &Extremes<PairFindings>,
+    assembly: &mut AssemblyFindings,
+) -> Result<(), FindingsError> {
+    let interference = (extremes.loosest.interference, extremes.tightest.interference);
+    assembly.times = times::times(joint, assembly, interference)?;
+    if let Some(soak) = &assembly.times.shaft {
+        match cold_bath(joint, soak)? {
+            Ok(found) => assembly.cold_bath = Some(found),
+            Err(gap) => assembly.times.gaps.push(gap),
+        }
+    }
+    if let Some(handling) = &assembly.times.handling {
+        let (shaft, hub) = joint.joined_last();
+        let diameter = joint.interface_diameter(joint.last_interface());
+        let shop = joint.assembly.shop_temperature;
+        assembly.constant_coefficient =
+            [(hub, handling.hub_temperature), (shaft, handling.shaft_temperature)]
+                .into_iter()
+                .filter(|(_, temperature)| (temperature - shop).abs() > 1.0)
+                .filter_map(|(ring, temperature)| constant_coefficient(ring, temperature, diameter))
+                .collect();
+    }
+    Ok(())
+}
+
+fn constant_coefficient(ring: &Ring, temperature: f64, diameter: f64) -> Option<ConstantCoefficient> {
+    let expansion = &ring.material.expansion;
+    let coefficient = expansion.mean_coefficient(REFERENCE_TEMPERATURE).ok()?;
+    Some(ConstantCoefficient {
+        part: ring.name.clone(),
+        temperature,
+        by_curve: diameter * expansion.strain(temperature).ok()?,
+        by_coefficient: diameter * coefficient * (temperature - REFERENCE_TEMPERATURE),
     })
 }
 

@@ -1,8 +1,7 @@
 //! Cautions and notes that the numbers of a joint call for.
 
-use super::{Caution, Findings};
-use crate::assembly::cautions::{self as practice, Process};
-use crate::joint::{Bath, Method};
+use super::{Caution, Findings, joining_cautions};
+use crate::joint::{Allow, DutyState};
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::quantity::{Measure, show};
@@ -16,7 +15,8 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     all.extend(input_remarks(findings));
     all.extend(proportions(findings));
     all.extend(polymers(findings));
-    all.extend(assembly(findings));
+    all.extend(buckling(findings));
+    all.extend(joining_cautions::cautions(findings));
     all
 }
 
@@ -54,7 +54,9 @@ fn yielding(findings: &Findings) -> Vec<Caution> {
 /// The published criterion by name.
 pub fn criterion_source(brittle: bool, criterion: DuctileCriterion) -> &'static str {
     match (brittle, criterion) {
-        (true, _) => "greatest principal stress (Rankine) against tensile strength",
+        (true, _) => {
+            "greatest principal stress (Rankine) against tensile strength, compression against compressive strength"
+        }
         (false, DuctileCriterion::VonMises) => "von Mises criterion, plane stress",
         (false, DuctileCriterion::Tresca) => "Tresca criterion with the axial stress zero counted",
     }
@@ -112,44 +114,74 @@ fn polymers(findings: &Findings) -> Vec<Caution> {
         .map(|ring| Caution {
             subject: "hold",
             text: format!(
-                "The {} is a polymer: it creeps, so the pressure falls with time; the figures are those of the first hour.",
-                ring.name
+                "The {} is a polymer: it creeps, so the pressure falls with time; {}.",
+                ring.name,
+                if findings.joint.duty.iter().all(|state| state.relaxation < 1.0) {
+                    "holding counts the share that `relaxation` leaves, as given in the joint file, the stresses are those of \
+                     the first hour"
+                } else {
+                    "the figures are those of the first hour unless the state gives a `relaxation`"
+                }
             ),
             source: "common practice, no source".to_owned(),
         })
         .collect()
 }
 
-fn assembly(findings: &Findings) -> Vec<Caution> {
-    let joint = &findings.joint;
-    let bath = match joint.assembly.bath {
-        Bath::DryIce => Process::DryIce,
-        Bath::LiquidNitrogen => Process::LiquidNitrogen,
-    };
-    let processes = match joint.assembly.method {
-        Method::Press => vec![Process::Press],
-        Method::HeatHub => vec![Process::HeatHub],
-        Method::ChillShaft => vec![bath],
-        Method::HeatAndChill => vec![Process::HeatHub, bath],
-    };
-    let mut all: Vec<Caution> = processes.into_iter().flat_map(practice::cautions).collect();
-    let chills = matches!(joint.assembly.method, Method::ChillShaft | Method::HeatAndChill);
-    if let (true, Some(shaft)) = (chills, joint.rings.first())
-        && let Some(text) = &shaft.material.low_temperature_caution
-    {
-        all.push(Caution {
-            subject: "cold",
-            text: format!("{}: {}", shaft.material.name, sentence(text)),
-            source: "material library".to_owned(),
-        });
-    }
-    all
+/// A thin bush that its housing may press in.
+fn buckling(findings: &Findings) -> Option<Caution> {
+    let liner = findings.service.liner.as_ref().filter(|liner| liner.pressure > liner.housed)?;
+    let (bush, _) = findings.joint.shaft_and_hub();
+    let pressure = |pascals| show(Measure::Pressure, pascals, findings.joint.display);
+    Some(Caution {
+        subject: "strength",
+        text: format!(
+            "The thin wall of the {} may buckle inwards: the tightest pair presses it with {}, and from {} on it can leave \
+             its housing in one place.",
+            bush.name,
+            pressure(liner.pressure),
+            pressure(liner.housed),
+        ),
+        source: "D. Glock, Der Stahlbau 46 (1977) 212-217 (from memory): liner in a rigid housing".to_owned(),
+    })
 }
 
-/// A text that ends with a full stop.
-fn sentence(text: &str) -> String {
-    let text = text.trim();
-    if text.ends_with('.') { text.to_owned() } else { format!("{text}.") }
+/// A hub that may yield by design but is calculated as elastic.
+fn elastic_all_the_same(findings: &Findings) -> Option<String> {
+    let joint = &findings.joint;
+    if joint.require.allow == Allow::Elastic || findings.service.plastic.is_some() {
+        return None;
+    }
+    let why = if joint.rings.len() > 2 {
+        "there are more than two rings"
+    } else if !joint.slices.is_empty() {
+        "hub or shaft is stepped"
+    } else {
+        "the shaft would yield as well, or is not ductile"
+    };
+    Some(format!("The hub may yield by design but is calculated as elastic: {why}."))
+}
+
+/// Above this the fall of Young's modulus is worth a note: 100 °C, where that of steel has lost 1.4 %.
+const HOT: f64 = 373.15;
+
+fn hot_modulus(findings: &Findings) -> Option<String> {
+    let hottest = |state: &DutyState| state.temperatures.iter().copied().fold(0.0, f64::max);
+    let states: Vec<&str> = findings
+        .joint
+        .duty
+        .iter()
+        .filter(|state| hottest(state) > HOT)
+        .map(|state| state.name.as_str())
+        .collect();
+    if states.is_empty() {
+        return None;
+    }
+    Some(format!(
+        "Young's modulus is that of 20 °C in every state. That of steel is 1.4 % less at 100 °C, 5 % at 200 °C, 9 % at \
+         300 °C (SEW 310), and the pressure of a joint with it: mind that in {}.",
+        states.join(", ")
+    ))
 }
 
 /// Why quantities do not exist, and what is not covered.
@@ -170,8 +202,8 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
                 ring.name, ring.material.name
             ));
         } else if stress.safety.is_none() {
-            let why = if ring.material.kind == Kind::Brittle {
-                "it is brittle and nowhere in tension"
+            let why = if ring.material.kind == Kind::Brittle && ring.tension_share() == 0.0 {
+                "it is brittle, nowhere in tension, and its compressive strength is not known"
             } else {
                 "nothing stresses it"
             };
@@ -179,9 +211,12 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
                 .push(format!("The safety of the {} at the tightest pair does not exist: {why}.", ring.name));
         }
     }
+    notes.extend(elastic_all_the_same(findings));
+    notes.extend(hot_modulus(findings));
+    notes.extend(findings.assembly.times.gaps.iter().cloned());
     notes.push(
-        "Covered: elastic rings of uniform section in plane stress, at rest, uniform temperature in each part. Not covered: \
-         hub ends and edges (the edge pressure of a sharp hub on a through shaft is about 1.5 to 1.7 times the mean), axial \
+        "Covered: rings in plane stress, elastic unless the hub may yield by design, with rotation, temperature and steady \
+         heat flow. Not covered: hub ends and edges (the edge pressure of a sharp hub on a through shaft is about 1.5 to 1.7 times the mean), axial \
          friction while joining (0 to 10 % more pressure), form errors, creep, fretting."
             .to_owned(),
     );

@@ -3,6 +3,7 @@
 use thiserror::Error;
 
 use super::kernel::{Kernel, pair_interferences};
+use super::softening::Parts;
 use super::{
     DutyFindings, Findings, OnsetOfYield, assembly_of, cautions, service, softening, verdicts, worksheet,
 };
@@ -43,6 +44,9 @@ pub enum FindingsError {
     },
 }
 
+/// Share of the pressure that counts at the tightest pair: all of it, as on the first day.
+pub(super) const FRESH: f64 = 1.0;
+
 /// Computes everything about a joint.
 ///
 /// # Errors
@@ -53,7 +57,7 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         return Err(FindingsError::Incomplete { rings: joint.rings.len(), fits: joint.fits.len() });
     }
     let kernel = Kernel::new(&joint)?;
-    let pairs = pair_interferences(&joint);
+    let mut pairs = pair_interferences(&joint);
     let mut extremes = Extremes {
         loosest: kernel.pair(&pairs.loosest)?,
         mean: kernel.pair(&pairs.mean)?,
@@ -64,16 +68,18 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         .iter()
         .map(|state| {
             Ok(DutyFindings {
-                loosest: kernel.state(state, &pairs.loosest)?,
-                tightest: kernel.state(state, &pairs.tightest)?,
+                loosest: kernel.state(state, &pairs.loosest, state.relaxation)?,
+                tightest: kernel.state(state, &pairs.tightest, FRESH)?,
             })
         })
         .collect::<Result<Vec<_>, FindingsError>>()?;
     let onset_of_yield = onset_of_yield(&joint, &kernel)?;
-    let service = service::service(&joint, &kernel, &pairs)?;
-    if let (Allow::Plastic { .. }, Some(plastic)) = (joint.require.allow, &service.plastic) {
-        softening::soften(&mut extremes, &mut duty, plastic);
+    let mut plastic = service::plastic(&joint, &kernel, &pairs)?;
+    if let (Allow::Plastic { .. }, Some(plastic)) = (joint.require.allow, &mut plastic) {
+        let mut parts = Parts { pairs: &mut pairs, extremes: &mut extremes, duty: &mut duty };
+        softening::soften(&joint, &kernel, plastic, &mut parts)?;
     }
+    let service = service::service(&joint, &kernel, &pairs, &extremes.tightest, &duty, plastic)?;
     let assembly = assembly_of::assembly(&joint, &extremes)?;
     let character =
         joint.fits.get(joint.last_interface()).map_or(Character::Clearance, |fit| fit.limits.character());

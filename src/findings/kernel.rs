@@ -23,6 +23,8 @@ pub(super) struct PairInterference {
     pub(super) effective: Vec<f64>,
     /// Had the smoothing loss been taken.
     pub(super) smoothed: Vec<f64>,
+    /// What acts on elastic rings: the effective one, less the permanent growth of a hub that has yielded.
+    pub(super) grip: Vec<f64>,
 }
 
 /// The three pairs with the smoothing loss taken where the joint says.
@@ -39,7 +41,7 @@ pub(super) fn pair_interferences(joint: &Joint) -> Extremes<PairInterference> {
         let smoothed: Vec<f64> =
             made.iter().zip(losses).map(|(made, loss)| after_smoothing(*made, loss)).collect();
         let effective = if takes_loss { smoothed.clone() } else { made.clone() };
-        PairInterference { made, effective, smoothed }
+        PairInterference { made, grip: effective.clone(), effective, smoothed }
     };
     Extremes {
         loosest: pair(|interference| interference.loosest, false),
@@ -179,7 +181,7 @@ impl<'a> Kernel<'a> {
     pub(super) fn pair(&self, pair: &PairInterference) -> Result<PairFindings, FindingsError> {
         let joint = self.joint;
         let last = joint.last_interface();
-        let solved = self.solve(&pair.effective, &self.shop)?;
+        let solved = self.solve(&pair.grip, &self.shop)?;
         let interfaces = self.interfaces(pair, &solved);
         let pressure = mean_pressure(&solved, last);
         let friction = &joint.friction;
@@ -211,15 +213,22 @@ impl<'a> Kernel<'a> {
         })
     }
 
+    /// One pair in a service state; of its contact pressure only the share `relaxation` is left for holding.
     pub(super) fn state(
         &self,
         state: &DutyState,
         pair: &PairInterference,
+        relaxation: f64,
     ) -> Result<StateFindings, FindingsError> {
         let condition = Condition::of_state(self.joint, state)?;
-        let solved = self.solve(&pair.effective, &condition)?;
-        let interfaces = self.interfaces(pair, &solved);
-        let pressure = mean_pressure(&solved, self.joint.last_interface());
+        let solved = self.solve(&pair.grip, &condition)?;
+        let mut interfaces = self.interfaces(pair, &solved);
+        for interface in &mut interfaces {
+            interface.pressure *= relaxation;
+            interface.torque_capacity *= relaxation;
+            interface.axial_capacity *= relaxation;
+        }
+        let pressure = relaxation * mean_pressure(&solved, self.joint.last_interface());
         let loaded = state.torque > 0.0 || state.axial_force > 0.0;
         let slip = |interface: &InterfaceFindings| {
             capacity::slip_safety(
@@ -422,7 +431,8 @@ fn ring_stress(
     let (bore, rim) = (face(bore), face(rim));
     let (equivalent, strength) = match (ring.material.kind, criterion) {
         (Kind::Brittle, _) => {
-            let tension = |face: &FaceStress| criteria::greatest_principal(face.radial, face.hoop).max(0.0);
+            let share = ring.tension_share();
+            let tension = |face: &FaceStress| criteria::brittle(face.radial, face.hoop, share);
             (tension(&bore).max(tension(&rim)), ring.strength.tensile_strength)
         }
         (_, DuctileCriterion::VonMises) => (bore.von_mises.max(rim.von_mises), ring.strength.yield_strength),

@@ -2,20 +2,31 @@
 
 mod assembly_of;
 mod cautions;
+pub mod cold_bath;
 mod compute;
+mod envelope;
 pub mod expression;
+mod joining_cautions;
 mod kernel;
+pub mod press_work;
 mod service;
 mod softening;
+mod thermal_part;
+pub mod times;
 mod verdicts;
 pub mod worksheet;
 
 pub use assembly_of::{bath_name, bath_temperature};
 pub use cautions::criterion_source;
+use cold_bath::ColdBathFindings;
 pub use compute::{FindingsError, compute};
+pub use envelope::{Envelope, EnvelopeLine, EnvelopeMeaning, EnvelopeState};
 pub use kernel::after_smoothing;
-pub use service::{Fatigue, GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings};
-pub use softening::plastic_share_of_pressure;
+use press_work::PressWorkFindings;
+pub use service::{
+    Fatigue, GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings, ThinLiner, WornHub,
+};
+use times::Times;
 pub use verdicts::{combination, failure};
 
 pub use crate::assembly::cautions::Caution;
@@ -221,6 +232,27 @@ pub struct AssemblyFindings {
     pub needed: f64,
     /// Highest temperature for the hub, K, with the reason.
     pub hub_limit: Option<(f64, String)>,
+    /// What one room-temperature coefficient would say in place of the curves.
+    pub constant_coefficient: Vec<ConstantCoefficient>,
+    /// Soak and handling times of the method asked for.
+    pub times: Times,
+    /// The cold bath of the method asked for.
+    pub cold_bath: Option<ColdBathFindings>,
+    /// Around the press, and after it; none when no pair grips.
+    pub press_work: Option<PressWorkFindings>,
+}
+
+/// What the coefficient at 20 °C would say of a part in place of its expansion curve.
+#[derive(Debug, Clone, PartialEq)]
+pub struct ConstantCoefficient {
+    /// Name of the part.
+    pub part: String,
+    /// Temperature, K.
+    pub temperature: f64,
+    /// Change of diameter from 20 °C by the curve, m.
+    pub by_curve: f64,
+    /// The same by the coefficient at 20 °C, m.
+    pub by_coefficient: f64,
 }
 
 /// One thermal route.
@@ -273,6 +305,8 @@ pub enum VerdictUnit {
     Temperature,
     /// A share of the whole, 0 to 1.
     Share,
+    /// Time, s.
+    Time,
 }
 
 /// One requirement with what was found.

@@ -1,9 +1,11 @@
 //! The joint at work: what loosens it, and what yielding by design gives.
 
+use super::envelope::{Envelope, envelope};
 use super::kernel::{Condition, Kernel, PairInterference, free_strains};
-use super::{FindingsError, RingStress};
+use super::{DutyFindings, FindingsError, InterfaceFindings, PairFindings, RingStress};
 use crate::joint::{DutyState, Joint};
 use crate::material::{Kind, Range};
+use crate::mechanics::buckling::Liner;
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::mechanics::finite_length::{LengthFactors, ShaftEnds, length_factors};
 use crate::mechanics::governing::{Extreme, StackQuantity, StressMeasure};
@@ -25,6 +27,10 @@ pub struct ServiceFindings {
     pub governing: Vec<GoverningRing>,
     /// Pressure at the mean and at a sharp edge over the thick-walled cylinder; none outside its validity.
     pub length_factors: Option<LengthFactors>,
+    /// The innermost part under pressure from outside; none unless it is a tube with a thin wall.
+    pub liner: Option<ThinLiner>,
+    /// What is left of the pressure at speed and with a hot hub; none where it cannot be drawn.
+    pub envelope: Option<Envelope>,
     /// Fatigue of the shaft at the hub edge for each state with rotating bending.
     pub fatigue: Vec<Fatigue>,
 }
@@ -57,6 +63,19 @@ pub struct Fatigue {
     pub safety: Range,
 }
 
+/// The wall of a thin bush, which the housing presses inwards. Pressures Pa.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct ThinLiner {
+    /// Wall over mean diameter.
+    pub slenderness: f64,
+    /// Greatest contact pressure of the tightest pair, at the shop temperature and in every state.
+    pub pressure: f64,
+    /// Pressure below which the wall cannot buckle even by itself.
+    pub free: f64,
+    /// Pressure at which it buckles inwards though the housing holds it round.
+    pub housed: f64,
+}
+
 /// What opens one interface of the loosest pair.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Loosening {
@@ -79,8 +98,26 @@ pub struct PlasticFindings {
     pub mean: PlasticState,
     /// The tightest pair.
     pub tightest: PlasticState,
+    /// What the states leave of the hub; none unless it may yield by design.
+    pub worn: Option<WornHub>,
     /// The solved joint, for curves.
     pub joint: PlasticJoint,
+}
+
+/// A hub that has been through the hardest of all states, at the loosest and the tightest pair.
+///
+/// Its bore stays larger by its permanent growth, and from then on the joint is elastic with an interference that is
+/// less by it.
+#[derive(Debug, Clone, PartialEq)]
+pub struct WornHub {
+    /// Permanent growth of the bore of the loosest pair, m.
+    pub loosest: f64,
+    /// Permanent growth of the bore of the tightest pair, m.
+    pub tightest: f64,
+    /// The hub of the tightest pair under its hardest load.
+    pub hardest: PlasticState,
+    /// Index of the state with that load; none when it is the assembly.
+    pub state: Option<usize>,
 }
 
 /// The rings after one step of assembly.
@@ -97,14 +134,21 @@ pub(super) fn service(
     joint: &Joint,
     kernel: &Kernel<'_>,
     pairs: &Extremes<PairInterference>,
+    tightest: &PairFindings,
+    duty: &[DutyFindings],
+    plastic: Option<PlasticFindings>,
 ) -> Result<ServiceFindings, FindingsError> {
+    let loosening = loosening(joint, kernel, &pairs.loosest)?;
+    let loosening_speed = loosening.first().and_then(|loosening| loosening.speed);
     let (shaft, hub) = joint.shaft_and_hub();
     let slenderness = joint.engaged_length() / joint.diameter;
     let ratio = joint.diameter / hub.outer_diameter;
     let simple = joint.rings.len() == 2 && joint.slices.is_empty() && shaft.inner_diameter == 0.0;
     Ok(ServiceFindings {
-        loosening: loosening(joint, kernel, &pairs.loosest)?,
-        plastic: plastic(joint, kernel, pairs)?,
+        envelope: envelope(joint, kernel, &pairs.loosest, duty, loosening_speed)?,
+        liner: liner(joint, tightest, duty),
+        loosening,
+        plastic,
         steps: steps(joint, kernel, &pairs.tightest)?,
         governing: governing(joint, kernel, pairs)?,
         length_factors: if simple {
@@ -123,9 +167,9 @@ fn loosening(
     kernel: &Kernel<'_>,
     loosest: &PairInterference,
 ) -> Result<Vec<Loosening>, FindingsError> {
-    let stack = kernel.stack(&loosest.effective, &kernel.shop);
+    let stack = kernel.stack(&loosest.grip, &kernel.shop);
     let mut speeds = stack.loosening_speeds()?;
-    for other in kernel.stacks(&loosest.effective, &kernel.shop).iter().skip(1) {
+    for other in kernel.stacks(&loosest.grip, &kernel.shop).iter().skip(1) {
         for (speed, own) in speeds.iter_mut().zip(other.loosening_speeds()?) {
             *speed = match (*speed, own) {
                 (Some(known), Some(own)) => Some(known.min(own)),
@@ -187,7 +231,10 @@ fn governing_ring(
 ) -> Result<GoverningRing, FindingsError> {
     let ring = &joint.rings[index];
     let (measure, strength) = match (ring.material.kind, joint.criterion) {
-        (Kind::Brittle, _) => (StressMeasure::GreatestPrincipal, ring.strength.tensile_strength),
+        (Kind::Brittle, _) => {
+            let tension_share = ring.tension_share();
+            (StressMeasure::Brittle { tension_share }, ring.strength.tensile_strength)
+        }
         (_, DuctileCriterion::VonMises) => (StressMeasure::VonMises, ring.strength.yield_strength),
         (_, DuctileCriterion::Tresca) => (StressMeasure::Tresca, ring.strength.yield_strength),
     };
@@ -213,6 +260,25 @@ fn governing_ring(
 fn loosest_for_stress(pairs: &Extremes<PairInterference>) -> Vec<f64> {
     let both = pairs.loosest.effective.iter().zip(&pairs.tightest.effective);
     both.map(|(loosest, tightest)| loosest.min(*tightest)).collect()
+}
+
+/// The innermost part as a thin liner.
+fn liner(joint: &Joint, tightest: &PairFindings, duty: &[DutyFindings]) -> Option<ThinLiner> {
+    let bush = joint.rings.first()?;
+    let liner = Liner {
+        inner_diameter: bush.inner_diameter,
+        outer_diameter: bush.outer_diameter,
+        youngs_modulus: bush.material.youngs_modulus.value,
+        poisson: bush.material.poisson.value,
+    };
+    let innermost = |interfaces: &[InterfaceFindings]| interfaces.first().map_or(0.0, |found| found.pressure);
+    let states = duty.iter().map(|state| innermost(&state.tightest.interfaces));
+    Some(ThinLiner {
+        slenderness: liner.slenderness(),
+        pressure: states.fold(innermost(&tightest.interfaces), f64::max),
+        free: liner.free_pressure().ok()?,
+        housed: liner.housed_pressure().ok()?,
+    })
 }
 
 /// Strength of plain steel in rotating bending as a share of its tensile strength: 0.45 to 0.5 is usual; from memory.
@@ -252,7 +318,7 @@ fn fatigue_of(joint: &Joint, index: usize, state: &DutyState) -> Option<Fatigue>
 }
 
 /// The elastic-plastic joint; none unless a ductile hub sits on a shaft of two rings of one section.
-fn plastic(
+pub(super) fn plastic(
     joint: &Joint,
     kernel: &Kernel<'_>,
     pairs: &Extremes<PairInterference>,
@@ -288,7 +354,7 @@ fn plastic(
     };
     let states = (at(&pairs.loosest), at(&pairs.mean), at(&pairs.tightest));
     let (Some(loosest), Some(mean), Some(tightest)) = states else { return Ok(None) };
-    Ok(Some(PlasticFindings { limits: *solved.limits(), loosest, mean, tightest, joint: solved }))
+    Ok(Some(PlasticFindings { limits: *solved.limits(), loosest, mean, tightest, worn: None, joint: solved }))
 }
 
 /// Clearance that keeps parts apart which are not joined yet, as a share of the diameter.

@@ -1,80 +1,150 @@
-//! A hub that may yield by design: the pressures of the elastic-plastic hub in place of the elastic ones.
+//! A hub that may yield by design: what its permanent growth leaves of the grip.
+//!
+//! Yielding is not undone when the load falls. A hub that has yielded in assembly, or in the hardest state since,
+//! keeps its bore larger by the permanent growth Δ and unloads elastically, so that the joint from then on acts as an
+//! elastic one of the interference U − Δ. Taking the pressure of a state from the plastic curve at the state's own
+//! interference, or scaling the elastic pressure by a share, would follow the curve back down and promise more grip
+//! than is left, since the curve rises less steeply than the elastic line falls.
+//!
+//! Perfect plasticity gives Δ at rest. A state that stresses the bore beyond what assembly did (a colder hub, a
+//! pressure inside the shaft, rotation) is counted as the interference that stresses the bore alike; for rotation,
+//! which stresses the wall deeper than an interference does, that is an estimate.
 
-use super::{DutyFindings, PairFindings, PlasticFindings, StateFindings};
-use crate::mechanics::plastic::{PlasticState, Regime};
+use super::compute::{FRESH, FindingsError};
+use super::kernel::{Kernel, PairInterference};
+use super::service::WornHub;
+use super::{DutyFindings, PairFindings, PlasticFindings, RingStress};
+use crate::joint::Joint;
+use crate::mechanics::plastic::{PlasticJoint, PlasticState, YieldRule};
 use crate::tolerance::Extremes;
 
-/// Pressure of the plastic hub over the elastic one; 1 while it is elastic.
+/// Elastic figures that the permanent growth changes.
+pub(super) struct Parts<'a> {
+    /// Interferences; their grip becomes less.
+    pub(super) pairs: &'a mut Extremes<PairInterference>,
+    /// The pairs at the shop temperature, as assembled.
+    pub(super) extremes: &'a mut Extremes<PairFindings>,
+    /// The service states.
+    pub(super) duty: &'a mut [DutyFindings],
+}
+
+/// Puts what is left of the grip into the pairs and states, with what follows from it.
 ///
-/// Service states take the share of the shop temperature: rotation and heat with a plastic hub are not covered by a
-/// theory of their own, and the share is taken from the state that made the hub yield.
-pub fn plastic_share_of_pressure(state: &PlasticState) -> f64 {
-    if state.regime == Regime::Elastic || state.elastic_pressure <= 0.0 {
-        1.0
-    } else {
-        state.pressure / state.elastic_pressure
-    }
-}
-
-/// Puts the pressures of the plastic hub into the pairs and states, with what follows from them.
+/// The hub's stresses stay those of an elastic hub: they show how far beyond its limit it is.
 pub(super) fn soften(
-    extremes: &mut Extremes<PairFindings>,
-    duty: &mut [DutyFindings],
-    plastic: &PlasticFindings,
-) {
-    let shares = [&plastic.loosest, &plastic.mean, &plastic.tightest].map(plastic_share_of_pressure);
-    for (pair, share) in
-        [&mut extremes.loosest, &mut extremes.mean, &mut extremes.tightest].into_iter().zip(shares)
-    {
-        soften_pair(pair, share);
+    joint: &Joint,
+    kernel: &Kernel<'_>,
+    plastic: &mut PlasticFindings,
+    parts: &mut Parts<'_>,
+) -> Result<(), FindingsError> {
+    let bore = BoreStress::of(joint, kernel)?;
+    let loosest = bore.hardest(&plastic.loosest, parts.duty.iter().map(|state| &state.loosest.rings));
+    let tightest = bore.hardest(&plastic.tightest, parts.duty.iter().map(|state| &state.tightest.rings));
+    let Extremes { loosest: loose, mean, tightest: tight } = &mut *parts.pairs;
+    for (pair, found, state) in [
+        (&mut *loose, &mut parts.extremes.loosest, &plastic.loosest),
+        (mean, &mut parts.extremes.mean, &plastic.mean),
+        (&mut *tight, &mut parts.extremes.tightest, &plastic.tightest),
+    ] {
+        pair.shrink(state.permanent.bore);
+        let softened = kernel.pair(pair)?;
+        let rings = with_elastic_hub(softened.rings, &found.rings, state);
+        *found = PairFindings { rings, ..softened };
     }
-    for state in duty {
-        soften_state(&mut state.loosest, shares[0]);
-        soften_state(&mut state.tightest, shares[2]);
+    let (loosest_growth, _) = growth(&plastic.joint, loosest.0);
+    let (tightest_growth, hardest) = growth(&plastic.joint, tightest.0);
+    loose.shrink(loosest_growth);
+    tight.shrink(tightest_growth);
+    let hardest = hardest.unwrap_or_else(|| plastic.tightest.clone());
+    let least = growth(&plastic.joint, loosest.0).1.unwrap_or_else(|| plastic.loosest.clone());
+    for (state, found) in joint.duty.iter().zip(parts.duty.iter_mut()) {
+        for (pair, found, worn, share) in [
+            (&*loose, &mut found.loosest, &least, state.relaxation),
+            (&*tight, &mut found.tightest, &hardest, FRESH),
+        ] {
+            let softened = kernel.state(state, pair, share)?;
+            let rings = with_elastic_hub(softened.rings.clone(), &found.rings, worn);
+            *found = super::StateFindings { rings, ..softened };
+        }
+    }
+    plastic.worn =
+        Some(WornHub { loosest: loosest_growth, tightest: tightest_growth, hardest, state: tightest.1 });
+    Ok(())
+}
+
+impl PairInterference {
+    /// What grips when the hub's bore stays larger by this, m.
+    fn shrink(&mut self, growth: f64) {
+        self.grip = self.effective.iter().map(|effective| effective - growth).collect();
     }
 }
 
-fn soften_pair(pair: &mut PairFindings, share: f64) {
-    pair.pressure *= share;
-    pair.torque_capacity *= share;
-    pair.axial_capacity *= share;
-    for force in [&mut pair.press_force, &mut pair.release_force] {
-        force.low *= share;
-        force.high *= share;
+/// The rings under what grips; the hub with its elastic stresses, and with the growth that stays in its sizes.
+fn with_elastic_hub(
+    softened: Vec<RingStress>,
+    elastic: &[RingStress],
+    worn: &PlasticState,
+) -> Vec<RingStress> {
+    let mut rings = softened;
+    if let (Some(hub), Some(elastic)) = (rings.last_mut(), elastic.last()) {
+        *hub = RingStress {
+            bore_change: hub.bore_change + worn.permanent.bore,
+            outer_change: hub.outer_change + worn.permanent.rim,
+            ..elastic.clone()
+        };
     }
-    for interface in &mut pair.interfaces {
-        interface.pressure *= share;
-        interface.torque_capacity *= share;
-        interface.axial_capacity *= share;
-    }
-    soften_shaft(&mut pair.rings, share);
+    rings
 }
 
-fn soften_state(state: &mut StateFindings, share: f64) {
-    state.pressure *= share;
-    state.torque_capacity *= share;
-    state.axial_capacity *= share;
-    state.slip_safety = state.slip_safety.map(|safety| safety * share);
-    for interface in &mut state.interfaces {
-        interface.pressure *= share;
-        interface.torque_capacity *= share;
-        interface.axial_capacity *= share;
+/// Permanent growth of the bore at an interference, with the hub there.
+///
+/// Beyond the interference at which the shaft yields too, all that is added is counted as lost.
+fn growth(joint: &PlasticJoint, interference: f64) -> (f64, Option<PlasticState>) {
+    if let Ok(state) = joint.solve(interference) {
+        return (state.permanent.bore, Some(state));
     }
-    soften_shaft(&mut state.rings, share);
+    let last = joint.limits().shaft_yield_interference.unwrap_or(0.0);
+    let known = joint.solve(last * (1.0 - 1e-9)).ok();
+    let grown = known.as_ref().map_or(0.0, |state| state.permanent.bore);
+    (grown + (interference - last).max(0.0), known)
 }
 
-/// The elastic shaft under the lower pressure; at rest its stresses are proportional to it. The elastic figures of the
-/// hub are kept: they show how far beyond its limit it is.
-fn soften_shaft(rings: &mut [super::RingStress], share: f64) {
-    let Some(shaft) = rings.first_mut() else { return };
-    for face in [&mut shaft.bore, &mut shaft.rim] {
-        face.radial *= share;
-        face.hoop *= share;
-        face.von_mises *= share;
-        face.tresca *= share;
+/// Elastic equivalent stress at the hub's bore, by which the hardest state is found.
+struct BoreStress {
+    rule: YieldRule,
+    /// For each metre of interference, Pa/m.
+    per_interference: f64,
+}
+
+impl BoreStress {
+    fn of(joint: &Joint, kernel: &Kernel<'_>) -> Result<Self, FindingsError> {
+        let unit = joint.diameter * 1e-3;
+        let (_, rings) = kernel.cold(&[unit])?;
+        let mut bore = Self { rule: joint.require.yield_rule, per_interference: 1.0 };
+        bore.per_interference = bore.equivalent(&rings) / unit;
+        Ok(bore)
     }
-    shaft.equivalent *= share;
-    shaft.safety = shaft.safety.map(|safety| safety / share);
-    shaft.bore_change *= share;
-    shaft.outer_change *= share;
+
+    fn equivalent(&self, rings: &[RingStress]) -> f64 {
+        rings.last().map_or(0.0, |hub| match self.rule {
+            YieldRule::VonMises => hub.bore.von_mises,
+            _ => hub.bore.tresca,
+        })
+    }
+
+    /// The interference at rest that stresses the bore as the hardest load does, with the index of its state.
+    fn hardest<'r>(
+        &self,
+        assembled: &PlasticState,
+        states: impl Iterator<Item = &'r Vec<RingStress>>,
+    ) -> (f64, Option<usize>) {
+        let mut hardest = (assembled.interference, None);
+        for (index, rings) in states.enumerate() {
+            let alike = self.equivalent(rings) / self.per_interference;
+            if alike > hardest.0 * (1.0 + 1e-9) {
+                hardest = (alike, Some(index));
+            }
+        }
+        hardest
+    }
 }

@@ -78,7 +78,9 @@ fn strength(findings: &Findings) -> Vec<Verdict> {
 /// The hub that may yield: the share of its section that is plastic at the tightest pair.
 fn plastic_share(findings: &Findings) -> Option<Verdict> {
     let Allow::Plastic { share } = findings.joint.require.allow else { return None };
-    let state = &findings.service.plastic.as_ref()?.tightest;
+    let worn = findings.service.plastic.as_ref()?.worn.as_ref()?;
+    let state = &worn.hardest;
+    let place = worn.state.and_then(|index| findings.joint.duty.get(index));
     let (_, hub) = findings.joint.shaft_and_hub();
     let carried = matches!(state.regime, Regime::Elastic | Regime::ElasticPlastic);
     Some(Verdict {
@@ -88,7 +90,7 @@ fn plastic_share(findings: &Findings) -> Option<Verdict> {
         found: Some(state.plastic_share),
         unit: VerdictUnit::Share,
         ok: carried && state.plastic_share <= share,
-        at: "tightest pair, shop temperature, at rest".to_owned(),
+        at: format!("tightest pair, {}", place.map_or("as assembled", |state| state.name.as_str())),
     })
 }
 
@@ -131,6 +133,7 @@ fn edges(findings: &Findings) -> Vec<Verdict> {
 pub fn failure(ring: &Ring) -> &'static str {
     match ring.material.kind {
         Kind::Brittle => "fracture",
+        Kind::Polymer if ring.material.long_term_strength.is_some() => "creep",
         Kind::Ductile | Kind::Polymer => "yield",
     }
 }
@@ -197,7 +200,7 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
     };
     let (shaft, hub) = findings.joint.shaft_and_hub();
     let limit = assembly.hub_limit.as_ref().map(|(limit, _)| *limit);
-    match findings.joint.assembly.method {
+    let mut verdicts = match findings.joint.assembly.method {
         Method::Press => {
             let force = assembly.press.tightest.peak_force;
             let allowed = findings.joint.require.press_force;
@@ -246,5 +249,36 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
                 "tightest pair with clearance",
             )]
         }
+    };
+    verdicts.extend(handling(findings));
+    verdicts
+}
+
+/// The time from oven or bath to seated; nothing when the parts pass each other for ever and nothing is required.
+fn handling(findings: &Findings) -> Option<Verdict> {
+    let plan = &findings.joint.assembly;
+    if !plan.heats() && !plan.chills() {
+        return None;
     }
+    let required = plan.practice.handling_time;
+    let handling = findings.assembly.times.handling.as_ref();
+    let found = handling.and_then(|handling| handling.tightest.gone);
+    if found.is_none() && required.is_none() {
+        return None;
+    }
+    let ok = match (handling, found, required) {
+        (Some(_), Some(found), Some(required)) => found >= required,
+        (None, _, Some(_)) => false,
+        _ => true,
+    };
+    let from = if plan.heats() { "oven" } else { "bath" };
+    Some(Verdict {
+        question: Question::Assembly,
+        subject: format!("time from {from} to seated"),
+        required,
+        found,
+        unit: VerdictUnit::Time,
+        ok,
+        at: "tightest pair, until no clearance is left".to_owned(),
+    })
 }

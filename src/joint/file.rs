@@ -6,20 +6,21 @@
 use schemars::JsonSchema;
 use serde::Deserialize;
 
+use super::assembly_keys::AssemblyKeys;
 use super::leaf::{
-    AllowWord, BathWord, CriterionWord, DisplayWord, FlagWord, FrictionText, LimitsText, LubricationWord,
-    YieldRuleWord,
+    AllowWord, CriterionWord, DisplayWord, FlagWord, FrictionText, LimitsText, LubricationWord, YieldRuleWord,
 };
 use super::leaf::{FitText, MaterialName, UncertainSize};
-use super::leaf::{MaterialKeys, MethodWord, Roughness, SmoothingAtWord, SmoothingText, Version};
+use super::leaf::{MaterialKeys, Roughness, SmoothingAtWord, SmoothingText, Version};
+use super::population_keys::PopulationKeys;
 use super::written::{At, Line, NotYet, Note, TextOr, Written};
-use crate::quantity::{Angle, Force, Length, Number, NumberRange, Pressure, Speed, Temperature, Torque};
+use crate::quantity::{Force, Length, Number, NumberRange, Pressure, Speed, Temperature, Torque};
 
 /// Version of the joint file that is read.
 pub const VERSION: u32 = 1;
 
 /// Keys that are known but whose subject is not calculated yet, in any section.
-pub(crate) const NOT_YET: &[&str] = &["rings", "fits", "order", "bearing", "steps"];
+pub(crate) const NOT_YET: &[&str] = &["bearing"];
 
 /// The sections with their keys, for a key that was put into the wrong one.
 pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
@@ -47,11 +48,29 @@ pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
             "radial_force",
             "rotating_bending",
             "reversing",
+            "relaxation",
         ],
     ),
     (
         "assembly",
-        &["method", "shop_temperature", "clearance", "chamfer_angle", "bath", "hub_temperature_limit"],
+        &[
+            "method",
+            "shop_temperature",
+            "clearance",
+            "form_error",
+            "handling_allowance",
+            "chamfer_angle",
+            "bath",
+            "medium",
+            "oven_temperature",
+            "hub_temperature_limit",
+            "handling_time",
+            "transfer_time",
+            "chilled_length",
+            "room",
+            "vessel",
+            "temperature_lag",
+        ],
     ),
     ("smoothing", &["factor", "rule", "at"]),
     (
@@ -65,6 +84,21 @@ pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
             "allow",
             "plastic_share",
             "yield_rule",
+        ],
+    ),
+    (
+        "population",
+        &[
+            "hole",
+            "shaft",
+            "hub_roughness",
+            "shaft_roughness",
+            "friction",
+            "pressing_friction",
+            "hub_youngs_modulus",
+            "shaft_youngs_modulus",
+            "hub_temperature",
+            "shaft_temperature",
         ],
     ),
 ];
@@ -106,7 +140,7 @@ pub(crate) struct JointFile {
     /// The outer part.
     pub(crate) hub: Option<At<HubKeys>>,
     /// The fit: a callout such as H7/s6 or FN 4, or the limits of hole and shaft, or two measured parts.
-    pub(crate) fit: Option<At<TextOr<FitText, FitKeys>>>,
+    pub(crate) fit: Option<GivenFit>,
     /// Coefficients of friction. Silent: from the library by pair of materials and method of assembly.
     pub(crate) friction: Option<At<TextOr<FrictionText, FrictionKeys>>>,
     /// Service states. Silent: one state at shop temperature without load.
@@ -119,12 +153,14 @@ pub(crate) struct JointFile {
     pub(crate) criterion: Option<Written<CriterionWord>>,
     /// What must be met.
     pub(crate) require: Option<At<RequireKeys>>,
+    /// How the parts scatter, for scatter and sort.
+    pub(crate) population: Option<At<PopulationKeys>>,
     /// Units on the terminal and in the report. Silent: metric.
     pub(crate) display: Option<Written<DisplayWord>>,
     /// Two rings or more from the innermost outwards, in place of shaft and hub.
     pub(crate) rings: Option<At<Vec<At<RingKeys>>>>,
     /// The fits between neighbouring rings, one less than there are rings.
-    pub(crate) fits: Option<At<Vec<At<TextOr<FitText, FitKeys>>>>>,
+    pub(crate) fits: Option<At<Vec<GivenFit>>>,
     /// Numbers of the fits in the order in which they are joined. Silent: from the innermost outwards.
     pub(crate) order: Option<At<Vec<Written<Number>>>>,
     #[schemars(skip)]
@@ -212,6 +248,9 @@ pub(crate) struct RingKeys {
     /// Ruling section that picks its strength. Silent: the thickness of its wall, or the diameter of a solid core.
     pub(crate) section: Option<Written<Length>>,
 }
+
+/// A fit as a callout, or with keys.
+pub(crate) type GivenFit = At<TextOr<FitText, FitKeys>>;
 
 /// The fit with hole and shaft apart, or two measured parts.
 #[derive(Debug, Deserialize, JsonSchema)]
@@ -305,24 +344,8 @@ pub(crate) struct StateKeys {
     pub(crate) rotating_bending: Option<Written<FlagWord>>,
     /// Whether the torque reverses.
     pub(crate) reversing: Option<Written<FlagWord>>,
-}
-
-/// How the joint is put together.
-#[derive(Debug, Deserialize, JsonSchema)]
-#[serde(deny_unknown_fields)]
-pub(crate) struct AssemblyKeys {
-    /// Method. Silent: press.
-    pub(crate) method: Option<Written<MethodWord>>,
-    /// Temperature of the shop. Silent: 20 degC.
-    pub(crate) shop_temperature: Option<Written<Temperature>>,
-    /// Diametral clearance wanted while joining hot or cold. Silent: a thousandth of the diameter.
-    pub(crate) clearance: Option<Written<Length>>,
-    /// Angle of the lead-in chamfer to the axis. Silent: 5 deg.
-    pub(crate) chamfer_angle: Option<Written<Angle>>,
-    /// Cold bath. Silent: dry ice.
-    pub(crate) bath: Option<Written<BathWord>>,
-    /// Highest temperature the hub may have; the limit of its material holds as well.
-    pub(crate) hub_temperature_limit: Option<Written<Temperature>>,
+    /// Share of the contact pressure that relaxation leaves, 0 to 1. Silent: all of it.
+    pub(crate) relaxation: Option<Written<Number>>,
 }
 
 /// Loss of interference by smoothing.

@@ -1,7 +1,8 @@
 //! From YAML text to the tree of values.
 //!
 //! YAML resolves `1.0060` to the number 1.006 and `1e3` to 1000; a material number or a drawing number must
-//! not change so. The text is therefore gone through twice: once for its structure, once for the scalars.
+//! not change so. Keys that are known to hold one value are therefore asked for their text. Where another
+//! value was resolved, the text is gone through a second time, for the scalars alone.
 
 use std::collections::BTreeSet;
 use std::fmt;
@@ -19,22 +20,32 @@ const MOST_VALUES: usize = 100_000;
 /// Deepest nesting of brackets that is handed to the YAML reader, whose time grows with its square.
 const DEEPEST_BRACKETS: usize = 256;
 
+/// Keys that hold one value which often looks like a number.
+const ONE_VALUE: [&str; 14] = [
+    "joint_file",
+    "title",
+    "drawing",
+    "note",
+    "date",
+    "state",
+    "holding",
+    "pressing",
+    "release",
+    "factor",
+    "slip_safety",
+    "yield_safety",
+    "fracture_safety",
+    "poisson",
+];
+
 /// The tree of one YAML document.
 pub(crate) fn tree_of(text: &str) -> Result<Tree, Box<Diagnostic>> {
     refuse_deep_brackets(text)?;
-    let mut growth = Growth { tree: Tree::empty(), unresolved: false };
-    let mut documents = serde_yaml::Deserializer::from_str(text);
-    let Some(first) = documents.next() else {
-        growth.tree.add(Content::Null, Origin::File, None);
-        return Ok(growth.tree);
+    let quick = if text.contains('!') { None } else { grown(text, true).ok() };
+    let Growth { mut tree, unresolved, .. } = match quick {
+        Some(growth) => growth,
+        None => grown(text, false)?,
     };
-    Grow { growth: &mut growth, parent: None }
-        .deserialize(first)
-        .map_err(|error| Box::new(diagnose::of_yaml(text, &error)))?;
-    if let Some(second) = documents.next() {
-        return Err(second_document(text, place::of_root(text, second)));
-    }
-    let Growth { mut tree, unresolved } = growth;
     if unresolved && let Some(document) = serde_yaml::Deserializer::from_str(text).next() {
         let node = tree.root();
         Fill { tree: &mut tree, node }
@@ -44,9 +55,28 @@ pub(crate) fn tree_of(text: &str) -> Result<Tree, Box<Diagnostic>> {
     Ok(tree)
 }
 
+/// The structure; `by_key`: keys of [`ONE_VALUE`] are asked for their text, which fails if it is something else.
+fn grown(text: &str, by_key: bool) -> Result<Growth, Box<Diagnostic>> {
+    let mut growth = Growth { tree: Tree::empty(), by_key, unresolved: false };
+    let mut documents = serde_yaml::Deserializer::from_str(text);
+    let Some(first) = documents.next() else {
+        growth.tree.add(Content::Null, Origin::File, None);
+        return Ok(growth);
+    };
+    Grow { growth: &mut growth, parent: None }
+        .deserialize(first)
+        .map_err(|error| Box::new(diagnose::of_yaml(text, &error)))?;
+    match documents.next() {
+        Some(second) => Err(second_document(text, place::of_root(text, second))),
+        None => Ok(growth),
+    }
+}
+
 /// A tree while it grows.
 struct Growth {
     tree: Tree,
+    /// Keys of [`ONE_VALUE`] are asked for their text.
+    by_key: bool,
     /// Some scalar was resolved to something else than a text.
     unresolved: bool,
 }
@@ -150,13 +180,43 @@ impl<'de> Visitor<'de> for Grow<'_> {
         let mut entries: Vec<Entry> = Vec::new();
         let mut seen = BTreeSet::new();
         while let Some(key) = access.next_key_seed(Key)? {
-            let value = access
-                .next_value_seed(Grow { growth: &mut *self.growth, parent: Some((node, entries.len())) })?;
+            let as_typed = self.growth.by_key && ONE_VALUE.contains(&key.as_str());
+            let grow = Grow { growth: &mut *self.growth, parent: Some((node, entries.len())) };
+            let value = match as_typed {
+                true => access.next_value_seed(AsTyped(grow))?,
+                false => access.next_value_seed(grow)?,
+            };
             let repeated = !seen.insert(key.clone());
             entries.push(Entry { key, value, repeated });
         }
         self.growth.tree.replace(node, Content::Map(entries), Origin::File);
         Ok(node)
+    }
+}
+
+/// Makes a node of the text that comes next; fails when it is no text.
+struct AsTyped<'a>(Grow<'a>);
+
+impl<'de> DeserializeSeed<'de> for AsTyped<'_> {
+    type Value = NodeId;
+
+    fn deserialize<D: Deserializer<'de>>(self, deserializer: D) -> Result<NodeId, D::Error> {
+        deserializer.deserialize_str(self)
+    }
+}
+
+impl Visitor<'_> for AsTyped<'_> {
+    type Value = NodeId;
+
+    fn expecting(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        f.write_str("a text")
+    }
+
+    fn visit_str<E: serde::de::Error>(self, text: &str) -> Result<NodeId, E> {
+        match text {
+            "" | "~" | "null" | "Null" | "NULL" => Err(E::custom("there may be no value")),
+            text => self.0.scalar(text),
+        }
     }
 }
 

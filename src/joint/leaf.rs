@@ -6,6 +6,7 @@ use schemars::{JsonSchema, Schema, SchemaGenerator, json_schema};
 use serde::de::{Deserialize, Deserializer, IgnoredAny};
 
 use super::file::VERSION;
+use super::practice::Heating;
 use super::written::{Leaf, Refused, words};
 use super::{Bath, Method, SmoothingAt};
 use crate::material::friction::Lubrication;
@@ -28,6 +29,15 @@ words! {
     BathWord: Bath, "cold bath",
     "dry ice" => Bath::DryIce,
     "liquid nitrogen" => Bath::LiquidNitrogen,
+}
+
+words! {
+    /// What the hub is heated in.
+    HeatingWord: Heating, "way of heating",
+    "forced oven" => Heating::ForcedOven,
+    "still oven" => Heating::StillOven,
+    "oil bath" => Heating::OilBath,
+    "induction" => Heating::Induction,
 }
 
 words! {

@@ -5,10 +5,13 @@
 //! | module | subject |
 //! |---|---|
 //! | [`read`](mod@read) | from text to joint, or to everything that is wrong |
+//! | [`population`] | how the parts scatter |
+//! | [`practice`] | oven, bath, room and handling |
 //! | [`set`] | changes from the command line |
 //! | [`template`] | commented files to start from |
 //! | [`schema`](mod@schema) | JSON Schema for editors |
 
+mod assembly_keys;
 mod decode;
 mod diagnose;
 mod draft;
@@ -16,6 +19,9 @@ mod file;
 mod grow;
 mod leaf;
 mod place;
+pub mod population;
+mod population_keys;
+pub mod practice;
 pub mod read;
 pub mod schema;
 pub mod set;
@@ -28,7 +34,7 @@ pub use file::VERSION;
 
 use std::sync::Arc;
 
-use crate::material::{Material, Range, Sourced, Strength};
+use crate::material::{Kind, Material, Range, Sourced, Strength};
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::mechanics::plastic::YieldRule;
 use crate::quantity::UnitSystem;
@@ -71,6 +77,8 @@ pub struct Joint {
     pub criterion: DuctileCriterion,
     /// What must be met.
     pub require: Requirements,
+    /// How the parts scatter; nothing said when the file is silent.
+    pub population: population::PopulationPlan,
     /// Units shown to the reader.
     pub display: UnitSystem,
     /// Every default that was taken, in the order of the joint file's keys.
@@ -128,6 +136,18 @@ pub struct Ring {
     pub outer_diameter: f64,
     /// Roughness Rz of the mating surface, m.
     pub roughness: Sourced<f64>,
+}
+
+impl Ring {
+    /// Tensile over compressive strength of a brittle ring; zero where either is not known, or the ring is not brittle.
+    pub fn tension_share(&self) -> f64 {
+        let compressive =
+            self.material.compressive_strength.as_ref().filter(|_| self.material.kind == Kind::Brittle);
+        match (self.strength.tensile_strength, compressive) {
+            (Some(tensile), Some(compressive)) => tensile / compressive.value,
+            _ => 0.0,
+        }
+    }
 }
 
 /// The fit at one interface.
@@ -202,6 +222,8 @@ pub struct DutyState {
     pub rotating_bending: bool,
     /// Whether the torque reverses.
     pub reversing: bool,
+    /// Share of the contact pressure that relaxation leaves for holding, above 0 and at most 1.
+    pub relaxation: f64,
 }
 
 impl DutyState {
@@ -220,6 +242,7 @@ impl DutyState {
             radial_force: 0.0,
             rotating_bending: false,
             reversing: false,
+            relaxation: 1.0,
         }
     }
 }
@@ -262,6 +285,25 @@ pub struct AssemblyPlan {
     /// Highest hub temperature allowed by the user, K, the lower of `assembly.hub_temperature_limit` and
     /// `require.hub_temperature`; the material's own limit holds as well.
     pub hub_temperature_limit: Option<f64>,
+    /// Oven, bath, room and handling.
+    pub practice: practice::Practice,
+}
+
+impl AssemblyPlan {
+    /// Diametral clearance to be opened: the one wanted, the form error and the allowance for handling, m.
+    pub fn clearance_to_open(&self) -> f64 {
+        self.clearance.value + self.practice.form_error + self.practice.handling_allowance
+    }
+
+    /// Whether the hub is heated.
+    pub fn heats(&self) -> bool {
+        matches!(self.method, Method::HeatHub | Method::HeatAndChill)
+    }
+
+    /// Whether the shaft is chilled.
+    pub fn chills(&self) -> bool {
+        matches!(self.method, Method::ChillShaft | Method::HeatAndChill)
+    }
 }
 
 /// At which pairs the smoothing loss is taken.

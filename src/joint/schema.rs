@@ -134,10 +134,8 @@ mod tests {
     #[test]
     fn keys_that_are_not_calculated_yet_are_not_offered() {
         let top: Value = serde_json::from_str(&schema()).unwrap();
-        let text = schema();
         for key in NOT_YET {
             assert!(top["properties"].get(key).is_none(), "{key}");
-            assert!(!text.contains(&format!("\"{key}\": {{")), "{key}");
         }
     }
 

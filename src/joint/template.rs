@@ -14,7 +14,7 @@ pub struct Template {
 }
 
 /// Every template; the first is the one for no word.
-pub const TEMPLATES: [Template; 6] = [
+pub const TEMPLATES: [Template; 9] = [
     Template {
         kind: "hub",
         subject: "a hub pressed onto a shaft, metric",
@@ -39,6 +39,21 @@ pub const TEMPLATES: [Template; 6] = [
         kind: "chill",
         subject: "a seat ring chilled and put into a warmed head",
         text: include_str!("template/chill.yaml"),
+    },
+    Template {
+        kind: "rings",
+        subject: "three rings shrunk onto each other, with pressure inside",
+        text: include_str!("template/rings.yaml"),
+    },
+    Template {
+        kind: "stepped",
+        subject: "a stepped hub at speed, hot and bent",
+        text: include_str!("template/stepped.yaml"),
+    },
+    Template {
+        kind: "plastic",
+        subject: "a hub that yields by design",
+        text: include_str!("template/plastic.yaml"),
     },
     Template {
         kind: "measured",

@@ -6,6 +6,8 @@ mod duty;
 mod fit;
 mod friction;
 mod parts;
+mod population;
+mod practice;
 mod rings;
 mod smoothing;
 mod steps;
@@ -17,6 +19,7 @@ use super::leaf::{CriterionWord, DisplayWord};
 use super::read::FitKey;
 use super::written::{At, Written};
 use super::{Allow, Fit, Joint, Requirements, Ring};
+use crate::material::Kind as MaterialKind;
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::mechanics::plastic::YieldRule;
 use crate::quantity::{Kind, Number, UnitSystem, written};
@@ -73,6 +76,8 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) ->
     let smoothing = smoothing::smoothing(draft, file, rings.as_deref(), method);
     let criterion = criterion(draft, file);
     let require = requirements(draft, file.require.as_ref());
+    refuse_brittle_yield(draft, file, rings.as_deref(), require.as_ref());
+    let population = population::population(draft, file);
     let display = display(draft, file);
     if !draft.faults.is_empty() {
         return None;
@@ -97,6 +102,7 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) ->
         smoothing: smoothing?,
         criterion: criterion?,
         require: require?,
+        population,
         display: display?,
         defaults,
         remarks: std::mem::take(&mut draft.remarks),
@@ -233,6 +239,23 @@ fn requirements(draft: &mut Draft<'_>, keys: Option<&At<RequireKeys>>) -> Option
         allow,
         yield_rule,
     })
+}
+
+/// Refuses a hub that may yield by design and does not yield.
+fn refuse_brittle_yield(
+    draft: &Draft<'_>,
+    file: &JointFile,
+    rings: Option<&[Ring]>,
+    require: Option<&Requirements>,
+) {
+    let allow = file.require.as_ref().and_then(|keys| keys.value.allow.as_ref());
+    let hub = rings.and_then(<[Ring]>::last).filter(|hub| hub.material.kind != MaterialKind::Ductile);
+    if let (Some(given), Some(hub), Some(Requirements { allow: Allow::Plastic { .. }, .. })) =
+        (allow, hub, require)
+    {
+        let what = format!("is for a ductile hub, and the {} is of {}", hub.name, hub.material.name);
+        draft.refuse(given, &what);
+    }
 }
 
 /// Share of the hub's section that may be plastic when the file is silent.

@@ -195,7 +195,7 @@ macro_rules! quantities {
     };
 }
 
-quantities!(Angle, Force, Length, Number, Pressure, Speed, Temperature, Torque);
+quantities!(Angle, Force, Length, Number, Pressure, Speed, Temperature, Time, Torque, Volume);
 
 impl Leaf for quantity::NumberRange {
     type Value = (f64, f64);

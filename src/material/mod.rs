@@ -106,6 +106,11 @@ pub struct Material {
     pub expansion: Expansion,
     /// Strengths by section, smallest section first; at least one.
     pub strength: Vec<Strength>,
+    /// Compressive strength of a brittle material, Pa.
+    pub compressive_strength: Option<Sourced<f64>>,
+    /// Stress that a polymer bears for its life, Pa; where it is known, it stands in the rows of `strength` in place of
+    /// a greater yield strength.
+    pub long_term_strength: Option<Sourced<f64>>,
     /// Thermal conductivity at room temperature, W/(m·K).
     pub conductivity: Option<Sourced<f64>>,
     /// Specific heat at room temperature, J/(kg·K).

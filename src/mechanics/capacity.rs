@@ -2,9 +2,15 @@
 
 use std::f64::consts::PI;
 
-/// Axial force at slip, N: F = μ p π d l.
+/// Axial force at slip, N.
 ///
-/// Pressure Pa, lengths m. Source: equilibrium; DIN 7190-1.
+/// F = μ p π d L
+///
+/// μ coefficient of friction along the joint, p mean contact pressure (Pa), d joint diameter (m), L joint length (m).
+///
+/// Holds for a pressure that is even along the joint, or its mean; slip of the whole seat at once. A long joint slips
+/// from its loaded edge, so length beyond about 1.5 d adds little (common practice, no source). Source:
+/// equilibrium; DIN 7190-1.
 ///
 /// # Example
 /// ```
@@ -15,9 +21,13 @@ pub fn axial(friction: f64, pressure: f64, diameter: f64, length: f64) -> f64 {
     friction * pressure * PI * diameter * length
 }
 
-/// Torque at slip, N·m: T = μ p π d² l/2.
+/// Torque at slip, N·m.
 ///
-/// Pressure Pa, lengths m. Source: equilibrium; DIN 7190-1.
+/// T = μ p π d² L/2
+///
+/// μ coefficient of friction round the joint, p mean contact pressure (Pa), d joint diameter (m), L joint length (m).
+///
+/// Validity and source as [`axial`].
 ///
 /// # Example
 /// ```
@@ -28,10 +38,15 @@ pub fn torque(friction: f64, pressure: f64, diameter: f64, length: f64) -> f64 {
     axial(friction, pressure, diameter, length) * diameter / 2.0
 }
 
-/// Safety against slip under torque and axial force together: 1/S = √((T/T_cap)² + (F/F_cap)²).
+/// Safety against slip under torque and axial force together.
 ///
-/// Zero when a load meets no capacity; infinite without load. Source: F. G. Kollmann,
-/// *Welle-Nabe-Verbindungen* (1984): the friction force acts along the resultant.
+/// 1/S = √( (T/T_c)² + (F/F_c)² )
+///
+/// S safety, T, F torque (N·m) and axial force (N) that act, T_c, F_c those at slip, each alone.
+///
+/// Zero when a load meets no capacity; infinite without load. The friction acts against the resultant of both loads;
+/// with one coefficient round and along the joint that is √(F² + (2T/d)²) against μ p π d L. Bending does not lower
+/// it while the edge does not gap ([`super::bending`]). Source: F. G. Kollmann, *Welle-Nabe-Verbindungen* (1984).
 ///
 /// # Example
 /// ```

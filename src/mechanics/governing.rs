@@ -2,6 +2,7 @@
 
 use super::criteria;
 use super::error::MechanicsError;
+use super::ring::{RingLoad, Stress, check};
 use super::stack::{Stack, StackSolution};
 
 /// A pressure or a stress of a stack.
@@ -24,7 +25,7 @@ pub enum StackQuantity {
 }
 
 /// A stress, or an equivalent of the stresses, at a place.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+#[derive(Debug, Clone, Copy, PartialEq)]
 pub enum StressMeasure {
     /// Radial stress.
     Radial,
@@ -36,6 +37,11 @@ pub enum StressMeasure {
     Tresca,
     /// [`criteria::greatest_principal`].
     GreatestPrincipal,
+    /// [`criteria::brittle`].
+    Brittle {
+        /// Tensile over compressive strength; zero leaves compression out.
+        tension_share: f64,
+    },
 }
 
 /// Which extreme of a quantity is wanted.
@@ -120,8 +126,8 @@ impl Stack {
         if closed.len() != influence.len() {
             return Err(self.no_such("interfaces of a solution", closed.len()));
         }
-        let adjoint = influence.solve_transposed(right, &closed);
-        Ok(adjoint.into_iter().map(|value| 0.5 * value).collect())
+        let adjoint = influence.solve_transposed(right.into(), &closed);
+        Ok((0.5 * adjoint).data.into())
     }
 
     /// The combination of loosest and tightest interferences that gives the extreme of a quantity.
@@ -189,8 +195,8 @@ impl Stack {
                 let load = self.ring_load(ring, solution)?;
                 let stress = self.rings[ring].stress_at(&load, radius)?;
                 let (by_radial, by_hoop) = measure.slopes(stress.radial, stress.hoop);
-                for (interface, (radial, hoop)) in self.unit_stresses(ring, radius)? {
-                    slopes[interface] = by_radial * radial + by_hoop * hoop;
+                for (interface, unit) in self.unit_stresses(ring, radius)? {
+                    slopes[interface] = by_radial * unit.radial + by_hoop * unit.hoop;
                 }
             }
         }
@@ -198,18 +204,16 @@ impl Stack {
     }
 
     /// Stress at a place of a ring under a unit pressure at each of its interfaces.
-    fn unit_stresses(&self, ring: usize, radius: f64) -> Result<Vec<(usize, (f64, f64))>, MechanicsError> {
+    fn unit_stresses(&self, ring: usize, radius: f64) -> Result<Vec<(usize, Stress)>, MechanicsError> {
         let section = &self.rings[ring];
-        let mut stresses = Vec::new();
+        let mut stresses = Vec::with_capacity(2);
         if ring > 0 {
-            let inner = super::ring::RingLoad { inner_pressure: 1.0, ..Default::default() };
-            let stress = section.stress_at(&inner, radius)?;
-            stresses.push((ring - 1, (stress.radial, stress.hoop)));
+            let inner = RingLoad { inner_pressure: 1.0, ..RingLoad::default() };
+            stresses.push((ring - 1, section.stress_at(&inner, radius)?));
         }
         if ring < self.interference.len() {
-            let outer = super::ring::RingLoad { outer_pressure: 1.0, ..Default::default() };
-            let stress = section.stress_at(&outer, radius)?;
-            stresses.push((ring, (stress.radial, stress.hoop)));
+            let outer = RingLoad { outer_pressure: 1.0, ..RingLoad::default() };
+            stresses.push((ring, section.stress_at(&outer, radius)?));
         }
         Ok(stresses)
     }
@@ -221,7 +225,7 @@ impl Stack {
             }
         }
         for (loose, tight) in loosest.iter().zip(tightest) {
-            super::ring::check("loosest interference (m)", *loose, "at most the tightest", loose <= tight)?;
+            check("loosest interference (m)", *loose, "at most the tightest", loose <= tight)?;
         }
         Ok(())
     }
@@ -313,6 +317,7 @@ impl StressMeasure {
             Self::VonMises => criteria::von_mises(radial, hoop),
             Self::Tresca => criteria::tresca(radial, hoop),
             Self::GreatestPrincipal => criteria::greatest_principal(radial, hoop),
+            Self::Brittle { tension_share } => criteria::brittle(radial, hoop, tension_share),
         }
     }
 
@@ -346,6 +351,16 @@ impl StressMeasure {
             Self::GreatestPrincipal if radial.max(hoop) <= 0.0 => (0.0, 0.0),
             Self::GreatestPrincipal if hoop >= radial => (0.0, 1.0),
             Self::GreatestPrincipal => (1.0, 0.0),
+            Self::Brittle { tension_share } => {
+                let least = radial.min(hoop);
+                if criteria::greatest_principal(radial, hoop) >= -least * tension_share {
+                    Self::GreatestPrincipal.slopes(radial, hoop)
+                } else if hoop <= radial {
+                    (0.0, -tension_share)
+                } else {
+                    (-tension_share, 0.0)
+                }
+            }
         }
     }
 }

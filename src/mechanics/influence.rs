@@ -1,4 +1,9 @@
 //! Gaps of a stack by its pressures: the influence matrix, and elimination along it.
+//!
+//! The three diagonals are vectors of [`nalgebra`]; its dense solvers would take the cube of the number of rings where
+//! elimination along the diagonals takes as many steps as there are rings.
+
+use nalgebra::DVector;
 
 use super::error::MechanicsError;
 use super::ring::RingLoad;
@@ -19,19 +24,19 @@ use super::stack::Stack;
 #[derive(Debug, Clone, PartialEq)]
 pub struct Influence {
     /// M(k, k), m/Pa.
-    pub diagonal: Vec<f64>,
+    pub diagonal: DVector<f64>,
     /// M(k, k − 1), m/Pa; the first is zero.
-    pub lower: Vec<f64>,
+    pub lower: DVector<f64>,
     /// M(k, k + 1), m/Pa; the last is zero.
-    pub upper: Vec<f64>,
+    pub upper: DVector<f64>,
     /// q, m.
-    pub free_gaps: Vec<f64>,
+    pub free_gaps: DVector<f64>,
 }
 
 impl Influence {
     pub(super) fn of(stack: &Stack) -> Result<Self, MechanicsError> {
         let count = stack.interference.len();
-        let zeros = || vec![0.0; count];
+        let zeros = || DVector::zeros(count);
         let mut influence = Self { diagonal: zeros(), lower: zeros(), upper: zeros(), free_gaps: zeros() };
         let inner_unit = RingLoad { inner_pressure: 1.0, ..RingLoad::default() };
         let outer_unit = RingLoad { outer_pressure: 1.0, ..RingLoad::default() };
@@ -64,45 +69,49 @@ impl Influence {
     }
 
     /// Radial gaps under these pressures, m.
-    pub fn gaps(&self, pressures: &[f64]) -> Vec<f64> {
+    pub fn gaps(&self, pressures: &DVector<f64>) -> DVector<f64> {
         self.gaps_from(&self.free_gaps, pressures)
     }
 
     /// M p + `free_gaps`, for other free gaps than the stack's own.
-    pub(super) fn gaps_from(&self, free_gaps: &[f64], pressures: &[f64]) -> Vec<f64> {
-        let pressure = |k: usize| pressures.get(k).copied().unwrap_or(0.0);
-        let own = self.diagonal.iter().zip(&self.lower).zip(&self.upper).zip(free_gaps).enumerate();
-        own.map(|(k, (((diagonal, lower), upper), free_gap))| {
-            let before = if k > 0 { lower * pressure(k - 1) } else { 0.0 };
-            diagonal * pressure(k) + before + upper * pressure(k + 1) + free_gap
-        })
-        .collect()
+    pub(super) fn gaps_from(&self, free_gaps: &DVector<f64>, pressures: &DVector<f64>) -> DVector<f64> {
+        let mut gaps = free_gaps + self.diagonal.component_mul(pressures);
+        for k in 1..self.len() {
+            gaps[k] += self.lower[k] * pressures[k - 1];
+            gaps[k - 1] += self.upper[k - 1] * pressures[k];
+        }
+        gaps
     }
 
     /// Pressures that close these interfaces, the others being without pressure.
-    pub(super) fn closing_pressures(&self, closed: &[bool]) -> Vec<f64> {
+    pub(super) fn closing_pressures(&self, closed: &[bool]) -> DVector<f64> {
         self.closing_pressures_from(&self.free_gaps, closed)
     }
 
     /// Pressures that take back `free_gaps` at these interfaces, the others being without pressure.
-    pub(super) fn closing_pressures_from(&self, free_gaps: &[f64], closed: &[bool]) -> Vec<f64> {
-        let right = free_gaps.iter().map(|gap| -gap).collect();
-        eliminate(&self.lower, &self.diagonal, &self.upper, right, closed)
+    pub(super) fn closing_pressures_from(&self, free_gaps: &DVector<f64>, closed: &[bool]) -> DVector<f64> {
+        eliminate(&self.lower, &self.diagonal, &self.upper, -free_gaps, closed)
     }
 
     /// x with Mᵀ x = `right` over the closed interfaces, zero at the others.
-    pub(super) fn solve_transposed(&self, right: Vec<f64>, closed: &[bool]) -> Vec<f64> {
+    pub(super) fn solve_transposed(&self, right: DVector<f64>, closed: &[bool]) -> DVector<f64> {
         let count = self.len();
-        let lower: Vec<f64> = (0..count).map(|k| if k > 0 { self.upper[k - 1] } else { 0.0 }).collect();
-        let upper: Vec<f64> = (0..count).map(|k| self.lower.get(k + 1).copied().unwrap_or(0.0)).collect();
+        let lower = DVector::from_fn(count, |k, _| if k > 0 { self.upper[k - 1] } else { 0.0 });
+        let upper = DVector::from_fn(count, |k, _| if k + 1 < count { self.lower[k + 1] } else { 0.0 });
         eliminate(&lower, &self.diagonal, &upper, right, closed)
     }
 }
 
 /// Gaussian elimination of a tridiagonal system over the closed interfaces; the unknown is zero at the others.
-fn eliminate(lower: &[f64], diagonal: &[f64], upper: &[f64], right: Vec<f64>, closed: &[bool]) -> Vec<f64> {
+fn eliminate(
+    lower: &DVector<f64>,
+    diagonal: &DVector<f64>,
+    upper: &DVector<f64>,
+    right: DVector<f64>,
+    closed: &[bool],
+) -> DVector<f64> {
     let count = closed.len();
-    let (mut pivot, mut right) = (diagonal.to_vec(), right);
+    let (mut pivot, mut right) = (diagonal.clone(), right);
     for k in 1..count {
         if closed[k] && closed[k - 1] {
             let factor = lower[k] / pivot[k - 1];
@@ -110,7 +119,7 @@ fn eliminate(lower: &[f64], diagonal: &[f64], upper: &[f64], right: Vec<f64>, cl
             right[k] -= factor * right[k - 1];
         }
     }
-    let mut solution = vec![0.0; count];
+    let mut solution = DVector::zeros(count);
     for k in (0..count).rev().filter(|k| closed[*k]) {
         let next = if k + 1 < count { upper[k] * solution[k + 1] } else { 0.0 };
         solution[k] = (right[k] - next) / pivot[k];

@@ -11,11 +11,13 @@
 //! | [`criteria`], [`capacity`] | strength criteria; torque and axial force at slip |
 //! | [`slices`] | a stepped hub or shaft, disc by disc |
 //! | [`bending`] | bending moment and radial force |
+//! | [`buckling`] | a thin liner pressed inwards |
 //! | [`finite_length`], [`notch`] | what the edges add: mean and edge pressure, fatigue |
 //!
 //! All numbers are SI (m, Pa, N, N·m, rad/s, K). Interference is diametral. Plane stress, σz = 0.
 
 pub mod bending;
+pub mod buckling;
 pub mod capacity;
 pub mod criteria;
 mod error;

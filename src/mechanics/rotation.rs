@@ -1,5 +1,7 @@
 //! The speed at which an interface loosens.
 
+use nalgebra::DVector;
+
 use super::error::MechanicsError;
 use super::influence::Influence;
 use super::ring::{RingLoad, RingSection, check};
@@ -103,7 +105,7 @@ impl Stack {
 /// Free gaps q + s d that grow with s from zero.
 struct Path {
     influence: Influence,
-    direction: Vec<f64>,
+    direction: DVector<f64>,
 }
 
 impl Path {

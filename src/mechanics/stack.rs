@@ -1,5 +1,7 @@
 //! A stack of rings: all interface pressures from one tridiagonal system, with interfaces that may open.
 
+use nalgebra::DVector;
+
 use super::error::MechanicsError;
 use super::influence::Influence;
 use super::ring::{RingLoad, RingSection, check};
@@ -72,10 +74,11 @@ impl Stack {
         let count = influence.len();
         let pressures = influence.closing_pressures(&vec![true; count]);
         if pressures.iter().all(|pressure| *pressure >= 0.0) {
+            let pressures = pressures.data.into();
             return Ok(StackSolution { pressures, gaps: vec![0.0; count], open: vec![false; count] });
         }
         let mut closed = vec![false; count];
-        let mut pressures = vec![0.0; count];
+        let mut pressures = DVector::zeros(count);
         for _ in 0..=count {
             let gaps = influence.gaps(&pressures);
             let overlapping: Vec<usize> = (0..count).filter(|k| !closed[*k] && gaps[*k] < 0.0).collect();
@@ -87,6 +90,7 @@ impl Stack {
         }
         let gaps = influence.gaps(&pressures);
         let gaps = gaps.iter().zip(&closed).map(|(gap, closed)| if *closed { 0.0 } else { *gap }).collect();
+        let pressures = pressures.data.into();
         Ok(StackSolution { pressures, gaps, open: closed.iter().map(|closed| !closed).collect() })
     }
 

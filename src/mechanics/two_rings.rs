@@ -31,7 +31,7 @@ impl TwoRings {
     /// E Young's modulus (Pa), ν Poisson's ratio.
     ///
     /// Holds for elastic rings at rest and at one temperature, in plane stress, of nominal size (error of the
-    /// order δ/d), long enough that the edges do not count.
+    /// order δ/d), long enough that the edges do not count (see [`super::finite_length`]).
     ///
     /// Source: G. Lamé; Timoshenko & Goodier, *Theory of Elasticity*, 3rd ed., § 28.
     ///

@@ -43,6 +43,9 @@ pub enum KernelError {
     /// Its hub may yield by design.
     #[error("a joint whose hub may yield by design is not a plain joint: it must be elastic")]
     MayYield,
+    /// The pressure of a state relaxes.
+    #[error("a joint whose pressure relaxes is not a plain joint: every state must keep all of it")]
+    Relaxes,
     /// A ring was refused by the ring formulas.
     #[error(transparent)]
     Mechanics(#[from] MechanicsError),
@@ -224,6 +227,9 @@ impl PlainJoint {
         }
         if joint.require.allow != Allow::Elastic {
             return Err(KernelError::MayYield);
+        }
+        if joint.duty.iter().any(|state| state.relaxation < 1.0) {
+            return Err(KernelError::Relaxes);
         }
         let shaft = PlainRing::inner(inner, joint.criterion)?;
         let hub = PlainRing::outer(outer, joint.criterion)?;

@@ -63,7 +63,19 @@ pub enum QuantityError {
         /// The text with a decimal point.
         meant: Option<String>,
     },
-    /// NaN, infinity or too large for a number.
+    /// A fraction of one or more, with zero below the line, or of another unit than inches and feet.
+    #[error("{given} is not a fraction of an inch or a foot")]
+    Fraction {
+        /// The text.
+        given: String,
+    },
+    /// A number so close to zero that a double cannot hold it.
+    #[error("{given} is too close to zero to be held")]
+    TooSmall {
+        /// The text.
+        given: String,
+    },
+    /// NaN, infinity or too great for a number.
     #[error("{given} is not a finite number; {} is due", .kind.phrase())]
     NotFinite {
         /// What is due.
@@ -106,6 +118,9 @@ impl QuantityError {
                 Some(format!("the units of {} are {}", kind.phrase(), kind.unit_names()))
             }
             Self::UnknownUnit { near: Some(near), .. } => Some(format!("did you mean {near}?")),
+            Self::WrongKind { found: Kind::Mass, kind: Kind::Force, .. } => {
+                Some("a force in pounds is written lbf".to_owned())
+            }
             Self::UnknownUnit { kind, .. } | Self::WrongKind { kind, .. } => {
                 Some(format!("the units of {} are {}", kind.phrase(), kind.unit_names()))
             }
@@ -114,6 +129,8 @@ impl QuantityError {
             Self::NotPlainDecimal { meant: None, .. } => {
                 Some("write the digits together, such as 1200.5".to_owned())
             }
+            Self::Fraction { .. } => Some("write 3/8 in or 2-3/16 in, else a decimal number".to_owned()),
+            Self::TooSmall { .. } => Some("write 0 if nothing is meant".to_owned()),
             Self::BelowAbsoluteZero { .. } => Some("temperatures are in degC, degF or K".to_owned()),
             Self::RangeOrder { .. } => Some("write the lesser value first, such as 0.08 to 0.14".to_owned()),
             Self::NotPlusMinus { .. } => Some("write ±10 um, +/- 10 um or +30 / -10 um".to_owned()),
@@ -126,4 +143,17 @@ fn with_units(kind: Kind) -> String {
         Kind::Number => String::new(),
         _ => format!(" with its unit ({})", kind.unit_names()),
     }
+}
+
+/// Longest part of a text that an error repeats, in characters.
+const SHOWN: usize = 60;
+
+/// A text as an error repeats it: trimmed, without control characters, not endless.
+pub(super) fn shown(text: &str) -> String {
+    let clean = text.trim().chars().map(|c| if c.is_control() { ' ' } else { c });
+    let mut shown: String = clean.clone().take(SHOWN).collect();
+    if clean.count() > SHOWN {
+        shown.push('…');
+    }
+    shown
 }

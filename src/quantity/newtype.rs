@@ -111,7 +111,7 @@ fn schema(kind: Kind, example: &str) -> Schema {
     json_schema!({
         "type": "string",
         "description": format!("{} with its unit: {}", kind.phrase(), kind.unit_names()),
-        "pattern": "^\\s*[-+]?[.0-9][-+.0-9eE/ ]*\\s*\\S.*$",
+        "pattern": "^\\s*[-+−]?\\s*\\.?[0-9][-+−.0-9eE/\\s]*[^-+−.0-9eE/\\s].*$",
         "examples": [example],
     })
 }

@@ -1,13 +1,16 @@
-//! Two quantities in one text: ranges, deviations, a value with its uncertainty.
+//! Ranges and deviations: two numbers from one text.
 
-use super::error::QuantityError;
-use super::read::{parse, shown, split};
+use super::error::{QuantityError, shown};
+use super::read::{parse, value};
+use super::scan::scan;
 use super::unit::Kind;
 
-/// A range such as `0.008 mm to 14 um` or `8 to 14 um`, or one value for both ends; (low, high) in SI.
+/// Both ends of a range, SI: `0.08 mm to 0.14 mm`, `8 to 14 um`, or one value for both ends.
+///
+/// One unit at the end serves both.
 ///
 /// # Errors
-/// A part that is not a quantity of the kind, or a range that runs downwards.
+/// As [`parse`] for each end, and when the greater end comes first.
 ///
 /// # Example
 /// ```
@@ -16,25 +19,18 @@ use super::unit::Kind;
 /// assert_eq!(parse_range(Kind::Length, "8 um"), Ok((8e-6, 8e-6)));
 /// ```
 pub fn parse_range(kind: Kind, text: &str) -> Result<(f64, f64), QuantityError> {
-    let Some((low, high)) = text.split_once(" to ") else {
-        let value = parse(kind, text)?;
-        return Ok((value, value));
+    let Some((low, high)) = split_at_to(text) else {
+        let both = parse(kind, text)?;
+        return Ok((both, both));
     };
-    let greatest = parse(kind, high)?;
-    let (_, _, own_unit) = split(kind, low)?;
-    let least = if own_unit.is_empty() && kind != Kind::Number {
-        let (_, _, unit) = split(kind, high)?;
-        parse(kind, &format!("{} {unit}", low.trim()))?
-    } else {
-        parse(kind, low)?
-    };
-    if least > greatest {
+    let (low, high) = pair(kind, low, high)?;
+    if low > high {
         return Err(QuantityError::RangeOrder { given: shown(text) });
     }
-    Ok((least, greatest))
+    Ok((low, high))
 }
 
-/// A range of pure numbers such as `0.08 to 0.14`, or one number for both ends.
+/// Both ends of a range of plain numbers: `0.08 to 0.14`, or one number for both.
 ///
 /// # Errors
 /// As [`parse_range`].
@@ -42,10 +38,12 @@ pub fn parse_number_range(text: &str) -> Result<(f64, f64), QuantityError> {
     parse_range(Kind::Number, text)
 }
 
-/// Deviations such as `±10 um`, `+/- 10 um` or `+30 / -10 um`; (lower, upper) in SI.
+/// Lower and upper deviation, SI: `±10 um`, `+-10 um`, `+/- 10 um`, `+30 / -10 um`.
+///
+/// Of two deviations each carries its sign; the unit at the end serves both, and either may come first.
 ///
 /// # Errors
-/// A text of another form, or parts that are not quantities of the kind.
+/// As [`parse`], and when the text is a single deviation one way.
 ///
 /// # Example
 /// ```
@@ -54,56 +52,73 @@ pub fn parse_number_range(text: &str) -> Result<(f64, f64), QuantityError> {
 /// assert_eq!(parse_plus_minus(Kind::Length, "+30 / -10 um"), Ok((-10e-6, 30e-6)));
 /// ```
 pub fn parse_plus_minus(kind: Kind, text: &str) -> Result<(f64, f64), QuantityError> {
-    let trimmed = text.trim();
-    for sign in ["±", "+/-", "+-"] {
-        if let Some(width) = trimmed.strip_prefix(sign) {
-            let width = parse(kind, width)?;
-            return if width < 0.0 {
-                Err(QuantityError::NotPlusMinus { given: shown(text) })
-            } else {
-                Ok((-width, width))
-            };
-        }
+    let text = text.trim();
+    if let Some(size) = PLUS_MINUS.iter().find_map(|sign| text.strip_prefix(sign)) {
+        let size = unsigned(kind, size, text)?;
+        return Ok((-size, size));
     }
-    let parts = trimmed.strip_prefix('+').and_then(|rest| rest.split_once('/'));
-    let Some((upper, lower)) = parts.map(|(upper, lower)| (upper.trim(), lower.trim())) else {
+    let Some((first, second)) = split_at_stroke(text) else {
         return Err(QuantityError::NotPlusMinus { given: shown(text) });
     };
-    if !lower.starts_with('-') {
-        return Err(QuantityError::NotPlusMinus { given: shown(text) });
-    }
-    let (_, _, unit) = split(kind, lower)?;
-    let (_, _, own_unit) = split(kind, upper)?;
-    let upper =
-        if own_unit.is_empty() { parse(kind, &format!("{upper} {unit}"))? } else { parse(kind, upper)? };
-    Ok((parse(kind, lower)?, upper))
+    let (first, second) = pair(kind, first, second)?;
+    Ok((first.min(second), first.max(second)))
 }
 
-/// A value with its uncertainty such as `60.012 mm ± 2 um`; (value, uncertainty) in SI, zero when none is given.
+/// A value and its uncertainty both ways, SI: `60 mm ± 5 um`, `60.012 ± 0.002 mm`.
+///
+/// Without ± the uncertainty is zero: none was stated. The uncertainty of a temperature is a difference.
 ///
 /// # Errors
-/// Parts that are not quantities of the kind, or an uncertainty below zero.
+/// As [`parse`] for each of the two.
 ///
 /// # Example
 /// ```
 /// use hubgrip::quantity::{Kind, parse_with_uncertainty};
-/// assert_eq!(parse_with_uncertainty(Kind::Length, "60.012 mm ± 2 um"), Ok((0.060012, 2e-6)));
+/// assert_eq!(parse_with_uncertainty(Kind::Length, "60 mm ± 5 um"), Ok((0.06, 5e-6)));
 /// ```
 pub fn parse_with_uncertainty(kind: Kind, text: &str) -> Result<(f64, f64), QuantityError> {
-    let Some((value, width)) = ["±", "+/-", "+-"].iter().find_map(|sign| text.split_once(sign)) else {
-        return Ok((parse(kind, text)?, 0.0));
-    };
-    let (_, _, own_unit) = split(kind, value)?;
-    let (_, _, unit) = split(kind, width)?;
-    let value = if own_unit.is_empty() {
-        parse(kind, &format!("{} {unit}", value.trim()))?
-    } else {
-        parse(kind, value)?
-    };
-    let difference = if kind == Kind::Temperature { Kind::TemperatureDifference } else { kind };
-    let width = parse(difference, width)?;
-    if width < 0.0 {
-        return Err(QuantityError::NotPlusMinus { given: shown(text) });
+    let text = text.trim();
+    let split = PLUS_MINUS.iter().find_map(|sign| text.split_once(sign));
+    let Some((value_text, size_text)) = split else { return Ok((parse(kind, text)?, 0.0)) };
+    let size_kind = if kind == Kind::Temperature { Kind::TemperatureDifference } else { kind };
+    let size = unsigned(size_kind, size_text, text)?;
+    let scanned = scan(kind, value_text)?;
+    let unit = if scanned.unit.is_empty() { scan(size_kind, size_text)?.unit } else { scanned.unit };
+    Ok((value(kind, &scanned, unit)?, size))
+}
+
+const PLUS_MINUS: [&str; 4] = ["±", "+/-", "+/−", "+-"];
+
+/// A size that carries no sign of its own.
+fn unsigned(kind: Kind, size: &str, whole: &str) -> Result<f64, QuantityError> {
+    if size.trim_start().starts_with(['+', '-', '−', '±']) {
+        return Err(QuantityError::NotPlusMinus { given: shown(whole) });
     }
-    Ok((value, width))
+    parse(kind, size)
+}
+
+/// Two quantities of which the first may take the unit of the second.
+fn pair(kind: Kind, first: &str, second: &str) -> Result<(f64, f64), QuantityError> {
+    let (first, second) = (scan(kind, first)?, scan(kind, second)?);
+    let unit = if first.unit.is_empty() { second.unit } else { first.unit };
+    Ok((value(kind, &first, unit)?, value(kind, &second, second.unit)?))
+}
+
+/// What stands before and after the first word `to`.
+fn split_at_to(text: &str) -> Option<(&str, &str)> {
+    text.match_indices("to").find_map(|(at, word)| {
+        let (before, after) = (&text[..at], &text[at + word.len()..]);
+        let alone = before.ends_with(char::is_whitespace) && after.starts_with(char::is_whitespace);
+        alone.then_some((before, after))
+    })
+}
+
+/// Two signed deviations parted by a stroke, such as `+30 / -10 um`.
+fn split_at_stroke(text: &str) -> Option<(&str, &str)> {
+    let signed = |text: &str| text.trim_start().starts_with(['+', '-', '−', '0']);
+    text.match_indices('/').find_map(|(at, stroke)| {
+        let (first, second) = (&text[..at], &text[at + stroke.len()..]);
+        let parted = signed(first) && signed(second) && !first.trim().is_empty();
+        parted.then_some((first, second))
+    })
 }

@@ -1,115 +1,114 @@
-//! Text to SI number.
+//! One quantity from its text.
 
-use super::error::QuantityError;
-use super::scan::{self, Scan, Written};
-use super::unit::{self, Kind, Scale, Unit};
+use std::f64::consts::TAU;
+
+use super::error::{QuantityError, shown};
+use super::scan::{Amount, Scanned, scan};
+use super::unit::{Kind, Scale, Unit, find, plain_spelling};
 use crate::diagnostic::did_you_mean;
 
-/// Longest part of a text that an error repeats, in characters.
-const SHOWN: usize = 60;
-
-/// The SI number of a quantity written with its unit.
+/// The SI number of a text with its unit.
 ///
-/// Length in m, force in N, torque in N·m, pressure in Pa, temperature in K, speed in rad/s, mass in kg, time
-/// in s, angle in rad; the other kinds as [`Kind`] says.
+/// A decimal number, optionally with an exponent, then optional blanks, then the unit; a length in inches or feet
+/// may be a whole number and a fraction. The result is the closest representable number for units that are a
+/// power of ten of the SI unit, and within two units in the last place for the others.
 ///
 /// # Errors
-/// Any text that is not a number with a unit of the kind; the message names the units that are.
+/// Every text that is not such a quantity: see [`QuantityError`].
 ///
 /// # Example
 /// ```
 /// use hubgrip::quantity::{Kind, parse};
-/// assert_eq!(parse(Kind::Temperature, "20 degC"), Ok(293.15));
-/// assert_eq!(parse(Kind::Length, "1.5 in"), Ok(0.0381));
-/// assert!(parse(Kind::Length, "60 MPa").unwrap_err().to_string().contains("a length is due"));
+/// assert_eq!(parse(Kind::Length, "60 mm"), Ok(0.06));
+/// assert_eq!(parse(Kind::Temperature, "68 degF"), Ok(293.15));
+/// assert!(parse(Kind::Length, "60 MPa").is_err());
 /// ```
 pub fn parse(kind: Kind, text: &str) -> Result<f64, QuantityError> {
-    let (written, number, unit_text) = split(kind, text)?;
-    if kind == Kind::Number {
-        return if unit_text.is_empty() {
-            finite(kind, text, written.times_ten_to(0))
-        } else {
-            Err(QuantityError::UnitNotDue { given: shown(text) })
-        };
-    }
-    if unit_text.is_empty() {
-        return Err(QuantityError::NoUnit { kind, given: shown(number) });
-    }
-    let unit = find_unit(kind, text, unit_text)?;
-    value(kind, text, &written, unit)
+    let scanned = scan(kind, text)?;
+    value(kind, &scanned, scanned.unit)
 }
 
-/// A pure number.
+/// A plain number, without a unit.
 ///
 /// # Errors
-/// Anything else, a unit behind the number, NaN and infinity.
+/// As [`parse`]; a unit is one of them.
 pub fn parse_number(text: &str) -> Result<f64, QuantityError> {
     parse(Kind::Number, text)
 }
 
-/// The number, its text, and the text of the unit.
-pub(super) fn split(kind: Kind, text: &str) -> Result<(Written, &str, &str), QuantityError> {
-    if text.trim().is_empty() {
-        return Err(QuantityError::Empty { kind });
+/// The SI number of a text taken apart, with the unit it is given in.
+pub(super) fn value(kind: Kind, scanned: &Scanned<'_>, unit: &str) -> Result<f64, QuantityError> {
+    let given = || shown(scanned.text);
+    let si = if kind == Kind::Number {
+        if !unit.is_empty() {
+            return Err(QuantityError::UnitNotDue { given: given() });
+        }
+        decimal(kind, scanned, Scale::PowerOfTen(0))?
+    } else {
+        in_unit(scanned, unit_of(kind, scanned.text, unit)?)?
+    };
+    if kind == Kind::Temperature && si < 0.0 {
+        return Err(QuantityError::BelowAbsoluteZero { given: given() });
     }
-    match scan::number(text) {
-        Scan::Found(written, number, unit) => Ok((written, number, unit)),
-        Scan::Grouped(given, meant) => Err(QuantityError::NotPlainDecimal {
-            given: shown(&given),
-            meant: meant.map(|meant| shown(&meant)),
-        }),
-        Scan::NotFinite => Err(QuantityError::NotFinite { kind, given: shown(text) }),
-        Scan::Missing => Err(QuantityError::NoNumber { kind, given: shown(text) }),
-    }
+    Ok(if si == 0.0 { 0.0 } else { si })
 }
 
-/// The unit of a kind, or what the spelling is instead.
-pub(super) fn find_unit(kind: Kind, text: &str, unit_text: &str) -> Result<&'static Unit, QuantityError> {
-    let spelling = unit::plain_spelling(unit_text);
-    if let Some(unit) = unit::find(kind, &spelling) {
+fn unit_of(kind: Kind, text: &str, spelling: &str) -> Result<&'static Unit, QuantityError> {
+    if spelling.is_empty() {
+        return Err(QuantityError::NoUnit { kind, given: shown(text) });
+    }
+    let plain = plain_spelling(spelling);
+    if let Some(unit) = find(kind, &plain) {
         return Ok(unit);
     }
-    let other = Kind::ALL.into_iter().find(|other| unit::find(*other, &spelling).is_some());
-    Err(match other {
-        Some(found) => QuantityError::WrongKind { kind, given: shown(text), found },
-        None => {
-            let near = did_you_mean(&spelling, kind.units().map(|unit| unit.name));
-            QuantityError::UnknownUnit { kind, unit: shown(unit_text), near }
-        }
-    })
+    if let Some(found) = Kind::ALL.into_iter().find(|other| find(*other, &plain).is_some()) {
+        return Err(QuantityError::WrongKind { kind, given: shown(text), found });
+    }
+    let near = did_you_mean(&plain, kind.units().flat_map(|unit| unit.spellings()));
+    Err(QuantityError::UnknownUnit { kind, unit: shown(spelling), near })
 }
 
-/// The SI number of a number in a unit.
-pub(super) fn value(kind: Kind, text: &str, written: &Written, unit: &Unit) -> Result<f64, QuantityError> {
-    let si = match unit.scale {
-        Scale::PowerOfTen(power) => written.times_ten_to(power),
-        Scale::Ratio(numerator, denominator) => written.times_ratio(numerator, denominator),
-        Scale::Turn(parts) => written.times_ten_to(0) * (2.0 * std::f64::consts::PI) / parts,
+fn in_unit(scanned: &Scanned<'_>, unit: &Unit) -> Result<f64, QuantityError> {
+    match (scanned.amount, unit.scale) {
+        (Amount::Decimal { .. }, scale) => decimal(unit.kind, scanned, scale),
+        (Amount::Fraction { negative, whole, numerator, denominator }, Scale::Ratio(up, down))
+            if matches!(unit.name, "in" | "ft") =>
+        {
+            let (whole, numerator, denominator) =
+                (f64::from(whole), f64::from(numerator), f64::from(denominator));
+            let size = (whole * denominator + numerator) * up / (denominator * down);
+            Ok(if negative { -size } else { size })
+        }
+        _ => Err(QuantityError::Fraction { given: shown(scanned.text) }),
+    }
+}
+
+fn decimal(kind: Kind, scanned: &Scanned<'_>, scale: Scale) -> Result<f64, QuantityError> {
+    let Amount::Decimal { negative, digits, exponent } = scanned.amount else {
+        return Err(QuantityError::Fraction { given: shown(scanned.text) });
+    };
+    let shift = match scale {
+        Scale::PowerOfTen(shift) => i64::from(shift),
+        Scale::Shifted { .. } => 2,
+        Scale::Ratio(..) | Scale::Turn(_) => 0,
+    };
+    let number: f64 = format!("{digits}e{}", exponent + shift).parse().unwrap_or(f64::NAN);
+    let number = if negative { -number } else { number };
+    let si = match scale {
+        Scale::PowerOfTen(_) => number,
+        Scale::Ratio(numerator, denominator) => number * numerator / denominator,
+        Scale::Turn(parts) => number * TAU / parts,
         Scale::Shifted { zero_hundredths, numerator, denominator } => {
-            (written.times_ten_to(2) + zero_hundredths) * numerator / (100.0 * denominator)
+            (number + zero_hundredths) * numerator / (100.0 * denominator)
         }
     };
-    let si = finite(kind, text, si)?;
-    if kind == Kind::Temperature && si < 0.0 {
-        return Err(QuantityError::BelowAbsoluteZero { given: shown(text) });
+    if !si.is_finite() {
+        return Err(QuantityError::NotFinite { kind, given: shown(scanned.text) });
+    }
+    let is_zero = !digits.contains(|c: char| ('1'..='9').contains(&c));
+    let vanished = number == 0.0 || si == 0.0 && !matches!(scale, Scale::Shifted { .. });
+    if vanished && !is_zero {
+        return Err(QuantityError::TooSmall { given: shown(scanned.text) });
     }
     Ok(si)
-}
-
-fn finite(kind: Kind, text: &str, value: f64) -> Result<f64, QuantityError> {
-    if value.is_finite() {
-        Ok(value + 0.0)
-    } else {
-        Err(QuantityError::NotFinite { kind, given: shown(text) })
-    }
-}
-
-/// A text as an error repeats it: trimmed, without control characters, not endless.
-pub(super) fn shown(text: &str) -> String {
-    let clean = text.trim().chars().map(|c| if c.is_control() { ' ' } else { c });
-    let mut shown: String = clean.clone().take(SHOWN).collect();
-    if clean.count() > SHOWN {
-        shown.push('…');
-    }
-    shown
 }

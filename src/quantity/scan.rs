@@ -1,181 +1,164 @@
-//! The number at the start of a text, digit by digit.
+//! A text taken apart into its number and its unit.
 
-/// A number as written, before its unit is known.
-#[derive(Debug, Clone, PartialEq)]
-pub(super) enum Written {
-    /// Sign, digits with an optional point, and power of ten.
-    Decimal {
-        /// Mantissa as text that Rust reads, such as `-1.5`.
-        mantissa: String,
-        /// Power of ten.
-        exponent: i32,
-    },
-    /// Whole part and fraction, such as 2-3/16.
-    Fraction {
-        /// The value times the denominator.
-        numerator: f64,
-        /// The denominator, not zero.
-        denominator: f64,
-    },
+use super::error::{QuantityError, shown};
+use super::unit::Kind;
+
+/// The number of a quantity as written.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub(super) enum Amount<'a> {
+    /// Digits with at most one point, times a power of ten.
+    Decimal { negative: bool, digits: &'a str, exponent: i64 },
+    /// Whole and numerator over denominator.
+    Fraction { negative: bool, whole: u32, numerator: u32, denominator: u32 },
 }
 
-impl Written {
-    /// The number times a power of ten; exact for decimals as far as a double goes.
-    pub(super) fn times_ten_to(&self, power: i32) -> f64 {
-        match self {
-            Self::Decimal { mantissa, exponent } => {
-                format!("{mantissa}e{}", exponent.saturating_add(power)).parse().unwrap_or(f64::NAN)
-            }
-            Self::Fraction { numerator, denominator } if power >= 0 => {
-                numerator * 10f64.powi(power) / denominator
-            }
-            Self::Fraction { numerator, denominator } => numerator / (denominator * 10f64.powi(-power)),
-        }
-    }
-
-    /// The number times one number and divided by another, rounded once where it can be.
-    pub(super) fn times_ratio(&self, numerator: f64, denominator: f64) -> f64 {
-        match self {
-            Self::Decimal { .. } => self.times_ten_to(0) * numerator / denominator,
-            Self::Fraction { numerator: top, denominator: bottom } => {
-                top * numerator / (bottom * denominator)
-            }
-        }
-    }
+/// A number and the unit that follows it, which may be empty.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub(super) struct Scanned<'a> {
+    /// The whole text, without blanks around it.
+    pub text: &'a str,
+    /// The number.
+    pub amount: Amount<'a>,
+    /// The unit as written, without blanks around it.
+    pub unit: &'a str,
 }
 
-/// A number and what stands behind it, or why there is none.
-#[derive(Debug, Clone, PartialEq)]
-pub(super) enum Scan<'a> {
-    /// The number, its text, and the rest with blanks trimmed.
-    Found(Written, &'a str, &'a str),
-    /// Digits with a comma, blank or underscore among them: the whole text so far, and with a decimal point.
-    Grouped(String, Option<String>),
-    /// NaN or infinity.
-    NotFinite,
-    /// No number.
-    Missing,
-}
-
-/// Reads the number at the start of a text.
-pub(super) fn number(text: &str) -> Scan<'_> {
+/// Takes a text apart; `due` is for the error.
+pub(super) fn scan(due: Kind, text: &str) -> Result<Scanned<'_>, QuantityError> {
     let text = text.trim();
-    let lower = text.trim_start_matches(['+', '-', '.']).to_ascii_lowercase();
-    if ["nan", "inf"].iter().any(|word| lower.starts_with(word)) {
-        return Scan::NotFinite;
+    if text.is_empty() {
+        return Err(QuantityError::Empty { kind: due });
     }
-    let unsigned = text.strip_prefix(['+', '-']).unwrap_or(text);
-    let sign_length = text.len() - unsigned.len();
-    let digits = decimal_length(unsigned);
-    if digits == 0 {
-        return Scan::Missing;
+    let (negative, unsigned) = sign(text);
+    let (digits, rest) = split_digits(unsigned);
+    if !digits.contains(|c: char| c.is_ascii_digit()) {
+        return Err(no_number(due, text));
     }
-    let negative = text.starts_with('-');
-    if let Some((length, written)) = fraction(unsigned, negative) {
-        let end = sign_length + length;
-        return Scan::Found(written, &text[..end], text[end..].trim_start());
+    if let Some((amount, rest)) = fraction(text, negative, digits, rest)? {
+        check_end(text, rest)?;
+        return Ok(Scanned { text, amount, unit: rest.trim() });
     }
-    let rest = &unsigned[digits..];
-    if let Some(scan) = grouped(text, sign_length + digits, rest) {
-        return scan;
-    }
-    let (exponent_length, exponent) = exponent(rest);
-    let end = sign_length + digits + exponent_length;
-    let sign = if negative { "-" } else { "" };
-    let mantissa = format!("{sign}{}", &unsigned[..digits]);
-    Scan::Found(Written::Decimal { mantissa, exponent }, &text[..end], text[end..].trim_start())
+    let (exponent, rest) = split_exponent(rest);
+    check_end(text, rest)?;
+    Ok(Scanned { text, amount: Amount::Decimal { negative, digits, exponent }, unit: rest.trim() })
 }
 
-/// Length of digits with at most one point; zero when there is no digit.
-fn decimal_length(text: &str) -> usize {
-    let mut point = false;
-    let mut has_digit = false;
-    let mut length = 0;
-    for (index, character) in text.char_indices() {
-        match character {
-            '0'..='9' => has_digit = true,
-            '.' if !point && text[index + 1..].starts_with(|next: char| next.is_ascii_digit()) => {
-                point = true
-            }
-            '.' if !point && has_digit => {
-                // A point at the end, as in `60. mm`, belongs to the number unless a letter follows it.
-                let follows = text[index + 1..].chars().next();
-                if follows.is_some_and(|next| !next.is_whitespace()) {
-                    break;
-                }
-                point = true;
-            }
-            _ => break,
-        }
-        length = index + 1;
+/// Whether a minus sign leads, and what follows the sign.
+fn sign(text: &str) -> (bool, &str) {
+    if let Some(rest) = text.strip_prefix(['-', '−']) {
+        return (true, rest.trim_start());
     }
-    if has_digit { length } else { 0 }
+    (false, text.strip_prefix('+').map_or(text, str::trim_start))
 }
 
-/// A comma, underscore or hexadecimal mark behind the digits.
-fn grouped<'a>(text: &'a str, end: usize, rest: &'a str) -> Option<Scan<'a>> {
-    let mut following = rest.chars();
-    let mark = following.next()?;
-    let after = following.next();
-    let digit_after = after.is_some_and(|next| next.is_ascii_digit());
-    let mantissa = &text[..end];
-    match mark {
-        ',' if digit_after => {
-            let meant = (!mantissa.contains('.')).then(|| text.replacen(',', ".", 1));
-            Some(Scan::Grouped(text.to_owned(), meant))
-        }
-        '_' | '\'' if digit_after => Some(Scan::Grouped(text.to_owned(), None)),
-        'x' | 'X' if mantissa.trim_start_matches(['+', '-']) == "0" => {
-            Some(Scan::Grouped(text.to_owned(), None))
-        }
-        '.' if digit_after => Some(Scan::Grouped(text.to_owned(), None)),
-        ' ' if digit_after => Some(Scan::Grouped(text.to_owned(), None)),
-        _ => None,
-    }
-}
-
-/// Length and value of an exponent such as `e-3`; an `e` without digits is no exponent.
-fn exponent(rest: &str) -> (usize, i32) {
-    let Some(tail) = rest.strip_prefix(['e', 'E']) else { return (0, 0) };
-    let unsigned = tail.strip_prefix(['+', '-']).unwrap_or(tail);
-    let digits = unsigned.bytes().take_while(u8::is_ascii_digit).count();
-    if digits == 0 {
-        return (0, 0);
-    }
-    let sign_length = tail.len() - unsigned.len();
-    let text = &tail[..sign_length + digits];
-    let value = text.parse().unwrap_or(if text.starts_with('-') { i32::MIN / 2 } else { i32::MAX / 2 });
-    (1 + sign_length + digits, value)
-}
-
-/// `3/8`, `2-3/16` or `2 3/16`: length and value.
-fn fraction(text: &str, negative: bool) -> Option<(usize, Written)> {
-    let whole_digits = digits(text);
-    let (whole, start) = match text[whole_digits..].chars().next()? {
-        '/' => (0.0, 0),
-        '-' | ' ' => {
-            let gap = text[whole_digits + 1..].len() - text[whole_digits + 1..].trim_start().len();
-            (text[..whole_digits].parse().ok()?, whole_digits + 1 + gap)
-        }
-        _ => return None,
+/// The leading digits with at most one point, and the rest.
+fn split_digits(text: &str) -> (&str, &str) {
+    let whole = count_digits(text);
+    let end = match text[whole..].strip_prefix('.') {
+        Some(decimals) => whole + 1 + count_digits(decimals),
+        None => whole,
     };
-    let top_digits = digits(&text[start..]);
-    let after_top = start + top_digits;
-    let bottom_text = text.get(after_top..)?.strip_prefix('/')?;
-    let bottom_digits = digits(bottom_text);
-    if top_digits == 0 || bottom_digits == 0 {
-        return None;
-    }
-    let top: f64 = text[start..after_top].parse().ok()?;
-    let bottom: f64 = bottom_text[..bottom_digits].parse().ok()?;
-    if bottom == 0.0 {
-        return None;
-    }
-    let sign = if negative { -1.0 } else { 1.0 };
-    let written = Written::Fraction { numerator: sign * (whole * bottom + top), denominator: bottom };
-    Some((after_top + 1 + bottom_digits, written))
+    text.split_at(end)
 }
 
-fn digits(text: &str) -> usize {
+/// How many ASCII digits lead, which is also their length in bytes.
+fn count_digits(text: &str) -> usize {
     text.bytes().take_while(u8::is_ascii_digit).count()
+}
+
+/// Why a text without leading digits is no number.
+fn no_number(kind: Kind, text: &str) -> QuantityError {
+    let word = text.trim_start_matches(['+', '-', '−', '.']).to_ascii_lowercase();
+    match word.starts_with("nan") || word.starts_with("inf") {
+        true => QuantityError::NotFinite { kind, given: shown(text) },
+        false => QuantityError::NoNumber { kind, given: shown(text) },
+    }
+}
+
+fn not_plain(text: &str, meant: Option<String>) -> QuantityError {
+    QuantityError::NotPlainDecimal { given: shown(text), meant: meant.map(|meant| shown(&meant)) }
+}
+
+/// The power of ten after `e`, zero when there is none, and the rest.
+fn split_exponent(rest: &str) -> (i64, &str) {
+    let Some(after) = rest.strip_prefix(['e', 'E']) else { return (0, rest) };
+    let (negative, unsigned) = match after.strip_prefix(['-', '−']) {
+        Some(unsigned) => (true, unsigned),
+        None => (false, after.strip_prefix('+').unwrap_or(after)),
+    };
+    let (digits, rest_after) = unsigned.split_at(count_digits(unsigned));
+    if digits.is_empty() {
+        return (0, rest);
+    }
+    // An exponent of more than eighteen digits is out of range all the same.
+    let size = digits.parse().unwrap_or(1_000_000_000_000_000_000_i64);
+    (if negative { -size } else { size }, rest_after)
+}
+
+/// A fraction after the whole number `digits`, or starting with it, and the rest; none when there is none.
+fn fraction<'a>(
+    text: &str,
+    negative: bool,
+    digits: &str,
+    rest: &'a str,
+) -> Result<Option<(Amount<'a>, &'a str)>, QuantityError> {
+    let fault = || QuantityError::Fraction { given: shown(text) };
+    let number = |digits: &str| digits.parse::<u32>().map_err(|_| fault());
+    let (whole, numerator, denominator, rest) = if let Some((denominator, rest)) = denominator(rest) {
+        ("0", digits, denominator, rest)
+    } else {
+        let after = rest.strip_prefix('-').unwrap_or(rest.trim_start());
+        let (numerator, after) = after.split_at(count_digits(after));
+        match denominator(after) {
+            Some((denominator, rest)) if !numerator.is_empty() => (digits, numerator, denominator, rest),
+            _ => return Ok(None),
+        }
+    };
+    let amount = Amount::Fraction {
+        negative,
+        whole: number(whole)?,
+        numerator: number(numerator)?,
+        denominator: number(denominator)?,
+    };
+    match amount {
+        Amount::Fraction { numerator, denominator, .. } if numerator >= denominator => Err(fault()),
+        _ => Ok(Some((amount, rest))),
+    }
+}
+
+/// The digits after a stroke and the rest; none when no digit follows.
+fn denominator(rest: &str) -> Option<(&str, &str)> {
+    let after = rest.strip_prefix('/')?;
+    let (digits, rest) = after.split_at(count_digits(after));
+    (!digits.is_empty()).then_some((digits, rest))
+}
+
+/// Refuses what looks like more of the number after its end.
+fn check_end(text: &str, rest: &str) -> Result<(), QuantityError> {
+    let unit = rest.trim_start();
+    if rest.starts_with(',') {
+        return Err(not_plain(text, Some(without_comma(text))));
+    }
+    let digits = count_digits(unit);
+    let goes_on = digits > 0 && !unit.starts_with("1/");
+    let hexadecimal =
+        text.trim_start_matches(['+', '-', '−']).starts_with(['0']) && rest.starts_with(['x', 'X']);
+    if goes_on || hexadecimal || rest.starts_with(['.', '_', '\'', '’', '+', '-', '−']) {
+        return Err(not_plain(text, None));
+    }
+    Ok(())
+}
+
+/// The text with its commas taken out, or the only one made a point when there is no other.
+///
+/// One comma before exactly three digits may be either, so both are offered.
+fn without_comma(text: &str) -> String {
+    if text.contains('.') || text.matches(',').count() > 1 {
+        return text.replace(',', "");
+    }
+    let decimal = text.replace(',', ".");
+    match text.split_once(',') {
+        Some((_, after)) if count_digits(after) == 3 => format!("{decimal} or {}", text.replace(',', "")),
+        _ => decimal,
+    }
 }

@@ -117,21 +117,35 @@ pub fn show(measure: Measure, si: f64, system: UnitSystem) -> Shown {
     let unit = display_unit(measure, system);
     let value = unit.of(si);
     let number = match (measure, system) {
-        (Measure::Size, UnitSystem::Metric) => trimmed(value, 4),
-        (Measure::Size, UnitSystem::Inch) => trimmed(value, 5),
-        (Measure::Deviation, UnitSystem::Metric) => trimmed(value, 1),
-        (Measure::Deviation, UnitSystem::Inch) => trimmed(value, 2),
+        (Measure::Size, UnitSystem::Metric) => decimals(value, 4),
+        (Measure::Size, UnitSystem::Inch) => decimals(value, 5),
+        (Measure::Deviation, UnitSystem::Metric) => decimals(value, 1),
+        (Measure::Deviation, UnitSystem::Inch) => decimals(value, 2),
         (Measure::Temperature | Measure::TemperatureDifference, _) if value.abs() < 99.95 => {
-            trimmed(value, 1)
+            decimals(value, 1)
         }
-        (Measure::Temperature | Measure::TemperatureDifference, _) => trimmed(value, 0),
+        (Measure::Temperature | Measure::TemperatureDifference, _) => decimals(value, 0),
         _ => number(value, 4),
     };
     Shown { number, unit: unit.name }
 }
 
+/// What is shown of a number that does not exist.
+const NOT_FINITE: &str = "n/a";
+
+/// Takes a number that is a tie but for its last bits over the tie, away from zero.
+const OVER_THE_TIE: f64 = 1.0 + 16.0 * f64::EPSILON;
+
+/// A number rounded to so many decimals, ties away from zero.
+fn decimals(value: f64, count: usize) -> String {
+    trimmed(value * OVER_THE_TIE, count)
+}
+
 /// A number with so many decimals, trailing zeros dropped, never a negative zero.
 fn trimmed(value: f64, decimals: usize) -> String {
+    if !value.is_finite() {
+        return NOT_FINITE.to_owned();
+    }
     let text = format!("{value:.decimals$}");
     let text = if text.contains('.') { text.trim_end_matches('0').trim_end_matches('.') } else { &text };
     if text == "-0" { "0".to_owned() } else { text.to_owned() }
@@ -140,7 +154,8 @@ fn trimmed(value: f64, decimals: usize) -> String {
 /// A number to so many significant digits, trailing zeros behind the point dropped.
 ///
 /// A tie, as far as a double can tell one, goes away from zero, so that two ways of working out one number print
-/// alike. From 1e-4 to 1e15 it is written plainly, outside with an exponent. The text reads back as a number.
+/// alike. From 1e-4 to 1e15 it is written plainly, outside with an exponent. The text reads back as a number; NaN
+/// and infinity give `n/a`.
 ///
 /// # Example
 /// ```
@@ -150,11 +165,14 @@ fn trimmed(value: f64, decimals: usize) -> String {
 /// assert_eq!(number(-0.0, 3), "0");
 /// ```
 pub fn number(value: f64, significant_digits: usize) -> String {
-    if value == 0.0 || !value.is_finite() {
+    if !value.is_finite() {
+        return NOT_FINITE.to_owned();
+    }
+    if value == 0.0 {
         return "0".to_owned();
     }
     let digits = significant_digits.max(1);
-    let scientific = format!("{:.*e}", digits - 1, value * (1.0 + 16.0 * f64::EPSILON));
+    let scientific = format!("{:.*e}", digits - 1, value * OVER_THE_TIE);
     let (mantissa, exponent) = scientific.split_once('e').unwrap_or((&scientific, "0"));
     let exponent: i32 = exponent.parse().unwrap_or(0);
     if !(-4..15).contains(&exponent) {

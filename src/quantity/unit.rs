@@ -272,7 +272,7 @@ impl Unit {
 /// A spelling as it stands in the table: one sign for each dot, degree and micro sign.
 pub(super) fn plain_spelling(given: &str) -> String {
     let mut plain = String::with_capacity(given.len());
-    for character in given.trim().chars() {
+    for character in without_brackets(given.trim()).chars() {
         match character {
             'µ' | 'μ' => plain.push('u'),
             '°' | 'º' => plain.push_str("deg"),
@@ -280,22 +280,34 @@ pub(super) fn plain_spelling(given: &str) -> String {
             '℉' => plain.push_str("degF"),
             '²' => plain.push('2'),
             '³' => plain.push('3'),
-            '·' | '⋅' | '*' | '-' => plain.push('.'),
-            '(' | ')' | '^' => {}
-            blank if blank.is_whitespace() => {
-                if !plain.ends_with(['.', '/']) {
-                    plain.push('.');
-                }
-            }
-            other => {
-                if matches!(other, '/' | '.') && plain.ends_with('.') {
+            '·' | '⋅' | '*' | '-' | '.' => push_dot(&mut plain),
+            blank if blank.is_whitespace() => push_dot(&mut plain),
+            '/' => {
+                if plain.ends_with('.') {
                     plain.pop();
                 }
-                plain.push(other);
+                plain.push('/');
             }
+            other => plain.push(other),
         }
     }
     plain
+}
+
+/// A product's dot, which blanks beside it or beside a stroke do not double.
+fn push_dot(plain: &mut String) {
+    if !plain.ends_with(['.', '/']) {
+        plain.push('.');
+    }
+}
+
+/// The spelling without `^` before an exponent and without the brackets around all that stands below a stroke.
+fn without_brackets(given: &str) -> String {
+    let plain = given.replace("^2", "2").replace("^3", "3").replace("/ (", "/(");
+    match plain.split_once("/(").map(|(over, under)| (over, under.strip_suffix(')'))) {
+        Some((over, Some(under))) if !under.contains(['(', ')']) => format!("{over}/{under}"),
+        _ => plain,
+    }
 }
 
 /// The unit of a kind with a spelling in the table.

@@ -46,9 +46,10 @@ pub fn text(diagnostic: &Diagnostic) -> String {
 /// `file:line:column: `, as far as they are known.
 fn place(diagnostic: &Diagnostic) -> String {
     let Some(file) = &diagnostic.file else { return "hubgrip: ".to_owned() };
+    let file = clean(&file.display().to_string());
     match diagnostic.place {
-        Some(place) => format!("{}:{}:{}: ", file.display(), place.line, place.column),
-        None => format!("{}: ", file.display()),
+        Some(place) => format!("{file}:{}:{}: ", place.line, place.column),
+        None => format!("{file}: "),
     }
 }
 
@@ -147,7 +148,7 @@ mod tests {
 
     #[test]
     fn control_characters_do_not_reach_the_terminal() {
-        let fault = Diagnostic::new("bad \u{1b}[31m text").in_file("f.yaml");
+        let fault = Diagnostic::new("bad \u{1b}[31m text").in_file("f\u{1b}[2J.yaml");
         assert!(!anstream::adapter::strip_str(&text(&fault)).to_string().contains('\u{1b}'));
     }
 }

@@ -1,81 +1,78 @@
 //! Findings as JSON, version 1: fixed names, units in the names, full precision.
 //!
-//! NaN and infinity never appear: a quantity that does not exist is `null`, and `notes` says why. Names are
-//! only ever added.
+//! NaN and infinity never appear: a quantity that does not exist is `null`, and `notes` has a sentence that begins
+//! with its name and says why. Names are only ever added. `rings` and `interfaces` run from the
+//! innermost outwards, `steps` in the order of assembly; without a suffix for a unit a number is a pure number.
+//!
+//! | name | what it is |
+//! |---|---|
+//! | `findings` | version of this format: 1 |
+//! | `version` | version of the program |
+//! | `title`, `digest`, `set` | of the joint file: its title, the SHA-256 of its text, changes made by `--set` |
+//! | `diameter_mm`, `callout`, `character` | nominal diameter, fit as written; `clearance`, `transition`, `interference` |
+//! | `fit` | `hole` and `shaft`, each with `lower_um` and `upper_um` from nominal |
+//! | `extremes` | `loosest`, `mean`, `tightest`: the pair at the shop temperature, at rest |
+//! | `onset_of_yield` | `ring` that yields or breaks first, with `pressure_mpa` and `interference_um` |
+//! | `duty` | each state: what acts, and `loosest` and `tightest` in it |
+//! | `service` | `loosening` of each interface, which fits are `governing` each ring, `steps` of assembly, the `plastic` hub, `fatigue` |
+//! | `assembly` | `method`, temperatures, clearance, forces of the tightest pair, `baths` |
+//! | `verdicts` | `question` (hold, strength, assembly), `subject`, `required`, `found`, `unit` (1, N, degC), `ok`, `at` |
+//! | `defaults` | `key`, `value`, `source` of what the joint file leaves open |
+//! | `materials` | for each ring its material, where the record comes from, the strength for its section |
+//! | `cautions`, `notes` | sentences |
+//!
+//! A pair of `extremes`:
+//!
+//! | name | what it is |
+//! |---|---|
+//! | `interference_um` | diametral interference as made, negative for clearance |
+//! | `smoothing_um` | loss by smoothing that was taken |
+//! | `effective_interference_um` | interference that grips |
+//! | `pressure_mpa` | contact pressure; `pressure_smoothed_mpa` and `pressure_unsmoothed_mpa` with and without the loss |
+//! | `hub_bore_*`, `hub_rim_*` | stress in the outermost ring |
+//! | `shaft_surface_*`, `shaft_bore_*` | stress in the innermost ring; of a solid shaft `shaft_bore` is the centre |
+//! | `shaft_von_mises_mpa` | the greater of its two faces |
+//! | `torque_capacity_nm`, `axial_capacity_n` | torque and axial force at which it slips |
+//! | `press_force_n`, `release_force_n` | greatest over the friction range; `press_force_low_n`, `release_force_low_n` least |
+//! | `interfaces` | `diameter_mm`, interferences, `pressure_mpa`, `gap_um`, whether `open`, capacities |
+//! | `rings` | `name`, stress at bore and rim, `equivalent_mpa`, `strength_mpa`, `yield_safety`, changes of diameter |
+//! | `slices` | of a stepped joint: its slices with their pressure and rings; else empty |
+//!
+//! A pair in a state of `duty` has `pressure_mpa`, `torque_capacity_nm`, `axial_capacity_n`, `slip_safety`,
+//! `hub_yield_safety`, `shaft_yield_safety`, `bending`, `interfaces` and `rings`.
 
+mod absent;
+mod assembly;
+mod document;
+mod duty;
+mod limits;
+mod number;
+mod pair;
 mod service;
-mod shape;
 
 use serde::Serialize;
 
 use crate::findings::Findings;
+use crate::tolerance::Member;
 use crate::tolerance::callout::{Resolved, ResolvedMember};
-use crate::tolerance::{Limits, Member};
-use shape::{Document, ExtremeInterferences, LimitsDocument, MemberDocument, Microns};
 
 /// The findings of a joint as JSON text with a line break at its end.
 pub fn to_json(findings: &Findings) -> String {
-    text(&Document::of(findings))
+    text(&document::Document::of(findings))
 }
 
 /// Limits of a fit as JSON: the object `fit` as in the findings, `character`, `interference`.
 pub fn fit_limits(callout: &str, resolved: &Resolved) -> String {
-    let limits = &resolved.limits;
-    let interference = limits.interference();
-    text(&LimitsDocument {
-        callout: callout.to_owned(),
-        diameter_mm: limits.nominal * 1e3,
-        fit: shape::Fit::of(limits),
-        character: super::terminal::character_name(limits.character()),
-        interference: ExtremeInterferences {
-            loosest_um: microns(interference.loosest),
-            mean_um: microns(interference.mean),
-            tightest_um: microns(interference.tightest),
-        },
-        maximum_material_pair: "tightest",
-        least_material_pair: "loosest",
-        sources: vec![resolved.hole_source.clone(), resolved.shaft_source.clone()],
-        remarks: resolved.remarks.clone(),
-    })
+    text(&limits::LimitsDocument::of(callout, resolved))
 }
 
 /// Limits of one member as JSON.
 pub fn member_limits(nominal: f64, member: Member, resolved: &ResolvedMember) -> String {
-    let limits = Microns::of(&resolved.limits);
-    let (hole, shaft) = match member {
-        Member::Hole => (Some(limits), None),
-        Member::Shaft => (None, Some(limits)),
-    };
-    text(&MemberDocument {
-        diameter_mm: nominal * 1e3,
-        hole,
-        shaft,
-        sources: vec![resolved.source.clone()],
-        remarks: resolved.remarks.clone(),
-    })
+    text(&limits::MemberDocument::of(nominal, member, resolved))
 }
 
 fn text(document: &impl Serialize) -> String {
     let mut text = serde_json::to_string_pretty(document).unwrap_or_default();
     text.push('\n');
     text
-}
-
-/// Micrometres of a length in m, without the noise that the factor would add to tabulated figures.
-fn microns(metres: f64) -> f64 {
-    let exact = metres * 1e6;
-    let rounded = (exact * 1e6).round() / 1e6;
-    let kept = if (exact - rounded).abs() <= 1e-9 * exact.abs() { rounded } else { exact };
-    kept + 0.0
-}
-
-/// A number that JSON can carry; none when it is not finite.
-fn finite(value: f64) -> Option<f64> {
-    value.is_finite().then_some(value + 0.0)
-}
-
-impl Microns {
-    fn of(limits: &Limits) -> Self {
-        Self { lower_um: microns(limits.lower), upper_um: microns(limits.upper) }
-    }
 }

@@ -55,6 +55,8 @@ pub fn sheet(material: &Material) -> String {
     strength(&mut values, material);
     expansion(&mut values, material);
     for (name, kind, found) in [
+        ("compressive_strength", Quantity::Pressure, &material.compressive_strength),
+        ("long_term_strength", Quantity::Pressure, &material.long_term_strength),
         ("conductivity", Quantity::Conductivity, &material.conductivity),
         ("specific_heat", Quantity::SpecificHeat, &material.specific_heat),
         ("max_temperature", Quantity::Temperature, &material.max_temperature),

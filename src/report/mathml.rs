@@ -139,8 +139,11 @@ const NEGATIVE: u8 = 2;
 const PRODUCT: u8 = 3;
 const ATOM: u8 = 5;
 
+/// Printed value of a symbol, when it has one.
+type Values<'a> = &'a dyn Fn(&Symbol) -> Option<String>;
+
 struct Setter<'a> {
-    value: Option<&'a dyn Fn(&Symbol) -> Option<String>>,
+    value: Option<Values<'a>>,
 }
 
 impl Setter<'_> {

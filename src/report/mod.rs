@@ -9,7 +9,11 @@ pub mod limits;
 pub mod materials;
 pub mod mathml;
 pub mod plot;
+pub mod pressing;
+pub mod scatter;
+pub mod seating;
 pub mod service;
+pub mod sort;
 pub mod terminal;
 
 mod hatch;
@@ -18,6 +22,10 @@ mod text_width;
 mod typeset;
 mod units;
 
+#[cfg(test)]
+mod figure_tests;
+#[cfg(test)]
+mod lettering;
 #[cfg(test)]
 mod page_tests;
 #[cfg(test)]

@@ -3,10 +3,9 @@
 use std::sync::OnceLock;
 
 use super::html::html;
-use super::sample;
-use super::svg::{FONT, digits};
-use super::text_width::text_width;
-use super::well_formed::{Element, elements};
+use super::typeset::prose;
+use super::well_formed::elements;
+use super::{lettering, sample};
 
 /// Pages of all samples. With HUBGRIP_PAGES set to a folder they are written there too, to be looked at.
 fn pages() -> &'static [(&'static str, String)] {
@@ -134,110 +133,84 @@ fn pictures_and_tables_can_be_used_without_seeing_them() {
     }
 }
 
-/// A line of lettering in a figure, in the units of its viewBox.
-struct Line {
-    text: String,
-    left: f64,
-    top: f64,
-    right: f64,
-    bottom: f64,
+#[test]
+fn lettering_of_the_figures_stays_inside_and_apart() {
+    for (name, page) in pages() {
+        assert!(lettering::check(name, page) >= 2, "{name}: figures are missing");
+    }
 }
 
-/// Lettering of one figure and the size of its viewBox.
-fn lettering(all: &[Element], figure: usize) -> (Vec<Line>, f64, f64) {
-    let view: Vec<f64> =
-        all[figure].attribute("viewBox").unwrap().split(' ').map(|number| number.parse().unwrap()).collect();
-    let lines = all
-        .iter()
-        .enumerate()
-        .filter(|(index, element)| element.name == "text" && belongs(all, *index, figure))
-        .map(|(index, element)| line(all, index, element, figure))
-        .filter(|line| !line.text.is_empty())
-        .collect();
-    (lines, view[2], view[3])
+/// Text of all elements inside the section with this id.
+fn text_of(page: &str, id: &str) -> String {
+    let all = elements(page).unwrap();
+    let section = all.iter().position(|element| element.attribute("id") == Some(id)).unwrap();
+    let inside = |index: usize| index == section || lettering::belongs(&all, index, section);
+    let texts: Vec<&str> =
+        (0..all.len()).filter(|index| inside(*index)).map(|index| all[index].text.trim()).collect();
+    texts.join(" ")
 }
 
-fn belongs(all: &[Element], index: usize, figure: usize) -> bool {
-    let mut at = all[index].parent;
-    while let Some(parent) = at {
-        if parent == figure {
-            return true;
+#[test]
+fn the_verdict_says_in_words_what_is_met() {
+    let met = text_of(&html(&sample::fan_hub()), "answers");
+    assert!(met.contains("All requirements are met.") && !met.contains("NOT"), "{met}");
+    assert!(met.contains("press in with up to"), "{met}");
+    let missed = text_of(&html(&sample::yielding()), "answers");
+    assert!(missed.contains("does NOT keep its strength") && missed.contains("NOT MET"), "{missed}");
+    let unloaded = text_of(&html(&sample::clearance()), "answers");
+    assert!(unloaded.contains("Holding is not judged"), "{unloaded}");
+}
+
+#[test]
+fn every_line_of_the_worksheet_is_there_as_plain_text_too() {
+    let findings = sample::fan_hub();
+    let page = html(&findings);
+    let text = text_of(&page, "worksheet");
+    for line in findings.worksheet.iter().flat_map(|section| &section.lines) {
+        let plain = match &line.formula {
+            Some(formula) => format!("{} = {}", line.symbol.plain(), formula.plain()),
+            None => format!("{} = {}", line.symbol.plain(), line.printed),
+        };
+        assert!(text.contains(&plain), "{plain}");
+        assert!(text.contains(&line.source), "{}", line.source);
+    }
+    let lines: usize = findings.worksheet.iter().map(|section| section.lines.len()).sum();
+    let typeset = elements(&page).unwrap().iter().filter(|e| e.attribute("alttext").is_some()).count();
+    assert_eq!(typeset, lines);
+}
+
+#[test]
+fn defaults_are_marked_with_their_source() {
+    let findings = sample::fan_hub();
+    let text = text_of(&html(&findings), "inputs");
+    for default in &findings.joint.defaults {
+        assert!(text.contains(&default.key) && text.contains(&default.source), "{}", default.key);
+    }
+    assert_eq!(text.matches("default ").count(), findings.joint.defaults.len(), "{text}");
+}
+
+#[test]
+fn cautions_stand_beside_their_step_and_again_in_full() {
+    for (findings, subject) in [(sample::fan_hub(), "press"), (sample::hollow_shaft(), "heat")] {
+        let page = html(&findings);
+        let (steps, notes) = (text_of(&page, "assembly"), text_of(&page, "notes"));
+        let cautions: Vec<_> = findings.cautions.iter().filter(|c| c.subject == subject).collect();
+        assert!(!cautions.is_empty());
+        for caution in cautions {
+            let text = prose(&caution.text);
+            assert!(steps.contains(&text) && notes.contains(&text), "{text}");
         }
-        at = all[parent].parent;
-    }
-    false
-}
-
-fn line(all: &[Element], index: usize, element: &Element, figure: usize) -> Line {
-    let mut scale = 1.0;
-    let mut at = all[index].parent;
-    while let Some(parent) = at.filter(|parent| *parent != figure) {
-        if all[parent].attribute("transform") == Some("scale(0.1)") {
-            scale = 0.1;
-        }
-        at = all[parent].parent;
-    }
-    let size = element.number("font-size") * scale;
-    let (x, mut y) = (element.number("x") * scale, element.number("y") * scale);
-    // Plotters moves the baseline by dy: below the point, or to its middle.
-    match element.attribute("dy") {
-        Some("0.76em") => y += 0.76 * size,
-        Some("0.5ex") => y += 0.25 * size,
-        Some("-0.5ex") => y -= 0.25 * size,
-        Some(other) => panic!("dy={other}"),
-        None => {}
-    }
-    let text = element.text.trim().to_owned();
-    // Without the 5 % that placing lettering adds for other faces.
-    let width = text_width(&text, size) / 1.05;
-    let start = match element.attribute("text-anchor") {
-        Some("middle") => -0.5 * width,
-        Some("end") => -width,
-        _ => 0.0,
-    };
-    let (up, down) = (0.72 * size, 0.05 * size);
-    let turned = element.attribute("transform").is_some_and(|turn| turn.starts_with("rotate(-90"));
-    if turned {
-        Line { text, left: x - up, right: x + down, top: y - start - width, bottom: y - start }
-    } else {
-        Line { text, left: x + start, right: x + start + width, top: y - up, bottom: y + down }
     }
 }
 
 #[test]
-fn lettering_of_the_figures_stays_inside_and_apart() {
-    for (name, page) in pages() {
-        let all = elements(page).unwrap();
-        let figures: Vec<usize> = (0..all.len()).filter(|index| all[*index].name == "svg").collect();
-        assert!(figures.len() >= 2, "{name}");
-        for figure in figures {
-            let id = all[figure].attribute("id").unwrap();
-            assert_eq!(all[figure].attribute("font-family"), Some(FONT));
-            let (lines, width, height) = lettering(&all, figure);
-            assert!(!lines.is_empty());
-            for (place, one) in lines.iter().enumerate() {
-                assert!(
-                    one.left >= -0.01
-                        && one.right <= width + 0.01
-                        && one.top >= -0.01
-                        && one.bottom <= height,
-                    "{name} {id}: “{}” leaves the figure: {} to {} of {}, {} to {} of {}",
-                    one.text,
-                    digits(one.left),
-                    digits(one.right),
-                    digits(width),
-                    digits(one.top),
-                    digits(one.bottom),
-                    digits(height)
-                );
-                for other in &lines[place + 1..] {
-                    let apart = one.right <= other.left
-                        || other.right <= one.left
-                        || one.bottom <= other.top
-                        || other.bottom <= one.top;
-                    assert!(apart, "{name} {id}: “{}” and “{}” overlap", one.text, other.text);
-                }
-            }
+fn an_inch_page_shows_inch_units_in_every_table_of_results() {
+    let (_, page) = pages().iter().find(|(name, _)| *name == "hollow_shaft_inch").unwrap();
+    for id in ["extremes", "duty"] {
+        let text = text_of(page, id);
+        for unit in ["MPa", "µm", "kN", "N·m", "°C"] {
+            assert!(!text.contains(unit), "{id}: {unit}");
         }
     }
+    assert!(text_of(page, "extremes").contains("lbf·ft"));
 }

@@ -1,6 +1,6 @@
 //! What speed, heat, yielding, bending and length do, in plain sentences for terminal and report.
 
-use crate::findings::{Findings, Loosening};
+use crate::findings::{Findings, Loosening, PairFindings};
 use crate::mechanics::plastic::Regime;
 use crate::quantity::{Measure, show};
 
@@ -13,6 +13,7 @@ pub fn sentences(findings: &Findings) -> Vec<String> {
     all.extend(governing(findings));
     all.extend(steps(findings));
     all.extend(sizes(findings));
+    all.extend(liner(findings));
     all.extend(plastic(findings));
     all.extend(bending(findings));
     all.extend(fatigue(findings));
@@ -113,8 +114,9 @@ fn sizes(findings: &Findings) -> Vec<String> {
             size(tightest.0),
         ));
     }
+    let place = if joint.slices.is_empty() { "" } else { " (where it is stressed most)" };
     all.push(format!(
-        "The outer diameter of the {} grows by {} to {}.",
+        "The outer diameter of the {}{place} grows by {} to {}.",
         hub.name,
         change(loosest.1),
         change(tightest.1)
@@ -124,6 +126,22 @@ fn sizes(findings: &Findings) -> Vec<String> {
 
 fn ends(rings: &[crate::findings::RingStress]) -> Option<(f64, f64)> {
     Some((rings.first()?.bore_change, rings.last()?.outer_change))
+}
+
+fn liner(findings: &Findings) -> Option<String> {
+    let liner = findings.service.liner.as_ref()?;
+    let (bush, _) = findings.joint.shaft_and_hub();
+    let pressure = |pascals| show(Measure::Pressure, pascals, findings.joint.display);
+    Some(format!(
+        "The wall of the {} is {:.1} % of its mean diameter: a long tube of it buckles inwards at {} when nothing holds it \
+         round (Timoshenko & Gere, Theory of Elastic Stability, § 7.5), in a rigid housing at {} (Glock 1977, from memory); \
+         the tightest pair presses it with {}.",
+        bush.name,
+        100.0 * liner.slenderness,
+        pressure(liner.free),
+        pressure(liner.housed),
+        pressure(liner.pressure),
+    ))
 }
 
 fn plastic(findings: &Findings) -> Vec<String> {
@@ -158,6 +176,23 @@ fn plastic(findings: &Findings) -> Vec<String> {
         ""
     };
     all.push(format!("Taken apart, the bore of the {} stays larger by {growth}{caveat}.", hub.name));
+    if let Some(worn) = &plastic.worn {
+        let place = worn.state.and_then(|index| joint.duty.get(index));
+        all.push(format!(
+            "The {} is strained hardest {}: from then on the joint grips as an elastic one whose interference is less by {} at \
+             the loosest and {} at the tightest pair. The states count that.",
+            hub.name,
+            place.map_or("in assembly".to_owned(), |state| format!("in state {}", state.name)),
+            show(Measure::Deviation, worn.loosest, joint.display),
+            show(Measure::Deviation, worn.tightest, joint.display),
+        ));
+        if place.is_some_and(|state| state.speed > 0.0) {
+            all.push(
+                "Rotation strains the wall deeper than an interference that stresses the bore alike: the growth is an estimate."
+                    .to_owned(),
+            );
+        }
+    }
     all
 }
 
@@ -172,6 +207,13 @@ fn bending(findings: &Findings) -> Vec<String> {
             state.name,
             show(Measure::Pressure, bending.edge_change, joint.display),
             show(Measure::Torque, bending.limiting_moment, joint.display),
+        ));
+    }
+    for state in joint.duty.iter().filter(|state| state.relaxation < 1.0) {
+        all.push(format!(
+            "In state {} holding counts {:.0} % of the fresh pressure, the share that relaxation leaves (joint file).",
+            state.name,
+            100.0 * state.relaxation
         ));
     }
     for state in joint.duty.iter().filter(|state| state.reversing) {
@@ -208,10 +250,17 @@ fn fatigue(findings: &Findings) -> Vec<String> {
 
 fn length(findings: &Findings) -> Vec<String> {
     let Some(factors) = &findings.service.length_factors else { return Vec::new() };
+    let pressure = |pascals| show(Measure::Pressure, pascals, findings.joint.display);
+    let band = |pair: &PairFindings| {
+        format!("{} to {}", pressure(pair.pressure), pressure(pair.pressure * factors.mean_pressure))
+    };
     vec![format!(
-        "On a shaft that stands out of the hub the mean pressure is about {:.0} % above the figures here, at a sharp edge \
-         about {:.1} times them: relieve the hub edge or raise the seat.",
+        "On a shaft that stands out of the hub the mean pressure is about {:.1} % above that of the thick-walled cylinder: \
+         {} at the loosest pair, {} at the tightest; at a sharp edge it is about {:.1} times that figure: relieve the hub \
+         edge or raise the seat.",
         (factors.mean_pressure - 1.0) * 100.0,
+        band(&findings.extremes.loosest),
+        band(&findings.extremes.tightest),
         factors.edge_pressure
     )]
 }

@@ -5,6 +5,7 @@ use std::fmt::Write;
 use anstyle::{AnsiColor, Style};
 use comfy_table::{CellAlignment, Table, presets};
 
+use super::seating::{self, time_allowed};
 use crate::findings::{Findings, PairFindings, Question, Verdict, VerdictUnit};
 use crate::joint::Method;
 use crate::quantity::{Measure, UnitSystem, display_unit, show};
@@ -121,6 +122,7 @@ pub fn verdict_value(value: f64, unit: VerdictUnit, system: UnitSystem) -> Strin
         VerdictUnit::Force => show(Measure::Force, value, system).to_string(),
         VerdictUnit::Temperature => show(Measure::Temperature, value, system).to_string(),
         VerdictUnit::Share => format!("{:.1} %", value * 100.0),
+        VerdictUnit::Time => time_allowed(value),
     }
 }
 
@@ -167,7 +169,7 @@ pub fn verdict_sentence(verdict: &Verdict, system: UnitSystem) -> String {
     let value = |number| verdict_value(number, verdict.unit, system);
     let found = verdict.found.map_or_else(|| "does not exist".to_owned(), value);
     let bound = match verdict.unit {
-        VerdictUnit::Safety => "at least",
+        VerdictUnit::Safety | VerdictUnit::Time => "at least",
         VerdictUnit::Force | VerdictUnit::Share => "at most",
         VerdictUnit::Temperature => "limit",
     };
@@ -307,13 +309,13 @@ fn interfaces(out: &mut String, findings: &Findings) {
     heading(out, "Interfaces, shop temperature, at rest");
     let unit = |measure| display_unit(measure, joint.display).name;
     let mut table = table(&[
+        "interface".to_owned(),
         "between".to_owned(),
-        "fit".to_owned(),
         format!("loosest {}", unit(Measure::Pressure)),
         "mean".to_owned(),
         "tightest".to_owned(),
     ]);
-    for (index, fit) in joint.fits.iter().enumerate() {
+    for index in 0..joint.fits.len() {
         let names = joint.rings.get(index..index + 2).unwrap_or_default();
         let between: Vec<&str> = names.iter().map(|ring| ring.name.as_str()).collect();
         let pressure = |pair: &PairFindings| {
@@ -326,8 +328,8 @@ fn interfaces(out: &mut String, findings: &Findings) {
             })
         };
         table.add_row(vec![
+            (index + 1).to_string(),
             plain(&between.join(" / ")),
-            fit.callout.clone(),
             pressure(&findings.extremes.loosest),
             pressure(&findings.extremes.mean),
             pressure(&findings.extremes.tightest),
@@ -341,7 +343,7 @@ fn slices(out: &mut String, findings: &Findings) {
     if joint.slices.is_empty() {
         return;
     }
-    heading(out, "Along the joint: each slice by itself is good to 10 to 15 %, the total to a few percent");
+    heading(out, "Along the joint: a slice is good to 10 to 15 %, the total to a few percent");
     let size = display_unit(Measure::Size, joint.display).name;
     let pressure = display_unit(Measure::Pressure, joint.display).name;
     let mut table = table(&[
@@ -375,6 +377,11 @@ fn assembly(out: &mut String, findings: &Findings) {
     let chosen = |is: bool| if is { "* " } else { "  " };
     let method = joint.assembly.method;
     let press = &assembly.press;
+    if let Some(text) = seating::headline(findings) {
+        for wrapped in textwrap::wrap(&text, WIDTH) {
+            line(out, format!("{HEADING}{wrapped}{HEADING:#}"));
+        }
+    }
     paragraph(
         out,
         chosen(method == Method::Press),
@@ -400,6 +407,22 @@ fn assembly(out: &mut String, findings: &Findings) {
             show(Measure::Deviation, assembly.clearance, system)
         ),
     );
+    for sentence in method_sentences(findings) {
+        paragraph(out, "  ", &plain(&sentence));
+    }
+}
+
+/// What the method asked for takes, and how the joint comes apart.
+fn method_sentences(findings: &Findings) -> Vec<String> {
+    let mut all: Vec<String> = seating::handling(findings).into_iter().collect();
+    all.extend(seating::soaks(findings));
+    all.extend(seating::cold_bath(findings));
+    all.extend(seating::coefficients(findings));
+    if findings.joint.assembly.method == Method::Press {
+        all.extend(seating::press(findings));
+    }
+    all.extend(seating::release(findings));
+    all
 }
 
 fn defaults(out: &mut String, findings: &Findings) {

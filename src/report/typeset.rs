@@ -45,7 +45,13 @@ pub(crate) fn sentence(text: &str) -> String {
     format!("{}{}{stop}", first.to_uppercase(), letters.as_str())
 }
 
-/// Running text with a true minus before every negative number.
+/// The text with its first letter in upper case.
+pub(crate) fn capital(text: &str) -> String {
+    let mut letters = text.chars();
+    letters.next().map_or_else(String::new, |first| first.to_uppercase().chain(letters).collect())
+}
+
+/// Running text with a true minus before every negative number and a thin space before every unit.
 pub(crate) fn prose(text: &str) -> String {
     let letters: Vec<char> = text.chars().collect();
     let is_minus = |place: usize| {
@@ -53,8 +59,27 @@ pub(crate) fn prose(text: &str) -> String {
             && letters.get(place + 1).is_some_and(char::is_ascii_digit)
             && (place == 0 || matches!(letters[place - 1], ' ' | '('))
     };
-    (0..letters.len()).map(|place| if is_minus(place) { MINUS } else { letters[place] }).collect()
+    let is_before_unit = |place: usize| {
+        let word: String = letters[place + 1..].iter().take_while(|c| !c.is_whitespace()).collect();
+        letters[place] == ' '
+            && place > 0
+            && letters[place - 1].is_ascii_digit()
+            && UNITS.contains(&word.trim_end_matches([',', ';', '.', ')', ':']))
+    };
+    (0..letters.len())
+        .map(|place| match letters[place] {
+            _ if is_minus(place) => MINUS,
+            _ if is_before_unit(place) => THIN,
+            letter => letter,
+        })
+        .collect()
 }
+
+/// Units that cannot be taken for a word.
+const UNITS: [&str; 20] = [
+    "%", "°C", "°F", "K", "mm", "µm", "thou", "µin", "N", "kN", "lbf", "N·m", "lbf·ft", "MPa", "GPa", "ksi",
+    "psi", "rpm", "kg", "J",
+];
 
 /// Mantissa and exponent of a plain number; the exponent without a plus sign and leading zeros.
 pub(crate) fn split_exponent(plain: &str) -> (&str, Option<String>) {
@@ -153,8 +178,10 @@ mod tests {
     fn sets_units_and_sentences() {
         let units = ["um", "N.m", "degC", "mm2", "kg/m3", "10^-6"].map(unit);
         assert_eq!(units, ["µm", "N·m", "°C", "mm²", "kg/m³", "10^-6"]);
-        assert_eq!(sentence("cold to -78.5 °C"), "Cold to −78.5 °C.");
+        assert_eq!(sentence("cold to -78.5 °C"), "Cold to −78.5\u{202F}°C.");
         assert_eq!(prose("EN-GJL-250 and 2-3 at (-5)"), "EN-GJL-250 and 2-3 at (−5)");
+        assert_eq!(prose("at -5 °C, 3 to 4 N."), "at −5\u{202F}°C, 3 to 4\u{202F}N.");
+        assert_eq!(prose("2 in the bath, 3 Names"), "2 in the bath, 3 Names");
     }
 
     #[test]

@@ -16,6 +16,7 @@ pub(crate) enum Measure {
     Modulus,
     Force,
     Torque,
+    Speed,
     Temperature,
     Density,
     Expansion,
@@ -124,6 +125,7 @@ fn shared(measure: Measure) -> Option<quantity::Measure> {
         Measure::Pressure => quantity::Measure::Pressure,
         Measure::Force => quantity::Measure::Force,
         Measure::Torque => quantity::Measure::Torque,
+        Measure::Speed => quantity::Measure::Speed,
         Measure::Temperature => quantity::Measure::Temperature,
         _ => return None,
     })
@@ -148,10 +150,10 @@ fn metric(measure: Measure) -> (&'static str, f64) {
 /// 1 °F = 5/9 K (NIST Special Publication 811, 2008, appendix B.8).
 fn inch(measure: Measure) -> (&'static str, f64) {
     const POUND: f64 = 0.453_592_37;
-    const BTU: f64 = 1055.055_852_62;
+    const BTU: f64 = 1_055.055_852_62;
     match measure {
         Measure::Roughness => ("µin", 1e6 / 0.0254),
-        Measure::Modulus => ("10⁶ psi", 1e-6 / 6894.757_293_168),
+        Measure::Modulus => ("10⁶ psi", 1e-6 / 6_894.757_293_168),
         Measure::Density => ("lb/in³", 0.0254 * 0.0254 * 0.0254 / POUND),
         Measure::Expansion => ("10⁻⁶/°F", 1e6 / 1.8),
         Measure::Conductivity => ("Btu/(h·ft·°F)", 3600.0 * 0.3048 / (1.8 * BTU)),

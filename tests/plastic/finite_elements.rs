@@ -31,14 +31,14 @@ impl Material {
     /// Stress nearest to the trial stress in the energy norm, and its derivative by the strain.
     fn returned(&self, trial: Pair) -> (Pair, Matrix) {
         match self.surface {
-            Surface::VonMises => self.to_ellipse(trial),
-            Surface::Tresca => self.to_hexagon(trial),
+            Surface::VonMises => self.onto_ellipse(trial),
+            Surface::Tresca => self.onto_hexagon(trial),
         }
     }
 
     /// J. C. Simo and R. L. Taylor, International Journal for Numerical Methods in Engineering 22 (1986) 649-670,
     /// in the axes s = (σφ + σr)/√2 and d = (σφ − σr)/√2, where 2 σv² = s² + 3 d².
-    fn to_ellipse(&self, trial: Pair) -> (Pair, Matrix) {
+    fn onto_ellipse(&self, trial: Pair) -> (Pair, Matrix) {
         let root = 0.5_f64.sqrt();
         let (s0, d0) = (root * (trial[0] + trial[1]), root * (trial[1] - trial[0]));
         let (bulk, shear) =
@@ -67,7 +67,7 @@ impl Material {
         ([root * (s - d), root * (s + d)], tangent)
     }
 
-    fn to_hexagon(&self, trial: Pair) -> (Pair, Matrix) {
+    fn onto_hexagon(&self, trial: Pair) -> (Pair, Matrix) {
         const FACES: [Pair; 6] = [[-1.0, 1.0], [0.0, 1.0], [1.0, 0.0], [1.0, -1.0], [0.0, -1.0], [-1.0, 0.0]];
         const CORNERS: [Pair; 6] =
             [[0.0, 1.0], [1.0, 1.0], [1.0, 0.0], [0.0, -1.0], [-1.0, -1.0], [-1.0, 0.0]];
@@ -246,10 +246,9 @@ impl Hub {
                 let (stress, tangent) = self.material.returned([start[0] + change[0], start[1] + change[1]]);
                 response.stresses[element][point] = stress;
                 let volume = weight * radius;
-                for node in 0..2 {
-                    response.force[element + node] += volume * dot(shapes[node], stress);
-                    response.diagonal[element + node] +=
-                        volume * dot(shapes[node], times(tangent, shapes[node]));
+                for (node, shape) in shapes.into_iter().enumerate() {
+                    response.force[element + node] += volume * dot(shape, stress);
+                    response.diagonal[element + node] += volume * dot(shape, times(tangent, shape));
                 }
                 response.coupling[element] += volume * dot(shapes[0], times(tangent, shapes[1]));
             }

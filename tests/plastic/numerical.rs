@@ -40,6 +40,8 @@ struct Differences {
     stress: f64,
     /// Permanent growth of the bore.
     permanent: f64,
+    /// Permanent growth of the outer diameter.
+    permanent_rim: f64,
 }
 
 fn differences(rule: YieldRule, ratio: f64, zeta: f64, fineness: usize) -> Differences {
@@ -54,7 +56,8 @@ fn differences(rule: YieldRule, ratio: f64, zeta: f64, fineness: usize) -> Diffe
     let stress = apart.fold(0.0, f64::max);
     hub.go(Bore::Pressure(pressure), Bore::Pressure(0.0), 40);
     let permanent = 2.0 * hub.bore_displacement() / state.permanent.bore - 1.0;
-    Differences { pressure: pressure / state.pressure - 1.0, rim, stress, permanent }
+    let permanent_rim = 2.0 * hub.rim_displacement() / state.permanent.rim - 1.0;
+    Differences { pressure: pressure / state.pressure - 1.0, rim, stress, permanent, permanent_rim }
 }
 
 /// Plastic zones of medium, thin and thick hubs; none yields in compression on removal.
@@ -72,6 +75,7 @@ fn tresca_agrees_with_finite_elements() {
             assert!(fine.rim.abs() < 1e-5, "{ratio} {zeta}: {fine:?}");
             assert!(fine.stress < 1.3e-2, "{ratio} {zeta}: {fine:?}");
             assert!(fine.permanent.abs() < 1e-4, "{ratio} {zeta}: {fine:?}");
+            assert!(fine.permanent_rim.abs() < 1e-4, "{ratio} {zeta}: {fine:?}");
             assert!(fine.pressure.abs() < 0.2 * coarse.pressure.abs(), "{ratio} {zeta}: {coarse:?} {fine:?}");
         }
     }
@@ -86,6 +90,7 @@ fn von_mises_agrees_with_finite_elements() {
         assert!(fine.rim.abs() < 5e-4, "{ratio} {zeta}: {fine:?}");
         assert!(fine.stress < 1.3e-2, "{ratio} {zeta}: {fine:?}");
         assert!(fine.permanent.abs() < 5e-4, "{ratio} {zeta}: {fine:?}");
+        assert!(fine.permanent_rim.abs() < 2e-3, "{ratio} {zeta}: {fine:?}");
         assert!(fine.rim.abs() < 0.35 * coarse.rim.abs(), "{ratio} {zeta}: {coarse:?} {fine:?}");
     }
 }

@@ -78,14 +78,23 @@ proptest! {
     fn plastic_meets_elastic_at_the_onset_without_a_kink(joint in joints()) {
         let limits = *joint.limits();
         let onset = limits.onset_interference;
-        let plastic = joint.interference_at(1.0).unwrap();
-        prop_assert!((plastic / onset - 1.0).abs() < 1e-13);
+        let elastic = joint.input().rings.pressure(onset).unwrap();
+        prop_assert!((elastic / limits.onset_pressure - 1.0).abs() < 1e-13);
         let step = 1e-5 * (limits.limit_interference - onset).min(onset);
         let pressure = |interference: f64| joint.solve(interference).unwrap().pressure;
         let (before, at, after) = (pressure(onset - step), pressure(onset), pressure(onset + step));
         prop_assert!((at / limits.onset_pressure - 1.0).abs() < 1e-13);
         // The slope changes by no more than the curvature over one step.
         prop_assert!(((after - at) / (at - before) - 1.0).abs() < 1e-3, "{before} {at} {after}");
+    }
+
+    #[test]
+    fn neighbouring_numbers_of_the_ends_are_solved(joint in joints()) {
+        let limits = *joint.limits();
+        let (onset, limit) = (limits.onset_interference, limits.limit_interference);
+        for interference in [onset.next_down(), onset.next_up(), limit.next_down(), limit.next_up()] {
+            prop_assert!(joint.solve(interference).is_ok(), "{interference}");
+        }
     }
 
     #[test]

@@ -54,7 +54,7 @@ fn first_yield_and_full_plasticity_of_a_textbook_cylinder() {
 }
 
 // 60 H7/x6 at its largest interference of 141 µm, hub 110 mm, E = 210 GPa. No chain with all numbers could be found
-// in print; the values were computed from the formulas of the Westsächsische Hochschule Zwickau lecture sheet
+// in print; the values were computed from the formulas of the Westsächsische Hochschule Zwickau course sheet
 // "Berechnungsgleichungen für Pressverbindungen II" (2013) and by integrating the displacement through the zone.
 #[test]
 fn joint_of_one_steel_beyond_its_elastic_limit() {

@@ -64,7 +64,7 @@ fn press(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         EQUILIBRIUM,
         Some(curve.peak_travel * units.per_metre),
     );
-    let pressure = if super::strength::plastic_shares(findings).is_some() { "P_max" } else { "p_max" };
+    let pressure = if super::strength::hub_yields(findings) { "P_max" } else { "p_max" };
     let leaving =
         sym("K") * (sym("c").power(2) - (sym("s_peak") - sym("l")).power(2)) / (num("2") * sym("c"));
     let seat = sym("mu_p") * (sym("s_peak") - sym("c"));

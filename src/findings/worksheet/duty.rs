@@ -5,9 +5,10 @@ use super::super::kernel::Condition;
 use super::super::{Findings, StateFindings};
 use super::Units;
 use super::sheet::Sheet;
-use super::strength::{axial, flexibility, grip, plastic_shares, torque};
+use super::strength::{axial, flexibility, grip, hub_yields, torque};
 use crate::joint::{DutyState, Ring};
 
+const LAME: &str = "Lamé; Timoshenko & Goodier, Theory of Elasticity, § 28";
 const ROTATION: &str = "rotating disc, Timoshenko & Goodier, Theory of Elasticity, § 32";
 
 pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
@@ -34,7 +35,8 @@ impl StateSheet<'_> {
     }
 
     fn write(&self, sheet: &mut Sheet, pair: &StateFindings) {
-        if pair.slip_safety.is_none() && self.state.speed == 0.0 {
+        let pressed = self.state.inner_pressure > 0.0 || self.state.outer_pressure > 0.0;
+        if pair.slip_safety.is_none() && self.state.speed == 0.0 && !pressed {
             return;
         }
         sheet.section(format!("Duty state {}: the loosest pair", self.state.name));
@@ -42,10 +44,15 @@ impl StateSheet<'_> {
         let lost = self.rotation(sheet);
         let held = grip("W_min", &self.name("eps_s"), &self.name("eps_h"));
         let held = if lost { held - sym(&self.name("V_")) } else { held };
-        let share = plastic_shares(self.findings).map_or(1.0, |shares| shares[0]);
-        let elastic = if share < 1.0 { self.name("p_e") } else { self.name("p_") };
+        let held = match self.pressed(sheet) {
+            Some(added) => held + added,
+            None => held,
+        };
+        let held = if hub_yields(self.findings) { held - sym("G_min") } else { held };
+        let share = self.state.relaxation;
+        let fresh = if share < 1.0 { self.name("p_e") } else { self.name("p_") };
         sheet.formula(
-            &elastic,
+            &fresh,
             "contact pressure",
             super::super::expression::greatest([num("0"), held / flexibility()]),
             self.units.pressure,
@@ -53,12 +60,14 @@ impl StateSheet<'_> {
             Some(pair.pressure / share * self.units.per_pascal),
         );
         if share < 1.0 {
+            let left = self.name("k_");
+            sheet.input(&left, "share that relaxation leaves", share, "", "joint file");
             sheet.formula(
                 &self.name("p_"),
-                "contact pressure of the hub that yields",
-                sym(&elastic) * sym("k_min"),
+                "contact pressure after relaxation",
+                sym(&fresh) * sym(&left),
                 self.units.pressure,
-                "share of the shop temperature",
+                "share of the fresh pressure",
                 Some(pair.pressure * self.units.per_pascal),
             );
         }
@@ -132,6 +141,33 @@ impl StateSheet<'_> {
             sheet.formula(&self.name(symbol), meaning, formula, units.length, ROTATION, None);
         }
         true
+    }
+
+    /// Interference that pressures in the bore and round the hub add.
+    fn pressed(&self, sheet: &mut Sheet) -> Option<Expression> {
+        let units = self.units;
+        let mut added: Option<Expression> = None;
+        for (symbol, grown, what, pressure, outer, inner, modulus, numerator) in [
+            ("q_i", "Y_i", "in the bore", self.state.inner_pressure, "d", "b", "E_s", "b"),
+            ("q_o", "Y_o", "round the hub", self.state.outer_pressure, "D", "d", "E_h", "D"),
+        ] {
+            if pressure == 0.0 {
+                continue;
+            }
+            let (symbol, grown) = (self.name(symbol), self.name(grown));
+            let value = pressure * units.per_pascal;
+            sheet.input(&symbol, &format!("pressure {what}"), value, units.pressure, "joint file");
+            let square = |name: &str| sym(name).power(2);
+            let formula = num("2") * sym(&symbol) * sym("d") * square(numerator)
+                / (sym(modulus) * (square(outer) - square(inner)));
+            let meaning = format!("interference added by the pressure {what}");
+            sheet.formula(&grown, &meaning, formula, units.length, LAME, None);
+            added = Some(match added {
+                Some(known) => known + sym(&grown),
+                None => sym(&grown),
+            });
+        }
+        added
     }
 
     fn capacity(&self, sheet: &mut Sheet, pair: &StateFindings) {

@@ -1,10 +1,10 @@
 //! Stiffness, contact pressure, stresses, capacity and strength at the shop temperature.
 
 use super::super::expression::{Expression, greatest, num, sym};
-use super::super::{Findings, PairFindings, RingStress, plastic_share_of_pressure};
+use super::super::{Findings, PairFindings, RingStress};
 use super::Units;
 use super::sheet::Sheet;
-use crate::joint::{Allow, Ring};
+use crate::joint::Ring;
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
 
@@ -18,7 +18,7 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     pressures(sheet, findings, units);
     capacity(sheet, findings, units);
     sheet.section("Stress at the tightest pair, shop temperature");
-    if plastic_shares(findings).is_none() {
+    if !hub_yields(findings) {
         hub_stress(sheet, findings, hub, units);
     }
     shaft_stress(sheet, findings, shaft, units);
@@ -102,20 +102,16 @@ fn elastic_pressure(pair: &PairFindings) -> f64 {
     if pair.smoothing > 0.0 { pair.pressure_smoothed } else { pair.pressure_unsmoothed }
 }
 
-/// Share that the plastic hub keeps of the elastic pressure, for each pair of a hub that yields by design.
-pub(super) fn plastic_shares(findings: &Findings) -> Option<[f64; 3]> {
-    let Allow::Plastic { .. } = findings.joint.require.allow else { return None };
-    let plastic = findings.service.plastic.as_ref()?;
-    let shares = [&plastic.loosest, &plastic.mean, &plastic.tightest].map(plastic_share_of_pressure);
-    shares.iter().any(|share| *share < 1.0).then_some(shares)
+/// Whether a hub that may yield by design does so, at any pair or in any state.
+pub(super) fn hub_yields(findings: &Findings) -> bool {
+    let Some(plastic) = &findings.service.plastic else { return false };
+    plastic.worn.as_ref().is_some_and(|worn| worn.tightest > 0.0)
 }
 
-/// The pressures of the elastic-plastic hub, and the shares of the elastic ones that they are.
+/// The pressures of the elastic-plastic hub as assembled, and what stays of its growth.
 fn plastic(sheet: &mut Sheet, findings: &Findings, units: &Units) {
-    if plastic_shares(findings).is_none() {
-        return;
-    }
     let Some(plastic) = &findings.service.plastic else { return };
+    let Some(worn) = plastic.worn.as_ref().filter(|_| hub_yields(findings)) else { return };
     sheet.section(format!("Elastic-plastic hub, {} rule, at rest", findings.joint.require.yield_rule.name()));
     let source = "elastic-plastic disc: Kollmann, Welle-Nabe-Verbindungen (1984); von Mises: Nadai (1950)";
     for (tag, name, state) in [
@@ -123,25 +119,21 @@ fn plastic(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         ("m", "mean", &plastic.mean),
         ("max", "tightest", &plastic.tightest),
     ] {
-        let symbol = format!("P_{tag}");
         sheet.input(
-            &symbol,
+            &format!("P_{tag}"),
             &format!("pressure of the hub that yields, {name} pair"),
             state.pressure * units.per_pascal,
             units.pressure,
             source,
         );
-        let share = sym(&symbol) / sym(&format!("p_{tag}"));
-        let meaning = format!("share of the elastic pressure, {name} pair");
-        sheet.formula(
-            &format!("k_{tag}"),
-            &meaning,
-            share,
-            "",
-            "quotient",
-            Some(plastic_share_of_pressure(state)),
-        );
     }
+    sheet.input(
+        "G_min",
+        "growth of the hub's bore that stays, loosest pair, after the hardest state",
+        worn.loosest * units.per_metre,
+        units.length,
+        source,
+    );
 }
 
 /// max(0, (W/1000 + d (ε_s − ε_h)) / (d (C_h/E_h + C_s/E_s))).
@@ -184,7 +176,7 @@ fn capacity(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     sheet.formula(
         "F_cap",
         "axial force at slip",
-        axial(if plastic_shares(findings).is_some() { "P_min" } else { "p_min" }),
+        axial(if hub_yields(findings) { "P_min" } else { "p_min" }),
         units.force,
         "equilibrium; DIN 7190-1",
         Some(pair.axial_capacity * units.per_newton),
@@ -241,7 +233,7 @@ fn shaft_stress(sheet: &mut Sheet, findings: &Findings, shaft: &Ring, units: &Un
     let Some(stress) = findings.extremes.tightest.rings.first() else { return };
     let pa = |value: f64| Some(value * units.per_pascal);
     let solid = shaft.inner_diameter == 0.0;
-    let pressure = || sym(if plastic_shares(findings).is_some() { "P_max" } else { "p_max" });
+    let pressure = || sym(if hub_yields(findings) { "P_max" } else { "p_max" });
     let (meaning, hoop, program) = if solid {
         ("hoop stress in the solid shaft, everywhere", -pressure(), stress.rim.hoop)
     } else {
@@ -250,6 +242,12 @@ fn shaft_stress(sheet: &mut Sheet, findings: &Findings, shaft: &Ring, units: &Un
     };
     sheet.formula("sigma_ts", meaning, hoop, units.pressure, LAME, pa(program));
     let equivalent = match shaft.material.kind {
+        Kind::Brittle if shaft.tension_share() > 0.0 => {
+            let meaning = format!("tensile over compressive strength of the {}", shaft.name);
+            let source = shaft.material.compressive_strength.as_ref().map_or("", |value| &value.source);
+            sheet.input("k_s", &meaning, shaft.tension_share(), "", source);
+            -(sym("sigma_ts") * sym("k_s"))
+        }
         Kind::Brittle => greatest([num("0"), sym("sigma_ts")]),
         Kind::Ductile | Kind::Polymer => sym("sigma_ts").call(super::super::expression::Function::Abs),
     };

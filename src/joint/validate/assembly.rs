@@ -1,7 +1,9 @@
 //! How the joint is put together.
 
+use super::practice;
+use crate::joint::assembly_keys::AssemblyKeys;
 use crate::joint::draft::Draft;
-use crate::joint::file::{AssemblyKeys, JointFile};
+use crate::joint::file::JointFile;
 use crate::joint::written::Written;
 use crate::joint::{AssemblyPlan, Bath, Method, Ring};
 use crate::material::{REFERENCE_TEMPERATURE, Sourced};
@@ -81,6 +83,7 @@ pub(super) fn plan(
         let limit = hub_limit(draft, given, shop)?;
         hub_temperature_limit = Some(hub_temperature_limit.map_or(limit, |lower| lower.min(limit)));
     }
+    let practice = practice::practice(draft, keys, method, shop, rings.unwrap_or_default());
     remark_on_idle_limits(draft, file, method);
     Some(AssemblyPlan {
         method: method?,
@@ -89,6 +92,7 @@ pub(super) fn plan(
         chamfer_angle: chamfer_angle?,
         bath: bath?,
         hub_temperature_limit,
+        practice: practice?,
     })
 }
 
@@ -154,7 +158,8 @@ fn remark_on_idle_limits(draft: &mut Draft<'_>, file: &JointFile, method: Option
     let heats = matches!(method, Some(Method::HeatHub | Method::HeatAndChill));
     if require.hub_temperature.is_some() && !heats {
         draft.remarks.push(
-            "The limit require.hub_temperature is not judged: the method of assembly does not heat the hub.".into(),
+            "The limit require.hub_temperature is not judged: the method of assembly does not heat the hub."
+                .into(),
         );
     }
     if require.press_force.is_some() && method.is_some_and(|method| method != Method::Press) {

@@ -8,6 +8,7 @@ use crate::joint::file::{JointFile, StateKeys};
 use crate::joint::leaf::FlagWord;
 use crate::joint::written::{At, Leaf, Written};
 use crate::joint::{DutyState, Ring};
+use crate::quantity::Number;
 
 /// The service states; one at the shop temperature without load when the file names none.
 pub(super) fn states(
@@ -68,6 +69,7 @@ fn state(
     let radial_force = size(draft, keys.radial_force.as_ref());
     let rotating_bending = flag(draft, keys.rotating_bending.as_ref());
     let reversing = flag(draft, keys.reversing.as_ref());
+    let relaxation = relaxation(draft, keys.relaxation.as_ref());
     let heat = heat?;
     Some(DutyState {
         torque: torque?,
@@ -80,6 +82,7 @@ fn state(
         radial_force: radial_force?,
         rotating_bending: rotating_bending?,
         reversing: reversing?,
+        relaxation: relaxation?,
         ..DutyState::unloaded(name, heat.inner)
     })
 }
@@ -90,6 +93,17 @@ fn size<L: Leaf<Value = f64>>(draft: &Draft<'_>, given: Option<&Written<L>>) -> 
         None => Some(0.0),
         Some(given) => draft.not_negative(given),
     }
+}
+
+/// All of the pressure when the file is silent.
+fn relaxation(draft: &Draft<'_>, given: Option<&Written<Number>>) -> Option<f64> {
+    let Some(given) = given else { return Some(1.0) };
+    let share = draft.value(given)?;
+    if share > 0.0 && share <= 1.0 {
+        return Some(share);
+    }
+    draft.refuse(given, "must be more than 0 and at most 1: the share of the pressure that is left");
+    None
 }
 
 /// No when the file is silent.

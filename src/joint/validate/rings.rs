@@ -98,12 +98,8 @@ pub(super) fn fits(draft: &mut Draft<'_>, file: &JointFile, rings: Option<&[Ring
     let list = draft.required(draft.tree.root(), "fits", "[H7/s6, H7/s6]", file.fits.as_ref())?;
     let rings = rings?;
     if list.value.len() + 1 != rings.len() {
-        let fault = format!(
-            "{} rings have {} fits, but {} are given",
-            rings.len(),
-            rings.len() - 1,
-            list.value.len()
-        );
+        let fault =
+            format!("{} rings need {} fits, {} given", rings.len(), rings.len() - 1, list.value.len());
         draft.faults.add(Fault::value(list.node, fault).help("give one fit between each two neighbours"));
         return None;
     }

@@ -13,6 +13,8 @@
 //! | `expansion` | `11.5e-6 /K`, the name of a shared curve, or a table: [`ExpansionRecord`] | yes |
 //! | `yield_strength`, `tensile_strength` | `355 MPa` | these two or `strength` |
 //! | `strength` | rows by ruling section: [`StrengthRecord`] | |
+//! | `compressive_strength` | of a brittle material, `840 MPa` | no |
+//! | `long_term_strength` | stress that a polymer bears for its life, `12 MPa` | no |
 //! | `conductivity`, `specific_heat` | `45 W/m.K`, `480 J/kg.K` | no |
 //! | `max_temperature` | highest temperature for assembly, `350 degC` | no |
 //! | `low_temperature_caution`, `notes`, `source` | text | no |
@@ -79,6 +81,10 @@ pub struct MaterialRecord {
     pub tensile_strength: Option<Value<Pressure>>,
     /// Strengths by ruling section.
     pub strength: Option<StrengthRecord>,
+    /// Compressive strength of a brittle material.
+    pub compressive_strength: Option<Value<Pressure>>,
+    /// Stress that a polymer bears for its life.
+    pub long_term_strength: Option<Value<Pressure>>,
     /// Thermal conductivity at room temperature.
     pub conductivity: Option<Value<Conductivity>>,
     /// Specific heat at room temperature.
@@ -117,9 +123,18 @@ impl MaterialRecord {
         check_positive("conductivity", conductivity.as_ref())?;
         check_positive("specific_heat", specific_heat.as_ref())?;
         check_max_temperature(max_temperature.as_ref())?;
+        let compressive_strength =
+            self.compressive_strength.map(|value| value.sourced(&source, |stress| stress.0));
+        let long_term_strength =
+            self.long_term_strength.map(|value| value.sourced(&source, |stress| stress.0));
+        check_only_of(self.kind, Kind::Brittle, "compressive_strength", compressive_strength.as_ref())?;
+        check_only_of(self.kind, Kind::Polymer, "long_term_strength", long_term_strength.as_ref())?;
         let expansion = self.expansion.into_expansion(&source).map_err(|error| error.under("expansion"))?;
-        let strength =
+        let mut strength =
             strengths(self.kind, self.strength, self.yield_strength, self.tensile_strength, &source)?;
+        if let Some(limit) = &long_term_strength {
+            strength.iter_mut().for_each(|row| limit_to(row, limit));
+        }
         let id = self.id.unwrap_or_else(|| id_default.to_owned());
         Ok(Material {
             name: self.name.unwrap_or_else(|| id.clone()),
@@ -133,6 +148,8 @@ impl MaterialRecord {
             density,
             expansion,
             strength,
+            compressive_strength,
+            long_term_strength,
             conductivity,
             specific_heat,
             max_temperature,
@@ -159,6 +176,29 @@ fn strengths(
         Some(rows) => rows.into_rows(kind, source).map_err(|error| error.under("strength")),
         None => strength::single_row(kind, yield_strength, tensile_strength, source),
     }
+}
+
+/// Puts the stress borne for life in place of a greater yield strength.
+fn limit_to(row: &mut Strength, limit: &Sourced<f64>) {
+    if row.yield_strength.is_some_and(|strength| strength > limit.value) {
+        row.yield_strength = Some(limit.value);
+        row.source = Arc::from(format!("stress borne for life: {}", limit.source));
+    }
+}
+
+/// A value that materials of one kind have, and that is positive.
+fn check_only_of(
+    kind: Kind,
+    due: Kind,
+    key: &str,
+    value: Option<&Sourced<f64>>,
+) -> Result<(), MaterialError> {
+    let Some(value) = value else { return Ok(()) };
+    if kind != due {
+        let name = format!("{due:?}").to_lowercase();
+        return Err(MaterialError::new(format!("{key} is of a {name} material")).under(key));
+    }
+    check_positive(key, Some(value))
 }
 
 fn check_positive(key: &str, value: Option<&Sourced<f64>>) -> Result<(), MaterialError> {

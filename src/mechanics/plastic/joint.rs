@@ -110,7 +110,7 @@ impl PlasticJoint {
         let onset_pressure = hub.onset_pressure();
         let limits = PlasticLimits {
             onset_pressure,
-            onset_interference: onset_pressure * elastic_flexibility(&rings) * rings.diameter,
+            onset_interference: interference_at(&rings, &hub, 1.0)?,
             limit_pressure: limit.pressure,
             limit_plastic_ratio: limit.plastic_ratio,
             limit_interference: interference_at(&rings, &hub, limit.plastic_ratio)?,

@@ -31,7 +31,9 @@ pub struct PermanentGrowth {
     /// Growth of the outer diameter.
     pub rim: f64,
     /// The bore would yield in compression on the way out, so the elastic recovery does not hold and the growth
-    /// is overstated: residual hoop stress below −Re, for Tresca the same as p > Re (1 − Q²).
+    /// is overstated: residual hoop stress below −Re, for Tresca the same as p > Re (1 − Q²). The bore is then
+    /// uniaxial, so the modified rule, too, is held against Re. Overstated by at most 0.7 % (Tresca) and 3.3 %
+    /// (von Mises) in finite elements of hubs from Q = 0.1 on, close to the pressure cap.
     pub reverse_yield: bool,
 }
 

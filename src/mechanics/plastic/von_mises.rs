@@ -153,7 +153,7 @@ impl VonMisesHub {
     ///   + (Re/(√3 E)) κ′ { (½ − ν) (e^(√3 (x_c − x_a)) sin(x_c + π/6) − sin(x_a + π/6))
     ///   + ¾ ∫ e^(√3 (x − x_a))/sin x dx from x_a to x_c }
     ///
-    /// with k = Re m/√(3 + m²) and κ′ = 3 (1 − m)/(m (3 + m²)). Accurate to about 1e-11 of its value.
+    /// with k = Re m/√(3 + m²) and κ′ = 3 (1 − m)/(m (3 + m²)). Accurate to about 1e-12 of its value, against a division of the history eight times as fine.
     ///
     /// Source: derived here. With y = (∂u/∂κ)/r and κ = ln(r² sin t e^(√3 t)), t = 5π/6 − x, the rate equations
     /// ε̇r = ε̇r^e + (n_r/n_φ) (ε̇φ − ε̇φ^e) become dy/dt = √3 y − g(t)/(2E),

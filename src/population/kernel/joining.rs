@@ -44,7 +44,7 @@ impl<'a> PlainJoining<'a> {
         };
         Ok(Self {
             diameter: joint.diameter,
-            clearance: joint.assembly.clearance.value,
+            clearance: joint.assembly.clearance_to_open(),
             shop_temperature,
             hub: &outer.material.expansion,
             shaft: &inner.material.expansion,

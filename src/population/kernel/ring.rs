@@ -26,9 +26,9 @@ pub struct PlainRing {
 }
 
 /// How the stress at a face is measured against the strength.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+#[derive(Debug, Clone, Copy, PartialEq)]
 enum Measure {
-    GreatestPrincipal,
+    Brittle { tension_share: f64 },
     VonMises,
     Tresca,
 }
@@ -36,7 +36,7 @@ enum Measure {
 impl Measure {
     fn of(self, stress: Stress) -> f64 {
         match self {
-            Self::GreatestPrincipal => criteria::greatest_principal(stress.radial, stress.hoop),
+            Self::Brittle { tension_share } => criteria::brittle(stress.radial, stress.hoop, tension_share),
             Self::VonMises => criteria::von_mises(stress.radial, stress.hoop),
             Self::Tresca => criteria::tresca(stress.radial, stress.hoop),
         }
@@ -88,7 +88,7 @@ impl PlainRing {
     fn under(ring: &Ring, criterion: DuctileCriterion, load: RingLoad) -> Result<Self, MechanicsError> {
         let (unit, _) = base(ring, &load, 0.5 * ring.outer_diameter)?;
         let measure = match (ring.material.kind, criterion) {
-            (Kind::Brittle, _) => Measure::GreatestPrincipal,
+            (Kind::Brittle, _) => Measure::Brittle { tension_share: ring.tension_share() },
             (_, DuctileCriterion::VonMises) => Measure::VonMises,
             (_, DuctileCriterion::Tresca) => Measure::Tresca,
         };

@@ -1,11 +1,13 @@
 //! Dimension lines with arrows and figures (ISO 129-1:2018).
 
 use super::section::NARROW;
-use crate::report::svg::{Anchor, INK, Lettering, Point, Sketch, closed};
+use crate::report::svg::{Anchor, INK, Lettering, Point, QUIET, Sketch, closed};
 use crate::report::text_width::fitted;
 
 /// Type size of figures, mm: capitals of 2.5 mm (ISO 3098-1:2015).
 pub(super) const TYPE: f64 = 3.4;
+/// Type size of notes beside a dimension, mm.
+const SMALL: f64 = 2.4;
 const ARROW: f64 = 2.6;
 /// Extension lines begin this far from the outline and end this far beyond the dimension line, mm.
 const CLEAR: f64 = 0.8;
@@ -22,11 +24,21 @@ pub(super) struct Diameter {
     /// Radius on paper.
     pub radius: f64,
     pub text: String,
+    /// Small lettering on the other side of the line, where it has room.
+    note: Option<Lettering>,
 }
 
 impl Diameter {
     pub(super) fn new(from: f64, at: f64, radius: f64, text: &str) -> Self {
-        Self { from, at, radius, text: fitted(text, TYPE, LONGEST) }
+        Self { from, at, radius, text: fitted(text, TYPE, LONGEST), note: None }
+    }
+
+    /// With a note, left out when it is longer than its line.
+    pub(super) fn noted(mut self, note: Option<String>) -> Self {
+        let note =
+            note.map(|text| Lettering::new(text, SMALL).upright().colour(QUIET).anchor(Anchor::Middle));
+        self.note = note.filter(|note| note.width() <= 2.0 * self.radius - 2.0 * ARROW);
+        self
     }
 
     fn lettering(&self) -> Lettering {
@@ -57,6 +69,9 @@ impl Diameter {
         if self.has_room() {
             sketch.line(top, base, NARROW);
             sketch.text((baseline, centre), &self.lettering().anchor(Anchor::Middle));
+            if let Some(note) = &self.note {
+                sketch.text((self.at + 0.7 + 0.8 * SMALL, centre), note);
+            }
         } else {
             sketch.line(top, (self.at, bottom + self.below()), NARROW);
             sketch.text((baseline, bottom + 4.0), &self.lettering().anchor(Anchor::End));
@@ -78,6 +93,9 @@ pub(super) struct Length {
 }
 
 impl Length {
+    /// From the end of the line to the figure beside it, at most, mm.
+    pub(super) const BEFORE_TEXT: f64 = 2.0 * ARROW + 1.0;
+
     pub(super) fn lettering(&self) -> Lettering {
         Lettering::new(fitted(&self.text, TYPE, LONGEST), TYPE)
     }

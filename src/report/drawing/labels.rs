@@ -1,6 +1,7 @@
 //! Names, materials and surfaces on leader lines above the section.
 
 use super::dimension::TYPE;
+use super::profile::Segment;
 use super::scale::Layout;
 use super::section::{Band, NARROW, Place};
 use crate::joint::Joint;
@@ -60,18 +61,20 @@ pub(super) fn height(rows: usize) -> f64 {
     ROW * rows as f64
 }
 
+/// What the leaders point into.
+#[derive(Clone, Copy)]
+pub(super) struct Targets<'a> {
+    pub layout: &'a Layout,
+    pub place: Place,
+    pub segments: &'a [Segment],
+    pub bands: &'a [Band],
+}
+
 /// Draws rows and leaders; a leader further to the right belongs to a lower row, so that none is crossed.
-pub(super) fn draw(
-    sketch: &mut Sketch,
-    rows: &[Label],
-    layout: &Layout,
-    place: Place,
-    bands: &[Band],
-    width: f64,
-) {
+pub(super) fn draw(sketch: &mut Sketch, rows: &[Label], targets: Targets, width: f64) {
     for (row, label) in rows.iter().enumerate() {
         let baseline = baseline(row);
-        let target = target(label, row, rows.len(), layout, place, bands);
+        let target = targets.of(label, row, rows.len());
         let bend = (target.0 + LEAN * (target.1 - baseline), baseline - 0.35 * TYPE);
         let start = bend.0 + SHOULDER;
         sketch.path(&chain(&[target, bend, (start - 0.6, bend.1)]), NARROW);
@@ -81,9 +84,9 @@ pub(super) fn draw(
 }
 
 /// How far to the right the rows reach when none is cut, mm.
-pub(super) fn reach(rows: &[Label], layout: &Layout, place: Place, bands: &[Band]) -> f64 {
+pub(super) fn reach(rows: &[Label], targets: Targets) -> f64 {
     let end = |(row, label): (usize, &Label)| {
-        let target = target(label, row, rows.len(), layout, place, bands);
+        let target = targets.of(label, row, rows.len());
         target.0 + LEAN * (target.1 - baseline(row)) + SHOULDER + label.width() + 1.5
     };
     rows.iter().enumerate().map(end).fold(0.0, f64::max)
@@ -106,24 +109,41 @@ impl Label {
     }
 }
 
-/// The point inside the part that the leader ends on.
-fn target(label: &Label, row: usize, rows: usize, layout: &Layout, place: Place, bands: &[Band]) -> Point {
-    let Some(ring) = label.ring else {
-        let last = bands.len();
-        let radius = layout.radial[last].to + 0.5 * bands.last().map_or(0.0, |band| band.height.abs());
-        return (along(row, rows, place), place.centre - radius);
-    };
-    let wall = layout.radial[ring + 1];
-    // Beside the break and the mating surface, where the part is hatched.
-    let radius = if wall.broken { wall.from + 0.78 * (wall.to - wall.from) } else { wall.middle() };
-    let radius = if ring == 0 && wall.from == 0.0 { radius.max(0.6 * wall.to) } else { radius };
-    let x = if ring == 0 { place.hub_left - 5.0 } else { along(row, rows, place) };
-    (x, place.centre - radius)
+impl Targets<'_> {
+    /// The point inside the part that the leader ends on.
+    fn of(&self, label: &Label, row: usize, rows: usize) -> Point {
+        let (layout, place) = (self.layout, self.place);
+        let Some(ring) = label.ring else {
+            let last = self.bands.len();
+            let radius =
+                layout.radial[last].to + 0.5 * self.bands.last().map_or(0.0, |band| band.height.abs());
+            return (along(row, rows, place), place.centre - radius);
+        };
+        let x = if ring == 0 { place.hub_left - 5.0 } else { along(row, rows, place) };
+        let wall = layout.radial[ring + 1];
+        let (inner, outer) = self.wall_at(ring, x);
+        // Beside the break and the centre line, where the part is hatched.
+        let share = if wall.broken { 0.78 } else { 0.5 };
+        let radius = inner + share * (outer - inner);
+        let radius = if ring == 0 && inner == 0.0 { radius.max(0.6 * outer) } else { radius };
+        (x, place.centre - radius)
+    }
+
+    /// Inner and outer radius of a ring at a place along the joint.
+    fn wall_at(&self, ring: usize, x: f64) -> (f64, f64) {
+        let wall = self.layout.radial[ring + 1];
+        let segment = self.segments.iter().find(|segment| x <= segment.right).or(self.segments.last());
+        let last = ring + 2 == self.layout.radial.len();
+        let inner = if ring == 0 { segment.map_or(wall.from, |segment| segment.bore) } else { wall.from };
+        let outer = if last { segment.map_or(wall.to, |segment| segment.rim) } else { wall.to };
+        (inner, outer)
+    }
 }
 
 /// Leaders that end within the hub stand at even distances along it.
 fn along(row: usize, rows: usize, place: Place) -> f64 {
-    let width = place.hub_right - place.hub_left - place.relief;
+    // Along a wide hub they stay together, so that the lettering has room on the right.
+    let width = (place.hub_right - place.hub_left - place.relief).min(13.0 * (rows as f64 - 1.0));
     place.hub_left + width * (row as f64 - 0.5) / (rows as f64 - 1.0)
 }
 

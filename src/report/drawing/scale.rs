@@ -1,7 +1,7 @@
 //! Scale of the section drawing and the lengths that are broken out of it.
 
 /// Half the height that the section may take on paper, mm.
-const HALF_HEIGHT: f64 = 42.0;
+const HALF_HEIGHT: f64 = 45.0;
 /// Least wall and least hub width that can still be hatched and dimensioned, mm.
 const LEAST_WALL: f64 = 2.8;
 const LEAST_WIDTH: f64 = 9.0;
@@ -46,9 +46,25 @@ pub(super) struct Layout {
     pub radial: Vec<Stretch>,
     /// The hub along the shaft.
     pub axial: Stretch,
+    /// True radii of the ends of the radial stretches, m.
+    radii: Vec<f64>,
 }
 
 impl Layout {
+    /// Radius on paper, mm, of a true radius, m; within a broken stretch in proportion to it.
+    pub(super) fn paper(&self, radius: f64) -> f64 {
+        let mut inner = 0.0;
+        for (outer, stretch) in self.radii.iter().zip(&self.radial) {
+            if radius <= *outer || (outer - radius).abs() < 1e-12 {
+                let width = outer - inner;
+                let share = if width > 0.0 { (radius - inner) / width } else { 1.0 };
+                return stretch.from + share * (stretch.to - stretch.from);
+            }
+            inner = *outer;
+        }
+        self.radial.last().map_or(0.0, |stretch| stretch.to)
+    }
+
     /// Whether any stretch is broken.
     pub(super) fn is_broken(&self) -> bool {
         self.axial.broken || self.radial.iter().any(|stretch| stretch.broken)
@@ -90,7 +106,7 @@ pub(super) fn layout(radii: &[f64], length: f64, room: f64) -> Layout {
         .collect();
     let width = (length * scale).min(room);
     let axial = Stretch { from: 0.0, to: width, broken: width < length * scale * (1.0 - 1e-9) };
-    Layout { scale, scale_text, radial, axial }
+    Layout { scale, scale_text, radial, axial, radii: radii.to_vec() }
 }
 
 /// The limit to which the largest sizes are cut so that all together take no more than `room`.
@@ -119,6 +135,7 @@ mod tests {
         assert!(!layout.is_broken());
         assert_eq!(layout.radial[1].to, 15.0);
         assert_eq!(layout.axial.to, 35.0);
+        assert_eq!([0.0, 0.030, 0.040, 0.055].map(|r| layout.paper(r)), [0.0, 15.0, 20.0, 27.5]);
     }
 
     #[test]

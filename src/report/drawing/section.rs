@@ -1,5 +1,6 @@
 //! The cut faces on paper: where each ring lies, its hatching, outlines, breaks and the interference.
 
+use super::profile::Segment;
 use super::scale::Layout;
 use crate::report::hatch::{Rectangle, hatching_of, lines};
 use crate::report::svg::{INK, Pen, Point, RULE, Sketch, TIGHTEST, chain, closed};
@@ -61,18 +62,18 @@ pub(super) fn bands(radial: &[f64], scale: f64) -> (f64, Vec<Band>) {
 }
 
 /// Draws the cut faces.
-pub(super) fn draw(sketch: &mut Sketch, layout: &Layout, place: Place, bands: &[Band]) {
-    for ring in 0..layout.radial.len() - 1 {
-        let faces = faces(layout, place, ring);
-        sketch.path(&lines(&faces, hatching_of(ring)), HATCH);
+pub(super) fn draw(sketch: &mut Sketch, layout: &Layout, place: Place, segments: &[Segment], bands: &[Band]) {
+    let section = Section { layout, place, segments };
+    for ring in 0..section.rings() {
+        sketch.path(&lines(&section.faces(ring), hatching_of(ring)), HATCH);
     }
-    for ring in 0..layout.radial.len() - 1 {
-        outline(sketch, layout, place, ring);
+    for ring in 0..section.rings() {
+        section.outline(sketch, ring);
     }
     for (ring, band) in bands.iter().enumerate() {
         interference(sketch, layout, place, ring, *band);
     }
-    breaks(sketch, layout, place);
+    breaks(sketch, layout, place, segments);
     sketch.line((place.shaft_left() - 4.0, place.centre), (place.shaft_right() + 4.0, place.centre), CENTRE);
 }
 
@@ -86,57 +87,106 @@ fn relief_depth(layout: &Layout) -> f64 {
     layout.radial.get(2).map_or(0.0, |wall| (0.3 * (wall.to - wall.from)).min(1.4))
 }
 
-/// The hatched rectangles of a ring, upper half and lower half.
-fn faces(layout: &Layout, place: Place, ring: usize) -> Vec<Rectangle> {
-    let (left, right) = ends(place, ring);
-    let wall = layout.radial[ring + 1];
-    let mut upper = vec![];
-    let relieved = ring == 1 && place.relief > 0.0;
-    let rectangle = |left, right, inner: f64| Rectangle {
-        left,
-        right,
-        top: place.centre - wall.to,
-        bottom: place.centre - inner,
-    };
-    if relieved {
-        upper.push(rectangle(left, right - place.relief, wall.from));
-        upper.push(rectangle(right - place.relief, right, wall.from + relief_depth(layout)));
-    } else {
-        upper.push(rectangle(left, right, wall.from));
-    }
-    let mirrored = upper.clone().into_iter().map(|face| Rectangle {
-        top: 2.0 * place.centre - face.bottom,
-        bottom: 2.0 * place.centre - face.top,
-        ..face
-    });
-    upper.into_iter().chain(mirrored).collect()
+/// What is cut, with where it lies.
+struct Section<'a> {
+    layout: &'a Layout,
+    place: Place,
+    segments: &'a [Segment],
 }
 
-/// Outline of a ring in both halves.
-fn outline(sketch: &mut Sketch, layout: &Layout, place: Place, ring: usize) {
-    let (left, right) = ends(place, ring);
-    let wall = layout.radial[ring + 1];
-    for side in [-1.0, 1.0] {
-        let y = |radius: f64| place.centre + side * radius;
+impl Section<'_> {
+    fn rings(&self) -> usize {
+        self.layout.radial.len() - 1
+    }
+
+    /// Bore of the shaft along its whole length: from, to, radius.
+    fn bores(&self) -> Vec<(f64, f64, f64)> {
+        let mut bores: Vec<(f64, f64, f64)> =
+            self.segments.iter().map(|segment| (segment.left, segment.right, segment.bore)).collect();
+        if let Some(first) = bores.first_mut() {
+            first.0 = self.place.shaft_left();
+        }
+        if let Some(last) = bores.last_mut() {
+            last.1 = self.place.shaft_right();
+        }
+        bores
+    }
+
+    /// The upper cut faces of a ring: left, right, inner and outer radius.
+    fn walls(&self, ring: usize) -> Vec<(f64, f64, f64, f64)> {
+        let wall = self.layout.radial[ring + 1];
         if ring == 0 {
-            sketch.path(&chain(&[(left, y(wall.to)), (right, y(wall.to))]), WIDE);
-            if wall.from > 0.0 {
-                sketch.path(&chain(&[(left, y(wall.from)), (right, y(wall.from))]), WIDE);
+            return self
+                .bores()
+                .into_iter()
+                .map(|(left, right, bore)| (left, right, bore, wall.to))
+                .collect();
+        }
+        let outermost = ring + 1 == self.rings();
+        let mut walls = Vec::new();
+        for segment in self.segments {
+            let outer = if outermost { segment.rim } else { wall.to };
+            let relief_from = self.place.hub_right - self.place.relief;
+            if ring == 1 && self.place.relief > 0.0 && segment.right > relief_from {
+                let from = relief_from.max(segment.left);
+                if from > segment.left {
+                    walls.push((segment.left, from, wall.from, outer));
+                }
+                walls.push((from, segment.right, wall.from + relief_depth(self.layout), outer));
+            } else {
+                walls.push((segment.left, segment.right, wall.from, outer));
             }
-            continue;
         }
-        let mut corners =
-            vec![(left, y(wall.from)), (left, y(wall.to)), (right, y(wall.to)), (right, y(wall.from))];
-        if ring == 1 && place.relief > 0.0 {
-            let depth = wall.from + relief_depth(layout);
-            corners.pop();
-            corners.extend([
-                (right, y(depth)),
-                (right - place.relief, y(depth)),
-                (right - place.relief, y(wall.from)),
-            ]);
+        walls
+    }
+
+    /// The hatched rectangles of a ring, upper half and lower half.
+    fn faces(&self, ring: usize) -> Vec<Rectangle> {
+        let centre = self.place.centre;
+        let of = |(left, right, inner, outer): (f64, f64, f64, f64)| {
+            [
+                Rectangle { left, right, top: centre - outer, bottom: centre - inner },
+                Rectangle { left, right, top: centre + inner, bottom: centre + outer },
+            ]
+        };
+        self.walls(ring).into_iter().flat_map(of).collect()
+    }
+
+    /// Outline of a ring in both halves.
+    fn outline(&self, sketch: &mut Sketch, ring: usize) {
+        let walls = self.walls(ring);
+        for side in [-1.0, 1.0] {
+            let y = |radius: f64| self.place.centre + side * radius;
+            let outer: Vec<Point> = walls
+                .iter()
+                .flat_map(|(left, right, _, outer)| [(*left, y(*outer)), (*right, y(*outer))])
+                .collect();
+            let inner =
+                walls.iter().flat_map(|(left, right, inner, _)| [(*left, y(*inner)), (*right, y(*inner))]);
+            if ring == 0 {
+                sketch.path(&chain(&outer), WIDE);
+                self.bore_line(sketch, side);
+                continue;
+            }
+            let mut corners = outer;
+            let inner: Vec<Point> = inner.collect();
+            corners.extend(inner.into_iter().rev());
+            sketch.path(&closed(&corners), WIDE);
         }
-        sketch.path(&closed(&corners), WIDE);
+    }
+
+    /// The bore of the shaft; where it is solid there is no line.
+    fn bore_line(&self, sketch: &mut Sketch, side: f64) {
+        let bores = self.bores();
+        let y = |radius: f64| self.place.centre + side * radius;
+        for (place, (left, right, bore)) in bores.iter().enumerate() {
+            if *bore > 0.0 {
+                sketch.line((*left, y(*bore)), (*right, y(*bore)), WIDE);
+            }
+            if let Some((_, _, next)) = bores.get(place + 1).filter(|(_, _, next)| next != bore) {
+                sketch.line((*right, y(*bore)), (*right, y(*next)), WIDE);
+            }
+        }
     }
 }
 
@@ -159,10 +209,8 @@ fn interference(sketch: &mut Sketch, layout: &Layout, place: Place, ring: usize,
 }
 
 /// Break lines: the ends of the shaft and whatever is broken out.
-fn breaks(sketch: &mut Sketch, layout: &Layout, place: Place) {
-    let bore = layout.radial[0].to;
+fn breaks(sketch: &mut Sketch, layout: &Layout, place: Place, segments: &[Segment]) {
     let shaft = layout.radial[1].to;
-    let rim = layout.radial.last().map_or(shaft, |wall| wall.to);
     for (ring, wall) in layout.radial.iter().enumerate() {
         if wall.broken {
             let (left, right) = ends(place, ring.saturating_sub(1));
@@ -171,15 +219,19 @@ fn breaks(sketch: &mut Sketch, layout: &Layout, place: Place) {
             }
         }
     }
-    let spans = |outer: f64| -> Vec<(f64, f64)> {
+    let spans = |bore: f64, outer: f64| -> Vec<(f64, f64)> {
         if bore > 0.0 {
             vec![(place.centre - outer, place.centre - bore), (place.centre + bore, place.centre + outer)]
         } else {
             vec![(place.centre - outer, place.centre + outer)]
         }
     };
-    for span in spans(shaft) {
-        for (x, outside) in [(place.shaft_left(), -2.0), (place.shaft_right(), 2.0)] {
+    let bore = |segment: Option<&Segment>| segment.map_or(0.0, |segment| segment.bore);
+    for (x, outside, bore) in [
+        (place.shaft_left(), -2.0, bore(segments.first())),
+        (place.shaft_right(), 2.0, bore(segments.last())),
+    ] {
+        for span in spans(bore, shaft) {
             let wave = wave(span, x, false);
             let mut blank = wave.clone();
             blank.extend([(x + outside, span.1), (x + outside, span.0)]);
@@ -188,9 +240,12 @@ fn breaks(sketch: &mut Sketch, layout: &Layout, place: Place) {
         }
     }
     if layout.axial.broken {
-        let middle = 0.5 * (place.hub_left + place.hub_right);
-        for (from, to) in spans(rim) {
-            gap(sketch, middle, (from - 0.6, to + 0.6), false);
+        // Through the longest piece, where most is left out.
+        let longest = segments.iter().max_by(|a, b| (a.right - a.left).total_cmp(&(b.right - b.left)));
+        if let Some(segment) = longest {
+            for (from, to) in spans(segment.bore, segment.rim) {
+                gap(sketch, 0.5 * (segment.left + segment.right), (from - 0.6, to + 0.6), false);
+            }
         }
     }
 }

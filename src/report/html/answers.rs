@@ -6,6 +6,8 @@ use super::table::{NONE, safety, scrolling};
 use super::{Sheet, capital};
 use crate::findings::{Question, Verdict, VerdictUnit};
 use crate::joint::Method;
+use crate::report::seating::time_allowed;
+use crate::report::typeset::prose;
 use crate::report::units::{Measure, Units};
 
 /// Sentence and table.
@@ -49,7 +51,7 @@ fn hold(sheet: Sheet) -> String {
     let Some(verdict) = governing(sheet, Question::Hold) else { return String::new() };
     match (verdict.ok, verdict.found) {
         (true, Some(found)) => format!("holds with {} against slip ({})", safety(found), verdict.at),
-        (true, None) => "nothing loads the joint in the duty states".to_owned(),
+        (true, None) => format!("holding is not judged ({})", verdict.at),
         (false, found) => format!("does NOT hold: {}", shortfall(sheet.units, verdict, found)),
     }
 }
@@ -75,7 +77,7 @@ fn assembly(sheet: Sheet) -> String {
     if let Some(verdict) = missed {
         return format!("can NOT be joined as asked: {}", shortfall(units, verdict, verdict.found));
     }
-    match plan.method {
+    let way = match plan.method {
         Method::Press => {
             format!(
                 "press in with up to {}",
@@ -101,6 +103,10 @@ fn assembly(sheet: Sheet) -> String {
                 None => "heating and chilling together do not clear".to_owned(),
             }
         }
+    };
+    match assembly.times.handling.as_ref().and_then(|handling| handling.tightest.gone) {
+        Some(gone) => format!("{way} and seat it within {}", time_allowed(gone)),
+        None => way,
     }
 }
 
@@ -123,6 +129,7 @@ fn shown(units: Units, unit: VerdictUnit, value: f64) -> String {
         VerdictUnit::Force => units.brief(Measure::Force, value).text(),
         VerdictUnit::Temperature => units.text(Measure::Temperature, value),
         VerdictUnit::Share => format!("{:.1}\u{2009}%", value * 100.0),
+        VerdictUnit::Time => prose(&time_allowed(value)),
     }
 }
 
@@ -170,7 +177,7 @@ fn required(sheet: Sheet, verdict: &Verdict) -> String {
     let Some(value) = verdict.required else { return "none set".to_owned() };
     let chilled = sheet.findings.joint.assembly.method == Method::ChillShaft;
     let sense = match verdict.unit {
-        VerdictUnit::Safety => "≥",
+        VerdictUnit::Safety | VerdictUnit::Time => "≥",
         VerdictUnit::Temperature if chilled => "≥",
         VerdictUnit::Force | VerdictUnit::Temperature | VerdictUnit::Share => "≤",
     };

@@ -1,4 +1,4 @@
-//! The duty states, a row each.
+//! The duty states, a row each: what loads the joint, and what was found at both extremes.
 
 use maud::{Markup, html};
 
@@ -8,52 +8,125 @@ use crate::findings::StateFindings;
 use crate::joint::DutyState;
 use crate::report::units::Measure;
 
-/// The table.
+/// The tables.
 pub(super) fn body(sheet: Sheet) -> Markup {
+    html! {
+        (scrolling("Loads of the duty states", "duty", &loads(sheet)))
+        (scrolling("Duty states at both extremes", "duty", &found(sheet)))
+        p.small {
+            "Slip is judged at the loosest pair, strength at the tightest. Temperatures are those of the rings from the "
+            "innermost outwards, in a radial gradient from face to face."
+        }
+    }
+}
+
+/// A load that has a column when any state has it.
+struct Load {
+    name: &'static str,
+    measure: Measure,
+    of: fn(&DutyState) -> f64,
+    always: bool,
+}
+
+const LOADS: [Load; 7] = [
+    Load { name: "torque", measure: Measure::Torque, of: |state| state.torque, always: true },
+    Load { name: "axial force", measure: Measure::Force, of: |state| state.axial_force, always: true },
+    Load { name: "speed", measure: Measure::Speed, of: |state| state.speed, always: false },
+    Load {
+        name: "bending moment",
+        measure: Measure::Torque,
+        of: |state| state.bending_moment,
+        always: false,
+    },
+    Load { name: "radial force", measure: Measure::Force, of: |state| state.radial_force, always: false },
+    Load {
+        name: "pressure inside",
+        measure: Measure::Pressure,
+        of: |state| state.inner_pressure,
+        always: false,
+    },
+    Load {
+        name: "pressure outside",
+        measure: Measure::Pressure,
+        of: |state| state.outer_pressure,
+        always: false,
+    },
+];
+
+fn loads(sheet: Sheet) -> Markup {
+    let duty = &sheet.findings.joint.duty;
+    let shown: Vec<&Load> =
+        LOADS.iter().filter(|load| load.always || duty.iter().any(|state| (load.of)(state) != 0.0)).collect();
+    let remarks = duty.iter().any(|state| !remark(state).is_empty());
+    html! {
+        thead {
+            tr {
+                th scope="col" { "State" }
+                @for load in &shown { (head(load.name, &sheet.units.unit(load.measure))) }
+                (head("temperature", &sheet.units.unit(Measure::Temperature)))
+                @if remarks { th scope="col" { "Kind" } }
+            }
+        }
+        tbody {
+            @for state in duty {
+                tr {
+                    th scope="row" { (state.name) }
+                    @for load in &shown { (cell(sheet.units, load.measure, Some((load.of)(state)))) }
+                    td.n { (temperatures(sheet, state)) }
+                    @if remarks { td { (remark(state)) } }
+                }
+            }
+        }
+    }
+}
+
+fn remark(state: &DutyState) -> String {
+    let mut remarks = Vec::new();
+    if state.reversing {
+        remarks.push("torque reverses");
+    }
+    if state.rotating_bending {
+        remarks.push("bending turns with the shaft");
+    }
+    remarks.join(", ")
+}
+
+fn found(sheet: Sheet) -> Markup {
     let joint = &sheet.findings.joint;
-    let safeties: Vec<String> = joint.rings.iter().map(|ring| format!("safety, {}", ring.name)).collect();
     let units = sheet.units;
-    let table = html! {
+    let bending = sheet.findings.duty.iter().any(|duty| duty.loosest.bending.is_some());
+    html! {
         thead {
             tr {
                 th rowspan="2" scope="col" { "State" }
-                th colspan="3" scope="colgroup" { "Load" }
-                th colspan="4" scope="colgroup" { span.loosest { "○ loosest" } }
-                th colspan=(1 + safeties.len()) scope="colgroup" { span.tightest { "● tightest" } }
+                th colspan=(4 + usize::from(bending)) scope="colgroup" { span.loosest { "○ loosest" } }
+                th colspan=(1 + joint.rings.len()) scope="colgroup" { span.tightest { "● tightest" } }
             }
             tr {
-                (head("torque", &units.unit(Measure::Torque)))
-                (head("axial force", &units.unit(Measure::Force)))
-                (head("temperature", &units.unit(Measure::Temperature)))
                 (head("pressure", &units.unit(Measure::Pressure)))
+                @if bending { (head("at the edge, least", &units.unit(Measure::Pressure))) }
                 (head("torque at slip", &units.unit(Measure::Torque)))
                 (head("axial at slip", &units.unit(Measure::Force)))
-                (head("slip safety", ""))
+                (head("safety against slip", ""))
                 (head("pressure", &units.unit(Measure::Pressure)))
-                @for name in &safeties { (head(name, "")) }
+                @for ring in &joint.rings { (head(&format!("safety, {}", ring.name), "")) }
             }
         }
         tbody {
             @for (state, found) in joint.duty.iter().zip(&sheet.findings.duty) {
                 tr {
                     th scope="row" { (state.name) }
-                    (cell(units, Measure::Torque, Some(state.torque)))
-                    (cell(units, Measure::Force, Some(state.axial_force)))
-                    td.n { (temperatures(sheet, state)) }
                     (cell(units, Measure::Pressure, Some(found.loosest.pressure)))
+                    @if bending {
+                        (cell(units, Measure::Pressure, found.loosest.bending.map(|bending| bending.least_edge)))
+                    }
                     (cell(units, Measure::Torque, Some(found.loosest.torque_capacity)))
                     (cell(units, Measure::Force, Some(found.loosest.axial_capacity)))
                     (optional_safety(found.loosest.slip_safety))
                     (cell(units, Measure::Pressure, Some(found.tightest.pressure)))
-                    (ring_safeties(&found.tightest, safeties.len()))
+                    (ring_safeties(&found.tightest, joint.rings.len()))
                 }
             }
-        }
-    };
-    html! {
-        (scrolling("Duty states", "duty", &table))
-        p.small {
-            "Slip is judged at the loosest pair, strength at the tightest. Temperatures are those of the rings from the innermost outwards."
         }
     }
 }
@@ -77,12 +150,17 @@ fn ring_safeties(state: &StateFindings, count: usize) -> Markup {
     }
 }
 
-/// One number when all rings are as warm as each other.
+/// One number when all rings are as warm as each other; from inner to outer face in a radial gradient.
 fn temperatures(sheet: Sheet, state: &DutyState) -> String {
+    let number = |kelvin: f64| sheet.units.reading(Measure::Temperature, kelvin).number;
     let mut all: Vec<String> = state
         .temperatures
         .iter()
-        .map(|value| sheet.units.reading(Measure::Temperature, *value).number)
+        .enumerate()
+        .map(|(ring, inner)| match state.temperature_rises.get(ring) {
+            Some(rise) if *rise != 0.0 => format!("{} to {}", number(*inner), number(inner + rise)),
+            _ => number(*inner),
+        })
         .collect();
     all.dedup();
     all.join(" / ")

@@ -2,12 +2,13 @@
 
 use maud::{Markup, html};
 
-use super::Sheet;
 use super::table::{aligned, cell, pair_heads, range_cell, scrolling};
-use crate::findings::{OnsetOfYield, PairFindings, RingStress};
+use super::{Sheet, part};
+use crate::findings::{InterfaceFindings, OnsetOfYield, PairFindings, RingStress};
 use crate::joint::{Ring, SmoothingAt};
 use crate::material::{Kind, Range};
 use crate::mechanics::criteria::DuctileCriterion;
+use crate::report::plot;
 use crate::report::units::Measure;
 
 /// The table with a line on how the pairs are made.
@@ -18,15 +19,20 @@ pub(super) fn body(sheet: Sheet) -> Markup {
         SmoothingAt::Both => "lost at every pair",
         SmoothingAt::None => "kept at every pair",
     };
-    let first = joint.fits.len() > 1;
     html! {
         p {
             "At the shop temperature of " (sheet.units.text(Measure::Temperature, joint.assembly.shop_temperature))
             " and at rest. The loosest pair is the largest hole with the smallest shaft, the tightest the smallest "
             "hole with the largest shaft. Interference is diametral; what the roughness peaks lose is " (smoothing) "."
-            @if first { " Interference and pressure are those of the innermost mating surface; every ring is listed." }
         }
         (scrolling("The extreme pairs", "extremes", &table(sheet)))
+        @if plot::yields_by_design(sheet.findings) {
+            @let hub = joint.rings.last().map_or("hub", |ring| ring.name.as_str());
+            p {
+                "The stresses of the " (hub) " in this table are those of an elastic " (hub) ": they show how far it is "
+                "beyond its elastic limit. As it yields it is shown in " (part("pictures")) " and told in " (part("service")) "."
+            }
+        }
         @if let Some(onset) = &sheet.findings.onset_of_yield { p { (first_yield(sheet, onset)) } }
     }
 }
@@ -53,11 +59,8 @@ fn table(sheet: Sheet) -> Markup {
         thead {
             tr { th scope="col" { "Quantity" } th scope="col" { "Unit" } (pair_heads(sheet)) }
         }
-        tbody {
-            (row(sheet, "interference", Measure::Deviation, |pair| Some(pair.interference)))
-            (row(sheet, "loss by smoothing", Measure::Deviation, |pair| Some(pair.smoothing)))
-            (row(sheet, "effective interference", Measure::Deviation, |pair| Some(pair.effective_interference)))
-            (row(sheet, "contact pressure", Measure::Pressure, |pair| Some(pair.pressure)))
+        @for index in 0..sheet.findings.joint.fits.len() {
+            tbody { (interface_rows(sheet, index)) }
         }
         @for (index, ring) in rings.iter().enumerate() {
             tbody { (ring_rows(sheet, index, ring)) }
@@ -69,6 +72,26 @@ fn table(sheet: Sheet) -> Markup {
             (range_row(sheet, "press force, greatest", Measure::Force, |pair| pair.press_force))
             (range_row(sheet, "release force", Measure::Force, |pair| pair.release_force))
         }
+    }
+}
+
+/// Interference and pressure at one interface; its name stands above when there are several.
+fn interface_rows(sheet: Sheet, index: usize) -> Markup {
+    let joint = &sheet.findings.joint;
+    let name = |ring: usize| joint.rings.get(ring).map_or("", |ring| ring.name.as_str());
+    let of = move |value: fn(&InterfaceFindings) -> f64| {
+        move |pair: &PairFindings| pair.interfaces.get(index).map(value)
+    };
+    html! {
+        @if joint.fits.len() > 1 {
+            tr.group { th colspan="5" scope="rowgroup" { (name(index)) " in " (name(index + 1)) } }
+        }
+        (row(sheet, "interference", Measure::Deviation, of(|interface| interface.interference)))
+        (row(sheet, "loss by smoothing", Measure::Deviation, of(|interface| {
+            interface.interference - interface.effective_interference
+        })))
+        (row(sheet, "effective interference", Measure::Deviation, of(|interface| interface.effective_interference)))
+        (row(sheet, "contact pressure", Measure::Pressure, of(|interface| interface.pressure)))
     }
 }
 

@@ -2,12 +2,14 @@
 
 use maud::{Markup, html};
 
-use super::Sheet;
 use super::table::{range_text, safety, scrolling};
+use super::{Sheet, part};
 use crate::findings::bath_name;
-use crate::joint::{Joint, Method, Ring, SmoothingAt};
+use crate::joint::{Allow, Joint, Method, Ring, Slice, SmoothingAt};
 use crate::material::{Kind, Range};
 use crate::mechanics::criteria::DuctileCriterion;
+use crate::quantity::UnitSystem;
+use crate::report::typeset::THIN;
 use crate::report::units::Measure;
 
 /// One value of the joint file.
@@ -39,6 +41,7 @@ pub(super) fn body(sheet: Sheet) -> Markup {
         ("Assembly", assembly(sheet)),
         ("Smoothing and criterion", smoothing(sheet)),
         ("Requirements", requirements(sheet)),
+        ("Display", vec![Input::new("display", display(joint.display))]),
     ];
     let known: Vec<&str> =
         groups.iter().flat_map(|(_, rows)| rows.iter().map(|input| input.key.as_str())).collect();
@@ -70,7 +73,7 @@ pub(super) fn body(sheet: Sheet) -> Markup {
         }
     };
     html! {
-        p { "The duty states stand in part 5, the properties of the materials in part 9." }
+        p { "The duty states stand in " (part("duty")) ", the properties of the materials in " (part("materials")) "." }
         (scrolling("Inputs", "inputs", &table))
     }
 }
@@ -97,11 +100,18 @@ fn row(joint: &Joint, input: &Input) -> Markup {
     }
 }
 
+fn display(system: UnitSystem) -> &'static str {
+    match system {
+        UnitSystem::Metric => "metric",
+        UnitSystem::Inch => "inch",
+    }
+}
+
 fn ring_key(joint: &Joint, index: usize) -> String {
     match (joint.rings.len(), index) {
         (2, 0) => "shaft".to_owned(),
         (2, _) => "hub".to_owned(),
-        _ => format!("rings[{index}]"),
+        _ => format!("rings.{index}"),
     }
 }
 
@@ -116,6 +126,14 @@ fn geometry(sheet: Sheet) -> Vec<Input> {
     for (index, ring) in joint.rings.iter().enumerate() {
         rows.extend(ring_rows(sheet, &ring_key(joint, index), index, ring));
     }
+    if !joint.slices.is_empty() {
+        let piece = |slice: &Slice| {
+            let bore = if slice.shaft_bore > 0.0 { size(slice.shaft_bore) } else { "solid".to_owned() };
+            format!("{} long: hub {}, shaft {bore}", size(slice.length), size(slice.hub_outer_diameter))
+        };
+        let pieces: Vec<String> = joint.slices.iter().map(piece).collect();
+        rows.push(Input::new("steps", pieces.join("; ")));
+    }
     rows
 }
 
@@ -129,6 +147,7 @@ fn ring_rows(sheet: Sheet, key: &str, index: usize, ring: &Ring) -> Vec<Input> {
     } else {
         rows.push(Input::new(format!("{key}.outer_diameter"), size(ring.outer_diameter)));
     }
+    rows.push(Input::new(format!("{key}.section"), size(ring.section)));
     let roughness = format!("Rz {}", sheet.units.text(Measure::Roughness, ring.roughness.value));
     rows.push(Input::new(format!("{key}.roughness"), roughness).from(&ring.roughness.source));
     rows
@@ -138,7 +157,7 @@ fn fits(sheet: Sheet) -> Vec<Input> {
     let joint = &sheet.findings.joint;
     let mut rows = Vec::new();
     for (index, fit) in joint.fits.iter().enumerate() {
-        let key = if joint.fits.len() == 1 { "fit".to_owned() } else { format!("fits[{index}]") };
+        let key = if joint.fits.len() == 1 { "fit".to_owned() } else { format!("fits.{index}") };
         let size = |deviation: f64| sheet.units.text(Measure::Limit, fit.limits.nominal + deviation);
         let limits = &fit.limits;
         let text = format!(
@@ -186,9 +205,58 @@ fn assembly(sheet: Sheet) -> Vec<Input> {
             .from(&plan.chamfer_angle.source),
         Input::new("assembly.bath", bath_name(plan.bath)),
     ];
+    if sheet.findings.joint.order.len() > 1 {
+        let order: Vec<String> =
+            sheet.findings.joint.order.iter().map(|interface| (interface + 1).to_string()).collect();
+        rows.push(Input::new("order", format!("fits {}", order.join(", then "))));
+    }
     if let Some(limit) = plan.hub_temperature_limit {
         rows.push(Input::new("assembly.hub_temperature_limit", temperature(limit)));
     }
+    rows.extend(practice(sheet));
+    rows
+}
+
+/// Oven, bath, room and handling, as far as the method uses them.
+fn practice(sheet: Sheet) -> Vec<Input> {
+    let plan = &sheet.findings.joint.assembly;
+    let (practice, units) = (&plan.practice, sheet.units);
+    let volume = |cubic_metres: f64| format!("{}\u{202f}m³", crate::quantity::number(cubic_metres, 4));
+    let time = |seconds: f64| format!("{}\u{202f}s", crate::quantity::number(seconds, 6));
+    let mut rows = Vec::new();
+    if plan.heats() {
+        rows.push(Input::new("assembly.medium", practice.heating.name()));
+        if let Some(oven) = practice.oven_temperature {
+            rows.push(Input::new("assembly.oven_temperature", units.text(Measure::Temperature, oven)));
+        }
+    }
+    if plan.heats() || plan.chills() {
+        let deviation = |metres: f64| units.text(Measure::Deviation, metres);
+        rows.push(Input::new("assembly.form_error", deviation(practice.form_error)));
+        rows.push(Input::new("assembly.handling_allowance", deviation(practice.handling_allowance)));
+        rows.push(Input::new("assembly.transfer_time", time(practice.transfer_time)));
+        if let Some(needed) = practice.handling_time {
+            rows.push(Input::new("assembly.handling_time", time(needed)));
+        }
+    }
+    if plan.chills() {
+        if let Some(length) = practice.chilled_length {
+            rows.push(Input::new("assembly.chilled_length", units.text(Measure::Size, length)));
+        }
+        if let Some(room) = practice.room {
+            rows.push(Input::new("assembly.room.volume", volume(room.volume)));
+            let changes = crate::quantity::number(room.air_changes, 4);
+            rows.push(Input::new("assembly.room.air_changes", changes));
+        }
+        if let Some(vessel) = practice.vessel {
+            rows.push(Input::new("assembly.vessel.volume", volume(vessel.volume)));
+            if let Some(loss) = vessel.hourly_loss {
+                rows.push(Input::new("assembly.vessel.hourly_loss", volume(loss)));
+            }
+        }
+    }
+    let lag = crate::quantity::number(practice.temperature_lag, 4);
+    rows.push(Input::new("assembly.temperature_lag", lag));
     rows
 }
 
@@ -206,7 +274,11 @@ fn smoothing(sheet: Sheet) -> Vec<Input> {
         DuctileCriterion::Tresca => "Tresca",
     };
     let rule = format!("{} of interference lost: {}", losses.join(" and "), joint.smoothing.rule);
-    vec![Input::new("smoothing", rule), Input::new("smoothing.at", at), Input::new("criterion", criterion)]
+    vec![
+        Input::new("smoothing.factor", rule),
+        Input::new("smoothing.at", at),
+        Input::new("criterion", criterion),
+    ]
 }
 
 fn requirements(sheet: Sheet) -> Vec<Input> {
@@ -221,6 +293,15 @@ fn requirements(sheet: Sheet) -> Vec<Input> {
     if brittle(true) {
         rows.push(Input::new("require.fracture_safety", safety(require.fracture_safety)));
     }
+    let allow = match require.allow {
+        Allow::Elastic => "elastic".to_owned(),
+        Allow::Plastic { share } => format!(
+            "plastic, at most {:.0}{THIN}% of the section of the hub, by the {} rule",
+            100.0 * share,
+            require.yield_rule.name()
+        ),
+    };
+    rows.push(Input::new("require.allow", allow));
     if let Some(force) = require.press_force {
         rows.push(Input::new("require.press_force", sheet.units.text(Measure::Force, force)));
     }

@@ -7,6 +7,7 @@ use super::table::range_text;
 use crate::findings::{BathFindings, Caution, bath_name};
 use crate::joint::{Method, Ring};
 use crate::material::{REFERENCE_TEMPERATURE, Range};
+use crate::report::seating;
 use crate::report::typeset::{prose, sentence};
 use crate::report::units::Measure;
 
@@ -14,13 +15,20 @@ use crate::report::units::Measure;
 struct Step {
     title: String,
     text: String,
+    /// What there is to know of it, a full sentence each.
+    details: Vec<String>,
     /// Subject of the cautions that belong to it.
     cautions: Option<&'static str>,
 }
 
 impl Step {
     fn new(title: impl Into<String>, text: impl Into<String>) -> Self {
-        Self { title: title.into(), text: text.into(), cautions: None }
+        Self { title: title.into(), text: text.into(), details: Vec::new(), cautions: None }
+    }
+
+    fn with_details(mut self, details: Vec<String>) -> Self {
+        self.details = details;
+        self
     }
 
     fn with_cautions(mut self, subject: &'static str) -> Self {
@@ -41,11 +49,19 @@ pub(super) fn body(sheet: Sheet) -> Markup {
     }
     steps.push(dismantle(sheet));
     html! {
-        p { "Method: " strong { (super::inputs::method(method)) } ". All figures are for the tightest pair, unless the step says otherwise." }
+        @if let Some(headline) = seating::headline(sheet.findings) { p.verdict { (prose(&headline)) } }
+        p {
+            "Method: " strong { (super::inputs::method(method)) }
+            ". All figures are for the tightest pair, unless the step says otherwise."
+            @if sheet.findings.joint.fits.len() > 1 { " " (order(sheet)) }
+        }
         ol.steps {
             @for step in &steps {
                 li {
                     strong { (step.title) "." } " " (step.text)
+                    @if !step.details.is_empty() {
+                        ul { @for detail in &step.details { li { (prose(detail)) } } }
+                    }
                     @if let Some(subject) = step.cautions { (cautions(&sheet.findings.cautions, subject)) }
                 }
             }
@@ -67,12 +83,22 @@ fn cautions(all: &[Caution], subject: &str) -> Markup {
     }
 }
 
-/// Names of the two parts that are joined last: the outermost ring and the one inside of it.
+/// Names of the two parts that are joined last, the inner one first.
 pub(super) fn names<'a>(sheet: Sheet<'a>) -> (&'a str, &'a str) {
-    let name = |ring: Option<&'a Ring>, other| ring.map_or(other, |ring| ring.name.as_str());
-    let mut rings = sheet.findings.joint.rings.iter().rev();
-    let hub = name(rings.next(), "hub");
-    (name(rings.next(), "shaft"), hub)
+    let (inner, outer) = sheet.findings.joint.joined_last();
+    (&inner.name, &outer.name)
+}
+
+/// In which order several rings are joined.
+fn order(sheet: Sheet) -> String {
+    let joint = &sheet.findings.joint;
+    let name = |ring: usize| joint.rings.get(ring).map_or("", |ring| ring.name.as_str());
+    let steps: Vec<String> = joint
+        .order
+        .iter()
+        .map(|interface| format!("the {} into the {}", name(*interface), name(interface + 1)))
+        .collect();
+    format!("Join in this order: {}. The steps below are for the last of them.", steps.join(", then "))
 }
 
 fn check_parts(sheet: Sheet) -> Step {
@@ -140,7 +166,8 @@ fn press(sheet: Sheet) -> Vec<Step> {
                 "Rating at least {}. Line up shaft and bore; the force must act along the axis.",
                 force(findings.assembly.press_rating)
             ),
-        ),
+        )
+        .with_details(seating::press(findings)),
         Step::new(
             "Press in with one stroke",
             format!(
@@ -159,11 +186,9 @@ fn gauge(sheet: Sheet) -> (f64, f64) {
     let joint = &sheet.findings.joint;
     let shop = joint.assembly.shop_temperature;
     let clearance = sheet.findings.assembly.clearance;
-    let at_shop = |ring: Option<&Ring>, size: f64| {
-        size * (1.0 + ring.and_then(|ring| ring.material.expansion.strain(shop).ok()).unwrap_or(0.0))
-    };
-    let Some(fit) = joint.fits.last() else { return (0.0, 0.0) };
-    let (hub, shaft) = (joint.rings.last(), joint.rings.iter().rev().nth(1));
+    let at_shop = |ring: &Ring, size: f64| size * (1.0 + ring.material.expansion.strain(shop).unwrap_or(0.0));
+    let Some(fit) = joint.fits.get(joint.last_interface()) else { return (0.0, 0.0) };
+    let (shaft, hub) = joint.joined_last();
     let bore = at_shop(hub, fit.limits.nominal + fit.limits.hole.lower);
     let pin = at_shop(shaft, fit.limits.nominal + fit.limits.shaft.upper);
     (pin + clearance, bore - clearance)
@@ -181,7 +206,7 @@ fn heat(sheet: Sheet) -> Vec<Step> {
             format!("Check the bore of the {} hot", names(sheet).1),
             format!("It must measure at least {bore} before the parts are joined."),
         ),
-        join(),
+        join(sheet),
         cool(),
     ]
 }
@@ -199,14 +224,40 @@ fn heat_to(sheet: Sheet, hot: f64) -> Step {
         format!("Heat the {}", names(sheet).1),
         format!("To {} right through, evenly.{limit}", temperature(hot)),
     )
+    .with_details(heating_details(sheet))
     .with_cautions("heat")
 }
 
-fn join() -> Step {
+/// Soak of the hub, and what one coefficient would have said.
+fn heating_details(sheet: Sheet) -> Vec<String> {
+    let findings = sheet.findings;
+    let soak = findings.assembly.times.hub.as_ref();
+    let mut details: Vec<String> = soak.map(|soak| seating::soak_of(findings, soak)).into_iter().collect();
+    details.extend(seating::coefficients(findings));
+    details
+}
+
+/// Chill of the shaft, what it takes and what it does to the air.
+fn chilling_details(sheet: Sheet) -> Vec<String> {
+    let findings = sheet.findings;
+    let soak = findings.assembly.times.shaft.as_ref();
+    let mut details: Vec<String> = soak.map(|soak| seating::soak_of(findings, soak)).into_iter().collect();
+    details.extend(seating::cold_bath(findings));
+    if !findings.joint.assembly.heats() || findings.assembly.times.hub.is_none() {
+        details.extend(seating::coefficients(findings));
+    }
+    details
+}
+
+fn join(sheet: Sheet) -> Step {
+    let mut details: Vec<String> = seating::headline(sheet.findings).into_iter().collect();
+    details.extend(seating::handling(sheet.findings));
+    details.extend(sheet.findings.assembly.times.gaps.iter().cloned());
     Step::new(
         "Join in one movement",
         "Slip the parts together to the mark without stopping and hold them there until they grip. They seize as soon as the temperatures draw near each other: have everything ready before.",
     )
+    .with_details(details)
 }
 
 fn cool() -> Step {
@@ -233,12 +284,13 @@ fn chill(sheet: Sheet) -> Vec<Step> {
             format!("Chill the {}", names(sheet).0),
             format!("To {} or below, right through.{how}", temperature(cold)),
         )
+        .with_details(chilling_details(sheet))
         .with_cautions("cold"),
         Step::new(
             format!("Check the {} cold", names(sheet).0),
             format!("It must measure at most {pin} before the parts are joined."),
         ),
-        join(),
+        join(sheet),
         cool(),
     ]
 }
@@ -262,12 +314,13 @@ fn heat_and_chill(sheet: Sheet) -> Vec<Step> {
                 sheet.units.text(Measure::Temperature, bath.temperature)
             ),
         )
+        .with_details(chilling_details(sheet))
         .with_cautions("cold"),
     ];
     if !bath.alone {
         steps.push(heat_to(sheet, hot));
     }
-    steps.extend([join(), cool()]);
+    steps.extend([join(sheet), cool()]);
     steps
 }
 
@@ -290,6 +343,7 @@ fn dismantle(sheet: Sheet) -> Step {
             _ => format!("Pushing out takes up to {}; the loosest pair does not grip.", force(range.high)),
         },
     )
+    .with_details(seating::release(sheet.findings))
 }
 
 /// What the other methods would take, in the words of the findings.

@@ -46,6 +46,9 @@ fn table(sheet: Sheet, ring: &Ring) -> Markup {
             (line("kind", kind(material.kind).to_owned(), ""))
             @if let Some(condition) = &material.condition { (line("condition", condition.clone(), "")) }
             (strength(sheet, ring))
+            @if let Some(value) = &material.compressive_strength {
+                (line("compressive strength", units.text(Measure::Pressure, value.value), &value.source))
+            }
             (line("Young’s modulus", units.text(Measure::Modulus, material.youngs_modulus.value), &material.youngs_modulus.source))
             (line("Poisson’s ratio", units.text(Measure::Number, material.poisson.value), &material.poisson.source))
             (line("density", units.text(Measure::Density, material.density.value), &material.density.source))

@@ -11,12 +11,14 @@ mod instructions;
 mod materials;
 mod notes;
 mod pictures;
+mod service;
 mod table;
 mod title_block;
 mod worksheet;
 
 use maud::{Markup, PreEscaped, html};
 
+use super::typeset::capital;
 use super::units::Units;
 use crate::findings::Findings;
 
@@ -32,11 +34,13 @@ struct Sheet<'a> {
 /// The report of a joint as one HTML file.
 ///
 /// # Example
-/// ```no_run
-/// # fn findings() -> hubgrip::findings::Findings { unimplemented!() }
-/// let page = hubgrip::report::html::html(&findings());
-/// std::fs::write("joint.html", page)?;
-/// # Ok::<(), std::io::Error>(())
+/// ```
+/// use hubgrip::material::library::Library;
+/// use hubgrip::{findings, joint, report};
+/// let text = joint::template::find(None).unwrap().text;
+/// let joint = joint::read::read(text, "joint.yaml".as_ref(), &[], &Library::built_in()).unwrap();
+/// let page = report::html::html(&findings::compute(joint).unwrap());
+/// assert!(page.starts_with("<!DOCTYPE html>") && !page.contains("<script"));
 /// ```
 pub fn html(findings: &Findings) -> String {
     let sheet = Sheet { findings, units: Units { system: findings.joint.display } };
@@ -79,18 +83,29 @@ struct Part {
     body: fn(Sheet) -> Markup,
 }
 
-const PARTS: [Part; 10] = [
+const PARTS: [Part; 11] = [
     Part { id: "answers", heading: "Verdict", body: answers::body },
     Part { id: "section", heading: "Section", body: pictures::section },
     Part { id: "extremes", heading: "Extreme pairs", body: extremes::body },
     Part { id: "pictures", heading: "Pictures", body: pictures::plots },
     Part { id: "duty", heading: "Duty", body: duty::body },
+    Part { id: "service", heading: "At work", body: service::body },
     Part { id: "assembly", heading: "Assembly", body: instructions::body },
     Part { id: "worksheet", heading: "Worksheet", body: worksheet::body },
     Part { id: "inputs", heading: "Inputs", body: inputs::body },
     Part { id: "materials", heading: "Materials", body: materials::body },
     Part { id: "notes", heading: "Cautions and notes", body: notes::body },
 ];
+
+/// Number and link of a part, such as `part 5`.
+fn part(id: &str) -> Markup {
+    html! { a href=(format!("#{id}")) { "part " (number_of(id)) } }
+}
+
+/// Number of a part, before the number of a heading within it.
+fn number_of(id: &str) -> usize {
+    PARTS.iter().position(|part| part.id == id).map_or(0, |place| place + 1)
+}
 
 fn contents() -> Markup {
     html! {
@@ -109,13 +124,4 @@ fn without_control_characters(page: &str) -> String {
     page.chars()
         .filter(|c| (!c.is_control() || matches!(c, '\n' | '\t')) && !matches!(c, '\u{FFFE}' | '\u{FFFF}'))
         .collect()
-}
-
-/// First letter in upper case, for a heading or a sentence.
-fn capital(text: &str) -> String {
-    let mut letters = text.chars();
-    match letters.next() {
-        Some(first) => first.to_uppercase().chain(letters).collect(),
-        None => String::new(),
-    }
 }

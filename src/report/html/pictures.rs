@@ -17,8 +17,11 @@ pub(super) fn plots(sheet: Sheet) -> Markup {
     let plots = [
         Some(plot::tolerance_zones(findings)),
         plot::stress(findings),
+        plot::along(findings),
         plot::press_force(findings),
         plot::diameters(findings),
+        plot::handling(findings),
+        plot::envelope(findings),
     ];
     html! {
         p.key {

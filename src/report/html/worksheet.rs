@@ -4,8 +4,8 @@ use std::collections::BTreeMap;
 
 use maud::{Markup, html};
 
-use super::Sheet;
 use super::table::scrolling;
+use super::{Sheet, number_of};
 use crate::findings::expression::{Expression, Symbol};
 use crate::findings::{WorksheetLine, WorksheetSection};
 use crate::report::mathml;
@@ -22,7 +22,7 @@ pub(super) fn body(sheet: Sheet) -> Markup {
             "A number put in is the printed result of the line that defines its symbol, in the unit given there."
         }
         @for (index, section) in sheet.findings.worksheet.iter().enumerate() {
-            h3 { span.number { "7." (index + 1) } " " (section.title) }
+            h3 { span.number { (number_of("worksheet")) "." (index + 1) } " " (section.title) }
             (scrolling(&section.title, "worksheet", &table(section, index + 1, &mut values)))
             (plain_twin(section, &values))
         }
@@ -40,19 +40,21 @@ fn table(section: &WorksheetSection, number: usize, values: &mut Values) -> Mark
         }
         tbody {
             @for (index, line) in section.lines.iter().enumerate() {
-                (row(line, &format!("{number}.{}", index + 1), values))
+                @let repeated = index > 0 && section.lines[index - 1].source == line.source && line.source.len() > 24;
+                @let source = if repeated { "as the line above" } else { line.source.as_str() };
+                (row(line, &format!("{number}.{}", index + 1), source, values))
             }
         }
     }
 }
 
-fn row(line: &WorksheetLine, number: &str, values: &mut Values) -> Markup {
+fn row(line: &WorksheetLine, number: &str, source: &str, values: &mut Values) -> Markup {
     let known = values.clone();
     values.insert(line.symbol.clone(), line.printed.clone());
     html! {
         tr {
             th.no scope="row" { (number) }
-            td.what { (line.meaning) span.source { (line.source) } }
+            td.what { (line.meaning) span.source { (source) } }
             @match line.formula.as_ref().map_or(0, width) {
                 0..=34 => td { (chain(line, &known)) },
                 35..=52 => td.long { (chain(line, &known)) },

@@ -2,8 +2,7 @@
 
 use serde::Serialize;
 
-use super::shape::{celsius, mega};
-use super::{finite, microns};
+use super::number::{celsius, finite, mega, microns, millimetres, rpm};
 use crate::findings::{BendingFindings, Findings};
 use crate::mechanics::plastic::Regime;
 
@@ -27,7 +26,7 @@ impl Bending {
     }
 }
 
-/// What loosens the joint, which fits govern, the plastic hub, fatigue.
+/// What loosens the joint, which fits govern, the plastic hub, fatigue. Interfaces and fits count from 1.
 #[derive(Serialize)]
 pub(super) struct Service {
     loosening: Vec<Loosening>,
@@ -35,6 +34,26 @@ pub(super) struct Service {
     steps: Vec<Step>,
     plastic: Option<Plastic>,
     fatigue: Vec<Fatigue>,
+    finite_length: Option<FiniteLength>,
+    liner: Option<Liner>,
+}
+
+/// A hub of finite length on a shaft that stands out, beside the thick-walled cylinder of the extremes.
+#[derive(Serialize)]
+struct FiniteLength {
+    mean_pressure_factor: f64,
+    edge_pressure_factor: f64,
+    loosest_mean_pressure_mpa: Option<f64>,
+    tightest_mean_pressure_mpa: Option<f64>,
+}
+
+/// A thin bush pressed inwards by its housing.
+#[derive(Serialize)]
+struct Liner {
+    wall_over_diameter: f64,
+    pressure_mpa: Option<f64>,
+    buckling_free_mpa: Option<f64>,
+    buckling_housed_mpa: Option<f64>,
 }
 
 /// What opens an interface of the loosest pair; null where nothing does.
@@ -63,7 +82,7 @@ struct Step {
     equivalent_mpa: Vec<Option<f64>>,
 }
 
-/// The hub beyond its elastic limit at the tightest pair.
+/// The hub beyond its elastic limit at the tightest pair; null while it is elastic.
 #[derive(Serialize)]
 struct Plastic {
     rule: &'static str,
@@ -73,6 +92,7 @@ struct Plastic {
     plastic_diameter_mm: f64,
     plastic_share: f64,
     permanent_growth_um: f64,
+    growth_after_duty_um: Option<f64>,
 }
 
 /// Rotating bending at the hub edge.
@@ -93,7 +113,7 @@ impl Service {
         let state = |index: usize| joint.duty.get(index).map(|state| state.name.clone());
         let loosening = service.loosening.iter().enumerate().map(|(index, loosening)| Loosening {
             interface: index + 1,
-            speed_rpm: loosening.speed.map(|speed| speed * 30.0 / std::f64::consts::PI),
+            speed_rpm: loosening.speed.map(rpm),
             temperature_c: loosening.temperature.map(celsius),
             outer_temperature_c: loosening.outer_temperature.map(celsius),
         });
@@ -122,6 +142,18 @@ impl Service {
             steps: steps.collect(),
             plastic: plastic(findings),
             fatigue: fatigue.collect(),
+            finite_length: service.length_factors.map(|factors| FiniteLength {
+                mean_pressure_factor: factors.mean_pressure,
+                edge_pressure_factor: factors.edge_pressure,
+                loosest_mean_pressure_mpa: mega(findings.extremes.loosest.pressure * factors.mean_pressure),
+                tightest_mean_pressure_mpa: mega(findings.extremes.tightest.pressure * factors.mean_pressure),
+            }),
+            liner: service.liner.map(|liner| Liner {
+                wall_over_diameter: liner.slenderness,
+                pressure_mpa: mega(liner.pressure),
+                buckling_free_mpa: mega(liner.free),
+                buckling_housed_mpa: mega(liner.housed),
+            }),
         }
     }
 }
@@ -140,8 +172,9 @@ fn plastic(findings: &Findings) -> Option<Plastic> {
         regime,
         pressure_mpa: mega(state.pressure),
         limit_pressure_mpa: mega(plastic.limits.limit_pressure),
-        plastic_diameter_mm: state.plastic_diameter * 1e3,
+        plastic_diameter_mm: millimetres(state.plastic_diameter),
         plastic_share: state.plastic_share,
         permanent_growth_um: microns(state.permanent.bore),
+        growth_after_duty_um: plastic.worn.as_ref().map(|worn| microns(worn.tightest)),
     })
 }

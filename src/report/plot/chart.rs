@@ -7,7 +7,9 @@ use plotters::prelude::*;
 
 use super::axis::Axis;
 use super::tags::{self, Lean, Placer, Side, Tag};
-use crate::report::svg::{FONT, Frame, INK, LOOSEST, Lettering, Pen, Point, QUIET, Sketch, TIGHTEST, chain};
+use crate::report::svg::{
+    Anchor, FONT, Frame, INK, LOOSEST, Lettering, Pen, Point, QUIET, Sketch, TIGHTEST, chain,
+};
 
 /// Size of a figure, px; it is as wide as the text.
 pub(super) const WIDTH: f64 = 642.0;
@@ -63,6 +65,7 @@ pub(super) struct Chart {
     marks: Vec<(Point, Pair)>,
     tags: Vec<Tag>,
     obstacles: Vec<Vec<Point>>,
+    reserved: Vec<tags::Box>,
 }
 
 impl Chart {
@@ -77,6 +80,7 @@ impl Chart {
             marks: vec![],
             tags: vec![],
             obstacles: vec![],
+            reserved: vec![],
         }
     }
 
@@ -126,6 +130,20 @@ impl Chart {
     /// Lines drawn elsewhere that lettering should keep off.
     pub(super) fn obstacle(&mut self, points: Vec<Point>) {
         self.obstacles.push(points);
+    }
+
+    /// A heading over a part of the chart, its middle `above` px over a point.
+    pub(super) fn heading(&mut self, at: Point, above: f64, text: &str) -> (Point, Lettering) {
+        let (x, y) = self.place(at);
+        let heading = Lettering::new(text, TYPE).bold().anchor(Anchor::Middle);
+        let half = 0.5 * heading.width();
+        self.reserved.push(tags::Box {
+            left: x - half,
+            right: x + half,
+            top: y - above - TYPE,
+            bottom: y - above + 2.0,
+        });
+        ((x, y - above), heading)
     }
 
     /// Place of a point of the chart in px.
@@ -246,6 +264,7 @@ impl Chart {
             top: title.1.1 - TYPE,
             bottom: title.1.1 + 3.0,
         }];
+        taken.extend(&self.reserved);
         taken.extend(self.marks.iter().map(|(at, _)| {
             let (x, y) = self.place(*at);
             tags::Box { left: x - 4.5, right: x + 4.5, top: y - 4.5, bottom: y + 4.5 }
@@ -283,4 +302,32 @@ fn inner(svg: &str) -> &str {
     let from = svg.find("<svg").and_then(|at| svg[at..].find('>').map(|end| at + end + 1)).unwrap_or(0);
     let to = svg.rfind("</svg>").unwrap_or(svg.len());
     svg.get(from..to).unwrap_or("")
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    /// Curves are drawn by plotters, marks and dashes by us: both must put a point at the same place.
+    #[test]
+    fn plotters_and_the_overlay_agree_on_every_place() {
+        let margins = Margins { left: 62.0, right: 130.0, top: 40.0, bottom: 44.0 };
+        let mut chart =
+            Chart::new(Axis::new(-3.0, 7.0, 5, "x"), Axis::new(-200.0, 900.0, 5, "y"), 360.0, margins);
+        let points = vec![(-3.0, -200.0), (0.3, 411.0), (7.0, 900.0)];
+        chart.curve(points.clone(), Pair::Tightest.pen(2.0));
+        let svg = chart.drawn_by_plotters().unwrap();
+        let line = svg.split("<polyline").find(|part| part.contains("#0B4F8A")).unwrap();
+        let written = line.split("points=\"").nth(1).unwrap().split('"').next().unwrap();
+        let drawn: Vec<Point> = written
+            .split_whitespace()
+            .map(|pair| pair.split_once(',').unwrap())
+            .map(|(x, y)| (x.parse::<f64>().unwrap() / FINE, y.parse::<f64>().unwrap() / FINE))
+            .collect();
+        assert_eq!(drawn.len(), points.len());
+        for (drawn, point) in drawn.iter().zip(&points) {
+            let (x, y) = chart.place(*point);
+            assert!((drawn.0 - x).abs() <= 0.2 && (drawn.1 - y).abs() <= 0.2, "{drawn:?} {x} {y}");
+        }
+    }
 }

@@ -4,26 +4,14 @@ use super::Plot;
 use super::axis::{Axis, bounds};
 use super::chart::{Chart, Margins, Pair, TYPE};
 use super::tags::{Lean, Side};
-use crate::findings::{Findings, PairFindings, RingStress};
+use super::walls::{self, Cut, Profile, Walls};
+use crate::findings::{Findings, RingStress};
 use crate::joint::Ring;
 use crate::material::Kind;
-use crate::mechanics::criteria::{self, DuctileCriterion};
-use crate::mechanics::ring::{RingLoad, RingSection, Stress};
-use crate::report::svg::{Anchor, Lettering, Point};
+use crate::report::svg::Point;
 use crate::report::text_width::fitted;
+use crate::report::typeset::THIN;
 use crate::report::units::{Measure, Units};
-
-/// Points of each curve through one wall.
-const POINTS: usize = 41;
-/// Least share of the width that a wall is given.
-const LEAST_SHARE: f64 = 0.27;
-
-/// Stress in one ring against radius, Pa over m.
-struct Profile {
-    hoop: Vec<Point>,
-    radial: Vec<Point>,
-    equivalent: Vec<Point>,
-}
 
 /// Hoop, radial and equivalent stress against radius, with strength and allowable stress of each ring.
 ///
@@ -34,9 +22,9 @@ pub fn stress(findings: &Findings) -> Option<Plot> {
     }
     let joint = &findings.joint;
     let units = Units { system: joint.display };
-    let walls = Walls::new(&joint.rings);
-    let tightest = profiles(findings, &findings.extremes.tightest);
-    let loosest = profiles(findings, &findings.extremes.loosest);
+    let cut = Cut::new(findings);
+    let walls = Walls::new(&cut.sizes);
+    let (loosest, tightest) = cut.profiles(findings);
     let on_axis = |value: f64| units.on_axis(Measure::Pressure, value);
 
     let curves = tightest.iter().chain(&loosest).flat_map(|p| [&p.hoop, &p.radial, &p.equivalent]);
@@ -81,70 +69,27 @@ pub fn stress(findings: &Findings) -> Option<Plot> {
         label(&mut chart, &walls, findings, index, profile);
     }
 
-    let caption = caption(findings, &limits, &shown);
+    if let Some((_, state)) = walls::plastic(findings) {
+        let x = walls.place(joint.rings.len() - 1, state.plastic_diameter / 2.0);
+        let name = format!("plastic to Ø{}", units.brief(Measure::Size, state.plastic_diameter).number);
+        let (low, high) = (chart.y.from, chart.y.to);
+        chart.limit((x, low), (x, high), name, (x, 0.5 * low), Side::Right);
+    }
+    let caption = caption(findings, &cut, &limits, &shown);
     let title = "Stress through the walls, at the shop temperature and at rest";
-    let names: Vec<(Point, String)> = joint
-        .rings
-        .iter()
-        .enumerate()
-        .map(|(index, ring)| {
-            let (from, to) = walls.ends(index);
-            (chart.place((0.5 * (from + to), chart.y.to)), ring.name.clone())
-        })
-        .collect();
+    let mut headings = Vec::new();
+    for (index, ring) in joint.rings.iter().enumerate() {
+        let (from, to) = walls.ends(index);
+        let room = (to - from) * (chart.place((1.0, 0.0)).0 - chart.place((0.0, 0.0)).0) - 6.0;
+        let top = (0.5 * (from + to), chart.y.to);
+        headings.push(chart.heading(top, 8.0, &fitted(&ring.name, TYPE, room)));
+    }
     let svg = chart.finish("plot-stress", title, &caption, |_, sketch| {
-        for ((x, y), name) in names {
-            let name = fitted(&name, TYPE, 120.0);
-            sketch.text((x, y - 8.0), &Lettering::new(name, TYPE).bold().anchor(Anchor::Middle));
+        for (at, heading) in &headings {
+            sketch.text(*at, heading);
         }
     });
     Some(Plot { title: title.to_owned(), svg, caption })
-}
-
-/// The walls side by side, each at least a good quarter of the width; the radius is stretched to fit.
-struct Walls {
-    radii: Vec<f64>,
-    places: Vec<f64>,
-    stretched: bool,
-}
-
-impl Walls {
-    fn new(rings: &[Ring]) -> Self {
-        let mut radii: Vec<f64> = rings.iter().map(|ring| ring.outer_diameter / 2.0).collect();
-        radii.insert(0, rings.first().map_or(0.0, |ring| ring.inner_diameter / 2.0));
-        let span = radii[radii.len() - 1] - radii[0];
-        let least = LEAST_SHARE.min(0.8 / rings.len().max(1) as f64);
-        let shares: Vec<f64> = radii.windows(2).map(|pair| ((pair[1] - pair[0]) / span).max(least)).collect();
-        let sum: f64 = shares.iter().sum();
-        let mut place = 0.0;
-        let mut places = vec![0.0];
-        for share in &shares {
-            place += share / sum;
-            places.push(place);
-        }
-        Self { radii, places, stretched: (sum - 1.0).abs() > 1e-9 }
-    }
-
-    fn ends(&self, ring: usize) -> (f64, f64) {
-        (self.places[ring], self.places[ring + 1])
-    }
-
-    /// Place of a radius within a ring.
-    fn place(&self, ring: usize, radius: f64) -> f64 {
-        let (from, to) = self.ends(ring);
-        from + (to - from) * (radius - self.radii[ring]) / (self.radii[ring + 1] - self.radii[ring])
-    }
-
-    fn axis(&self, units: Units) -> Axis {
-        let ticks = self
-            .radii
-            .iter()
-            .zip(&self.places)
-            .map(|(radius, place)| (*place, units.reading(Measure::Size, *radius).number))
-            .collect();
-        let note = if self.stretched { "; walls not to scale" } else { "" };
-        Axis { from: 0.0, to: 1.0, ticks, title: format!("radius, {}{note}", units.unit(Measure::Size)) }
-    }
 }
 
 /// A strength drawn over the width of one ring.
@@ -172,48 +117,6 @@ fn limits(findings: &Findings) -> Vec<Limit> {
         }
     }
     limits
-}
-
-fn profiles(findings: &Findings, pair: &PairFindings) -> Vec<Profile> {
-    let joint = &findings.joint;
-    joint.rings.iter().zip(&pair.rings).map(|(ring, stress)| profile(ring, stress, joint.criterion)).collect()
-}
-
-/// Stress through one wall from the pressures on its faces; a uniform temperature stresses no free ring.
-fn profile(ring: &Ring, stress: &RingStress, criterion: DuctileCriterion) -> Profile {
-    let (inner, outer) = (ring.inner_diameter / 2.0, ring.outer_diameter / 2.0);
-    let material = &ring.material;
-    let load = RingLoad {
-        inner_pressure: if inner > 0.0 { -stress.bore.radial } else { 0.0 },
-        outer_pressure: -stress.rim.radial,
-        ..RingLoad::default()
-    };
-    let mut profile = Profile { hoop: vec![], radial: vec![], equivalent: vec![] };
-    let section = RingSection::new(
-        inner,
-        outer,
-        material.youngs_modulus.value,
-        material.poisson.value,
-        material.density.value,
-    );
-    let Ok(section) = section else { return profile };
-    for step in 0..POINTS {
-        let radius = inner + (outer - inner) * step as f64 / (POINTS - 1) as f64;
-        let Ok(stress) = section.stress_at(&load, radius) else { continue };
-        profile.hoop.push((radius, stress.hoop));
-        profile.radial.push((radius, stress.radial));
-        profile.equivalent.push((radius, equivalent(material.kind, criterion, stress)));
-    }
-    profile
-}
-
-fn equivalent(kind: Kind, criterion: DuctileCriterion, stress: Stress) -> f64 {
-    let Stress { radial, hoop } = stress;
-    match (kind, criterion) {
-        (Kind::Brittle, _) => criteria::greatest_principal(radial, hoop),
-        (_, DuctileCriterion::VonMises) => criteria::von_mises(radial, hoop),
-        (_, DuctileCriterion::Tresca) => criteria::tresca(radial, hoop),
-    }
 }
 
 fn draw(chart: &mut Chart, walls: &Walls, units: Units, ring: usize, profile: &Profile, pair: Pair) {
@@ -282,8 +185,8 @@ fn name_pairs(chart: &mut Chart, units: Units, tightest: &[Profile], loosest: &[
     }
 }
 
-fn caption(findings: &Findings, limits: &[Limit], shown: &dyn Fn(f64) -> bool) -> String {
-    let rings = findings.joint.rings.iter().zip(&findings.extremes.tightest.rings);
+fn caption(findings: &Findings, cut: &Cut, limits: &[Limit], shown: &dyn Fn(f64) -> bool) -> String {
+    let rings = findings.joint.rings.iter().zip(&cut.tightest);
     let mut sentences: Vec<String> = rings
         .enumerate()
         .map(|(index, (ring, stress))| {
@@ -291,6 +194,9 @@ fn caption(findings: &Findings, limits: &[Limit], shown: &dyn Fn(f64) -> bool) -
             ring_sentence(findings, ring, stress, hidden)
         })
         .collect();
+    if let Some(slice) = cut.slice {
+        sentences.push(format!("Cut through slice {}, where the hub is stressed most.", slice + 1));
+    }
     sentences.push("Thick: equivalent stress; middle: hoop; thin: radial.".to_owned());
     sentences.join(" ")
 }
@@ -309,12 +215,22 @@ fn ring_sentence(findings: &Findings, ring: &Ring, stress: &RingStress, hidden: 
             pressure(stress.equivalent)
         );
     };
+    let is_hub = findings.joint.rings.last().is_some_and(|hub| std::ptr::eq(hub, ring));
+    if let Some((_, state)) = walls::plastic(findings).filter(|_| is_hub) {
+        return format!(
+            "At the tightest pair the {name} is plastic from the bore to a diameter of {}, {:.1}{THIN}% of its section, by the {} rule; it yields at {}.",
+            units.brief(Measure::Size, state.plastic_diameter).text(),
+            100.0 * state.plastic_share,
+            state.rule.name(),
+            pressure(strength)
+        );
+    }
     let share = 100.0 * stress.equivalent / strength;
     let kind = if brittle { "tensile strength" } else { "yield" };
     let elastic = if share > 100.0 { ", computed as if it stayed elastic" } else { "" };
     let above = if hidden { ", which lies above the picture" } else { "" };
     format!(
-        "At the tightest pair the {name} reaches {}, {share:.0} % of {kind} ({}{above}){elastic}.",
+        "At the tightest pair the {name} reaches {}, {share:.0}{THIN}% of {kind} ({}{above}){elastic}.",
         pressure(stress.equivalent),
         pressure(strength)
     )

@@ -73,7 +73,7 @@ const AIR: f64 = 6.0;
 const NEAR: f64 = 15.0;
 
 /// What it costs to go to the next side, in px of distance.
-const OTHER_SIDE: f64 = 9.0;
+const OTHER_SIDE: f64 = 14.0;
 
 /// Places the tags one after the other and draws them.
 pub(super) struct Placer {
@@ -114,7 +114,7 @@ impl Placer {
             let end = candidate.nearest(tag.at);
             let distance = (end.0 - tag.at.0).hypot(end.1 - tag.at.1);
             let cost =
-                2.5 * covered.min(20) as f64 + distance.max(AIR) + 2.0 * (AIR - distance).max(0.0) + price;
+                1.6 * covered.min(20) as f64 + distance.max(AIR) + 2.0 * (AIR - distance).max(0.0) + price;
             if best.is_none_or(|(least, _)| cost < least) {
                 best = Some((cost, *candidate));
             }

@@ -16,8 +16,8 @@ const POINTS: usize = 49;
 pub fn diameters(findings: &Findings) -> Option<Plot> {
     let joint = &findings.joint;
     let units = Units { system: joint.display };
-    let [.., shaft, hub] = joint.rings.as_slice() else { return None };
-    let fit = joint.fits.last()?;
+    let fit = joint.fits.get(joint.last_interface())?;
+    let (shaft, hub) = joint.joined_last();
     let nominal = fit.limits.nominal;
     let (bore, pin) = (nominal + fit.limits.hole.lower, nominal + fit.limits.shaft.upper);
     let shop = joint.assembly.shop_temperature;
@@ -191,4 +191,32 @@ fn caption(findings: &Findings, units: Units, shaft: &str, hub: &str) -> String 
         ));
     }
     text
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::report::sample;
+
+    /// At the temperature found, the bore as drawn is the shaft in the shop and the clearance wanted.
+    #[test]
+    fn the_mark_lies_on_the_curve_of_the_bore() {
+        let findings = sample::hollow_shaft();
+        let joint = &findings.joint;
+        let (fit, hub) = (&joint.fits[0].limits, &joint.rings[1]);
+        let hot = findings.assembly.heat_hub.temperature.unwrap();
+        let curve = curve(hub, fit.nominal + fit.hole.lower, fit.nominal, (293.15, hot));
+        let bore = curve.last().unwrap().1;
+        let wanted = fit.shaft.upper + findings.assembly.clearance;
+        assert!((bore - wanted).abs() < 1e-9, "{bore} {wanted}");
+    }
+
+    #[test]
+    fn no_curve_goes_beyond_the_data() {
+        let hub = &sample::clearance().joint.rings[1];
+        let (low, high) = hub.material.expansion.range();
+        let points = curve(hub, 0.06, 0.06, (0.0, 5000.0));
+        assert!(points.iter().all(|point| point.0 >= low - 1e-9 && point.0 <= high + 1e-9));
+        assert!(curve(hub, 0.06, 0.06, (high + 1.0, high + 2.0)).is_empty());
+    }
 }

@@ -3,13 +3,13 @@
 use super::Plot;
 use super::axis::{Axis, bounds};
 use super::chart::{Chart, Margins, Pair, TYPE, WIDTH};
-use super::tags::Side;
+use super::tags::{Lean, Side};
 use crate::findings::Findings;
 use crate::joint::Fit;
 use crate::report::hatch::{self, Rectangle, hatching_of};
 use crate::report::svg::{Anchor, INK, Lettering, Pen, Point, QUIET, RULE, Sketch, closed};
 use crate::report::text_width::fitted;
-use crate::report::typeset::MINUS;
+use crate::report::typeset::{MINUS, sentence};
 use crate::report::units::{Measure, Units};
 use crate::tolerance::Limits;
 
@@ -59,17 +59,18 @@ pub fn tolerance_zones(findings: &Findings) -> Plot {
 /// Lines and lettering of one fit; its zones are drawn by [`draw_zones`].
 fn one_fit(chart: &mut Chart, units: Units, fit: &Fit, left: f64) {
     let on_axis = |value: f64| units.on_axis(Measure::Deviation, value);
-    let nominal = format!("nominal Ø{}", units.text(Measure::Size, fit.limits.nominal));
-    chart.tag((left + 0.01, 0.0), nominal, QUIET, Side::Below);
-    for (limits, zone, side) in [(fit.limits.hole, HOLE, Side::Left), (fit.limits.shaft, SHAFT, Side::Left)] {
-        let mut deviations = vec![limits.upper];
+    for (limits, zone) in [(fit.limits.hole, HOLE), (fit.limits.shaft, SHAFT)] {
+        let mut deviations = vec![(limits.upper, Lean::Up)];
         if limits.lower != limits.upper {
-            deviations.push(limits.lower);
+            deviations.push((limits.lower, Lean::Down));
         }
-        for deviation in deviations {
-            chart.tag((left + zone.0, on_axis(deviation)), signed(units, deviation), INK, side);
+        for (deviation, lean) in deviations {
+            let at = (left + zone.0, on_axis(deviation));
+            chart.leaning_tag(at, signed(units, deviation), INK, Side::Left, lean);
         }
     }
+    let nominal = format!("nominal Ø{}", units.text(Measure::Size, fit.limits.nominal));
+    chart.tag((left + 0.52, 0.0), nominal, QUIET, Side::Below);
     let Limits { lower: hole_low, upper: hole_high } = fit.limits.hole;
     let Limits { lower: shaft_low, upper: shaft_high } = fit.limits.shaft;
     for (pair, place, from, to) in
@@ -96,7 +97,7 @@ fn one_fit(chart: &mut Chart, units: Units, fit: &Fit, left: f64) {
 
 fn draw_zones(chart: &Chart, sketch: &mut Sketch, units: Units, fit: &Fit, left: f64) {
     let on_axis = |value: f64| units.on_axis(Measure::Deviation, value);
-    let (hole, shaft) = fit.callout.split_once('/').unwrap_or(("", ""));
+    let (hole, shaft) = classes(&fit.callout);
     for (limits, zone, kind, name, class) in
         [(fit.limits.hole, HOLE, 1, "hole", hole), (fit.limits.shaft, SHAFT, 0, "shaft", shaft)]
     {
@@ -115,6 +116,19 @@ fn draw_zones(chart: &Chart, sketch: &mut Sketch, units: Units, fit: &Fit, left:
     }
 }
 
+/// Tolerance classes of hole and shaft when the callout is made of both, such as H7/s6.
+fn classes(callout: &str) -> (&str, &str) {
+    let is_class = |text: &str| {
+        text.len() <= 5
+            && text.starts_with(|c: char| c.is_ascii_alphabetic())
+            && text.ends_with(|c: char| c.is_ascii_digit())
+    };
+    match callout.split_once('/') {
+        Some((hole, shaft)) if is_class(hole) && is_class(shaft) => (hole, shaft),
+        _ => ("", ""),
+    }
+}
+
 /// A deviation with its sign, as on a drawing.
 fn signed(units: Units, value: f64) -> String {
     let number = units.reading(Measure::Deviation, value).number;
@@ -128,6 +142,13 @@ fn plain_interference(units: Units, value: f64) -> String {
     } else {
         units.text(Measure::Deviation, value)
     }
+}
+
+#[test]
+fn only_a_pair_of_classes_names_the_zones() {
+    assert_eq!(classes("H7/s6"), ("H7", "s6"));
+    assert_eq!(classes("FN 4"), ("", ""));
+    assert_eq!(classes("+30/0 µm"), ("", ""));
 }
 
 fn caption(fits: &[Fit], units: Units) -> String {
@@ -146,5 +167,5 @@ fn caption(fits: &[Fit], units: Units) -> String {
             )
         })
         .collect();
-    sentences.join(" ")
+    sentence(&sentences.join(" "))
 }

@@ -1,0 +1,101 @@
+//! `hubgrip scatter`: what the population of parts does.
+
+use std::fs;
+use std::path::{Path, PathBuf};
+
+use clap::Args;
+use hubgrip::diagnostic::Diagnostic;
+use hubgrip::population::distribution::measured::{self, Part};
+use hubgrip::population::scatter::understood::{self, PopulationError, Understood};
+use hubgrip::population::scatter::{Settings, scatter};
+use hubgrip::quantity::Kind;
+use hubgrip::report::scatter as report;
+
+use super::exit::{Ending, Failure};
+use super::input::{self, WhatIf};
+use super::output::Output;
+
+const EXAMPLE: &str = "\
+Example:
+  hubgrip scatter joint.yaml
+  hubgrip scatter joint.yaml -o population.html --samples 10000000 --seed 7
+  hubgrip scatter joint.yaml --set population.hole.cp=1.33 --json | jq '.slip[].ppm'
+
+The joint file says how the parts scatter:
+  population:
+    hole: {cp: 1.33, cpk: 1.1, toward: upper}     normal by process capability
+    shaft: {mean: 60.062 mm, sd: 3 um, truncated: limits}
+    friction: {mean: 0.12, sd: 0.01, truncated: 0.09 to 0.15}
+    hub_roughness: 6 to 10 um                     every value alike
+    shaft: {measured: shafts.csv}                 a list of measured parts
+
+The exit code is 1 when the two engines do not agree.";
+
+/// What the population of parts does: probability of slip, of yield
+#[derive(Debug, Args)]
+#[command(after_help = EXAMPLE)]
+pub struct Arguments {
+    /// Joint file; - is standard input
+    #[arg(value_name = "JOINT.yaml")]
+    pub file: PathBuf,
+    /// The population as JSON, fixed names, full precision
+    #[arg(long)]
+    pub json: bool,
+    /// A page with histograms and tails; - is standard output
+    #[arg(long, short, value_name = "OUT.html")]
+    pub output: Option<PathBuf>,
+    /// Random pairs
+    #[arg(long, value_name = "N", default_value_t = 1_000_000)]
+    pub samples: u64,
+    /// Seed of the random pairs; the same seed gives the same bytes on any number of threads
+    #[arg(long, value_name = "N", default_value_t = 1)]
+    pub seed: u64,
+    #[command(flatten)]
+    pub what_if: WhatIf,
+}
+
+pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> Result<Ending, Failure> {
+    let library = input::library(materials, output)?;
+    let joint = input::joint(&arguments.file, &arguments.what_if.set, &library)?;
+    let Understood { model, assumed } = understood_of(&joint, &arguments.file)?;
+    let settings =
+        Settings { samples: arguments.samples, seed: arguments.seed, slip_safety: joint.require.slip_safety };
+    let scatter = scatter(model, settings)
+        .map_err(|error| Diagnostic::new(error.to_string()).in_file(input::shown(&arguments.file)))?;
+    let told = report::Told { joint: &joint, scatter: &scatter, assumed: &assumed };
+    if let Some(path) = &arguments.output {
+        output.file(path, &report::html(&told))?;
+    }
+    let page_on_stdout = arguments.output.as_ref().is_some_and(|path| path.as_os_str() == "-");
+    if !page_on_stdout {
+        output.result(&if arguments.json { report::json(&told) } else { report::text(&told) })?;
+    }
+    Ok(if report::agrees(&scatter) { Ending::Met } else { Ending::NotMet })
+}
+
+/// The model of a joint; lists of measurements lie beside the joint file.
+pub fn understood_of(joint: &hubgrip::joint::Joint, file: &Path) -> Result<Understood, Failure> {
+    let folder = file.parent().unwrap_or(Path::new("")).to_path_buf();
+    let mut read = |name: &str, kind: Kind| {
+        let parts = parts(&folder.join(name), kind)?;
+        Ok(parts.into_iter().map(|part| part.value).collect())
+    };
+    understood::understood(joint, &mut read).map_err(|error| match error {
+        PopulationError::Measured(fault) => fault.into(),
+        other => Diagnostic::new(other.to_string()).in_file(input::shown(file)).into(),
+    })
+}
+
+/// The measured parts of a CSV file.
+pub fn parts(path: &Path, kind: Kind) -> Result<Vec<Part>, Box<Diagnostic>> {
+    let bytes = fs::read(path).map_err(|error| {
+        Box::new(
+            Diagnostic::new(format!("cannot read: {error}"))
+                .in_file(path)
+                .with_help("a list of measurements is a CSV file, named from the folder of the joint file"),
+        )
+    })?;
+    let text = String::from_utf8(bytes)
+        .map_err(|_| Box::new(Diagnostic::new("this is not text in UTF-8").in_file(path)))?;
+    measured::read(&text, kind).map_err(|fault| Box::new(fault.in_file(path)))
+}

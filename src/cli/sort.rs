@@ -1,0 +1,194 @@
+//! `hubgrip sort`: selective assembly.
+
+use std::path::{Path, PathBuf};
+
+use clap::{Args, ValueEnum};
+use hubgrip::diagnostic::Diagnostic;
+use hubgrip::joint::Joint;
+use hubgrip::joint::population::Variation;
+use hubgrip::material::Range;
+use hubgrip::population::distribution::Distribution;
+use hubgrip::population::distribution::measured::Part;
+use hubgrip::population::scatter::understood::limits;
+use hubgrip::population::sort::groups::{Grouping, Lots};
+use hubgrip::population::sort::matching::greatest_matching;
+use hubgrip::population::sort::required_band;
+use hubgrip::quantity::{Kind, parse_range};
+use hubgrip::report::sort as report;
+use hubgrip::tolerance::Member;
+
+use super::exit::{Ending, Failure};
+use super::input::{self, WhatIf};
+use super::output::Output;
+use super::scatter::{parts, understood_of};
+
+const EXAMPLE: &str = "\
+Example:
+  hubgrip sort joint.yaml --groups 4 --band \"30 to 45 um\"
+  hubgrip sort joint.yaml --groups 3 --by share
+  hubgrip sort joint.yaml --holes holes.csv --shafts shafts.csv --band \"30 to 40 um\" --pick-list pairs.csv
+
+Without --band the band is what the requirements of the joint file allow. A list of measured
+parts is a CSV file with a column diameter_mm (or diameter, with the unit behind each number)
+and, if wanted, a column part. The exit code is 1 when pairs of a group may leave the band.";
+
+/// Selective assembly: grouping parts so that a coarse tolerance gives a fine fit
+#[derive(Debug, Args)]
+#[command(after_help = EXAMPLE)]
+pub struct Arguments {
+    /// Joint file; - is standard input
+    #[arg(value_name = "JOINT.yaml")]
+    pub file: PathBuf,
+    /// Number of groups; without it the fewest that keep every pair within the band
+    #[arg(long, value_name = "N")]
+    pub groups: Option<usize>,
+    /// Limits of the groups: of equal width, or with equal shares of the parts
+    #[arg(long, value_enum, default_value_t = By::Width)]
+    pub by: By,
+    /// Wanted interference, such as "30 to 45 um"; without it what the requirements allow
+    #[arg(long, value_name = "RANGE")]
+    pub band: Option<String>,
+    /// Measured holes, CSV
+    #[arg(long, value_name = "HOLES.csv")]
+    pub holes: Option<PathBuf>,
+    /// Measured shafts, CSV
+    #[arg(long, value_name = "SHAFTS.csv")]
+    pub shafts: Option<PathBuf>,
+    /// Pick list of the measured parts, CSV; - is standard output
+    #[arg(long, value_name = "OUT.csv")]
+    pub pick_list: Option<PathBuf>,
+    /// The groups as JSON, fixed names, full precision
+    #[arg(long)]
+    pub json: bool,
+    #[command(flatten)]
+    pub what_if: WhatIf,
+}
+
+/// How the limits of the groups are set.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub enum By {
+    Width,
+    Share,
+}
+
+pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> Result<Ending, Failure> {
+    let library = input::library(materials, output)?;
+    let joint = input::joint(&arguments.file, &arguments.what_if.set, &library)?;
+    let shown = input::shown(&arguments.file);
+    let refused = |message: String| Failure::from(Diagnostic::new(message).in_file(&shown));
+    let folder = arguments.file.parent().unwrap_or(Path::new("")).to_path_buf();
+    let holes = list(arguments.holes.as_deref(), joint.population.hole.as_ref(), &folder)?;
+    let shafts = list(arguments.shafts.as_deref(), joint.population.shaft.as_ref(), &folder)?;
+    let understood = understood_of(&joint, &arguments.file)?;
+    let population = &understood.model.population;
+    let of = |parts: &Option<Vec<Part>>, plan: &Distribution| match parts {
+        Some(parts) => {
+            let sizes: Vec<f64> = parts.iter().map(|part| part.value - joint.diameter).collect();
+            Distribution::measured(&sizes).map_err(|error| refused(error.to_string()))
+        }
+        None => Ok(plan.clone()),
+    };
+    let lots = Lots {
+        holes: of(&holes, &population.hole)?,
+        shafts: of(&shafts, &population.shaft)?,
+        hole: limits(&joint, Member::Hole),
+        shaft: limits(&joint, Member::Shaft),
+    };
+    let (band, band_source) = band(arguments.band.as_deref(), &joint)?;
+    let fewest = lots.fewest(band);
+    let grouping = match arguments.by {
+        By::Width => Grouping::EqualWidth,
+        By::Share => Grouping::EqualShare,
+    };
+    let count = match (arguments.groups, fewest) {
+        (Some(count), _) | (None, Some(count)) => count,
+        (None, None) => {
+            return Err(Diagnostic::new("no number of groups brings every pair into the band")
+                .with_help("give --groups N, or a wider --band")
+                .into());
+        }
+    };
+    let groups = lots.sorted(count, grouping, band).map_err(|error| refused(error.to_string()))?;
+    let pairs = match (&holes, &shafts) {
+        (Some(holes), Some(shafts)) => {
+            let sizes = |parts: &[Part]| parts.iter().map(|part| part.value).collect::<Vec<f64>>();
+            greatest_matching(&sizes(holes), &sizes(shafts), band)
+        }
+        _ => Vec::new(),
+    };
+    let measured = match (&holes, &shafts) {
+        (Some(holes), Some(shafts)) => Some(report::Lots { holes, shafts, pairs: &pairs }),
+        _ => None,
+    };
+    let assumed: Vec<String> = understood
+        .assumed
+        .into_iter()
+        .filter(|sentence| {
+            (holes.is_none() && sentence.starts_with("population.hole"))
+                || (shafts.is_none() && sentence.starts_with("population.shaft "))
+        })
+        .collect();
+    let sorted = report::Sorted {
+        joint: &joint,
+        groups: &groups,
+        grouping,
+        fewest,
+        band_source,
+        lots: measured,
+        assumed: &assumed,
+    };
+    if let Some(path) = &arguments.pick_list {
+        let Some(lots) = &sorted.lots else {
+            return Err(Diagnostic::new("a pick list needs measured holes and measured shafts")
+                .with_help("give --holes HOLES.csv and --shafts SHAFTS.csv")
+                .into());
+        };
+        let text = report::pick_list(lots).map_err(|error| Diagnostic::new(error.to_string()))?;
+        output.file(path, &text)?;
+        if path.as_os_str() == "-" {
+            return Ok(ending(groups.all_within()));
+        }
+    }
+    output.result(&if arguments.json { report::json(&sorted) } else { report::text(&sorted) })?;
+    Ok(ending(groups.all_within()))
+}
+
+fn ending(within: bool) -> Ending {
+    if within { Ending::Met } else { Ending::NotMet }
+}
+
+/// The measured parts named on the command line, else those of the joint file.
+fn list(given: Option<&Path>, plan: Option<&Variation>, folder: &Path) -> Result<Option<Vec<Part>>, Failure> {
+    let path = match (given, plan) {
+        (Some(path), _) => path.to_path_buf(),
+        (None, Some(Variation::Measured(name))) => folder.join(name),
+        _ => return Ok(None),
+    };
+    Ok(Some(parts(&path, Kind::Length)?))
+}
+
+/// The wanted band, m, with where it comes from.
+fn band(given: Option<&str>, joint: &Joint) -> Result<(Range, &'static str), Failure> {
+    if let Some(text) = given {
+        let (low, high) = parse_range(Kind::Length, text).map_err(|error| {
+            Diagnostic::new(format!("--band {text}: {error}"))
+                .with_help("write a range such as \"30 to 45 um\"")
+        })?;
+        if low >= high {
+            return Err(Diagnostic::new(format!("--band {text}: this is one value"))
+                .with_help("write a range such as \"30 to 45 um\"")
+                .into());
+        }
+        return Ok((Range { low, high }, "as given"));
+    }
+    let (low, high) = required_band(joint).map_err(|error| Diagnostic::new(error.to_string()))?;
+    let tightest = joint.fits.first().map_or(0.0, |fit| fit.limits.interference().tightest);
+    let low = low.unwrap_or(0.0);
+    let high = high.unwrap_or(tightest);
+    if low >= high {
+        return Err(Diagnostic::new("no interference meets all requirements of the joint file")
+            .with_help("give --band, or change the joint: `hubgrip choose` says what blocks")
+            .into());
+    }
+    Ok((Range { low, high }, "from the requirements of the joint file"))
+}
