@@ -18,6 +18,11 @@ const MOST_TEMPLATES: usize = 1024;
 /// Templates that a worker has at hand.
 const MOST_AT_HAND: usize = 16;
 
+/// Keys that are shown and change no number.
+const SHOWN_ONLY: [&str; 4] = ["title", "drawing", "note", "date"];
+/// Longest text of such a key that needs no look of the reader, bytes.
+const SHORT: usize = 100;
+
 /// What every row is read with.
 pub(super) struct Rows<'a> {
     pub(super) columns: Vec<Column>,
@@ -80,6 +85,8 @@ impl<'a> Rows<'a> {
             let Some(name) = &column.key else { continue };
             if Field::has(name) {
                 key.push(u8::from(!cell.is_empty()));
+            } else if SHOWN_ONLY.contains(&name.as_str()) && is_plain(cell) {
+                key.push(0);
             } else {
                 key.extend_from_slice(cell.as_bytes());
                 key.push(0);
@@ -124,6 +131,11 @@ impl<'a> Rows<'a> {
         read::read(&self.base, &self.base_name, &set, self.library)
             .map_err(|faults| faults.iter().map(told).collect::<Vec<_>>().join("; "))
     }
+}
+
+/// Whether a text is one that the reader of joint files takes as it is.
+fn is_plain(cell: &str) -> bool {
+    cell.len() <= SHORT && !cell.starts_with(['{', '[', '"', '\'']) && !cell.contains(char::is_control)
 }
 
 fn take_to_hand(worker: &mut Worker, template: Option<Template>) {
