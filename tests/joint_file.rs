@@ -46,7 +46,19 @@ fn every_key_reaches_the_joint() {
     assert_eq!((joint.require.fracture_safety, joint.require.press_force), (2.2, Some(300e3)));
     assert_eq!(joint.display, UnitSystem::Inch);
     let taken: Vec<&str> = joint.defaults.iter().map(|default| default.key.as_str()).collect();
-    assert_eq!(taken, ["duty.idle.torque", "duty.idle.axial_force"]);
+    assert_eq!(
+        taken,
+        [
+            "duty.idle.torque",
+            "duty.idle.axial_force",
+            "assembly.medium",
+            "assembly.form_error",
+            "assembly.handling_allowance",
+            "assembly.transfer_time",
+            "assembly.vessel",
+            "assembly.temperature_lag",
+        ]
+    );
     assert!(joint.remarks.iter().any(|remark| remark.contains("Ra 1.6 um") && remark.contains("Rz 9.6 um")));
 }
 
@@ -74,6 +86,7 @@ fn every_silent_key_leaves_a_default_with_its_source() {
             ("assembly.clearance", "60 um"),
             ("assembly.chamfer_angle", "5 deg"),
             ("assembly.bath", "dry ice"),
+            ("assembly.temperature_lag", "0.5"),
             ("smoothing.factor", "0.8"),
             ("smoothing.at", "loosest"),
             ("criterion", "von Mises"),

@@ -2,7 +2,7 @@
 
 mod random_joints;
 
-use hubgrip::findings::{Findings, RingStress, compute};
+use hubgrip::findings::{Findings, Question, RingStress, Verdict, VerdictUnit, compute};
 use hubgrip::joint::{Bath, Joint, Method};
 use hubgrip::material::library::Library;
 use hubgrip::population::kernel::joining::PlainJoining;
@@ -87,7 +87,8 @@ fn same_joining(joint: &Joint, findings: &Findings) {
         assert_eq!(joining.bath_alone(bath.bath, made), bath.alone);
     }
     if let Some((found, ok)) = joining.by_method(joint.assembly.method, joint.assembly.bath, made) {
-        let verdict = findings.verdicts.last().unwrap();
+        let joined = |verdict: &&Verdict| verdict.question == Question::Assembly && verdict.unit != VerdictUnit::Time;
+        let verdict = findings.verdicts.iter().find(joined).unwrap();
         same_option(found, verdict.found);
         assert_eq!(ok, verdict.ok);
     }

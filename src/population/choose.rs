@@ -137,7 +137,7 @@ impl ChosenFit {
 /// shaft: {material: C45+N}
 /// hub: {material: C45+N, outer_diameter: 120 mm}
 /// friction: 0.12
-/// duty: [{state: rated, torque: 900 N.m}]
+/// duty: [{state: rated, torque: 300 N.m}]
 /// ";
 /// let joint = read::read_without_fit(text, Path::new("joint.yaml"), &[], &Library::built_in()).unwrap();
 /// let choice = choose(joint, Options { standard: Standard::Iso286, finest: None }).unwrap();

@@ -25,7 +25,7 @@ pub fn time_allowed(seconds: f64) -> String {
 
 /// A time that must be kept, rounded up: seconds to two minutes, then minutes, then hours.
 pub fn time_needed(seconds: f64) -> String {
-    let up = |value: f64| (value - 1e-9).ceil().max(0.0);
+    let up = |value: f64| (value - 1e-9).ceil().max(0.0) + 0.0;
     if seconds <= 120.0 {
         format!("{:.0} s", up(seconds))
     } else if seconds <= 7200.0 {
