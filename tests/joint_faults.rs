@@ -319,24 +319,6 @@ fn missing_keys_are_named_with_an_example() {
     );
 }
 
-#[test]
-fn what_is_not_calculated_yet_is_refused_by_name() {
-    let refused = |text: &str| {
-        let found = faults(text);
-        assert_eq!(found.len(), 1, "{}", listed(&found));
-        assert!(found[0].message.contains(" is not supported yet: "), "{}", found[0].message);
-        assert!(!found[0].help.as_deref().unwrap_or("").contains("did you mean"));
-        (found[0].message.split(' ').next().unwrap_or("").to_owned(), place(&found[0]))
-    };
-    for key in ["bearing: 6210"] {
-        let name = key.split(':').next().unwrap();
-        assert_eq!(refused(&format!("{LEAST}{key}\n")), (format!("`{name}`"), Some((7, 1, name.len()))));
-    }
-    for (from, to, name, at) in [("fit: H7/u6", "fit: {bearing: 6210, shaft: k6}", "`bearing`", (6, 7, 7))] {
-        assert_eq!(refused(&LEAST.replacen(from, to, 1)), (name.to_owned(), Some(at)));
-    }
-}
-
 /// A joint of three rings with everything that it needs.
 const RINGS: &str = "\
 joint_file: 1
@@ -416,15 +398,6 @@ fn faults_of_the_keys_of_several_rings_and_of_service_have_their_place() {
         let placed = place(&found[0]).map(|(line, column, _)| (line, column));
         assert_eq!(placed, Some(at), "{to}: {}", listed(&found));
         assert!(found[0].message.contains(words), "{to}: {}", listed(&found));
-    }
-}
-
-#[test]
-fn unsupported_keys_are_never_proposed() {
-    for (key, not) in [("bearng", "bearing")] {
-        let found = faults(&format!("{LEAST}{key}: 1\n"));
-        let help = found[0].help.as_deref().unwrap_or("");
-        assert!(!help.contains(&format!("`{not}`")), "{help}");
     }
 }
 

@@ -1,6 +1,6 @@
 //! Cautions and notes that the numbers of a joint call for.
 
-use super::{Caution, Findings};
+use super::{Caution, Findings, bearing_of};
 use crate::assembly::cautions::{self as practice, Process};
 use crate::joint::{Bath, Method};
 use crate::material::Kind;
@@ -16,6 +16,7 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     all.extend(input_remarks(findings));
     all.extend(proportions(findings));
     all.extend(polymers(findings));
+    all.extend(bearing_of::cautions(findings));
     all.extend(assembly(findings));
     all
 }

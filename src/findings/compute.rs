@@ -4,7 +4,8 @@ use thiserror::Error;
 
 use super::kernel::{Kernel, pair_interferences};
 use super::{
-    DutyFindings, Findings, OnsetOfYield, assembly_of, cautions, service, softening, verdicts, worksheet,
+    DutyFindings, Findings, OnsetOfYield, assembly_of, bearing_of, cautions, service, softening, verdicts,
+    worksheet,
 };
 use crate::assembly::AssemblyError;
 use crate::joint::{Allow, Joint};
@@ -77,6 +78,7 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
     let assembly = assembly_of::assembly(&joint, &extremes)?;
     let character =
         joint.fits.get(joint.last_interface()).map_or(Character::Clearance, |fit| fit.limits.character());
+    let bearing = bearing_of::bearing(&joint, &extremes, &duty, &assembly)?;
     let mut findings = Findings {
         joint,
         character,
@@ -84,6 +86,7 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         duty,
         service,
         assembly,
+        bearing,
         onset_of_yield,
         verdicts: Vec::new(),
         worksheet: Vec::new(),

@@ -10,6 +10,8 @@
 //! | [`template`] | commented files to start from |
 //! | [`schema`](mod@schema) | JSON Schema for editors |
 
+mod bearing;
+mod bearing_keys;
 mod decode;
 mod diagnose;
 mod draft;
@@ -27,6 +29,7 @@ mod tree;
 mod validate;
 mod written;
 
+pub use bearing::BearingSeat;
 pub use file::VERSION;
 
 use std::sync::Arc;
@@ -60,6 +63,8 @@ pub struct Joint {
     pub fits: Vec<Fit>,
     /// Coefficients of friction.
     pub friction: Friction,
+    /// The bearing, when one of the two parts is a ring of one.
+    pub bearing: Option<BearingSeat>,
     /// The interfaces in the order in which they are joined; a plain joint has the one interface 0.
     pub order: Vec<usize>,
     /// The joint along its length where hub or shaft is stepped; empty when both are of one section.

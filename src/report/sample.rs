@@ -338,6 +338,7 @@ fn joint(spec: &Spec) -> Joint {
         length: spec.length / 1e3,
         relief: spec.relief / 1e3,
         fits: fits.collect(),
+        bearing: None,
         order: (0..rings.len() - 1).collect(),
         slices: Vec::new(),
         friction: Friction {

@@ -2,10 +2,11 @@
 
 use maud::{Markup, html};
 
-use super::Sheet;
 use super::table::scrolling;
-use crate::report::service;
+use super::{Sheet, capital};
+use crate::report::typeset::prose;
 use crate::report::units::Measure;
+use crate::report::{bearing, service};
 
 /// Sentences, and the slices of a stepped joint.
 pub(super) fn body(sheet: Sheet<'_>) -> Markup {
@@ -15,10 +16,29 @@ pub(super) fn body(sheet: Sheet<'_>) -> Markup {
                 li { (sentence) }
             }
         }
+        (bearing(sheet))
         @if !sheet.findings.joint.slices.is_empty() {
             p { "Slice by slice: each slice by itself is good to 10 to 15\u{2009}%, the total to a few percent." }
             (scrolling("Slices along the joint", "slices", &slices(sheet)))
         }
+    }
+}
+
+fn bearing(sheet: Sheet<'_>) -> Markup {
+    let Some(title) = bearing::title(sheet.findings) else { return html! {} };
+    let rows = bearing::rows(sheet.findings);
+    let table = html! {
+        thead { tr { th scope="col" { "Bearing" } th.r scope="col" { "Value" } th scope="col" { "At, limit or source" } } }
+        tbody {
+            @for row in rows {
+                tr { th scope="row" { (row.name) } td.r { (prose(&row.value)) } td.small { (prose(&row.note)) } }
+            }
+        }
+    };
+    html! {
+        h3 { "The bearing" }
+        p { (capital(&title)) "." }
+        (scrolling("What the seat does to the bearing", "bearing", &table))
     }
 }
 
