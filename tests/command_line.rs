@@ -199,7 +199,12 @@ fn bad_inputs() -> Vec<Bad> {
         bad("class not at that size", ("H7/s6", "J9/s6"), Some((6, 6)), &["J9", "J8"]),
         bad("not a number", ("70 mm", ".nan"), Some((3, 9)), &["nan"]),
         bad("infinity", ("70 mm", "inf mm"), Some((3, 9)), &["inf"]),
-        bad("not yet", ("fit: H7/s6", "fit: H7/s6\nbearing: 6210"), Some((7, 1)), &["not supported yet"]),
+        bad(
+            "wrong section",
+            ("fit: H7/s6", "fit: H7/s6\nbearing: 6210"),
+            Some((7, 1)),
+            &["`shaft` and `hub`"],
+        ),
         bad("newer version", ("joint_file: 1", "joint_file: 2"), Some((1, 13)), &["2", "1"]),
         Bad { name: "empty", text: String::new(), place: None, words: &["empty"] },
     ]

@@ -319,24 +319,6 @@ fn missing_keys_are_named_with_an_example() {
     );
 }
 
-#[test]
-fn what_is_not_calculated_yet_is_refused_by_name() {
-    let refused = |text: &str| {
-        let found = faults(text);
-        assert_eq!(found.len(), 1, "{}", listed(&found));
-        assert!(found[0].message.contains(" is not supported yet: "), "{}", found[0].message);
-        assert!(!found[0].help.as_deref().unwrap_or("").contains("did you mean"));
-        (found[0].message.split(' ').next().unwrap_or("").to_owned(), place(&found[0]))
-    };
-    for key in ["bearing: 6210"] {
-        let name = key.split(':').next().unwrap();
-        assert_eq!(refused(&format!("{LEAST}{key}\n")), (format!("`{name}`"), Some((7, 1, name.len()))));
-    }
-    for (from, to, name, at) in [("fit: H7/u6", "fit: {bearing: 6210, shaft: k6}", "`bearing`", (6, 7, 7))] {
-        assert_eq!(refused(&LEAST.replacen(from, to, 1)), (name.to_owned(), Some(at)));
-    }
-}
-
 /// A joint of three rings with everything that it needs.
 const RINGS: &str = "\
 joint_file: 1
@@ -459,20 +441,6 @@ fn temperatures_are_given_once() {
     assert!(found[0].message.contains("both given"), "{}", found[0].message);
     let found = faults(&RINGS.replacen(state, "temperatures: [20 degC]", 1));
     assert_eq!(found[0].message, "`temperatures` has 1 for 3 rings");
-}
-
-#[test]
-fn unsupported_keys_are_never_proposed() {
-    let found = faults(&format!(
-        "{LEAST}bearng: 1
-"
-    ));
-    assert!(!found[0].help.as_deref().unwrap_or("").contains("did you mean"), "{}", listed(&found));
-    let found = faults(&format!(
-        "{LEAST}ordr: 1
-"
-    ));
-    assert_eq!(found[0].help.as_deref(), Some("did you mean `order`?"));
 }
 
 #[test]

@@ -132,7 +132,7 @@ fn what_is_plainly_wrong_does_not_match_the_schema() {
     for (from, to, why) in [
         ("outer_diameter: 110 mm", "outer_diametr: 110 mm", "outer_diametr is unknown"),
         ("material: C45+QT", "material: C45+QT\n  rough: Rz 3 um", "rough is unknown"),
-        ("length: 70 mm", "relief: 0 mm", "\"length\" is missing"),
+        ("joint_file: 1\n", "", "\"joint_file\" is missing"),
         ("diameter: 60 mm", "diameter: 60", "not of the type"),
         ("method: press ", "method: hammer ", "not one of the words"),
         ("joint_file: 1", "joint_file: 2", "not the constant"),

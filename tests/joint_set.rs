@@ -53,8 +53,11 @@ fn faults_in_a_change_name_the_option_not_a_line() {
     );
     assert_eq!(told(&[("length", "70")]).0, "--set length: 70 has no unit: write 70 mm");
     assert_eq!(
-        told(&[("bearing", "6210")]).0,
-        "--set bearing: `bearing` is not supported yet: bearing seats are not calculated"
+        told(&[("bearing", "6210")]),
+        (
+            "--set bearing: unknown key `bearing`".to_owned(),
+            "`bearing` is a key of `shaft` and `hub`: indent it below its section".to_owned()
+        )
     );
     // A fault in the file itself still has its line.
     let found = set(&LEAST.replacen("70 mm", "70", 1), &[("hub.outer_diameter", "50mm")]).unwrap_err();

@@ -87,7 +87,8 @@ fn same_joining(joint: &Joint, findings: &Findings) {
         assert_eq!(joining.bath_alone(bath.bath, made), bath.alone);
     }
     if let Some((found, ok)) = joining.by_method(joint.assembly.method, joint.assembly.bath, made) {
-        let joined = |verdict: &&Verdict| verdict.question == Question::Assembly && verdict.unit != VerdictUnit::Time;
+        let joined =
+            |verdict: &&Verdict| verdict.question == Question::Assembly && verdict.unit != VerdictUnit::Time;
         let verdict = findings.verdicts.iter().find(joined).unwrap();
         same_option(found, verdict.found);
         assert_eq!(ok, verdict.ok);

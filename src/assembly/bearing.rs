@@ -159,6 +159,42 @@ pub fn outer_ring(fit: &OuterRingFit) -> Result<RingChange, AssemblyError> {
     })
 }
 
+/// Change of the raceway of a ring under a contact pressure on its seat, m; never negative.
+///
+/// ΔF = 2 p d² F / (E |F² − d²|), for an inner ring with F > d as for an outer ring with its raceway within.
+///
+/// | symbol | meaning | unit | valid |
+/// |---|---|---|---|
+/// | p | contact pressure on the seat | Pa | ≥ 0 |
+/// | d | diameter of the seat | m | > 0 |
+/// | F | raceway diameter | m | > 0, not d |
+/// | E | Young's modulus of the ring | Pa | > 0 |
+///
+/// Assumptions and source as for [`inner_ring`]: the raceway is a free face, its hoop strain is its change.
+///
+/// # Errors
+/// [`AssemblyError::OutsideRange`].
+///
+/// # Example
+/// ```
+/// use hubgrip::assembly::bearing::raceway_change;
+/// let growth = raceway_change(10.5817e6, 0.05, 0.058, 206e9).unwrap();
+/// assert!((growth - 17.2414e-6).abs() < 1e-10);
+/// ```
+pub fn raceway_change(
+    pressure: f64,
+    seat: f64,
+    raceway: f64,
+    youngs_modulus: f64,
+) -> Result<f64, AssemblyError> {
+    not_negative("contact pressure (Pa)", pressure)?;
+    positive("diameter of the seat (m)", seat)?;
+    positive("raceway (m)", raceway)?;
+    positive("Young's modulus (Pa)", youngs_modulus)?;
+    let squares = positive("wall of the ring (m²)", (raceway * raceway - seat * seat).abs())?;
+    Ok(2.0 * pressure * seat * seat * raceway / (youngs_modulus * squares))
+}
+
 /// Radial internal clearance after mounting, m, diametral as the standard has it.
 ///
 /// G = G_0 − ΔF − ΔR − α (T_i − T_o)(F + R)/2

@@ -1,6 +1,6 @@
 //! Cautions and notes that the numbers of a joint call for.
 
-use super::{Caution, Findings, joining_cautions};
+use super::{Caution, Findings, bearing_of, joining_cautions};
 use crate::joint::{Allow, DutyState};
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
@@ -16,6 +16,7 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     all.extend(proportions(findings));
     all.extend(polymers(findings));
     all.extend(buckling(findings));
+    all.extend(bearing_of::cautions(findings));
     all.extend(joining_cautions::cautions(findings));
     all
 }

@@ -5,7 +5,8 @@ use thiserror::Error;
 use super::kernel::{Kernel, pair_interferences};
 use super::softening::Parts;
 use super::{
-    DutyFindings, Findings, OnsetOfYield, assembly_of, cautions, service, softening, verdicts, worksheet,
+    DutyFindings, Findings, OnsetOfYield, assembly_of, bearing_of, cautions, service, softening, verdicts,
+    worksheet,
 };
 use crate::assembly::AssemblyError;
 use crate::joint::{Allow, Joint};
@@ -83,6 +84,7 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
     let assembly = assembly_of::assembly(&joint, &extremes)?;
     let character =
         joint.fits.get(joint.last_interface()).map_or(Character::Clearance, |fit| fit.limits.character());
+    let bearing = bearing_of::bearing(&joint, &extremes, &duty, &assembly)?;
     let mut findings = Findings {
         joint,
         character,
@@ -90,6 +92,7 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         duty,
         service,
         assembly,
+        bearing,
         onset_of_yield,
         verdicts: Vec::new(),
         worksheet: Vec::new(),

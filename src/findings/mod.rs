@@ -1,6 +1,7 @@
 //! Everything that is computed about a joint, in one place, SI.
 
 mod assembly_of;
+mod bearing_of;
 mod cautions;
 pub mod cold_bath;
 mod compute;
@@ -17,6 +18,7 @@ mod verdicts;
 pub mod worksheet;
 
 pub use assembly_of::{bath_name, bath_temperature};
+pub use bearing_of::{BearingFindings, BearingState, HOOP_LIMIT};
 pub use cautions::criterion_source;
 use cold_bath::ColdBathFindings;
 pub use compute::{FindingsError, compute};
@@ -50,6 +52,8 @@ pub struct Findings {
     pub service: ServiceFindings,
     /// How it is put together.
     pub assembly: AssemblyFindings,
+    /// What the seat does to the bearing, when a ring of one is fitted.
+    pub bearing: Option<BearingFindings>,
     /// Onset of yield of the joint, when an elastic limit exists.
     pub onset_of_yield: Option<OnsetOfYield>,
     /// The three questions answered against the requirements.

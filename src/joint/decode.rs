@@ -153,7 +153,7 @@ impl<'t> Value<'t> {
         let section = self.tree.key_path(self.node);
         let place = if section.is_empty() { String::new() } else { format!(" in `{section}`") };
         let fault = Fault::key(entry.value, format!("unknown key `{}`{place}", shortened(&entry.key)));
-        let offered = known.iter().copied().filter(|key| !file::NOT_YET.contains(key));
+        let offered = known.iter().copied();
         let help = if let Some(found) = did_you_mean(&shortened(&entry.key), offered.clone()) {
             self.faults.add_meant(self.node, found);
             format!("did you mean `{found}`?")

@@ -4,7 +4,7 @@ use super::DefaultTaken;
 use super::decode::Value;
 use super::diagnose::{Fault, Faults};
 use super::tree::{Content, NodeId, Tree};
-use super::written::{At, Leaf, NotYet, Written};
+use super::written::{Leaf, Written};
 use crate::material::library::Library;
 use crate::quantity::Length;
 
@@ -111,15 +111,6 @@ impl<'a> Draft<'a> {
     pub(crate) fn called<L>(&self, written: &Written<L>) -> String {
         let key = self.tree.key(written.node).unwrap_or("value");
         format!("{key} {}", written.value.text.trim())
-    }
-
-    /// A fault for a key whose subject is not calculated yet.
-    pub(crate) fn not_yet(&self, key: Option<&At<NotYet>>, subject: &str, instead: &str) {
-        if let Some(key) = key {
-            let name = self.tree.key(key.node).unwrap_or("this");
-            self.faults
-                .add(Fault::key(key.node, format!("`{name}` is not supported yet: {subject}")).help(instead));
-        }
     }
 
     /// Takes note of a default.

@@ -7,25 +7,23 @@ use schemars::JsonSchema;
 use serde::Deserialize;
 
 use super::assembly_keys::AssemblyKeys;
+use super::bearing_keys::BearingKeys;
 use super::leaf::{
     AllowWord, CriterionWord, DisplayWord, FlagWord, FrictionText, LimitsText, LubricationWord, YieldRuleWord,
 };
 use super::leaf::{FitText, MaterialName, UncertainSize};
 use super::leaf::{MaterialKeys, Roughness, SmoothingAtWord, SmoothingText, Version};
 use super::population_keys::PopulationKeys;
-use super::written::{At, Line, NotYet, Note, TextOr, Written};
+use super::written::{At, Line, Note, TextOr, Written};
 use crate::quantity::{Force, Length, Number, NumberRange, Pressure, Speed, Temperature, Torque};
 
 /// Version of the joint file that is read.
 pub const VERSION: u32 = 1;
 
-/// Keys that are known but whose subject is not calculated yet, in any section.
-pub(crate) const NOT_YET: &[&str] = &["bearing"];
-
 /// The sections with their keys, for a key that was put into the wrong one.
 pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
-    ("shaft", &["name", "material", "bore", "roughness", "section", "steps"]),
-    ("hub", &["name", "material", "outer_diameter", "roughness", "section", "steps"]),
+    ("shaft", &["name", "material", "bore", "roughness", "section", "steps", "bearing"]),
+    ("hub", &["name", "material", "outer_diameter", "roughness", "section", "steps", "bearing"]),
     ("rings", &["name", "material", "bore", "outer_diameter", "roughness", "section"]),
     ("fit", &["hole", "measured"]),
     ("friction", &["holding", "pressing", "release", "lubrication"]),
@@ -128,10 +126,9 @@ pub(crate) struct JointFile {
     pub(crate) note: Option<Written<Note>>,
     /// Date as it shall be printed.
     pub(crate) date: Option<Written<Line>>,
-    /// Nominal diameter of the mating surface.
+    /// Nominal diameter of the mating surface. Silent with a bearing: that of its ring.
     pub(crate) diameter: Option<Written<Length>>,
-    /// Length of the hub along the shaft.
-    #[schemars(required)]
+    /// Length of the hub along the shaft. Silent with a bearing: its width.
     pub(crate) length: Option<Written<Length>>,
     /// Part of the length that carries nothing: chamfers and grooves. Silent: 0 mm.
     pub(crate) relief: Option<Written<Length>>,
@@ -163,8 +160,6 @@ pub(crate) struct JointFile {
     pub(crate) fits: Option<At<Vec<GivenFit>>>,
     /// Numbers of the fits in the order in which they are joined. Silent: from the innermost outwards.
     pub(crate) order: Option<At<Vec<Written<Number>>>>,
-    #[schemars(skip)]
-    pub(crate) bearing: Option<At<NotYet>>,
 }
 
 /// The inner part.
@@ -173,8 +168,7 @@ pub(crate) struct JointFile {
 pub(crate) struct ShaftKeys {
     /// What it is called. Silent: shaft.
     pub(crate) name: Option<Written<Line>>,
-    /// Material of the library by name, or written here with the keys of a library file.
-    #[schemars(required)]
+    /// Material of the library by name, or written here with the keys of a library file. Silent with a bearing: 100Cr6.
     pub(crate) material: Option<At<TextOr<MaterialName, MaterialKeys>>>,
     /// Diameter of its bore. Silent: 0 mm, a solid shaft.
     pub(crate) bore: Option<Written<Length>>,
@@ -182,6 +176,8 @@ pub(crate) struct ShaftKeys {
     pub(crate) roughness: Option<Written<Roughness>>,
     /// Ruling section that picks its strength. Silent: its diameter.
     pub(crate) section: Option<Written<Length>>,
+    /// A bearing whose outer ring is the inner part, in a housing.
+    pub(crate) bearing: Option<At<BearingKeys>>,
     /// A shaft whose bore changes: length and bore of each piece, from the end that enters first.
     pub(crate) steps: Option<At<Vec<At<ShaftStepKeys>>>>,
 }
@@ -192,8 +188,7 @@ pub(crate) struct ShaftKeys {
 pub(crate) struct HubKeys {
     /// What it is called. Silent: hub.
     pub(crate) name: Option<Written<Line>>,
-    /// Material of the library by name, or written here with the keys of a library file.
-    #[schemars(required)]
+    /// Material of the library by name, or written here with the keys of a library file. Silent with a bearing: 100Cr6.
     pub(crate) material: Option<At<TextOr<MaterialName, MaterialKeys>>>,
     /// Its outer diameter; the largest of the steps when it is stepped.
     pub(crate) outer_diameter: Option<Written<Length>>,
@@ -201,6 +196,8 @@ pub(crate) struct HubKeys {
     pub(crate) roughness: Option<Written<Roughness>>,
     /// Ruling section that picks its strength. Silent: the thickness of its wall.
     pub(crate) section: Option<Written<Length>>,
+    /// A bearing whose inner ring is the outer part, on a shaft.
+    pub(crate) bearing: Option<At<BearingKeys>>,
     /// A stepped hub: length and outer diameter of each piece, from the end that enters first.
     pub(crate) steps: Option<At<Vec<At<HubStepKeys>>>>,
 }
@@ -262,8 +259,6 @@ pub(crate) struct FitKeys {
     pub(crate) shaft: Option<At<TextOr<LimitsText, LimitKeys>>>,
     /// Two parts as measured.
     pub(crate) measured: Option<At<MeasuredKeys>>,
-    #[schemars(skip)]
-    pub(crate) bearing: Option<At<NotYet>>,
 }
 
 /// Limits of one member: deviations from the diameter (lower, upper), or sizes (min, max).

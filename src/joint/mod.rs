@@ -12,6 +12,8 @@
 //! | [`schema`](mod@schema) | JSON Schema for editors |
 
 mod assembly_keys;
+mod bearing;
+mod bearing_keys;
 mod decode;
 mod diagnose;
 mod draft;
@@ -30,6 +32,7 @@ mod tree;
 mod validate;
 mod written;
 
+pub use bearing::BearingSeat;
 pub use file::VERSION;
 
 use std::sync::Arc;
@@ -63,6 +66,8 @@ pub struct Joint {
     pub fits: Vec<Fit>,
     /// Coefficients of friction.
     pub friction: Friction,
+    /// The bearing, when one of the two parts is a ring of one.
+    pub bearing: Option<BearingSeat>,
     /// The interfaces in the order in which they are joined; a plain joint has the one interface 0.
     pub order: Vec<usize>,
     /// The joint along its length where hub or shaft is stepped; empty when both are of one section.

@@ -14,7 +14,7 @@ pub struct Template {
 }
 
 /// Every template; the first is the one for no word.
-pub const TEMPLATES: [Template; 9] = [
+pub const TEMPLATES: [Template; 10] = [
     Template {
         kind: "hub",
         subject: "a hub pressed onto a shaft, metric",
@@ -59,6 +59,11 @@ pub const TEMPLATES: [Template; 9] = [
         kind: "measured",
         subject: "two measured parts",
         text: include_str!("template/measured.yaml"),
+    },
+    Template {
+        kind: "bearing",
+        subject: "a bearing on a shaft, or in a housing",
+        text: include_str!("template/bearing.yaml"),
     },
 ];
 

@@ -2,6 +2,7 @@
 //! file is silent.
 
 mod assembly;
+mod bearing;
 mod duty;
 mod fit;
 mod friction;
@@ -18,14 +19,16 @@ use super::file::{JointFile, RequireKeys, RingKeys};
 use super::leaf::{CriterionWord, DisplayWord};
 use super::read::FitKey;
 use super::written::{At, Written};
-use super::{Allow, Fit, Joint, Requirements, Ring};
+use super::{Allow, BearingSeat, Fit, Joint, Requirements, Ring};
 use crate::material::Kind as MaterialKind;
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::mechanics::plastic::YieldRule;
 use crate::quantity::{Kind, Number, UnitSystem, written};
 
 /// The keys in the order of the joint file, which is the order of the defaults.
-const ORDER: [&str; 14] = [
+const ORDER: [&str; 16] = [
+    "diameter",
+    "length",
     "relief",
     "rings",
     "order",
@@ -60,19 +63,22 @@ const FRACTURE_SAFETY: (f64, &str) = (
 
 /// The joint, unless something is wrong.
 pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) -> Option<Joint> {
-    refuse_what_is_not_calculated(draft, file);
-    let (length, relief) = lengths(draft, file);
+    let seat = bearing::seat(draft, file);
+    let (length, relief) = lengths(draft, file, seat.as_ref().and_then(Option::as_ref));
     let method = assembly::method(draft, file);
     let shop = assembly::shop_temperature(draft, file);
     let Body { diameter, rings, fits, order } = match &file.rings {
         Some(list) => many_rings(draft, file, list),
-        None => two_parts(draft, file, fit_key),
+        None => two_parts(draft, file, fit_key, seat.as_ref()),
     };
     let slices =
         if file.rings.is_some() { Some(Vec::new()) } else { steps::slices(draft, file, diameter, length) };
     let friction = friction::friction(draft, file, rings.as_deref(), method);
     let duty = duty::states(draft, file, rings.as_deref(), shop);
-    let assembly = assembly::plan(draft, file, rings.as_deref(), diameter, method, shop);
+    let mut assembly = assembly::plan(draft, file, rings.as_deref(), diameter, method, shop);
+    if let (Some(plan), Some(Some(seat)), Some(rings)) = (&mut assembly, &seat, &rings) {
+        bearing::keep_cool(plan, seat, rings);
+    }
     let smoothing = smoothing::smoothing(draft, file, rings.as_deref(), method);
     let criterion = criterion(draft, file);
     let require = requirements(draft, file.require.as_ref());
@@ -94,6 +100,7 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) ->
         relief: relief?,
         rings: rings?,
         fits: fits?,
+        bearing: seat?,
         order: order?,
         slices: slices?,
         friction: friction?,
@@ -119,7 +126,12 @@ struct Body {
     order: Option<Vec<usize>>,
 }
 
-fn two_parts(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) -> Body {
+fn two_parts(
+    draft: &mut Draft<'_>,
+    file: &JointFile,
+    fit_key: FitKey,
+    understood: Option<&Option<BearingSeat>>,
+) -> Body {
     for (key, node) in
         [("fits", file.fits.as_ref().map(|at| at.node)), ("order", file.order.as_ref().map(|at| at.node))]
     {
@@ -129,14 +141,19 @@ fn two_parts(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) -> Body {
         }
     }
     let root = draft.tree.root();
-    let diameter = draft
-        .required(root, "diameter", "60 mm", file.diameter.as_ref())
-        .and_then(|written| draft.positive(written));
-    let rings = parts::rings(draft, file, diameter);
+    let seat = understood.and_then(Option::as_ref);
+    let diameter = match (seat, understood, &file.diameter) {
+        (Some(seat), ..) => bearing::diameter(draft, file, seat),
+        (None, None, None) => None,
+        (None, _, given) => draft
+            .required(root, "diameter", "60 mm", given.as_ref())
+            .and_then(|written| draft.positive(written)),
+    };
+    let rings = parts::rings(draft, file, diameter, seat);
     let fits = if fit_key == FitKey::Optional && file.fit.is_none() {
         Some(Vec::new())
     } else {
-        fit::fit(draft, file, diameter).map(|fit| vec![fit])
+        fit::fit(draft, file, diameter, seat).map(|fit| vec![fit])
     };
     Body { diameter, rings, fits, order: Some(vec![0]) }
 }
@@ -155,18 +172,20 @@ fn rank(key: &str) -> usize {
     ORDER.iter().position(|known| *known == section).unwrap_or(ORDER.len())
 }
 
-fn refuse_what_is_not_calculated(draft: &Draft<'_>, file: &JointFile) {
-    draft.not_yet(
-        file.bearing.as_ref(),
-        "bearing seats are not calculated",
-        "give the ring's limits as a fit: `fit: {hole: {lower: -12 um, upper: 0 um}, shaft: k6}`",
-    );
-}
-
-fn lengths(draft: &mut Draft<'_>, file: &JointFile) -> (Option<f64>, Option<f64>) {
-    let length = draft
-        .required(draft.tree.root(), "length", "70 mm", file.length.as_ref())
-        .and_then(|written| draft.positive(written));
+fn lengths(
+    draft: &mut Draft<'_>,
+    file: &JointFile,
+    seat: Option<&BearingSeat>,
+) -> (Option<f64>, Option<f64>) {
+    let length = match (seat, &file.length) {
+        (Some(seat), None) => {
+            draft.default("length", self::written(Kind::Length, seat.width), "the width of the bearing");
+            Some(seat.width)
+        }
+        (_, given) => draft
+            .required(draft.tree.root(), "length", "70 mm", given.as_ref())
+            .and_then(|written| draft.positive(written)),
+    };
     let Some(written) = &file.relief else {
         draft.default("relief", "0 mm", "the whole length is taken to carry");
         return (length, Some(0.0));

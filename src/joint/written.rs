@@ -5,7 +5,7 @@ use std::fmt;
 use std::marker::PhantomData;
 
 use schemars::{JsonSchema, Schema, SchemaGenerator, json_schema};
-use serde::de::{Deserialize, Deserializer, Error, IgnoredAny, SeqAccess, Visitor};
+use serde::de::{Deserialize, Deserializer, Error, SeqAccess, Visitor};
 
 use super::decode::{AT, TEXT_OR};
 use super::tree::NodeId;
@@ -133,16 +133,6 @@ impl<L: JsonSchema, T: JsonSchema> JsonSchema for TextOr<L, T> {
     }
 }
 
-/// A key that is known but whose subject is not calculated yet.
-#[derive(Debug, Clone)]
-pub(crate) struct NotYet;
-
-impl<'de> Deserialize<'de> for NotYet {
-    fn deserialize<D: Deserializer<'de>>(deserializer: D) -> Result<Self, D::Error> {
-        IgnoredAny::deserialize(deserializer).map(|_| Self)
-    }
-}
-
 /// Why a text was refused.
 #[derive(Debug, Clone, PartialEq)]
 pub(crate) struct Refused {
@@ -195,7 +185,19 @@ macro_rules! quantities {
     };
 }
 
-quantities!(Angle, Force, Length, Number, Pressure, Speed, Temperature, Time, Torque, Volume);
+quantities!(
+    Angle,
+    Force,
+    Length,
+    Number,
+    Pressure,
+    Speed,
+    Temperature,
+    TemperatureDifference,
+    Time,
+    Torque,
+    Volume
+);
 
 impl Leaf for quantity::NumberRange {
     type Value = (f64, f64);

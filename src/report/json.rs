@@ -16,6 +16,7 @@
 //! | `duty` | each state: what acts, and `loosest` and `tightest` in it |
 //! | `service` | `loosening` of each interface, which fits are `governing` each ring, `steps` of assembly, the `plastic` hub, `fatigue` |
 //! | `assembly` | `method`, temperatures, clearance, forces of the tightest pair, `baths` |
+//! | `bearing` | of a bearing seat: loss of radial clearance, what is left cold and in each state, mounting; else null |
 //! | `verdicts` | `question` (hold, strength, assembly), `subject`, `required`, `found`, `unit` (1, N, degC), `ok`, `at` |
 //! | `defaults` | `key`, `value`, `source` of what the joint file leaves open |
 //! | `materials` | for each ring its material, where the record comes from, the strength for its section |
@@ -43,6 +44,7 @@
 
 mod absent;
 mod assembly;
+mod bearing;
 mod document;
 mod duty;
 mod limits;

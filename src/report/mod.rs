@@ -1,5 +1,6 @@
 //! What is shown of the findings: HTML with drawings and plots.
 
+pub mod bearing;
 pub mod choose;
 pub mod diagnostics;
 pub mod drawing;

@@ -5,6 +5,7 @@ use std::fmt::Write;
 use anstyle::{AnsiColor, Style};
 use comfy_table::{CellAlignment, Table, presets};
 
+use super::bearing;
 use super::seating::{self, time_allowed};
 use crate::findings::{Findings, PairFindings, Question, Verdict, VerdictUnit};
 use crate::joint::Method;
@@ -35,6 +36,7 @@ pub fn text(findings: &Findings) -> String {
     duty(&mut out, findings);
     service(&mut out, findings);
     assembly(&mut out, findings);
+    bearing(&mut out, findings);
     defaults(&mut out, findings);
     cautions(&mut out, findings);
     notes(&mut out, findings);
@@ -194,6 +196,17 @@ pub(super) fn print_table(out: &mut String, mut table: Table, numbers: usize) {
     }
     for row in table.lines() {
         line(out, row);
+    }
+}
+
+/// What the seat does to a bearing.
+fn bearing(out: &mut String, findings: &Findings) {
+    let Some(title) = bearing::title(findings) else { return };
+    heading(out, "Bearing");
+    paragraph(out, "", &title);
+    for row in bearing::rows(findings) {
+        let note = if row.note.is_empty() { String::new() } else { format!("; {}", row.note) };
+        paragraph(out, "- ", &plain(&format!("{}: {}{note}", row.name, row.value)));
     }
 }
 

@@ -1,21 +1,32 @@
 //! The fit: a callout, limits, or two measured parts.
 
-use crate::joint::Fit;
+use crate::assembly::bearing_tables::BearingRing;
 use crate::joint::diagnose::Fault;
 use crate::joint::draft::Draft;
 use crate::joint::file::{FitKeys, JointFile, LimitKeys, MeasuredKeys};
 use crate::joint::leaf::{FitText, LimitsText};
 use crate::joint::tree::NodeId;
 use crate::joint::written::{At, Refused, TextOr, Written};
+use crate::joint::{BearingSeat, Fit};
 use crate::quantity::{self, Kind, Length, QuantityError, UnitSystem};
-use crate::tolerance::{FitCallout, Limits, Member, MemberCallout, ToleranceError};
+use crate::tolerance::{FitCallout, Limits, Member, MemberCallout, Resolved, ToleranceError};
 
 const EXAMPLE: &str = "H7/s6";
 
 /// The fit of two parts with its limits.
-pub(super) fn fit(draft: &mut Draft<'_>, file: &JointFile, diameter: Option<f64>) -> Option<Fit> {
-    let given = draft.required(draft.tree.root(), "fit", EXAMPLE, file.fit.as_ref())?;
-    one(draft, given, diameter, units_of(file.diameter.as_ref()))
+pub(super) fn fit(
+    draft: &mut Draft<'_>,
+    file: &JointFile,
+    diameter: Option<f64>,
+    seat: Option<&BearingSeat>,
+) -> Option<Fit> {
+    let example = match seat.map(|seat| seat.ring) {
+        None => EXAMPLE,
+        Some(BearingRing::Inner) => "k6",
+        Some(BearingRing::Outer) => "N7",
+    };
+    let given = draft.required(draft.tree.root(), "fit", example, file.fit.as_ref())?;
+    one(draft, given, diameter, units_of(file.diameter.as_ref()), seat)
 }
 
 /// A fit at a nominal diameter that was written in these units.
@@ -24,15 +35,19 @@ pub(super) fn one(
     given: &At<TextOr<FitText, FitKeys>>,
     diameter: Option<f64>,
     units: UnitSystem,
+    seat: Option<&BearingSeat>,
 ) -> Option<Fit> {
     let (callout, written) = match &given.value {
         TextOr::Text(text) => {
             let written: Written<FitText> = At { node: given.node, value: text.clone() };
             let text = draft.value(&written)?;
-            (of_text(draft, given.node, &text)?, text)
+            match seat {
+                Some(seat) => (with_ring(draft, given.node, &text, seat)?, text),
+                None => (of_text(draft, given.node, &text)?, text),
+            }
         }
         TextOr::Keys(keys) => {
-            let callout = of_keys(draft, given.node, keys)?;
+            let callout = of_keys(draft, given.node, keys, seat)?;
             let written = callout.to_string();
             (callout, written)
         }
@@ -42,6 +57,7 @@ pub(super) fn one(
         Ok(resolved) => resolved,
         Err(error) => return refused(draft, culprit(given, &error), &error),
     };
+    let resolved = from_tables(resolved, &callout, seat);
     draft.remarks.extend(resolved.remarks);
     let source = if resolved.hole_source == resolved.shaft_source {
         resolved.hole_source
@@ -99,12 +115,12 @@ fn of_text(draft: &Draft<'_>, node: NodeId, text: &str) -> Option<FitCallout> {
     }
 }
 
-fn of_keys(draft: &Draft<'_>, node: NodeId, keys: &FitKeys) -> Option<FitCallout> {
-    draft.not_yet(
-        keys.bearing.as_ref(),
-        "bearing seats are not calculated",
-        "give the ring's limits: `{hole: {lower: -12 um, upper: 0 um}, shaft: k6}`",
-    );
+fn of_keys(
+    draft: &Draft<'_>,
+    node: NodeId,
+    keys: &FitKeys,
+    seat: Option<&BearingSeat>,
+) -> Option<FitCallout> {
     if let Some(measured) = &keys.measured {
         for (key, other) in [("hole", &keys.hole), ("shaft", &keys.shaft)] {
             if let Some(other) = other {
@@ -114,12 +130,57 @@ fn of_keys(draft: &Draft<'_>, node: NodeId, keys: &FitKeys) -> Option<FitCallout
         }
         return of_measured(draft, measured);
     }
-    if keys.bearing.is_some() {
-        return None;
-    }
-    let hole = member(draft, node, Member::Hole, keys.hole.as_ref());
-    let shaft = member(draft, node, Member::Shaft, keys.shaft.as_ref());
+    let given = |which: Member| match which {
+        Member::Hole => keys.hole.as_ref(),
+        Member::Shaft => keys.shaft.as_ref(),
+    };
+    let of = |which: Member| match seat {
+        Some(seat) if seat.member() == which && given(which).is_none() => {
+            Some(MemberCallout::Deviations(seat.limits.value))
+        }
+        _ => member(draft, node, which, given(which)),
+    };
+    let (hole, shaft) = (of(Member::Hole), of(Member::Shaft));
     Some(FitCallout::members(hole?, shaft?))
+}
+
+/// The class of the other member alone, with the limits of the ring by ISO 492.
+fn with_ring(draft: &Draft<'_>, node: NodeId, text: &str, seat: &BearingSeat) -> Option<FitCallout> {
+    let other = seat.member().other();
+    match of_member_text(text, other) {
+        Ok(callout) => {
+            let ring = MemberCallout::Deviations(seat.limits.value);
+            Some(match other {
+                Member::Shaft => FitCallout::members(ring, callout),
+                Member::Hole => FitCallout::members(callout, ring),
+            })
+        }
+        Err(fault) => {
+            let help = if text.contains('/') || FitCallout::parse(text).is_ok() {
+                let example = if other == Member::Shaft { "k6" } else { "N7" };
+                Some(format!(
+                    "the {} has its limits from ISO 492: write the class of the {other} alone, such as `fit: {example}`",
+                    seat.ring_name()
+                ))
+            } else {
+                fault.help
+            };
+            draft.faults.add(Fault::value(node, fault.message).maybe_help(help));
+            None
+        }
+    }
+}
+
+/// The source of the ring's limits, when they are those of the table.
+fn from_tables(mut resolved: Resolved, callout: &FitCallout, seat: Option<&BearingSeat>) -> Resolved {
+    let (Some(seat), FitCallout::Members { hole, shaft }) = (seat, callout) else { return resolved };
+    let own = MemberCallout::Deviations(seat.limits.value);
+    match seat.member() {
+        Member::Hole if *hole == own => resolved.hole_source = seat.limits.source.to_string(),
+        Member::Shaft if *shaft == own => resolved.shaft_source = seat.limits.source.to_string(),
+        _ => {}
+    }
+    resolved
 }
 
 fn of_measured(draft: &Draft<'_>, measured: &At<MeasuredKeys>) -> Option<FitCallout> {

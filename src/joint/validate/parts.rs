@@ -4,13 +4,14 @@ use std::sync::Arc;
 
 use serde::Deserialize;
 
-use crate::joint::Ring;
+use crate::assembly::bearing_tables::BearingRing;
 use crate::joint::diagnose::Fault;
 use crate::joint::draft::Draft;
 use crate::joint::file::{JointFile, ShaftKeys};
 use crate::joint::leaf::{GivenRoughness, MaterialKeys, MaterialName, Roughness};
 use crate::joint::tree::NodeId;
 use crate::joint::written::{At, TextOr, Written};
+use crate::joint::{BearingSeat, Ring};
 use crate::material::record::{MaterialRecord, Step};
 use crate::material::roughness::{self, Member};
 use crate::material::{Material, Origin, Sourced};
@@ -35,15 +36,26 @@ pub(super) struct Part<'f> {
 }
 
 /// Shaft and hub.
-pub(super) fn rings(draft: &mut Draft<'_>, file: &JointFile, diameter: Option<f64>) -> Option<Vec<Ring>> {
+pub(super) fn rings(
+    draft: &mut Draft<'_>,
+    file: &JointFile,
+    diameter: Option<f64>,
+    seat: Option<&BearingSeat>,
+) -> Option<Vec<Ring>> {
+    let (inner, outer) = match seat.map(|seat| seat.ring) {
+        Some(BearingRing::Inner) => (None, seat),
+        Some(BearingRing::Outer) => (seat, None),
+        None => (None, None),
+    };
     let root = draft.tree.root();
     let shaft = draft.required(root, "shaft", "{material: C45+N}", file.shaft.as_ref());
-    let shaft = shaft.and_then(|at| shaft_ring(draft, at, file, diameter));
+    let shaft = shaft.and_then(|at| shaft_ring(draft, at, file, diameter, inner));
     let example = "{material: EN-GJL-250, outer_diameter: 110 mm}";
     let hub = draft.required(root, "hub", example, file.hub.as_ref());
     let hub = hub.and_then(|at| {
         let keys = &at.value;
-        let outer = match (&keys.outer_diameter, &keys.steps) {
+        let outer_diameter = match (&keys.outer_diameter, &keys.steps) {
+            _ if outer.is_some() => outer.map(BearingSeat::raceway),
             (None, Some(steps)) => super::steps::largest_outer_diameter(draft, steps),
             (given, _) => draft
                 .required(at.node, "outer_diameter", "110 mm", given.as_ref())
@@ -52,13 +64,13 @@ pub(super) fn rings(draft: &mut Draft<'_>, file: &JointFile, diameter: Option<f6
         let part = Part {
             key: "hub".to_owned(),
             node: at.node,
-            name: draft.optional(keys.name.as_ref()),
-            material: material(draft, at.node, "EN-GJL-250", keys.material.as_ref()),
+            name: draft.optional(keys.name.as_ref()).or(outer.map(|seat| seat.ring_name().to_owned())),
+            material: material_of(draft, at.node, ("hub", "EN-GJL-250"), keys.material.as_ref(), outer),
             material_node: keys.material.as_ref().map(|material| material.node),
             section: keys.section.as_ref(),
             inner: diameter,
-            outer,
-            roughness: roughness(draft, "hub", keys.roughness.as_ref(), Member::Hub),
+            outer: outer_diameter,
+            roughness: roughness_of(draft, "hub", keys.roughness.as_ref(), Member::Hub, outer),
         };
         ring(draft, part, |inner, outer| 0.5 * (outer - inner), WALL_SECTION)
     });
@@ -70,21 +82,28 @@ fn shaft_ring(
     at: &At<ShaftKeys>,
     file: &JointFile,
     diameter: Option<f64>,
+    seat: Option<&BearingSeat>,
 ) -> Option<Ring> {
     let keys = &at.value;
-    let material_found = material(draft, at.node, "C45+N", keys.material.as_ref());
+    let material_found = material_of(draft, at.node, ("shaft", "C45+N"), keys.material.as_ref(), seat);
     let part = Part {
         key: "shaft".to_owned(),
         node: at.node,
-        name: draft.optional(keys.name.as_ref()),
+        name: draft.optional(keys.name.as_ref()).or(seat.map(|seat| seat.ring_name().to_owned())),
         material: material_found,
         material_node: keys.material.as_ref().map(|material| material.node),
         section: keys.section.as_ref(),
-        inner: bore(draft, keys.bore.as_ref(), file, diameter),
+        inner: match seat {
+            Some(seat) => Some(seat.raceway()),
+            None => bore(draft, keys.bore.as_ref(), file, diameter),
+        },
         outer: diameter,
-        roughness: roughness(draft, "shaft", keys.roughness.as_ref(), Member::Shaft),
+        roughness: roughness_of(draft, "shaft", keys.roughness.as_ref(), Member::Shaft, seat),
     };
-    ring(draft, part, |_, outer| outer, BAR_SECTION)
+    match seat {
+        Some(_) => ring(draft, part, |inner, outer| 0.5 * (outer - inner), WALL_SECTION),
+        None => ring(draft, part, |_, outer| outer, BAR_SECTION),
+    }
 }
 
 pub(super) fn ring(
@@ -173,6 +192,44 @@ fn larger_than_joint(
 
 fn called_diameter(draft: &Draft<'_>, file: &JointFile) -> String {
     file.diameter.as_ref().map_or_else(|| "diameter".to_owned(), |given| draft.called(given))
+}
+
+/// The material of a part; a bearing ring need not name it.
+fn material_of(
+    draft: &mut Draft<'_>,
+    part: NodeId,
+    (key, example): (&str, &str),
+    given: Option<&At<TextOr<MaterialName, MaterialKeys>>>,
+    seat: Option<&BearingSeat>,
+) -> Option<Arc<Material>> {
+    if given.is_some() || seat.is_none() {
+        return material(draft, part, example, given);
+    }
+    let (name, source) = super::bearing::MATERIAL;
+    draft.default(format!("{key}.material"), name, source);
+    match draft.library.find(name) {
+        Ok(material) => Some(material),
+        Err(error) => {
+            draft.faults.add(Fault::key(part, error.to_string()).help(error.help()));
+            None
+        }
+    }
+}
+
+/// The roughness of a part; that of a bearing ring is a ground one unless it is given.
+fn roughness_of(
+    draft: &mut Draft<'_>,
+    part: &str,
+    given: Option<&Written<Roughness>>,
+    member: Member,
+    seat: Option<&BearingSeat>,
+) -> Option<Sourced<f64>> {
+    if given.is_some() || seat.is_none() {
+        return roughness(draft, part, given, member);
+    }
+    let (depth, source) = super::bearing::ROUGHNESS;
+    draft.default(format!("{part}.roughness"), format!("Rz {}", written(Kind::Length, depth)), source);
+    Some(Sourced::new(depth, source))
 }
 
 pub(super) fn material(

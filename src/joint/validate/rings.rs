@@ -108,7 +108,7 @@ pub(super) fn fits(draft: &mut Draft<'_>, file: &JointFile, rings: Option<&[Ring
         diameters.map(|at| fit::units_of(at.value.outer_diameter.as_ref())).collect();
     let mut fits = Vec::new();
     for ((given, ring), units) in list.value.iter().zip(rings).zip(units) {
-        fits.push(fit::one(draft, given, Some(ring.outer_diameter), units));
+        fits.push(fit::one(draft, given, Some(ring.outer_diameter), units, None));
     }
     fits.into_iter().collect()
 }

@@ -2,19 +2,39 @@
 
 use maud::{Markup, html};
 
-use super::Sheet;
 use super::table::{cell, scrolling};
+use super::{Sheet, capital};
 use crate::findings::InterfaceFindings;
-use crate::report::service;
-use crate::report::typeset::sentence;
+use crate::report::typeset::{prose, sentence};
 use crate::report::units::Measure;
+use crate::report::{bearing, service};
 
 /// Sentences, then every interface and the slices of a stepped joint.
 pub(super) fn body(sheet: Sheet) -> Markup {
     html! {
         ul { @for text in service::sentences(sheet.findings) { li { (sentence(&text)) } } }
+        (bearing_table(sheet))
         (interfaces(sheet))
         (slices(sheet))
+    }
+}
+
+/// What the seat does to a bearing ring.
+fn bearing_table(sheet: Sheet<'_>) -> Markup {
+    let Some(title) = bearing::title(sheet.findings) else { return html! {} };
+    let rows = bearing::rows(sheet.findings);
+    let table = html! {
+        thead { tr { th scope="col" { "Bearing" } th.r scope="col" { "Value" } th scope="col" { "At, limit or source" } } }
+        tbody {
+            @for row in rows {
+                tr { th scope="row" { (row.name) } td.r { (prose(&row.value)) } td.small { (prose(&row.note)) } }
+            }
+        }
+    };
+    html! {
+        h3 { "The bearing" }
+        p { (capital(&title)) "." }
+        (scrolling("What the seat does to the bearing", "bearing", &table))
     }
 }
 

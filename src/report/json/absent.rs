@@ -41,6 +41,8 @@ const WHY: &[(&str, &str)] = &[
         "baths.hub_temperature_c",
         "where an expansion curve ends before the temperature of the bath or of the hub that is needed",
     ),
+    ("bearing", "where no ring of a bearing is fitted"),
+    ("mounting_temperature_c", "where no temperature within the expansion curve clears the tightest pair"),
     ("verdicts.required", "where nothing is required"),
     ("verdicts.found", "where the quantity that is judged does not exist"),
 ];

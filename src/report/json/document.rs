@@ -4,6 +4,7 @@ use serde::Serialize;
 
 use super::absent;
 use super::assembly::Assembly;
+use super::bearing::Bearing;
 use super::duty::Duty;
 use super::limits::Fit;
 use super::number::{celsius, finite, mega, microns, millimetres};
@@ -31,6 +32,7 @@ pub(super) struct Document {
     duty: Vec<Duty>,
     service: Service,
     assembly: Assembly,
+    bearing: Option<Bearing>,
     verdicts: Vec<VerdictLine>,
     defaults: Vec<DefaultLine>,
     materials: Vec<MaterialLine>,
@@ -109,6 +111,7 @@ impl Document {
             duty: states.map(|(state, found)| Duty::of(joint, state, found)).collect(),
             service: Service::of(findings),
             assembly: Assembly::of(findings),
+            bearing: Bearing::of(findings),
             verdicts: findings.verdicts.iter().map(VerdictLine::of).collect(),
             defaults: joint.defaults.iter().map(DefaultLine::of).collect(),
             materials: materials(findings),
