@@ -69,7 +69,7 @@ fn rotation_takes_the_pressure_of_two_rings() {
         max_relative = 1e-9
     );
     let speed = found.service.loosening[0].speed.unwrap();
-    assert_relative_eq!(speed, 3525.905_9, max_relative = 1e-8);
+    assert_relative_eq!(speed, 3_525.905_9, max_relative = 1e-8);
 }
 
 /// The same joint just below and just above its opening speed.
@@ -124,7 +124,7 @@ fn slices_of_a_stepped_joint_are_summed() {
     let pair = &found.extremes.loosest;
     assert_relative_eq!(pair.slices[0].pressure, 55.555_555_6e6, max_relative = 1e-9);
     assert_relative_eq!(pair.slices[1].pressure, 65.625e6, max_relative = 1e-12);
-    assert_relative_eq!(pair.torque_capacity, 1142.099_83, max_relative = 1e-8);
+    assert_relative_eq!(pair.torque_capacity, 1_142.099_83, max_relative = 1e-8);
     assert_relative_eq!(pair.axial_capacity, 45_683.993_2, max_relative = 1e-8);
     // At speed each slice loses by its own diameters; the steel is one, so p = δ-part less ρω²(3+ν)/8 (…).
     let expected: f64 = [(0.0, 75.0), (20.0, 100.0)]
@@ -179,7 +179,7 @@ fn bending_changes_the_pressure_at_the_edges() {
     assert_relative_eq!(bending.edge_change, 20.053_522_8e6, max_relative = 1e-8);
     assert_relative_eq!(bending.least_edge, 75e6 - 20.053_522_8e6, max_relative = 1e-8);
     assert_relative_eq!(bending.greatest_edge, 75e6 + 20.053_522_8e6, max_relative = 1e-8);
-    assert_relative_eq!(bending.limiting_moment, 1550.796_33, max_relative = 1e-8);
+    assert_relative_eq!(bending.limiting_moment, 1_550.796_33, max_relative = 1e-8);
     // Nominal stress of a solid round shaft, 32 M/(π d³).
     let fatigue = found.service.fatigue[0];
     assert_relative_eq!(fatigue.nominal_stress, 32.0 * 400.0 / (PI * 0.05f64.powi(3)), max_relative = 1e-12);

@@ -53,7 +53,6 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
 
 /// Whether all requirements are met; cautions count when the check is strict.
 pub fn ending(findings: &Findings, strict: bool) -> Ending {
-    let met =
-        findings.verdicts.iter().all(|verdict| verdict.ok) && !(strict && !findings.cautions.is_empty());
+    let met = findings.verdicts.iter().all(|verdict| verdict.ok) && (!strict || findings.cautions.is_empty());
     if met { Ending::Met } else { Ending::NotMet }
 }

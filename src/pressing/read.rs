@@ -192,11 +192,7 @@ impl Rows {
     }
 
     /// Travel and force of a row, SI, with their fields.
-    fn cells<'t>(
-        &self,
-        text: &'t str,
-        number: usize,
-    ) -> Result<((Field<'t>, f64), (Field<'t>, f64)), Box<Diagnostic>> {
+    fn cells<'t>(&self, text: &'t str, number: usize) -> Result<(Number<'t>, Number<'t>), Box<Diagnostic>> {
         let columns = &self.columns;
         let (mut travel, mut force) = (None, None);
         for (index, field) in fields(text, columns.separator).enumerate() {
@@ -266,6 +262,9 @@ fn decimal(text: &str, separator: u8) -> Option<f64> {
     };
     value.is_finite().then_some(value)
 }
+
+/// A field with its number, SI.
+type Number<'t> = (Field<'t>, f64);
 
 fn not_a_number(field: Field<'_>, column: &columns::Column, text: &str, number: usize) -> Box<Diagnostic> {
     let line = Line { bytes: text.as_bytes(), number };
