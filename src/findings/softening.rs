@@ -55,8 +55,8 @@ pub(super) fn soften(
     let (tightest_growth, hardest) = growth(&plastic.joint, tightest.0);
     loose.shrink(loosest_growth);
     tight.shrink(tightest_growth);
-    let hardest = hardest.unwrap_or_else(|| plastic.tightest);
-    let least = growth(&plastic.joint, loosest.0).1.unwrap_or_else(|| plastic.loosest);
+    let hardest = hardest.unwrap_or(plastic.tightest);
+    let least = growth(&plastic.joint, loosest.0).1.unwrap_or(plastic.loosest);
     for (state, found) in joint.duty.iter().zip(parts.duty.iter_mut()) {
         for (pair, found, worn, share) in [
             (&*loose, &mut found.loosest, &least, state.relaxation),
