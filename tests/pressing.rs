@@ -220,18 +220,15 @@ fn a_late_touch_and_a_short_record_are_told() {
     let findings = findings_of(JOINT);
     let pressed = input(&findings, 0.5, 0.11);
     let text = record(&pressed, 800, |_, _, force| force);
-    let late: String = text.replace("travel (mm)", "travel (mm)").lines().enumerate().fold(
-        String::new(),
-        |mut all, (line, row)| {
-            match row.split_once(',').filter(|_| line > 0) {
-                Some((travel, force)) => {
-                    writeln!(all, "{},{force}", travel.parse::<f64>().unwrap() + 3.0).unwrap();
-                }
-                None => writeln!(all, "{row}").unwrap(),
+    let late: String = text.lines().enumerate().fold(String::new(), |mut all, (line, row)| {
+        match row.split_once(',').filter(|_| line > 0) {
+            Some((travel, force)) => {
+                writeln!(all, "{},{force}", travel.parse::<f64>().unwrap() + 3.0).unwrap();
             }
-            all
-        },
-    );
+            None => writeln!(all, "{row}").unwrap(),
+        }
+        all
+    });
     let judged_late = judged(&findings, &late);
     assert!((judged_late.touch.unwrap() - 3e-3).abs() < 20e-6);
     assert!(!judged_late.check(CheckKind::Start).unwrap().ok() && judged_late.tells[0].contains("late"));

@@ -135,6 +135,9 @@ fn header<R: BufRead>(lines: &mut Lines<R>) -> Result<Columns, Box<Diagnostic>> 
     }
 }
 
+/// A field with its value, SI.
+type Cell<'t> = (Field<'t>, f64);
+
 /// The rows taken so far.
 struct Rows {
     columns: Columns,
@@ -159,7 +162,7 @@ impl Rows {
 
     fn take(&mut self, line: Line<'_>) -> Result<(), Box<Diagnostic>> {
         let Ok(text) = std::str::from_utf8(line.bytes) else { return self.take_lossy(&line) };
-        let (travel, force) = self.cells(text, line.number)?;
+        let [travel, force] = self.cells(text, line.number)?;
         if travel.1 < self.last {
             let scale = self.columns.travel.scale;
             let message = format!(
@@ -192,11 +195,7 @@ impl Rows {
     }
 
     /// Travel and force of a row, SI, with their fields.
-    fn cells<'t>(
-        &self,
-        text: &'t str,
-        number: usize,
-    ) -> Result<((Field<'t>, f64), (Field<'t>, f64)), Box<Diagnostic>> {
+    fn cells<'t>(&self, text: &'t str, number: usize) -> Result<[Cell<'t>; 2], Box<Diagnostic>> {
         let columns = &self.columns;
         let (mut travel, mut force) = (None, None);
         for (index, field) in fields(text, columns.separator).enumerate() {
@@ -222,7 +221,7 @@ impl Rows {
                 _ => Err(not_a_number(field, column, text, number)),
             }
         };
-        Ok((value(travel, &columns.travel)?, value(force, &columns.force)?))
+        Ok([value(travel, &columns.travel)?, value(force, &columns.force)?])
     }
 
     fn finish(self, lines: usize) -> Result<Record, Box<Diagnostic>> {
