@@ -63,8 +63,9 @@ const FRACTURE_SAFETY: (f64, &str) = (
 
 /// The joint, unless something is wrong.
 pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) -> Option<Joint> {
-    let seat = bearing::seat(draft, file);
-    let (length, relief) = lengths(draft, file, seat.as_ref().and_then(Option::as_ref));
+    // Without its sizes nothing can be said of the rest: only the bearing's own faults are told.
+    let seat = bearing::seat(draft, file)?;
+    let (length, relief) = lengths(draft, file, seat.as_ref());
     let method = assembly::method(draft, file);
     let shop = assembly::shop_temperature(draft, file);
     let Body { diameter, rings, fits, order } = match &file.rings {
@@ -76,7 +77,7 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) ->
     let friction = friction::friction(draft, file, rings.as_deref(), method);
     let duty = duty::states(draft, file, rings.as_deref(), shop);
     let mut assembly = assembly::plan(draft, file, rings.as_deref(), diameter, method, shop);
-    if let (Some(plan), Some(Some(seat)), Some(rings)) = (&mut assembly, &seat, &rings) {
+    if let (Some(plan), Some(seat), Some(rings)) = (&mut assembly, &seat, &rings) {
         bearing::keep_cool(plan, seat, rings);
     }
     let smoothing = smoothing::smoothing(draft, file, rings.as_deref(), method);
@@ -100,7 +101,7 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) ->
         relief: relief?,
         rings: rings?,
         fits: fits?,
-        bearing: seat?,
+        bearing: seat,
         order: order?,
         slices: slices?,
         friction: friction?,
@@ -126,12 +127,7 @@ struct Body {
     order: Option<Vec<usize>>,
 }
 
-fn two_parts(
-    draft: &mut Draft<'_>,
-    file: &JointFile,
-    fit_key: FitKey,
-    understood: Option<&Option<BearingSeat>>,
-) -> Body {
+fn two_parts(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey, seat: Option<&BearingSeat>) -> Body {
     for (key, node) in
         [("fits", file.fits.as_ref().map(|at| at.node)), ("order", file.order.as_ref().map(|at| at.node))]
     {
@@ -141,12 +137,10 @@ fn two_parts(
         }
     }
     let root = draft.tree.root();
-    let seat = understood.and_then(Option::as_ref);
-    let diameter = match (seat, understood, &file.diameter) {
-        (Some(seat), ..) => bearing::diameter(draft, file, seat),
-        (None, None, None) => None,
-        (None, _, given) => draft
-            .required(root, "diameter", "60 mm", given.as_ref())
+    let diameter = match seat {
+        Some(seat) => bearing::diameter(draft, file, seat),
+        None => draft
+            .required(root, "diameter", "60 mm", file.diameter.as_ref())
             .and_then(|written| draft.positive(written)),
     };
     let rings = parts::rings(draft, file, diameter, seat);
