@@ -14,7 +14,7 @@ pub struct Template {
 }
 
 /// Every template; the first is the one for no word.
-pub const TEMPLATES: [Template; 6] = [
+pub const TEMPLATES: [Template; 8] = [
     Template {
         kind: "hub",
         subject: "a hub pressed onto a shaft, metric",
@@ -39,6 +39,16 @@ pub const TEMPLATES: [Template; 6] = [
         kind: "chill",
         subject: "a seat ring chilled and put into a warmed head",
         text: include_str!("template/chill.yaml"),
+    },
+    Template {
+        kind: "oven",
+        subject: "a hub heated in an oven, with the time to seat it",
+        text: include_str!("template/oven.yaml"),
+    },
+    Template {
+        kind: "cold",
+        subject: "a bush chilled in liquid nitrogen, with the room's oxygen",
+        text: include_str!("template/cold.yaml"),
     },
     Template {
         kind: "measured",

@@ -6,7 +6,6 @@ use crate::findings::cold_bath::{ColdBathFindings, RoomFindings};
 use crate::findings::press_work::{FaceFindings, OIL_OVER_CONTACT, PRESS_SPEED, PressWorkFindings};
 use crate::findings::times::SoakFindings;
 use crate::findings::{Findings, bath_name};
-use crate::joint::Method;
 use crate::joint::practice::Heating;
 use crate::quantity::{Measure, display_unit, number, show};
 
