@@ -151,6 +151,7 @@ pub struct Conduction {
     surroundings: Surroundings,
     start: f64,
     rings: usize,
+    tolerance: Option<f64>,
 }
 
 /// Rings of the coarser mesh when the ends are insulated and when they are not.
@@ -187,21 +188,32 @@ impl Conduction {
         for film in [&surroundings.inner, &surroundings.outer, &surroundings.ends] {
             film.check(start, surroundings.temperature)?;
         }
-        let mut part = Self { body, substance, surroundings, start, rings: 0 };
+        let mut part = Self { body, substance, surroundings, start, rings: 0, tolerance: None };
         part.rings = RINGS[part.kind()];
         positive("heat flow at the start (W)", part.first_heat_flow().abs())?;
         Ok(part)
     }
 
-    /// The same part with `rings` rings in the coarser mesh, at least four.
+    /// The same part with `rings` rings in the coarser mesh, at least two.
     ///
     /// The default is 48, or 8 rings of 8 cells when the ends exchange heat: enough for 1e-6 and 1e-5 of the step.
     ///
     /// # Errors
     /// [`AssemblyError::OutsideRange`].
     pub fn with_rings(self, rings: usize) -> Result<Self, AssemblyError> {
-        require(rings >= 4, "number of rings", rings as f64, "four or more")?;
+        require(rings >= 2, "number of rings", rings as f64, "two or more")?;
         Ok(Self { rings, ..self })
+    }
+
+    /// The same part with an allowed error of a step, as a share of the temperature step.
+    ///
+    /// The default is 1e-9 with insulated ends, 1e-7 with ends that exchange heat, and 1e-5 in boiling nitrogen.
+    ///
+    /// # Errors
+    /// [`AssemblyError::OutsideRange`].
+    pub fn with_tolerance(self, tolerance: f64) -> Result<Self, AssemblyError> {
+        positive("allowed error of a step", tolerance)?;
+        Ok(Self { tolerance: Some(tolerance), ..self })
     }
 
     /// The part.
@@ -370,6 +382,9 @@ impl Conduction {
     }
 
     fn tolerance(&self) -> f64 {
+        if let Some(tolerance) = self.tolerance {
+            return tolerance;
+        }
         let films = [&self.surroundings.inner, &self.surroundings.outer, &self.surroundings.ends];
         if films.iter().any(|film| matches!(film, Film::NitrogenPool(_))) {
             BOILING_TOLERANCE

@@ -137,8 +137,8 @@ impl Film {
         };
         let (low, high) = (inside.min(surroundings), inside.max(surroundings));
         let mut surface = inside;
-        for _ in 0..6 {
-            let slope = slope_at(surface);
+        let (mut slope, mut last) = (slope_at(surface), f64::INFINITY);
+        for _ in 0..10 {
             let change = balance(surface) / (conductance + slope);
             surface += change;
             if !(low..=high).contains(&surface) {
@@ -147,6 +147,11 @@ impl Film {
             if change.abs() < 1e-9 {
                 return (surface, slope);
             }
+            // The slope of before serves as long as it closes in fast.
+            if change.abs() > 0.03 * last {
+                slope = slope_at(surface);
+            }
+            last = change.abs();
         }
         let surface = bracketed(balance, inside, surroundings, 1e-10).unwrap_or(f64::NAN);
         (surface, slope_at(surface))

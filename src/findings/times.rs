@@ -16,8 +16,10 @@ use crate::material::Kind;
 
 /// Share of the step at which a part counts as soaked.
 const SOAKED: f64 = 0.99;
-/// Rings of the coarser mesh of a soak; times to a few thousandths.
-const RINGS: usize = 4;
+/// Rings of the coarser mesh and allowed error of a step of a soak; times to a thousandth.
+const MESH: (usize, f64) = (4, 1e-4);
+/// The same in boiling nitrogen, whose film is known to some tens of per cent; times to a hundredth.
+const BOILING_MESH: (usize, f64) = (2, 1e-3);
 
 /// Soak times and the time there is.
 #[derive(Debug, Clone, PartialEq, Default)]
@@ -223,7 +225,9 @@ fn soaked(
     medium: &'static str,
     source: &'static str,
 ) -> Result<SoakFindings, AssemblyError> {
-    let part = part.with_rings(RINGS)?;
+    let boils = medium == bath_name(Bath::LiquidNitrogen);
+    let (rings, tolerance) = if boils { BOILING_MESH } else { MESH };
+    let part = part.with_rings(rings)?.with_tolerance(tolerance)?;
     let (marks, to_wanted) = soak_to(&part, wanted)?;
     let (start, end) = (part.start(), part.surroundings_temperature());
     let mass = part.body().volume() * substance.density;

@@ -14,7 +14,7 @@ pub struct Template {
 }
 
 /// Every template; the first is the one for no word.
-pub const TEMPLATES: [Template; 10] = [
+pub const TEMPLATES: [Template; 12] = [
     Template {
         kind: "hub",
         subject: "a hub pressed onto a shaft, metric",
@@ -54,6 +54,16 @@ pub const TEMPLATES: [Template; 10] = [
         kind: "plastic",
         subject: "a hub that yields by design",
         text: include_str!("template/plastic.yaml"),
+    },
+    Template {
+        kind: "oven",
+        subject: "a hub heated in an oven, with the time to seat it",
+        text: include_str!("template/oven.yaml"),
+    },
+    Template {
+        kind: "cold",
+        subject: "a bush chilled in liquid nitrogen, with the room's oxygen",
+        text: include_str!("template/cold.yaml"),
     },
     Template {
         kind: "measured",

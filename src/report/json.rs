@@ -50,6 +50,7 @@ mod duty;
 mod limits;
 mod number;
 mod pair;
+mod seating;
 mod service;
 
 use serde::Serialize;

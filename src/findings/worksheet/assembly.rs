@@ -4,6 +4,8 @@ use super::super::Findings;
 use super::super::expression::{Function, num, sym};
 use super::Units;
 use super::sheet::Sheet;
+use crate::assembly::press::PRESS_MARGIN;
+use crate::assembly::press_practice::{METRIC_TON_FORCE, US_TON_FORCE};
 use crate::joint::Method;
 use crate::material::{Material, REFERENCE_TEMPERATURE};
 
@@ -16,6 +18,7 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         Method::HeatHub | Method::HeatAndChill => heat(sheet, findings, units),
         Method::Press | Method::ChillShaft => {}
     }
+    super::cold_bath::write(sheet, findings);
 }
 
 fn press(sheet: &mut Sheet, findings: &Findings, units: &Units) {
@@ -76,6 +79,38 @@ fn press(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         EQUILIBRIUM,
         Some(curve.peak_force * units.per_newton),
     );
+    press_size(sheet, units, curve.peak_force);
+}
+
+/// The least press with its margin, in the force of the sheet and in tons.
+fn press_size(sheet: &mut Sheet, units: &Units, peak: f64) {
+    const MARGIN: &str = "a quarter above the peak (common practice, no source)";
+    let least = peak * PRESS_MARGIN;
+    sheet.formula(
+        "F_press",
+        "least press",
+        num("1.25") * sym("F_peak"),
+        units.force,
+        MARGIN,
+        Some(least * units.per_newton),
+    );
+    let (metric, us) = match units.force {
+        "N" => ("9806.65", "8896.443230521"),
+        _ => ("2204.62262184878", "2000"),
+    };
+    let tons = |sheet: &mut Sheet, symbol: &str, meaning: &str, size: &str, program: f64| {
+        let formula = sym("F_press") / num(size);
+        sheet.formula(
+            symbol,
+            meaning,
+            formula,
+            "",
+            "1000 kg or 2000 lb under standard gravity",
+            Some(program),
+        );
+    };
+    tons(sheet, "t_press", "the same in metric tons-force", metric, least / METRIC_TON_FORCE);
+    tons(sheet, "st_press", "the same in US tons-force", us, least / US_TON_FORCE);
 }
 
 /// Hub temperature for the tightest pair; the mean coefficients are read from the curves.

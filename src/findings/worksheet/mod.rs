@@ -4,6 +4,7 @@
 //! coherent but for the factor 1000 between µm and mm (thou and in), which the formulas show.
 
 mod assembly;
+mod cold_bath;
 mod duty;
 mod fit;
 mod sheet;

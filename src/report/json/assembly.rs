@@ -3,6 +3,7 @@
 use serde::Serialize;
 
 use super::number::{celsius, finite, microns, millimetres};
+use super::seating::Seating;
 use crate::findings::{AssemblyFindings, BathFindings, Findings, bath_name};
 use crate::joint::{AssemblyPlan, Method};
 
@@ -21,6 +22,8 @@ pub(super) struct Assembly {
     press_work_j: Option<f64>,
     hub_limit_c: Option<f64>,
     baths: Vec<Bath>,
+    #[serde(flatten)]
+    seating: Seating,
 }
 
 /// What one cold bath gives.
@@ -58,6 +61,7 @@ impl Assembly {
             press_work_j: finite(press.work),
             hub_limit_c: assembly.hub_limit.as_ref().map(|(limit, _)| celsius(*limit)),
             baths: assembly.baths.iter().map(Bath::of).collect(),
+            seating: Seating::of(assembly),
         }
     }
 }
