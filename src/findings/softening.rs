@@ -6,16 +6,17 @@
 //! interference, or scaling the elastic pressure by a share, would follow the curve back down and promise more grip
 //! than is left, since the curve rises less steeply than the elastic line falls.
 //!
-//! Perfect plasticity gives Δ at rest. A state that stresses the bore beyond what assembly did (a colder hub, a
-//! pressure inside the shaft, rotation) is counted as the interference that stresses the bore alike; for rotation,
-//! which stresses the wall deeper than an interference does, that is an estimate.
+//! Perfect plasticity gives Δ. A state that stresses the bore beyond what assembly did (a colder hub, a pressure inside
+//! the shaft) is counted as the interference that stresses the bore alike, and a rotating one as the interference that
+//! leaves the growth that Tresca's hub has at its speed. For von Mises Tresca's increase by rotation is taken.
 
 use super::compute::{FRESH, FindingsError};
 use super::kernel::{Kernel, PairInterference};
 use super::service::WornHub;
 use super::{DutyFindings, PairFindings, PlasticFindings, RingStress};
-use crate::joint::Joint;
-use crate::mechanics::plastic::{PlasticJoint, PlasticState, YieldRule};
+use crate::joint::{DutyState, Joint};
+use crate::mechanics::plastic::{PlasticJoint, PlasticState, SpinningJoint, YieldRule};
+use crate::numerics::root;
 use crate::tolerance::Extremes;
 
 /// Elastic figures that the permanent growth changes.
@@ -38,8 +39,19 @@ pub(super) fn soften(
     parts: &mut Parts<'_>,
 ) -> Result<(), FindingsError> {
     let bore = BoreStress::of(joint, kernel)?;
-    let loosest = bore.hardest(&plastic.loosest, parts.duty.iter().map(|state| &state.loosest.rings));
-    let tightest = bore.hardest(&plastic.tightest, parts.duty.iter().map(|state| &state.tightest.rings));
+    let hardest = |pair: &PairInterference, assembled: &PlasticState| {
+        let alike = |state: &DutyState| bore.alike(joint, kernel, &plastic.joint, state, pair);
+        let mut hardest = (assembled.interference, None);
+        for (index, state) in joint.duty.iter().enumerate() {
+            let alike = alike(state)?;
+            if alike > hardest.0 * (1.0 + 1e-9) {
+                hardest = (alike, Some(index));
+            }
+        }
+        Ok::<_, FindingsError>(hardest)
+    };
+    let loosest = hardest(&parts.pairs.loosest, &plastic.loosest)?;
+    let tightest = hardest(&parts.pairs.tightest, &plastic.tightest)?;
     let Extremes { loosest: loose, mean, tightest: tight } = &mut *parts.pairs;
     for (pair, found, state) in [
         (&mut *loose, &mut parts.extremes.loosest, &plastic.loosest),
@@ -132,19 +144,59 @@ impl BoreStress {
         })
     }
 
-    /// The interference at rest that stresses the bore as the hardest load does, with the index of its state.
-    fn hardest<'r>(
+    /// The interference at rest that leaves the bore of the hub as grown as a state does.
+    fn alike(
         &self,
-        assembled: &PlasticState,
-        states: impl Iterator<Item = &'r Vec<RingStress>>,
-    ) -> (f64, Option<usize>) {
-        let mut hardest = (assembled.interference, None);
-        for (index, rings) in states.enumerate() {
-            let alike = self.equivalent(rings) / self.per_interference;
-            if alike > hardest.0 * (1.0 + 1e-9) {
-                hardest = (alike, Some(index));
-            }
+        joint: &Joint,
+        kernel: &Kernel<'_>,
+        plastic: &PlasticJoint,
+        state: &DutyState,
+        pair: &PairInterference,
+    ) -> Result<f64, FindingsError> {
+        let at_rest = DutyState { speed: 0.0, ..state.clone() };
+        let rings = kernel.state(&at_rest, pair, FRESH)?.rings;
+        let alike = self.equivalent(&rings) / self.per_interference;
+        if state.speed == 0.0 {
+            return Ok(alike);
         }
-        hardest
+        let added = match turned(joint, plastic, alike, state.speed) {
+            Some(added) => added,
+            // Beyond the theory: the hub flows freely, and nothing of the grip is counted on.
+            None => alike,
+        };
+        Ok(with_growth(plastic, alike, growth(plastic, alike).0 + added))
     }
+}
+
+/// Growth that rotation adds to a hub after Tresca; none where the theory ends.
+fn turned(joint: &Joint, plastic: &PlasticJoint, interference: f64, speed: f64) -> Option<f64> {
+    let (shaft, hub) = joint.shaft_and_hub();
+    let input = plastic.input();
+    let yield_difference = match input.rule {
+        YieldRule::ModifiedTresca => 2.0 / 3f64.sqrt() * input.hub_yield_strength,
+        YieldRule::Tresca | YieldRule::VonMises => input.hub_yield_strength,
+    };
+    let spinning = SpinningJoint {
+        rings: input.rings,
+        yield_difference,
+        hub_density: hub.material.density.value,
+        shaft_density: shaft.material.density.value,
+    };
+    let turned = spinning.permanent_growth(interference, speed).ok()?;
+    Some((turned - spinning.permanent_growth(interference, 0.0).ok()?).max(0.0))
+}
+
+/// The least interference, from `from` on, that leaves this growth.
+fn with_growth(plastic: &PlasticJoint, from: f64, wanted: f64) -> f64 {
+    if growth(plastic, from).0 >= wanted {
+        return from;
+    }
+    let mut to = from + wanted;
+    for _ in 0..60 {
+        if growth(plastic, to).0 >= wanted {
+            break;
+        }
+        to += to - from;
+    }
+    root::bracketed(|interference| growth(plastic, interference).0 - wanted, from, to, 0.0).unwrap_or(to)
 }

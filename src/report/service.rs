@@ -1,7 +1,7 @@
 //! What speed, heat, yielding, bending and length do, in plain sentences for terminal and report.
 
 use crate::findings::{Findings, Loosening, PairFindings};
-use crate::mechanics::plastic::Regime;
+use crate::mechanics::plastic::{Regime, YieldRule};
 use crate::quantity::{Measure, show};
 
 /// The sentences that the joint calls for.
@@ -186,10 +186,9 @@ fn plastic(findings: &Findings) -> Vec<String> {
             show(Measure::Deviation, worn.loosest, joint.display),
             show(Measure::Deviation, worn.tightest, joint.display),
         ));
-        if place.is_some_and(|state| state.speed > 0.0) {
+        if place.is_some_and(|state| state.speed > 0.0) && state.rule == YieldRule::VonMises {
             all.push(
-                "Rotation strains the wall deeper than an interference that stresses the bore alike: the growth is an estimate."
-                    .to_owned(),
+                "What rotation adds to that growth is taken from Tresca's rule: an estimate.".to_owned(),
             );
         }
     }

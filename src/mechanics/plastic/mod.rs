@@ -4,7 +4,9 @@
 //! at an interference and the pressure curve. [`tresca`] and [`von_mises`] hold the hubs by themselves, [`shaft`]
 //! the shaft's limit.
 //!
-//! Not covered: rotation with a plastic hub, hardening, a plastic shaft, joining a yielded hub again (its
+//! [`SpinningJoint`] says what rotation adds after Tresca.
+//!
+//! Not covered: hardening, a plastic shaft, joining a yielded hub again (its
 //! interference is less by the permanent growth of the bore).
 
 mod curve;
@@ -14,6 +16,7 @@ mod hub;
 mod joint;
 mod rule;
 pub mod shaft;
+mod spinning;
 mod state;
 pub mod tresca;
 pub mod von_mises;
@@ -23,4 +26,5 @@ pub use field::HubPoint;
 pub use hub::{HubElasticity, HubLimit, HubLimitKind};
 pub use joint::{HubYield, PlasticJoint, PlasticLimits};
 pub use rule::YieldRule;
+pub use spinning::SpinningJoint;
 pub use state::{COMMON_PLASTIC_SHARE, PermanentGrowth, PlasticState, Regime};
