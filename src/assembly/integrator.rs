@@ -131,6 +131,8 @@ const EMBEDDED: [f64; STAGES] = [59.0 / 48.0, -17.0 / 96.0, 225.0 / 32.0, -85.0 
 
 const MAX_NEWTON: usize = 14;
 const MAX_STEPS: usize = 200_000;
+/// Shortest step that is still halved to find an event, s.
+const LEAST_STEP: f64 = 1e-9;
 
 /// State of an integration.
 #[derive(Debug, Clone)]
@@ -185,7 +187,16 @@ impl<'a, N: HeatNetwork> Integration<'a, N> {
             }
             let next = self.accepted_step(rest)?;
             if event(&next) <= 0.0 {
-                self.state = self.state_at_event(&event, next.time - self.state.time)?;
+                let length = next.time - self.state.time;
+                match self.state_at_event(&event, length) {
+                    Ok(state) => self.state = state,
+                    // A part of the step need not converge where the whole did: come nearer in shorter steps.
+                    Err(_) if length > LEAST_STEP => {
+                        self.step = 0.5 * length;
+                        continue;
+                    }
+                    Err(error) => return Err(error),
+                }
                 observe(&self.state);
                 return Ok(Some(self.state.time));
             }

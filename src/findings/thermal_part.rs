@@ -44,10 +44,11 @@ fn cold_specific_heat(room: f64, debye: f64, coldest: f64, hottest: f64) -> Resu
     let curve = debye_specific_heat(room, debye, coldest - 1.0)?;
     let end = crate::material::REFERENCE_TEMPERATURE;
     let from = coldest - 1.0;
-    let mut points = (0..POINTS)
+    let mut points = (0..POINTS - 1)
         .map(|i| from + (end - from) * f64::from(i) / f64::from(POINTS - 1))
         .map(|temperature| Ok((temperature, curve.value(temperature)?)))
         .collect::<Result<Vec<_>, AssemblyError>>()?;
+    points.push((end, room));
     points.push((end.max(hottest) + 1.0, room));
     Property::curve(&points)
 }
