@@ -230,7 +230,7 @@ fn a_pressed_joint_has_press_and_release_but_no_times() {
     // 1 t is 9806.65 N and 1 US ton 8896.443 N.
     assert_relative_eq!(
         work.size.metric_tons * 9806.65,
-        work.size.us_tons * 8896.443_230_521,
+        work.size.us_tons * 8_896.443_230_521,
         max_relative = 1e-12
     );
     assert!(work.size.force >= 1.25 * assembly.press.tightest.peak_force * (1.0 - 1e-9));
