@@ -59,6 +59,7 @@ const WHY: &[(&str, &str)] = &[
     ("carbon_dioxide_percent", "where the bath is not dry ice"),
     ("press_work", "where no pair grips"),
     ("parts_rise_k", "where the record of a part gives no specific heat"),
+    ("seat_rise_k", "where the record of a part gives no specific heat or conductivity"),
     ("release_hub_temperature_c", "where heat alone does not free the joint within the expansion curves"),
     ("buckling_n", "where the shaft has no strength to reckon with"),
     ("slenderness", "where the shaft has no strength to reckon with"),
