@@ -1,14 +1,15 @@
 //! Findings as text for an 80-column terminal: the three answers first.
 
+mod assembly;
+
 use std::fmt::Write;
 
 use anstyle::{AnsiColor, Style};
 use comfy_table::{CellAlignment, Table, presets};
 
 use super::bearing;
-use super::seating::{self, time_allowed};
+use super::seating::time_allowed;
 use crate::findings::{Findings, PairFindings, Question, Verdict, VerdictUnit};
-use crate::joint::Method;
 use crate::quantity::{Measure, UnitSystem, display_unit, show};
 use crate::tolerance::{Character, Extremes};
 
@@ -35,7 +36,7 @@ pub fn text(findings: &Findings) -> String {
     extremes(&mut out, findings);
     duty(&mut out, findings);
     service(&mut out, findings);
-    assembly(&mut out, findings);
+    assembly::write(&mut out, findings);
     bearing(&mut out, findings);
     defaults(&mut out, findings);
     cautions(&mut out, findings);
@@ -379,63 +380,6 @@ fn slices(out: &mut String, findings: &Findings) {
         ]);
     }
     print_table(out, table, 0);
-}
-
-fn assembly(out: &mut String, findings: &Findings) {
-    let joint = &findings.joint;
-    let system = joint.display;
-    let assembly = &findings.assembly;
-    heading(out, "Assembly");
-    let force = |value| show(Measure::Force, value, system).to_string();
-    let chosen = |is: bool| if is { "* " } else { "  " };
-    let method = joint.assembly.method;
-    let press = &assembly.press;
-    if let Some(text) = seating::headline(findings) {
-        for wrapped in textwrap::wrap(&text, WIDTH) {
-            line(out, format!("{HEADING}{wrapped}{HEADING:#}"));
-        }
-    }
-    paragraph(
-        out,
-        chosen(method == Method::Press),
-        &format!(
-            "press: peak {} (loosest pair, low friction) to {} (tightest pair, high friction); look for a press of {}",
-            force(press.loosest.peak_force),
-            force(press.tightest.peak_force),
-            force(assembly.press_rating)
-        ),
-    );
-    paragraph(out, chosen(method == Method::HeatHub), &assembly.heat_hub.statement);
-    paragraph(out, chosen(method == Method::ChillShaft), &assembly.chill_shaft.statement);
-    for bath in &assembly.baths {
-        let is_chosen = method == Method::HeatAndChill && bath.bath == joint.assembly.bath;
-        paragraph(out, chosen(is_chosen), &bath.statement);
-    }
-    paragraph(
-        out,
-        "  ",
-        &format!(
-            "thermal joining opens {} for the tightest pair, of which {} is clearance; * marks the chosen method",
-            show(Measure::Deviation, assembly.needed, system),
-            show(Measure::Deviation, assembly.clearance, system)
-        ),
-    );
-    for sentence in method_sentences(findings) {
-        paragraph(out, "  ", &plain(&sentence));
-    }
-}
-
-/// What the method asked for takes, and how the joint comes apart.
-fn method_sentences(findings: &Findings) -> Vec<String> {
-    let mut all: Vec<String> = seating::handling(findings).into_iter().collect();
-    all.extend(seating::soaks(findings));
-    all.extend(seating::cold_bath(findings));
-    all.extend(seating::coefficients(findings));
-    if findings.joint.assembly.method == Method::Press {
-        all.extend(seating::press(findings));
-    }
-    all.extend(seating::release(findings));
-    all
 }
 
 fn defaults(out: &mut String, findings: &Findings) {
