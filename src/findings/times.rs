@@ -14,6 +14,9 @@ use crate::assembly::soak::{QuenchStress, hour_per_inch, quench_stress, soak_to}
 use crate::joint::{Bath, Joint, Method, Ring};
 use crate::material::Kind;
 
+/// Where the heat exchange in boiling nitrogen comes from.
+const BOILING: &str = "boiling curve of nitrogen, film branch of Breen and Westwater (1962), the rest after NBS Technical \
+                       Note 317 (from memory); good to some tens of per cent";
 /// Share of the step at which a part counts as soaked.
 const SOAKED: f64 = 0.99;
 /// Rings of the coarser mesh and allowed error of a step of a soak; times to a thousandth.
@@ -214,7 +217,11 @@ fn chilled(
     }
     let part = Conduction::new(body(shaft, length), substance.clone(), around, shop)?;
     let wanted = wanted.unwrap_or(shop + SOAKED * (cold - shop));
-    soaked(shaft, part, substance, wanted, bath_name(bath), medium.usual().source)
+    let source = match bath {
+        Bath::DryIce => medium.usual().source,
+        Bath::LiquidNitrogen => BOILING,
+    };
+    soaked(shaft, part, substance, wanted, bath_name(bath), source)
 }
 
 fn soaked(

@@ -9,6 +9,9 @@ use crate::findings::{Findings, bath_name};
 use crate::joint::practice::Heating;
 use crate::quantity::{Measure, display_unit, number, show};
 
+/// Below this time minutes are given to a tenth, s.
+const TENTHS: f64 = 1200.0;
+
 /// A time that must not be passed, rounded down: seconds to two minutes, then minutes, then hours.
 pub fn time_allowed(seconds: f64) -> String {
     let down = |value: f64| (value + 1e-9).floor();
@@ -16,6 +19,8 @@ pub fn time_allowed(seconds: f64) -> String {
         format!("{} s", number(down(seconds * 10.0) / 10.0, 2))
     } else if seconds < 120.0 {
         format!("{:.0} s", down(seconds))
+    } else if seconds < TENTHS {
+        format!("{} min", number(down(seconds / 6.0) / 10.0, 4))
     } else if seconds < 7200.0 {
         format!("{:.0} min", down(seconds / 60.0))
     } else {
@@ -28,6 +33,8 @@ pub fn time_needed(seconds: f64) -> String {
     let up = |value: f64| (value - 1e-9).ceil().max(0.0) + 0.0;
     if seconds <= 120.0 {
         format!("{:.0} s", up(seconds))
+    } else if seconds < TENTHS {
+        format!("{} min", number(up(seconds / 6.0) / 10.0, 4))
     } else if seconds <= 7200.0 {
         format!("{:.0} min", up(seconds / 60.0))
     } else {
@@ -345,10 +352,10 @@ mod tests {
     fn times_allowed_are_rounded_down_and_times_needed_up() {
         assert_eq!(time_allowed(3.97), "3.9 s");
         assert_eq!(time_allowed(38.99), "38 s");
-        assert_eq!(time_allowed(179.0), "2 min");
+        assert_eq!(time_allowed(179.0), "2.9 min");
         assert_eq!(time_allowed(11_298.9), "3.1 h");
         assert_eq!(time_needed(38.01), "39 s");
-        assert_eq!(time_needed(121.0), "3 min");
+        assert_eq!(time_needed(121.0), "2.1 min");
         assert_eq!(time_needed(7201.0), "2.1 h");
         assert_eq!(time_needed(0.0), "0 s");
     }

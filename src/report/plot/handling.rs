@@ -3,7 +3,7 @@
 use super::Plot;
 use super::axis::Axis;
 use super::chart::{Chart, Margins, Pair};
-use super::tags::Side;
+use super::tags::{Lean, Side};
 use crate::assembly::handling::{HandlingCourse, HandlingPoint};
 use crate::findings::Findings;
 use crate::report::seating::time_allowed;
@@ -98,8 +98,12 @@ fn ends(
         (None, Some(gone)) => format!("{name}, to {}", time_allowed(gone)),
         (None, None) => format!("{name}, always passes"),
     };
-    let side = if at.0 > 0.75 * chart.x.to { Side::Right } else { Side::Above };
-    chart.tag(at, text, pair.colour(), side);
+    if pair == Pair::Tightest && at.0 > 0.35 * chart.x.to {
+        // The room under a falling curve is free.
+        chart.leaning_tag(at, text, pair.colour(), Side::Left, Lean::Up);
+    } else {
+        chart.tag(at, text, pair.colour(), Side::Right);
+    }
 }
 
 fn caption(findings: &Findings) -> String {
