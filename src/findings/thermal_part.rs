@@ -82,10 +82,10 @@ mod tests {
         let steel = Library::built_in().find("C45+N").unwrap();
         let room = steel.specific_heat.as_ref().unwrap().value;
         let cold = substance(&steel, 77.36, 400.0).unwrap().unwrap().specific_heat;
-        // Debye's function with 470 K: 0.260 of 3R at 77.36 K and 0.883 at 293.15 K (tables of the Debye specific heat
-        // at θ/T of 6.08 and 1.60, from memory), so 0.2946 of the room value; half a unit of the last figures is 0.3 %.
+        // Debye's function with 470 K, integrated apart from this program by the midpoint rule with 20 000 steps:
+        // 0.2590376 of 3R at 77.36 K and 0.8824027 at 293.15 K. The curve through points costs less than 0.1 %.
         let share = cold.value(77.36).unwrap() / room;
-        assert!((share / 0.2946 - 1.0).abs() < 0.005, "{share}");
+        assert!((share / (0.259_037_6 / 0.882_402_7) - 1.0).abs() < 0.001, "{share}");
         assert!((cold.value(350.0).unwrap() / room - 1.0).abs() < 1e-9);
         let warm = substance(&steel, 288.15, 500.0).unwrap().unwrap().specific_heat;
         assert_eq!(warm, Property::Constant(room));
