@@ -18,6 +18,7 @@ pub mod sort;
 pub mod terminal;
 
 mod hatch;
+mod page;
 mod svg;
 mod text_width;
 mod typeset;

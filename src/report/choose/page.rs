@@ -1,13 +1,12 @@
 //! The choice of a fit as one self-contained page: what is allowed, the fits, the picture.
 
-use maud::{Markup, PreEscaped, html};
+use maud::{Markup, html};
 
 use super::words;
 use crate::population::choose::{Choice, ChosenFit};
 use crate::quantity::{Measure, show};
+use crate::report::page::page;
 use crate::report::plot;
-
-const STYLE: &str = include_str!("../html/style.css");
 
 /// The choice as one HTML file that needs no network and no script; `all` lists every fit.
 pub fn html(choice: &Choice, all: bool) -> String {
@@ -19,40 +18,28 @@ pub fn html(choice: &Choice, all: bool) -> String {
     } else {
         fits.iter().copied().take(words::MOST_SHOWN).collect()
     };
-    let page = html! {
-        (PreEscaped("<!DOCTYPE html>\n"))
-        html lang="en" xmlns="http://www.w3.org/1999/xhtml" {
-            head {
-                (PreEscaped("<meta charset=\"utf-8\"/>"))
-                (PreEscaped("<meta name=\"viewport\" content=\"width=device-width, initial-scale=1\"/>"))
-                (PreEscaped(format!("<meta name=\"generator\" content=\"hubgrip {}\"/>", env!("CARGO_PKG_VERSION"))))
-                title { (title) ": choice of a fit" }
-                style { (PreEscaped(STYLE)) }
-            }
-            body {
-                header.title-block {
-                    p.kind { "Choice of a fit" }
-                    h1 { (title) }
-                    p { (subtitle(choice)) }
-                }
-                main {
-                    section { h2 { "What is allowed" } (allowed(choice)) }
-                    section { h2 { (heading(choice)) } (list(choice, &fits, left_out)) }
-                    @if let Some(picture) = plot::interference_windows(choice, &pictured) {
-                        section {
-                            h2 { "Picture" }
-                            figure { h3 { (picture.title) } (picture.svg) figcaption { (picture.caption) } }
-                        }
-                    }
-                    section { h2 { "Notes" } (notes(choice)) }
-                }
-                footer {
-                    p { "hubgrip " (env!("CARGO_PKG_VERSION")) " · input SHA-256 " span.digest { (joint.digest) } }
+    let body = html! {
+        header.title-block {
+            p.kind { "Choice of a fit" }
+            h1 { (title) }
+            p { (subtitle(choice)) }
+        }
+        main {
+            section { h2 { "What is allowed" } (allowed(choice)) }
+            section { h2 { (heading(choice)) } (list(choice, &fits, left_out)) }
+            @if let Some(picture) = plot::interference_windows(choice, &pictured) {
+                section {
+                    h2 { "Picture" }
+                    figure { h3 { (picture.title) } (picture.svg) figcaption { (picture.caption) } }
                 }
             }
+            section { h2 { "Notes" } (notes(choice)) }
+        }
+        footer {
+            p { "hubgrip " (env!("CARGO_PKG_VERSION")) " · input SHA-256 " span.digest { (joint.digest) } }
         }
     };
-    page.into_string().chars().filter(|c| !c.is_control() || matches!(c, '\n' | '\t')).collect()
+    page(&format!("{title}: choice of a fit"), &body)
 }
 
 fn subtitle(choice: &Choice) -> String {

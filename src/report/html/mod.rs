@@ -16,13 +16,12 @@ mod table;
 mod title_block;
 mod worksheet;
 
-use maud::{Markup, PreEscaped, html};
+use maud::{Markup, html};
 
+use super::page::page;
 use super::typeset::capital;
 use super::units::Units;
 use crate::findings::Findings;
-
-const STYLE: &str = include_str!("style.css");
 
 /// What every part of the page is made from.
 #[derive(Clone, Copy)]
@@ -45,35 +44,22 @@ struct Sheet<'a> {
 pub fn html(findings: &Findings) -> String {
     let sheet = Sheet { findings, units: Units { system: findings.joint.display } };
     let title = title_block::title(&findings.joint);
-    let page = html! {
-        (PreEscaped("<!DOCTYPE html>\n"))
-        html lang="en" xmlns="http://www.w3.org/1999/xhtml" {
-            head {
-                // A closed tag, so that the page is XML too.
-                (PreEscaped("<meta charset=\"utf-8\"/>"))
-                (PreEscaped("<meta name=\"viewport\" content=\"width=device-width, initial-scale=1\"/>"))
-                (PreEscaped(format!("<meta name=\"generator\" content=\"hubgrip {}\"/>", env!("CARGO_PKG_VERSION"))))
-                title { (title) }
-                style { (PreEscaped(STYLE)) }
-            }
-            body {
-                (title_block::header(sheet))
-                (contents())
-                main {
-                    @for (number, part) in PARTS.iter().enumerate() {
-                        section id=(part.id) aria-labelledby=(format!("h-{}", part.id)) {
-                            h2 id=(format!("h-{}", part.id)) {
-                                span.number { (number + 1) } " " (part.heading)
-                            }
-                            ((part.body)(sheet))
-                        }
+    let body = html! {
+        (title_block::header(sheet))
+        (contents())
+        main {
+            @for (number, part) in PARTS.iter().enumerate() {
+                section id=(part.id) aria-labelledby=(format!("h-{}", part.id)) {
+                    h2 id=(format!("h-{}", part.id)) {
+                        span.number { (number + 1) } " " (part.heading)
                     }
+                    ((part.body)(sheet))
                 }
-                (title_block::footer(sheet))
             }
         }
+        (title_block::footer(sheet))
     };
-    without_control_characters(&page.into_string())
+    page(&title, &body)
 }
 
 /// One numbered part of the page.
@@ -117,11 +103,4 @@ fn contents() -> Markup {
             }
         }
     }
-}
-
-/// XML allows no control characters but tab and line ends (XML 1.0, production 2).
-fn without_control_characters(page: &str) -> String {
-    page.chars()
-        .filter(|c| (!c.is_control() || matches!(c, '\n' | '\t')) && !matches!(c, '\u{FFFE}' | '\u{FFFF}'))
-        .collect()
 }

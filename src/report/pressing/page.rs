@@ -1,6 +1,6 @@
 //! Records as one self-contained page with their curves.
 
-use maud::{Markup, PreEscaped, html as markup};
+use maud::{Markup, html as markup};
 
 use super::{
     Count, Entry, Seen, Told, allowed, cautions, count, friction_or_product, in_unit, inferred_sentences,
@@ -8,10 +8,9 @@ use super::{
 };
 use crate::pressing::checks::{CheckKind, CheckUnit};
 use crate::quantity::{Measure, display_unit, number};
+use crate::report::page::page;
 use crate::report::plot::{self, Plot};
 use crate::report::typeset::{self, prose};
-
-const STYLE: &str = include_str!("../html/style.css");
 
 /// Most records that are out and shown with a picture of their own; the others stand in the table and the JSON.
 const MOST_PICTURES: usize = 24;
@@ -21,34 +20,22 @@ pub fn html(told: &Told<'_>) -> String {
     let joint = &told.findings.joint;
     let title = if joint.title.is_empty() { "Joint" } else { &joint.title };
     let callout = joint.fits.first().map_or("", |fit| fit.callout.as_str());
-    let page = markup! {
-        (PreEscaped("<!DOCTYPE html>\n"))
-        html lang="en" xmlns="http://www.w3.org/1999/xhtml" {
-            head {
-                (PreEscaped("<meta charset=\"utf-8\"/>"))
-                (PreEscaped("<meta name=\"viewport\" content=\"width=device-width, initial-scale=1\"/>"))
-                title { (title) ": press-in records" }
-                style { (PreEscaped(STYLE)) }
-            }
-            body {
-                header.title-block {
-                    p.kind { "Press-in records of a press fit" }
-                    h1 { (title) }
-                    p.small { (callout) " · hubgrip " (env!("CARGO_PKG_VERSION")) " · input SHA-256 " span.digest { (joint.digest) } }
-                    @for (key, value) in &joint.set { p.small { "set " (key) " = " (value) } }
-                }
-                main {
-                    p.verdict { (verdict_sentence(told)) }
-                    (pictures(told))
-                    @if told.entries.len() > 1 { (all_records(told)) }
-                    (each(told))
-                    (how(told))
-                }
-            }
+    let body = markup! {
+        header.title-block {
+            p.kind { "Press-in records of a press fit" }
+            h1 { (title) }
+            p.small { (callout) " · hubgrip " (env!("CARGO_PKG_VERSION")) " · input SHA-256 " span.digest { (joint.digest) } }
+            @for (key, value) in &joint.set { p.small { "set " (key) " = " (value) } }
+        }
+        main {
+            p.verdict { (verdict_sentence(told)) }
+            (pictures(told))
+            @if told.entries.len() > 1 { (all_records(told)) }
+            (each(told))
+            (how(told))
         }
     };
-    let text = page.into_string();
-    text.chars().filter(|c| !c.is_control() || matches!(c, '\n' | '\t')).collect()
+    page(&format!("{title}: press-in records"), &body)
 }
 
 fn verdict_sentence(told: &Told<'_>) -> String {

@@ -1,13 +1,12 @@
 //! The population as one self-contained page with its plots.
 
-use maud::{Markup, PreEscaped, html as markup};
+use maud::{Markup, html as markup};
 
 use super::{Told, agreement, counted, measure, ppm, shown};
 use crate::population::scatter::{Event, LEVELS};
 use crate::quantity::{display_unit, number};
+use crate::report::page::page;
 use crate::report::plot;
-
-const STYLE: &str = include_str!("../html/style.css");
 
 /// The population as one HTML file that needs no network and no script.
 pub fn html(told: &Told<'_>) -> String {
@@ -16,43 +15,31 @@ pub fn html(told: &Told<'_>) -> String {
     let settings = &told.scatter.settings;
     let callout = joint.fits.first().map_or("", |fit| fit.callout.as_str());
     let plots = plot::population(told.joint, told.scatter);
-    let page = markup! {
-        (PreEscaped("<!DOCTYPE html>\n"))
-        html lang="en" xmlns="http://www.w3.org/1999/xhtml" {
-            head {
-                (PreEscaped("<meta charset=\"utf-8\"/>"))
-                (PreEscaped("<meta name=\"viewport\" content=\"width=device-width, initial-scale=1\"/>"))
-                title { (title) ": population" }
-                style { (PreEscaped(STYLE)) }
+    let body = markup! {
+        header.title-block {
+            p.kind { "Population of a press or shrink fit" }
+            h1 { (title) }
+            p { (callout) ": integrated, and counted in " (settings.samples) " random pairs (seed " (settings.seed) "). Input SHA-256 " span.digest { (joint.digest) } }
+            @for (key, value) in &joint.set { p.small { "set " (key) " = " (value) } }
+        }
+        main {
+            section { h2 { "How often" } (events(told)) p { (agreement(told.scatter)) } }
+            section {
+                h2 { "Pictures" }
+                @for plot in plots {
+                    figure { h3 { (plot.title) } (plot.svg) figcaption { (plot.caption) } }
+                }
             }
-            body {
-                header.title-block {
-                    p.kind { "Population of a press or shrink fit" }
-                    h1 { (title) }
-                    p { (callout) ": integrated, and counted in " (settings.samples) " random pairs (seed " (settings.seed) "). Input SHA-256 " span.digest { (joint.digest) } }
-                    @for (key, value) in &joint.set { p.small { "set " (key) " = " (value) } }
-                }
-                main {
-                    section { h2 { "How often" } (events(told)) p { (agreement(told.scatter)) } }
-                    section {
-                        h2 { "Pictures" }
-                        @for plot in plots {
-                            figure { h3 { (plot.title) } (plot.svg) figcaption { (plot.caption) } }
-                        }
-                    }
-                    section { h2 { "How much" } (quantities(told)) }
-                    section { h2 { "Which tolerance matters most" } (shares(told)) }
-                    section {
-                        h2 { "Assumed" }
-                        ul { @for sentence in told.assumed { li { (sentence) } } }
-                        @if told.assumed.is_empty() { p { "Nothing: the joint file says it all." } }
-                    }
-                }
+            section { h2 { "How much" } (quantities(told)) }
+            section { h2 { "Which tolerance matters most" } (shares(told)) }
+            section {
+                h2 { "Assumed" }
+                ul { @for sentence in told.assumed { li { (sentence) } } }
+                @if told.assumed.is_empty() { p { "Nothing: the joint file says it all." } }
             }
         }
     };
-    let text = page.into_string();
-    text.chars().filter(|c| !c.is_control() || matches!(c, '\n' | '\t')).collect()
+    page(&format!("{title}: population"), &body)
 }
 
 fn events(told: &Told<'_>) -> Markup {
