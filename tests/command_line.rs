@@ -423,3 +423,31 @@ fn a_closed_pipe_ends_quietly() {
     assert_eq!(exit_code(&output), 0, "{}", stderr(&output));
     assert!(stderr(&output).is_empty(), "{}", stderr(&output));
 }
+
+#[test]
+fn quiet_commands_that_write_a_page_print_nothing_else() {
+    let here = tempfile::tempdir().unwrap();
+    let example = |name: &str| std::path::Path::new(env!("CARGO_MANIFEST_DIR")).join("examples").join(name);
+    let (motor, free) = (example("population/motor-hub.yaml"), example("choose/hub-without-fit.yaml"));
+    let (joint, record) = (example("pressing/joint.yaml"), example("pressing/pinion-01.csv"));
+    let text = |path: &std::path::PathBuf| path.to_str().unwrap().to_owned();
+    for words in [
+        vec!["report".to_owned(), text(&motor)],
+        vec!["choose".to_owned(), text(&free)],
+        vec!["scatter".to_owned(), text(&motor), "--samples".to_owned(), "1000".to_owned()],
+        vec!["pressing".to_owned(), text(&joint), text(&record)],
+    ] {
+        let run = |more: &[&str]| {
+            let all: Vec<&str> = words.iter().map(String::as_str).chain(more.iter().copied()).collect();
+            let output = hubgrip_in(here.path(), &all);
+            assert!(matches!(output.status.code(), Some(0 | 1)), "{all:?}: {output:?}");
+            String::from_utf8(output.stdout).unwrap()
+        };
+        assert!(!run(&["-o", "page.html"]).is_empty(), "{words:?}");
+        let page = std::fs::read_to_string(here.path().join("page.html")).unwrap();
+        std::fs::remove_file(here.path().join("page.html")).unwrap();
+        assert_eq!(run(&["-o", "page.html", "--quiet"]), "", "{words:?}");
+        assert_eq!(std::fs::read_to_string(here.path().join("page.html")).unwrap(), page);
+        assert_eq!(run(&["-o", "-"]), page, "{words:?}: standard output holds the page alone");
+    }
+}

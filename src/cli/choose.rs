@@ -83,10 +83,8 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     let choice = choose(joint, options).map_err(|error| refused(&error, &arguments.file))?;
     match &arguments.output {
         Some(path) => {
-            output.file(path, &report::html(&choice, arguments.all))?;
-            if path.as_os_str() != "-" && !output.quiet() {
-                output.result(&report::text(&choice, arguments.all))?;
-            }
+            let page = report::html(&choice, arguments.all);
+            output.page(path, &page, || report::text(&choice, arguments.all))?;
         }
         None if arguments.json => output.result(&report::to_json(&choice))?,
         None => output.result(&report::text(&choice, arguments.all))?,

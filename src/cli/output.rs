@@ -32,6 +32,16 @@ impl Output {
         self.quiet
     }
 
+    /// Writes a page to its file, or to standard output for `-`, and the text beside it when there is room:
+    /// not on the standard output that holds the page, and not when quiet was asked for.
+    pub fn page(&self, path: &Path, page: &str, beside: impl FnOnce() -> String) -> Result<(), Failure> {
+        self.file(path, page)?;
+        if path == Path::new("-") || self.quiet {
+            return Ok(());
+        }
+        self.result(&beside())
+    }
+
     /// Writes a result to standard output.
     pub fn result(&self, text: &str) -> Result<(), Failure> {
         let mut stdout = AutoStream::new(io::stdout(), self.colour).lock();

@@ -97,12 +97,14 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
         output.error(&if arguments.json { diagnostics::json(fault) } else { diagnostics::text(fault) });
     }
     let told = Told { findings: &findings, window: &window, settings: &settings, entries: &entries };
-    if let Some(path) = &arguments.output {
-        output.file(path, &report::html(&told))?;
-    }
-    let page_on_stdout = arguments.output.as_deref().is_some_and(is_dash);
-    if !page_on_stdout {
-        output.result(&if arguments.json { report::json(&told) } else { report::text(&told) })?;
+    match &arguments.output {
+        Some(path) if arguments.json && path != Path::new("-") => {
+            output.file(path, &report::html(&told))?;
+            output.result(&report::json(&told))?;
+        }
+        Some(path) => output.page(path, &report::html(&told), || report::text(&told))?,
+        None if arguments.json => output.result(&report::json(&told))?,
+        None => output.result(&report::text(&told))?,
     }
     let count = report::count(&entries);
     Ok(match (count.unread, count.out) {

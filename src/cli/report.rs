@@ -39,12 +39,7 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     let findings = input::findings(&arguments.file, &arguments.what_if.set, &library)?;
     let page = html::html(&findings);
     match &arguments.output {
-        Some(path) => {
-            output.file(path, &page)?;
-            if path.as_os_str() != "-" && !output.quiet() {
-                output.result(&terminal::summary(&findings))?;
-            }
-        }
+        Some(path) => output.page(path, &page, || terminal::summary(&findings))?,
         None => output.not_for_terminal(&page, "add -o OUT.html, or send it on with > or |")?,
     }
     Ok(check::ending(&findings, arguments.strict))

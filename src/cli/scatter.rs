@@ -63,12 +63,14 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     let scatter = scatter(model, settings)
         .map_err(|error| Diagnostic::new(error.to_string()).in_file(input::shown(&arguments.file)))?;
     let told = report::Told { joint: &joint, scatter: &scatter, assumed: &assumed };
-    if let Some(path) = &arguments.output {
-        output.file(path, &report::html(&told))?;
-    }
-    let page_on_stdout = arguments.output.as_ref().is_some_and(|path| path.as_os_str() == "-");
-    if !page_on_stdout {
-        output.result(&if arguments.json { report::json(&told) } else { report::text(&told) })?;
+    match &arguments.output {
+        Some(path) if arguments.json && path != Path::new("-") => {
+            output.file(path, &report::html(&told))?;
+            output.result(&report::json(&told))?;
+        }
+        Some(path) => output.page(path, &report::html(&told), || report::text(&told))?,
+        None if arguments.json => output.result(&report::json(&told))?,
+        None => output.result(&report::text(&told))?,
     }
     Ok(if report::agrees(&scatter) { Ending::Met } else { Ending::NotMet })
 }
