@@ -183,6 +183,26 @@ fn bending_changes_the_pressure_at_the_edges() {
     // Nominal stress of a solid round shaft, 32 M/(π d³).
     let fatigue = found.service.fatigue[0];
     assert_relative_eq!(fatigue.nominal_stress, 32.0 * 400.0 / (PI * 0.05f64.powi(3)), max_relative = 1e-12);
+    // By hand, d = 50 mm: lg(50/7.5)/lg 20 = 0.633274, so K2 = 0.873345 (DIN 743-2, from memory).
+    assert_relative_eq!(fatigue.size_factor, 0.873_345, max_relative = 1e-6);
+    let reduction = |notch: f64| notch / fatigue.size_factor + 1.0 / fatigue.surface_factor - 1.0;
+    assert_relative_eq!(fatigue.reduction.high, reduction(fatigue.notch_factor.high), max_relative = 1e-12);
+    assert_relative_eq!(
+        fatigue.safety.low,
+        fatigue.plain_strength / fatigue.nominal_stress / reduction(fatigue.notch_factor.high),
+        max_relative = 1e-12
+    );
+    assert!(fatigue.safety.low < fatigue.safety.high);
+}
+
+/// The published notch factors are of steel shafts: another shaft gets no figure, and the reason.
+#[test]
+fn a_shaft_that_is_not_of_steel_gets_no_fatigue_figure() {
+    let duty = "duty: [{state: bent, bending_moment: 100 N.m, rotating_bending: yes}]";
+    let found = two_parts("material: EN AW-6082-T6", &steel(300, HUB), 50.0, duty);
+    assert!(found.service.fatigue.is_empty());
+    let note = "The fatigue of the shaft at the hub edge is not judged: the published notch factors are of steel shafts";
+    assert!(found.notes.iter().any(|text| text.starts_with(note)), "{:#?}", found.notes);
 }
 
 fn plastic(rule: &str, interference: f64, duty: &str) -> Findings {

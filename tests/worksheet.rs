@@ -50,7 +50,8 @@ fn every_formula_of_every_example_gives_its_printed_result() {
     println!("{formulas} formulas worked");
 }
 
-/// What no example has: pressures from outside, relaxation, a hub strained further at work, a brittle bush.
+/// What no example has: pressures from outside, relaxation, a hub strained further at work, a brittle bush; bending
+/// of a drilled shaft in inches, of a shaft outside the notch table, of several rings.
 #[test]
 fn every_line_agrees_in_rarer_cases() {
     let head = "joint_file: 1\ndiameter: 50 mm\nlength: 40 mm\n";
@@ -62,11 +63,38 @@ fn every_line_agrees_in_rarer_cases() {
          shaft: {lower: 120 um, upper: 130 um}}\nrequire: {allow: plastic}\nduty: [{state: cold, torque: 10 N.m, \
          hub_temperature: 0 degC}, {state: hot, torque: 10 N.m, hub_temperature: 50 degC, relaxation: 0.9}]\n",
         "shaft: {name: bush, material: EN-GJL-250, bore: 36 mm}\nhub: {material: C45+N, outer_diameter: 90 mm}\nfit: H7/s6\n",
+        "shaft: {material: 42CrMo4+QT, bore: 20 mm}\nhub: {material: C45+N, outer_diameter: 90 mm}\nfit: H7/s6\nduty:\n  \
+         - {state: one, torque: 100 N.m, bending_moment: 90 N.m, rotating_bending: yes}\n  - {state: two, radial_force: 1 kN, \
+         bending_moment: 30 N.m, rotating_bending: yes}\n  - {state: three, radial_force: 2 kN}\ndisplay: inch\n",
+        "shaft: {material: {kind: ductile, youngs_modulus: 210 GPa, poisson: 0.3, density: 7850 kg/m3, expansion: 12e-6 /K, \
+         yield_strength: 1100 MPa, tensile_strength: 1300 MPa}, roughness: Rz 0.5 um}\nhub: {material: C45+N, outer_diameter: 90 \
+         mm}\nfit: H7/s6\nduty: [{state: one, bending_moment: 90 N.m, rotating_bending: yes}]\n",
     ];
     for case in cases {
         let findings = common::findings_of(&format!("{head}{case}"));
         let (_, drifts) = worksheet::worked(&findings);
         assert!(drifts.is_empty(), "{case}: {drifts:#?}");
+    }
+}
+
+/// Bending of more than two rings and of a stepped hub, whose sheets have no state symbols of their own.
+#[test]
+fn bending_is_worked_for_every_kind_of_joint() {
+    let bent = "duty: [{state: bent, torque: 50 N.m, bending_moment: 90 N.m, rotating_bending: yes}]\n";
+    let cases = [
+        "joint_file: 1\nlength: 40 mm\nrings:\n  - {material: C45+N, outer_diameter: 40 mm}\n  - {material: C45+N, \
+         outer_diameter: 60 mm}\n  - {material: C45+N, outer_diameter: 90 mm}\nfits: [H7/s6, H7/s6]\n",
+        "joint_file: 1\ndiameter: 50 mm\nlength: 40 mm\nshaft: {material: C45+N}\nhub: {material: C45+N, steps: [{length: 20 mm, \
+         outer_diameter: 75 mm}, {length: 20 mm, outer_diameter: 100 mm}]}\nfit: H7/s6\n",
+    ];
+    for case in cases {
+        let findings = common::findings_of(&format!("{case}{bent}"));
+        let (sections, drifts) = worksheet::worked(&findings);
+        assert!(drifts.is_empty(), "{case}: {drifts:#?}");
+        let lines = || sections.iter().flat_map(|section| &section.lines);
+        for symbol in ["Deltap_1", "p_l1", "M_g1", "S_fl1"] {
+            assert!(lines().any(|line| line.symbol.plain() == symbol), "{case}: {symbol} is missing");
+        }
     }
 }
 

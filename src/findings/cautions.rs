@@ -1,6 +1,6 @@
 //! Cautions and notes that the numbers of a joint call for.
 
-use super::{Caution, Findings, bearing_of, joining_cautions};
+use super::{Caution, Findings, bearing_of, fatigue, joining_cautions};
 use crate::joint::{Allow, DutyState};
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
@@ -213,6 +213,7 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
         }
     }
     notes.extend(elastic_all_the_same(findings));
+    notes.extend(fatigue::note(findings));
     notes.extend(hot_modulus(findings));
     notes.extend(findings.assembly.times.gaps.iter().cloned());
     notes.push(

@@ -39,8 +39,8 @@ pub enum Expression {
     Product(Box<Expression>, Box<Expression>),
     /// numerator over denominator.
     Quotient(Box<Expression>, Box<Expression>),
-    /// base to a whole power.
-    Power(Box<Expression>, u8),
+    /// base to the power of a number as it is printed.
+    Power(Box<Expression>, String),
     /// Square root.
     Root(Box<Expression>),
     /// Minus.
@@ -58,6 +58,8 @@ pub enum Expression {
 pub enum Function {
     /// Natural logarithm.
     Ln,
+    /// Logarithm to the base of ten.
+    Lg,
     /// Tangent of an angle in radians.
     Tan,
     /// Absolute value.
@@ -69,6 +71,7 @@ impl Function {
     pub fn name(self) -> &'static str {
         match self {
             Self::Ln => "ln",
+            Self::Lg => "log10",
             Self::Tan => "tan",
             Self::Abs => "abs",
         }
@@ -109,10 +112,14 @@ impl Expression {
             Self::Difference(a, b) => value(a)? - value(b)?,
             Self::Product(a, b) => value(a)? * value(b)?,
             Self::Quotient(a, b) => value(a)? / value(b)?,
-            Self::Power(a, n) => value(a)?.powi(i32::from(*n)),
+            Self::Power(a, n) => match n.parse::<i32>() {
+                Ok(whole) => value(a)?.powi(whole),
+                Err(_) => value(a)?.powf(n.parse().ok()?),
+            },
             Self::Root(a) => value(a)?.sqrt(),
             Self::Negative(a) => -value(a)?,
             Self::Call(Function::Ln, a) => value(a)?.ln(),
+            Self::Call(Function::Lg, a) => value(a)?.log10(),
             Self::Call(Function::Tan, a) => value(a)?.tan(),
             Self::Call(Function::Abs, a) => value(a)?.abs(),
             Self::Greatest(all) => extreme(all, lookup, f64::max)?,
@@ -183,7 +190,12 @@ impl Expression {
 
     /// This formula to a whole power.
     pub fn power(self, exponent: u8) -> Self {
-        Self::Power(Box::new(self), exponent)
+        Self::Power(Box::new(self), exponent.to_string())
+    }
+
+    /// This formula to the power of a number as it is printed, such as `0.43`.
+    pub fn power_of(self, exponent: &str) -> Self {
+        Self::Power(Box::new(self), exponent.to_owned())
     }
 
     /// The square root of this formula.
@@ -286,6 +298,8 @@ mod tests {
         assert_eq!(formula.evaluate(&numbers), Some(1.25 / 0.75));
         assert_eq!(greatest([sym("a"), sym("b")]).evaluate(&numbers), Some(3.0));
         assert_eq!(least([sym("a"), sym("b")]).evaluate(&numbers), Some(-2.0));
+        assert_eq!(sym("a").power_of("0.5").evaluate(&numbers), Some(3f64.sqrt()));
+        assert_eq!(num("1000").call(Function::Lg).evaluate(&numbers), Some(3.0));
         assert_eq!(sym("unknown").evaluate(&numbers), None);
     }
 }

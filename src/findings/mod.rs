@@ -7,6 +7,7 @@ pub mod cold_bath;
 mod compute;
 mod envelope;
 pub mod expression;
+mod fatigue;
 mod joining_cautions;
 mod kernel;
 pub mod press_work;
@@ -23,10 +24,11 @@ pub use cautions::criterion_source;
 use cold_bath::ColdBathFindings;
 pub use compute::{FindingsError, compute};
 pub use envelope::{Envelope, EnvelopeLine, EnvelopeMeaning, EnvelopeState};
+pub use fatigue::{Fatigue, PLAIN_SHARE, TESTED_DIAMETER, TESTED_NOTCH};
 pub use kernel::after_smoothing;
 use press_work::PressWorkFindings;
 pub use service::{
-    Fatigue, GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings, ThinLiner, WornHub,
+    GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings, ThinLiner, WornHub,
 };
 use times::Times;
 pub use verdicts::{combination, failure};

@@ -1,15 +1,15 @@
 //! The joint at work: what loosens it, and what yielding by design gives.
 
 use super::envelope::{Envelope, envelope};
+use super::fatigue::{Fatigue, fatigue};
 use super::kernel::{Condition, Kernel, PairInterference, free_strains};
 use super::{DutyFindings, FindingsError, InterfaceFindings, PairFindings, RingStress};
-use crate::joint::{DutyState, Joint};
-use crate::material::{Kind, Range};
+use crate::joint::Joint;
+use crate::material::Kind;
 use crate::mechanics::buckling::Liner;
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::mechanics::finite_length::{LengthFactors, ShaftEnds, length_factors};
 use crate::mechanics::governing::{Extreme, StackQuantity, StressMeasure};
-use crate::mechanics::notch;
 use crate::mechanics::plastic::{HubYield, PlasticJoint, PlasticLimits, PlasticState};
 use crate::mechanics::two_rings::TwoRings;
 use crate::tolerance::Extremes;
@@ -46,21 +46,6 @@ pub struct GoverningRing {
     pub equivalent: f64,
     /// Strength over it; none without strength or stress.
     pub safety: Option<f64>,
-}
-
-/// Rotating bending of the shaft at the hub edge.
-#[derive(Debug, Clone, Copy, PartialEq)]
-pub struct Fatigue {
-    /// Index of the duty state.
-    pub state: usize,
-    /// Nominal bending stress of the shaft, Pa.
-    pub nominal_stress: f64,
-    /// Notch factor at the hub edge, by DIN 743-2 and the range of tests.
-    pub notch_factor: Range,
-    /// Strength of the plain shaft in rotating bending, Pa: a share of its tensile strength.
-    pub plain_strength: f64,
-    /// Safety over the range of the notch factor.
-    pub safety: Range,
 }
 
 /// The wall of a thin bush, which the housing presses inwards. Pressures Pa.
@@ -156,7 +141,7 @@ pub(super) fn service(
         } else {
             None
         },
-        fatigue: fatigue(joint),
+        fatigue: fatigue(joint)?,
     })
 }
 
@@ -278,42 +263,6 @@ fn liner(joint: &Joint, tightest: &PairFindings, duty: &[DutyFindings]) -> Optio
         pressure: states.fold(innermost(&tightest.interfaces), f64::max),
         free: liner.free_pressure().ok()?,
         housed: liner.housed_pressure().ok()?,
-    })
-}
-
-/// Strength of plain steel in rotating bending as a share of its tensile strength: 0.45 to 0.5 is usual; from memory.
-const PLAIN_SHARE: f64 = 0.45;
-
-/// Notch factors found in tests on pressed members in reversed bending: one half to one third of the plain strength
-/// (Horger & Maulbetsch, J. Applied Mechanics 3 (1936) A91-A98, abstract).
-const TESTED_NOTCH: Range = Range { low: 2.0, high: 3.0 };
-
-fn fatigue(joint: &Joint) -> Vec<Fatigue> {
-    let states = joint.duty.iter().enumerate().filter(|(_, state)| state.rotating_bending);
-    states.filter_map(|(index, state)| fatigue_of(joint, index, state)).collect()
-}
-
-fn fatigue_of(joint: &Joint, index: usize, state: &DutyState) -> Option<Fatigue> {
-    let (shaft, _) = joint.shaft_and_hub();
-    let tensile = shaft.strength.tensile_strength?;
-    if state.bending_moment == 0.0 {
-        return None;
-    }
-    let (outer, inner) = (shaft.outer_diameter, shaft.inner_diameter);
-    let nominal_stress =
-        32.0 * state.bending_moment * outer / (std::f64::consts::PI * (outer.powi(4) - inner.powi(4)));
-    let formula = notch::press_fit_bending(tensile).unwrap_or(TESTED_NOTCH.high);
-    let notch_factor = Range { low: formula.min(TESTED_NOTCH.low), high: formula.max(TESTED_NOTCH.high) };
-    let plain_strength = PLAIN_SHARE * tensile;
-    Some(Fatigue {
-        state: index,
-        nominal_stress,
-        notch_factor,
-        plain_strength,
-        safety: Range {
-            low: plain_strength / (notch_factor.high * nominal_stress),
-            high: plain_strength / (notch_factor.low * nominal_stress),
-        },
     })
 }
 

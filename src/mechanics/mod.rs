@@ -12,7 +12,8 @@
 //! | [`slices`] | a stepped hub or shaft, disc by disc |
 //! | [`bending`] | bending moment and radial force |
 //! | [`buckling`] | a thin liner pressed inwards |
-//! | [`finite_length`], [`notch`] | what the edges add: mean and edge pressure, fatigue |
+//! | [`finite_length`], [`notch`] | what the edges add: mean and edge pressure, the notch |
+//! | [`fatigue`] | what size and surface take from the fatigue strength |
 //!
 //! All numbers are SI (m, Pa, N, N·m, rad/s, K). Interference is diametral. Plane stress, σz = 0.
 
@@ -21,6 +22,7 @@ pub mod buckling;
 pub mod capacity;
 pub mod criteria;
 mod error;
+pub mod fatigue;
 pub mod finite_length;
 pub mod governing;
 pub mod influence;

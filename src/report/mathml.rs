@@ -164,12 +164,13 @@ impl Setter<'_> {
             Expression::Quotient(a, b) => {
                 html! { mfrac { mrow { (self.set(a)) } mrow { (self.set(b)) } } }
             }
-            Expression::Power(base, exponent) => self.power(base, *exponent),
+            Expression::Power(base, exponent) => self.power(base, exponent),
             Expression::Root(inner) => html! { msqrt { (self.set(inner)) } },
             Expression::Negative(inner) => {
                 html! { mrow { mo form="prefix" { (MINUS) } (self.inside(inner, PRODUCT)) } }
             }
             Expression::Call(Function::Abs, inner) => fenced("|", &self.set(inner), "|"),
+            Expression::Call(Function::Lg, inner) => self.function("lg", std::slice::from_ref(inner)),
             Expression::Call(function, inner) => self.function(function.name(), std::slice::from_ref(inner)),
             Expression::Greatest(all) => self.function("max", all),
             Expression::Least(all) => self.function("min", all),
@@ -177,7 +178,7 @@ impl Setter<'_> {
     }
 
     /// A power; an index and the exponent stand one above the other.
-    fn power(&self, base: &Expression, exponent: u8) -> Markup {
+    fn power(&self, base: &Expression, exponent: &str) -> Markup {
         match base {
             Expression::Symbol(name) if !name.index.is_empty() && self.value_of(name).is_none() => {
                 html! { msubsup { (identifier(&name.letter)) (index(name)) mn { (exponent) } } }

@@ -1,6 +1,6 @@
 //! What speed, heat, yielding, bending and length do, in plain sentences for terminal and report.
 
-use crate::findings::{Findings, Loosening, PairFindings};
+use crate::findings::{Findings, Loosening, PLAIN_SHARE, PairFindings};
 use crate::mechanics::plastic::{Regime, YieldRule};
 use crate::quantity::{Measure, show};
 
@@ -233,13 +233,19 @@ fn fatigue(findings: &Findings) -> Vec<String> {
         .filter_map(|fatigue| {
             let state = joint.duty.get(fatigue.state)?;
             Some(format!(
-                "Rotating bending in state {}: nominal stress of the shaft {}; notch factor at a plain hub edge {:.1} to {:.1} \
-                 (DIN 743-2, from memory; Horger & Maulbetsch 1936); with 0.45 of the tensile strength for the plain shaft \
-                 (from memory) the safety is {:.2} to {:.2}. Not a fatigue calculation.",
+                "Rotating bending in state {}: nominal stress of the shaft {}; notch factor at a plain hub edge {:.1} to {:.1}, \
+                 size {:.2}, surface {:.2} (DIN 743-2, from memory; tests of Horger & Maulbetsch 1936), together {:.1} to \
+                 {:.1}; with {} of the tensile strength for a small polished bar (from memory) the safety is {:.2} to {:.2}. \
+                 Figures of steel shafts; not a fatigue calculation.",
                 state.name,
                 show(Measure::Pressure, fatigue.nominal_stress, joint.display),
                 fatigue.notch_factor.low,
                 fatigue.notch_factor.high,
+                fatigue.size_factor,
+                fatigue.surface_factor,
+                fatigue.reduction.low,
+                fatigue.reduction.high,
+                PLAIN_SHARE,
                 fatigue.safety.low,
                 fatigue.safety.high,
             ))

@@ -4,6 +4,7 @@
 //! coherent but for the factor 1000 between µm and mm (thou and in), which the formulas show.
 
 mod assembly;
+mod bending;
 mod cold_bath;
 mod duty;
 mod fit;
@@ -29,12 +30,15 @@ pub fn worked(findings: &Findings) -> (Vec<WorksheetSection>, Vec<String>) {
     let units = Units::of(findings.joint.display);
     if findings.joint.rings.len() > 2 {
         stack::write(&mut sheet, findings, &units);
+        bending::write(&mut sheet, findings, &units);
     } else if !findings.joint.slices.is_empty() {
         slices::write(&mut sheet, findings, &units);
+        bending::write(&mut sheet, findings, &units);
     } else {
         fit::write(&mut sheet, findings, &units);
         strength::write(&mut sheet, findings, &units);
         duty::write(&mut sheet, findings, &units);
+        bending::write(&mut sheet, findings, &units);
         assembly::write(&mut sheet, findings, &units);
     }
     sheet.finish()

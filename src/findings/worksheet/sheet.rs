@@ -31,6 +31,11 @@ impl Sheet {
         self.sections.push(WorksheetSection { title: title.into(), lines: Vec::new() });
     }
 
+    /// Whether the symbol has a printed value.
+    pub(super) fn knows(&self, symbol: &str) -> bool {
+        self.printed.contains_key(&Symbol::new(symbol))
+    }
+
     /// An input: a symbol with its value, written to six significant digits.
     pub(super) fn input(&mut self, symbol: &str, meaning: &str, value: f64, unit: &str, source: &str) {
         let printed = number(value, DIGITS);

@@ -102,6 +102,10 @@ struct Fatigue {
     nominal_stress_mpa: Option<f64>,
     notch_factor_low: f64,
     notch_factor_high: f64,
+    size_factor: f64,
+    surface_factor: f64,
+    reduction_low: f64,
+    reduction_high: f64,
     safety_low: Option<f64>,
     safety_high: Option<f64>,
 }
@@ -133,6 +137,10 @@ impl Service {
             nominal_stress_mpa: mega(fatigue.nominal_stress),
             notch_factor_low: fatigue.notch_factor.low,
             notch_factor_high: fatigue.notch_factor.high,
+            size_factor: fatigue.size_factor,
+            surface_factor: fatigue.surface_factor,
+            reduction_low: fatigue.reduction.low,
+            reduction_high: fatigue.reduction.high,
             safety_low: finite(fatigue.safety.low),
             safety_high: finite(fatigue.safety.high),
         });
