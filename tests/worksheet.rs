@@ -21,7 +21,7 @@ fn every_formula_of_every_example_gives_its_printed_result() {
     for path in common::examples() {
         let findings = common::findings(&path);
         let mut printed: BTreeMap<String, f64> = BTreeMap::from([("pi".to_owned(), std::f64::consts::PI)]);
-        for line in findings.worksheet.iter().flat_map(|section| &section.lines) {
+        for line in findings.worksheet().iter().flat_map(|section| &section.lines) {
             if let Some(formula) = &line.formula {
                 let text = formula.plain();
                 let parsed = exmex::parse::<f64>(&text)

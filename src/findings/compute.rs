@@ -6,7 +6,6 @@ use super::kernel::{Kernel, pair_interferences};
 use super::softening::Parts;
 use super::{
     DutyFindings, Findings, OnsetOfYield, assembly_of, bearing_of, cautions, service, softening, verdicts,
-    worksheet,
 };
 use crate::assembly::AssemblyError;
 use crate::joint::{Allow, Joint};
@@ -95,14 +94,12 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         bearing,
         onset_of_yield,
         verdicts: Vec::new(),
-        worksheet: Vec::new(),
         cautions: Vec::new(),
         notes: Vec::new(),
     };
     findings.verdicts = verdicts::verdicts(&findings);
     findings.cautions = cautions::cautions(&findings);
     findings.notes = cautions::notes(&findings);
-    findings.worksheet = worksheet::worksheet(&findings);
     Ok(findings)
 }
 

@@ -60,12 +60,17 @@ pub struct Findings {
     pub onset_of_yield: Option<OnsetOfYield>,
     /// The three questions answered against the requirements.
     pub verdicts: Vec<Verdict>,
-    /// The derivation, line by line.
-    pub worksheet: Vec<WorksheetSection>,
     /// What must be minded; each a full sentence.
     pub cautions: Vec<Caution>,
     /// Why a quantity does not exist, what is not covered; full sentences.
     pub notes: Vec<String>,
+}
+
+impl Findings {
+    /// The derivation, line by line; worked when asked for, since most who ask for findings never print it.
+    pub fn worksheet(&self) -> Vec<WorksheetSection> {
+        worksheet::worksheet(self)
+    }
 }
 
 /// One pair of parts at the shop temperature, at rest.

@@ -166,7 +166,8 @@ fn every_line_of_the_worksheet_is_there_as_plain_text_too() {
     let findings = sample::fan_hub();
     let page = html(&findings);
     let text = text_of(&page, "worksheet");
-    for line in findings.worksheet.iter().flat_map(|section| &section.lines) {
+    let sections = findings.worksheet();
+    for line in sections.iter().flat_map(|section| &section.lines) {
         let plain = match &line.formula {
             Some(formula) => format!("{} = {}", line.symbol.plain(), formula.plain()),
             None => format!("{} = {}", line.symbol.plain(), line.printed),
@@ -174,7 +175,7 @@ fn every_line_of_the_worksheet_is_there_as_plain_text_too() {
         assert!(text.contains(&plain), "{plain}");
         assert!(text.contains(&line.source), "{}", line.source);
     }
-    let lines: usize = findings.worksheet.iter().map(|section| section.lines.len()).sum();
+    let lines: usize = sections.iter().map(|section| section.lines.len()).sum();
     let typeset = elements(&page).unwrap().iter().filter(|e| e.attribute("alttext").is_some()).count();
     assert_eq!(typeset, lines);
 }

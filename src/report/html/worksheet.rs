@@ -21,7 +21,7 @@ pub(super) fn body(sheet: Sheet) -> Markup {
             "Every line can be redone by hand with the numbers as printed: symbol = formula = numbers put in = result. "
             "A number put in is the printed result of the line that defines its symbol, in the unit given there."
         }
-        @for (index, section) in sheet.findings.worksheet.iter().enumerate() {
+        @for (index, section) in sheet.findings.worksheet().iter().enumerate() {
             h3 { span.number { (number_of("worksheet")) "." (index + 1) } " " (section.title) }
             (scrolling(&section.title, "worksheet", &table(section, index + 1, &mut values)))
             (plain_twin(section, &values))
