@@ -211,6 +211,60 @@ fn measured_parts_come_a_row_each() {
     assert_eq!(summary.bad, 1);
 }
 
+/// Limits as columns: deviations, sizes, one member alone; a row with wrong ones says what the single check says.
+#[test]
+fn limits_come_a_row_each() {
+    let base = BASE.replace("hub: {material: C45+N", "hub: {material: C45+N, outer_diameter: 120 mm");
+    let at_sixty = base.replace("length: 70 mm", "length: 70 mm\ndiameter: 60 mm");
+    let kept_hole = format!("{at_sixty}fit: {{hole: H7}}\n");
+    let deviations = "fit.hole.lower (um),fit.hole.upper (um),fit.shaft.lower (um),fit.shaft.upper (um)";
+    let sizes = "fit.hole.min (mm),fit.hole.max (mm),fit.shaft.min (mm),fit.shaft.max (mm)";
+    for (base, head, table) in [
+        (
+            &base,
+            format!("diameter (mm),{deviations}"),
+            vec!["60,0,30,53,72", "58,0,30,53,72", "60,-9,10,40 um,0.05 mm"],
+        ),
+        (&at_sixty, deviations.to_owned(), vec!["0,30,53,72", "0,30,53,52", "0,30,5,9000", "0,,53,72"]),
+        (
+            &at_sixty,
+            sizes.to_owned(),
+            vec!["60,60.03,60.053,60.072", "60,60.03,60.08,60.07", "-1,60,60.1,60.2"],
+        ),
+        (&kept_hole, "fit.shaft.lower (um),fit.shaft.upper (um)".to_owned(), vec!["53,72", "60,61", "x,72"]),
+    ] {
+        let keys: Vec<&str> = head.split(',').map(|name| name.split(' ').next().unwrap()).collect();
+        let units = head.split(',').map(|name| name.split(['(', ')']).nth(1).unwrap());
+        let units: Vec<&str> = units.collect();
+        let (output, _) = worked(format!("{head}\n{}\n", table.join("\n")).as_bytes(), &settings(base));
+        for (found, line) in rows(&output).iter().zip(&table) {
+            let cells = line.split(',').zip(keys.iter().zip(&units)).filter(|(cell, _)| !cell.is_empty());
+            let set: Vec<(String, String)> = cells
+                .map(|(cell, (key, unit))| {
+                    let plain = cell.parse::<f64>().is_ok();
+                    ((*key).to_owned(), if plain { format!("{cell} {unit}") } else { cell.to_owned() })
+                })
+                .collect();
+            match read::read(base, Path::new("base.yaml"), &set, &Library::built_in()) {
+                Ok(joint) => {
+                    let findings = compute(joint).unwrap();
+                    assert_eq!(found["errors"], "", "{line}");
+                    same(
+                        &found["loosest.interference_um"],
+                        Some(findings.extremes.loosest.interference),
+                        1e6,
+                    );
+                    same(&found["tightest.pressure_mpa"], Some(findings.extremes.tightest.pressure), 1e-6);
+                }
+                Err(faults) => {
+                    let first = faults[0].message.strip_prefix("--set ").unwrap_or(&faults[0].message);
+                    assert!(found["errors"].contains(first), "{line}: {} for {first}", found["errors"]);
+                }
+            }
+        }
+    }
+}
+
 /// What the kernel does not cover is worked out in full.
 #[test]
 fn joints_of_every_kind_go_through() {

@@ -2,6 +2,7 @@
 
 use crate::joint::{DutyState, Joint};
 use crate::quantity::Kind;
+use crate::tolerance::Member;
 
 /// A key that is put in straight.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -14,6 +15,7 @@ pub(super) enum Field {
     ShaftRoughness,
     HubRoughness,
     Fit,
+    Limit(Member, End),
     MeasuredHole,
     MeasuredShaft,
     MeasuredUncertainty,
@@ -34,6 +36,19 @@ pub(super) enum Field {
     Temperature(usize),
     ShaftTemperature(usize),
     HubTemperature(usize),
+}
+
+/// Which limit of a member, and how it is written.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) enum End {
+    /// Lower deviation.
+    Lower,
+    /// Upper deviation.
+    Upper,
+    /// Minimum limit of size.
+    Minimum,
+    /// Maximum limit of size.
+    Maximum,
 }
 
 impl Field {
@@ -67,6 +82,14 @@ impl Field {
             "shaft.roughness" => Self::ShaftRoughness,
             "hub.roughness" => Self::HubRoughness,
             "fit" => Self::Fit,
+            "fit.hole.lower" => Self::Limit(Member::Hole, End::Lower),
+            "fit.hole.upper" => Self::Limit(Member::Hole, End::Upper),
+            "fit.hole.min" => Self::Limit(Member::Hole, End::Minimum),
+            "fit.hole.max" => Self::Limit(Member::Hole, End::Maximum),
+            "fit.shaft.lower" => Self::Limit(Member::Shaft, End::Lower),
+            "fit.shaft.upper" => Self::Limit(Member::Shaft, End::Upper),
+            "fit.shaft.min" => Self::Limit(Member::Shaft, End::Minimum),
+            "fit.shaft.max" => Self::Limit(Member::Shaft, End::Maximum),
             "fit.measured.hole" => Self::MeasuredHole,
             "fit.measured.shaft" => Self::MeasuredShaft,
             "fit.measured.uncertainty" => Self::MeasuredUncertainty,

@@ -6,14 +6,14 @@
 //! reader, who tells why.
 
 use super::cell;
-use super::field::{Field, put};
+use super::field::{End, Field, put};
 use super::header::Column;
 use crate::joint::{Allow, Joint, Ring};
 use crate::material::Range;
 use crate::material::roughness::rz_from_ra;
 use crate::quantity::unit::Unit;
 use crate::quantity::{Kind, parse, parse_number_range};
-use crate::tolerance::{FitCallout, FitLimits, ToleranceError};
+use crate::tolerance::{FitCallout, FitLimits, Limits, Member, MemberCallout, ToleranceError};
 
 /// A joint into which cells are put.
 #[derive(Debug, Clone)]
@@ -43,6 +43,8 @@ enum FitOf {
     Callout(FitCallout),
     /// The callout in this column; the last one that was read is kept.
     Column(usize, Option<(String, FitCallout)>),
+    /// Each member for itself.
+    Members { hole: MemberCallout, shaft: MemberCallout },
     /// Two measured parts, m.
     Measured { hole: f64, shaft: f64, uncertainty: f64 },
 }
@@ -103,6 +105,11 @@ impl Template {
             Field::Holding => joint.friction.holding.value = friction(text)?,
             Field::Pressing => joint.friction.pressing.value = friction(text)?,
             Field::Release => joint.friction.release.value = friction(text)?,
+            Field::Limit(member, end) => {
+                let value = cell::quantity(Kind::Length, text, column, unit)?;
+                let FitOf::Members { hole, shaft } = &mut self.fit else { return None };
+                put_limit(if member == Member::Hole { hole } else { shaft }, end, value)?;
+            }
             Field::MeasuredHole | Field::MeasuredShaft | Field::MeasuredUncertainty => {
                 let value = cell::quantity(Kind::Length, text, column, unit)?;
                 let FitOf::Measured { hole, shaft, uncertainty } = &mut self.fit else { return None };
@@ -152,6 +159,7 @@ impl Template {
                 }
                 limits(&kept.as_ref()?.1, diameter)
             }
+            FitOf::Members { hole, shaft } => limits(&FitCallout::members(*hole, *shaft), diameter),
             FitOf::Measured { hole, shaft, uncertainty } => {
                 if *uncertainty < 0.0 {
                     return None;
@@ -184,13 +192,43 @@ fn fit_of(joint: &Joint, puts: &[Put]) -> Option<FitOf> {
         };
         return Some(FitOf::Measured { hole: 0.0, shaft: 0.0, uncertainty });
     }
-    if !puts.iter().any(|put| put.field.moves_diameter()) {
+    let moves = puts.iter().any(|put| put.field.moves_diameter());
+    if puts.iter().any(|put| matches!(put.field, Field::Limit(..))) {
+        let kept = |limits: Limits| (!moves).then_some(MemberCallout::Deviations(limits));
+        return Some(FitOf::Members {
+            hole: member_of(Member::Hole, puts, kept(fit.limits.hole))?,
+            shaft: member_of(Member::Shaft, puts, kept(fit.limits.shaft))?,
+        });
+    }
+    if !moves {
         return Some(FitOf::Template);
     }
     match FitCallout::parse(&fit.callout) {
         Ok(callout @ (FitCallout::Iso { .. } | FitCallout::Ansi(_))) => Some(FitOf::Callout(callout)),
         _ => None,
     }
+}
+
+/// How the columns give a member: by both deviations or by both sizes; the kept one when they do not give it.
+fn member_of(member: Member, puts: &[Put], kept: Option<MemberCallout>) -> Option<MemberCallout> {
+    let has = |end: End| puts.iter().any(|put| put.field == Field::Limit(member, end));
+    match [End::Lower, End::Upper, End::Minimum, End::Maximum].map(has) {
+        [false, false, false, false] => kept,
+        [true, true, false, false] => Some(MemberCallout::Deviations(Limits { lower: 0.0, upper: 0.0 })),
+        [false, false, true, true] => Some(MemberCallout::Sizes { minimum: 0.0, maximum: 0.0 }),
+        _ => None,
+    }
+}
+
+fn put_limit(callout: &mut MemberCallout, end: End, value: f64) -> Option<()> {
+    match (callout, end) {
+        (MemberCallout::Deviations(limits), End::Lower) => limits.lower = value,
+        (MemberCallout::Deviations(limits), End::Upper) => limits.upper = value,
+        (MemberCallout::Sizes { minimum, .. }, End::Minimum) if value > 0.0 => *minimum = value,
+        (MemberCallout::Sizes { maximum, .. }, End::Maximum) if value > 0.0 => *maximum = value,
+        _ => return None,
+    }
+    Some(())
 }
 
 /// The limits of a fit without the sources that nobody reads here.
