@@ -77,6 +77,48 @@ fn every_line_agrees_in_rarer_cases() {
     }
 }
 
+/// Several rings at speed, with a solid core, a drilled one, pressure inside, a brittle ring, Tresca, a gradient: the
+/// stress that governs each ring is worked, and the grip of each interface in each loaded state.
+#[test]
+fn every_ring_of_several_is_worked() {
+    let rings = |core: &str| {
+        format!(
+            "joint_file: 1\nlength: 40 mm\nrings:\n  - {{name: core, material: 42CrMo4+QT{core}, outer_diameter: 40 mm}}\n  \
+             - {{name: middle, material: EN-GJL-250, outer_diameter: 60 mm}}\n  - {{name: outside, material: C45+N, \
+             outer_diameter: 90 mm}}\nfits: [H7/s6, H7/s6]\n"
+        )
+    };
+    for (core, rest) in [
+        ("", "duty: [{state: fast, torque: 50 N.m, axial_force: 1 kN, speed: 9000 rpm}]\n"),
+        (
+            ", bore: 12 mm",
+            "duty: [{state: stroke, torque: 20 N.m, inner_pressure: 60 MPa}]\ncriterion: Tresca\n",
+        ),
+        (", bore: 12 mm", "duty: [{state: fast, torque: 20 N.m, speed: 12000 rpm}]\ndisplay: inch\n"),
+        (
+            ", bore: 12 mm",
+            "duty: [{state: hot, torque: 20 N.m, inner_temperature: 90 degC, outer_temperature: 30 degC}]\n",
+        ),
+    ] {
+        let case = format!("{}{rest}", rings(core));
+        let findings = common::findings_of(&case);
+        let (sections, drifts) = worksheet::worked(&findings);
+        assert!(drifts.is_empty(), "{case}: {drifts:#?}");
+        let lines = || sections.iter().flat_map(|section| &section.lines);
+        let printed = |symbol: &str| {
+            let line = lines().find(|line| line.symbol.plain() == symbol);
+            line.unwrap_or_else(|| panic!("{case}: {symbol} is missing")).printed.parse::<f64>().unwrap()
+        };
+        let slip = findings.duty[0].loosest.slip_safety.unwrap();
+        let least = printed("S_1s1").min(printed("S_2s1"));
+        assert!((least / slip - 1.0).abs() < 5e-5, "{case}: {least} and {slip}");
+        for (number, governing) in findings.service.governing.iter().enumerate() {
+            let safety = governing.safety.unwrap();
+            assert!((printed(&format!("S_{}", number + 1)) / safety - 1.0).abs() < 5e-5, "{case}");
+        }
+    }
+}
+
 /// Bending of more than two rings and of a stepped hub, whose sheets have no state symbols of their own.
 #[test]
 fn bending_is_worked_for_every_kind_of_joint() {

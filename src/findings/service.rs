@@ -242,7 +242,7 @@ fn governing_ring(
 }
 
 /// The loosest interferences, never above the tightest.
-fn loosest_for_stress(pairs: &Extremes<PairInterference>) -> Vec<f64> {
+pub(super) fn loosest_for_stress(pairs: &Extremes<PairInterference>) -> Vec<f64> {
     let both = pairs.loosest.effective.iter().zip(&pairs.tightest.effective);
     both.map(|(loosest, tightest)| loosest.min(*tightest)).collect()
 }

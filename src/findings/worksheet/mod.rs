@@ -8,6 +8,7 @@ mod bending;
 mod cold_bath;
 mod duty;
 mod fit;
+mod rings;
 mod sheet;
 mod slices;
 mod stack;
@@ -30,6 +31,7 @@ pub fn worked(findings: &Findings) -> (Vec<WorksheetSection>, Vec<String>) {
     let units = Units::of(findings.joint.display);
     if findings.joint.rings.len() > 2 {
         stack::write(&mut sheet, findings, &units);
+        rings::write(&mut sheet, findings, &units);
         bending::write(&mut sheet, findings, &units);
     } else if !findings.joint.slices.is_empty() {
         slices::write(&mut sheet, findings, &units);
