@@ -203,3 +203,13 @@ fn materials_in_place_are_read_and_refused_at_their_place() {
         ],
     );
 }
+
+#[test]
+fn a_relief_leaves_something_of_a_bearing() {
+    let text = "joint_file: 1\nrelief: 20 mm\nshaft: {material: C45+N}\n\
+                hub: {bearing: {bore: 50 mm, outside_diameter: 90 mm, width: 20 mm}}\nfit: k6\n";
+    let found = faults(text);
+    assert_eq!(found.len(), 1, "{found:?}");
+    assert_eq!(place(&found[0]), (2, 9, 5));
+    assert_eq!(found[0].message, "relief 20 mm leaves nothing of the width 20 mm of the bearing");
+}

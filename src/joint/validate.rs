@@ -185,10 +185,14 @@ fn lengths(
         return (length, Some(0.0));
     };
     let relief = draft.not_negative(written);
-    if let (Some(length_value), Some(relief_value), Some(length_written)) = (length, relief, &file.length)
+    if let (Some(length_value), Some(relief_value)) = (length, relief)
         && relief_value >= length_value
     {
-        draft.refuse(written, &format!("leaves nothing of the {}", draft.called(length_written)));
+        let whole = match &file.length {
+            Some(given) => draft.called(given),
+            None => format!("width {} of the bearing", self::written(Kind::Length, length_value)),
+        };
+        draft.refuse(written, &format!("leaves nothing of the {whole}"));
         return (length, None);
     }
     (length, relief)
