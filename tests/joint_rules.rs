@@ -210,6 +210,18 @@ fn a_relief_leaves_something_of_a_bearing() {
                 hub: {bearing: {bore: 50 mm, outside_diameter: 90 mm, width: 20 mm}}\nfit: k6\n";
     let found = faults(text);
     assert_eq!(found.len(), 1, "{found:?}");
-    assert_eq!(place(&found[0]), (2, 9, 5));
+    assert_eq!(place(&found[0]), Some((2, 9, 5)));
     assert_eq!(found[0].message, "relief 20 mm leaves nothing of the width 20 mm of the bearing");
+}
+
+#[test]
+fn the_rings_of_a_bearing_differ_by_what_they_can() {
+    let text = "joint_file: 1\nshaft: {material: C45+N}\nhub: {bearing: {bore: 50 mm, outside_diameter: 90 mm, \
+                width: 20 mm, inner_hotter_by: 5000 K}}\nfit: k6\n";
+    let found = faults(text);
+    assert_eq!(found.len(), 1, "{found:?}");
+    assert_eq!(place(&found[0]), Some((3, 86, 6)));
+    let told =
+        "inner_hotter_by 5000 K is more than the rings of a bearing differ by: at most 100 K either way";
+    assert_eq!(found[0].message, told);
 }

@@ -141,9 +141,20 @@ fn word<L: crate::joint::written::Leaf>(
     }
 }
 
+/// Rings that differ by more have lost their clearance long before, K; common practice, no source.
+const MOST_APART: f64 = 100.0;
+
 fn hotter(draft: &mut Draft<'_>, section: &str, keys: &BearingKeys) -> Option<Sourced<f64>> {
     match &keys.inner_hotter_by {
-        Some(given) => draft.value(given).map(|value| Sourced::new(value, "joint file")),
+        Some(given) => {
+            let value = draft.value(given)?;
+            if value.abs() > MOST_APART {
+                draft
+                    .refuse(given, "is more than the rings of a bearing differ by: at most 100 K either way");
+                return None;
+            }
+            Some(Sourced::new(value, "joint file"))
+        }
         None => {
             draft.default(format!("{section}.bearing.inner_hotter_by"), "10 K", HOTTER.1);
             Some(Sourced::new(HOTTER.0, HOTTER.1))
