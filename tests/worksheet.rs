@@ -50,7 +50,8 @@ fn every_formula_of_every_example_gives_its_printed_result() {
     println!("{formulas} formulas worked");
 }
 
-/// What no example has: pressures from outside, relaxation, a hub strained further at work, a brittle bush.
+/// What no example has: pressures from outside, relaxation, a hub strained further at work, a brittle bush, a warm shop with
+/// states hotter, colder and as warm.
 #[test]
 fn every_line_agrees_in_rarer_cases() {
     let head = "joint_file: 1\ndiameter: 50 mm\nlength: 40 mm\n";
@@ -62,6 +63,13 @@ fn every_line_agrees_in_rarer_cases() {
          shaft: {lower: 120 um, upper: 130 um}}\nrequire: {allow: plastic}\nduty: [{state: cold, torque: 10 N.m, \
          hub_temperature: 0 degC}, {state: hot, torque: 10 N.m, hub_temperature: 50 degC, relaxation: 0.9}]\n",
         "shaft: {name: bush, material: EN-GJL-250, bore: 36 mm}\nhub: {material: C45+N, outer_diameter: 90 mm}\nfit: H7/s6\n",
+        "shaft: {material: 42CrMo4+QT, bore: 20 mm}\nhub: {material: EN-AW-6082-T6, outer_diameter: 90 mm}\nfit: H7/x7\n\
+         assembly: {shop_temperature: 35 degC}\nduty:\n  - {state: hot, torque: 10 N.m, temperature: 90 degC, speed: 3000 rpm, \
+         inner_pressure: 20 MPa, outer_pressure: 5 MPa}\n  - {state: gradient, torque: 10 N.m, inner_temperature: 90 degC, \
+         outer_temperature: 40 degC, speed: 2000 rpm}\n  - {state: shop, torque: 10 N.m}\n  - {state: reference, torque: 10 N.m, \
+         temperature: 20 degC}\n",
+        "shaft: {material: C45+N}\nhub: {material: C45+N, steps: [{length: 20 mm, outer_diameter: 90 mm}, {length: 20 mm, \
+         outer_diameter: 110 mm}]}\nfit: H7/s6\nassembly: {shop_temperature: 30 degC}\n",
     ];
     for case in cases {
         let findings = common::findings_of(&format!("{head}{case}"));
