@@ -243,6 +243,11 @@ fn a_curve_may_rise_when_that_is_meant_and_tables_need_no_row_at_20_degrees() {
     let table = with("{moduli: [[-80 degC, 202 GPa], [120 degC, 194 GPa]]}");
     assert_eq!(table.youngs_modulus_at(293.15), Ok(200e9));
     assert!((table.youngs_modulus_at(393.15).unwrap() / (200e9 * 194.0 / 198.0) - 1.0).abs() < 1e-12);
+    // 68 °F is 20 °C, as a first row too.
+    let fahrenheit = with("{cold: carbon steel, moduli: [[68 degF, 29000 ksi], [212 degF, 28400 ksi]]}");
+    assert_eq!(fahrenheit.youngs_modulus_at(293.15), Ok(200e9));
+    assert_eq!(fahrenheit.youngs_modulus_at(273.15 + 20.0 + 1e-9).map(|e| (e / 1e9).round()), Ok(200.0));
+    assert!((fahrenheit.youngs_modulus_at(373.15).unwrap() / (200e9 * 284.0 / 290.0) - 1.0).abs() < 1e-9);
     let joined = with("{cold: carbon steel, ratios: [[20 degC, 1], [100 degC, 0.97]]}");
     assert!((joined.youngs_modulus_at(198.15).unwrap() / 200e9 - 209.0 / 202.3).abs() < 0.001);
     assert!(joined.youngs_modulus_at(400.0).is_err());

@@ -2,7 +2,8 @@
 //!
 //! The numbers are those of [`compute`](crate::findings::compute), to rounding: the same formulas with what does
 //! not change from pair to pair taken out. The contact pressure is linear in the interference until the parts
-//! open, and every stress is linear in the pressure; temperature, speed and pressures from outside shift both.
+//! open, as steeply as the moduli at the temperatures of the condition make it, and every stress is linear in the
+//! pressure; temperature, speed and pressures from outside shift both.
 //!
 //! Covered are two rings of one section each that stay elastic. More rings, stepped parts and a hub that may yield
 //! by design are left to the full computation.

@@ -139,7 +139,7 @@ impl ModulusTable {
         }
         if let Some(name) = &self.cold {
             let shared = modulus_curves::named(name).map_err(|error| error.under("cold"))?;
-            if let Some(first) = rows.first().filter(|first| first.kelvin < REFERENCE_TEMPERATURE - 1e-6) {
+            if let Some(first) = rows.first().filter(|first| first.kelvin < REFERENCE_TEMPERATURE) {
                 let error =
                     MaterialError::new("`cold` gives the modulus below 20 degC: the table begins there");
                 return Err(located(error, &first.path));
@@ -159,8 +159,12 @@ impl ModulusTable {
 
     /// The key of the table, the value that it should have at 20 °C where that is known, and its rows.
     fn rows(&self, own: Option<f64>) -> Result<(&'static str, Option<f64>, Vec<Row>), MaterialError> {
+        // 68 °F is 20 °C but for its last digit.
+        let snapped = |kelvin: f64| {
+            if (kelvin - REFERENCE_TEMPERATURE).abs() < 1e-6 { REFERENCE_TEMPERATURE } else { kelvin }
+        };
         let row = |key: &'static str, index: usize, kelvin: f64, value: f64| Row {
-            kelvin,
+            kelvin: snapped(kelvin),
             value,
             path: vec![key.into(), index.into()],
         };
@@ -219,8 +223,7 @@ fn at_reference(key: &'static str, rows: &[Row]) -> Result<f64, MaterialError> {
     let curve =
         MonotoneCubic::new(&points).map_err(|error| MaterialError::new(error.to_string()).under(key))?;
     let (from, to) = curve.range();
-    let near = [from, to].into_iter().find(|end| (REFERENCE_TEMPERATURE - end).abs() < 1e-6);
-    curve.value(near.unwrap_or(REFERENCE_TEMPERATURE)).map_err(|_| {
+    curve.value(REFERENCE_TEMPERATURE).map_err(|_| {
         let text = |kelvin| written(Kind::Temperature, kelvin);
         MaterialError::new(format!(
             "the table does not reach 20 degC: it runs from {} to {}",
