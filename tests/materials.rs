@@ -77,6 +77,9 @@ fn every_number_has_a_source() {
     };
     for (file, material) in shipped() {
         check(file, "youngs_modulus", &material.youngs_modulus.source);
+        if let Some(curve) = &material.youngs_modulus_curve {
+            check(file, "youngs_modulus_curve", &curve.source);
+        }
         check(file, "poisson", &material.poisson.source);
         check(file, "density", &material.density.source);
         check(file, "expansion", &material.expansion.source);

@@ -173,6 +173,42 @@ fn the_kernel_gives_what_the_full_computation_gives() {
     );
 }
 
+/// What random joints do not reach: temperatures at which Young's modulus has lost up to a quarter, in a warm shop, with a
+/// gradient, turning, under pressure.
+#[test]
+fn the_kernel_follows_the_moduli_of_hot_and_cold_states() {
+    let library = Library::built_in();
+    let mut lost: f64 = 1.0;
+    for (shaft, hub, hot) in [
+        ("42CrMo4+QT", "EN-AW-6082-T6", 230),
+        ("X5CrNi18-10", "C45+N", 350),
+        ("Ti-6Al-4V", "Ti-6Al-4V", 300),
+        ("C45+N", "EN-GJL-250", 250),
+    ] {
+        let text = format!(
+            "joint_file: 1\ndiameter: 60 mm\nlength: 60 mm\nshaft: {{material: {shaft}, bore: 20 mm, section: 30 mm}}\n\
+             hub: {{material: {hub}, outer_diameter: 120 mm, section: 20 mm}}\n\
+             fit: {{hole: H7, shaft: {{lower: 400 um, upper: 420 um}}}}\nassembly: {{shop_temperature: 35 degC}}\nduty:\n  \
+             - {{state: hot, torque: 10 N.m, temperature: {hot} degC}}\n  - {{state: uneven, torque: 10 N.m, shaft_temperature: \
+             100 degC, hub_temperature: {hot} degC, speed: 3000 rpm}}\n  - {{state: gradient, axial_force: 1 kN, inner_temperature: \
+             {hot} degC, outer_temperature: 60 degC, inner_pressure: 30 MPa}}\n  - {{state: frost, torque: 10 N.m, temperature: -60 \
+             degC, outer_pressure: 10 MPa}}\n"
+        );
+        let joint = hubgrip::joint::read::read(&text, std::path::Path::new("hot.yaml"), &[], &library);
+        let joint = joint.unwrap_or_else(|faults| panic!("{text}\n{faults:?}"));
+        let findings = compute(joint.clone()).unwrap();
+        let plain = PlainJoint::of(&joint).unwrap();
+        same_findings(&plain, &findings);
+        same_verdicts(&plain, &joint, &findings);
+        for (condition, duty) in plain.states.iter().zip(&findings.duty) {
+            same(condition.shaft_modulus, duty.youngs_moduli[0], 0.0);
+            same(condition.hub_modulus, duty.youngs_moduli[1], 0.0);
+            lost = lost.min(condition.hub_modulus / joint.rings[1].material.youngs_modulus.value);
+        }
+    }
+    assert!(lost < 0.85, "{lost}");
+}
+
 #[test]
 fn arrays_give_what_single_pairs_give() {
     let library = Library::built_in();

@@ -12,7 +12,7 @@ use hubgrip::material::Range;
 use hubgrip::material::library::Library;
 use hubgrip::population::distribution::{Distribution, normal};
 use hubgrip::population::scatter::analysis::Analysis;
-use hubgrip::population::scatter::model::{Arithmetic, Limit, Model, Population, State};
+use hubgrip::population::scatter::model::{Arithmetic, Limit, Model, Population, State, Stiffness};
 use hubgrip::population::scatter::simulation::Simulation;
 use hubgrip::population::scatter::understood::understood;
 use hubgrip::population::scatter::{Quantity, Settings, scatter};
@@ -48,7 +48,14 @@ fn model(hole: Distribution, shaft: Distribution, friction: Distribution, loss: 
         hub_stress: 3.0625f64.sqrt() / 0.75,
         chamfer_slope: 5f64.to_radians().tan(),
         shop_thermal: 0.0,
-        states: vec![State { name: "rated".into(), force: 700.0 / 0.025, thermal: 0.0, warm: None }],
+        shop_stiffness: Stiffness::default(),
+        states: vec![State {
+            name: "rated".into(),
+            force: 700.0 / 0.025,
+            thermal: 0.0,
+            stiffness: Stiffness::default(),
+            warm: None,
+        }],
         rings: vec![Limit {
             name: "hub".into(),
             failure: "yield",
@@ -205,6 +212,9 @@ fn both_engines_agree_over_random_populations() {
         model.loss_under_stress = case % 2 == 0;
         model.shop_thermal = f64::from(case % 3) * 1e-6;
         model.states[0].thermal = f64::from(case % 5 - 2) * 3e-6;
+        model.shop_stiffness = Stiffness { hub: 1.0 - 0.01 * f64::from(case % 2), shaft: 1.0 };
+        model.states[0].stiffness =
+            Stiffness { hub: 1.0 - 0.06 * f64::from(case % 3), shaft: 1.0 - 0.03 * f64::from(case % 4) };
         model.population.hub_roughness = random(&mut generator, 6e-6, 0.6e-6);
         model.population.shaft_roughness = random(&mut generator, 4e-6, 0.4e-6);
         if case % 8 == 0 {

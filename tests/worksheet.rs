@@ -51,7 +51,7 @@ fn every_formula_of_every_example_gives_its_printed_result() {
 }
 
 /// What no example has: pressures from outside, relaxation, a hub strained further at work, a brittle bush; bending
-/// of a drilled shaft in inches, of a shaft outside the notch table, of several rings.
+/// of a drilled shaft in inches, of a shaft outside the notch table; a warm shop with states hotter, colder and as warm.
 #[test]
 fn every_line_agrees_in_rarer_cases() {
     let head = "joint_file: 1\ndiameter: 50 mm\nlength: 40 mm\n";
@@ -69,6 +69,13 @@ fn every_line_agrees_in_rarer_cases() {
         "shaft: {material: {kind: ductile, youngs_modulus: 210 GPa, poisson: 0.3, density: 7850 kg/m3, expansion: 12e-6 /K, \
          yield_strength: 1100 MPa, tensile_strength: 1300 MPa}, roughness: Rz 0.5 um}\nhub: {material: C45+N, outer_diameter: 90 \
          mm}\nfit: H7/s6\nduty: [{state: one, bending_moment: 90 N.m, rotating_bending: yes}]\n",
+        "shaft: {material: 42CrMo4+QT, bore: 20 mm}\nhub: {material: EN-AW-6082-T6, outer_diameter: 90 mm}\nfit: H7/x7\n\
+         assembly: {shop_temperature: 35 degC}\nduty:\n  - {state: hot, torque: 10 N.m, temperature: 90 degC, speed: 3000 rpm, \
+         inner_pressure: 20 MPa, outer_pressure: 5 MPa}\n  - {state: gradient, torque: 10 N.m, inner_temperature: 90 degC, \
+         outer_temperature: 40 degC, speed: 2000 rpm}\n  - {state: shop, torque: 10 N.m}\n  - {state: reference, torque: 10 N.m, \
+         temperature: 20 degC}\n",
+        "shaft: {material: C45+N}\nhub: {material: C45+N, steps: [{length: 20 mm, outer_diameter: 90 mm}, {length: 20 mm, \
+         outer_diameter: 110 mm}]}\nfit: H7/s6\nassembly: {shop_temperature: 30 degC}\n",
     ];
     for case in cases {
         let findings = common::findings_of(&format!("{head}{case}"));

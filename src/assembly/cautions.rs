@@ -391,6 +391,7 @@ mod tests {
             kind,
             condition: condition.map(str::to_owned),
             youngs_modulus: Sourced::new(200e9, "test"),
+            youngs_modulus_curve: None,
             poisson: Sourced::new(0.3, "test"),
             density: Sourced::new(7800.0, "test"),
             expansion: Expansion::from_mean(12e-6, 77.0, 700.0, "test").unwrap(),

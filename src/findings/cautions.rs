@@ -1,7 +1,7 @@
 //! Cautions and notes that the numbers of a joint call for.
 
-use super::{Caution, Findings, bearing_of, fatigue, joining_cautions};
-use crate::joint::{Allow, DutyState};
+use super::{Caution, Findings, bearing_of, fatigue, joining_cautions, modulus_notes};
+use crate::joint::Allow;
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::quantity::{Measure, show};
@@ -163,28 +163,6 @@ fn elastic_all_the_same(findings: &Findings) -> Option<String> {
     Some(format!("The hub may yield by design but is calculated as elastic: {why}."))
 }
 
-/// Above this the fall of Young's modulus is worth a note: 100 °C, where that of steel has lost 1.4 %.
-const HOT: f64 = 373.15;
-
-fn hot_modulus(findings: &Findings) -> Option<String> {
-    let hottest = |state: &DutyState| state.temperatures.iter().copied().fold(0.0, f64::max);
-    let states: Vec<&str> = findings
-        .joint
-        .duty
-        .iter()
-        .filter(|state| hottest(state) > HOT)
-        .map(|state| state.name.as_str())
-        .collect();
-    if states.is_empty() {
-        return None;
-    }
-    Some(format!(
-        "Young's modulus is that of 20 °C in every state. That of steel is 1.4 % less at 100 °C, 5 % at 200 °C, 9 % at \
-         300 °C (SEW 310), and the pressure of a joint with it: mind that in {}.",
-        states.join(", ")
-    ))
-}
-
 /// Why quantities do not exist, and what is not covered.
 pub(super) fn notes(findings: &Findings) -> Vec<String> {
     let mut notes = Vec::new();
@@ -214,7 +192,7 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
     }
     notes.extend(elastic_all_the_same(findings));
     notes.extend(fatigue::note(findings));
-    notes.extend(hot_modulus(findings));
+    notes.extend(modulus_notes::notes(findings));
     notes.extend(findings.assembly.times.gaps.iter().cloned());
     notes.push(
         "Covered: rings in plane stress, elastic unless the hub may yield by design, with rotation, temperature and steady \

@@ -2,6 +2,7 @@
 
 use thiserror::Error;
 
+use super::condition::Condition;
 use super::kernel::{Kernel, pair_interferences};
 use super::softening::Parts;
 use super::{
@@ -34,6 +35,14 @@ pub enum FindingsError {
     /// A root was not found.
     #[error(transparent)]
     Root(#[from] RootError),
+    /// A temperature lies outside the curve of Young's modulus of a material.
+    #[error("the curve of Young's modulus of {material} does not reach the temperature asked for: {cause}")]
+    Modulus {
+        /// Name of the material.
+        material: String,
+        /// The range and the temperature.
+        cause: InterpolationError,
+    },
     /// A temperature lies outside the expansion curve of a material.
     #[error("the expansion curve of {material} does not reach the temperature asked for: {cause}")]
     Expansion {
@@ -68,6 +77,7 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         .iter()
         .map(|state| {
             Ok(DutyFindings {
+                youngs_moduli: Condition::of_state(&joint, state)?.youngs_moduli(&joint)?,
                 loosest: kernel.state(state, &pairs.loosest, state.relaxation)?,
                 tightest: kernel.state(state, &pairs.tightest, FRESH)?,
             })

@@ -3,6 +3,7 @@
 use super::kernel::{Kernel, PairInterference};
 use super::{DutyFindings, FindingsError};
 use crate::joint::Joint;
+use crate::mechanics::ring::RingLoad;
 use crate::numerics::root;
 
 /// Lines of equal pressure over speed and hub temperature, for the loosest pair with the shaft at shop temperature.
@@ -57,25 +58,44 @@ pub struct EnvelopeState {
 
 const POINTS: usize = 60;
 
-/// The pressure of two rings, linear in ω² and in the free strain of the hub.
+/// The pressure of two rings at any speed and hub temperature, with the hub's modulus at that temperature.
+///
+/// p = (U/2 + d/2 (ε_s − ε_h) − ω² (v_h/k − v_s)) / (F_s + F_h/k)
+///
+/// U interference, ε free strains, v growth of the free faces by unit speed, F radial flexibility of shaft and hub (m/Pa),
+/// the hub's v and F at the shop temperature, k its modulus over that at the shop temperature. The pressure falls as the
+/// hub grows warmer for as long as the joint grips, by expansion and by the fall of k alike.
 struct Map<'a> {
     joint: &'a Joint,
-    at_rest: f64,
-    by_square_speed: f64,
-    by_strain: f64,
+    /// Radial overlap at rest at the shop temperature, m.
+    overlap: f64,
+    hub_growth: f64,
+    shaft_growth: f64,
+    hub_flexibility: f64,
+    shaft_flexibility: f64,
+    /// Free strain and modulus of the hub at the shop temperature.
+    shop_strain: f64,
+    shop_modulus: f64,
     from: f64,
     to: f64,
 }
 
 impl Map<'_> {
-    /// Hub temperature that leaves this pressure at this speed; none outside the expansion curve.
+    /// Pressure at a speed (rad/s) and a hub temperature (K); negative beyond the opening, none outside the curves.
+    fn pressure(&self, speed: f64, temperature: f64) -> Option<f64> {
+        let material = &self.joint.shaft_and_hub().1.material;
+        let strain = material.expansion.strain(temperature).ok()? - self.shop_strain;
+        let softer = self.shop_modulus / material.youngs_modulus_at(temperature).ok()?;
+        let grown = speed * speed * (self.hub_growth * softer - self.shaft_growth);
+        let overlap = self.overlap - 0.5 * self.joint.diameter * strain - grown;
+        Some(overlap / (self.shaft_flexibility + self.hub_flexibility * softer))
+    }
+
+    /// Hub temperature that leaves this pressure at this speed; none outside the hub's curves.
     fn temperature(&self, pressure: f64, speed: f64) -> Option<f64> {
-        let wanted = (self.at_rest - self.by_square_speed * speed * speed - pressure) / self.by_strain;
-        let expansion = &self.joint.shaft_and_hub().1.material.expansion;
-        let start = expansion.strain(self.from).ok()?;
         let excess =
-            |temperature: f64| expansion.strain(temperature).map_or(f64::NAN, |e| e - start - wanted);
-        let (low, high) = (expansion.range().0, self.to);
+            |temperature: f64| self.pressure(speed, temperature).map_or(f64::NAN, |found| pressure - found);
+        let (low, high) = (self.joint.shaft_and_hub().1.material.temperature_range().0, self.to);
         root::bracketed(excess, low, high, 1e-9).ok()
     }
 
@@ -97,26 +117,31 @@ pub(super) fn envelope(
     if joint.rings.len() != 2 || !joint.slices.is_empty() {
         return Ok(None);
     }
-    let stack = kernel.stack(&loosest.grip, &kernel.shop);
+    let stack = kernel.stack(&loosest.grip, &kernel.shop)?;
     let influence = stack.influence()?;
-    let mut turning = stack.clone();
-    turning.angular_speed = 1.0;
-    let turning = turning.influence()?;
     let first = |values: &nalgebra::DVector<f64>| values.get(0).copied().unwrap_or(0.0);
-    let flexibility = first(&influence.diagonal);
-    let at_rest = -first(&influence.free_gaps) / flexibility;
-    if at_rest <= 0.0 {
+    let (flexibility, overlap) = (first(&influence.diagonal), -first(&influence.free_gaps));
+    let [inside, outside] = stack.rings.as_slice() else { return Ok(None) };
+    if overlap <= 0.0 {
         return Ok(None);
     }
+    let turning = RingLoad { angular_speed: 1.0, ..RingLoad::default() };
+    let in_bore = RingLoad { inner_pressure: 1.0, ..RingLoad::default() };
     let (_, hub) = joint.shaft_and_hub();
+    let hub_flexibility = outside.displacement_at(&in_bore, outside.inner_radius())?;
     let map = Map {
         joint,
-        at_rest,
-        by_square_speed: (first(&turning.free_gaps) - first(&influence.free_gaps)) / flexibility,
-        by_strain: 0.5 * joint.diameter / flexibility,
+        overlap,
+        hub_growth: outside.displacement_at(&turning, outside.inner_radius())?,
+        shaft_growth: inside.displacement_at(&turning, inside.outer_radius())?,
+        hub_flexibility,
+        shaft_flexibility: flexibility - hub_flexibility,
+        shop_strain: stack.free_strain.last().copied().unwrap_or(0.0),
+        shop_modulus: outside.youngs_modulus(),
         from: joint.assembly.shop_temperature,
-        to: hub.material.expansion.range().1,
+        to: hub.material.temperature_range().1,
     };
+    let at_rest = overlap / flexibility;
     let fastest = joint.duty.iter().map(|state| state.speed).fold(0.0, f64::max);
     let speed_to = match loosening_speed {
         Some(speed) if fastest > 0.0 => (1.05 * speed).min(4.0 * fastest),
@@ -124,7 +149,7 @@ pub(super) fn envelope(
         None if fastest > 0.0 => 2.0 * fastest,
         None => return Ok(None),
     };
-    let lines = lines(&map, duty, speed_to);
+    let lines = lines(&map, duty, at_rest, speed_to);
     let states = states(&map, joint, duty);
     let hottest = lines.iter().flat_map(|line| &line.points).map(|point| point.1);
     let hottest = hottest.chain(states.iter().map(|state| state.temperature)).fold(map.from + 20.0, f64::max);
@@ -132,10 +157,10 @@ pub(super) fn envelope(
     Ok(Some(Envelope { speed_to, temperatures: (coldest, hottest), lines, states }))
 }
 
-fn lines(map: &Map<'_>, duty: &[DutyFindings], speed_to: f64) -> Vec<EnvelopeLine> {
+fn lines(map: &Map<'_>, duty: &[DutyFindings], at_rest: f64, speed_to: f64) -> Vec<EnvelopeLine> {
     let mut lines: Vec<EnvelopeLine> = [0.75, 0.5, 0.25]
         .into_iter()
-        .map(|share| map.line(EnvelopeMeaning::Share(share), share * map.at_rest, speed_to))
+        .map(|share| map.line(EnvelopeMeaning::Share(share), share * at_rest, speed_to))
         .collect();
     // Safety against slip is proportional to the pressure, so a state slips at its pressure over its safety.
     let slips = duty

@@ -1,5 +1,6 @@
 //! One pair of parts in one condition: pressures, stresses, capacity, slice by slice along the joint.
 
+use super::condition::{Condition, section};
 use super::{
     BendingFindings, FaceStress, FindingsError, InterfaceFindings, PairFindings, RingStress, SliceFindings,
     StateFindings, assembly_of,
@@ -64,63 +65,6 @@ pub fn after_smoothing(interference: f64, loss: f64) -> f64 {
     if interference <= 0.0 { interference } else { (interference - loss).max(0.0) }
 }
 
-/// What acts on the parts besides their interference.
-#[derive(Debug, Clone, PartialEq, Default)]
-pub(super) struct Condition {
-    /// Free strain of each ring at its inner face.
-    pub(super) strain: Vec<f64>,
-    /// Rise of the free strain to the outer face; empty without a gradient.
-    pub(super) rise: Vec<f64>,
-    /// Angular speed, rad/s.
-    pub(super) speed: f64,
-    /// Pressure inside the innermost ring, Pa.
-    pub(super) inner_pressure: f64,
-    /// Pressure round the outermost ring, Pa.
-    pub(super) outer_pressure: f64,
-}
-
-impl Condition {
-    /// At rest, every part at this temperature (K).
-    pub(super) fn at_rest(joint: &Joint, temperature: f64) -> Result<Self, FindingsError> {
-        Ok(Self { strain: free_strains(joint, &vec![temperature; joint.rings.len()])?, ..Self::default() })
-    }
-
-    /// A service state.
-    pub(super) fn of_state(joint: &Joint, state: &DutyState) -> Result<Self, FindingsError> {
-        let strain = free_strains(joint, &state.temperatures)?;
-        let rise = if state.temperature_rises.is_empty() {
-            Vec::new()
-        } else {
-            let outside = state.temperatures.iter().zip(&state.temperature_rises);
-            let outside: Vec<f64> = outside.map(|(inner, rise)| inner + rise).collect();
-            let outside = free_strains(joint, &outside)?;
-            outside.iter().zip(&strain).map(|(outer, inner)| outer - inner).collect()
-        };
-        Ok(Self {
-            strain,
-            rise,
-            speed: state.speed,
-            inner_pressure: state.inner_pressure,
-            outer_pressure: state.outer_pressure,
-        })
-    }
-}
-
-/// Free thermal strain of each ring at its temperature.
-pub(super) fn free_strains(joint: &Joint, temperatures: &[f64]) -> Result<Vec<f64>, FindingsError> {
-    joint
-        .rings
-        .iter()
-        .zip(temperatures)
-        .map(|(ring, temperature)| {
-            ring.material
-                .expansion
-                .strain(*temperature)
-                .map_err(|cause| FindingsError::Expansion { material: ring.material.name.clone(), cause })
-        })
-        .collect()
-}
-
 /// A piece of the joint along its length with the rings it has there.
 struct Piece {
     /// Length that carries, m.
@@ -149,20 +93,43 @@ impl<'a> Kernel<'a> {
     }
 
     /// The rings of the first piece; the only one unless the joint is stepped.
-    pub(super) fn stack(&self, interference: &[f64], condition: &Condition) -> Stack {
-        stack_of(self.pieces.first().map_or(&[], |piece| &piece.sections), interference, condition)
+    pub(super) fn stack(&self, interference: &[f64], condition: &Condition) -> Result<Stack, FindingsError> {
+        self.stack_of(self.pieces.first().map_or(&[], |piece| &piece.sections), interference, condition)
     }
 
     /// The rings of every piece.
-    pub(super) fn stacks(&self, interference: &[f64], condition: &Condition) -> Vec<Stack> {
-        self.pieces.iter().map(|piece| stack_of(&piece.sections, interference, condition)).collect()
+    pub(super) fn stacks(
+        &self,
+        interference: &[f64],
+        condition: &Condition,
+    ) -> Result<Vec<Stack>, FindingsError> {
+        self.pieces.iter().map(|piece| self.stack_of(&piece.sections, interference, condition)).collect()
     }
 
-    fn solve(&self, interference: &[f64], condition: &Condition) -> Result<Vec<Solved>, MechanicsError> {
+    fn stack_of(
+        &self,
+        sections: &[RingSection],
+        interference: &[f64],
+        condition: &Condition,
+    ) -> Result<Stack, FindingsError> {
+        let rings = self.joint.rings.iter().zip(sections).enumerate();
+        let rings = rings.map(|(index, (ring, section))| condition.warm(index, ring, *section));
+        Ok(Stack {
+            rings: rings.collect::<Result<_, _>>()?,
+            interference: interference.to_vec(),
+            free_strain: condition.strain.clone(),
+            strain_rise: condition.rise.clone(),
+            inner_pressure: condition.inner_pressure,
+            outer_pressure: condition.outer_pressure,
+            angular_speed: condition.speed,
+        })
+    }
+
+    fn solve(&self, interference: &[f64], condition: &Condition) -> Result<Vec<Solved>, FindingsError> {
         self.pieces
             .iter()
             .map(|piece| {
-                let stack = stack_of(&piece.sections, interference, condition);
+                let stack = self.stack_of(&piece.sections, interference, condition)?;
                 let solution = stack.solve()?;
                 Ok(Solved { length: piece.length, stack, solution })
             })
@@ -170,11 +137,7 @@ impl<'a> Kernel<'a> {
     }
 
     /// Mean contact pressure over the length at the interface joined last.
-    pub(super) fn pressure(
-        &self,
-        interference: &[f64],
-        condition: &Condition,
-    ) -> Result<f64, MechanicsError> {
+    pub(super) fn pressure(&self, interference: &[f64], condition: &Condition) -> Result<f64, FindingsError> {
         Ok(mean_pressure(&self.solve(interference, condition)?, self.joint.last_interface()))
     }
 
@@ -346,9 +309,10 @@ impl<'a> Kernel<'a> {
         })
     }
 
-    /// Stresses of the rings when only these interferences act, cold and at rest, with the pressure they make.
+    /// Stresses of the rings when only these interferences act, at rest, with the pressure they make: no free strain,
+    /// but the moduli of the shop temperature.
     pub(super) fn cold(&self, interference: &[f64]) -> Result<(f64, Vec<RingStress>), FindingsError> {
-        let cold = Condition { strain: vec![0.0; self.joint.rings.len()], ..Condition::default() };
+        let cold = Condition { strain: vec![0.0; self.joint.rings.len()], ..self.shop.clone() };
         let solved = self.solve(interference, &cold)?;
         Ok((mean_pressure(&solved, 0), self.stresses(&solved)?))
     }
@@ -376,28 +340,6 @@ fn pieces(joint: &Joint) -> Result<Vec<Piece>, FindingsError> {
             })
         })
         .collect()
-}
-
-fn section(ring: &Ring, inner_diameter: f64, outer_diameter: f64) -> Result<RingSection, MechanicsError> {
-    RingSection::new(
-        0.5 * inner_diameter,
-        0.5 * outer_diameter,
-        ring.material.youngs_modulus.value,
-        ring.material.poisson.value,
-        ring.material.density.value,
-    )
-}
-
-fn stack_of(sections: &[RingSection], interference: &[f64], condition: &Condition) -> Stack {
-    Stack {
-        rings: sections.to_vec(),
-        interference: interference.to_vec(),
-        free_strain: condition.strain.clone(),
-        strain_rise: condition.rise.clone(),
-        inner_pressure: condition.inner_pressure,
-        outer_pressure: condition.outer_pressure,
-        angular_speed: condition.speed,
-    }
 }
 
 fn mean_pressure(solved: &[Solved], interface: usize) -> f64 {

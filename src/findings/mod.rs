@@ -5,11 +5,13 @@ mod bearing_of;
 mod cautions;
 pub mod cold_bath;
 mod compute;
+mod condition;
 mod envelope;
 pub mod expression;
 mod fatigue;
 mod joining_cautions;
 mod kernel;
+mod modulus_notes;
 pub mod press_work;
 mod service;
 mod softening;
@@ -139,6 +141,8 @@ pub struct FaceStress {
 /// One service state at both extremes.
 #[derive(Debug, Clone, PartialEq)]
 pub struct DutyFindings {
+    /// Young's modulus of each ring, Pa, at its temperature; with a radial gradient at the mean temperature over its section.
+    pub youngs_moduli: Vec<f64>,
     /// The loosest pair.
     pub loosest: StateFindings,
     /// The tightest pair.

@@ -1,8 +1,9 @@
 //! The joint at work: what loosens it, and what yielding by design gives.
 
+use super::condition::Condition;
 use super::envelope::{Envelope, envelope};
 use super::fatigue::{Fatigue, fatigue};
-use super::kernel::{Condition, Kernel, PairInterference, free_strains};
+use super::kernel::{Kernel, PairInterference};
 use super::{DutyFindings, FindingsError, InterfaceFindings, PairFindings, RingStress};
 use crate::joint::Joint;
 use crate::material::Kind;
@@ -11,6 +12,7 @@ use crate::mechanics::criteria::DuctileCriterion;
 use crate::mechanics::finite_length::{LengthFactors, ShaftEnds, length_factors};
 use crate::mechanics::governing::{Extreme, StackQuantity, StressMeasure};
 use crate::mechanics::plastic::{HubYield, PlasticJoint, PlasticLimits, PlasticState};
+use crate::mechanics::stack::Stack;
 use crate::mechanics::two_rings::TwoRings;
 use crate::tolerance::Extremes;
 
@@ -53,9 +55,9 @@ pub struct GoverningRing {
 pub struct ThinLiner {
     /// Wall over mean diameter.
     pub slenderness: f64,
-    /// Greatest contact pressure of the tightest pair, at the shop temperature and in every state.
+    /// Contact pressure of the tightest pair at the shop temperature or in the state that brings it nearest to buckling.
     pub pressure: f64,
-    /// Pressure below which the wall cannot buckle even by itself.
+    /// Pressure below which the wall cannot buckle even by itself, with the modulus that it has there.
     pub free: f64,
     /// Pressure at which it buckles inwards though the housing holds it round.
     pub housed: f64,
@@ -131,7 +133,7 @@ pub(super) fn service(
     let simple = joint.rings.len() == 2 && joint.slices.is_empty() && shaft.inner_diameter == 0.0;
     Ok(ServiceFindings {
         envelope: envelope(joint, kernel, &pairs.loosest, duty, loosening_speed)?,
-        liner: liner(joint, tightest, duty),
+        liner: liner(joint, kernel, tightest, duty)?,
         loosening,
         plastic,
         steps: steps(joint, kernel, &pairs.tightest)?,
@@ -152,9 +154,9 @@ fn loosening(
     kernel: &Kernel<'_>,
     loosest: &PairInterference,
 ) -> Result<Vec<Loosening>, FindingsError> {
-    let stack = kernel.stack(&loosest.grip, &kernel.shop);
+    let stack = kernel.stack(&loosest.grip, &kernel.shop)?;
     let mut speeds = stack.loosening_speeds()?;
-    for other in kernel.stacks(&loosest.grip, &kernel.shop).iter().skip(1) {
+    for other in kernel.stacks(&loosest.grip, &kernel.shop)?.iter().skip(1) {
         for (speed, own) in speeds.iter_mut().zip(other.loosening_speeds()?) {
             *speed = match (*speed, own) {
                 (Some(known), Some(own)) => Some(known.min(own)),
@@ -164,18 +166,24 @@ fn loosening(
     }
     let shop = joint.assembly.shop_temperature;
     let search = |interface: usize, heated: &dyn Fn(usize) -> bool| -> Result<Option<f64>, FindingsError> {
-        let strain = |temperature: f64| -> Vec<f64> {
+        let at = |temperature: f64| {
             let temperatures: Vec<f64> =
                 (0..joint.rings.len()).map(|ring| if heated(ring) { temperature } else { shop }).collect();
-            free_strains(joint, &temperatures).unwrap_or_else(|_| vec![f64::NAN; joint.rings.len()])
+            let hot = Condition::resting(joint, temperatures)
+                .and_then(|condition| kernel.stack(&loosest.grip, &condition));
+            // Within the curves there is no error; beyond them a strain that is no number is refused.
+            Ok(hot.unwrap_or_else(|_| Stack {
+                free_strain: vec![f64::NAN; joint.rings.len()],
+                ..stack.clone()
+            }))
         };
         let moved = joint.rings.iter().enumerate().filter(|(ring, _)| heated(*ring));
-        let limits = moved.map(|(_, ring)| ring.material.expansion.range().1);
+        let limits = moved.map(|(_, ring)| ring.material.temperature_range().1);
         let end = limits.fold(f64::INFINITY, f64::min);
         if end <= shop {
             return Ok(None);
         }
-        Ok(stack.loosening_temperature(interface, strain, shop, end)?)
+        Ok(stack.loosening_temperature_of(interface, at, shop, end)?)
     };
     speeds
         .into_iter()
@@ -226,7 +234,7 @@ fn governing_ring(
     let loosest = loosest_for_stress(pairs);
     let mut worst = GoverningRing { tight: Vec::new(), state: None, equivalent: -1.0, safety: None };
     for (state, condition) in conditions {
-        let stack = kernel.stack(&pairs.tightest.effective, condition);
+        let stack = kernel.stack(&pairs.tightest.effective, condition)?;
         for radius in [0.5 * ring.inner_diameter, 0.5 * ring.outer_diameter] {
             let quantity = StackQuantity::Stress { ring: index, radius, measure };
             let found = stack.governing(&loosest, &pairs.tightest.effective, quantity, Extreme::Greatest)?;
@@ -247,23 +255,35 @@ pub(super) fn loosest_for_stress(pairs: &Extremes<PairInterference>) -> Vec<f64>
     both.map(|(loosest, tightest)| loosest.min(*tightest)).collect()
 }
 
-/// The innermost part as a thin liner.
-fn liner(joint: &Joint, tightest: &PairFindings, duty: &[DutyFindings]) -> Option<ThinLiner> {
-    let bush = joint.rings.first()?;
+/// The innermost part as a thin liner, in the condition that brings it nearest to buckling: both its pressures are
+/// proportional to its modulus there.
+fn liner(
+    joint: &Joint,
+    kernel: &Kernel<'_>,
+    tightest: &PairFindings,
+    duty: &[DutyFindings],
+) -> Result<Option<ThinLiner>, FindingsError> {
+    let Some(bush) = joint.rings.first() else { return Ok(None) };
+    let innermost = |interfaces: &[InterfaceFindings]| interfaces.first().map_or(0.0, |found| found.pressure);
+    let of_shop = kernel.shop.youngs_moduli(joint)?;
+    let states = duty.iter().map(|state| (innermost(&state.tightest.interfaces), &state.youngs_moduli));
+    let shop = (innermost(&tightest.interfaces), &of_shop);
+    let conditions = std::iter::once(shop).chain(states);
+    let conditions =
+        conditions.filter_map(|(pressure, moduli)| moduli.first().map(|modulus| (pressure, *modulus)));
+    let Some((pressure, youngs_modulus)) =
+        conditions.reduce(|worst, own| if own.0 / own.1 > worst.0 / worst.1 { own } else { worst })
+    else {
+        return Ok(None);
+    };
     let liner = Liner {
         inner_diameter: bush.inner_diameter,
         outer_diameter: bush.outer_diameter,
-        youngs_modulus: bush.material.youngs_modulus.value,
+        youngs_modulus,
         poisson: bush.material.poisson.value,
     };
-    let innermost = |interfaces: &[InterfaceFindings]| interfaces.first().map_or(0.0, |found| found.pressure);
-    let states = duty.iter().map(|state| innermost(&state.tightest.interfaces));
-    Some(ThinLiner {
-        slenderness: liner.slenderness(),
-        pressure: states.fold(innermost(&tightest.interfaces), f64::max),
-        free: liner.free_pressure().ok()?,
-        housed: liner.housed_pressure().ok()?,
-    })
+    let (Ok(free), Ok(housed)) = (liner.free_pressure(), liner.housed_pressure()) else { return Ok(None) };
+    Ok(Some(ThinLiner { slenderness: liner.slenderness(), pressure, free, housed }))
 }
 
 /// The elastic-plastic joint; none unless a ductile hub sits on a shaft of two rings of one section.
@@ -281,14 +301,16 @@ pub(super) fn plastic(
     {
         return Ok(None);
     }
+    let moduli = kernel.shop.youngs_moduli(joint)?;
+    let [shaft_youngs_modulus, hub_youngs_modulus] = moduli.as_slice() else { return Ok(None) };
     let solved = PlasticJoint::new(HubYield {
         rings: TwoRings {
             diameter: joint.diameter,
             hub_outer_diameter: hub.outer_diameter,
             shaft_bore: shaft.inner_diameter,
-            hub_youngs_modulus: hub.material.youngs_modulus.value,
+            hub_youngs_modulus: *hub_youngs_modulus,
             hub_poisson: hub.material.poisson.value,
-            shaft_youngs_modulus: shaft.material.youngs_modulus.value,
+            shaft_youngs_modulus: *shaft_youngs_modulus,
             shaft_poisson: shaft.material.poisson.value,
         },
         rule: joint.require.yield_rule,

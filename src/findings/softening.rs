@@ -9,8 +9,16 @@
 //! Perfect plasticity gives Δ. A state that stresses the bore beyond what assembly did (a colder hub, a pressure inside
 //! the shaft) is counted as the interference that stresses the bore alike, and a rotating one as the interference that
 //! leaves the growth that Tresca's hub has at its speed. For von Mises Tresca's increase by rotation is taken.
+//!
+//! Δ is worked with the moduli of the shop temperature, at which the joint is made. It is a length and stays when the
+//! moduli change with the temperature of a state, so the pressure of a state is that of U − Δ on elastic rings with the
+//! moduli of the state. Where a state makes the hub yield further, its growth with moduli E_h', E_s' in place of E_h, E_s
+//! would be at most max(1, E_h/E_h', E_s/E_s') of that with the moduli of the shop: the yield strengths are the same, so the
+//! plastic strain that goes with a stress is 1/E_h', and a shaft that is softer than its hub lets it grow no further than a
+//! hub as soft. That greatest value is counted, which errs to the side of less grip.
 
 use super::compute::{FRESH, FindingsError};
+use super::condition::Condition;
 use super::kernel::{Kernel, PairInterference};
 use super::service::WornHub;
 use super::{DutyFindings, PairFindings, PlasticFindings, RingStress};
@@ -40,7 +48,8 @@ pub(super) fn soften(
 ) -> Result<(), FindingsError> {
     let bore = BoreStress::of(joint, kernel)?;
     let hardest = |pair: &PairInterference, assembled: &PlasticState| {
-        let alike = |state: &DutyState| bore.alike(joint, kernel, &plastic.joint, state, pair);
+        let known = growth(&plastic.joint, assembled.interference).0;
+        let alike = |state: &DutyState| bore.alike(joint, kernel, &plastic.joint, state, pair, known);
         let mut hardest = (assembled.interference, None);
         for (index, state) in joint.duty.iter().enumerate() {
             let alike = alike(state)?;
@@ -144,7 +153,8 @@ impl BoreStress {
         })
     }
 
-    /// The interference at rest that leaves the bore of the hub as grown as a state does.
+    /// The interference at rest that leaves the bore of the hub as grown as a state does; `known` is what it has grown by
+    /// in assembly, m.
     fn alike(
         &self,
         joint: &Joint,
@@ -152,20 +162,32 @@ impl BoreStress {
         plastic: &PlasticJoint,
         state: &DutyState,
         pair: &PairInterference,
+        known: f64,
     ) -> Result<f64, FindingsError> {
         let at_rest = DutyState { speed: 0.0, ..state.clone() };
         let rings = kernel.state(&at_rest, pair, FRESH)?.rings;
         let alike = self.equivalent(&rings) / self.per_interference;
-        if state.speed == 0.0 {
+        let softer = softer(joint, kernel, state)?;
+        if state.speed == 0.0 && softer == 1.0 {
             return Ok(alike);
         }
-        let added = match turned(joint, plastic, alike, state.speed) {
-            Some(added) => added,
-            // Beyond the theory: the hub flows freely, and nothing of the grip is counted on.
-            None => alike,
+        let added = if state.speed == 0.0 {
+            0.0
+        } else {
+            // Beyond the theory the hub flows freely, and nothing of the grip is counted on.
+            turned(joint, plastic, alike, state.speed).unwrap_or(alike)
         };
-        Ok(with_growth(plastic, alike, growth(plastic, alike).0 + added))
+        let grown = growth(plastic, alike).0 + added;
+        let grown = if grown > known * (1.0 + 1e-9) { grown * softer } else { grown };
+        Ok(with_growth(plastic, alike, grown))
     }
+}
+
+/// The greater of the moduli of both rings at the shop temperature over those in a state, one at least.
+fn softer(joint: &Joint, kernel: &Kernel<'_>, state: &DutyState) -> Result<f64, FindingsError> {
+    let (shop, hot) =
+        (kernel.shop.youngs_moduli(joint)?, Condition::of_state(joint, state)?.youngs_moduli(joint)?);
+    Ok(shop.iter().zip(&hot).map(|(shop, hot)| shop / hot).fold(1.0, f64::max))
 }
 
 /// Growth that rotation adds to a hub after Tresca; none where the theory ends.

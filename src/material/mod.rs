@@ -6,6 +6,7 @@
 //! | [`yaml`] | reading such a file, with file, line and column of every fault |
 //! | [`library`] | the records built in and the user's folders; finding a material by any of its names |
 //! | [`curves`] | expansion curves that several materials share |
+//! | [`modulus_curves`] | curves of Young's modulus that several materials share |
 //! | [`friction`] | coefficients of friction by pair, method and lubrication |
 //! | [`roughness`] | usual roughness, Ra and Rz, loss of interference by smoothing |
 //! | [`media`] | cold baths, ovens, oil baths: temperatures and film coefficients |
@@ -14,6 +15,7 @@ pub mod curves;
 pub mod friction;
 pub mod library;
 pub mod media;
+pub mod modulus_curves;
 pub mod record;
 pub mod roughness;
 pub mod yaml;
@@ -21,12 +23,16 @@ pub mod yaml;
 mod catalogue;
 mod expansion;
 mod family;
+mod modulus;
 
 use std::path::PathBuf;
 use std::sync::Arc;
 
+use crate::numerics::interpolation::InterpolationError;
+
 pub use expansion::Expansion;
 pub use family::Family;
+pub use modulus::ModulusCurve;
 
 /// Reference temperature of sizes: 20 °C (ISO 1:2022, clause 4).
 pub const REFERENCE_TEMPERATURE: f64 = 293.15;
@@ -98,6 +104,8 @@ pub struct Material {
     pub condition: Option<String>,
     /// Young's modulus at 20 °C, Pa.
     pub youngs_modulus: Sourced<f64>,
+    /// Young's modulus against temperature, as its ratio to that at 20 °C; none when there are no data.
+    pub youngs_modulus_curve: Option<ModulusCurve>,
     /// Poisson's ratio.
     pub poisson: Sourced<f64>,
     /// Density, kg/m³.
@@ -137,6 +145,34 @@ pub enum Origin {
 }
 
 impl Material {
+    /// Young's modulus at a temperature (K), Pa; a material without a curve keeps that of 20 °C.
+    ///
+    /// # Errors
+    /// Outside the curve's range: nothing is extrapolated.
+    ///
+    /// # Example
+    /// ```
+    /// use hubgrip::material::library::Library;
+    /// let library = Library::built_in();
+    /// let (steel, iron) = (library.find("S355J2")?, library.find("GG25")?);
+    /// assert!((steel.youngs_modulus_at(473.15).unwrap() / 1e9 - 199.0).abs() < 1.0);
+    /// assert_eq!(iron.youngs_modulus_at(473.15), Ok(iron.youngs_modulus.value));
+    /// # Ok::<(), hubgrip::material::library::NotFound>(())
+    /// ```
+    pub fn youngs_modulus_at(&self, temperature: f64) -> Result<f64, InterpolationError> {
+        let at_20 = self.youngs_modulus.value;
+        self.youngs_modulus_curve.as_ref().map_or(Ok(at_20), |curve| Ok(at_20 * curve.ratio(temperature)?))
+    }
+
+    /// Lowest and highest temperature for which both expansion and modulus are known, K.
+    pub fn temperature_range(&self) -> (f64, f64) {
+        let (from, to) = self.expansion.range();
+        match self.youngs_modulus_curve.as_ref().map(ModulusCurve::range) {
+            Some((low, high)) => (from.max(low), to.min(high)),
+            None => (from, to),
+        }
+    }
+
     /// Strength for a ruling section `section` (m): the row of the smallest section that holds it.
     ///
     /// None when the section is larger than every row.

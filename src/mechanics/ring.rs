@@ -65,6 +65,15 @@ impl RingSection {
         Ok(Self { inner_radius, outer_radius, youngs_modulus, poisson, density })
     }
 
+    /// The same ring with another Young's modulus (Pa), such as that at its temperature.
+    ///
+    /// # Errors
+    /// A modulus that is not positive or not finite.
+    pub fn with_youngs_modulus(self, youngs_modulus: f64) -> Result<Self, MechanicsError> {
+        check("Young's modulus (Pa)", youngs_modulus, "positive", youngs_modulus > 0.0)?;
+        Ok(Self { youngs_modulus, ..self })
+    }
+
     /// Inner radius a, m.
     pub fn inner_radius(&self) -> f64 {
         self.inner_radius

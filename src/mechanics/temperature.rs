@@ -2,7 +2,7 @@
 
 use super::error::MechanicsError;
 use super::ring::{RingSection, check};
-use super::stack::{Stack, StackSolution};
+use super::stack::Stack;
 use crate::numerics::root::bracketed;
 
 /// Temperature rise of hub and shaft together at which a joint loosens, K; negative by cooling, none when the two
@@ -72,6 +72,28 @@ pub fn steady_temperature(
     check("radius (m)", radius, "within the ring", inside)?;
     check_faces(ring, inner_face, outer_face)?;
     Ok(inner_face + (outer_face - inner_face) * ring.share_of_rise(radius))
+}
+
+/// Mean temperature over the section of a ring through which heat flows steadily, in the unit of the given temperatures.
+///
+/// T_m = 2/(b² − a²) ∫ T r dr = Tₐ + (T_b − Tₐ) ( b²/(b² − a²) − 1/(2 ln(b/a)) )
+///
+/// a, b inner and outer radius (m), Tₐ, T_b temperature of the inner and the outer face; T as in [`steady_temperature`],
+/// with its validity and source.
+///
+/// # Errors
+/// A temperature that is not finite; a solid ring of two temperatures.
+///
+/// # Example
+/// ```
+/// use hubgrip::mechanics::{ring::RingSection, temperature};
+/// let ring = RingSection::new(0.025, 0.050, 200e9, 0.3, 7800.0).unwrap();
+/// let mean = temperature::mean_temperature(&ring, 400.0, 300.0).unwrap();
+/// assert!((mean - (400.0 - 100.0 * (4.0 / 3.0 - 0.5 / 2.0_f64.ln()))).abs() < 1e-9);
+/// ```
+pub fn mean_temperature(ring: &RingSection, inner_face: f64, outer_face: f64) -> Result<f64, MechanicsError> {
+    // The mean over the area of anything that follows the logarithm of the radius.
+    free_growth(ring, inner_face, outer_face)
 }
 
 /// Growth of bore and rim of a free ring over their radii, with heat flowing through it steadily.
@@ -146,12 +168,36 @@ impl Stack {
         from: f64,
         to: f64,
     ) -> Result<Option<f64>, MechanicsError> {
+        self.loosening_temperature_of(
+            interface,
+            |temperature| Ok(Self { free_strain: free_strain(temperature), ..self.clone() }),
+            from,
+            to,
+        )
+    }
+
+    /// The first temperature at which an interface opens on the way from one temperature to another, for rings whose
+    /// stiffness changes on the way too; none when it stays closed.
+    ///
+    /// `stack` gives this stack at a temperature: the free strains and the moduli of its rings. Two rings at rest open where
+    /// their free faces part, whatever their moduli; of more rings each interface feels how stiff the others are. The
+    /// search is that of [`Stack::loosening_temperature`].
+    ///
+    /// # Errors
+    /// As [`Stack::loosening_temperature`], and those of `stack`.
+    pub fn loosening_temperature_of(
+        &self,
+        interface: usize,
+        stack: impl Fn(f64) -> Result<Self, MechanicsError>,
+        from: f64,
+        to: f64,
+    ) -> Result<Option<f64>, MechanicsError> {
         let stiffness = self.influence()?.diagonal.get(interface).map(|flexibility| 1.0 / flexibility);
         let rings = self.rings.len();
         let wrong = MechanicsError::WrongCount { what: "interface numbers", count: interface, rings };
         let stiffness = stiffness.ok_or(wrong)?;
         let grip = |temperature: f64| -> Result<f64, MechanicsError> {
-            let solution = self.at_strain(free_strain(temperature))?;
+            let solution = stack(temperature)?.solve()?;
             Ok(solution.pressures[interface] - stiffness * solution.gaps[interface])
         };
         let place = |step: usize| from + (to - from) * step as f64 / INTERVALS as f64;
@@ -165,10 +211,6 @@ impl Stack {
             }
         }
         Ok(None)
-    }
-
-    fn at_strain(&self, free_strain: Vec<f64>) -> Result<StackSolution, MechanicsError> {
-        Stack { free_strain, ..self.clone() }.solve()
     }
 }
 

@@ -2,7 +2,8 @@
 //!
 //! The numbers are those of [`compute`](crate::findings::compute), to rounding: the same formulas with what does
 //! not change from pair to pair taken out. The contact pressure is linear in the interference until the parts
-//! open, and every stress is linear in the pressure; temperature, speed and pressures from outside shift both.
+//! open, as steeply as the moduli at the temperatures of the condition make it, and every stress is linear in the
+//! pressure; temperature, speed and pressures from outside shift both.
 //!
 //! Covered are two rings of one section each that stay elastic. More rings, stepped parts and a hub that may yield
 //! by design are left to the full computation.
@@ -52,6 +53,14 @@ pub enum KernelError {
     /// A pressing was refused by the press formulas.
     #[error(transparent)]
     Assembly(#[from] AssemblyError),
+    /// A temperature lies outside the curve of Young's modulus of a material.
+    #[error("the curve of Young's modulus of {material} does not reach the temperature asked for: {cause}")]
+    Modulus {
+        /// Name of the material.
+        material: String,
+        /// The range and the temperature.
+        cause: InterpolationError,
+    },
     /// A temperature lies outside the expansion curve of a material.
     #[error("the expansion curve of {material} does not reach the temperature asked for: {cause}")]
     Expansion {
@@ -122,7 +131,7 @@ pub struct PlainJoint {
     pub diameter: f64,
     /// Length that carries, m.
     pub engaged_length: f64,
-    /// How the rings give way.
+    /// How the rings give way at 20 °C; each condition has the moduli of its own temperatures.
     pub elasticity: Elasticity,
     /// Loss of interference by smoothing, m.
     pub smoothing_loss: f64,
@@ -144,8 +153,6 @@ pub struct PlainJoint {
     pub shaft: PlainRing,
     /// The hub.
     pub hub: PlainRing,
-    /// Pressure for each metre of interference, Pa/m.
-    pressure_per_interference: f64,
 }
 
 /// One pair of parts at the shop temperature, as in [`PairFindings`](crate::findings::PairFindings).
@@ -240,7 +247,7 @@ impl PlainJoint {
             shaft_factor: -shaft.rim_hoop - inner.material.poisson.value,
             shaft_modulus: inner.material.youngs_modulus.value,
         };
-        let conditions = Conditions { joint, inner, outer };
+        let conditions = Conditions { joint, inner, outer, elasticity };
         let states = joint.duty.iter().map(|state| conditions.of_state(state)).collect::<Result<_, _>>()?;
         Ok(Self {
             diameter: joint.diameter,
@@ -256,7 +263,6 @@ impl PlainJoint {
             states,
             shaft,
             hub,
-            pressure_per_interference: 1.0 / (joint.diameter * elasticity.flexibility()),
         })
     }
 
@@ -279,13 +285,13 @@ impl PlainJoint {
     /// Contact pressure (Pa) of an interference that grips (m); zero when the parts do not touch.
     #[inline]
     pub fn pressure(&self, condition: &Condition, effective: f64) -> f64 {
-        ((effective + condition.added_interference) * self.pressure_per_interference).max(0.0)
+        ((effective + condition.added_interference) * condition.pressure_per_interference).max(0.0)
     }
 
     /// Contact pressures (Pa) of interferences that grip (m); the two slices go together to the shorter end.
     #[inline]
     pub fn pressures(&self, condition: &Condition, effective: &[f64], pressures: &mut [f64]) {
-        let (gain, added) = (self.pressure_per_interference, condition.added_interference);
+        let (gain, added) = (condition.pressure_per_interference, condition.added_interference);
         for (pressure, effective) in pressures.iter_mut().zip(effective) {
             *pressure = ((effective + added) * gain).max(0.0);
         }

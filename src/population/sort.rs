@@ -56,7 +56,6 @@ pub enum SortError {
 /// The joint is not a plain joint of two rings.
 pub fn required_band(joint: &Joint) -> Result<(Option<f64>, Option<f64>), KernelError> {
     let plain = PlainJoint::of(joint)?;
-    let compliance = joint.diameter * plain.elasticity.flexibility();
     let loss = |taken: bool| if taken { plain.smoothing_loss } else { 0.0 };
     let holds = loss(joint.smoothing.at != SmoothingAt::None);
     let stresses = loss(joint.smoothing.at == SmoothingAt::Both);
@@ -65,11 +64,14 @@ pub fn required_band(joint: &Joint) -> Result<(Option<f64>, Option<f64>), Kernel
         .iter()
         .filter_map(|state| {
             let gain = state.slip_safety_per_pressure?;
+            let compliance = 1.0 / state.pressure_per_interference;
             Some(compliance * joint.require.slip_safety / gain - state.thermal_interference + holds)
         })
         .reduce(f64::max);
-    let warmest = |conditions: &[Condition]| {
-        conditions.iter().map(|c| c.thermal_interference).fold(plain.shop.thermal_interference, f64::max)
+    let conditions = || std::iter::once(&plain.shop).chain(&plain.states);
+    let at = |pressure: f64| {
+        let made = |c: &Condition| pressure / c.pressure_per_interference - c.thermal_interference;
+        conditions().map(made).fold(f64::INFINITY, f64::min)
     };
     let greatest = joint
         .rings
@@ -83,7 +85,7 @@ pub fn required_band(joint: &Joint) -> Result<(Option<f64>, Option<f64>), Kernel
             Some(plain.pressure_at_strength()? / required)
         })
         .reduce(f64::min)
-        .map(|pressure| compliance * pressure - warmest(&plain.states) + stresses);
+        .map(|pressure| at(pressure) + stresses);
     Ok((least, greatest))
 }
 

@@ -13,13 +13,13 @@
 //! | `fit` | `hole` and `shaft`, each with `lower_um` and `upper_um` from nominal |
 //! | `extremes` | `loosest`, `mean`, `tightest`: the pair at the shop temperature, at rest |
 //! | `onset_of_yield` | `ring` that yields or breaks first, with `pressure_mpa` and `interference_um` |
-//! | `duty` | each state: what acts, and `loosest` and `tightest` in it |
+//! | `duty` | each state: what acts, Young's modulus of each ring at its temperature, and `loosest` and `tightest` in it |
 //! | `service` | `loosening` of each interface, which fits are `governing` each ring, `steps` of assembly, the `plastic` hub, `fatigue` |
 //! | `assembly` | `method`, temperatures, clearance, forces of the tightest pair, `baths` |
 //! | `bearing` | of a bearing seat: loss of radial clearance, what is left cold and in each state, mounting; else null |
 //! | `verdicts` | `question` (hold, strength, assembly), `subject`, `required`, `found`, `unit` (1, N, degC), `ok`, `at` |
 //! | `defaults` | `key`, `value`, `source` of what the joint file leaves open |
-//! | `materials` | for each ring its material, where the record comes from, the strength for its section |
+//! | `materials` | for each ring its material, where the record comes from, the strength for its section, Young's modulus at 20 °C and the source of its curve |
 //! | `cautions`, `notes` | sentences |
 //!
 //! A pair of `extremes`:

@@ -50,6 +50,7 @@ pub fn sheet(material: &Material) -> String {
     out.push('\n');
     let mut values = Values::default();
     values.add("youngs_modulus", Quantity::Pressure, &material.youngs_modulus);
+    modulus(&mut values, material);
     values.add("poisson", Quantity::Number, &material.poisson);
     values.add("density", Quantity::Density, &material.density);
     strength(&mut values, material);
@@ -123,15 +124,31 @@ fn strength(values: &mut Values, material: &Material) {
     }
 }
 
+/// The range of the curve of Young's modulus, and the modulus at the usual temperatures.
+fn modulus(values: &mut Values, material: &Material) {
+    let Some(curve) = &material.youngs_modulus_curve else { return };
+    let (from, to) = curve.range();
+    let range = format!("{} to {}", written(Quantity::Temperature, from), written(Quantity::Temperature, to));
+    values.line("youngs_modulus_curve".to_owned(), range, &curve.source);
+    for (celsius, name) in AT {
+        if let Ok(modulus) = material.youngs_modulus_at(celsius + 273.15) {
+            let value = format!("{} GPa", number(modulus * 1e-9, 3));
+            values.line(format!("  at {name} degC"), value, &curve.source);
+        }
+    }
+}
+
+/// Both baths, then usual temperatures of assembly and service, °C.
+const AT: [(f64, &str); 5] =
+    [(-196.0, "-196"), (-78.5, "-78.5"), (100.0, "100"), (200.0, "200"), (300.0, "300")];
+
 /// The range of the curve, and mean coefficients at the usual temperatures.
 fn expansion(values: &mut Values, material: &Material) {
     let expansion = &material.expansion;
     let (from, to) = expansion.range();
     let range = format!("{} to {}", written(Quantity::Temperature, from), written(Quantity::Temperature, to));
     values.line("expansion".to_owned(), range, &expansion.source);
-    for (celsius, name) in
-        [(-196.0, "-196"), (-78.5, "-78.5"), (100.0, "100"), (200.0, "200"), (300.0, "300")]
-    {
+    for (celsius, name) in AT {
         if let Ok(mean) = expansion.mean_coefficient(celsius + 273.15) {
             let value = format!("{} um/m.K", number(mean * 1e6, 3));
             values.line(format!("  mean from 20 to {name} degC"), value, &expansion.source);

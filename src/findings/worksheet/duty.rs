@@ -1,11 +1,11 @@
 //! Each loaded service state at the loosest pair.
 
+use super::super::condition::Condition;
 use super::super::expression::{Expression, num, sym};
-use super::super::kernel::Condition;
 use super::super::{Findings, StateFindings};
 use super::Units;
 use super::sheet::Sheet;
-use super::strength::{axial, flexibility, grip, hub_yields, torque};
+use super::strength::{ModulusAt, axial, flexibility, grip, hub_yields, modulus_at, torque};
 use crate::joint::{DutyState, Ring};
 
 const LAME: &str = "Lamé; Timoshenko & Goodier, Theory of Elasticity, § 28";
@@ -15,7 +15,8 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let joint = &findings.joint;
     for (index, (state, duty)) in joint.duty.iter().zip(&findings.duty).enumerate() {
         let Ok(condition) = Condition::of_state(joint, state) else { continue };
-        let sheet_of_state = StateSheet { findings, units, state, condition, tag: index + 1 };
+        let moduli = duty.youngs_moduli.clone();
+        let sheet_of_state = StateSheet { findings, units, state, condition, moduli, tag: index + 1 };
         sheet_of_state.write(sheet, &duty.loosest);
     }
 }
@@ -26,6 +27,8 @@ struct StateSheet<'a> {
     units: &'a Units,
     state: &'a DutyState,
     condition: Condition,
+    /// Young's modulus of shaft and hub, Pa.
+    moduli: Vec<f64>,
     tag: usize,
 }
 
@@ -41,6 +44,7 @@ impl StateSheet<'_> {
         }
         sheet.section(format!("Duty state {}: the loosest pair", self.state.name));
         self.heat(sheet);
+        self.moduli(sheet);
         let lost = self.rotation(sheet);
         let held = grip("W_min", &self.name("eps_s"), &self.name("eps_h"));
         let held = if lost { held - sym(&self.name("V_")) } else { held };
@@ -54,7 +58,10 @@ impl StateSheet<'_> {
         sheet.formula(
             &fresh,
             "contact pressure",
-            super::super::expression::greatest([num("0"), held / flexibility()]),
+            super::super::expression::greatest([
+                num("0"),
+                held / flexibility(&self.modulus("h"), &self.modulus("s")),
+            ]),
             self.units.pressure,
             "Lamé with free thermal strains and rotation",
             Some(pair.pressure / share * self.units.per_pascal),
@@ -107,6 +114,32 @@ impl StateSheet<'_> {
         }
     }
 
+    /// Young's modulus of both parts where it is not that of the shop temperature.
+    fn moduli(&self, sheet: &mut Sheet) {
+        for (number, (index, ring)) in ["s", "h"].into_iter().zip(&self.findings.joint.rings).enumerate() {
+            let Some(modulus) = self.changed(number) else { continue };
+            let inner = self.state.temperatures.get(number).copied().unwrap_or_default();
+            let rise = self.state.temperature_rises.get(number).copied().unwrap_or(0.0);
+            let temperature = self.units.degrees(inner + rise * mean_share(ring));
+            let tag = self.tag.to_string();
+            modulus_at(sheet, ring, &ModulusAt { index, tag: &tag, temperature, modulus }, self.units);
+        }
+    }
+
+    /// Young's modulus of a part, Pa, where it is not that of the shop temperature.
+    fn changed(&self, number: usize) -> Option<f64> {
+        let joint = &self.findings.joint;
+        let (modulus, ring) = (*self.moduli.get(number)?, joint.rings.get(number)?);
+        let shop = ring.material.youngs_modulus_at(joint.assembly.shop_temperature).ok()?;
+        (modulus != shop).then_some(modulus)
+    }
+
+    /// Symbol of the modulus of a part in this state.
+    fn modulus(&self, index: &str) -> String {
+        let number = usize::from(index == "h");
+        if self.changed(number).is_some() { self.name(&format!("E_{index}")) } else { format!("E_{index}") }
+    }
+
     /// Interference that rotation takes; false at rest.
     fn rotation(&self, sheet: &mut Sheet) -> bool {
         let (units, joint) = (self.units, &self.findings.joint);
@@ -129,7 +162,7 @@ impl StateSheet<'_> {
         }
         let growth = |letter: &str, other: &str| -> Expression {
             let (rho, nu, modulus) =
-                (self.name(&format!("rho_{letter}")), format!("nu_{letter}"), format!("E_{letter}"));
+                (self.name(&format!("rho_{letter}")), format!("nu_{letter}"), self.modulus(letter));
             sym(&rho) * sym(&speed).power(2) * sym("d") / (num("16") * sym(&modulus))
                 * ((num("3") + sym(&nu)) * sym(other).power(2) + (num("1") - sym(&nu)) * sym("d").power(2))
         };
@@ -148,8 +181,8 @@ impl StateSheet<'_> {
         let units = self.units;
         let mut added: Option<Expression> = None;
         for (symbol, grown, what, pressure, outer, inner, modulus, numerator) in [
-            ("q_i", "Y_i", "in the bore", self.state.inner_pressure, "d", "b", "E_s", "b"),
-            ("q_o", "Y_o", "round the hub", self.state.outer_pressure, "D", "d", "E_h", "D"),
+            ("q_i", "Y_i", "in the bore", self.state.inner_pressure, "d", "b", "s", "b"),
+            ("q_o", "Y_o", "round the hub", self.state.outer_pressure, "D", "d", "h", "D"),
         ] {
             if pressure == 0.0 {
                 continue;
@@ -159,7 +192,7 @@ impl StateSheet<'_> {
             sheet.input(&symbol, &format!("pressure {what}"), value, units.pressure, "joint file");
             let square = |name: &str| sym(name).power(2);
             let formula = num("2") * sym(&symbol) * sym("d") * square(numerator)
-                / (sym(modulus) * (square(outer) - square(inner)));
+                / (sym(&self.modulus(modulus)) * (square(outer) - square(inner)));
             let meaning = format!("interference added by the pressure {what}");
             sheet.formula(&grown, &meaning, formula, units.length, LAME, None);
             added = Some(match added {

@@ -1,7 +1,8 @@
 //! A joint of more than two rings: capacity of each interface, and the stress that governs each ring.
 
+use super::super::condition::Condition;
 use super::super::expression::{Expression, Function, greatest, num, sym};
-use super::super::kernel::{Condition, Kernel, PairInterference, pair_interferences};
+use super::super::kernel::{Kernel, PairInterference, pair_interferences};
 use super::super::service::loosest_for_stress;
 use super::super::{Findings, GoverningRing, InterfaceFindings, cautions::criterion_source, combination};
 use super::Units;
@@ -132,7 +133,8 @@ fn ring_stress(
     let loosest = loosest_for_stress(pairs);
     let ends = governing.tight.iter().zip(loosest.iter().zip(&pairs.tightest.effective));
     let interference: Vec<f64> = ends.map(|(tight, (low, high))| if *tight { *high } else { *low }).collect();
-    let Ok(solution) = kernel.stack(&interference, &condition).solve() else { return };
+    let Ok(stack) = kernel.stack(&interference, &condition) else { return };
+    let Ok(solution) = stack.solve() else { return };
     let number = index + 1;
     let place = state.map_or("shop temperature", |state| state.name.as_str());
     sheet.section(format!("Stress of the {}: {}, {place}", ring.name, combination(&governing.tight)));

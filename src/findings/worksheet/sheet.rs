@@ -36,6 +36,12 @@ impl Sheet {
         self.printed.contains_key(&Symbol::new(symbol))
     }
 
+    /// The first of these symbols that has been written; the last of them when none has.
+    pub(super) fn first_of(&self, symbols: &[&str]) -> String {
+        let known = symbols.iter().find(|symbol| self.printed.contains_key(&Symbol::new(symbol)));
+        known.or(symbols.last()).map(|symbol| (*symbol).to_owned()).unwrap_or_default()
+    }
+
     /// An input: a symbol with its value, written to six significant digits.
     pub(super) fn input(&mut self, symbol: &str, meaning: &str, value: f64, unit: &str, source: &str) {
         let printed = number(value, DIGITS);

@@ -14,10 +14,10 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let (shaft, hub) = joint.shaft_and_hub();
     sheet.section("Materials and friction");
     for (ring, letter) in [(hub, "h"), (shaft, "s")] {
-        let (modulus, poisson) = (&ring.material.youngs_modulus, &ring.material.poisson);
+        let poisson = &ring.material.poisson;
         let what = |name: &str| format!("{name} of the {}", ring.name);
-        let value = modulus.value * units.per_pascal;
-        sheet.input(&format!("E_{letter}"), &what("Young's modulus"), value, units.pressure, &modulus.source);
+        let shop = joint.assembly.shop_temperature;
+        super::strength::youngs_modulus(sheet, ring, letter, &ring.name, shop, units);
         sheet.input(&format!("nu_{letter}"), &what("Poisson's ratio"), poisson.value, "", &poisson.source);
         let strain = ring.material.expansion.strain(joint.assembly.shop_temperature).unwrap_or(0.0);
         let source = &ring.material.expansion.source;

@@ -18,7 +18,7 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         ("loosest", "a", &pairs.loosest, &findings.extremes.loosest),
         ("tightest", "b", &pairs.tightest, &findings.extremes.tightest),
     ] {
-        let stack = kernel.stack(&pair.effective, &kernel.shop);
+        let Ok(stack) = kernel.stack(&pair.effective, &kernel.shop) else { return };
         let Ok(influence) = stack.influence() else { return };
         sheet.section(format!("Contact pressures of the {name} pair: every row of the linear system"));
         let scale = units.per_metre / units.per_pascal;

@@ -13,7 +13,7 @@ const LAME: &str = "Lamé; Timoshenko & Goodier, Theory of Elasticity, § 28";
 pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let joint = &findings.joint;
     let (Some(shaft), Some(hub)) = (joint.rings.first(), joint.rings.last()) else { return };
-    stiffness(sheet, shaft, hub, units);
+    stiffness(sheet, shaft, hub, joint.assembly.shop_temperature, units);
     shop_strain(sheet, findings, shaft, hub, units);
     pressures(sheet, findings, units);
     capacity(sheet, findings, units);
@@ -24,20 +24,14 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     shaft_stress(sheet, findings, shaft, units);
 }
 
-fn stiffness(sheet: &mut Sheet, shaft: &Ring, hub: &Ring, units: &Units) {
+fn stiffness(sheet: &mut Sheet, shaft: &Ring, hub: &Ring, shop_temperature: f64, units: &Units) {
     sheet.section("Stiffness of both parts");
     let length = |metres: f64| metres * units.per_metre;
     sheet.input("D", "outer diameter of the hub", length(hub.outer_diameter), units.length, "joint file");
     sheet.input("b", "bore of the shaft", length(shaft.inner_diameter), units.length, "joint file");
     for (ring, index, name) in [(hub, "h", "hub"), (shaft, "s", "shaft")] {
         let material = &ring.material;
-        sheet.input(
-            &format!("E_{index}"),
-            &format!("Young's modulus of the {name}"),
-            material.youngs_modulus.value * units.per_pascal,
-            units.pressure,
-            &material.youngs_modulus.source,
-        );
+        youngs_modulus(sheet, ring, index, name, shop_temperature, units);
         sheet.input(
             &format!("nu_{index}"),
             &format!("Poisson's ratio of the {name}"),
@@ -48,6 +42,64 @@ fn stiffness(sheet: &mut Sheet, shaft: &Ring, hub: &Ring, units: &Units) {
     }
     sheet.formula("C_h", "flexibility of the hub", ratio("D", "d") + sym("nu_h"), "", LAME, None);
     sheet.formula("C_s", "flexibility of the shaft", ratio("d", "b") - sym("nu_s"), "", LAME, None);
+}
+
+/// Young's modulus of a part at the shop temperature; from that at 20 °C by the ratio of its curve where the two differ.
+pub(super) fn youngs_modulus(
+    sheet: &mut Sheet,
+    ring: &Ring,
+    index: &str,
+    name: &str,
+    shop_temperature: f64,
+    units: &Units,
+) {
+    let material = &ring.material;
+    let own = material.youngs_modulus.value;
+    let shop = material.youngs_modulus_at(shop_temperature).unwrap_or(own);
+    let (symbol, at) = if shop == own { ("E_", "") } else { ("E_r", " at 20 °C") };
+    sheet.input(
+        &format!("{symbol}{index}"),
+        &format!("Young's modulus of the {name}{at}"),
+        own * units.per_pascal,
+        units.pressure,
+        &material.youngs_modulus.source,
+    );
+    if shop != own {
+        let temperature = units.degrees(shop_temperature);
+        modulus_at(sheet, ring, &ModulusAt { index, tag: "", temperature, modulus: shop }, units);
+    }
+}
+
+/// Young's modulus of a part in a condition.
+pub(super) struct ModulusAt<'a> {
+    /// `h` or `s`.
+    pub(super) index: &'a str,
+    /// Number of the state; empty for the shop.
+    pub(super) tag: &'a str,
+    /// Temperature in the printed unit.
+    pub(super) temperature: f64,
+    /// Modulus, Pa.
+    pub(super) modulus: f64,
+}
+
+/// The ratio of the curve, and the modulus of the condition from that at 20 °C.
+pub(super) fn modulus_at(sheet: &mut Sheet, ring: &Ring, at: &ModulusAt<'_>, units: &Units) {
+    let ModulusAt { index, tag, temperature, modulus } = *at;
+    let own = ring.material.youngs_modulus.value;
+    let source = ring.material.youngs_modulus_curve.as_ref().map_or("", |curve| &curve.source);
+    let ratio = format!("e_{index}{tag}");
+    let at = format!("{} {}", crate::quantity::number(temperature, 4), units.temperature.replace("deg", "°"));
+    let what = format!("Young's modulus of the {} at {at} over that at 20 °C", ring.name);
+    sheet.input(&ratio, &what, modulus / own, "", source);
+    let reference = sheet.first_of(&[&format!("E_r{index}"), &format!("E_{index}")]);
+    sheet.formula(
+        &format!("E_{index}{tag}"),
+        &format!("Young's modulus of the {} at {at}", ring.name),
+        sym(&reference) * sym(&ratio),
+        units.pressure,
+        "elastic law at the current temperature",
+        Some(modulus * units.per_pascal),
+    );
 }
 
 /// (a² + b²)/(a² − b²).
@@ -138,7 +190,7 @@ fn plastic(sheet: &mut Sheet, findings: &Findings, units: &Units) {
 
 /// max(0, (W/1000 + d (ε_s − ε_h)) / (d (C_h/E_h + C_s/E_s))).
 pub(super) fn pressure(interference: &str, shaft_strain: &str, hub_strain: &str) -> Expression {
-    greatest([num("0"), grip(interference, shaft_strain, hub_strain) / flexibility()])
+    greatest([num("0"), grip(interference, shaft_strain, hub_strain) / flexibility("E_h", "E_s")])
 }
 
 /// Interference with the free strains: W/1000 + d (ε_s − ε_h).
@@ -147,8 +199,8 @@ pub(super) fn grip(interference: &str, shaft_strain: &str, hub_strain: &str) -> 
 }
 
 /// Interference for each unit of pressure: d (C_h/E_h + C_s/E_s).
-pub(super) fn flexibility() -> Expression {
-    sym("d") * (sym("C_h") / sym("E_h") + sym("C_s") / sym("E_s"))
+pub(super) fn flexibility(hub_modulus: &str, shaft_modulus: &str) -> Expression {
+    sym("d") * (sym("C_h") / sym(hub_modulus) + sym("C_s") / sym(shaft_modulus))
 }
 
 fn capacity(sheet: &mut Sheet, findings: &Findings, units: &Units) {

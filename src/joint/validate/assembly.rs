@@ -96,7 +96,7 @@ pub(super) fn plan(
     })
 }
 
-/// A fault when a temperature is outside the expansion curve of one of the rings.
+/// A fault when a temperature is outside the expansion curve of one of the rings, or that of its modulus.
 pub(super) fn within_curves(
     draft: &Draft<'_>,
     given: &Written<Temperature>,
@@ -104,17 +104,22 @@ pub(super) fn within_curves(
     rings: &[Ring],
 ) -> bool {
     let Some(temperature) = temperature else { return false };
-    let outside = rings.iter().find(|ring| {
-        let (low, high) = ring.material.expansion.range();
+    let outside = |(low, high): (f64, f64)| {
         temperature != REFERENCE_TEMPERATURE && !(low..=high).contains(&temperature)
+    };
+    let beyond = rings.iter().find_map(|ring| {
+        let expansion = ("expansion curve", ring.material.expansion.range());
+        let modulus = ring.material.youngs_modulus_curve.as_ref();
+        let modulus = modulus.map(|curve| ("curve of Young's modulus", curve.range()));
+        let found = std::iter::once(expansion).chain(modulus).find(|(_, range)| outside(*range));
+        found.map(|(what, range)| (ring, what, range))
     });
-    let Some(ring) = outside else { return true };
-    let (low, high) = ring.material.expansion.range();
+    let Some((ring, what, (low, high))) = beyond else { return true };
     let text = |kelvin| written(Kind::Temperature, kelvin);
     draft.refuse(
         given,
         &format!(
-            "is outside the expansion curve of {} ({}), which runs from {} to {}",
+            "is outside the {what} of {} ({}), which runs from {} to {}",
             ring.material.id,
             ring.name,
             text(low),

@@ -8,6 +8,7 @@
 //! | `id`, `name`, `designations`, `family`, `condition` | text | no |
 //! | `kind` | `ductile`, `brittle` or `polymer` | yes |
 //! | `youngs_modulus` | `210 GPa` | yes |
+//! | `youngs_modulus_curve` | the name of a shared curve, or a table against temperature: [`ModulusRecord`] | no |
 //! | `poisson` | `0.3` | yes |
 //! | `density` | `7850 kg/m3` | yes |
 //! | `expansion` | `11.5e-6 /K`, the name of a shared curve, or a table: [`ExpansionRecord`] | yes |
@@ -33,6 +34,7 @@
 
 mod error;
 mod expansion;
+mod modulus;
 mod strength;
 mod value;
 
@@ -43,6 +45,7 @@ use serde::Deserialize;
 
 pub use error::{MaterialError, Step};
 pub use expansion::{ExpansionRecord, ExpansionTable, MEAN_FROM, MEAN_TO};
+pub use modulus::{ModulusRecord, ModulusTable};
 pub use strength::{StrengthRecord, StrengthRow};
 pub use value::Value;
 
@@ -69,6 +72,8 @@ pub struct MaterialRecord {
     pub condition: Option<String>,
     /// Young's modulus at 20 °C.
     pub youngs_modulus: Value<Pressure>,
+    /// Young's modulus against temperature.
+    pub youngs_modulus_curve: Option<ModulusRecord>,
     /// Poisson's ratio.
     pub poisson: Value<Number>,
     /// Density.
@@ -107,7 +112,7 @@ impl MaterialRecord {
     ///
     /// # Errors
     /// The first value that no material can have, with the way to it: a modulus or density that is not
-    /// positive, Poisson's ratio outside −1 to 0.5, a yield strength above the tensile strength, sections or
+    /// positive, a table of the modulus that does not reach 20 °C, Poisson's ratio outside −1 to 0.5, a yield strength above the tensile strength, sections or
     /// temperatures that do not rise, a strength that is missing for the kind.
     pub fn into_material(self, id_default: &str, origin: Origin) -> Result<Material, MaterialError> {
         let source: Arc<str> = Arc::from(self.source.as_deref().unwrap_or("no source given"));
@@ -118,6 +123,11 @@ impl MaterialRecord {
         let specific_heat = self.specific_heat.map(|value| value.sourced(&source, |number| number.0));
         let max_temperature = self.max_temperature.map(|value| value.sourced(&source, |kelvin| kelvin.0));
         check_positive("youngs_modulus", Some(&youngs_modulus))?;
+        let youngs_modulus_curve = self
+            .youngs_modulus_curve
+            .map(|record| record.into_curve(Some(youngs_modulus.value), &source))
+            .transpose()
+            .map_err(|error| error.under("youngs_modulus_curve"))?;
         check_poisson(poisson.value)?;
         check_positive("density", Some(&density))?;
         check_positive("conductivity", conductivity.as_ref())?;
@@ -144,6 +154,7 @@ impl MaterialRecord {
             kind: self.kind,
             condition: self.condition,
             youngs_modulus,
+            youngs_modulus_curve,
             poisson,
             density,
             expansion,

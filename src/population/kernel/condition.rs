@@ -3,14 +3,21 @@
 use std::f64::consts::PI;
 
 use super::ring::{self, RingBase};
-use super::{KernelError, strain};
+use super::{Elasticity, KernelError, strain};
 use crate::joint::{DutyState, Joint, Ring};
 use crate::mechanics::capacity;
 use crate::mechanics::ring::RingLoad;
+use crate::mechanics::temperature::mean_temperature;
 
 /// The shop or a service state: what it does to the interference, what load there is.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Condition {
+    /// Young's modulus of the shaft, Pa.
+    pub shaft_modulus: f64,
+    /// Young's modulus of the hub, Pa.
+    pub hub_modulus: f64,
+    /// Contact pressure for each metre of interference, Pa/m.
+    pub pressure_per_interference: f64,
     /// Interference that temperature, speed and pressures from outside add, m; negative when they take some.
     pub added_interference: f64,
     /// The part of it that comes from the temperatures of the mating faces alone, m: d (ε_shaft − ε_hub).
@@ -34,6 +41,8 @@ pub(super) struct Conditions<'a> {
     pub(super) joint: &'a Joint,
     pub(super) inner: &'a Ring,
     pub(super) outer: &'a Ring,
+    /// With the moduli of 20 °C.
+    pub(super) elasticity: Elasticity,
 }
 
 impl Conditions<'_> {
@@ -41,7 +50,12 @@ impl Conditions<'_> {
     pub(super) fn at_rest(&self, temperature: f64) -> Result<Condition, KernelError> {
         let thermal =
             self.joint.diameter * (strain(self.inner, temperature)? - strain(self.outer, temperature)?);
+        let (shaft_modulus, hub_modulus) =
+            (modulus(self.inner, temperature, 0.0)?, modulus(self.outer, temperature, 0.0)?);
         Ok(Condition {
+            shaft_modulus,
+            hub_modulus,
+            pressure_per_interference: self.gain(shaft_modulus, hub_modulus),
             added_interference: thermal,
             thermal_interference: thermal,
             torque: 0.0,
@@ -60,6 +74,9 @@ impl Conditions<'_> {
         };
         let (shaft_strain, hub_strain) = (strain(self.inner, *at_shaft)?, strain(self.outer, *at_hub)?);
         let thermal = joint.diameter * (shaft_strain - hub_strain);
+        let hotter = |number: usize| state.temperature_rises.get(number).copied().unwrap_or(0.0);
+        let shaft_modulus = modulus(self.inner, *at_shaft, hotter(0))?;
+        let hub_modulus = modulus(self.outer, *at_hub, hotter(1))?;
         let (shaft, hub, added) = if quiet(state) {
             (RingBase::default(), RingBase::default(), thermal)
         } else {
@@ -81,11 +98,15 @@ impl Conditions<'_> {
                 strain_rise: rise(self.outer, 1, *at_hub, hub_strain)?,
                 ..load
             };
-            let (shaft, shaft_growth) = ring::base(self.inner, &shaft_load, 0.5 * self.inner.outer_diameter)?;
-            let (hub, hub_growth) = ring::base(self.outer, &hub_load, 0.5 * self.outer.inner_diameter)?;
+            let (rim, bore) = (0.5 * self.inner.outer_diameter, 0.5 * self.outer.inner_diameter);
+            let (shaft, shaft_growth) = ring::base(self.inner, shaft_modulus, &shaft_load, rim)?;
+            let (hub, hub_growth) = ring::base(self.outer, hub_modulus, &hub_load, bore)?;
             (shaft, hub, 2.0 * (shaft_growth - hub_growth))
         };
         Ok(Condition {
+            shaft_modulus,
+            hub_modulus,
+            pressure_per_interference: self.gain(shaft_modulus, hub_modulus),
             added_interference: added,
             thermal_interference: thermal,
             torque: state.torque,
@@ -95,6 +116,12 @@ impl Conditions<'_> {
             shaft,
             hub,
         })
+    }
+
+    /// 1/(d (C_h/E_h + C_s/E_s)).
+    fn gain(&self, shaft_modulus: f64, hub_modulus: f64) -> f64 {
+        let warm = Elasticity { shaft_modulus, hub_modulus, ..self.elasticity };
+        1.0 / (self.joint.diameter * warm.flexibility())
     }
 
     fn slip_safety_per_pressure(&self, state: &DutyState) -> Option<f64> {
@@ -115,6 +142,15 @@ impl Conditions<'_> {
         let radial = 2.0 * state.radial_force / (PI * diameter * length);
         Some(12.0 / (PI * diameter * length * length) * state.bending_moment + radial)
     }
+}
+
+/// Young's modulus of a ring (Pa) whose inner face is at a temperature (K) and whose outer face is hotter by `rise`: at
+/// the mean temperature of its section.
+fn modulus(ring: &Ring, inner: f64, rise: f64) -> Result<f64, KernelError> {
+    let section = ring::section(ring, ring.material.youngs_modulus.value)?;
+    let mean = mean_temperature(&section, inner, inner + rise)?;
+    let outside = |cause| KernelError::Modulus { material: ring.material.name.clone(), cause };
+    ring.material.youngs_modulus_at(mean).map_err(outside)
 }
 
 /// Whether nothing but uniform temperatures acts on the rings besides the contact.

@@ -86,7 +86,8 @@ impl PlainRing {
     }
 
     fn under(ring: &Ring, criterion: DuctileCriterion, load: RingLoad) -> Result<Self, MechanicsError> {
-        let (unit, _) = base(ring, &load, 0.5 * ring.outer_diameter)?;
+        // Stress by pressure does not depend on the modulus.
+        let (unit, _) = base(ring, ring.material.youngs_modulus.value, &load, 0.5 * ring.outer_diameter)?;
         let measure = match (ring.material.kind, criterion) {
             (Kind::Brittle, _) => Measure::Brittle { tension_share: ring.tension_share() },
             (_, DuctileCriterion::VonMises) => Measure::VonMises,
@@ -157,16 +158,26 @@ impl PlainRing {
     }
 }
 
-/// Stress of a ring at both faces under a load, and its radial displacement (m) at a radius (m).
-pub(super) fn base(ring: &Ring, load: &RingLoad, radius: f64) -> Result<(RingBase, f64), MechanicsError> {
+/// A ring with this Young's modulus, Pa.
+pub(super) fn section(ring: &Ring, youngs_modulus: f64) -> Result<RingSection, MechanicsError> {
     let material = &ring.material;
-    let section = RingSection::new(
+    RingSection::new(
         0.5 * ring.inner_diameter,
         0.5 * ring.outer_diameter,
-        material.youngs_modulus.value,
+        youngs_modulus,
         material.poisson.value,
         material.density.value,
-    )?;
+    )
+}
+
+/// Stress of a ring of this modulus (Pa) at both faces under a load, and its radial displacement (m) at a radius (m).
+pub(super) fn base(
+    ring: &Ring,
+    youngs_modulus: f64,
+    load: &RingLoad,
+    radius: f64,
+) -> Result<(RingBase, f64), MechanicsError> {
+    let section = section(ring, youngs_modulus)?;
     let mut bore = section.stress_at(load, section.inner_radius())?;
     let mut rim = section.stress_at(load, section.outer_radius())?;
     // At a loaded face the radial stress is the pressure itself.

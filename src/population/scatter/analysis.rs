@@ -7,7 +7,7 @@
 
 use std::f64::consts::PI;
 
-use super::model::{Model, State};
+use super::model::{Model, State, Stiffness};
 use super::{Quantity, ScatterError};
 use crate::numerics::root;
 use crate::population::distribution::Shape;
@@ -28,12 +28,20 @@ pub struct Analysis<'a> {
     compliance: Law,
     /// ln(C/μ).
     log_ratio: Law,
+    /// Both in each state; none where its moduli are those of the shop.
+    warm: Vec<Option<Warm>>,
     friction: Law,
     pressing: Law,
     /// Thermal interference of each state.
     thermals: Vec<Law>,
     /// Kinks of the share of grips below a value, with loss and without.
     kinks: [Vec<f64>; 2],
+}
+
+/// Compliance, and ln(C/μ), in a state whose moduli are not those of the shop.
+struct Warm {
+    compliance: Law,
+    log_ratio: Law,
 }
 
 impl<'a> Analysis<'a> {
@@ -62,11 +70,22 @@ impl<'a> Analysis<'a> {
             let gain = model.diameter * factor;
             Law::of(modulus).mapped(|e| gain / e, |y| (gain / y, gain / (y * y)))
         };
-        let compliance = part(&population.hub_modulus, model.hub_factor)
-            .sum(&part(&population.shaft_modulus, model.shaft_factor));
+        let compliance_with = |stiffness: Stiffness| {
+            part(&population.hub_modulus, model.hub_factor / stiffness.hub)
+                .sum(&part(&population.shaft_modulus, model.shaft_factor / stiffness.shaft))
+        };
+        let compliance = compliance_with(model.shop_stiffness);
         let friction = Law::of(&population.friction);
         let inverse = friction.mapped(|m| -m.ln(), |y| ((-y).exp(), (-y).exp()));
         let log_ratio = compliance.logarithm().sum(&inverse);
+        let warm = |state: &State| {
+            (state.stiffness != model.shop_stiffness).then(|| {
+                let compliance = compliance_with(state.stiffness);
+                let log_ratio = compliance.logarithm().sum(&inverse);
+                Warm { compliance, log_ratio }
+            })
+        };
+        let warm = model.states.iter().map(warm).collect();
         let mut with_loss: Vec<f64> = smoothed.kinks();
         with_loss.extend(made.kinks().into_iter().filter(|kink| *kink <= 0.0));
         with_loss.push(0.0);
@@ -80,6 +99,7 @@ impl<'a> Analysis<'a> {
             smoothed,
             compliance,
             log_ratio,
+            warm,
             friction,
             kinks,
         })
@@ -113,9 +133,10 @@ impl<'a> Analysis<'a> {
         }
         let loss = self.model.loss_when_holding;
         let gain = force / self.model.area();
+        let log_ratio = self.warm[state].as_ref().map_or(&self.log_ratio, |warm| &warm.log_ratio);
         let at = |thermal: f64| {
             self.over(
-                &self.log_ratio,
+                log_ratio,
                 |log| gain * log.exp(),
                 |t| (t / gain).ln(),
                 loss,
@@ -129,9 +150,11 @@ impl<'a> Analysis<'a> {
     /// Probability that the contact pressure exceeds `pressure` in a condition.
     pub fn exceeds(&self, condition: usize, pressure: f64) -> f64 {
         let loss = self.model.loss_under_stress;
+        let warm = condition.checked_sub(1).and_then(|state| self.warm.get(state)?.as_ref());
+        let compliance = warm.map_or(&self.compliance, |warm| &warm.compliance);
         let at = |thermal: f64| {
             self.over(
-                &self.compliance,
+                compliance,
                 |c| pressure * c,
                 |t| t / pressure,
                 loss,

@@ -5,7 +5,7 @@
 //! | interference | U = shaft − hole |
 //! | loss | G = f (Rz shaft + Rz hub) |
 //! | grip | V = U for U ≤ 0, else max(U − G, 0) (DIN 7190; contact ends at zero) |
-//! | compliance | C = d (C_h/E_h + C_s/E_s) (Lamé) |
+//! | compliance | C = d (C_h/(k_h E_h) + C_s/(k_s E_s)), k modulus in the condition over that at 20 °C (Lamé) |
 //! | temperature | θ = d (ε_shaft − ε_hub) |
 //! | pressure | p = max(V + θ, 0)/C |
 //! | capacity | T = μ p π d² l/2, F = μ p π d l |
@@ -71,6 +71,8 @@ pub struct Model {
     pub chamfer_slope: f64,
     /// Interference that the shop temperature adds, m.
     pub shop_thermal: f64,
+    /// Moduli at the shop temperature.
+    pub shop_stiffness: Stiffness,
     /// Service states.
     pub states: Vec<State>,
     /// Rings that can give way.
@@ -99,8 +101,25 @@ pub struct State {
     pub force: f64,
     /// Interference that its temperatures add, m.
     pub thermal: f64,
+    /// Moduli at its temperatures; a scatter of the temperatures does not change them.
+    pub stiffness: Stiffness,
     /// Temperatures and materials, for temperatures that scatter.
     pub warm: Option<Warm>,
+}
+
+/// Young's modulus of both rings in a condition over that at 20 °C.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Stiffness {
+    /// Of the hub.
+    pub hub: f64,
+    /// Of the shaft.
+    pub shaft: f64,
+}
+
+impl Default for Stiffness {
+    fn default() -> Self {
+        Self { hub: 1.0, shaft: 1.0 }
+    }
 }
 
 /// Temperatures of a state with the materials that expand.
@@ -140,10 +159,25 @@ impl Model {
         0.5 * self.diameter
     }
 
-    /// Interference (m) for each pascal of pressure.
+    /// Interference (m) for each pascal of pressure at the shop temperature; moduli (Pa) of 20 °C.
     #[inline]
     pub fn compliance(&self, hub_modulus: f64, shaft_modulus: f64) -> f64 {
-        self.diameter * (self.hub_factor / hub_modulus + self.shaft_factor / shaft_modulus)
+        self.compliance_with(self.shop_stiffness, hub_modulus, shaft_modulus)
+    }
+
+    /// The same in a condition of this stiffness.
+    #[inline]
+    pub fn compliance_with(&self, stiffness: Stiffness, hub_modulus: f64, shaft_modulus: f64) -> f64 {
+        let (hub, shaft) = (stiffness.hub * hub_modulus, stiffness.shaft * shaft_modulus);
+        self.diameter * (self.hub_factor / hub + self.shaft_factor / shaft)
+    }
+
+    /// Moduli of a condition.
+    pub fn stiffness(&self, condition: usize) -> Stiffness {
+        match condition.checked_sub(1).and_then(|state| self.states.get(state)) {
+            Some(state) => state.stiffness,
+            None => self.shop_stiffness,
+        }
     }
 
     /// Factor (K − μ)²/(4 K tan φ) of the chamfer in the press force.

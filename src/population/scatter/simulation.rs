@@ -201,13 +201,28 @@ impl<'a> Plan<'a> {
 }
 
 impl Plan<'_> {
+    /// How much stiffer a condition is than the shop where the moduli do not scatter; one where they do, and the stiffness
+    /// is worked out pair by pair.
+    fn stiffer(&self, condition: usize) -> f64 {
+        let model = self.model;
+        let stiffness = model.stiffness(condition);
+        if self.compliance_scatters || stiffness == model.shop_stiffness {
+            return 1.0;
+        }
+        let (hub, shaft) = (model.population.hub_modulus.mean(), model.population.shaft_modulus.mean());
+        model.compliance(hub, shaft) / model.compliance_with(stiffness, hub, shaft)
+    }
+
     /// An earlier condition with the same temperatures: its pressures are the same.
     fn earlier(&self, condition: usize) -> Option<usize> {
         if self.temperature_scatters {
             return None;
         }
         let thermal = self.model.thermal(condition);
-        (0..condition).find(|earlier| self.model.thermal(*earlier) == thermal)
+        let stiffness = self.model.stiffness(condition);
+        (0..condition).find(|earlier| {
+            self.model.thermal(*earlier) == thermal && self.model.stiffness(*earlier) == stiffness
+        })
     }
 }
 
@@ -217,8 +232,13 @@ struct Block {
     loss: Vec<f64>,
     friction: Vec<f64>,
     pressing: Vec<f64>,
-    /// 1/C, Pa/m.
+    hub_modulus: Vec<f64>,
+    shaft_modulus: Vec<f64>,
+    /// 1/C at the shop temperature, Pa/m.
     stiffness: Vec<f64>,
+    /// 1/C and μ/C in a state with other moduli, where these scatter.
+    warm_stiffness: Vec<f64>,
+    warm_gain: Vec<f64>,
     warm_hub: Vec<f64>,
     warm_shaft: Vec<f64>,
     hold: Vec<f64>,
@@ -241,7 +261,11 @@ impl Block {
             loss: vec![plan.model.smoothing_factor * roughness; BLOCK],
             friction: vec![population.friction.mean(); BLOCK],
             pressing: vec![population.pressing.mean(); BLOCK],
+            hub_modulus: zeros(),
+            shaft_modulus: zeros(),
             stiffness: vec![1.0 / compliance; BLOCK],
+            warm_stiffness: zeros(),
+            warm_gain: zeros(),
             warm_hub: zeros(),
             warm_shaft: zeros(),
             hold: zeros(),
@@ -274,9 +298,10 @@ impl Block {
             }
         }
         if plan.compliance_scatters {
-            plan.hub_modulus.fill(generator, scratch);
-            plan.shaft_modulus.fill(generator, other);
-            for ((stiffness, hub), shaft) in self.stiffness.iter_mut().zip(scratch.iter()).zip(other.iter()) {
+            let (hubs, shafts) = (&mut self.hub_modulus[..count], &mut self.shaft_modulus[..count]);
+            plan.hub_modulus.fill(generator, hubs);
+            plan.shaft_modulus.fill(generator, shafts);
+            for ((stiffness, hub), shaft) in self.stiffness.iter_mut().zip(hubs.iter()).zip(shafts.iter()) {
                 *stiffness = 1.0 / model.compliance(*hub, *shaft);
             }
         }
@@ -325,6 +350,23 @@ impl Block {
         self.events(plan, tally, count);
     }
 
+    /// Fills the stiffness of a condition pair by pair; false where that of the shop, times a number, is its own.
+    fn warm(&mut self, plan: &Plan<'_>, condition: usize) -> bool {
+        let model = plan.model;
+        let stiffness = model.stiffness(condition);
+        if !plan.compliance_scatters || stiffness == model.shop_stiffness {
+            return false;
+        }
+        let moduli = self.hub_modulus.iter().zip(&self.shaft_modulus);
+        for ((own, gain), ((hub, shaft), friction)) in
+            self.warm_stiffness.iter_mut().zip(&mut self.warm_gain).zip(moduli.zip(&self.friction))
+        {
+            *own = 1.0 / model.compliance_with(stiffness, *hub, *shaft);
+            *gain = friction * *own;
+        }
+        true
+    }
+
     fn press_forces(&mut self, model: &Model) {
         let thermal = model.shop_thermal;
         let round = PI * model.diameter;
@@ -343,6 +385,10 @@ impl Block {
             let state = number.and_then(|number| model.states.get(number));
             let warm = state.and_then(|state| state.warm.as_ref()).filter(|_| plan.temperature_scatters);
             let fixed = model.thermal(condition);
+            let stiffer = plan.stiffer(condition);
+            let own = self.warm(plan, condition);
+            let (gains, stiffness) =
+                if own { (&self.warm_gain, &self.warm_stiffness) } else { (&self.gain, &self.stiffness) };
             if let Some(warm) = warm {
                 for ((thermal, shaft), hub) in self.other.iter_mut().zip(&self.warm_shaft).zip(&self.warm_hub)
                 {
@@ -353,14 +399,10 @@ impl Block {
                 && *force > 0.0
                 && let Some(slips) = number.and_then(|number| tally.slips.get_mut(number))
             {
-                let held = held(
-                    &mut self.scratch,
-                    &self.hold,
-                    &self.gain,
-                    &self.other,
-                    warm.is_none().then_some(fixed),
-                );
-                let needed = force / model.area();
+                let held =
+                    held(&mut self.scratch, &self.hold, gains, &self.other, warm.is_none().then_some(fixed));
+                // A stiffer state needs less of the shop's pressure.
+                let needed = force / model.area() / stiffer;
                 let found =
                     counts(&held[..count], |held| held < needed, |held| held < plan.slip_safety * needed);
                 slips[0] += found[0];
@@ -372,7 +414,7 @@ impl Block {
             let pressures = held(
                 &mut self.scratch,
                 &self.stress,
-                &self.stiffness,
+                stiffness,
                 &self.other,
                 warm.is_none().then_some(fixed),
             );
@@ -380,7 +422,8 @@ impl Block {
             let highest = greatest(pressures);
             for (ring, failures) in model.rings.iter().zip(&mut tally.failures) {
                 let Some(failures) = failures.get_mut(condition) else { continue };
-                let (limit, wanted) = (ring.pressure, ring.pressure / ring.required);
+                let limit = ring.pressure / stiffer;
+                let wanted = limit / ring.required;
                 if highest > limit.min(wanted) {
                     let found = counts(pressures, |p| p > limit, |p| p > wanted);
                     failures[0] += found[0];

@@ -3,14 +3,14 @@
 use thiserror::Error;
 
 use super::ScatterError;
-use super::model::{Arithmetic, Limit, Model, Population, State, Warm};
+use super::model::{Arithmetic, Limit, Model, Population, State, Stiffness, Warm};
 use crate::diagnostic::Diagnostic;
 use crate::findings::failure;
 use crate::joint::population::{Bounds, Variation};
 use crate::joint::{Joint, SmoothingAt};
 use crate::material::{Kind as MaterialKind, Range};
 use crate::population::distribution::{Distribution, DistributionError, Shape};
-use crate::population::kernel::{KernelError, PlainJoint};
+use crate::population::kernel::{Condition, KernelError, PlainJoint};
 use crate::quantity::Kind;
 use crate::tolerance::{Limits, Member};
 
@@ -117,7 +117,12 @@ pub fn understood(joint: &Joint, read: &mut ReadList<'_>) -> Result<Understood, 
     } else {
         0.0
     });
+    let stiffness = |condition: &Condition| Stiffness {
+        hub: condition.hub_modulus / plain.elasticity.hub_modulus,
+        shaft: condition.shaft_modulus / plain.elasticity.shaft_modulus,
+    };
     let states = joint.duty.iter().zip(&plain.states).map(|(state, condition)| State {
+        stiffness: stiffness(condition),
         name: state.name.clone(),
         force: condition.axial_force.hypot(2.0 * condition.torque / joint.diameter),
         thermal: condition.thermal_interference,
@@ -154,6 +159,7 @@ pub fn understood(joint: &Joint, read: &mut ReadList<'_>) -> Result<Understood, 
         hub_stress: plain.hub.equivalent,
         chamfer_slope: plain.chamfer_angle.tan(),
         shop_thermal: plain.shop.thermal_interference,
+        shop_stiffness: stiffness(&plain.shop),
         states: states.collect(),
         rings: rings.collect(),
         arithmetic: Arithmetic {

@@ -4,7 +4,7 @@ use maud::{Markup, html};
 
 use super::Sheet;
 use super::table::{NONE, aligned, cell, safety, scrolling};
-use crate::findings::StateFindings;
+use crate::findings::{DutyFindings, StateFindings};
 use crate::joint::DutyState;
 use crate::report::units::Measure;
 
@@ -16,6 +16,9 @@ pub(super) fn body(sheet: Sheet) -> Markup {
         p.small {
             "Slip is judged at the loosest pair, strength at the tightest. Temperatures are those of the rings from the "
             "innermost outwards, in a radial gradient from face to face."
+            @if changed(sheet) {
+                " Young’s modulus is that at the temperature of each ring, in a radial gradient at the mean over its section."
+            }
         }
     }
 }
@@ -57,6 +60,7 @@ fn loads(sheet: Sheet) -> Markup {
     let duty = &sheet.findings.joint.duty;
     let shown: Vec<&Load> =
         LOADS.iter().filter(|load| load.always || duty.iter().any(|state| (load.of)(state) != 0.0)).collect();
+    let moduli = changed(sheet);
     let remarks = duty.iter().any(|state| !remark(state).is_empty());
     html! {
         thead {
@@ -64,20 +68,43 @@ fn loads(sheet: Sheet) -> Markup {
                 th scope="col" { "State" }
                 @for load in &shown { (head(load.name, &sheet.units.unit(load.measure))) }
                 (head("temperature", &sheet.units.unit(Measure::Temperature)))
+                @if moduli { (head("Young’s modulus", &sheet.units.unit(Measure::Modulus))) }
                 @if remarks { th scope="col" { "Kind" } }
             }
         }
         tbody {
-            @for state in duty {
+            @for (state, found) in duty.iter().zip(&sheet.findings.duty) {
                 tr {
                     th scope="row" { (state.name) }
                     @for load in &shown { (cell(sheet.units, load.measure, Some((load.of)(state)))) }
                     td.n { (temperatures(sheet, state)) }
+                    @if moduli { td.n { (youngs_moduli(sheet, found)) } }
                     @if remarks { td { (remark(state)) } }
                 }
             }
         }
     }
+}
+
+/// Whether the modulus of any ring in any state is not that of 20 °C.
+fn changed(sheet: Sheet) -> bool {
+    let rings = &sheet.findings.joint.rings;
+    let own = |found: &DutyFindings| {
+        let rings = rings.iter().zip(&found.youngs_moduli);
+        rings.into_iter().any(|(ring, modulus)| *modulus != ring.material.youngs_modulus.value)
+    };
+    sheet.findings.duty.iter().any(own)
+}
+
+/// One number when all rings have the same.
+fn youngs_moduli(sheet: Sheet, found: &DutyFindings) -> String {
+    let moduli = found.youngs_moduli.iter();
+    let mut all: Vec<String> =
+        moduli.map(|modulus| sheet.units.reading(Measure::Modulus, *modulus).number).collect();
+    if all.windows(2).all(|pair| pair[0] == pair[1]) {
+        all.truncate(1);
+    }
+    all.join(" / ")
 }
 
 fn remark(state: &DutyState) -> String {

@@ -8,7 +8,7 @@ use crate::joint::Ring;
 use crate::material::{Kind, Material, Origin, REFERENCE_TEMPERATURE};
 use crate::report::units::Measure;
 
-/// Temperatures at which the expansion is printed, K: both baths, then 100, 200 and 300 °C.
+/// Temperatures at which expansion and modulus are printed, K: both baths, then 100, 200 and 300 °C.
 const EXPANSION_AT: [f64; 5] = [77.36, 194.65, 373.15, 473.15, 573.15];
 
 /// A table for each ring; a material that several rings share is printed once.
@@ -50,6 +50,7 @@ fn table(sheet: Sheet, ring: &Ring) -> Markup {
                 (line("compressive strength", units.text(Measure::Pressure, value.value), &value.source))
             }
             (line("Young’s modulus", units.text(Measure::Modulus, material.youngs_modulus.value), &material.youngs_modulus.source))
+            (modulus(sheet, material))
             (line("Poisson’s ratio", units.text(Measure::Number, material.poisson.value), &material.poisson.source))
             (line("density", units.text(Measure::Density, material.density.value), &material.density.source))
             (expansion(sheet, material))
@@ -83,6 +84,36 @@ fn strength(sheet: Sheet, ring: &Ring) -> Markup {
                     td.origin { (strength.source) }
                 }
             }
+        }
+    }
+}
+
+/// Young's modulus at the temperatures of the expansion; a row that says so when only that of 20 °C is known.
+fn modulus(sheet: Sheet, material: &Material) -> Markup {
+    let temperature = |value: f64| sheet.units.text(Measure::Temperature, value);
+    let Some(curve) = &material.youngs_modulus_curve else {
+        return html! {
+            tr {
+                th scope="row" { "Young’s modulus at temperature" }
+                td { "no data: that of " (temperature(REFERENCE_TEMPERATURE)) " is taken" }
+                td.origin {}
+            }
+        };
+    };
+    let (low, high) = curve.range();
+    let values = EXPANSION_AT.iter().filter_map(|at| {
+        let modulus = material.youngs_modulus_at(*at).ok()?;
+        Some(format!("{} at {}", sheet.units.text(Measure::Modulus, modulus), temperature(*at)))
+    });
+    let values: Vec<String> = values.collect();
+    html! {
+        tr {
+            th scope="row" { "Young’s modulus at temperature" }
+            td {
+                (values.join("; "))
+                span.quiet { " (curve from " (temperature(low)) " to " (temperature(high)) ")" }
+            }
+            td.origin { (curve.source) }
         }
     }
 }

@@ -10,6 +10,10 @@ const WHY: &[(&str, &str)] = &[
     ("yield_safety", "where nothing stresses the ring, or its strength is not known"),
     ("hub_yield_safety", "where nothing stresses the hub, or its strength is not known"),
     ("shaft_yield_safety", "where nothing stresses the shaft, or its strength is not known"),
+    (
+        "youngs_modulus_curve",
+        "where the material has no modulus against temperature, so that of 20 °C is taken",
+    ),
     ("strength_mpa", "where the material has no strength of the kind that its criterion needs"),
     ("bending", "where a state has neither bending moment nor radial force"),
     ("loosening.speed_rpm", "where no speed opens the interface"),

@@ -7,7 +7,7 @@ use super::assembly::Assembly;
 use super::bearing::Bearing;
 use super::duty::Duty;
 use super::limits::Fit;
-use super::number::{celsius, finite, mega, microns, millimetres};
+use super::number::{celsius, finite, giga, mega, microns, millimetres};
 use super::pair::Pair;
 use super::service::Service;
 use crate::findings::{Findings, OnsetOfYield, Question, Verdict, VerdictUnit};
@@ -85,6 +85,8 @@ struct MaterialLine {
     origin: String,
     strength_mpa: Option<f64>,
     section_mm: f64,
+    youngs_modulus_gpa: f64,
+    youngs_modulus_curve: Option<String>,
 }
 
 impl Document {
@@ -180,6 +182,12 @@ fn materials(findings: &Findings) -> Vec<MaterialLine> {
             },
             strength_mpa: stress.strength.and_then(mega),
             section_mm: millimetres(ring.section),
+            youngs_modulus_gpa: giga(ring.material.youngs_modulus.value),
+            youngs_modulus_curve: ring
+                .material
+                .youngs_modulus_curve
+                .as_ref()
+                .map(|curve| curve.source.to_string()),
         })
         .collect()
 }

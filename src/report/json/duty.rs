@@ -2,7 +2,7 @@
 
 use serde::Serialize;
 
-use super::number::{celsius, finite, mega, rpm};
+use super::number::{celsius, finite, giga, mega, rpm};
 use super::pair::{Interface, Ring, rings};
 use super::service::Bending;
 use crate::findings::{DutyFindings, RingStress, StateFindings};
@@ -17,6 +17,7 @@ pub(super) struct Duty {
     speed_rpm: f64,
     temperatures_c: Vec<f64>,
     temperature_rises_k: Vec<f64>,
+    youngs_moduli_gpa: Vec<f64>,
     inner_pressure_mpa: Option<f64>,
     outer_pressure_mpa: Option<f64>,
     bending_moment_nm: f64,
@@ -51,6 +52,7 @@ impl Duty {
             speed_rpm: rpm(state.speed),
             temperatures_c: state.temperatures.iter().map(|temperature| celsius(*temperature)).collect(),
             temperature_rises_k: state.temperature_rises.clone(),
+            youngs_moduli_gpa: found.youngs_moduli.iter().map(|modulus| giga(*modulus)).collect(),
             inner_pressure_mpa: mega(state.inner_pressure),
             outer_pressure_mpa: mega(state.outer_pressure),
             bending_moment_nm: state.bending_moment,

@@ -10,6 +10,11 @@ pub(super) fn mega(pascals: f64) -> Option<f64> {
     finite(pascals * 1e-6)
 }
 
+/// GPa of a modulus in Pa, without the noise of the factor.
+pub(super) fn giga(pascals: f64) -> f64 {
+    settled(pascals * 1e-9, 1e9, 1e-12)
+}
+
 /// Last bits of a difference of two sizes below a metre, in µm: what remains of it when sizes are subtracted.
 const NOISE_UM: f64 = 2e-10;
 
