@@ -609,3 +609,58 @@ proptest! {
         prop_assert!((pressure - expected).abs() <= 1e-7 * expected.max(1e6), "{pressure} {expected}");
     }
 }
+
+/// The pressure at the edges of a stepped seat is that of the slices there, not the mean: the weaker end gapes first, and the
+/// greater bore is the weaker section of the shaft.
+#[test]
+fn a_stepped_seat_is_bent_at_its_end_slices() {
+    let text = |duty: &str| {
+        format!(
+            "joint_file: 1\ndiameter: 80 mm\nlength: 90 mm\nfriction: {{holding: 0.12}}\nsmoothing: {{factor: 0}}\n\
+             shaft: {{material: 42CrMo4+QT, steps: [{{length: 60 mm, bore: 0 mm}}, {{length: 30 mm, bore: 40 mm}}]}}\n\
+             hub: {{material: C45+N, steps: [{{length: 20 mm, outer_diameter: 90 mm}}, {{length: 70 mm, outer_diameter: 180 mm}}]}}\n\
+             fit: {{hole: {{lower: 0 um, upper: 0 um}}, shaft: {{lower: 60 um, upper: 60 um}}}}\n{duty}"
+        )
+    };
+    let found = findings(&text("duty: [{state: bent, bending_moment: 4 kN.m, rotating_bending: yes}]"));
+    let slices = &found.extremes.loosest.slices;
+    let (first, last) = (slices.first().unwrap(), slices.last().unwrap());
+    assert!(first.pressure < 0.5 * last.pressure);
+    let change = 12.0 * 4000.0 / (PI * 0.080 * 0.090 * 0.090);
+    let bending = found.duty[0].loosest.bending.unwrap();
+    assert_relative_eq!(bending.edge_change, change, max_relative = 1e-12);
+    assert_relative_eq!(bending.least_edge, first.pressure - change, max_relative = 1e-9);
+    assert_relative_eq!(bending.greatest_edge, last.pressure + change, max_relative = 1e-9);
+    let gaping = found.verdicts.iter().find(|verdict| verdict.subject.contains("gaping")).unwrap();
+    assert_relative_eq!(gaping.found.unwrap(), first.pressure / change, max_relative = 1e-9);
+    assert!(!gaping.ok);
+    // The collar's stresses are proportional to its pressure, so its safety falls as the pressure rises.
+    let collar = first.rings[1].safety.unwrap() * first.pressure / (first.pressure + change);
+    let edge = found.verdicts.iter().find(|verdict| verdict.subject.contains("loaded edge")).unwrap();
+    assert_relative_eq!(edge.found.unwrap(), collar, max_relative = 1e-9);
+    // Nominal stress of the drilled end, 32 M d/(π (d⁴ − b⁴)).
+    let nominal = 32.0 * 4000.0 * 0.080 / (PI * (0.080f64.powi(4) - 0.040f64.powi(4)));
+    assert_relative_eq!(found.service.fatigue[0].nominal_stress, nominal, max_relative = 1e-12);
+}
+
+/// Torsion 16 T/(π d³) and bending 32 M/(π d³) of the shaft itself, by von Mises: the verdicts do not judge them, a caution does.
+#[test]
+fn a_shaft_that_its_own_load_brings_near_yield_is_named() {
+    let joint = |torque: f64| {
+        let duty = format!(
+            "duty: [{{state: rated, torque: {torque} N.m, bending_moment: 1000 N.m, rotating_bending: yes}}]"
+        );
+        let shaft = format!("material: {{{STEEL}300 MPa, tensile_strength: 500 MPa}}");
+        two_parts(&shaft, &steel(900, HUB), 50.0, &duty)
+    };
+    let named =
+        |found: &Findings, words: &str| found.cautions.iter().any(|caution| caution.text.contains(words));
+    // σ = τ = 122.2 MPa at 3 kN·m: √(σ² + 3 τ²) = 244.5 MPa, 1.227 against 300 MPa, printed as 1.22; 141 MPa at 1 kN·m.
+    // 1.25 is required.
+    let found = joint(3000.0);
+    assert!(named(&found, "244.5 MPa at the hub's edge"), "{:#?}", found.cautions);
+    assert!(named(&found, "1.22 against its yield strength of 300 MPa"));
+    assert!(!named(&joint(1000.0), "against its yield strength"));
+    let fatigue = found.service.fatigue[0];
+    assert!(fatigue.safety.low < 1.0 && named(&found, "Rotating bending in state rated may break the shaft"));
+}

@@ -1,6 +1,6 @@
 //! Cautions and notes that the numbers of a joint call for.
 
-use super::{Caution, Findings, bearing_of, fatigue, joining_cautions, modulus_notes};
+use super::{Caution, Findings, bearing_of, fatigue, joining_cautions, modulus_notes, shaft_alone};
 use crate::joint::Allow;
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
@@ -16,6 +16,7 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     all.extend(proportions(findings));
     all.extend(polymers(findings));
     all.extend(buckling(findings));
+    all.extend(shaft_alone::cautions(findings));
     all.extend(bearing_of::cautions(findings));
     all.extend(joining_cautions::cautions(findings));
     all
@@ -196,7 +197,7 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
     notes.extend(findings.assembly.times.gaps.iter().cloned());
     notes.push(
         "Covered: rings in plane stress, elastic unless the hub may yield by design, with rotation, temperature and steady \
-         heat flow. Not covered: hub ends and edges (the edge pressure of a sharp hub on a through shaft is about 1.5 to 1.7 times the mean), axial \
+         heat flow. Not covered: hub ends and edges (the edge pressure of a sharp hub on a through shaft is about 1.5 to 1.7 times the mean), the shaft's own torsion and bending beside the fit, axial \
          friction while joining (0 to 10 % more pressure), form errors, creep, fretting."
             .to_owned(),
     );

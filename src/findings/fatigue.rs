@@ -70,9 +70,15 @@ fn ground(roughness: f64) -> f64 {
     roughness.max(1e-6)
 }
 
+/// Bore of the shaft at the hub's edges, m: of a stepped joint the greater of both ends, where the section is weaker.
+pub(super) fn bore_at_the_edges(joint: &Joint) -> f64 {
+    let ends = joint.slices.first().into_iter().chain(joint.slices.last());
+    ends.map(|slice| slice.shaft_bore).reduce(f64::max).unwrap_or(joint.shaft_and_hub().0.inner_diameter)
+}
+
 fn of_state(joint: &Joint, index: usize, state: &DutyState, tensile: f64) -> Result<Fatigue, MechanicsError> {
     let (shaft, _) = joint.shaft_and_hub();
-    let (outer, inner) = (shaft.outer_diameter, shaft.inner_diameter);
+    let (outer, inner) = (shaft.outer_diameter, bore_at_the_edges(joint));
     let nominal_stress =
         32.0 * state.bending_moment * outer / (std::f64::consts::PI * (outer.powi(4) - inner.powi(4)));
     let formula_notch = match notch::press_fit_bending(tensile) {

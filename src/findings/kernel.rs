@@ -206,7 +206,7 @@ impl<'a> Kernel<'a> {
             torque_capacity: least(&interfaces, |interface| interface.torque_capacity),
             axial_capacity: least(&interfaces, |interface| interface.axial_capacity),
             slip_safety: loaded.then(|| least(&interfaces, slip)),
-            bending: self.bending(state, pressure),
+            bending: self.bending(state, &solved, relaxation)?,
             rings: self.stresses(&solved)?,
             interfaces,
         })
@@ -293,20 +293,43 @@ impl<'a> Kernel<'a> {
             .collect()
     }
 
-    fn bending(&self, state: &DutyState, pressure: f64) -> Option<BendingFindings> {
+    /// Bending at the edges; of a stepped joint at the slices there, whose pressure is not the mean one.
+    fn bending(
+        &self,
+        state: &DutyState,
+        solved: &[Solved],
+        relaxation: f64,
+    ) -> Result<Option<BendingFindings>, FindingsError> {
         if state.bending_moment == 0.0 && state.radial_force == 0.0 {
-            return None;
+            return Ok(None);
         }
-        let diameter = self.joint.interface_diameter(self.joint.last_interface());
+        let last = self.joint.last_interface();
+        let diameter = self.joint.interface_diameter(last);
         let length = self.joint.engaged_length();
         let radial = 2.0 * state.radial_force / (std::f64::consts::PI * diameter * length);
         let per_moment = 12.0 / (std::f64::consts::PI * diameter * length * length);
-        Some(BendingFindings {
-            edge_change: per_moment * state.bending_moment + radial,
-            least_edge: pressure - per_moment * state.bending_moment - radial,
-            greatest_edge: pressure + per_moment * state.bending_moment + radial,
-            limiting_moment: ((pressure - radial) / per_moment).max(0.0),
-        })
+        let edge_change = per_moment * state.bending_moment + radial;
+        let ends: Vec<&Solved> = solved.first().into_iter().chain(solved.last()).collect();
+        let pressures = || ends.iter().map(|end| relaxation * at(&end.solution.pressures, last));
+        let low = pressures().fold(f64::INFINITY, f64::min);
+        let high = pressures().fold(0.0, f64::max);
+        let mut weakest: Option<(usize, f64)> = None;
+        for (end, pressure) in ends.iter().zip(pressures()).filter(|_| !self.joint.slices.is_empty()) {
+            for (ring, stress) in self.piece_stresses(end)?.iter().enumerate() {
+                let Some(safety) = stress.safety else { continue };
+                let loaded = safety * pressure / (pressure + edge_change);
+                if weakest.is_none_or(|(_, known)| loaded < known) {
+                    weakest = Some((ring, loaded));
+                }
+            }
+        }
+        Ok(Some(BendingFindings {
+            edge_change,
+            least_edge: low - edge_change,
+            greatest_edge: high + edge_change,
+            limiting_moment: ((low - radial) / per_moment).max(0.0),
+            weakest,
+        }))
     }
 
     /// Stresses of the rings when only these interferences act, at rest, with the pressure they make: no free strain,

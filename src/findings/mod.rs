@@ -14,6 +14,7 @@ mod kernel;
 mod modulus_notes;
 pub mod press_work;
 mod service;
+mod shaft_alone;
 mod softening;
 mod thermal_part;
 pub mod times;
@@ -209,12 +210,15 @@ pub struct SliceFindings {
 pub struct BendingFindings {
     /// Change of pressure at the edges, Pa.
     pub edge_change: f64,
-    /// Least pressure at an edge, Pa; negative means that it gapes.
+    /// Least pressure at an edge, Pa, of a stepped joint that of the weaker end; negative means that it gapes.
     pub least_edge: f64,
     /// Greatest pressure at an edge, Pa.
     pub greatest_edge: f64,
     /// Bending moment at which an edge begins to gape, N·m.
     pub limiting_moment: f64,
+    /// Ring of a stepped joint that is nearest to its strength at a loaded edge, with its safety there: that of its slice, by
+    /// the rise of the pressure.
+    pub weakest: Option<(usize, f64)>,
 }
 
 /// Where the first ring starts to yield (or break, when brittle).

@@ -99,8 +99,11 @@ fn edges(findings: &Findings) -> Vec<Verdict> {
     let mut verdicts = Vec::new();
     for (state, duty) in findings.joint.duty.iter().zip(&findings.duty) {
         if let Some(bending) = &duty.loosest.bending {
-            let found =
-                if bending.edge_change > 0.0 { duty.loosest.pressure / bending.edge_change } else { 0.0 };
+            let found = if bending.edge_change > 0.0 {
+                (bending.least_edge + bending.edge_change) / bending.edge_change
+            } else {
+                0.0
+            };
             verdicts.push(Verdict {
                 question: Question::Hold,
                 subject: "safety against a gaping edge".to_owned(),
@@ -111,10 +114,12 @@ fn edges(findings: &Findings) -> Vec<Verdict> {
                 at: format!("loosest pair, {}", state.name),
             });
         }
-        if let (Some(bending), Some(onset)) = (&duty.tightest.bending, &findings.onset_of_yield) {
+        let Some(bending) = &duty.tightest.bending else { continue };
+        let onset = findings.onset_of_yield.as_ref();
+        let by_onset = onset.map(|onset| (onset.ring, onset.pressure / bending.greatest_edge));
+        if let Some((ring, found)) = bending.weakest.or(by_onset) {
             let required =
-                findings.joint.rings.get(onset.ring).map(|ring| required_strength_safety(findings, ring));
-            let found = onset.pressure / bending.greatest_edge;
+                findings.joint.rings.get(ring).map(|ring| required_strength_safety(findings, ring));
             verdicts.push(Verdict {
                 question: Question::Strength,
                 subject: "safety of the loaded edge".to_owned(),

@@ -33,6 +33,7 @@
 //! ```
 
 mod error;
+mod factor;
 mod newtype;
 mod range;
 mod read;
@@ -45,6 +46,7 @@ mod write;
 mod tests;
 
 pub use error::QuantityError;
+pub use factor::{factor_found, factor_required};
 pub use newtype::{
     Angle, Conductivity, Density, ExpansionCoefficient, Force, HELP_SEPARATOR, HeatTransfer, Length, Mass,
     Number, NumberRange, Pressure, SpecificHeat, Speed, Temperature, TemperatureDifference, Time, Torque,

@@ -266,7 +266,7 @@ pub fn press(findings: &Findings) -> Vec<String> {
             "Free-standing the {} gives way at {}, {} times the peak (slenderness {}, {formula}).",
             shaft.name,
             show(Measure::Force, buckling.force, system),
-            super::terminal::safety(safety),
+            crate::quantity::factor_found(safety),
             number(buckling.slenderness, 3)
         ));
     }
@@ -287,7 +287,7 @@ fn warming(findings: &Findings, work: &PressWorkFindings) -> String {
 fn face_text(findings: &Findings, name: &str, face: &FaceFindings) -> String {
     let stress = show(Measure::Pressure, face.stress, findings.joint.display);
     match face.safety {
-        Some(safety) => format!("{name} {stress}, safety {}", super::terminal::safety(safety)),
+        Some(safety) => format!("{name} {stress}, safety {}", crate::quantity::factor_found(safety)),
         None => format!("{name} {stress}"),
     }
 }
@@ -314,7 +314,7 @@ pub fn release(findings: &Findings) -> Vec<String> {
         }
     };
     let safety = work.oil.1.map_or_else(String::new, |safety| {
-        format!(", which leaves the {} a safety of {}", hub.name, super::terminal::safety(safety))
+        format!(", which leaves the {} a safety of {}", hub.name, crate::quantity::factor_found(safety))
     });
     vec![
         format!(

@@ -2,7 +2,7 @@
 
 use crate::findings::{Findings, Loosening, PLAIN_SHARE, PairFindings};
 use crate::mechanics::plastic::{Regime, YieldRule};
-use crate::quantity::{Measure, show};
+use crate::quantity::{Measure, factor_found, show};
 
 /// The sentences that the joint calls for.
 pub fn sentences(findings: &Findings) -> Vec<String> {
@@ -235,7 +235,7 @@ fn fatigue(findings: &Findings) -> Vec<String> {
             Some(format!(
                 "Rotating bending in state {}: nominal stress of the shaft {}; notch factor at a plain hub edge {:.1} to {:.1}, \
                  size {:.2}, surface {:.2} (DIN 743-2, from memory; tests of Horger & Maulbetsch 1936), together {:.1} to \
-                 {:.1}; with {} of the tensile strength for a small polished bar (from memory) the safety is {:.2} to {:.2}. \
+                 {:.1}; with {} of the tensile strength for a small polished bar (from memory) the safety is {} to {}. \
                  Figures of steel shafts; not a fatigue calculation.",
                 state.name,
                 show(Measure::Pressure, fatigue.nominal_stress, joint.display),
@@ -246,8 +246,8 @@ fn fatigue(findings: &Findings) -> Vec<String> {
                 fatigue.reduction.low,
                 fatigue.reduction.high,
                 PLAIN_SHARE,
-                fatigue.safety.low,
-                fatigue.safety.high,
+                factor_found(fatigue.safety.low),
+                factor_found(fatigue.safety.high),
             ))
         })
         .collect()

@@ -11,6 +11,7 @@ use super::bearing;
 use super::seating::time_allowed;
 use crate::findings::{Findings, PairFindings, Question, Verdict, VerdictUnit};
 use crate::quantity::{Measure, UnitSystem, display_unit, show};
+use crate::quantity::{factor_found, factor_required};
 use crate::tolerance::{Character, Extremes};
 
 /// Width of the text.
@@ -121,7 +122,7 @@ pub fn question_name(question: Question) -> &'static str {
 /// A verdict's number with its unit.
 pub fn verdict_value(value: f64, unit: VerdictUnit, system: UnitSystem) -> String {
     match unit {
-        VerdictUnit::Safety => safety(value),
+        VerdictUnit::Safety => factor_found(value),
         VerdictUnit::Force => show(Measure::Force, value, system).to_string(),
         VerdictUnit::Temperature => show(Measure::Temperature, value, system).to_string(),
         VerdictUnit::Share => format!("{:.1} %", value * 100.0),
@@ -129,12 +130,11 @@ pub fn verdict_value(value: f64, unit: VerdictUnit, system: UnitSystem) -> Strin
     }
 }
 
-/// A safety factor, rounded down so that a printed figure never passes what the number fails.
-pub fn safety(value: f64) -> String {
-    if value >= 100.0 {
-        "over 100".to_owned()
-    } else {
-        format!("{:.2}", (value * 100.0 + 1e-9).floor() / 100.0)
+/// What a verdict requires, with its unit.
+pub fn verdict_required(value: f64, unit: VerdictUnit, system: UnitSystem) -> String {
+    match unit {
+        VerdictUnit::Safety => factor_required(value),
+        other => verdict_value(value, other, system),
     }
 }
 
@@ -176,8 +176,9 @@ pub fn verdict_sentence(verdict: &Verdict, system: UnitSystem) -> String {
         VerdictUnit::Force | VerdictUnit::Share => "at most",
         VerdictUnit::Temperature => "limit",
     };
-    let required =
-        verdict.required.map_or_else(String::new, |number| format!(" ({bound} {})", value(number)));
+    let required = verdict.required.map_or_else(String::new, |number| {
+        format!(" ({bound} {})", verdict_required(number, verdict.unit, system))
+    });
     format!("{} {found}{required}; {}", verdict.subject, verdict.at)
 }
 
@@ -263,7 +264,7 @@ pub fn extreme_rows(findings: &Findings) -> Vec<(String, Extremes<Option<String>
             findings
                 .extremes
                 .as_ref()
-                .map(|pair| pair.rings.get(index).and_then(|stress| stress.safety).map(safety)),
+                .map(|pair| pair.rings.get(index).and_then(|stress| stress.safety).map(factor_found)),
         ));
     }
     rows.push(measured("torque at slip", Measure::Torque, |pair| pair.torque_capacity));
@@ -297,8 +298,8 @@ fn duty(out: &mut String, findings: &Findings) {
                 show(Measure::Pressure, found.pressure, system).number,
                 show(Measure::Torque, found.torque_capacity, system).number,
                 show(Measure::Force, found.axial_capacity, system).number,
-                found.slip_safety.map_or_else(|| "-".to_owned(), safety),
-                least.map_or_else(|| "-".to_owned(), safety),
+                found.slip_safety.map_or_else(|| "-".to_owned(), factor_found),
+                least.map_or_else(|| "-".to_owned(), factor_found),
             ]);
         }
     }

@@ -1,7 +1,7 @@
 //! Bending at the edges of the seat in each state, and what it leaves of the shaft's fatigue strength.
 
 use super::super::expression::{Expression, Function, greatest, least, num, sym};
-use super::super::fatigue::{Fatigue, PLAIN_SHARE, TESTED_DIAMETER, TESTED_NOTCH};
+use super::super::fatigue::{Fatigue, PLAIN_SHARE, TESTED_DIAMETER, TESTED_NOTCH, bore_at_the_edges};
 use super::super::{BendingFindings, Findings};
 use super::Units;
 use super::sheet::Sheet;
@@ -27,10 +27,12 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         let worked = plain && sheet.knows(&name("p_"));
         let loosest_pressure = name(if worked { "p_" } else { "p_a" });
         if !worked {
-            input_pressure(sheet, units, &loosest_pressure, "loosest", duty.loosest.pressure);
+            let pressure = loosest.least_edge + loosest.edge_change;
+            input_pressure(sheet, units, &loosest_pressure, "loosest", pressure);
         }
         let tightest_pressure = name("p_b");
-        input_pressure(sheet, units, &tightest_pressure, "tightest", duty.tightest.pressure);
+        let pressure = tightest.greatest_edge - tightest.edge_change;
+        input_pressure(sheet, units, &tightest_pressure, "tightest", pressure);
         let pressures = [loosest_pressure.as_str(), &tightest_pressure];
         edges(sheet, units, &name, state, [loosest, tightest], pressures);
         let found = findings.service.fatigue.iter().find(|found| found.state == index);
@@ -116,7 +118,7 @@ fn edges(
 }
 
 fn input_pressure(sheet: &mut Sheet, units: &Units, symbol: &str, pair: &str, pressure: f64) {
-    let meaning = format!("contact pressure in this state, {pair} pair");
+    let meaning = format!("contact pressure at the edges in this state, {pair} pair");
     sheet.input(symbol, &meaning, pressure * units.per_pascal, units.pressure, "pressures in service");
 }
 
@@ -128,7 +130,8 @@ fn shaft(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let (shaft, _) = findings.joint.shaft_and_hub();
     let Some(tensile) = shaft.strength.tensile_strength else { return };
     let Some(found) = findings.service.fatigue.first() else { return };
-    let (outer, bore) = (shaft.outer_diameter * units.per_metre, shaft.inner_diameter * units.per_metre);
+    let bore = bore_at_the_edges(&findings.joint) * units.per_metre;
+    let outer = shaft.outer_diameter * units.per_metre;
     let name = &shaft.name;
     sheet.input("d_f", &format!("diameter of the {name}"), outer, units.length, "joint file");
     sheet.input("b_f", &format!("bore of the {name}"), bore, units.length, "joint file");

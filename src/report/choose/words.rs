@@ -5,8 +5,8 @@ use crate::joint::{Method, Ring};
 use crate::population::choose::{
     Basis, Change, Choice, ChosenFit, Opening, Parameter, Requirement, Subject, WORKSHOP,
 };
+use crate::quantity::factor_found as safety;
 use crate::quantity::{Measure, UnitSystem, display_unit, show};
-use crate::report::terminal::safety;
 use crate::tolerance::iso286::Grade;
 
 /// Fits that are shown when not all are asked for.

@@ -2,7 +2,7 @@
 
 use maud::{Markup, html};
 
-use super::table::{NONE, safety, scrolling};
+use super::table::{NONE, safety, safety_required, scrolling};
 use super::{Sheet, capital};
 use crate::findings::{Question, Verdict, VerdictUnit};
 use crate::joint::Method;
@@ -50,7 +50,10 @@ fn governing<'a>(sheet: Sheet<'a>, question: Question) -> Option<&'a Verdict> {
 fn hold(sheet: Sheet) -> String {
     let Some(verdict) = governing(sheet, Question::Hold) else { return String::new() };
     match (verdict.ok, verdict.found) {
-        (true, Some(found)) => format!("holds with {} against slip ({})", safety(found), verdict.at),
+        (true, Some(found)) => {
+            let against = verdict.subject.strip_prefix("safety ").unwrap_or(&verdict.subject);
+            format!("holds with {} {against} ({})", safety(found), verdict.at)
+        }
         (true, None) => format!("holding is not judged ({})", verdict.at),
         (false, found) => format!("does NOT hold: {}", shortfall(sheet.units, verdict, found)),
     }
@@ -116,11 +119,15 @@ fn shortfall(units: Units, verdict: &Verdict, found: Option<f64>) -> String {
         Some(required) => format!(
             "{} {found} where {} is required ({})",
             verdict.subject,
-            shown(units, verdict.unit, required),
+            asked(units, verdict.unit, required),
             verdict.at
         ),
         None => format!("{} {found} ({})", verdict.subject, verdict.at),
     }
+}
+
+fn asked(units: Units, unit: VerdictUnit, value: f64) -> String {
+    if unit == VerdictUnit::Safety { safety_required(value) } else { shown(units, unit, value) }
 }
 
 fn shown(units: Units, unit: VerdictUnit, value: f64) -> String {
@@ -181,7 +188,7 @@ fn required(sheet: Sheet, verdict: &Verdict) -> String {
         VerdictUnit::Temperature if chilled => "≥",
         VerdictUnit::Force | VerdictUnit::Temperature | VerdictUnit::Share => "≤",
     };
-    format!("{sense} {}", shown(sheet.units, verdict.unit, value))
+    format!("{sense} {}", asked(sheet.units, verdict.unit, value))
 }
 
 fn result(verdict: &Verdict) -> &'static str {

@@ -2,7 +2,7 @@
 
 use maud::{Markup, html};
 
-use super::table::{range_text, safety, scrolling};
+use super::table::{range_text, safety_required, scrolling};
 use super::{Sheet, part};
 use crate::findings::bath_name;
 use crate::joint::{Allow, Joint, Method, Ring, Slice, SmoothingAt};
@@ -286,12 +286,12 @@ fn requirements(sheet: Sheet) -> Vec<Input> {
     let require = &joint.require;
     let brittle =
         |wanted: bool| joint.rings.iter().any(|ring| (ring.material.kind == Kind::Brittle) == wanted);
-    let mut rows = vec![Input::new("require.slip_safety", safety(require.slip_safety))];
+    let mut rows = vec![Input::new("require.slip_safety", safety_required(require.slip_safety))];
     if brittle(false) {
-        rows.push(Input::new("require.yield_safety", safety(require.yield_safety)));
+        rows.push(Input::new("require.yield_safety", safety_required(require.yield_safety)));
     }
     if brittle(true) {
-        rows.push(Input::new("require.fracture_safety", safety(require.fracture_safety)));
+        rows.push(Input::new("require.fracture_safety", safety_required(require.fracture_safety)));
     }
     let allow = match require.allow {
         Allow::Elastic => "elastic".to_owned(),

@@ -4,6 +4,7 @@ use maud::{Markup, html};
 
 use super::Sheet;
 use crate::material::Range;
+use crate::quantity::{factor_found, factor_required};
 use crate::report::typeset::{at_point, number};
 use crate::report::units::{Measure, Units};
 
@@ -35,9 +36,14 @@ pub(super) fn range_text(units: Units, measure: Measure, range: Range) -> String
     if low == high { low } else { format!("{low} to {high}") }
 }
 
-/// A safety factor, to two decimals.
+/// A safety factor that was found.
 pub(super) fn safety(value: f64) -> String {
-    number(&format!("{value:.2}"))
+    number(&factor_found(value))
+}
+
+/// A safety factor that is required.
+pub(super) fn safety_required(value: f64) -> String {
+    number(&factor_required(value))
 }
 
 /// A table that scrolls inside itself on a narrow screen.
