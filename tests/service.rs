@@ -648,10 +648,10 @@ fn a_stepped_seat_is_bent_at_its_end_slices() {
 fn a_shaft_that_its_own_load_brings_near_yield_is_named() {
     let joint = |torque: f64| {
         let duty = format!(
-            "duty: [{{state: rated, torque: {torque} N.m, bending_moment: 1000 N.m, rotating_bending: yes}}]"
+            "duty: [{{state: rated, torque: {torque} N.m, bending_moment: 1500 N.m, rotating_bending: yes}}]"
         );
-        let shaft = format!("material: {{{STEEL}300 MPa, tensile_strength: 500 MPa}}");
-        two_parts(&shaft, &steel(900, HUB), 50.0, &duty)
+        let rest = format!("require: {{yield_safety: 1.25}}\n{duty}");
+        two_parts(&steel(300, ""), &steel(900, HUB), 50.0, &rest)
     };
     let named =
         |found: &Findings, words: &str| found.cautions.iter().any(|caution| caution.text.contains(words));
