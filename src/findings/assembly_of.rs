@@ -100,15 +100,16 @@ fn constant_coefficient(ring: &Ring, temperature: f64, diameter: f64) -> Option<
 
 fn press_curve(joint: &Joint, pair: &PairFindings, friction: f64) -> Result<PressCurve, FindingsError> {
     Ok(press::press_curve(
-        &press_input(joint, pair.pressure, pair.effective_interference, friction),
+        &press_input(joint, pair.pressure, pair.shop_interference, friction),
         CURVE_POINTS,
     )?)
 }
 
-/// The pressing-in of one pair.
+/// The pressing-in of one pair with its interference at the shop temperature, where it is pressed.
 pub(super) fn press_input(joint: &Joint, pressure: f64, interference: f64, friction: f64) -> PressInput {
     PressInput {
-        pressure,
+        // Parts that only just part may have a pressure of rounding left.
+        pressure: if interference > 0.0 { pressure } else { 0.0 },
         interference: interference.max(0.0),
         diameter: joint.interface_diameter(joint.last_interface()),
         length: joint.engaged_length(),

@@ -75,6 +75,9 @@ pub struct PairFindings {
     pub smoothing: f64,
     /// Interference that grips, m; negative is clearance.
     pub effective_interference: f64,
+    /// Interference that acts at the shop temperature, m: [`Self::effective_interference`] with the difference of free
+    /// growth from 20 °C and, with more than two rings, what the joints made before strain the parts.
+    pub shop_interference: f64,
     /// Contact pressure, Pa; zero when the pair has clearance.
     pub pressure: f64,
     /// Contact pressure had the smoothing loss been taken, Pa.

@@ -29,6 +29,7 @@
 //! | `interference_um` | diametral interference as made, negative for clearance |
 //! | `smoothing_um` | loss by smoothing that was taken |
 //! | `effective_interference_um` | interference that grips |
+//! | `shop_interference_um` | the same with the difference of free growth from 20 °C to the shop temperature |
 //! | `pressure_mpa` | contact pressure; `pressure_smoothed_mpa` and `pressure_unsmoothed_mpa` with and without the loss |
 //! | `hub_bore_*`, `hub_rim_*` | stress in the outermost ring |
 //! | `shaft_surface_*`, `shaft_bore_*` | stress in the innermost ring; of a solid shaft `shaft_bore` is the centre |

@@ -46,9 +46,9 @@ fn press(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     sheet.formula(
         "c",
         "length of chamfer that meets the bore",
-        sym("W_max") / num("1000") / (num("2") * tan()),
+        super::strength::grip("W_max", "eps_s", "eps_h") / (num("2") * tan()),
         units.length,
-        EQUILIBRIUM,
+        "overlap at the shop temperature over the slope of the chamfer",
         Some(curve.lead_in * units.per_metre),
     );
     sheet.formula(
