@@ -14,6 +14,10 @@ use crate::tolerance::Extremes;
 /// case-hardened ones (from memory).
 pub const HOOP_LIMIT: f64 = 130e6;
 
+/// Where [`HOOP_LIMIT`] comes from.
+pub const RING_LIMIT_SOURCE: &str =
+    "bearing handbooks, 120 to 130 MPa for through-hardened rings (from memory)";
+
 /// Usual limit for sealed or greased bearings, K: 80 °C (common practice, from memory).
 const SEALED_LIMIT: f64 = 353.15;
 
@@ -45,6 +49,8 @@ pub struct BearingFindings {
 pub struct BearingState {
     /// How much warmer the inner ring is than the outer, K.
     pub inner_hotter_by: f64,
+    /// Mean expansion coefficient of the fitted ring between both temperatures, 1/K; zero when they are equal.
+    pub expansion: f64,
     /// Loss of clearance by the fit, loosest and tightest pair.
     pub loss: Range,
     /// What is left; negative is preload.
@@ -116,10 +122,12 @@ impl Work<'_> {
         let hotter = if ring > shop { self.seat.inner_hotter_by.value } else { 0.0 };
         let loss =
             Range { low: self.loss(found.loosest.pressure)?, high: self.loss(found.tightest.pressure)? };
+        let expansion = self.expansion(ring, hotter)?;
         Ok(BearingState {
             inner_hotter_by: hotter,
+            expansion,
             loss,
-            left: self.left(before, loss, self.expansion(ring, hotter)?, hotter)?,
+            left: self.left(before, loss, expansion, hotter)?,
         })
     }
 
@@ -164,7 +172,7 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
                 show(Measure::Pressure, hoop, system),
                 show(Measure::Pressure, HOOP_LIMIT, system),
             ),
-            "bearing handbooks, 120 to 130 MPa for through-hardened rings (from memory)",
+            RING_LIMIT_SOURCE,
         );
     }
     let hot = findings

@@ -18,7 +18,7 @@ mod verdicts;
 pub mod worksheet;
 
 pub use assembly_of::{bath_name, bath_temperature};
-pub use bearing_of::{BearingFindings, BearingState, HOOP_LIMIT};
+pub use bearing_of::{BearingFindings, BearingState, HOOP_LIMIT, RING_LIMIT_SOURCE};
 pub use cautions::criterion_source;
 use cold_bath::ColdBathFindings;
 pub use compute::{FindingsError, compute};

@@ -14,9 +14,22 @@ const JOINING: &str = "clearance of both expanded diameters";
 
 pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     press(sheet, findings, units);
-    match findings.joint.assembly.method {
-        Method::HeatHub | Method::HeatAndChill => heat(sheet, findings, units),
+    let joint = &findings.joint;
+    let shop = joint.assembly.shop_temperature;
+    let alone = findings.assembly.heat_hub.temperature;
+    match joint.assembly.method {
+        Method::HeatHub => heat(sheet, findings, units, ("", shop, alone)),
+        Method::HeatAndChill => {
+            let bath = findings.assembly.baths.iter().find(|bath| bath.bath == joint.assembly.bath);
+            if let Some(bath) = bath {
+                heat(sheet, findings, units, ("", bath.temperature, bath.hub_temperature));
+            }
+        }
         Method::Press | Method::ChillShaft => {}
+    }
+    // What is mounted warm by its maker's advice is told the temperature whatever the method.
+    if joint.bearing.is_some() && joint.assembly.method != Method::HeatHub {
+        heat(sheet, findings, units, ("B", shop, alone));
     }
     super::cold_bath::write(sheet, findings);
 }
@@ -114,30 +127,34 @@ fn press_size(sheet: &mut Sheet, units: &Units, peak: f64) {
 }
 
 /// Hub temperature for the tightest pair; the mean coefficients are read from the curves.
-fn heat(sheet: &mut Sheet, findings: &Findings, units: &Units) {
+///
+/// With it come a tag for its symbols, the temperature of the shaft and the one that was found for the hub, K.
+fn heat(
+    sheet: &mut Sheet,
+    findings: &Findings,
+    units: &Units,
+    (tag, shaft_temperature, hub_temperature): (&str, f64, Option<f64>),
+) {
     let joint = &findings.joint;
     let (Some(shaft), Some(hub)) = (joint.rings.first(), joint.rings.last()) else { return };
-    let (shaft_temperature, hub_temperature) = match joint.assembly.method {
-        Method::HeatAndChill => {
-            let Some(bath) = findings.assembly.baths.iter().find(|bath| bath.bath == joint.assembly.bath)
-            else {
-                return;
-            };
-            (bath.temperature, bath.hub_temperature)
-        }
-        _ => (joint.assembly.shop_temperature, findings.assembly.heat_hub.temperature),
-    };
     let Some(hub_temperature) = hub_temperature else { return };
-    sheet.section("Hub temperature for the tightest pair");
+    let name = |symbol: &str| format!("{symbol}{tag}");
+    sheet.section(if tag.is_empty() {
+        "Hub temperature for the tightest pair".to_owned()
+    } else {
+        format!("Temperature of the {} if it were mounted warm, tightest pair", hub.name)
+    });
+    if !sheet.has("j") {
+        sheet.input(
+            "j",
+            "clearance while joining",
+            findings.assembly.clearance * units.small_per_metre,
+            units.small,
+            &joint.assembly.clearance.source,
+        );
+    }
     sheet.input(
-        "j",
-        "clearance while joining",
-        findings.assembly.clearance * units.small_per_metre,
-        units.small,
-        &joint.assembly.clearance.source,
-    );
-    sheet.input(
-        "T_sj",
+        &name("T_sj"),
         "temperature of the shaft",
         units.degrees(shaft_temperature),
         units.temperature,
@@ -145,7 +162,7 @@ fn heat(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     );
     let Ok(shaft_strain) = shaft.material.expansion.strain(shaft_temperature) else { return };
     sheet.input(
-        "eps_sj",
+        &name("eps_sj"),
         "expansion of the shaft from 20 °C",
         shaft_strain,
         "",
@@ -153,9 +170,10 @@ fn heat(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     );
     let thousand = || num("1000");
     sheet.formula(
-        "eps_hj",
+        &name("eps_hj"),
         "expansion that the hub needs",
-        ((sym("j") + sym("U_max")) / thousand() + (sym("d") + sym("U_max") / thousand()) * sym("eps_sj"))
+        ((sym("j") + sym("U_max")) / thousand()
+            + (sym("d") + sym("U_max") / thousand()) * sym(&name("eps_sj")))
             / sym("d"),
         "",
         JOINING,
@@ -163,24 +181,27 @@ fn heat(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     );
     let Some(alpha) = mean_coefficient(&hub.material, hub_temperature, units) else { return };
     let unit = if units.temperature == "degC" { "1/K" } else { "1/degF" };
+    let mean = if tag.is_empty() { "alpha".to_owned() } else { format!("alpha_{tag}") };
     sheet.input(
-        "alpha",
+        &mean,
         "mean expansion of the hub from 20 °C to that temperature, from its curve",
         alpha,
         unit,
         &hub.material.expansion.source,
     );
-    sheet.input(
-        "T_ref",
-        "reference temperature of sizes",
-        units.degrees(REFERENCE_TEMPERATURE),
-        units.temperature,
-        "ISO 1",
-    );
+    if !sheet.has("T_ref") {
+        sheet.input(
+            "T_ref",
+            "reference temperature of sizes",
+            units.degrees(REFERENCE_TEMPERATURE),
+            units.temperature,
+            "ISO 1",
+        );
+    }
     sheet.formula(
-        "T_h",
+        &name("T_h"),
         "hub temperature for joining",
-        sym("T_ref") + sym("eps_hj") / sym("alpha"),
+        sym("T_ref") + sym(&name("eps_hj")) / sym(&mean),
         units.temperature,
         JOINING,
         Some(units.degrees(hub_temperature)),

@@ -4,6 +4,7 @@
 //! coherent but for the factor 1000 between µm and mm (thou and in), which the formulas show.
 
 mod assembly;
+mod bearing;
 mod cold_bath;
 mod duty;
 mod fit;
@@ -36,6 +37,7 @@ pub fn worked(findings: &Findings) -> (Vec<WorksheetSection>, Vec<String>) {
         strength::write(&mut sheet, findings, &units);
         duty::write(&mut sheet, findings, &units);
         assembly::write(&mut sheet, findings, &units);
+        bearing::write(&mut sheet, findings, &units);
     }
     sheet.finish()
 }
