@@ -8,7 +8,7 @@ use crate::material::{Kind, Material};
 /// One caution with its subject and source.
 #[derive(Debug, Clone, PartialEq, Eq)]
 pub struct Caution {
-    /// What it belongs to: `press`, `heat` or `cold`.
+    /// What it belongs to: `press`, `heat`, `cold` or `apart`.
     pub subject: &'static str,
     /// One or more full sentences.
     pub text: String,

@@ -10,7 +10,7 @@
 //! | How long in the oven or bath? | [`soak`], [`conduction`], [`film`], [`media`], [`boiling`] |
 //! | How long from there until it seizes? | [`handling`] |
 //! | How much coolant, and what of the air? | [`cryogen`], [`atmosphere`] |
-//! | How does it come apart again? | [`press_practice`], [`release`] |
+//! | How does it come apart again? | [`press_practice`], [`release`], [`oil`] |
 //! | What does the seat do to a bearing? | [`bearing`], [`bearing_tables`] |
 //! | What must be minded? | [`cautions`] |
 
@@ -28,6 +28,7 @@ pub mod handling;
 mod integrator;
 pub mod joining;
 pub mod media;
+pub mod oil;
 mod pair;
 pub mod press;
 pub mod press_practice;

@@ -53,6 +53,7 @@ pub(super) fn assembly(
         times: Times::default(),
         cold_bath: None,
         press_work: None,
+        oil: None,
     };
     assembly.press_work = press_work(joint, extremes, &assembly, &joining)?;
     in_the_oven_and_bath(joint, extremes, &mut assembly)?;

@@ -5,8 +5,8 @@ use thiserror::Error;
 use super::kernel::{Kernel, pair_interferences};
 use super::softening::Parts;
 use super::{
-    DutyFindings, Findings, OnsetOfYield, assembly_of, bearing_of, cautions, service, softening, verdicts,
-    worksheet,
+    DutyFindings, Findings, OnsetOfYield, assembly_of, bearing_of, cautions, oil, service, softening,
+    verdicts, worksheet,
 };
 use crate::assembly::AssemblyError;
 use crate::joint::{Allow, Joint};
@@ -81,7 +81,8 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         softening::soften(&joint, &kernel, plastic, &mut parts)?;
     }
     let service = service::service(&joint, &kernel, &pairs, &extremes.tightest, &duty, plastic)?;
-    let assembly = assembly_of::assembly(&joint, &extremes)?;
+    let mut assembly = assembly_of::assembly(&joint, &extremes)?;
+    assembly.oil = oil::oil(&joint, &kernel, &pairs, &extremes, service.plastic.as_ref())?;
     let character =
         joint.fits.get(joint.last_interface()).map_or(Character::Clearance, |fit| fit.limits.character());
     let bearing = bearing_of::bearing(&joint, &extremes, &duty, &assembly)?;

@@ -4,7 +4,8 @@ use super::Findings;
 use crate::assembly::atmosphere::{CARBON_DIOXIDE_LIMIT, OxygenLevel};
 use crate::assembly::cautions::{self as practice, Caution, Part, Process};
 use crate::joint::practice::Heating;
-use crate::joint::{Bath, Method};
+use crate::joint::{Bath, Method, Ring};
+use crate::material::Kind;
 
 /// Below this handling time a lift must be drilled and may need another route, s (common practice, no source).
 const SHORT: f64 = 15.0;
@@ -17,6 +18,43 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     all.extend(quench(findings));
     all.extend(crushing(findings));
     all.extend(materials(findings));
+    all.extend(oil(findings));
+    all
+}
+
+/// What must be minded when oil takes the joint apart, and the part that the oil would overstrain.
+fn oil(findings: &Findings) -> Vec<Caution> {
+    let Some(found) = &findings.assembly.oil else { return Vec::new() };
+    let joint = &findings.joint;
+    let (shaft, hub) = joint.joined_last();
+    let mut all = vec![Caution {
+        subject: "apart",
+        text: format!(
+            "If oil is pressed between the seats, keep a stop or a nut before the {}: it may jump off. Never pump above the rating of \
+             pump, hoses and fittings, and stand clear of them. Let the oil drain for an hour or two, a day in the cold, before the \
+             joint carries torque again.",
+            hub.name
+        ),
+        source: "common practice, from memory".to_owned(),
+    }];
+    let required = |ring: &Ring| match ring.material.kind {
+        Kind::Brittle => joint.require.fracture_safety,
+        Kind::Ductile | Kind::Polymer => joint.require.yield_safety,
+    };
+    for (ring, safety) in [(hub, found.tightest.hub_safety), (shaft, found.tightest.shaft_safety)] {
+        let Some(safety) = safety.filter(|safety| *safety < required(ring)) else { continue };
+        all.push(Caution {
+            subject: "apart",
+            text: format!(
+                "The oil pressure that floats the tightest pair leaves the {} a safety of {safety:.2} only, less than the {:.2} \
+                 required: warm the {} first, or take it off another way.",
+                ring.name,
+                required(ring),
+                hub.name
+            ),
+            source: "Lamé, with the oil pressure in place of the contact pressure".to_owned(),
+        });
+    }
     all
 }
 

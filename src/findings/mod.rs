@@ -9,6 +9,7 @@ mod envelope;
 pub mod expression;
 mod joining_cautions;
 mod kernel;
+pub mod oil;
 pub mod press_work;
 mod service;
 mod softening;
@@ -24,6 +25,7 @@ use cold_bath::ColdBathFindings;
 pub use compute::{FindingsError, compute};
 pub use envelope::{Envelope, EnvelopeLine, EnvelopeMeaning, EnvelopeState};
 pub use kernel::after_smoothing;
+use oil::OilFindings;
 use press_work::PressWorkFindings;
 pub use service::{
     Fatigue, GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings, ThinLiner, WornHub,
@@ -247,6 +249,8 @@ pub struct AssemblyFindings {
     pub cold_bath: Option<ColdBathFindings>,
     /// Around the press, and after it; none when no pair grips.
     pub press_work: Option<PressWorkFindings>,
+    /// Oil injection; none when no pair grips.
+    pub oil: Option<OilFindings>,
 }
 
 /// What the coefficient at 20 °C would say of a part in place of its expansion curve.

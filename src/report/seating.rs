@@ -2,8 +2,10 @@
 
 use crate::assembly::atmosphere::OxygenLevel;
 use crate::assembly::handling::HandlingCourse;
+use crate::assembly::oil::{OIL_PLANNED, OIL_SOURCE};
 use crate::findings::cold_bath::{ColdBathFindings, RoomFindings};
-use crate::findings::press_work::{FaceFindings, OIL_OVER_CONTACT, PRESS_SPEED, PressWorkFindings};
+use crate::findings::oil::OilPair;
+use crate::findings::press_work::{FaceFindings, PRESS_SPEED, PressWorkFindings};
 use crate::findings::times::SoakFindings;
 use crate::findings::{Findings, bath_name};
 use crate::joint::practice::Heating;
@@ -313,10 +315,7 @@ pub fn release(findings: &Findings) -> Vec<String> {
             format!("Heat alone does not free it with the {} {lag} % behind in warming: {why}.", shaft.name)
         }
     };
-    let safety = work.oil.1.map_or_else(String::new, |safety| {
-        format!(", which leaves the {} a safety of {}", hub.name, super::terminal::safety(safety))
-    });
-    vec![
+    let mut all = vec![
         format!(
             "After rest the tightest pair takes {} to {} to start and {} to {} to keep sliding; look for a press of {}.",
             force(push.first_movement.low),
@@ -326,12 +325,66 @@ pub fn release(findings: &Findings) -> Vec<String> {
             force(push.press)
         ),
         heat,
+    ];
+    all.extend(oil(findings));
+    all
+}
+
+/// Oil pressed between the seats: the pressure at both extremes, the film, and what both parts have left.
+pub fn oil(findings: &Findings) -> Vec<String> {
+    let Some(found) = &findings.assembly.oil else { return Vec::new() };
+    let joint = &findings.joint;
+    let (shaft, hub) = joint.joined_last();
+    let pressure = |si: f64| show(Measure::Pressure, si, joint.display).to_string();
+    let tight = &found.tightest;
+    let (from, plan) = match &found.loosest {
+        Some(loose) => (
+            format!(
+                "{} at the loosest and {} at the tightest pair",
+                pressure(loose.least),
+                pressure(tight.least)
+            ),
+            format!("{} and {}", pressure(loose.planned), pressure(tight.planned)),
+        ),
+        None => (
+            format!("{} at the tightest pair; the loosest slides without", pressure(tight.least)),
+            pressure(tight.planned),
+        ),
+    };
+    let left = [(&hub.name, tight.hub_safety), (&shaft.name, tight.shaft_safety)];
+    let left: Vec<String> = left
+        .into_iter()
+        .filter_map(|(name, safety)| {
+            Some(format!("a safety of {} to the {name}", super::terminal::safety(safety?)))
+        })
+        .collect();
+    let safeties =
+        if left.is_empty() { String::new() } else { format!(", which leaves {}", left.join(" and ")) };
+    vec![
         format!(
-            "Oil fed between the seats floats the hub at about {}, {} times the contact pressure (common practice, from memory){safety}.",
-            show(Measure::Pressure, work.oil.0, system),
-            number(OIL_OVER_CONTACT, 2)
+            "Oil fed between the seats floats the {} above their contact pressure: {from}. Plan {plan}, {} times that ({}).",
+            hub.name,
+            number(OIL_PLANNED, 2),
+            OIL_SOURCE
+        ),
+        format!(
+            "At the tightest pair the seats then part by {} on the diameter{safeties}.{}",
+            show(Measure::Deviation, tight.film, joint.display),
+            oil_limit(findings, tight)
         ),
     ]
+}
+
+/// The pressure that a part stands, when it is near enough to matter: the pump could pass it.
+fn oil_limit(findings: &Findings, pair: &OilPair) -> String {
+    let (shaft, hub) = findings.joint.joined_last();
+    let (Some(limit), pressure) =
+        (pair.limit(), |si: f64| show(Measure::Pressure, si, findings.joint.display))
+    else {
+        return String::new();
+    };
+    let part = if pair.hub_limit == Some(limit) { &hub.name } else { &shaft.name };
+    format!(" More than {} of oil overstrains the {part}.", pressure(limit))
 }
 
 fn above_limit(findings: &Findings, temperature: f64) -> String {

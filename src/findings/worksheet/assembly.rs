@@ -4,6 +4,7 @@ use super::super::Findings;
 use super::super::expression::{Function, num, sym};
 use super::Units;
 use super::sheet::Sheet;
+use crate::assembly::oil::{OIL_PLANNED, OIL_SOURCE};
 use crate::assembly::press::PRESS_MARGIN;
 use crate::assembly::press_practice::{METRIC_TON_FORCE, US_TON_FORCE};
 use crate::joint::Method;
@@ -32,6 +33,63 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         heat(sheet, findings, units, ("B", shop, alone));
     }
     super::cold_bath::write(sheet, findings);
+    oil(sheet, findings, units);
+}
+
+/// Oil injection: the pressure at both extremes, the film, the stress it makes.
+fn oil(sheet: &mut Sheet, findings: &Findings, units: &Units) {
+    let Some(found) = &findings.assembly.oil else { return };
+    let yields = super::strength::hub_yields(findings);
+    let contact = |tag: &str| format!("{}_{tag}", if yields { "P" } else { "p" });
+    sheet.section("Oil injection, shop temperature, at rest");
+    sheet.input("k_o", "oil pressure over contact pressure that is planned", OIL_PLANNED, "", OIL_SOURCE);
+    let pairs = [("min", "loosest", found.loosest.as_ref()), ("max", "tightest", Some(&found.tightest))];
+    for (tag, name, pair) in pairs {
+        let Some(pair) = pair else { continue };
+        sheet.formula(
+            &format!("p_o{tag}"),
+            &format!("oil pressure that floats the hub, {name} pair; {} is the least", contact(tag)),
+            sym("k_o") * sym(&contact(tag)),
+            units.pressure,
+            "equilibrium of the film with both parts",
+            Some(pair.planned * units.per_pascal),
+        );
+    }
+    let tight = &found.tightest;
+    sheet.formula(
+        "delta_o",
+        "the seats then part on the diameter by, tightest pair",
+        num("1000") * (sym("p_omax") - sym(&contact("max"))) * super::strength::flexibility(),
+        units.small,
+        "Lamé, with the oil pressure in place of the contact pressure",
+        Some(tight.film * units.small_per_metre),
+    );
+    for (index, name, safety, limit) in [
+        ("h", "hub", tight.hub_safety, tight.hub_limit),
+        ("s", "shaft", tight.shaft_safety, tight.shaft_limit),
+    ] {
+        let (Some(safety), Some(limit)) = (safety, limit) else { continue };
+        let known = format!("S_{index}");
+        if !sheet.has(&known) {
+            continue;
+        }
+        sheet.formula(
+            &format!("S_o{index}"),
+            &format!("safety of the {name} at that oil pressure, tightest pair"),
+            sym(&known) * sym(&contact("max")) / sym("p_omax"),
+            "",
+            "the stress is proportional to the pressure on the seat",
+            Some(safety),
+        );
+        sheet.formula(
+            &format!("p_o{index}"),
+            &format!("oil pressure at which the {name} reaches its strength"),
+            sym(&format!("S_o{index}")) * sym("p_omax"),
+            units.pressure,
+            "the stress is proportional to the pressure on the seat",
+            Some(limit * units.per_pascal),
+        );
+    }
 }
 
 fn press(sheet: &mut Sheet, findings: &Findings, units: &Units) {

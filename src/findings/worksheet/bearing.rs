@@ -105,8 +105,7 @@ impl Work<'_> {
     /// Change of the raceway under a pressure, in the small unit.
     fn loss(&self, pressure: &str) -> Expression {
         let modulus = if self.inner() { "E_h" } else { "E_s" };
-        num("2000") * sym(pressure) * sym("d").power(2) * self.raceway()
-            / (sym(modulus) * self.wall())
+        num("2000") * sym(pressure) * sym("d").power(2) * self.raceway() / (sym(modulus) * self.wall())
     }
 
     fn clearance(&self, sheet: &mut Sheet) {

@@ -4,7 +4,9 @@ use serde::Serialize;
 
 use super::number::{celsius, finite, mega, microns};
 use crate::assembly::handling::HandlingCourse;
+use crate::assembly::oil::OIL_PLANNED;
 use crate::findings::cold_bath::{ColdBathFindings, RoomFindings};
+use crate::findings::oil::{OilFindings, OilPair};
 use crate::findings::press_work::PressWorkFindings;
 use crate::findings::times::{HandlingFindings, SoakFindings};
 use crate::findings::{AssemblyFindings, ConstantCoefficient, bath_name};
@@ -23,6 +25,7 @@ pub(super) struct Seating {
     cold_bath: Option<ColdBath>,
     constant_coefficient: Vec<Coefficient>,
     press_work: Option<PressWork>,
+    oil_injection: Option<Oil>,
 }
 
 #[derive(Serialize)]
@@ -128,6 +131,27 @@ struct PressWork {
     oil_hub_safety: Option<f64>,
 }
 
+/// Oil injection at both extremes.
+#[derive(Serialize)]
+struct Oil {
+    planned_over_contact: f64,
+    loosest: Option<OilOfPair>,
+    tightest: OilOfPair,
+}
+
+#[derive(Serialize)]
+struct OilOfPair {
+    least_mpa: Option<f64>,
+    usual_low_mpa: Option<f64>,
+    usual_high_mpa: Option<f64>,
+    planned_mpa: Option<f64>,
+    film_um: f64,
+    hub_safety: Option<f64>,
+    shaft_safety: Option<f64>,
+    hub_limit_mpa: Option<f64>,
+    shaft_limit_mpa: Option<f64>,
+}
+
 impl Seating {
     pub(super) fn of(assembly: &AssemblyFindings) -> Self {
         let times = &assembly.times;
@@ -138,7 +162,8 @@ impl Seating {
             handling: times.handling.as_ref().map(Handling::of),
             cold_bath: assembly.cold_bath.as_ref().map(ColdBath::of),
             constant_coefficient: assembly.constant_coefficient.iter().map(Coefficient::of).collect(),
-            press_work: assembly.press_work.as_ref().map(PressWork::of),
+            press_work: assembly.press_work.as_ref().map(|found| PressWork::of(found, assembly.oil.as_ref())),
+            oil_injection: assembly.oil.as_ref().map(Oil::of),
         }
     }
 }
@@ -246,7 +271,7 @@ impl Coefficient {
 }
 
 impl PressWork {
-    fn of(found: &PressWorkFindings) -> Self {
+    fn of(found: &PressWorkFindings, oil: Option<&OilFindings>) -> Self {
         let (heating, buckling, push) = (found.heating, found.buckling, &found.push_out);
         Self {
             press_n: finite(found.size.force),
@@ -266,8 +291,34 @@ impl PressWork {
             push_out_sliding_high_n: push.sliding.high,
             push_out_press_n: push.press,
             release_hub_temperature_c: found.release.as_ref().ok().copied().map(celsius),
-            oil_pressure_mpa: mega(found.oil.0),
-            oil_hub_safety: found.oil.1.and_then(finite),
+            oil_pressure_mpa: oil.and_then(|oil| mega(oil.tightest.planned)),
+            oil_hub_safety: oil.and_then(|oil| oil.tightest.hub_safety).and_then(finite),
+        }
+    }
+}
+
+impl Oil {
+    fn of(found: &OilFindings) -> Self {
+        Self {
+            planned_over_contact: OIL_PLANNED,
+            loosest: found.loosest.as_ref().map(OilOfPair::of),
+            tightest: OilOfPair::of(&found.tightest),
+        }
+    }
+}
+
+impl OilOfPair {
+    fn of(found: &OilPair) -> Self {
+        Self {
+            least_mpa: mega(found.least),
+            usual_low_mpa: mega(found.usual.low),
+            usual_high_mpa: mega(found.usual.high),
+            planned_mpa: mega(found.planned),
+            film_um: microns(found.film),
+            hub_safety: found.hub_safety.and_then(finite),
+            shaft_safety: found.shaft_safety.and_then(finite),
+            hub_limit_mpa: found.hub_limit.and_then(mega),
+            shaft_limit_mpa: found.shaft_limit.and_then(mega),
         }
     }
 }
