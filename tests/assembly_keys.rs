@@ -61,6 +61,12 @@ fn wrong_values_are_refused_at_their_place() {
                 "did you mean `oil bath`?",
             ),
             case(
+                ("bath: liquid nitrogen", "bath: dry ice in alcohl"),
+                (9, 9, 17),
+                "`dry ice in alcohl` is not a cold bath",
+                "did you mean `dry ice in alcohol`?",
+            ),
+            case(
                 ("oven_temperature: 150 degC", "oven_temperature: 10 degC"),
                 (11, 21, 7),
                 "oven_temperature 10 degC is not above the shop temperature",

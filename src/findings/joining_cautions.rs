@@ -6,6 +6,7 @@ use crate::assembly::cautions::{self as practice, Caution, Part, Process};
 use crate::joint::practice::Heating;
 use crate::joint::{Bath, Method, Ring};
 use crate::material::Kind;
+use crate::quantity::{Measure, show};
 
 /// Below this handling time a lift must be drilled and may need another route, s (common practice, no source).
 const SHORT: f64 = 15.0;
@@ -13,6 +14,7 @@ const SHORT: f64 = 15.0;
 /// The cautions of the method, of the materials that go through it, of the air, and of a time that is short.
 pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     let mut all: Vec<Caution> = processes(findings).into_iter().flat_map(practice::cautions).collect();
+    all.extend(flammable(findings));
     all.extend(air(findings));
     all.extend(short_time(findings));
     all.extend(quench(findings));
@@ -67,6 +69,7 @@ fn processes(findings: &Findings) -> Vec<Process> {
     };
     let bath = match plan.bath {
         Bath::DryIce => Process::DryIce,
+        Bath::DryIceInAlcohol | Bath::DryIceInAcetone => Process::DryIceBath,
         Bath::LiquidNitrogen => Process::LiquidNitrogen,
     };
     match plan.method {
@@ -75,6 +78,26 @@ fn processes(findings: &Findings) -> Vec<Process> {
         Method::ChillShaft => vec![bath],
         Method::HeatAndChill => vec![heat, bath],
     }
+}
+
+/// The flash point of the liquid in a bath of dry ice.
+fn flammable(findings: &Findings) -> Option<Caution> {
+    let liquid = findings.assembly.cold_bath.as_ref()?.liquid.as_ref()?.liquid;
+    let hot = if findings.joint.assembly.heats() {
+        " The hub is hot: the part must be dry before it goes near."
+    } else {
+        ""
+    };
+    Some(Caution {
+        subject: "cold",
+        text: format!(
+            "The {} of the bath is flammable, with a flash point of {}: cold it gives off little, but what is spilled, carried out on \
+             the part or left to warm catches fire in a room that is warmer than that.{hot}",
+            liquid.name,
+            show(Measure::Temperature, liquid.flash_point, findings.joint.display)
+        ),
+        source: liquid.source.to_owned(),
+    })
 }
 
 fn air(findings: &Findings) -> Vec<Caution> {

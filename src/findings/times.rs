@@ -206,6 +206,7 @@ fn chilled(
 ) -> Result<SoakFindings, AssemblyError> {
     let medium = match bath {
         Bath::DryIce => Medium::DryIcePacked,
+        Bath::DryIceInAlcohol | Bath::DryIceInAcetone => Medium::DryIceBath,
         Bath::LiquidNitrogen => Medium::NitrogenPool,
     };
     let (shop, cold) = (joint.assembly.shop_temperature, bath_temperature(bath));
@@ -218,8 +219,8 @@ fn chilled(
     let part = Conduction::new(body(shaft, length), substance.clone(), around, shop)?;
     let wanted = wanted.unwrap_or(shop + SOAKED * (cold - shop));
     let source = match bath {
-        Bath::DryIce => medium.usual().source,
         Bath::LiquidNitrogen => BOILING,
+        _ => medium.usual().source,
     };
     soaked(shaft, part, substance, wanted, bath_name(bath), source)
 }

@@ -23,7 +23,7 @@ pub(crate) struct AssemblyKeys {
     pub(crate) handling_allowance: Option<Written<Length>>,
     /// Angle of the lead-in chamfer to the axis. Silent: 5 deg.
     pub(crate) chamfer_angle: Option<Written<Angle>>,
-    /// Cold bath. Silent: dry ice.
+    /// Cold bath: dry ice, dry ice in alcohol, dry ice in acetone or liquid nitrogen. Silent: dry ice.
     pub(crate) bath: Option<Written<BathWord>>,
     /// What the hub is heated in. Silent: forced oven.
     pub(crate) medium: Option<Written<HeatingWord>>,

@@ -162,20 +162,38 @@ pub fn cold_bath(findings: &Findings) -> Vec<String> {
     let mass = |kilograms| brief(Measure::Mass, kilograms);
     let liquid = |cubic_metres| brief(Measure::Volume, cubic_metres);
     let job = &found.job;
-    let mut all = vec![format!(
-        "{} to bring: {} to {} ({} boils off at the part, {} at rest over {}, {} fills a bath of {} round it and stays over; \
-         with the cold gas put to use the part takes {}). At rest the bath loses {} an hour.",
-        super::typeset::capital(bath_name(found.bath)),
-        mass(found.to_bring.0),
-        mass(found.to_bring.1),
-        mass(job.part.mass),
-        mass(job.idle.mass),
-        time_needed(found.time),
-        mass(job.cover.mass),
-        liquid(found.vessel),
-        mass(found.with_cold_gas.mass),
-        liquid(found.hourly_loss.volume)
-    )];
+    let mut all = vec![match &found.liquid {
+        None => format!(
+            "{} to bring: {} to {} ({} boils off at the part, {} at rest over {}, {} fills a bath of {} round it and stays over; \
+             with the cold gas put to use the part takes {}). At rest the bath loses {} an hour.",
+            super::typeset::capital(bath_name(found.bath)),
+            mass(found.to_bring.0),
+            mass(found.to_bring.1),
+            mass(job.part.mass),
+            mass(job.idle.mass),
+            time_needed(found.time),
+            mass(job.cover.mass),
+            liquid(found.vessel),
+            mass(found.with_cold_gas.mass),
+            liquid(found.hourly_loss.volume)
+        ),
+        Some(held) => format!(
+            "Dry ice to bring: {} to {}, with {} ({}) of {} for a bath of {} round the part. {} goes off to cool the {name}, {} at the \
+             part, {} at rest over {}. Put the part in when the {name} has stopped foaming; flash point {}.",
+            mass(found.to_bring.0),
+            mass(found.to_bring.1),
+            liquid(held.volume),
+            mass(held.mass),
+            held.liquid.name,
+            liquid(found.vessel),
+            mass(held.ice.mass),
+            mass(job.part.mass),
+            mass(job.idle.mass),
+            time_needed(found.time),
+            show(Measure::Temperature, held.liquid.flash_point, system),
+            name = held.liquid.name
+        ),
+    }];
     all.push(match &found.room {
         Some(room) => air(found, room),
         None => format!(
@@ -197,18 +215,23 @@ pub fn air(found: &ColdBathFindings, air: &RoomFindings) -> String {
         OxygenLevel::Alarm => "BELOW the alarm level of 18 %",
     };
     let mut text = format!(
-        "The gas, {} m³, leaves {} of oxygen in the room of {} m³, {}; mixed with {} air changes an hour {}. If all {} m³ \
-         of a spilled bath came free at once: {}, {}.",
+        "The gas, {} m³, leaves {} of oxygen in the room of {} m³, {}; mixed with {} air changes an hour {}.",
         number(found.job.boiled.gas_volume, 3),
         share(air.oxygen),
         number(air.room.volume, 4),
         judged(air.level),
         number(air.room.air_changes, 3),
-        share(air.oxygen_ventilated),
-        number(found.job.total.gas_volume, 3),
-        share(air.oxygen_spilled),
-        judged(air.level_spilled)
+        share(air.oxygen_ventilated)
     );
+    // The ice in a liquid is reckoned to go off anyhow.
+    if found.liquid.is_none() {
+        text.push_str(&format!(
+            " If all {} m³ of a spilled bath came free at once: {}, {}.",
+            number(found.job.total.gas_volume, 3),
+            share(air.oxygen_spilled),
+            judged(air.level_spilled)
+        ));
+    }
     if let Some(carbon_dioxide) = air.carbon_dioxide {
         text.push_str(&format!(
             " Carbon dioxide would be {} %, against 0.5 % for eight hours and 1.5 % for fifteen minutes.",
