@@ -8,7 +8,7 @@
 //! | What force along the travel, what press? | [`press`], [`press_practice`] |
 //! | How hot the hub, how cold the shaft? | [`thermal`], [`joining`] |
 //! | How long in the oven or bath? | [`soak`], [`conduction`], [`film`], [`media`], [`boiling`] |
-//! | How long from there until it seizes? | [`handling`] |
+//! | How long from there until it seizes? | [`handling`], [`frost`] |
 //! | How much coolant, and what of the air? | [`cryogen`], [`atmosphere`] |
 //! | How does it come apart again? | [`press_practice`], [`release`], [`oil`] |
 //! | What does the seat do to a bearing? | [`bearing`], [`bearing_tables`] |
@@ -23,6 +23,7 @@ pub mod conduction;
 pub mod cryogen;
 pub mod error;
 pub mod film;
+pub mod frost;
 mod grid;
 pub mod handling;
 mod integrator;

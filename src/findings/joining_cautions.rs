@@ -17,6 +17,7 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     all.extend(flammable(findings));
     all.extend(air(findings));
     all.extend(short_time(findings));
+    all.extend(frosted(findings));
     all.extend(quench(findings));
     all.extend(crushing(findings));
     all.extend(materials(findings));
@@ -154,6 +155,19 @@ fn short_time(findings: &Findings) -> Option<Caution> {
              more; practise the movement before."
         ),
         source: "common practice, no source".to_owned(),
+    })
+}
+
+/// A time that is met only without frost.
+fn frosted(findings: &Findings) -> Option<Caution> {
+    let needed = findings.joint.assembly.practice.handling_time?;
+    let end = findings.assembly.times.handling.as_ref()?.frost.as_ref()?.at_end?;
+    (end.gone < needed && needed <= end.time).then(|| Caution {
+        subject: "cold",
+        text: "The time that is needed is met only while the seat carries no frost: wipe it, keep it in dry gas until the last moment, \
+               or open more clearance."
+            .to_owned(),
+        source: "bound on the frost by the analogy of heat and mass transfer".to_owned(),
     })
 }
 

@@ -7,6 +7,7 @@ pub mod cold_bath;
 mod compute;
 mod envelope;
 pub mod expression;
+pub mod frost;
 mod joining_cautions;
 mod kernel;
 pub mod oil;

@@ -41,6 +41,8 @@ pub(crate) struct AssemblyKeys {
     pub(crate) room: Option<At<RoomKeys>>,
     /// The vessel of the cold bath. Silent: twice the volume round the part.
     pub(crate) vessel: Option<At<VesselKeys>>,
+    /// Relative humidity of the room, 0 to 1, for the frost on a chilled part. Silent: 0.5.
+    pub(crate) humidity: Option<Written<Number>>,
     /// Share of the hub's rise by which the shaft lags behind when heat takes the joint apart. Silent: 0.5.
     pub(crate) temperature_lag: Option<Written<Number>>,
 }

@@ -1,12 +1,13 @@
 //! Soak, handling time, cold bath, press and release in plain sentences for terminal and report.
 
 use crate::assembly::atmosphere::OxygenLevel;
+use crate::assembly::frost::FROST_DENSITY;
 use crate::assembly::handling::HandlingCourse;
 use crate::assembly::oil::{OIL_PLANNED, OIL_SOURCE};
 use crate::findings::cold_bath::{ColdBathFindings, RoomFindings};
 use crate::findings::oil::OilPair;
 use crate::findings::press_work::{FaceFindings, PRESS_SPEED, PressWorkFindings};
-use crate::findings::times::SoakFindings;
+use crate::findings::times::{HandlingFindings, SoakFindings};
 use crate::findings::{Findings, bath_name};
 use crate::joint::practice::Heating;
 use crate::quantity::{Measure, display_unit, number, show};
@@ -105,9 +106,50 @@ pub fn handling(findings: &Findings) -> Option<String> {
         gone(tight.gone_in_air)
     );
     if joint.assembly.chills() {
-        text.push_str(" Frost on the shaft adds heat and takes up clearance: it is not counted.");
+        text.push_str(&frost(findings, found));
     }
     Some(text)
+}
+
+/// The bound on the frost beside the times, in which it is not counted.
+fn frost(findings: &Findings, handling: &HandlingFindings) -> String {
+    let joint = &findings.joint;
+    let (shaft, _) = joint.joined_last();
+    let deviation = |metres: f64| show(Measure::Deviation, metres, joint.display);
+    let Some(frost) = &handling.frost else {
+        return format!(" No frost settles on the {} in this room, or none that can be told.", shaft.name);
+    };
+    let humidity = number(frost.humidity * 100.0, 3);
+    let share = number(frost.share * 100.0, 2);
+    let Some(end) = &frost.at_end else {
+        let growth = frost.deposit.growth();
+        return format!(
+            " Frost is not counted in these times: at {humidity} % humidity at most {} to {} a minute settle on the {} ({} to {} kg/m³), \
+             with {share} % of the heat that the air brings.",
+            deviation(60.0 * growth.low).number,
+            deviation(60.0 * growth.high),
+            shaft.name,
+            number(FROST_DENSITY.high, 3),
+            number(FROST_DENSITY.low, 3)
+        );
+    };
+    let begin = handling.tightest.points.first().map_or(0.0, |point| point.clearance);
+    format!(
+        " Frost is not counted in these times. A seat of the {} that stands in the open at {humidity} % humidity gathers at most {} \
+         to {} of it ({} to {} kg/m³) by the end of that time, against {} of clearance to each side at the start; its heat, at \
+         most {} W or {share} % of what the air brings, warms the {} by {} and takes {}. Counted so, the tightest pair allows {}.",
+        shaft.name,
+        deviation(end.thickness.low).number,
+        deviation(end.thickness.high),
+        number(FROST_DENSITY.high, 3),
+        number(FROST_DENSITY.low, 3),
+        deviation(0.5 * begin),
+        number(frost.heat, 3),
+        shaft.name,
+        show(Measure::TemperatureDifference, end.warming, joint.display),
+        deviation(end.by_heat),
+        time_allowed(end.gone)
+    )
 }
 
 /// Soak of the hub, chill of the shaft, and why a time does not exist.

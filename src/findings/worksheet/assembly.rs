@@ -33,6 +33,7 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         heat(sheet, findings, units, ("B", shop, alone));
     }
     super::cold_bath::write(sheet, findings);
+    super::frost::write(sheet, findings);
     oil(sheet, findings, units);
 }
 

@@ -8,6 +8,7 @@ mod bearing;
 mod cold_bath;
 mod duty;
 mod fit;
+mod frost;
 mod sheet;
 mod slices;
 mod stack;

@@ -50,6 +50,8 @@ const WHY: &[(&str, &str)] = &[
     ("hub_soak", "where the hub is not heated, or is heated by induction"),
     ("shaft_chill", "where the shaft is not chilled, or a note tells why it cannot be judged"),
     ("handling", "where nothing is heated or chilled, or a note tells why it cannot be judged"),
+    ("frost", "where the shaft is not chilled, or no frost settles on it"),
+    ("frost.at_end", "where the parts pass each other for ever, or never"),
     ("gone_s", "where the parts pass each other for ever"),
     ("gone_in_air_s", "where the parts pass each other for ever in air alone"),
     ("to_wanted_s", "where the medium never brings the part there"),

@@ -6,6 +6,7 @@ use super::number::{celsius, finite, mega, microns};
 use crate::assembly::handling::HandlingCourse;
 use crate::assembly::oil::OIL_PLANNED;
 use crate::findings::cold_bath::{ColdBathFindings, RoomFindings};
+use crate::findings::frost::FrostFindings;
 use crate::findings::oil::{OilFindings, OilPair};
 use crate::findings::press_work::PressWorkFindings;
 use crate::findings::times::{HandlingFindings, SoakFindings};
@@ -53,6 +54,29 @@ struct Handling {
     least_clearance_um: f64,
     tightest: Course,
     loosest: Course,
+    frost: Option<Frost>,
+}
+
+/// A bound on the frost; not counted in the courses.
+#[derive(Serialize)]
+struct Frost {
+    humidity: f64,
+    vapour_kg_m3: f64,
+    deposit_kg_m2_s: f64,
+    film_w_m2_k: f64,
+    heat_w: f64,
+    heat_share_of_air: f64,
+    at_end: Option<FrostAtEnd>,
+}
+
+#[derive(Serialize)]
+struct FrostAtEnd {
+    time_s: f64,
+    thickness_low_um: f64,
+    thickness_high_um: f64,
+    warming_k: f64,
+    taken_by_heat_um: f64,
+    gone_with_frost_s: f64,
 }
 
 #[derive(Serialize)]
@@ -203,6 +227,28 @@ impl Handling {
             least_clearance_um: microns(found.least),
             tightest: Course::of(&found.tightest),
             loosest: Course::of(&found.loosest),
+            frost: found.frost.as_ref().map(Frost::of),
+        }
+    }
+}
+
+impl Frost {
+    fn of(found: &FrostFindings) -> Self {
+        Self {
+            humidity: found.humidity,
+            vapour_kg_m3: found.vapour,
+            deposit_kg_m2_s: found.deposit.rate,
+            film_w_m2_k: found.deposit.film,
+            heat_w: found.heat,
+            heat_share_of_air: found.share,
+            at_end: found.at_end.as_ref().map(|end| FrostAtEnd {
+                time_s: end.time,
+                thickness_low_um: microns(end.thickness.low),
+                thickness_high_um: microns(end.thickness.high),
+                warming_k: end.warming,
+                taken_by_heat_um: microns(end.by_heat),
+                gone_with_frost_s: end.gone,
+            }),
         }
     }
 }
