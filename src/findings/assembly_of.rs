@@ -4,7 +4,7 @@ use super::cold_bath::cold_bath;
 use super::press_work::press_work;
 use super::times::{self, Times};
 use super::{AssemblyFindings, BathFindings, ConstantCoefficient, FindingsError, PairFindings, ThermalRoute};
-use crate::assembly::cryogen::{ACETONE, ALCOHOL};
+use crate::assembly::bath_liquid::{ACETONE, ALCOHOL};
 use crate::assembly::joining::{BathRoute, Joining, Obstacle, Route};
 use crate::assembly::press::{self, PressCurve, PressInput};
 use crate::joint::{Bath, Joint, Ring};

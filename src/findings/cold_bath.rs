@@ -7,9 +7,9 @@ use crate::assembly::atmosphere::{
     OXYGEN_IN_AIR, OXYGEN_WARNING, OxygenLevel, carbon_dioxide_share, oxygen_after_displacement,
     oxygen_level, oxygen_ventilated,
 };
+use crate::assembly::bath_liquid::{ACETONE, ALCOHOL, BathLiquid};
 use crate::assembly::cryogen::{
-    ACETONE, ALCOHOL, Amount, BathLiquid, ColdJob, Coolant, DRY_ICE, JobAmounts, LIQUID_NITROGEN,
-    PRACTICAL_FACTOR,
+    Amount, ColdJob, Coolant, DRY_ICE, JobAmounts, LIQUID_NITROGEN, PRACTICAL_FACTOR,
 };
 use crate::joint::practice::{Room, Vessel};
 use crate::joint::{Bath, Joint};
