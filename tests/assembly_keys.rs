@@ -27,6 +27,7 @@ assembly:
   chilled_length: 90 mm
   room: {volume: 60 m3, air_changes: 4}
   vessel: {volume: 3 l, hourly_loss: 0.1 l}
+  humidity: 0.7
   temperature_lag: 0.6
 ";
 
@@ -43,6 +44,7 @@ fn every_key_is_read_in_si() {
         room: Some(Room { volume: 60.0, air_changes: 4.0 }),
         vessel: Some(Vessel { volume: 0.003, hourly_loss: Some(0.0001) }),
         chilled_length: Some(0.09),
+        humidity: 0.7,
         temperature_lag: 0.6,
     };
     assert_eq!(plan.practice, wanted);
@@ -59,6 +61,12 @@ fn wrong_values_are_refused_at_their_place() {
                 (10, 11, 9),
                 "`oil bahth` is not a way of heating",
                 "did you mean `oil bath`?",
+            ),
+            case(
+                ("bath: liquid nitrogen", "bath: dry ice in alcohl"),
+                (9, 9, 17),
+                "`dry ice in alcohl` is not a cold bath",
+                "did you mean `dry ice in alcohol`?",
             ),
             case(
                 ("oven_temperature: 150 degC", "oven_temperature: 10 degC"),
@@ -129,8 +137,14 @@ fn wrong_values_are_refused_at_their_place() {
                 "",
             ),
             case(
+                ("humidity: 0.7", "humidity: 70"),
+                (20, 13, 2),
+                "humidity 70 must be from 0 (dry) to 1 (saturated), such as 0.5 for 50 %",
+                "",
+            ),
+            case(
                 ("temperature_lag: 0.6", "temperature_lag: 1.2"),
-                (20, 20, 3),
+                (21, 20, 3),
                 "temperature_lag 1.2 must be from 0 (both warm alike) to 1 (the shaft stays cold)",
                 "",
             ),
@@ -159,6 +173,7 @@ fn keys_that_the_method_does_not_use_are_told() {
         "room",
         "vessel",
         "chilled_length",
+        "humidity",
     ] {
         let told = format!("The key assembly.{key} is not used");
         assert!(remarks.iter().any(|remark| remark.starts_with(&told)), "{key}: {remarks:#?}");
@@ -171,7 +186,15 @@ fn what_the_file_does_not_say_is_a_default_with_its_source() {
     let silent = "  method: heat and chill\n";
     let head = ALL.split("  method").next().unwrap();
     let joint = joint(&format!("{head}{silent}"));
-    for key in ["medium", "form_error", "handling_allowance", "transfer_time", "vessel", "temperature_lag"] {
+    for key in [
+        "medium",
+        "form_error",
+        "handling_allowance",
+        "transfer_time",
+        "vessel",
+        "humidity",
+        "temperature_lag",
+    ] {
         let key = format!("assembly.{key}");
         let default = joint.defaults.iter().find(|default| default.key == key);
         assert!(default.is_some_and(|default| !default.source.is_empty()), "{key}");

@@ -158,6 +158,12 @@ fn the_example_shows_the_bearing_everywhere() {
     assert_eq!(bearing["mounting_temperature_within_limit"], true);
     let page = stdout(&hubgrip_in(&folder, &["report", "bearing-on-shaft.yaml", "-o", "-"]));
     assert!(page.contains("What the seat does to the bearing"));
+    // The worksheet in the page: Δ with its index as MathML, and its plain twin.
+    assert!(page.contains("Bearing: radial internal clearance, shop temperature"));
+    assert!(page.contains("<msub><mi>Δ</mi><mrow><mtext>max</mtext></mrow></msub>"));
+    assert!(page.contains("a_min = g_min - Delta_max = 18 - "));
+    let housed = stdout(&hubgrip_in(&folder, &["report", "bearing-in-housing.yaml", "-o", "-"]));
+    assert!(housed.contains("hoop stress in the outer ring at its raceway, compression, tightest pair"));
     let plain = hubgrip_in(&folder, &["check", "--json", "fan-hub.yaml"]);
     assert_eq!(serde_json::from_str::<Value>(&stdout(&plain)).unwrap()["bearing"], Value::Null);
 }

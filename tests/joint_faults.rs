@@ -188,7 +188,7 @@ fn words_are_refused_with_what_was_meant() {
                 ("bath: liquid nitrogen", "bath: ice"),
                 (27, 9, 3),
                 "`ice` is not a cold bath",
-                "dry ice, liquid nitrogen",
+                "dry ice, dry ice in alcohol, dry ice in acetone, liquid nitrogen",
             ),
             case(
                 ("criterion: Tresca", "criterion: von Misses"),

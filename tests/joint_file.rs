@@ -56,6 +56,7 @@ fn every_key_reaches_the_joint() {
             "assembly.handling_allowance",
             "assembly.transfer_time",
             "assembly.vessel",
+            "assembly.humidity",
             "assembly.temperature_lag",
         ]
     );

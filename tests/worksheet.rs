@@ -9,49 +9,134 @@ mod common;
 use std::collections::BTreeMap;
 
 use exmex::prelude::*;
-use hubgrip::findings::worksheet;
-use hubgrip::quantity::number;
+use hubgrip::findings::{Findings, WorksheetLine, worksheet};
+use hubgrip::joint::Method;
+use hubgrip::quantity::{UnitSystem, number};
 
 /// Digits to which a worksheet prints.
 const DIGITS: usize = 6;
 
+/// Works every formula of a sheet from its printed values; their number.
+fn work(findings: &Findings, name: &str) -> usize {
+    let mut formulas = 0;
+    let mut printed: BTreeMap<String, f64> = BTreeMap::from([("pi".to_owned(), std::f64::consts::PI)]);
+    for line in findings.worksheet().iter().flat_map(|section| &section.lines) {
+        if let Some(formula) = &line.formula {
+            let text = formula.plain();
+            let parsed = exmex::parse::<f64>(&text).unwrap_or_else(|error| panic!("{name}: {text}: {error}"));
+            let values: Vec<f64> = parsed
+                .var_names()
+                .iter()
+                .map(|symbol| {
+                    *printed.get(symbol).unwrap_or_else(|| panic!("{text}: {symbol} has no printed value"))
+                })
+                .collect();
+            let worked = parsed.eval(&values).expect("the formula can be worked");
+            assert_eq!(number(worked, DIGITS), line.printed, "{name}: {} = {text}", line.symbol.plain());
+            formulas += 1;
+        }
+        printed.insert(line.symbol.plain(), line.printed.parse().expect("a printed value is a number"));
+    }
+    formulas
+}
+
 #[test]
 fn every_formula_of_every_example_gives_its_printed_result() {
-    let mut formulas = 0;
-    for path in common::examples() {
-        let findings = common::findings(&path);
-        let mut printed: BTreeMap<String, f64> = BTreeMap::from([("pi".to_owned(), std::f64::consts::PI)]);
-        for line in findings.worksheet().iter().flat_map(|section| &section.lines) {
-            if let Some(formula) = &line.formula {
-                let text = formula.plain();
-                let parsed = exmex::parse::<f64>(&text)
-                    .unwrap_or_else(|error| panic!("{}: {text}: {error}", path.display()));
-                let values: Vec<f64> = parsed
-                    .var_names()
-                    .iter()
-                    .map(|name| {
-                        *printed.get(name).unwrap_or_else(|| panic!("{text}: {name} has no printed value"))
-                    })
-                    .collect();
-                let worked = parsed.eval(&values).expect("the formula can be worked");
-                assert_eq!(
-                    number(worked, DIGITS),
-                    line.printed,
-                    "{}: {} = {text}",
-                    path.display(),
-                    line.symbol.plain()
-                );
-                formulas += 1;
-            }
-            printed.insert(line.symbol.plain(), line.printed.parse().expect("a printed value is a number"));
-        }
-    }
+    let formulas: usize = common::examples()
+        .iter()
+        .map(|path| work(&common::findings(path), &path.display().to_string()))
+        .sum();
     assert!(formulas > 150, "only {formulas} formulas were worked");
     println!("{formulas} formulas worked");
 }
 
-/// What no example has: pressures from outside, relaxation, a hub strained further at work, a brittle bush; bending
-/// of a drilled shaft in inches, of a shaft outside the notch table; a warm shop with states hotter, colder and as warm.
+/// A printed line of a sheet.
+fn line(findings: &Findings, symbol: &str) -> WorksheetLine {
+    let lines = findings.worksheet().into_iter().flat_map(|section| section.lines);
+    let mut found = lines.filter(|line| line.symbol.plain() == symbol);
+    found.next().unwrap_or_else(|| panic!("no line {symbol}"))
+}
+
+/// Inner and outer rings, ball and roller, metric and inch, raceways estimated and given, at speed, relaxed, chilled and
+/// heated at once, in a housing that yields.
+#[test]
+fn every_line_of_a_bearing_seat_agrees() {
+    let on_shaft = "joint_file: 1\nshaft: {material: C45+QT, bore: 20 mm, roughness: Rz 2.5 um}\n\
+                    hub: {bearing: {bore: 50 mm, outside_diameter: 90 mm, width: 20 mm}}\nfit: m6\n";
+    let in_housing = "joint_file: 1\n\
+                      shaft: {bearing: {bore: 50 mm, outside_diameter: 90 mm, width: 20 mm, type: roller, clearance: C3}}\n\
+                      hub: {material: EN-AW-6082-T6, outer_diameter: 130 mm, roughness: Rz 4 um}\nfit: P7\n";
+    let soft = "{name: soft, kind: ductile, youngs_modulus: 70 GPa, poisson: 0.33, density: 2700 kg/m3, \
+                expansion: 23e-6 /K, yield_strength: 25 MPa, tensile_strength: 120 MPa, source: invented}";
+    let cases = [
+        format!(
+            "{on_shaft}duty: [{{state: rest}}, {{state: fast, speed: 6000 rpm, shaft_temperature: 75 degC, hub_temperature: \
+             70 degC}}]\nassembly: {{method: heat and chill, bath: dry ice, clearance: 20 um}}\n"
+        ),
+        format!(
+            "{}display: inch\nduty: [{{state: relaxed, torque: 5 N.m, relaxation: 0.8, temperature: 60 degC}}]\n",
+            on_shaft.replace("width: 20 mm", "width: 20 mm, inner_raceway: 58.4 mm, outer_raceway: 81.6 mm")
+        ),
+        format!(
+            "{in_housing}duty: [{{state: cold, temperature: -15 degC}}, {{state: warm, temperature: 60 degC}}]\n"
+        ),
+        format!(
+            "{in_housing}display: inch\nduty: [{{state: turning, torque: 2 N.m}}]\nassembly: {{method: chill shaft}}\n"
+        ),
+        format!(
+            "{}require: {{allow: plastic}}\nduty: [{{state: cold, temperature: -10 degC}}]\n",
+            in_housing
+                .replace("EN-AW-6082-T6", soft)
+                .replace("fit: P7", "fit: S7")
+                .replace("shaft: {", "shaft: {material: 42CrMo4+QT, ")
+        ),
+    ];
+    for case in cases {
+        let findings = common::findings_of(&case);
+        let (_, drifts) = worksheet::worked(&findings);
+        assert!(drifts.is_empty(), "{case}: {drifts:#?}");
+        assert!(work(&findings, &case) > 30);
+        assert_eq!(
+            findings
+                .worksheet()
+                .iter()
+                .any(|section| section.lines.iter().any(|line| line.symbol.plain() == "G_max")),
+            case.contains("plastic")
+        );
+        // The lines carry the figures that terminal, JSON and report show, to a unit of the printed digits.
+        let bearing = findings.bearing.as_ref().unwrap();
+        let inch = findings.joint.display == UnitSystem::Inch;
+        let (small, newton, pascal) = if inch {
+            (1e3 / 0.0254, 1.0 / 4.448_221_615_260_5, 1.0 / 6_894.757_293_168)
+        } else {
+            (1e6, 1.0, 1e-6)
+        };
+        let scale = bearing.before.value.high * small;
+        for (symbol, program, scale) in [
+            ("Delta_min", bearing.loss.loosest * small, 0.0),
+            ("Delta_max", bearing.loss.tightest * small, 0.0),
+            ("a_min", bearing.mounted.low * small, scale),
+            ("a_max", bearing.mounted.high * small, scale),
+            ("Delta_max1", bearing.states[0].loss.high * small, 0.0),
+            ("a_min1", bearing.states[0].left.low * small, scale),
+            ("a_max1", bearing.states[0].left.high * small, scale),
+            ("sigma_Bmax", bearing.hoop_stress.tightest * pascal, 0.0),
+            ("F_on", bearing.mounting_force * newton, 0.0),
+            ("F_off", bearing.pull_off_force * newton, 0.0),
+        ] {
+            let printed: f64 = line(&findings, symbol).printed.parse().unwrap();
+            let allowed = 5e-5 * f64::max(program.abs(), scale);
+            assert!((printed - program).abs() <= allowed, "{case}: {symbol} {printed}, {program}");
+        }
+        let hot = bearing.mounting_temperature.unwrap() - 273.15;
+        let hot = if inch { hot * 1.8 + 32.0 } else { hot };
+        let symbol = if findings.joint.assembly.method == Method::HeatHub { "T_h" } else { "T_hB" };
+        let printed: f64 = line(&findings, symbol).printed.parse().unwrap();
+        assert!((printed - hot).abs() <= 5e-5 * hot.abs(), "{case}: {printed}, {hot}");
+    }
+}
+
+/// What no example has: pressures from outside, relaxation, a hub strained further at work, a brittle bush.
 #[test]
 fn every_line_agrees_in_rarer_cases() {
     let head = "joint_file: 1\ndiameter: 50 mm\nlength: 40 mm\n";

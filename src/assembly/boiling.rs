@@ -107,12 +107,12 @@ fn film_coefficient(fluid: &BoilingFluid, diameter: f64, superheat: f64) -> f64 
         * (fluid.surface_tension / (FREE_FALL * (fluid.liquid_density - fluid.vapour_density))).sqrt();
     let sensible = 1.0 + 0.34 * fluid.vapour_specific_heat * superheat / fluid.latent_heat;
     let group = film_group(fluid, fluid.latent_heat * sensible * sensible, superheat);
-    (0.59 + 0.069 * wavelength / diameter) * group / wavelength.powf(0.25)
+    (0.59 + 0.069 * wavelength / diameter) * group / wavelength.sqrt().sqrt()
 }
 
 fn film_group(fluid: &BoilingFluid, heat: f64, superheat: f64) -> f64 {
     let lift = fluid.vapour_density * (fluid.liquid_density - fluid.vapour_density) * FREE_FALL;
-    (fluid.vapour_conductivity.powi(3) * lift * heat / (fluid.vapour_viscosity * superheat)).powf(0.25)
+    (fluid.vapour_conductivity.powi(3) * lift * heat / (fluid.vapour_viscosity * superheat)).sqrt().sqrt()
 }
 
 fn superheat(fluid: &BoilingFluid, wall: f64) -> Result<f64, AssemblyError> {

@@ -8,7 +8,7 @@ use crate::material::{Kind, Material};
 /// One caution with its subject and source.
 #[derive(Debug, Clone, PartialEq, Eq)]
 pub struct Caution {
-    /// What it belongs to: `press`, `heat` or `cold`.
+    /// What it belongs to: `press`, `heat`, `cold` or `apart`.
     pub subject: &'static str,
     /// One or more full sentences.
     pub text: String,
@@ -29,6 +29,8 @@ pub enum Process {
     Induction,
     /// The shaft is chilled in dry ice.
     DryIce,
+    /// The shaft is chilled in alcohol or acetone with dry ice.
+    DryIceBath,
     /// The shaft is chilled in liquid nitrogen.
     LiquidNitrogen,
     /// The joint is pushed apart, or floated apart with oil under pressure.
@@ -37,12 +39,13 @@ pub enum Process {
 
 impl Process {
     /// Every process, in the order of this list.
-    pub const ALL: [Self; 7] = [
+    pub const ALL: [Self; 8] = [
         Self::Press,
         Self::HeatHub,
         Self::OilBath,
         Self::Induction,
         Self::DryIce,
+        Self::DryIceBath,
         Self::LiquidNitrogen,
         Self::Dismount,
     ];
@@ -52,7 +55,7 @@ impl Process {
         match self {
             Self::Press | Self::Dismount => "press",
             Self::HeatHub | Self::OilBath | Self::Induction => "heat",
-            Self::DryIce | Self::LiquidNitrogen => "cold",
+            Self::DryIce | Self::DryIceBath | Self::LiquidNitrogen => "cold",
         }
     }
 }
@@ -76,6 +79,7 @@ pub fn cautions(process: Process) -> Vec<Caution> {
         Process::OilBath => &[HOT, OIL],
         Process::Induction => &[HOT, INDUCTION],
         Process::DryIce => &[COLD, DRY_ICE],
+        Process::DryIceBath => &[COLD, DRY_ICE, FLAMMABLE],
         Process::LiquidNitrogen => &[COLD, NITROGEN],
         Process::Dismount => &[DISMOUNT],
     };
@@ -186,9 +190,22 @@ const DRY_ICE: &[(&str, &str)] = &[
         "EIGA Doc 150, Dry ice; occupational limit",
     ),
     ("Never shut dry ice into a gas-tight container: it bursts.", "university safety sheets for dry ice"),
+];
+
+const FLAMMABLE: &[(&str, &str)] = &[
     (
-        "Keep fire away from an alcohol or acetone bath, and add the ice slowly: it foams over.",
-        "university safety sheets for cooling baths",
+        "Add the ice slowly, in small pieces, and leave a hand's breadth of rim: the bath foams over, most of all when \
+         a warm part goes in.",
+        "university safety sheets for cooling baths; the rim is common practice, no source",
+    ),
+    (
+        "Keep fire, sparks and hot parts away, use an open metal vessel in a tray, and cover it only loosely.",
+        "university safety sheets for cooling baths; the rest is common practice, from memory",
+    ),
+    (
+        "Let the liquid run off the part before it is joined: what is left on the seat takes the place of clearance, \
+         and it takes off oil and grease.",
+        "common practice, no source",
     ),
 ];
 

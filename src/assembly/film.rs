@@ -71,12 +71,7 @@ impl Film {
                 coefficient * difference + radiation(*emissivity, surface, surroundings)
             }
             Self::StillAir { standing, size, emissivity } => {
-                let (laminar, turbulent) = match standing {
-                    Standing::HorizontalCylinder => (1.32, 1.24),
-                    Standing::Vertical => (1.42, 1.31),
-                };
-                let amount = difference.abs();
-                let coefficient = (laminar * (amount / size).powf(0.25)).max(turbulent * amount.cbrt());
+                let (coefficient, _) = still_air(*standing, *size, difference.abs());
                 coefficient * difference + radiation(*emissivity, surface, surroundings)
             }
             Self::NitrogenPool(diameter) => nitrogen_heat_flux(*diameter, surface),
@@ -125,12 +120,28 @@ impl Film {
         Surface { temperature, heat_flux: conductance * (inside - temperature), slope }
     }
 
+    /// Slope of the heat flux against the surface temperature, W/(m²·K), where it has a short form.
+    fn slope(&self, surface: f64, surroundings: f64) -> Option<f64> {
+        let (convection, emissivity) = match self {
+            Self::Gas { coefficient, emissivity } => (*coefficient, *emissivity),
+            Self::StillAir { standing, size, emissivity } => {
+                let (coefficient, exponent) = still_air(*standing, *size, (surface - surroundings).abs());
+                (coefficient * (1.0 + exponent), *emissivity)
+            }
+            _ => return None,
+        };
+        Some(convection + 4.0 * emissivity * STEFAN_BOLTZMANN * surface * surface * surface)
+    }
+
     /// Surface temperature at which conduction from inside equals the exchange, and the slope of the exchange there.
     ///
     /// Newton's method from inside, where a metal's surface is near; a bracketed root when it does not settle.
     fn balanced(&self, inside: f64, conductance: f64, surroundings: f64) -> (f64, f64) {
         let balance = |surface: f64| conductance * (inside - surface) - self.heat_flux(surface, surroundings);
         let slope_at = |surface: f64| {
+            if let Some(slope) = self.slope(surface, surroundings) {
+                return slope;
+            }
             let nudge = 1e-4;
             (self.heat_flux(surface + nudge, surroundings) - self.heat_flux(surface - nudge, surroundings))
                 / (2.0 * nudge)
@@ -168,6 +179,20 @@ pub(crate) struct Surface {
     pub(crate) slope: f64,
 }
 
+/// Coefficient of still air at a temperature difference (K), W/(m²·K), and its exponent: the greater of the laminar
+/// a (ΔT/s)^¼ and the turbulent b ΔT^⅓, which is the greater one where ΔT s³ > (a/b)¹².
+fn still_air(standing: Standing, size: f64, difference: f64) -> (f64, f64) {
+    let (laminar, turbulent): (f64, f64) = match standing {
+        Standing::HorizontalCylinder => (1.32, 1.24),
+        Standing::Vertical => (1.42, 1.31),
+    };
+    if difference * size * size * size > (laminar / turbulent).powi(12) {
+        (turbulent * difference.cbrt(), 1.0 / 3.0)
+    } else {
+        (laminar * (difference / size).sqrt().sqrt(), 0.25)
+    }
+}
+
 fn radiation(emissivity: f64, surface: f64, surroundings: f64) -> f64 {
     emissivity
         * STEFAN_BOLTZMANN
@@ -198,6 +223,34 @@ mod tests {
                 let film = Film::StillAir { standing, size: 0.1, emissivity: 0.0 };
                 let h = film.heat_flux(293.15 + difference, 293.15) / difference;
                 assert!((2.0..25.0).contains(&h), "{h}");
+            }
+        }
+    }
+
+    /// Either branch is the greater one on its side, and the slope is that of the flux.
+    #[test]
+    fn still_air_takes_the_greater_relation() {
+        for (standing, laminar, turbulent) in
+            [(Standing::Vertical, 1.42, 1.31), (Standing::HorizontalCylinder, 1.32, 1.24)]
+        {
+            for size in [0.02, 0.3, 1.0, 3.0] {
+                for difference in [0.0_f64, 0.5, 4.0, 30.0, 200.0] {
+                    let film = Film::StillAir { standing, size, emissivity: 0.4 };
+                    let greater =
+                        (laminar * (difference / size).powf(0.25)).max(turbulent * difference.cbrt());
+                    let flux = greater * difference + radiation(0.4, 293.15 + difference, 293.15);
+                    assert_relative_eq!(
+                        film.heat_flux(293.15 + difference, 293.15),
+                        flux,
+                        max_relative = 1e-13
+                    );
+                    if difference > 0.0 {
+                        let at = |t: f64| film.heat_flux(293.15 + difference + t, 293.15);
+                        let slope = (at(1e-3) - at(-1e-3)) / 2e-3;
+                        let own = film.slope(293.15 + difference, 293.15).unwrap();
+                        assert_relative_eq!(own, slope, max_relative = 1e-5);
+                    }
+                }
             }
         }
     }

@@ -38,11 +38,11 @@ pub struct UsualFilm {
 }
 
 impl Medium {
-    /// Temperature that the medium keeps by itself, K; none when it is set by the user.
+    /// Temperature that the medium keeps by itself, K; none when it is set by the user, or by the liquid.
     pub fn temperature(self) -> Option<f64> {
         match self {
-            Self::Oven | Self::OilBath | Self::Freezer | Self::NitrogenVapour => None,
-            Self::DryIcePacked | Self::DryIceBath => Some(DRY_ICE_TEMPERATURE),
+            Self::Oven | Self::OilBath | Self::Freezer | Self::NitrogenVapour | Self::DryIceBath => None,
+            Self::DryIcePacked => Some(DRY_ICE_TEMPERATURE),
             Self::NitrogenPool => Some(LIQUID_NITROGEN_TEMPERATURE),
         }
     }

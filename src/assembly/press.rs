@@ -36,7 +36,7 @@ pub struct PressPoint {
 pub struct PressInput {
     /// Contact pressure of the seated joint, Pa; zero when the parts do not grip.
     pub pressure: f64,
-    /// Effective diametral interference, m; greater than zero when there is a pressure.
+    /// Effective diametral interference at the temperature of pressing, m; greater than zero when there is a pressure.
     pub interference: f64,
     /// Diameter of the joint, m.
     pub diameter: f64,

@@ -102,8 +102,11 @@ impl Property {
             Self::Curve(property) => {
                 let (from, to) = property.curve.range();
                 let inside = temperature.clamp(from, to);
-                property.up_to(inside).unwrap_or(f64::NAN)
-                    + property.held(temperature) * (temperature - inside)
+                let content = property.up_to(inside).unwrap_or(f64::NAN);
+                if inside == temperature {
+                    return content;
+                }
+                content + property.held(temperature) * (temperature - inside)
             }
         }
     }
@@ -116,10 +119,8 @@ impl PropertyCurve {
     }
 
     fn up_to(&self, temperature: f64) -> Result<f64, AssemblyError> {
-        self.curve.value(temperature)?;
-        let points = self.curve.points();
-        let piece = points.partition_point(|point| point.0 <= temperature).clamp(1, points.len() - 1) - 1;
-        Ok(self.integral[piece] + simpson(&self.curve, points[piece].0, temperature))
+        let (piece, from_its_start) = self.curve.integral_in_piece(temperature)?;
+        Ok(self.integral[piece] + from_its_start)
     }
 }
 

@@ -4,6 +4,7 @@ use super::cold_bath::cold_bath;
 use super::press_work::press_work;
 use super::times::{self, Times};
 use super::{AssemblyFindings, BathFindings, ConstantCoefficient, FindingsError, PairFindings, ThermalRoute};
+use crate::assembly::bath_liquid::{ACETONE, ALCOHOL};
 use crate::assembly::joining::{BathRoute, Joining, Obstacle, Route};
 use crate::assembly::press::{self, PressCurve, PressInput};
 use crate::joint::{Bath, Joint, Ring};
@@ -36,7 +37,9 @@ pub(super) fn assembly(
         hub_limit: hub_limit.as_ref().map(|(limit, _)| *limit),
     };
     let words = Words { display: joint.display, hub: &hub.name, shaft: &shaft.name };
-    let baths = [Bath::DryIce, Bath::LiquidNitrogen]
+    // Dry ice in the form that was asked for.
+    let ice = if joint.assembly.bath.is_dry_ice() { joint.assembly.bath } else { Bath::DryIce };
+    let baths = [ice, Bath::LiquidNitrogen]
         .into_iter()
         .map(|bath| Ok(words.bath(bath, &joining.bath(bath_temperature(bath))?)))
         .collect::<Result<Vec<_>, FindingsError>>()?;
@@ -53,6 +56,7 @@ pub(super) fn assembly(
         times: Times::default(),
         cold_bath: None,
         press_work: None,
+        oil: None,
     };
     assembly.press_work = press_work(joint, extremes, &assembly, &joining)?;
     in_the_oven_and_bath(joint, extremes, &mut assembly)?;
@@ -100,15 +104,16 @@ fn constant_coefficient(ring: &Ring, temperature: f64, diameter: f64) -> Option<
 
 fn press_curve(joint: &Joint, pair: &PairFindings, friction: f64) -> Result<PressCurve, FindingsError> {
     Ok(press::press_curve(
-        &press_input(joint, pair.pressure, pair.effective_interference, friction),
+        &press_input(joint, pair.pressure, pair.shop_interference, friction),
         CURVE_POINTS,
     )?)
 }
 
-/// The pressing-in of one pair.
+/// The pressing-in of one pair with its interference at the shop temperature, where it is pressed.
 pub(super) fn press_input(joint: &Joint, pressure: f64, interference: f64, friction: f64) -> PressInput {
     PressInput {
-        pressure,
+        // Parts that only just part may have a pressure of rounding left.
+        pressure: if interference > 0.0 { pressure } else { 0.0 },
         interference: interference.max(0.0),
         diameter: joint.interface_diameter(joint.last_interface()),
         length: joint.engaged_length(),
@@ -244,6 +249,8 @@ fn hub_limit(joint: &Joint) -> Option<(f64, String)> {
 pub fn bath_temperature(bath: Bath) -> f64 {
     match bath {
         Bath::DryIce => media::dry_ice::TEMPERATURE.value,
+        Bath::DryIceInAlcohol => ALCOHOL.temperature,
+        Bath::DryIceInAcetone => ACETONE.temperature,
         Bath::LiquidNitrogen => media::liquid_nitrogen::TEMPERATURE.value,
     }
 }
@@ -252,6 +259,8 @@ pub fn bath_temperature(bath: Bath) -> f64 {
 pub fn bath_name(bath: Bath) -> &'static str {
     match bath {
         Bath::DryIce => "dry ice",
+        Bath::DryIceInAlcohol => "dry ice in alcohol",
+        Bath::DryIceInAcetone => "dry ice in acetone",
         Bath::LiquidNitrogen => "liquid nitrogen",
     }
 }

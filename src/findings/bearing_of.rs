@@ -1,5 +1,6 @@
 //! What the seat does to a bearing: loss of clearance, what is left cold and hot, how it is mounted.
 
+use super::condition::youngs_modulus;
 use super::{AssemblyFindings, Caution, DutyFindings, Findings, FindingsError, PairFindings};
 use crate::assembly::bearing::{mounted_clearance, raceway_change};
 use crate::assembly::bearing_tables::{BearingRing, radial_clearance};
@@ -13,6 +14,10 @@ use crate::tolerance::Extremes;
 /// Source: bearing handbooks, 120 to 130 MPa for the mounted inner ring of through-hardened steel, more for
 /// case-hardened ones (from memory).
 pub const HOOP_LIMIT: f64 = 130e6;
+
+/// Where [`HOOP_LIMIT`] comes from.
+pub const RING_LIMIT_SOURCE: &str =
+    "bearing handbooks, 120 to 130 MPa for through-hardened rings (from memory)";
 
 /// Usual limit for sealed or greased bearings, K: 80 °C (common practice, from memory).
 const SEALED_LIMIT: f64 = 353.15;
@@ -45,6 +50,8 @@ pub struct BearingFindings {
 pub struct BearingState {
     /// How much warmer the inner ring is than the outer, K.
     pub inner_hotter_by: f64,
+    /// Mean expansion coefficient of the fitted ring between both temperatures, 1/K; zero when they are equal.
+    pub expansion: f64,
     /// Loss of clearance by the fit, loosest and tightest pair.
     pub loss: Range,
     /// What is left; negative is preload.
@@ -61,10 +68,12 @@ pub(super) fn bearing(
     let Some(seat) = &joint.bearing else { return Ok(None) };
     let work = Work { joint, seat };
     let before = radial_clearance(seat.kind, seat.clearance, seat.bore)?;
+    let ring = joint.rings.get(seat.index());
+    let modulus = ring.map_or(Ok(0.0), |ring| youngs_modulus(ring, joint.assembly.shop_temperature))?;
     let loss = Extremes {
-        loosest: work.loss(extremes.loosest.pressure)?,
-        mean: work.loss(extremes.mean.pressure)?,
-        tightest: work.loss(extremes.tightest.pressure)?,
+        loosest: work.loss(extremes.loosest.pressure, modulus)?,
+        mean: work.loss(extremes.mean.pressure, modulus)?,
+        tightest: work.loss(extremes.tightest.pressure, modulus)?,
     };
     let states = joint
         .duty
@@ -91,9 +100,7 @@ struct Work<'a> {
 }
 
 impl Work<'_> {
-    fn loss(&self, pressure: f64) -> Result<f64, FindingsError> {
-        let youngs_modulus =
-            self.joint.rings.get(self.seat.index()).map_or(0.0, |ring| ring.material.youngs_modulus.value);
+    fn loss(&self, pressure: f64, youngs_modulus: f64) -> Result<f64, FindingsError> {
         Ok(raceway_change(pressure, self.seat.diameter(), self.seat.raceway(), youngs_modulus)?)
     }
 
@@ -114,12 +121,17 @@ impl Work<'_> {
         let shop = self.joint.assembly.shop_temperature;
         let ring = state.temperatures.get(index).copied().unwrap_or(shop);
         let hotter = if ring > shop { self.seat.inner_hotter_by.value } else { 0.0 };
-        let loss =
-            Range { low: self.loss(found.loosest.pressure)?, high: self.loss(found.tightest.pressure)? };
+        let modulus = found.youngs_moduli.get(index).copied().unwrap_or(0.0);
+        let loss = Range {
+            low: self.loss(found.loosest.pressure, modulus)?,
+            high: self.loss(found.tightest.pressure, modulus)?,
+        };
+        let expansion = self.expansion(ring, hotter)?;
         Ok(BearingState {
             inner_hotter_by: hotter,
+            expansion,
             loss,
-            left: self.left(before, loss, self.expansion(ring, hotter)?, hotter)?,
+            left: self.left(before, loss, expansion, hotter)?,
         })
     }
 
@@ -164,7 +176,7 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
                 show(Measure::Pressure, hoop, system),
                 show(Measure::Pressure, HOOP_LIMIT, system),
             ),
-            "bearing handbooks, 120 to 130 MPa for through-hardened rings (from memory)",
+            RING_LIMIT_SOURCE,
         );
     }
     let hot = findings

@@ -7,6 +7,7 @@ use crate::assembly::atmosphere::{
     OXYGEN_IN_AIR, OXYGEN_WARNING, OxygenLevel, carbon_dioxide_share, oxygen_after_displacement,
     oxygen_level, oxygen_ventilated,
 };
+use crate::assembly::bath_liquid::{ACETONE, ALCOHOL, BathLiquid};
 use crate::assembly::cryogen::{
     Amount, ColdJob, Coolant, DRY_ICE, JobAmounts, LIQUID_NITROGEN, PRACTICAL_FACTOR,
 };
@@ -29,6 +30,8 @@ pub struct ColdBathFindings {
     pub mean_specific_heat: f64,
     /// The whole job in its vessel.
     pub job: JobAmounts,
+    /// The liquid that dry ice keeps cold; none of a bath without one.
+    pub liquid: Option<LiquidFindings>,
     /// What cools the part when the cold gas is used as well: the least.
     pub with_cold_gas: Amount,
     /// What to have at hand for the part and the vessel, from low to high: the boiled-off mass times the practical
@@ -44,6 +47,19 @@ pub struct ColdBathFindings {
     pub least_room: f64,
     /// The room; none when the joint file does not give one.
     pub room: Option<RoomFindings>,
+}
+
+/// The liquid of a bath of dry ice.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct LiquidFindings {
+    /// What it is.
+    pub liquid: BathLiquid,
+    /// How much goes round the part, m³.
+    pub volume: f64,
+    /// Its mass, kg.
+    pub mass: f64,
+    /// Dry ice that brings it down to the temperature of the bath.
+    pub ice: Amount,
 }
 
 /// The air of the room.
@@ -100,9 +116,25 @@ pub(super) fn cold_bath(
         idle_rate: hourly_loss / 3600.0,
         time,
     })?;
+    let liquid = liquid_of(joint.assembly.bath)
+        .map(|liquid| {
+            let volume = vessel.volume - part.volume();
+            let (mass, ice) = liquid.cooled(volume, shop)?;
+            Ok::<_, AssemblyError>(LiquidFindings { liquid, volume, mass, ice })
+        })
+        .transpose()?;
+    let job = match &liquid {
+        None => job,
+        // The liquid covers the part; of the ice nothing need stay over.
+        Some(found) => {
+            let boiled = coolant.amount(job.boiled.mass + found.ice.mass);
+            JobAmounts { cover: coolant.amount(0.0), boiled, total: boiled, ..job }
+        }
+    };
     let part_mass = part.volume() * substance.density;
     let gas = job.boiled.gas_volume;
-    let room = practice.room.map(|room| room_findings(room, &job, &coolant, time)).transpose()?;
+    let is_dry_ice = joint.assembly.bath.is_dry_ice();
+    let room = practice.room.map(|room| room_findings(room, &job, is_dry_ice, time)).transpose()?;
     let to_bring = |factor: f64| factor * job.boiled.mass + job.cover.mass;
     Ok(Ok(ColdBathFindings {
         bath: joint.assembly.bath,
@@ -116,6 +148,7 @@ pub(super) fn cold_bath(
         least_room: gas / (1.0 - OXYGEN_WARNING / OXYGEN_IN_AIR),
         room,
         job,
+        liquid,
     }))
 }
 
@@ -123,25 +156,32 @@ pub(super) fn cold_bath(
 pub fn coolant(bath: Bath) -> Coolant {
     match bath {
         Bath::DryIce => DRY_ICE,
+        Bath::DryIceInAlcohol => ALCOHOL.coolant(),
+        Bath::DryIceInAcetone => ACETONE.coolant(),
         Bath::LiquidNitrogen => LIQUID_NITROGEN,
+    }
+}
+
+/// The liquid of a bath, when it has one.
+fn liquid_of(bath: Bath) -> Option<BathLiquid> {
+    match bath {
+        Bath::DryIceInAlcohol => Some(ALCOHOL),
+        Bath::DryIceInAcetone => Some(ACETONE),
+        Bath::DryIce | Bath::LiquidNitrogen => None,
     }
 }
 
 fn room_findings(
     room: Room,
     job: &JobAmounts,
-    coolant: &Coolant,
+    is_dry_ice: bool,
     time: f64,
 ) -> Result<RoomFindings, AssemblyError> {
     let gas = job.boiled.gas_volume;
     let left = |gas: f64| oxygen_after_displacement(room.volume, gas.min(room.volume));
     let (oxygen, oxygen_spilled) = (left(gas)?, left(job.total.gas_volume)?);
     let air = room.air_changes * room.volume / 3600.0;
-    let carbon_dioxide = if coolant.temperature == DRY_ICE.temperature {
-        Some(carbon_dioxide_share(room.volume, gas)?)
-    } else {
-        None
-    };
+    let carbon_dioxide = if is_dry_ice { Some(carbon_dioxide_share(room.volume, gas)?) } else { None };
     Ok(RoomFindings {
         room,
         oxygen,

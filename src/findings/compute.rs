@@ -6,7 +6,8 @@ use super::condition::Condition;
 use super::kernel::{Kernel, pair_interferences};
 use super::softening::Parts;
 use super::{
-    DutyFindings, Findings, OnsetOfYield, assembly_of, bearing_of, cautions, service, softening, verdicts,
+    DutyFindings, Findings, OnsetOfYield, assembly_of, bearing_of, cautions, oil, service, softening,
+    verdicts,
 };
 use crate::assembly::AssemblyError;
 use crate::joint::{Allow, Joint};
@@ -90,7 +91,8 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         softening::soften(&joint, &kernel, plastic, &mut parts)?;
     }
     let service = service::service(&joint, &kernel, &pairs, &extremes.tightest, &duty, plastic)?;
-    let assembly = assembly_of::assembly(&joint, &extremes)?;
+    let mut assembly = assembly_of::assembly(&joint, &extremes)?;
+    assembly.oil = oil::oil(&joint, &kernel, &pairs, &extremes, service.plastic.as_ref())?;
     let character =
         joint.fits.get(joint.last_interface()).map_or(Character::Clearance, |fit| fit.limits.character());
     let bearing = bearing_of::bearing(&joint, &extremes, &duty, &assembly)?;

@@ -4,7 +4,9 @@ use super::Findings;
 use crate::assembly::atmosphere::{CARBON_DIOXIDE_LIMIT, OxygenLevel};
 use crate::assembly::cautions::{self as practice, Caution, Part, Process};
 use crate::joint::practice::Heating;
-use crate::joint::{Bath, Method};
+use crate::joint::{Bath, Method, Ring};
+use crate::material::Kind;
+use crate::quantity::{Measure, show};
 
 /// Below this handling time a lift must be drilled and may need another route, s (common practice, no source).
 const SHORT: f64 = 15.0;
@@ -12,11 +14,50 @@ const SHORT: f64 = 15.0;
 /// The cautions of the method, of the materials that go through it, of the air, and of a time that is short.
 pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     let mut all: Vec<Caution> = processes(findings).into_iter().flat_map(practice::cautions).collect();
+    all.extend(flammable(findings));
     all.extend(air(findings));
     all.extend(short_time(findings));
+    all.extend(frosted(findings));
     all.extend(quench(findings));
     all.extend(crushing(findings));
     all.extend(materials(findings));
+    all.extend(oil(findings));
+    all
+}
+
+/// What must be minded when oil takes the joint apart, and the part that the oil would overstrain.
+fn oil(findings: &Findings) -> Vec<Caution> {
+    let Some(found) = &findings.assembly.oil else { return Vec::new() };
+    let joint = &findings.joint;
+    let (shaft, hub) = joint.joined_last();
+    let mut all = vec![Caution {
+        subject: "apart",
+        text: format!(
+            "If oil is pressed between the seats, keep a stop or a nut before the {}: it may jump off. Never pump above the rating of \
+             pump, hoses and fittings, and stand clear of them. Let the oil drain for an hour or two, a day in the cold, before the \
+             joint carries torque again.",
+            hub.name
+        ),
+        source: "common practice, from memory".to_owned(),
+    }];
+    let required = |ring: &Ring| match ring.material.kind {
+        Kind::Brittle => joint.require.fracture_safety,
+        Kind::Ductile | Kind::Polymer => joint.require.yield_safety,
+    };
+    for (ring, safety) in [(hub, found.tightest.hub_safety), (shaft, found.tightest.shaft_safety)] {
+        let Some(safety) = safety.filter(|safety| *safety < required(ring)) else { continue };
+        all.push(Caution {
+            subject: "apart",
+            text: format!(
+                "The oil pressure that floats the tightest pair leaves the {} a safety of {safety:.2} only, less than the {:.2} \
+                 required: warm the {} first, or take it off another way.",
+                ring.name,
+                required(ring),
+                hub.name
+            ),
+            source: "Lamé, with the oil pressure in place of the contact pressure".to_owned(),
+        });
+    }
     all
 }
 
@@ -29,6 +70,7 @@ fn processes(findings: &Findings) -> Vec<Process> {
     };
     let bath = match plan.bath {
         Bath::DryIce => Process::DryIce,
+        Bath::DryIceInAlcohol | Bath::DryIceInAcetone => Process::DryIceBath,
         Bath::LiquidNitrogen => Process::LiquidNitrogen,
     };
     match plan.method {
@@ -37,6 +79,26 @@ fn processes(findings: &Findings) -> Vec<Process> {
         Method::ChillShaft => vec![bath],
         Method::HeatAndChill => vec![heat, bath],
     }
+}
+
+/// The flash point of the liquid in a bath of dry ice.
+fn flammable(findings: &Findings) -> Option<Caution> {
+    let liquid = findings.assembly.cold_bath.as_ref()?.liquid.as_ref()?.liquid;
+    let hot = if findings.joint.assembly.heats() {
+        " The hub is hot: the part must be dry before it goes near."
+    } else {
+        ""
+    };
+    Some(Caution {
+        subject: "cold",
+        text: format!(
+            "The {} of the bath is flammable, with a flash point of {}: cold it gives off little, but what is spilled, carried out on \
+             the part or left to warm catches fire in a room that is warmer than that.{hot}",
+            liquid.name,
+            show(Measure::Temperature, liquid.flash_point, findings.joint.display)
+        ),
+        source: liquid.source.to_owned(),
+    })
 }
 
 fn air(findings: &Findings) -> Vec<Caution> {
@@ -93,6 +155,19 @@ fn short_time(findings: &Findings) -> Option<Caution> {
              more; practise the movement before."
         ),
         source: "common practice, no source".to_owned(),
+    })
+}
+
+/// A time that is met only without frost.
+fn frosted(findings: &Findings) -> Option<Caution> {
+    let needed = findings.joint.assembly.practice.handling_time?;
+    let end = findings.assembly.times.handling.as_ref()?.frost.as_ref()?.at_end?;
+    (end.gone < needed && needed <= end.time).then(|| Caution {
+        subject: "cold",
+        text: "The time that is needed is met only while the seat carries no frost: wipe it, keep it in dry gas until the last moment, \
+               or open more clearance."
+            .to_owned(),
+        source: "bound on the frost by the analogy of heat and mass transfer".to_owned(),
     })
 }
 

@@ -79,6 +79,9 @@ pub(super) struct Kernel<'a> {
     pub(super) shop: Condition,
 }
 
+/// How far parts are moved apart to see their overlap, as a share of the diameter: more than any fit takes.
+const WIDE_APART: f64 = 0.05;
+
 /// One condition solved in one piece.
 struct Solved {
     length: f64,
@@ -149,14 +152,15 @@ impl<'a> Kernel<'a> {
         let pressure = mean_pressure(&solved, last);
         let friction = &joint.friction;
         let diameter = joint.interface_diameter(last);
-        let peak = |friction: f64| {
-            press::peak_force(&assembly_of::press_input(joint, pressure, at(&pair.effective, last), friction))
-        };
+        let overlap = self.overlap(&pair.effective)?;
+        let peak =
+            |friction: f64| press::peak_force(&assembly_of::press_input(joint, pressure, overlap, friction));
         let release = |friction: f64| capacity::axial(friction, pressure, diameter, joint.engaged_length());
         Ok(PairFindings {
             interference: at(&pair.made, last),
             smoothing: at(&pair.made, last) - at(&pair.effective, last),
             effective_interference: at(&pair.effective, last),
+            shop_interference: overlap,
             pressure,
             pressure_smoothed: self.pressure(&pair.smoothed, &self.shop)?,
             pressure_unsmoothed: self.pressure(&pair.made, &self.shop)?,
@@ -174,6 +178,23 @@ impl<'a> Kernel<'a> {
                 high: release(friction.release.value.high),
             },
         })
+    }
+
+    /// Diametral overlap of the parts at the interface joined last, before they are joined, at the shop temperature, m.
+    fn overlap(&self, interference: &[f64]) -> Result<f64, FindingsError> {
+        let last = self.joint.last_interface();
+        if let [inner, outer] = self.shop.strain.as_slice() {
+            return Ok(at(interference, last) + self.joint.interface_diameter(last) * (inner - outer));
+        }
+        // The rings within and without are strained by the joints made before: moved wide apart, the parts show by how
+        // much they would overlap.
+        let apart = WIDE_APART * self.joint.interface_diameter(last);
+        let mut opened = interference.to_vec();
+        if let Some(opened) = opened.get_mut(last) {
+            *opened -= apart;
+        }
+        let solved = self.solve(&opened, &self.shop)?;
+        Ok(apart - 2.0 * solved.first().map_or(0.0, |piece| at(&piece.solution.gaps, last)))
     }
 
     /// One pair in a service state; of its contact pressure only the share `relaxation` is left for holding.

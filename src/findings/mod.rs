@@ -9,9 +9,11 @@ mod condition;
 mod envelope;
 pub mod expression;
 mod fatigue;
+pub mod frost;
 mod joining_cautions;
 mod kernel;
 mod modulus_notes;
+pub mod oil;
 pub mod press_work;
 mod service;
 mod shaft_alone;
@@ -22,13 +24,14 @@ mod verdicts;
 pub mod worksheet;
 
 pub use assembly_of::{bath_name, bath_temperature};
-pub use bearing_of::{BearingFindings, BearingState, HOOP_LIMIT};
+pub use bearing_of::{BearingFindings, BearingState, HOOP_LIMIT, RING_LIMIT_SOURCE};
 pub use cautions::criterion_source;
 use cold_bath::ColdBathFindings;
 pub use compute::{FindingsError, compute};
 pub use envelope::{Envelope, EnvelopeLine, EnvelopeMeaning, EnvelopeState};
 pub use fatigue::{Fatigue, PLAIN_SHARE, TESTED_DIAMETER, TESTED_NOTCH};
 pub use kernel::after_smoothing;
+use oil::OilFindings;
 use press_work::PressWorkFindings;
 pub use service::{
     GoverningRing, Loosening, OrderStep, PlasticFindings, ServiceFindings, ThinLiner, WornHub,
@@ -85,6 +88,9 @@ pub struct PairFindings {
     pub smoothing: f64,
     /// Interference that grips, m; negative is clearance.
     pub effective_interference: f64,
+    /// Interference that acts at the shop temperature, m: [`Self::effective_interference`] with the difference of free
+    /// growth from 20 °C and, with more than two rings, what the joints made before strain the parts.
+    pub shop_interference: f64,
     /// Contact pressure, Pa; zero when the pair has clearance.
     pub pressure: f64,
     /// Contact pressure had the smoothing loss been taken, Pa.
@@ -259,6 +265,8 @@ pub struct AssemblyFindings {
     pub cold_bath: Option<ColdBathFindings>,
     /// Around the press, and after it; none when no pair grips.
     pub press_work: Option<PressWorkFindings>,
+    /// Oil injection; none when no pair grips.
+    pub oil: Option<OilFindings>,
 }
 
 /// What the coefficient at 20 °C would say of a part in place of its expansion curve.

@@ -38,13 +38,6 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
                 .to_owned(),
         );
     }
-    if changed && findings.bearing.is_some() {
-        notes.push(
-            "The loss of bearing clearance in a warm state is worked from its contact pressure with the ring's modulus at 20 °C: \
-             it is too small by the fall of that modulus, 2 % at 100 °C."
-                .to_owned(),
-        );
-    }
     notes
 }
 

@@ -15,9 +15,6 @@ use crate::tolerance::Extremes;
 /// Usual speed of pressing, m/s: 2 mm/s (DIN 7190, from memory).
 pub const PRESS_SPEED: f64 = 0.002;
 
-/// Oil pressure that floats a hub over its contact pressure: a fifth more (common practice, from memory).
-pub const OIL_OVER_CONTACT: f64 = 1.2;
-
 /// Around the press, and after it; all at the tightest pair with the high friction.
 #[derive(Debug, Clone, PartialEq)]
 pub struct PressWorkFindings {
@@ -35,8 +32,6 @@ pub struct PressWorkFindings {
     pub push_out: PushOut,
     /// Hub temperature at which the joint lets go when the shaft lags behind; K.
     pub release: Result<f64, String>,
-    /// Oil pressure that floats the hub, Pa, and what it leaves of the hub's safety.
-    pub oil: (f64, Option<f64>),
 }
 
 impl PressWorkFindings {
@@ -73,7 +68,6 @@ pub(super) fn press_work(
     let length = joint.engaged_length();
     let chamfer = advised_chamfer_length(diameter)? * joint.assembly.chamfer_angle.value.tan();
     let friction = &joint.friction;
-    let hub_safety = extremes.tightest.rings.last().and_then(|stress| stress.safety);
     Ok(Some(PressWorkFindings {
         size: press_size(curve.peak_force),
         heating: heating(joint, pressure, curve.work)?,
@@ -82,7 +76,6 @@ pub(super) fn press_work(
         buckling: buckling(shaft, diameter, joint.length)?,
         push_out: push_out(pressure, diameter, length, friction.release.value, friction.pressing.value)?,
         release: release(joint, joining),
-        oil: (OIL_OVER_CONTACT * pressure, hub_safety.map(|safety| safety / OIL_OVER_CONTACT)),
     }))
 }
 

@@ -2,6 +2,7 @@
 
 use super::AssemblyFindings;
 use super::assembly_of::{bath_name, bath_temperature};
+use super::frost::{self, FrostFindings};
 use super::thermal_part::{body, substance};
 use crate::assembly::AssemblyError;
 use crate::assembly::conduction::{Conduction, Substance, Surroundings};
@@ -79,6 +80,8 @@ pub struct HandlingFindings {
     pub tightest: HandlingCourse,
     /// Course of the loosest pair.
     pub loosest: HandlingCourse,
+    /// Frost on a chilled shaft: a bound, not counted in the courses; none when nothing settles.
+    pub frost: Option<FrostFindings>,
 }
 
 /// Temperatures that the method plans.
@@ -136,8 +139,15 @@ pub(super) fn times(
         gas_conductivity: GAP_AIR_CONDUCTIVITY,
         overlap_after: joint.assembly.practice.transfer_time,
     };
-    match seating(&pair, interference.0, joint.assembly.practice.form_error) {
-        Ok(found) => times.handling = Some(found),
+    let practice = &joint.assembly.practice;
+    match seating(&pair, interference.0, practice.form_error) {
+        Ok(mut found) => {
+            match frost::frost(&pair, &found.tightest, practice.form_error, practice.humidity) {
+                Ok(frost) => found.frost = frost,
+                Err(error) => times.gaps.push(format!("The frost on the shaft cannot be told: {error}.")),
+            }
+            times.handling = Some(found);
+        }
         Err(error @ (AssemblyError::OutsideCurve { .. } | AssemblyError::NotSettled { .. })) => {
             times.gaps.push(format!("The handling time does not exist: {error}."));
         }
@@ -206,6 +216,7 @@ fn chilled(
 ) -> Result<SoakFindings, AssemblyError> {
     let medium = match bath {
         Bath::DryIce => Medium::DryIcePacked,
+        Bath::DryIceInAlcohol | Bath::DryIceInAcetone => Medium::DryIceBath,
         Bath::LiquidNitrogen => Medium::NitrogenPool,
     };
     let (shop, cold) = (joint.assembly.shop_temperature, bath_temperature(bath));
@@ -218,8 +229,8 @@ fn chilled(
     let part = Conduction::new(body(shaft, length), substance.clone(), around, shop)?;
     let wanted = wanted.unwrap_or(shop + SOAKED * (cold - shop));
     let source = match bath {
-        Bath::DryIce => medium.usual().source,
         Bath::LiquidNitrogen => BOILING,
+        _ => medium.usual().source,
     };
     soaked(shaft, part, substance, wanted, bath_name(bath), source)
 }
@@ -287,5 +298,6 @@ fn seating(pair: &Handling, loosest: f64, least: f64) -> Result<HandlingFindings
         least,
         tightest: pair.course_with(least, Accuracy::QUICK)?,
         loosest: other.course_with(least, Accuracy::QUICK)?,
+        frost: None,
     })
 }

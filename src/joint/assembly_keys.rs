@@ -23,7 +23,7 @@ pub(crate) struct AssemblyKeys {
     pub(crate) handling_allowance: Option<Written<Length>>,
     /// Angle of the lead-in chamfer to the axis. Silent: 5 deg.
     pub(crate) chamfer_angle: Option<Written<Angle>>,
-    /// Cold bath. Silent: dry ice.
+    /// Cold bath: dry ice, dry ice in alcohol, dry ice in acetone or liquid nitrogen. Silent: dry ice.
     pub(crate) bath: Option<Written<BathWord>>,
     /// What the hub is heated in. Silent: forced oven.
     pub(crate) medium: Option<Written<HeatingWord>>,
@@ -41,6 +41,8 @@ pub(crate) struct AssemblyKeys {
     pub(crate) room: Option<At<RoomKeys>>,
     /// The vessel of the cold bath. Silent: twice the volume round the part.
     pub(crate) vessel: Option<At<VesselKeys>>,
+    /// Relative humidity of the room, 0 to 1, for the frost on a chilled part. Silent: 0.5.
+    pub(crate) humidity: Option<Written<Number>>,
     /// Share of the hub's rise by which the shaft lags behind when heat takes the joint apart. Silent: 0.5.
     pub(crate) temperature_lag: Option<Written<Number>>,
 }

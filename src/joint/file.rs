@@ -67,6 +67,7 @@ pub(crate) const SECTIONS: &[(&str, &[&str])] = &[
             "chilled_length",
             "room",
             "vessel",
+            "humidity",
             "temperature_lag",
         ],
     ),

@@ -28,6 +28,8 @@ words! {
     /// Cold bath.
     BathWord: Bath, "cold bath",
     "dry ice" => Bath::DryIce,
+    "dry ice in alcohol" => Bath::DryIceInAlcohol,
+    "dry ice in acetone" => Bath::DryIceInAcetone,
     "liquid nitrogen" => Bath::LiquidNitrogen,
 }
 

@@ -268,10 +268,21 @@ pub enum Method {
 /// A cold bath.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub enum Bath {
-    /// Dry ice, −78.5 °C.
+    /// Dry ice packed round the part, −78.5 °C.
     DryIce,
+    /// Dry ice in alcohol, −72 °C.
+    DryIceInAlcohol,
+    /// Dry ice in acetone, −78 °C.
+    DryIceInAcetone,
     /// Liquid nitrogen, −196 °C.
     LiquidNitrogen,
+}
+
+impl Bath {
+    /// Whether carbon dioxide comes off it.
+    pub fn is_dry_ice(self) -> bool {
+        matches!(self, Self::DryIce | Self::DryIceInAlcohol | Self::DryIceInAcetone)
+    }
 }
 
 /// How the joint is put together.

@@ -83,12 +83,17 @@ pub struct Practice {
     pub vessel: Option<Vessel>,
     /// Length of the shaft that is chilled, m; none: that of the hub.
     pub chilled_length: Option<f64>,
+    /// Relative humidity of the room at the shop temperature, 0 to 1.
+    pub humidity: f64,
     /// Share of the hub's rise by which the shaft lags behind when the joint is heated to be taken apart, 0 to 1.
     pub temperature_lag: f64,
 }
 
 /// Share by which the shaft lags behind when the file is silent.
 pub const TEMPERATURE_LAG: f64 = 0.5;
+
+/// Relative humidity of the room when the file is silent.
+pub const HUMIDITY: f64 = 0.5;
 
 impl Default for Practice {
     /// What is taken when the joint file is silent.
@@ -103,6 +108,7 @@ impl Default for Practice {
             room: None,
             vessel: None,
             chilled_length: None,
+            humidity: HUMIDITY,
             temperature_lag: TEMPERATURE_LAG,
         }
     }

@@ -85,6 +85,27 @@ impl MonotoneCubic {
     /// # Errors
     /// [`InterpolationError::Outside`] when `x` lies outside the table: nothing is extrapolated.
     pub fn value(&self, x: f64) -> Result<f64, InterpolationError> {
+        let Piece { t, values: (y0, y1), slopes: (m0, m1), .. } = self.piece(x)?;
+        let rest = 1.0 - t;
+        Ok(y0 * (1.0 + 2.0 * t) * rest * rest + m0 * t * rest * rest + y1 * t * t * (3.0 - 2.0 * t)
+            - m1 * t * t * rest)
+    }
+
+    /// Number of the piece in which `x` lies, and the integral from the first point of that piece to `x`.
+    ///
+    /// # Errors
+    /// As [`Self::value`].
+    pub(crate) fn integral_in_piece(&self, x: f64) -> Result<(usize, f64), InterpolationError> {
+        let Piece { number, width, t, values: (y0, y1), slopes: (m0, m1) } = self.piece(x)?;
+        let (square, cube) = (t * t, t * t * t);
+        let fourth = square * square;
+        let of_values = y0 * (t - cube + 0.5 * fourth) + y1 * (cube - 0.5 * fourth);
+        let of_slopes =
+            m0 * (0.5 * square - 2.0 / 3.0 * cube + 0.25 * fourth) + m1 * (0.25 * fourth - cube / 3.0);
+        Ok((number, width * (of_values + of_slopes)))
+    }
+
+    fn piece(&self, x: f64) -> Result<Piece, InterpolationError> {
         let (from, to) = self.range();
         if !(x >= from && x <= to) {
             return Err(InterpolationError::Outside { from, to, given: x });
@@ -92,12 +113,23 @@ impl MonotoneCubic {
         let after = self.points.partition_point(|point| point.0 <= x).clamp(1, self.points.len() - 1);
         let ((x0, y0), (x1, y1)) = (self.points[after - 1], self.points[after]);
         let width = x1 - x0;
-        let t = (x - x0) / width;
-        let (m0, m1) = (self.slopes[after - 1] * width, self.slopes[after] * width);
-        let rest = 1.0 - t;
-        Ok(y0 * (1.0 + 2.0 * t) * rest * rest + m0 * t * rest * rest + y1 * t * t * (3.0 - 2.0 * t)
-            - m1 * t * t * rest)
+        Ok(Piece {
+            number: after - 1,
+            width,
+            t: (x - x0) / width,
+            values: (y0, y1),
+            slopes: (self.slopes[after - 1] * width, self.slopes[after] * width),
+        })
     }
+}
+
+/// Where an argument lies: t from 0 to 1 along a piece, with its values and its slopes for each unit of t.
+struct Piece {
+    number: usize,
+    width: f64,
+    t: f64,
+    values: (f64, f64),
+    slopes: (f64, f64),
 }
 
 fn slopes(points: &[(f64, f64)]) -> Vec<f64> {

@@ -354,12 +354,15 @@ impl PlainJoint {
 
     /// Greatest press-in force (N) at a contact pressure (Pa), interference that grips (m) and friction.
     ///
+    /// The chamfer squeezes the overlap at the shop temperature: the interference with the difference of free growth.
+    ///
     /// # Errors
     /// As [`press::peak_force`].
     pub fn press_force(&self, pressure: f64, effective: f64, friction: f64) -> Result<f64, KernelError> {
+        let overlap = effective + self.shop.added_interference;
         Ok(press::peak_force(&PressInput {
-            pressure,
-            interference: effective.max(0.0),
+            pressure: if overlap > 0.0 { pressure } else { 0.0 },
+            interference: overlap.max(0.0),
             diameter: self.diameter,
             length: self.engaged_length,
             friction,

@@ -100,11 +100,12 @@ fn over(value: Bounded, middle: f64, least: f64, greatest: f64) -> Bounded {
     Bounded { best: part(value.best, middle), low: part(value.low, greatest), high: part(value.high, least) }
 }
 
-/// Interference that gives a pressure, m: along the line through the loosest and the tightest pair, or through zero.
+/// Interference that gives a pressure, m: along the line through the loosest and the tightest pair, or through the pair
+/// that only just touches at the shop temperature.
 fn interference_at(window: &Window, pressure: f64) -> f64 {
     let (p, u) = (window.pressure, window.interference);
     if p.loosest > 0.0 && p.tightest > p.loosest * (1.0 + 1e-9) {
         return u.loosest + (u.tightest - u.loosest) * (pressure - p.loosest) / (p.tightest - p.loosest);
     }
-    u.tightest * pressure / p.tightest
+    u.tightest - window.shop_interference * (1.0 - pressure / p.tightest)
 }

@@ -43,8 +43,10 @@ pub struct Window {
     pub friction: Range,
     /// Contact pressure of the pairs, Pa.
     pub pressure: Extremes<f64>,
-    /// Interference that grips of the pairs, m.
+    /// Interference that grips of the pairs, at 20 °C, m.
     pub interference: Extremes<f64>,
+    /// Interference that acts at the tightest pair at the shop temperature, m.
+    pub shop_interference: f64,
     /// Whether both parts were measured, so that the friction can be told from the pressure.
     pub measured: bool,
 }
@@ -70,6 +72,7 @@ impl Window {
             friction: joint.friction.pressing.value,
             pressure: pairs.map(|pair| pair.pressure),
             interference: pairs.map(|pair| pair.effective_interference),
+            shop_interference: pairs.tightest.shop_interference,
             measured: joint.fits.get(last).is_some_and(|fit| fit.callout.starts_with("measured ")),
         })
     }

@@ -15,7 +15,7 @@
 //! | `onset_of_yield` | `ring` that yields or breaks first, with `pressure_mpa` and `interference_um` |
 //! | `duty` | each state: what acts, Young's modulus of each ring at its temperature, and `loosest` and `tightest` in it |
 //! | `service` | `loosening` of each interface, which fits are `governing` each ring, `steps` of assembly, the `plastic` hub, `fatigue` |
-//! | `assembly` | `method`, temperatures, clearance, forces of the tightest pair, `baths` |
+//! | `assembly` | `method`, temperatures, clearance, forces of the tightest pair, `baths`, times, `cold_bath`, `press_work`, `oil_injection` |
 //! | `bearing` | of a bearing seat: loss of radial clearance, what is left cold and in each state, mounting; else null |
 //! | `verdicts` | `question` (hold, strength, assembly), `subject`, `required`, `found`, `unit` (1, N, degC), `ok`, `at` |
 //! | `defaults` | `key`, `value`, `source` of what the joint file leaves open |
@@ -29,6 +29,7 @@
 //! | `interference_um` | diametral interference as made, negative for clearance |
 //! | `smoothing_um` | loss by smoothing that was taken |
 //! | `effective_interference_um` | interference that grips |
+//! | `shop_interference_um` | the same with the difference of free growth from 20 °C to the shop temperature |
 //! | `pressure_mpa` | contact pressure; `pressure_smoothed_mpa` and `pressure_unsmoothed_mpa` with and without the loss |
 //! | `hub_bore_*`, `hub_rim_*` | stress in the outermost ring |
 //! | `shaft_surface_*`, `shaft_bore_*` | stress in the innermost ring; of a solid shaft `shaft_bore` is the centre |

@@ -1,10 +1,14 @@
 //! Soak, handling time, cold bath, press and release in plain sentences for terminal and report.
 
+mod pressed;
+
+pub use pressed::{oil, press, release};
+
 use crate::assembly::atmosphere::OxygenLevel;
+use crate::assembly::frost::FROST_DENSITY;
 use crate::assembly::handling::HandlingCourse;
 use crate::findings::cold_bath::{ColdBathFindings, RoomFindings};
-use crate::findings::press_work::{FaceFindings, OIL_OVER_CONTACT, PRESS_SPEED, PressWorkFindings};
-use crate::findings::times::SoakFindings;
+use crate::findings::times::{HandlingFindings, SoakFindings};
 use crate::findings::{Findings, bath_name};
 use crate::joint::practice::Heating;
 use crate::quantity::{Measure, display_unit, number, show};
@@ -103,9 +107,50 @@ pub fn handling(findings: &Findings) -> Option<String> {
         gone(tight.gone_in_air)
     );
     if joint.assembly.chills() {
-        text.push_str(" Frost on the shaft adds heat and takes up clearance: it is not counted.");
+        text.push_str(&frost(findings, found));
     }
     Some(text)
+}
+
+/// The bound on the frost beside the times, in which it is not counted.
+fn frost(findings: &Findings, handling: &HandlingFindings) -> String {
+    let joint = &findings.joint;
+    let (shaft, _) = joint.joined_last();
+    let deviation = |metres: f64| show(Measure::Deviation, metres, joint.display);
+    let Some(frost) = &handling.frost else {
+        return format!(" No frost settles on the {} in this room, or none that can be told.", shaft.name);
+    };
+    let humidity = number(frost.humidity * 100.0, 3);
+    let share = number(frost.share * 100.0, 2);
+    let Some(end) = &frost.at_end else {
+        let growth = frost.deposit.growth();
+        return format!(
+            " Frost is not counted in these times: at {humidity} % humidity at most {} to {} a minute settle on the {} ({} to {} kg/m³), \
+             with {share} % of the heat that the air brings.",
+            deviation(60.0 * growth.low).number,
+            deviation(60.0 * growth.high),
+            shaft.name,
+            number(FROST_DENSITY.high, 3),
+            number(FROST_DENSITY.low, 3)
+        );
+    };
+    let begin = handling.tightest.points.first().map_or(0.0, |point| point.clearance);
+    format!(
+        " Frost is not counted in these times. A seat of the {} that stands in the open at {humidity} % humidity gathers at most {} \
+         to {} of it ({} to {} kg/m³) by the end of that time, against {} of clearance to each side at the start; its heat, at \
+         most {} W or {share} % of what the air brings, warms the {} by {} and takes {}. Counted so, the tightest pair allows {}.",
+        shaft.name,
+        deviation(end.thickness.low).number,
+        deviation(end.thickness.high),
+        number(FROST_DENSITY.high, 3),
+        number(FROST_DENSITY.low, 3),
+        deviation(0.5 * begin),
+        number(frost.heat, 3),
+        shaft.name,
+        show(Measure::TemperatureDifference, end.warming, joint.display),
+        deviation(end.by_heat),
+        time_allowed(end.gone)
+    )
 }
 
 /// Soak of the hub, chill of the shaft, and why a time does not exist.
@@ -160,20 +205,38 @@ pub fn cold_bath(findings: &Findings) -> Vec<String> {
     let mass = |kilograms| brief(Measure::Mass, kilograms);
     let liquid = |cubic_metres| brief(Measure::Volume, cubic_metres);
     let job = &found.job;
-    let mut all = vec![format!(
-        "{} to bring: {} to {} ({} boils off at the part, {} at rest over {}, {} fills a bath of {} round it and stays over; \
-         with the cold gas put to use the part takes {}). At rest the bath loses {} an hour.",
-        super::typeset::capital(bath_name(found.bath)),
-        mass(found.to_bring.0),
-        mass(found.to_bring.1),
-        mass(job.part.mass),
-        mass(job.idle.mass),
-        time_needed(found.time),
-        mass(job.cover.mass),
-        liquid(found.vessel),
-        mass(found.with_cold_gas.mass),
-        liquid(found.hourly_loss.volume)
-    )];
+    let mut all = vec![match &found.liquid {
+        None => format!(
+            "{} to bring: {} to {} ({} boils off at the part, {} at rest over {}, {} fills a bath of {} round it and stays over; \
+             with the cold gas put to use the part takes {}). At rest the bath loses {} an hour.",
+            super::typeset::capital(bath_name(found.bath)),
+            mass(found.to_bring.0),
+            mass(found.to_bring.1),
+            mass(job.part.mass),
+            mass(job.idle.mass),
+            time_needed(found.time),
+            mass(job.cover.mass),
+            liquid(found.vessel),
+            mass(found.with_cold_gas.mass),
+            liquid(found.hourly_loss.volume)
+        ),
+        Some(held) => format!(
+            "Dry ice to bring: {} to {}, with {} ({}) of {} for a bath of {} round the part. {} goes off to cool the {name}, {} at the \
+             part, {} at rest over {}. Put the part in when the {name} has stopped foaming; flash point {}.",
+            mass(found.to_bring.0),
+            mass(found.to_bring.1),
+            liquid(held.volume),
+            mass(held.mass),
+            held.liquid.name,
+            liquid(found.vessel),
+            mass(held.ice.mass),
+            mass(job.part.mass),
+            mass(job.idle.mass),
+            time_needed(found.time),
+            show(Measure::Temperature, held.liquid.flash_point, system),
+            name = held.liquid.name
+        ),
+    }];
     all.push(match &found.room {
         Some(room) => air(found, room),
         None => format!(
@@ -195,18 +258,23 @@ pub fn air(found: &ColdBathFindings, air: &RoomFindings) -> String {
         OxygenLevel::Alarm => "BELOW the alarm level of 18 %",
     };
     let mut text = format!(
-        "The gas, {} m³, leaves {} of oxygen in the room of {} m³, {}; mixed with {} air changes an hour {}. If all {} m³ \
-         of a spilled bath came free at once: {}, {}.",
+        "The gas, {} m³, leaves {} of oxygen in the room of {} m³, {}; mixed with {} air changes an hour {}.",
         number(found.job.boiled.gas_volume, 3),
         share(air.oxygen),
         number(air.room.volume, 4),
         judged(air.level),
         number(air.room.air_changes, 3),
-        share(air.oxygen_ventilated),
-        number(found.job.total.gas_volume, 3),
-        share(air.oxygen_spilled),
-        judged(air.level_spilled)
+        share(air.oxygen_ventilated)
     );
+    // The ice in a liquid is reckoned to go off anyhow.
+    if found.liquid.is_none() {
+        text.push_str(&format!(
+            " If all {} m³ of a spilled bath came free at once: {}, {}.",
+            number(found.job.total.gas_volume, 3),
+            share(air.oxygen_spilled),
+            judged(air.level_spilled)
+        ));
+    }
     if let Some(carbon_dioxide) = air.carbon_dioxide {
         text.push_str(&format!(
             " Carbon dioxide would be {} %, against 0.5 % for eight hours and 1.5 % for fifteen minutes.",
@@ -238,110 +306,6 @@ pub fn coefficients(findings: &Findings) -> Vec<String> {
             )
         })
         .collect()
-}
-
-/// The press: size, work, faces, buckling.
-pub fn press(findings: &Findings) -> Vec<String> {
-    let Some(work) = &findings.assembly.press_work else { return Vec::new() };
-    let joint = &findings.joint;
-    let (shaft, hub) = joint.joined_last();
-    let system = joint.display;
-    let mut all = vec![format!(
-        "Press: {} ({} t, {} US tons) holds a quarter above the peak; work {}{}.",
-        show(Measure::Force, work.size.force, system),
-        number(work.size.metric_tons, 3),
-        number(work.size.us_tons, 3),
-        show(Measure::Work, findings.assembly.press.tightest.work, system),
-        warming(findings, work)
-    )];
-    all.push(format!(
-        "End faces under the peak: {}; {}.",
-        face_text(findings, &shaft.name, &work.shaft_face),
-        face_text(findings, &hub.name, &work.hub_face)
-    ));
-    if let Some(buckling) = work.slender() {
-        let safety = buckling.force / findings.assembly.press.tightest.peak_force;
-        let formula = if buckling.is_euler { "Euler" } else { "Johnson" };
-        all.push(format!(
-            "Free-standing the {} gives way at {}, {} times the peak (slenderness {}, {formula}).",
-            shaft.name,
-            show(Measure::Force, buckling.force, system),
-            crate::quantity::factor_found(safety),
-            number(buckling.slenderness, 3)
-        ));
-    }
-    all
-}
-
-fn warming(findings: &Findings, work: &PressWorkFindings) -> String {
-    let Some(heating) = &work.heating else { return String::new() };
-    let rise = |kelvin: f64| show(Measure::TemperatureDifference, kelvin, findings.joint.display);
-    format!(
-        ", which warms the seat by about {} at {} mm/s and the parts by {}",
-        rise(heating.interface_rise),
-        number(PRESS_SPEED * 1e3, 2),
-        rise(heating.even_rise)
-    )
-}
-
-fn face_text(findings: &Findings, name: &str, face: &FaceFindings) -> String {
-    let stress = show(Measure::Pressure, face.stress, findings.joint.display);
-    match face.safety {
-        Some(safety) => format!("{name} {stress}, safety {}", crate::quantity::factor_found(safety)),
-        None => format!("{name} {stress}"),
-    }
-}
-
-/// How the joint comes apart.
-pub fn release(findings: &Findings) -> Vec<String> {
-    let Some(work) = &findings.assembly.press_work else { return Vec::new() };
-    let joint = &findings.joint;
-    let (shaft, hub) = joint.joined_last();
-    let system = joint.display;
-    let force = |newtons| show(Measure::Force, newtons, system);
-    let push = &work.push_out;
-    let lag = number(joint.assembly.practice.temperature_lag * 100.0, 3);
-    let heat = match &work.release {
-        Ok(temperature) => format!(
-            "The tightest pair lets go when the {} is at {} and the {} {lag} % behind in warming{}.",
-            hub.name,
-            show(Measure::Temperature, *temperature, system),
-            shaft.name,
-            above_limit(findings, *temperature)
-        ),
-        Err(why) => {
-            format!("Heat alone does not free it with the {} {lag} % behind in warming: {why}.", shaft.name)
-        }
-    };
-    let safety = work.oil.1.map_or_else(String::new, |safety| {
-        format!(", which leaves the {} a safety of {}", hub.name, crate::quantity::factor_found(safety))
-    });
-    vec![
-        format!(
-            "After rest the tightest pair takes {} to {} to start and {} to {} to keep sliding; look for a press of {}.",
-            force(push.first_movement.low),
-            force(push.first_movement.high),
-            force(push.sliding.low),
-            force(push.sliding.high),
-            force(push.press)
-        ),
-        heat,
-        format!(
-            "Oil fed between the seats floats the hub at about {}, {} times the contact pressure (common practice, from memory){safety}.",
-            show(Measure::Pressure, work.oil.0, system),
-            number(OIL_OVER_CONTACT, 2)
-        ),
-    ]
-}
-
-fn above_limit(findings: &Findings, temperature: f64) -> String {
-    match &findings.assembly.hub_limit {
-        Some((limit, reason)) if temperature > *limit => format!(
-            ", above the {} that it may have ({reason})",
-            show(Measure::Temperature, *limit, findings.joint.display)
-        ),
-        _ => String::new(),
-    }
 }
 
 #[cfg(test)]

@@ -10,6 +10,7 @@ use comfy_table::{CellAlignment, Table, presets};
 use super::bearing;
 use super::seating::time_allowed;
 use crate::findings::{Findings, PairFindings, Question, Verdict, VerdictUnit};
+use crate::material::REFERENCE_TEMPERATURE;
 use crate::quantity::{Measure, UnitSystem, display_unit, show};
 use crate::quantity::{factor_found, factor_required};
 use crate::tolerance::{Character, Extremes};
@@ -240,10 +241,15 @@ pub fn extreme_rows(findings: &Findings) -> Vec<(String, Extremes<Option<String>
         measured("interference", Measure::Deviation, |pair| pair.interference),
         measured("lost by smoothing", Measure::Deviation, |pair| pair.smoothing),
         measured("interference that grips", Measure::Deviation, |pair| pair.effective_interference),
+    ];
+    if joint.assembly.shop_temperature != REFERENCE_TEMPERATURE {
+        rows.push(measured("  in the shop", Measure::Deviation, |pair| pair.shop_interference));
+    }
+    rows.extend([
         measured("contact pressure", Measure::Pressure, |pair| pair.pressure),
         measured("  with the loss", Measure::Pressure, |pair| pair.pressure_smoothed),
         measured("  without the loss", Measure::Pressure, |pair| pair.pressure_unsmoothed),
-    ];
+    ]);
     for (index, ring) in joint.rings.iter().enumerate() {
         let unit = display_unit(Measure::Pressure, system).name;
         let cell = |pair: &PairFindings, value: fn(&crate::findings::RingStress) -> f64| {

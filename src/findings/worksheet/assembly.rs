@@ -4,6 +4,7 @@ use super::super::Findings;
 use super::super::expression::{Function, num, sym};
 use super::Units;
 use super::sheet::Sheet;
+use crate::assembly::oil::{OIL_PLANNED, OIL_SOURCE};
 use crate::assembly::press::PRESS_MARGIN;
 use crate::assembly::press_practice::{METRIC_TON_FORCE, US_TON_FORCE};
 use crate::joint::Method;
@@ -14,11 +15,82 @@ const JOINING: &str = "clearance of both expanded diameters";
 
 pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     press(sheet, findings, units);
-    match findings.joint.assembly.method {
-        Method::HeatHub | Method::HeatAndChill => heat(sheet, findings, units),
+    let joint = &findings.joint;
+    let shop = joint.assembly.shop_temperature;
+    let alone = findings.assembly.heat_hub.temperature;
+    match joint.assembly.method {
+        Method::HeatHub => heat(sheet, findings, units, ("", shop, alone)),
+        Method::HeatAndChill => {
+            let bath = findings.assembly.baths.iter().find(|bath| bath.bath == joint.assembly.bath);
+            if let Some(bath) = bath {
+                heat(sheet, findings, units, ("", bath.temperature, bath.hub_temperature));
+            }
+        }
         Method::Press | Method::ChillShaft => {}
     }
+    // What is mounted warm by its maker's advice is told the temperature whatever the method.
+    if joint.bearing.is_some() && joint.assembly.method != Method::HeatHub {
+        heat(sheet, findings, units, ("B", shop, alone));
+    }
     super::cold_bath::write(sheet, findings);
+    super::frost::write(sheet, findings);
+    oil(sheet, findings, units);
+}
+
+/// Oil injection: the pressure at both extremes, the film, the stress it makes.
+fn oil(sheet: &mut Sheet, findings: &Findings, units: &Units) {
+    let Some(found) = &findings.assembly.oil else { return };
+    let yields = super::strength::hub_yields(findings);
+    let contact = |tag: &str| format!("{}_{tag}", if yields { "P" } else { "p" });
+    sheet.section("Oil injection, shop temperature, at rest");
+    sheet.input("k_o", "oil pressure over contact pressure that is planned", OIL_PLANNED, "", OIL_SOURCE);
+    let pairs = [("min", "loosest", found.loosest.as_ref()), ("max", "tightest", Some(&found.tightest))];
+    for (tag, name, pair) in pairs {
+        let Some(pair) = pair else { continue };
+        sheet.formula(
+            &format!("p_o{tag}"),
+            &format!("oil pressure that floats the hub, {name} pair; {} is the least", contact(tag)),
+            sym("k_o") * sym(&contact(tag)),
+            units.pressure,
+            "equilibrium of the film with both parts",
+            Some(pair.planned * units.per_pascal),
+        );
+    }
+    let tight = &found.tightest;
+    sheet.formula(
+        "delta_o",
+        "the seats then part on the diameter by, tightest pair",
+        num("1000") * (sym("p_omax") - sym(&contact("max"))) * super::strength::flexibility("E_h", "E_s"),
+        units.small,
+        "Lamé, with the oil pressure in place of the contact pressure",
+        Some(tight.film * units.small_per_metre),
+    );
+    for (index, name, safety, limit) in [
+        ("h", "hub", tight.hub_safety, tight.hub_limit),
+        ("s", "shaft", tight.shaft_safety, tight.shaft_limit),
+    ] {
+        let (Some(safety), Some(limit)) = (safety, limit) else { continue };
+        let known = format!("S_{index}");
+        if !sheet.has(&known) {
+            continue;
+        }
+        sheet.formula(
+            &format!("S_o{index}"),
+            &format!("safety of the {name} at that oil pressure, tightest pair"),
+            sym(&known) * sym(&contact("max")) / sym("p_omax"),
+            "",
+            "the stress is proportional to the pressure on the seat",
+            Some(safety),
+        );
+        sheet.formula(
+            &format!("p_o{index}"),
+            &format!("oil pressure at which the {name} reaches its strength"),
+            sym(&format!("S_o{index}")) * sym("p_omax"),
+            units.pressure,
+            "the stress is proportional to the pressure on the seat",
+            Some(limit * units.per_pascal),
+        );
+    }
 }
 
 fn press(sheet: &mut Sheet, findings: &Findings, units: &Units) {
@@ -46,9 +118,9 @@ fn press(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     sheet.formula(
         "c",
         "length of chamfer that meets the bore",
-        sym("W_max") / num("1000") / (num("2") * tan()),
+        super::strength::grip("W_max", "eps_s", "eps_h") / (num("2") * tan()),
         units.length,
-        EQUILIBRIUM,
+        "overlap at the shop temperature over the slope of the chamfer",
         Some(curve.lead_in * units.per_metre),
     );
     sheet.formula(
@@ -114,30 +186,34 @@ fn press_size(sheet: &mut Sheet, units: &Units, peak: f64) {
 }
 
 /// Hub temperature for the tightest pair; the mean coefficients are read from the curves.
-fn heat(sheet: &mut Sheet, findings: &Findings, units: &Units) {
+///
+/// With it come a tag for its symbols, the temperature of the shaft and the one that was found for the hub, K.
+fn heat(
+    sheet: &mut Sheet,
+    findings: &Findings,
+    units: &Units,
+    (tag, shaft_temperature, hub_temperature): (&str, f64, Option<f64>),
+) {
     let joint = &findings.joint;
     let (Some(shaft), Some(hub)) = (joint.rings.first(), joint.rings.last()) else { return };
-    let (shaft_temperature, hub_temperature) = match joint.assembly.method {
-        Method::HeatAndChill => {
-            let Some(bath) = findings.assembly.baths.iter().find(|bath| bath.bath == joint.assembly.bath)
-            else {
-                return;
-            };
-            (bath.temperature, bath.hub_temperature)
-        }
-        _ => (joint.assembly.shop_temperature, findings.assembly.heat_hub.temperature),
-    };
     let Some(hub_temperature) = hub_temperature else { return };
-    sheet.section("Hub temperature for the tightest pair");
+    let name = |symbol: &str| format!("{symbol}{tag}");
+    sheet.section(if tag.is_empty() {
+        "Hub temperature for the tightest pair".to_owned()
+    } else {
+        format!("Temperature of the {} if it were mounted warm, tightest pair", hub.name)
+    });
+    if !sheet.has("j") {
+        sheet.input(
+            "j",
+            "clearance while joining",
+            findings.assembly.clearance * units.small_per_metre,
+            units.small,
+            &joint.assembly.clearance.source,
+        );
+    }
     sheet.input(
-        "j",
-        "clearance while joining",
-        findings.assembly.clearance * units.small_per_metre,
-        units.small,
-        &joint.assembly.clearance.source,
-    );
-    sheet.input(
-        "T_sj",
+        &name("T_sj"),
         "temperature of the shaft",
         units.degrees(shaft_temperature),
         units.temperature,
@@ -145,7 +221,7 @@ fn heat(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     );
     let Ok(shaft_strain) = shaft.material.expansion.strain(shaft_temperature) else { return };
     sheet.input(
-        "eps_sj",
+        &name("eps_sj"),
         "expansion of the shaft from 20 °C",
         shaft_strain,
         "",
@@ -153,9 +229,10 @@ fn heat(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     );
     let thousand = || num("1000");
     sheet.formula(
-        "eps_hj",
+        &name("eps_hj"),
         "expansion that the hub needs",
-        ((sym("j") + sym("U_max")) / thousand() + (sym("d") + sym("U_max") / thousand()) * sym("eps_sj"))
+        ((sym("j") + sym("U_max")) / thousand()
+            + (sym("d") + sym("U_max") / thousand()) * sym(&name("eps_sj")))
             / sym("d"),
         "",
         JOINING,
@@ -163,24 +240,27 @@ fn heat(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     );
     let Some(alpha) = mean_coefficient(&hub.material, hub_temperature, units) else { return };
     let unit = if units.temperature == "degC" { "1/K" } else { "1/degF" };
+    let mean = if tag.is_empty() { "alpha".to_owned() } else { format!("alpha_{tag}") };
     sheet.input(
-        "alpha",
+        &mean,
         "mean expansion of the hub from 20 °C to that temperature, from its curve",
         alpha,
         unit,
         &hub.material.expansion.source,
     );
-    sheet.input(
-        "T_ref",
-        "reference temperature of sizes",
-        units.degrees(REFERENCE_TEMPERATURE),
-        units.temperature,
-        "ISO 1",
-    );
+    if !sheet.has("T_ref") {
+        sheet.input(
+            "T_ref",
+            "reference temperature of sizes",
+            units.degrees(REFERENCE_TEMPERATURE),
+            units.temperature,
+            "ISO 1",
+        );
+    }
     sheet.formula(
-        "T_h",
+        &name("T_h"),
         "hub temperature for joining",
-        sym("T_ref") + sym("eps_hj") / sym("alpha"),
+        sym("T_ref") + sym(&name("eps_hj")) / sym(&mean),
         units.temperature,
         JOINING,
         Some(units.degrees(hub_temperature)),

@@ -24,7 +24,7 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         seat(sheet, findings, units);
         let tag = index + 1;
         let name = |symbol: &str| format!("{symbol}{tag}");
-        let worked = plain && sheet.knows(&name("p_"));
+        let worked = plain && sheet.has(&name("p_"));
         let loosest_pressure = name(if worked { "p_" } else { "p_a" });
         if !worked {
             let pressure = loosest.least_edge + loosest.edge_change;
@@ -55,7 +55,7 @@ fn seat(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         ("d", "diameter of the seat", joint.interface_diameter(joint.last_interface()), "joint file"),
         ("l", "length that carries", joint.engaged_length(), "length less relief"),
     ] {
-        if !sheet.knows(symbol) {
+        if !sheet.has(symbol) {
             sheet.input(symbol, meaning, metres * units.per_metre, units.length, source);
         }
     }
@@ -124,7 +124,7 @@ fn input_pressure(sheet: &mut Sheet, units: &Units, symbol: &str, pair: &str, pr
 
 /// What does not change from state to state: notch, size, surface; written once.
 fn shaft(sheet: &mut Sheet, findings: &Findings, units: &Units) {
-    if sheet.knows("K_max") {
+    if sheet.has("K_max") {
         return;
     }
     let (shaft, _) = findings.joint.shaft_and_hub();
@@ -135,11 +135,11 @@ fn shaft(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let name = &shaft.name;
     sheet.input("d_f", &format!("diameter of the {name}"), outer, units.length, "joint file");
     sheet.input("b_f", &format!("bore of the {name}"), bore, units.length, "joint file");
-    if !sheet.knows("R_ms") {
+    if !sheet.has("R_ms") {
         let meaning = format!("tensile strength of the {name}");
         sheet.input("R_ms", &meaning, tensile * units.per_pascal, units.pressure, &shaft.strength.source);
     }
-    if !sheet.knows("Rz_s") {
+    if !sheet.has("Rz_s") {
         let roughness = shaft.roughness.value * units.small_per_metre;
         let meaning = format!("roughness of the {name}");
         sheet.input("Rz_s", &meaning, roughness, units.small, &shaft.roughness.source);

@@ -35,7 +35,8 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings) {
         "K",
         "joint file",
     );
-    sheet.input("T_bath", "temperature of the bath", coolant.temperature, "K", coolant.source);
+    let cold = found.liquid.map_or(coolant.source, |held| held.liquid.source);
+    sheet.input("T_bath", "temperature of the bath", coolant.temperature, "K", cold);
     sheet.input("L_v", "heat of vaporisation or sublimation", coolant.latent_heat, "J/kg", coolant.source);
     sheet.formula(
         "m_part",
@@ -52,11 +53,39 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings) {
         "kg",
         "hourly loss times the time in the bath",
     );
+    let mut gone = sym("m_part") + sym("m_rest");
+    if let Some(held) = &found.liquid {
+        let (name, source) = (held.liquid.name, held.liquid.source);
+        sheet.input(
+            "V_l",
+            &format!("{name} round the part"),
+            held.volume,
+            "m3",
+            "volume of the bath less that of the part",
+        );
+        sheet.input("rho_l", &format!("density of the {name}"), held.liquid.density, "kg/m3", source);
+        sheet.input(
+            "c_l",
+            "its mean specific heat down to the bath",
+            held.liquid.specific_heat,
+            "J/(kg.K)",
+            source,
+        );
+        sheet.formula(
+            "m_l",
+            &format!("dry ice that cools the {name}"),
+            sym("V_l") * sym("rho_l") * sym("c_l") * (sym("T_warm") - sym("T_bath")) / sym("L_v"),
+            "kg",
+            BALANCE,
+            Some(held.ice.mass),
+        );
+        gone = gone + sym("m_l");
+    }
     sheet.input("rho_g", "density of its gas at 20 °C", coolant.gas_density, "kg/m3", coolant.source);
     sheet.formula(
         "V_g",
         "gas set free",
-        (sym("m_part") + sym("m_rest")) / sym("rho_g"),
+        gone / sym("rho_g"),
         "m3",
         BALANCE,
         Some(found.job.boiled.gas_volume),

@@ -12,13 +12,29 @@ const LAME: &str = "Lamé; Timoshenko & Goodier, Theory of Elasticity, § 28";
 const ROTATION: &str = "rotating disc, Timoshenko & Goodier, Theory of Elasticity, § 32";
 
 pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
-    let joint = &findings.joint;
-    for (index, (state, duty)) in joint.duty.iter().zip(&findings.duty).enumerate() {
-        let Ok(condition) = Condition::of_state(joint, state) else { continue };
-        let moduli = duty.youngs_moduli.clone();
-        let sheet_of_state = StateSheet { findings, units, state, condition, moduli, tag: index + 1 };
-        sheet_of_state.write(sheet, &duty.loosest);
+    for (index, duty) in findings.duty.iter().enumerate() {
+        if let Some(sheet_of_state) = StateSheet::of(findings, units, index) {
+            sheet_of_state.write(sheet, &duty.loosest);
+        }
     }
+}
+
+/// The contact pressure of a state at the loosest pair, unless it is there, and at the tightest; their symbols.
+pub(super) fn both_pressures(
+    sheet: &mut Sheet,
+    findings: &Findings,
+    units: &Units,
+    index: usize,
+) -> Option<[String; 2]> {
+    let duty = findings.duty.get(index)?;
+    let state = StateSheet::of(findings, units, index)?;
+    let (loosest, tightest) = (state.name("p_"), state.name("p_t"));
+    if !sheet.has(&loosest) {
+        state.causes(sheet);
+        state.contact(sheet, &duty.loosest);
+    }
+    state.tightest(sheet, &tightest, &duty.tightest);
+    Some([loosest, tightest])
 }
 
 /// One state with the number that its symbols carry.
@@ -32,7 +48,14 @@ struct StateSheet<'a> {
     tag: usize,
 }
 
-impl StateSheet<'_> {
+impl<'a> StateSheet<'a> {
+    fn of(findings: &'a Findings, units: &'a Units, index: usize) -> Option<Self> {
+        let state = findings.joint.duty.get(index)?;
+        let condition = Condition::of_state(&findings.joint, state).ok()?;
+        let moduli = findings.duty.get(index)?.youngs_moduli.clone();
+        Some(Self { findings, units, state, condition, moduli, tag: index + 1 })
+    }
+
     fn name(&self, symbol: &str) -> String {
         format!("{symbol}{}", self.tag)
     }
@@ -43,16 +66,59 @@ impl StateSheet<'_> {
             return;
         }
         sheet.section(format!("Duty state {}: the loosest pair", self.state.name));
+        self.causes(sheet);
+        self.contact(sheet, pair);
+        self.capacity(sheet, pair);
+    }
+
+    /// What changes the interference in this state.
+    fn causes(&self, sheet: &mut Sheet) {
         self.heat(sheet);
         self.moduli(sheet);
-        let lost = self.rotation(sheet);
-        let held = grip("W_min", &self.name("eps_s"), &self.name("eps_h"));
-        let held = if lost { held - sym(&self.name("V_")) } else { held };
-        let held = match self.pressed(sheet) {
-            Some(added) => held + added,
-            None => held,
-        };
-        let held = if hub_yields(self.findings) { held - sym("G_min") } else { held };
+        self.rotation(sheet);
+        self.pressed(sheet);
+    }
+
+    /// Interference that acts, from the symbol of the one that grips and that of the growth that stays of a hub that yields.
+    fn held(&self, sheet: &Sheet, width: &str, growth: &str) -> Expression {
+        let mut held = grip(width, &self.name("eps_s"), &self.name("eps_h"));
+        let lost = self.name("V_");
+        if sheet.has(&lost) {
+            held = held - sym(&lost);
+        }
+        for added in [self.name("Y_i"), self.name("Y_o")] {
+            if sheet.has(&added) {
+                held = held + sym(&added);
+            }
+        }
+        if hub_yields(self.findings) { held - sym(growth) } else { held }
+    }
+
+    /// Contact pressure of the tightest pair.
+    fn tightest(&self, sheet: &mut Sheet, symbol: &str, pair: &StateFindings) {
+        if hub_yields(self.findings) && !sheet.has("G_max") {
+            let worn = self.findings.service.plastic.as_ref().and_then(|plastic| plastic.worn.as_ref());
+            let growth = worn.map_or(0.0, |worn| worn.tightest) * self.units.per_metre;
+            let meaning = "growth of the hub's bore that stays, tightest pair, after the hardest state";
+            sheet.input("G_max", meaning, growth, self.units.length, "elastic-plastic hub, as worked above");
+        }
+        let held = self.held(sheet, "W_max", "G_max");
+        sheet.formula(
+            symbol,
+            "contact pressure, tightest pair",
+            super::super::expression::greatest([
+                num("0"),
+                held / flexibility(&self.modulus("h"), &self.modulus("s")),
+            ]),
+            self.units.pressure,
+            "Lamé with free thermal strains and rotation",
+            Some(pair.pressure * self.units.per_pascal),
+        );
+    }
+
+    /// Contact pressure of the loosest pair, fresh and after relaxation.
+    fn contact(&self, sheet: &mut Sheet, pair: &StateFindings) {
+        let held = self.held(sheet, "W_min", "G_min");
         let share = self.state.relaxation;
         let fresh = if share < 1.0 { self.name("p_e") } else { self.name("p_") };
         sheet.formula(
@@ -78,7 +144,6 @@ impl StateSheet<'_> {
                 Some(pair.pressure * self.units.per_pascal),
             );
         }
-        self.capacity(sheet, pair);
     }
 
     /// Free strain of both parts; in a gradient the mean over the section, which bore and rim both follow.
@@ -140,12 +205,12 @@ impl StateSheet<'_> {
         if self.changed(number).is_some() { self.name(&format!("E_{index}")) } else { format!("E_{index}") }
     }
 
-    /// Interference that rotation takes; false at rest.
-    fn rotation(&self, sheet: &mut Sheet) -> bool {
+    /// Interference that rotation takes; nothing at rest.
+    fn rotation(&self, sheet: &mut Sheet) {
         let (units, joint) = (self.units, &self.findings.joint);
-        let [shaft, hub] = joint.rings.as_slice() else { return false };
+        let [shaft, hub] = joint.rings.as_slice() else { return };
         if self.state.speed == 0.0 {
-            return false;
+            return;
         }
         let speed = self.name("w_");
         sheet.input(&speed, "angular speed", self.state.speed, "rad/s", "joint file");
@@ -173,13 +238,11 @@ impl StateSheet<'_> {
         ] {
             sheet.formula(&self.name(symbol), meaning, formula, units.length, ROTATION, None);
         }
-        true
     }
 
     /// Interference that pressures in the bore and round the hub add.
-    fn pressed(&self, sheet: &mut Sheet) -> Option<Expression> {
+    fn pressed(&self, sheet: &mut Sheet) {
         let units = self.units;
-        let mut added: Option<Expression> = None;
         for (symbol, grown, what, pressure, outer, inner, modulus, numerator) in [
             ("q_i", "Y_i", "in the bore", self.state.inner_pressure, "d", "b", "s", "b"),
             ("q_o", "Y_o", "round the hub", self.state.outer_pressure, "D", "d", "h", "D"),
@@ -195,12 +258,7 @@ impl StateSheet<'_> {
                 / (sym(&self.modulus(modulus)) * (square(outer) - square(inner)));
             let meaning = format!("interference added by the pressure {what}");
             sheet.formula(&grown, &meaning, formula, units.length, LAME, None);
-            added = Some(match added {
-                Some(known) => known + sym(&grown),
-                None => sym(&grown),
-            });
         }
-        added
     }
 
     fn capacity(&self, sheet: &mut Sheet, pair: &StateFindings) {

@@ -4,10 +4,12 @@
 //! coherent but for the factor 1000 between µm and mm (thou and in), which the formulas show.
 
 mod assembly;
+mod bearing;
 mod bending;
 mod cold_bath;
 mod duty;
 mod fit;
+mod frost;
 mod rings;
 mod sheet;
 mod slices;
@@ -42,6 +44,7 @@ pub fn worked(findings: &Findings) -> (Vec<WorksheetSection>, Vec<String>) {
         duty::write(&mut sheet, findings, &units);
         bending::write(&mut sheet, findings, &units);
         assembly::write(&mut sheet, findings, &units);
+        bearing::write(&mut sheet, findings, &units);
     }
     sheet.finish()
 }

@@ -61,7 +61,7 @@ fn capacities(sheet: &mut Sheet, units: &Units, tag: &str, interfaces: &[Interfa
         let number = k + 1;
         let name = |symbol: &str| format!("{symbol}{number}{tag}");
         let pressure = name("p_");
-        if !sheet.knows(&pressure) {
+        if !sheet.has(&pressure) {
             let meaning = format!("pressure at interface {number}");
             sheet.input(&pressure, &meaning, interface.pressure * units.per_pascal, units.pressure, SYSTEM);
         }

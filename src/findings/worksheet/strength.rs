@@ -4,6 +4,7 @@ use super::super::expression::{Expression, greatest, num, sym};
 use super::super::{Findings, PairFindings, RingStress};
 use super::Units;
 use super::sheet::Sheet;
+use crate::assembly::bearing_tables::BearingRing;
 use crate::joint::Ring;
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
@@ -13,7 +14,7 @@ const LAME: &str = "Lamé; Timoshenko & Goodier, Theory of Elasticity, § 28";
 pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let joint = &findings.joint;
     let (Some(shaft), Some(hub)) = (joint.rings.first(), joint.rings.last()) else { return };
-    stiffness(sheet, shaft, hub, joint.assembly.shop_temperature, units);
+    stiffness(sheet, shaft, hub, findings, units);
     shop_strain(sheet, findings, shaft, hub, units);
     pressures(sheet, findings, units);
     capacity(sheet, findings, units);
@@ -24,11 +25,21 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     shaft_stress(sheet, findings, shaft, units);
 }
 
-fn stiffness(sheet: &mut Sheet, shaft: &Ring, hub: &Ring, shop_temperature: f64, units: &Units) {
+/// Which part is a bearing ring, whose free face is its raceway.
+fn raceway_of(findings: &Findings) -> Option<BearingRing> {
+    findings.joint.bearing.as_ref().map(|seat| seat.ring)
+}
+
+fn stiffness(sheet: &mut Sheet, shaft: &Ring, hub: &Ring, findings: &Findings, units: &Units) {
+    let (shop_temperature, raceway) = (findings.joint.assembly.shop_temperature, raceway_of(findings));
     sheet.section("Stiffness of both parts");
     let length = |metres: f64| metres * units.per_metre;
-    sheet.input("D", "outer diameter of the hub", length(hub.outer_diameter), units.length, "joint file");
-    sheet.input("b", "bore of the shaft", length(shaft.inner_diameter), units.length, "joint file");
+    let source = |ring| {
+        if raceway == Some(ring) { "effective raceway of the ring, as worked below" } else { "joint file" }
+    };
+    let (outer, bore) = (source(BearingRing::Inner), source(BearingRing::Outer));
+    sheet.input("D", "outer diameter of the hub", length(hub.outer_diameter), units.length, outer);
+    sheet.input("b", "bore of the shaft", length(shaft.inner_diameter), units.length, bore);
     for (ring, index, name) in [(hub, "h", "hub"), (shaft, "s", "shaft")] {
         let material = &ring.material;
         youngs_modulus(sheet, ring, index, name, shop_temperature, units);

@@ -2,7 +2,7 @@
 
 use crate::joint::assembly_keys::{AssemblyKeys, RoomKeys, VesselKeys};
 use crate::joint::draft::Draft;
-use crate::joint::practice::{Heating, Practice, Room, TEMPERATURE_LAG, Vessel};
+use crate::joint::practice::{HUMIDITY, Heating, Practice, Room, TEMPERATURE_LAG, Vessel};
 use crate::joint::written::{At, Written};
 use crate::joint::{Method, Ring};
 use crate::quantity::{Kind, Length, Number, Temperature, Time, written};
@@ -32,6 +32,7 @@ pub(super) fn practice(
     let room = keys.room.as_ref().map(|room| read_room(draft, room));
     let vessel = read_vessel(draft, keys.vessel.as_ref(), chills);
     let chilled_length = keys.chilled_length.as_ref().map(|given| draft.positive(given));
+    let humidity = humidity(draft, keys.humidity.as_ref(), chills);
     let temperature_lag = temperature_lag(draft, keys.temperature_lag.as_ref());
     remark_on_idle_keys(draft, keys, heats, chills);
     Some(Practice {
@@ -44,6 +45,7 @@ pub(super) fn practice(
         room: present(room)?,
         vessel: vessel?,
         chilled_length: present(chilled_length)?,
+        humidity: humidity?,
         temperature_lag: temperature_lag?,
     })
 }
@@ -178,6 +180,22 @@ fn above_zero<L: crate::joint::written::Leaf<Value = f64>>(
     None
 }
 
+fn humidity(draft: &mut Draft<'_>, given: Option<&Written<Number>>, chills: bool) -> Option<f64> {
+    let Some(given) = given else {
+        if chills {
+            let source = "an ordinary room; damp weather brings 0.8 and more (common practice, no source)";
+            draft.default("assembly.humidity", written(Kind::Number, HUMIDITY), source);
+        }
+        return Some(HUMIDITY);
+    };
+    let humidity = draft.value(given)?;
+    if (0.0..=1.0).contains(&humidity) {
+        return Some(humidity);
+    }
+    draft.refuse(given, "must be from 0 (dry) to 1 (saturated), such as 0.5 for 50 %");
+    None
+}
+
 fn temperature_lag(draft: &mut Draft<'_>, given: Option<&Written<Number>>) -> Option<f64> {
     let Some(given) = given else {
         let source = "the shaft warms half as much as the hub (common practice, no source)";
@@ -208,6 +226,7 @@ fn remark_on_idle_keys(draft: &mut Draft<'_>, keys: &AssemblyKeys, heats: bool, 
         ("room", keys.room.is_some() && !chills, "uses no cold bath"),
         ("vessel", keys.vessel.is_some() && !chills, "uses no cold bath"),
         ("chilled_length", keys.chilled_length.is_some() && !chills, "uses no cold bath"),
+        ("humidity", keys.humidity.is_some() && !chills, "uses no cold bath"),
     ];
     for (key, is_idle, why) in idle {
         if is_idle {

@@ -252,14 +252,9 @@ impl<'a> Analysis<'a> {
         let chamfer = model.chamfer_factor(friction);
         let along = friction * model.engaged_length;
         let wanted = force * compliance / (PI * model.diameter);
-        let plain = wanted / along - model.shop_thermal;
-        if plain <= 0.0 {
-            return plain;
-        }
-        // (V + θ)(μ l + B V) = wanted, the root above zero without cancellation.
-        let half = 0.5 * (along + model.shop_thermal * chamfer);
-        let rest = wanted - model.shop_thermal * along;
-        rest / (half + (half * half + chamfer * rest).sqrt())
+        // W (μ l + B W) = wanted with the overlap W = V + θ, the root above zero without cancellation.
+        let half = 0.5 * along;
+        wanted / (half + (half * half + chamfer * wanted).sqrt()) - model.shop_thermal
     }
 
     /// Friction within its support at which a grip gives a force.

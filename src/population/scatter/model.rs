@@ -189,11 +189,11 @@ impl Model {
         slope * square * square / (4.0 * (1.0 - friction * slope) * (friction + slope))
     }
 
-    /// Greatest press-in force, N, of a grip (m), a compliance (m/Pa) and a friction.
+    /// Greatest press-in force, N, of a grip (m), a compliance (m/Pa) and a friction, at the shop temperature.
     pub fn press_force(&self, grip: f64, compliance: f64, friction: f64) -> f64 {
-        let pressure = (grip + self.shop_thermal).max(0.0) / compliance;
-        let along = friction * self.engaged_length + grip.max(0.0) * self.chamfer_factor(friction);
-        PI * self.diameter * pressure * along
+        let overlap = (grip + self.shop_thermal).max(0.0);
+        let along = friction * self.engaged_length + overlap * self.chamfer_factor(friction);
+        PI * self.diameter * (overlap / compliance) * along
     }
 
     /// Least and greatest value of a quantity by the arithmetic limits; roughness and moduli are at their means.

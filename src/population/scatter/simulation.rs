@@ -373,8 +373,9 @@ impl Block {
         for (((force, grip), stiffness), friction) in
             self.scratch.iter_mut().zip(&self.stress).zip(&self.stiffness).zip(&self.pressing)
         {
-            let along = friction * model.engaged_length + open(*grip) * model.chamfer_factor(*friction);
-            *force = round * stiffness * open(grip + thermal) * along;
+            let overlap = open(grip + thermal);
+            let along = friction * model.engaged_length + overlap * model.chamfer_factor(*friction);
+            *force = round * stiffness * overlap * along;
         }
     }
 

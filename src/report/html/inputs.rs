@@ -255,6 +255,9 @@ fn practice(sheet: Sheet) -> Vec<Input> {
             }
         }
     }
+    if plan.chills() {
+        rows.push(Input::new("assembly.humidity", crate::quantity::number(practice.humidity, 4)));
+    }
     let lag = crate::quantity::number(practice.temperature_lag, 4);
     rows.push(Input::new("assembly.temperature_lag", lag));
     rows

@@ -344,6 +344,7 @@ fn dismantle(sheet: Sheet) -> Step {
         },
     )
     .with_details(seating::release(sheet.findings))
+    .with_cautions("apart")
 }
 
 /// What the other methods would take, in the words of the findings.

@@ -4,7 +4,10 @@ use serde::Serialize;
 
 use super::number::{celsius, finite, mega, microns};
 use crate::assembly::handling::HandlingCourse;
+use crate::assembly::oil::OIL_PLANNED;
 use crate::findings::cold_bath::{ColdBathFindings, RoomFindings};
+use crate::findings::frost::FrostFindings;
+use crate::findings::oil::{OilFindings, OilPair};
 use crate::findings::press_work::PressWorkFindings;
 use crate::findings::times::{HandlingFindings, SoakFindings};
 use crate::findings::{AssemblyFindings, ConstantCoefficient, bath_name};
@@ -23,6 +26,7 @@ pub(super) struct Seating {
     cold_bath: Option<ColdBath>,
     constant_coefficient: Vec<Coefficient>,
     press_work: Option<PressWork>,
+    oil_injection: Option<Oil>,
 }
 
 #[derive(Serialize)]
@@ -50,6 +54,29 @@ struct Handling {
     least_clearance_um: f64,
     tightest: Course,
     loosest: Course,
+    frost: Option<Frost>,
+}
+
+/// A bound on the frost; not counted in the courses.
+#[derive(Serialize)]
+struct Frost {
+    humidity: f64,
+    vapour_kg_m3: f64,
+    deposit_kg_m2_s: f64,
+    film_w_m2_k: f64,
+    heat_w: f64,
+    heat_share_of_air: f64,
+    at_end: Option<FrostAtEnd>,
+}
+
+#[derive(Serialize)]
+struct FrostAtEnd {
+    time_s: f64,
+    thickness_low_um: f64,
+    thickness_high_um: f64,
+    warming_k: f64,
+    taken_by_heat_um: f64,
+    gone_with_frost_s: f64,
 }
 
 #[derive(Serialize)]
@@ -74,6 +101,11 @@ struct ColdBath {
     part_mass_kg: f64,
     boiled_by_part_kg: f64,
     boiled_at_rest_kg: f64,
+    boiled_by_liquid_kg: Option<f64>,
+    liquid: Option<&'static str>,
+    liquid_l: Option<f64>,
+    liquid_kg: Option<f64>,
+    liquid_flash_point_c: Option<f64>,
     cover_kg: f64,
     with_cold_gas_kg: f64,
     to_bring_low_kg: f64,
@@ -128,6 +160,27 @@ struct PressWork {
     oil_hub_safety: Option<f64>,
 }
 
+/// Oil injection at both extremes.
+#[derive(Serialize)]
+struct Oil {
+    planned_over_contact: f64,
+    loosest: Option<OilOfPair>,
+    tightest: OilOfPair,
+}
+
+#[derive(Serialize)]
+struct OilOfPair {
+    least_mpa: Option<f64>,
+    usual_low_mpa: Option<f64>,
+    usual_high_mpa: Option<f64>,
+    planned_mpa: Option<f64>,
+    film_um: f64,
+    hub_safety: Option<f64>,
+    shaft_safety: Option<f64>,
+    hub_limit_mpa: Option<f64>,
+    shaft_limit_mpa: Option<f64>,
+}
+
 impl Seating {
     pub(super) fn of(assembly: &AssemblyFindings) -> Self {
         let times = &assembly.times;
@@ -138,7 +191,8 @@ impl Seating {
             handling: times.handling.as_ref().map(Handling::of),
             cold_bath: assembly.cold_bath.as_ref().map(ColdBath::of),
             constant_coefficient: assembly.constant_coefficient.iter().map(Coefficient::of).collect(),
-            press_work: assembly.press_work.as_ref().map(PressWork::of),
+            press_work: assembly.press_work.as_ref().map(|found| PressWork::of(found, assembly.oil.as_ref())),
+            oil_injection: assembly.oil.as_ref().map(Oil::of),
         }
     }
 }
@@ -173,6 +227,28 @@ impl Handling {
             least_clearance_um: microns(found.least),
             tightest: Course::of(&found.tightest),
             loosest: Course::of(&found.loosest),
+            frost: found.frost.as_ref().map(Frost::of),
+        }
+    }
+}
+
+impl Frost {
+    fn of(found: &FrostFindings) -> Self {
+        Self {
+            humidity: found.humidity,
+            vapour_kg_m3: found.vapour,
+            deposit_kg_m2_s: found.deposit.rate,
+            film_w_m2_k: found.deposit.film,
+            heat_w: found.heat,
+            heat_share_of_air: found.share,
+            at_end: found.at_end.as_ref().map(|end| FrostAtEnd {
+                time_s: end.time,
+                thickness_low_um: microns(end.thickness.low),
+                thickness_high_um: microns(end.thickness.high),
+                warming_k: end.warming,
+                taken_by_heat_um: microns(end.by_heat),
+                gone_with_frost_s: end.gone,
+            }),
         }
     }
 }
@@ -205,6 +281,11 @@ impl ColdBath {
             part_mass_kg: found.part_mass,
             boiled_by_part_kg: found.job.part.mass,
             boiled_at_rest_kg: found.job.idle.mass,
+            boiled_by_liquid_kg: found.liquid.map(|held| held.ice.mass),
+            liquid: found.liquid.map(|held| held.liquid.name),
+            liquid_l: found.liquid.map(|held| held.volume * 1e3),
+            liquid_kg: found.liquid.map(|held| held.mass),
+            liquid_flash_point_c: found.liquid.map(|held| celsius(held.liquid.flash_point)),
             cover_kg: found.job.cover.mass,
             with_cold_gas_kg: found.with_cold_gas.mass,
             to_bring_low_kg: found.to_bring.0,
@@ -246,7 +327,7 @@ impl Coefficient {
 }
 
 impl PressWork {
-    fn of(found: &PressWorkFindings) -> Self {
+    fn of(found: &PressWorkFindings, oil: Option<&OilFindings>) -> Self {
         let (heating, buckling, push) = (found.heating, found.buckling, &found.push_out);
         Self {
             press_n: finite(found.size.force),
@@ -266,8 +347,34 @@ impl PressWork {
             push_out_sliding_high_n: push.sliding.high,
             push_out_press_n: push.press,
             release_hub_temperature_c: found.release.as_ref().ok().copied().map(celsius),
-            oil_pressure_mpa: mega(found.oil.0),
-            oil_hub_safety: found.oil.1.and_then(finite),
+            oil_pressure_mpa: oil.and_then(|oil| mega(oil.tightest.planned)),
+            oil_hub_safety: oil.and_then(|oil| oil.tightest.hub_safety).and_then(finite),
+        }
+    }
+}
+
+impl Oil {
+    fn of(found: &OilFindings) -> Self {
+        Self {
+            planned_over_contact: OIL_PLANNED,
+            loosest: found.loosest.as_ref().map(OilOfPair::of),
+            tightest: OilOfPair::of(&found.tightest),
+        }
+    }
+}
+
+impl OilOfPair {
+    fn of(found: &OilPair) -> Self {
+        Self {
+            least_mpa: mega(found.least),
+            usual_low_mpa: mega(found.usual.low),
+            usual_high_mpa: mega(found.usual.high),
+            planned_mpa: mega(found.planned),
+            film_um: microns(found.film),
+            hub_safety: found.hub_safety.and_then(finite),
+            shaft_safety: found.shaft_safety.and_then(finite),
+            hub_limit_mpa: found.hub_limit.and_then(mega),
+            shaft_limit_mpa: found.shaft_limit.and_then(mega),
         }
     }
 }
