@@ -51,8 +51,9 @@ fn a_pair_that_only_the_cold_closes_is_pressed_with_the_overlap_it_has_there() {
             * (shaft.material.expansion.strain(temperature).unwrap()
                 - hub.material.expansion.strain(temperature).unwrap());
         assert!(growth > 0.0);
-        let flexibility = (5.0 / 3.0 + hub.material.poisson.value) / hub.material.youngs_modulus.value
-            + (1.0 - shaft.material.poisson.value) / shaft.material.youngs_modulus.value;
+        let modulus = |ring: &hubgrip::joint::Ring| ring.material.youngs_modulus_at(temperature).unwrap();
+        let flexibility = (5.0 / 3.0 + hub.material.poisson.value) / modulus(hub)
+            + (1.0 - shaft.material.poisson.value) / modulus(shaft);
         let check = |pair: &PairFindings, friction: f64, force: f64| {
             let overlap = (pair.effective_interference + growth).max(0.0);
             assert_relative_eq!(pair.shop_interference.max(0.0), overlap, epsilon = 1e-18);
