@@ -14,7 +14,7 @@ use hubgrip::population::distribution::{Distribution, normal};
 use hubgrip::population::scatter::analysis::Analysis;
 use hubgrip::population::scatter::model::{Arithmetic, Limit, Model, Population, State};
 use hubgrip::population::scatter::simulation::Simulation;
-use hubgrip::population::scatter::understood::understood;
+use hubgrip::population::scatter::understood::{Understood, understood};
 use hubgrip::population::scatter::{Quantity, Settings, scatter};
 use rand::{Rng, SeedableRng};
 use rand_xoshiro::Xoshiro256PlusPlus;
@@ -338,6 +338,37 @@ fn a_population_without_scatter_is_the_check_of_one_pair() {
             assert_eq!(analysis.slip(0, safety * 1.000_001), 1.0);
         }
     }
+}
+
+/// What relaxes holds as the check says: both engines turn over at its safety, and the stresses stay.
+#[test]
+fn a_relaxed_state_slips_where_the_check_says() {
+    let population =
+        "population:\n  hole: 60.030 mm\n  shaft: 60.053 mm\n  friction: 0.1\n  pressing_friction: 0.14\n";
+    let of = |text: &str| {
+        let text = format!("{text}{population}");
+        let joint = read::read(&text, Path::new("joint.yaml"), &[], &Library::built_in()).unwrap();
+        let understood = understood(&joint, &mut |_, _| unreachable!("no list is named")).unwrap();
+        (understood, compute(joint).unwrap())
+    };
+    let (fresh, _) = of(JOINT);
+    let (relaxed, findings) = of(&JOINT.replace("torque:", "relaxation: 0.4, torque:"));
+    let safety = findings.duty[0].loosest.slip_safety.unwrap();
+    let analysis = Analysis::of(&relaxed.model).unwrap();
+    assert_eq!(analysis.slip(0, safety * 0.999_999), 0.0);
+    assert_eq!(analysis.slip(0, safety * 1.000_001), 1.0);
+    for (required, share) in [(safety * 0.999_999, 0), (safety * 1.000_001, 1)] {
+        let settings = Settings { samples: 1000, seed: 1, slip_safety: required };
+        let counted = scatter(relaxed.model.clone(), settings).unwrap().slips[0].counted_below_required;
+        assert_eq!(counted.count, share * 1000);
+    }
+    assert_eq!(fresh.model.rings, relaxed.model.rings);
+    let said = |understood: &Understood, words: &str| {
+        understood.assumed.iter().any(|sentence| sentence.contains(words))
+    };
+    assert!(said(&relaxed, "40 % of the pressure") && !said(&fresh, "relaxation"));
+    let (turning, _) = of(&JOINT.replace("torque:", "speed: 900 rpm, torque:"));
+    assert!(said(&turning, "not its speed") && !said(&fresh, "not its speed"));
 }
 
 #[test]

@@ -64,7 +64,7 @@ pub fn required_band(joint: &Joint) -> Result<(Option<f64>, Option<f64>), Kernel
         .states
         .iter()
         .filter_map(|state| {
-            let gain = state.slip_safety_per_pressure?;
+            let gain = state.relaxation * state.slip_safety_per_pressure?;
             Some(compliance * joint.require.slip_safety / gain - state.thermal_interference + holds)
         })
         .reduce(f64::max);

@@ -214,12 +214,12 @@ impl<'a> Judge<'a> {
         match subject {
             Subject::Slip(number) => {
                 let state = plain.states.get(number)?;
-                state.slip_safety_per_pressure.map(|gain| gain * plain.pressure(state, loose))
+                state.slip_safety_per_pressure.map(|gain| gain * plain.pressure_left(state, loose))
             }
             Subject::GapingEdge(number) => {
                 let state = plain.states.get(number)?;
                 let change = state.edge_change?;
-                Some(if change > 0.0 { plain.pressure(state, loose) / change } else { 0.0 })
+                Some(if change > 0.0 { plain.pressure_left(state, loose) / change } else { 0.0 })
             }
             Subject::ShaftStrength => strength(Part::Shaft),
             Subject::HubStrength => strength(Part::Hub),

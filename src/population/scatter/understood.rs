@@ -7,7 +7,7 @@ use super::model::{Arithmetic, Limit, Model, Population, State, Warm};
 use crate::diagnostic::Diagnostic;
 use crate::findings::failure;
 use crate::joint::population::{Bounds, Variation};
-use crate::joint::{Joint, SmoothingAt};
+use crate::joint::{DutyState, Joint, SmoothingAt};
 use crate::material::{Kind as MaterialKind, Range};
 use crate::population::distribution::{Distribution, DistributionError, Shape};
 use crate::population::kernel::{KernelError, PlainJoint};
@@ -110,7 +110,9 @@ pub fn understood(joint: &Joint, read: &mut ReadList<'_>) -> Result<Understood, 
         hub_temperature: taking.offset("hub_temperature", plan.hub_temperature.as_ref())?,
         shaft_temperature: taking.offset("shaft_temperature", plan.shaft_temperature.as_ref())?,
     };
-    let assumed = taking.assumed;
+    let mut assumed = taking.assumed;
+    assumed.extend(joint.duty.iter().filter_map(relaxed));
+    assumed.extend(joint.duty.iter().filter_map(left_out));
     let roughness = inner.roughness.value + outer.roughness.value;
     let factor = joint.smoothing.factor.unwrap_or(if roughness > 0.0 {
         plain.smoothing_loss / roughness
@@ -119,7 +121,7 @@ pub fn understood(joint: &Joint, read: &mut ReadList<'_>) -> Result<Understood, 
     });
     let states = joint.duty.iter().zip(&plain.states).map(|(state, condition)| State {
         name: state.name.clone(),
-        force: condition.axial_force.hypot(2.0 * condition.torque / joint.diameter),
+        force: condition.axial_force.hypot(2.0 * condition.torque / joint.diameter) / condition.relaxation,
         thermal: condition.thermal_interference,
         warm: match state.temperatures.as_slice() {
             [shaft, hub] => Some(Warm {
@@ -167,6 +169,36 @@ pub fn understood(joint: &Joint, read: &mut ReadList<'_>) -> Result<Understood, 
     };
     model.check()?;
     Ok(Understood { model, assumed })
+}
+
+/// That of a state's pressure only a share counts for holding.
+fn relaxed(state: &DutyState) -> Option<String> {
+    (state.relaxation < 1.0).then(|| {
+        format!(
+            "In state {} holding counts {:.0} % of the pressure of every pair, the share that relaxation leaves (joint file); the stresses stay those of the first day.",
+            state.name,
+            100.0 * state.relaxation
+        )
+    })
+}
+
+/// What of a state the model has no place for.
+fn left_out(state: &DutyState) -> Option<String> {
+    let parts = [
+        (state.speed != 0.0, "speed"),
+        (state.inner_pressure != 0.0, "pressure inside"),
+        (state.outer_pressure != 0.0, "pressure outside"),
+        (!state.temperature_rises.is_empty(), "radial gradient of temperature"),
+        (state.bending_moment != 0.0 || state.radial_force != 0.0, "bending"),
+    ];
+    let named: Vec<&str> = parts.into_iter().filter_map(|(there, name)| there.then_some(name)).collect();
+    (!named.is_empty()).then(|| {
+        format!(
+            "Of state {} only loads along and round the shaft and temperatures count here, not its {}: `hubgrip check` has them at the extreme pairs.",
+            state.name,
+            named.join(", ")
+        )
+    })
 }
 
 /// Limits of a member of the joint, m from the nominal diameter.
