@@ -211,6 +211,41 @@ fn measured_parts_come_a_row_each() {
     assert_eq!(summary.bad, 1);
 }
 
+/// A time from oven to seated that is required is followed for each row, and the share that relaxation leaves counts.
+#[test]
+fn handling_time_and_relaxation_are_judged_as_the_check_does() {
+    let base = "joint_file: 1\ndiameter: 60 mm\nlength: 70 mm\nfriction: 0.12\nfit: H7/s6\n\
+        shaft: {material: C45+N}\nhub: {material: C45+N, outer_diameter: 120 mm}\n\
+        duty: [{state: rated, torque: 200 N.m}]\nassembly: {method: heat hub}\n";
+    let table = "assembly.handling_time (s),duty.0.relaxation,require.hub_temperature (degC)\n\
+        ,,\n1,,\n3600,,\n3600,,100\n,0.9,\n,0.1,\n1,0.1,\n";
+    let (output, _) = worked(table.as_bytes(), &settings(base));
+    let found = rows(&output);
+    let told = |column: &str| found.iter().map(|row| row[column].clone()).collect::<Vec<_>>();
+    let (yes, no) = ("met", "not met");
+    assert_eq!(told("assembly"), [yes, yes, no, no, yes, yes, yes]);
+    assert_eq!(told("hold"), [yes, yes, yes, yes, yes, no, no]);
+    let cells = table.lines().skip(1).map(|line| line.split(',').collect::<Vec<_>>());
+    for (row, cells) in found.iter().zip(cells) {
+        let keys = [
+            ("assembly.handling_time", " s"),
+            ("duty.0.relaxation", ""),
+            ("require.hub_temperature", " degC"),
+        ];
+        let set: Vec<(String, String)> = keys
+            .iter()
+            .zip(cells)
+            .filter(|(_, cell)| !cell.is_empty())
+            .map(|((key, unit), cell)| ((*key).to_owned(), format!("{cell}{unit}")))
+            .collect();
+        let findings =
+            compute(read::read(base, Path::new("b.yaml"), &set, &Library::built_in()).unwrap()).unwrap();
+        let ok = findings.verdicts.iter().all(|verdict| verdict.ok);
+        assert_eq!(row["ok"], ok.to_string(), "{set:?}");
+        same(&row["slip_safety"], findings.duty[0].loosest.slip_safety, 1.0);
+    }
+}
+
 /// What the kernel does not cover is worked out in full.
 #[test]
 fn joints_of_every_kind_go_through() {
