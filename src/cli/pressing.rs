@@ -16,6 +16,7 @@ use rayon::prelude::*;
 use super::exit::{Ending, Failure};
 use super::input::{self, WhatIf};
 use super::output::Output;
+use super::scatter::two_to_standard_output;
 
 const EXAMPLE: &str = "\
 Example:
@@ -75,6 +76,9 @@ pub struct Arguments {
 
 pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> Result<Ending, Failure> {
     let settings = settings(arguments)?;
+    if arguments.json && arguments.output.as_deref().is_some_and(is_dash) {
+        return Err(two_to_standard_output());
+    }
     let standard_input = arguments.records.iter().filter(|path| is_dash(path)).count();
     if standard_input + usize::from(is_dash(&arguments.file)) > 1 {
         return Err(Diagnostic::new("standard input can be read only once")
@@ -98,7 +102,7 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     }
     let told = Told { findings: &findings, window: &window, settings: &settings, entries: &entries };
     match &arguments.output {
-        Some(path) if arguments.json && path != Path::new("-") => {
+        Some(path) if arguments.json => {
             output.file(path, &report::html(&told))?;
             output.result(&report::json(&told))?;
         }

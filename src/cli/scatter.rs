@@ -5,14 +5,15 @@ use std::path::{Path, PathBuf};
 
 use clap::Args;
 use hubgrip::diagnostic::Diagnostic;
+use hubgrip::joint::Joint;
 use hubgrip::population::distribution::measured::{self, Part};
 use hubgrip::population::scatter::understood::{self, PopulationError, Understood};
-use hubgrip::population::scatter::{Settings, scatter};
+use hubgrip::population::scatter::{ScatterError, Settings, scatter};
 use hubgrip::quantity::Kind;
 use hubgrip::report::scatter as report;
 
 use super::exit::{Ending, Failure};
-use super::input::{self, WhatIf};
+use super::input::{self, Source, WhatIf};
 use super::output::Output;
 
 const EXAMPLE: &str = "\
@@ -55,16 +56,25 @@ pub struct Arguments {
 }
 
 pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> Result<Ending, Failure> {
+    let both = arguments.json && arguments.output.as_deref() == Some(Path::new("-"));
+    if both {
+        return Err(two_to_standard_output());
+    }
     let library = input::library(materials, output)?;
-    let joint = input::joint(&arguments.file, &arguments.what_if.set, &library)?;
-    let Understood { model, assumed } = understood_of(&joint, &arguments.file)?;
+    let source = Source::of(&arguments.file, &arguments.what_if)?;
+    let joint = source.joint(&library)?;
+    let Understood { model, assumed } = understood_of(&joint, &source)?;
     let settings =
         Settings { samples: arguments.samples, seed: arguments.seed, slip_safety: joint.require.slip_safety };
-    let scatter = scatter(model, settings)
-        .map_err(|error| Diagnostic::new(error.to_string()).in_file(input::shown(&arguments.file)))?;
+    let scatter = scatter(model, settings).map_err(|error| match error {
+        ScatterError::Samples { .. } => {
+            Diagnostic::new(format!("--samples {}: {error}", arguments.samples)).into()
+        }
+        error => source.refused(error.to_string(), None, None),
+    })?;
     let told = report::Told { joint: &joint, scatter: &scatter, assumed: &assumed };
     match &arguments.output {
-        Some(path) if arguments.json && path != Path::new("-") => {
+        Some(path) if arguments.json => {
             output.file(path, &report::html(&told))?;
             output.result(&report::json(&told))?;
         }
@@ -75,16 +85,37 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     Ok(if report::agrees(&scatter) { Ending::Met } else { Ending::NotMet })
 }
 
+/// The page and the JSON cannot share standard output.
+pub fn two_to_standard_output() -> Failure {
+    Diagnostic::new("the page (-o -) and the JSON (--json) would both go to standard output")
+        .with_help("give the page a file, such as -o OUT.html, or leave one of the two out")
+        .into()
+}
+
+/// What to do with a joint that the kernel does not take.
+const INSTEAD: &str = "populations are worked out for two elastic rings of one section; judge the extreme pairs with `hubgrip check`, \
+                       or a table of pairs with `hubgrip batch`";
+
 /// The model of a joint; lists of measurements lie beside the joint file.
-pub fn understood_of(joint: &hubgrip::joint::Joint, file: &Path) -> Result<Understood, Failure> {
-    let folder = file.parent().unwrap_or(Path::new("")).to_path_buf();
+pub fn understood_of(joint: &Joint, source: &Source<'_>) -> Result<Understood, Failure> {
     let mut read = |name: &str, kind: Kind| {
-        let parts = parts(&folder.join(name), kind)?;
+        let parts = parts(&source.beside(name), kind)?;
         Ok(parts.into_iter().map(|part| part.value).collect())
     };
-    understood::understood(joint, &mut read).map_err(|error| match error {
-        PopulationError::Measured(fault) => fault.into(),
-        other => Diagnostic::new(other.to_string()).in_file(input::shown(file)).into(),
+    understood::understood(joint, &mut read).map_err(|error| {
+        let key = match &error {
+            PopulationError::Measured(fault) => return fault.clone().into(),
+            PopulationError::Kernel(error) => return source.refused_by_kernel(error, joint, INSTEAD),
+            PopulationError::Distribution { key, .. } | PopulationError::TooManyValues { key, .. } => {
+                Some(*key)
+            }
+            PopulationError::Scatter(
+                ScatterError::ReachesZero { what } | ScatterError::FrictionAboveOne { what },
+            ) => Some(*what),
+            PopulationError::Scatter(_) => None,
+        };
+        let key = key.map(|key| format!("population.{key}"));
+        source.refused(error.to_string(), key.as_deref(), None)
     })
 }
 

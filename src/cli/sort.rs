@@ -18,7 +18,7 @@ use hubgrip::report::sort as report;
 use hubgrip::tolerance::Member;
 
 use super::exit::{Ending, Failure};
-use super::input::{self, WhatIf};
+use super::input::{self, Source, WhatIf};
 use super::output::Output;
 use super::scatter::{parts, understood_of};
 
@@ -73,13 +73,13 @@ pub enum By {
 
 pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> Result<Ending, Failure> {
     let library = input::library(materials, output)?;
-    let joint = input::joint(&arguments.file, &arguments.what_if.set, &library)?;
+    let source = Source::of(&arguments.file, &arguments.what_if)?;
+    let joint = source.joint(&library)?;
     let shown = input::shown(&arguments.file);
     let refused = |message: String| Failure::from(Diagnostic::new(message).in_file(&shown));
-    let folder = arguments.file.parent().unwrap_or(Path::new("")).to_path_buf();
-    let holes = list(arguments.holes.as_deref(), joint.population.hole.as_ref(), &folder)?;
-    let shafts = list(arguments.shafts.as_deref(), joint.population.shaft.as_ref(), &folder)?;
-    let understood = understood_of(&joint, &arguments.file)?;
+    let holes = list(arguments.holes.as_deref(), joint.population.hole.as_ref(), &source)?;
+    let shafts = list(arguments.shafts.as_deref(), joint.population.shaft.as_ref(), &source)?;
+    let understood = understood_of(&joint, &source)?;
     let population = &understood.model.population;
     let of = |parts: &Option<Vec<Part>>, plan: &Distribution| match parts {
         Some(parts) => {
@@ -158,10 +158,14 @@ fn ending(within: bool) -> Ending {
 }
 
 /// The measured parts named on the command line, else those of the joint file.
-fn list(given: Option<&Path>, plan: Option<&Variation>, folder: &Path) -> Result<Option<Vec<Part>>, Failure> {
+fn list(
+    given: Option<&Path>,
+    plan: Option<&Variation>,
+    source: &Source<'_>,
+) -> Result<Option<Vec<Part>>, Failure> {
     let path = match (given, plan) {
         (Some(path), _) => path.to_path_buf(),
-        (None, Some(Variation::Measured(name))) => folder.join(name),
+        (None, Some(Variation::Measured(name))) => source.beside(name),
         _ => return Ok(None),
     };
     Ok(Some(parts(&path, Kind::Length)?))
