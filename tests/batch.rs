@@ -495,6 +495,38 @@ fn a_killed_run_leaves_no_final_file() {
     assert_eq!(fs::read_to_string(folder.path().join("old.csv")).unwrap(), "old\n");
 }
 
+/// Nothing that is read is written over, and table and base in each other's place are told apart.
+#[test]
+fn mixed_up_files_are_told() {
+    let folder = tempfile::tempdir().unwrap();
+    let table = "diameter (mm),fit\n60,H7/s6\n";
+    fs::write(folder.path().join("table.csv"), table).unwrap();
+    fs::write(folder.path().join("base.yaml"), BASE).unwrap();
+    fs::write(folder.path().join("empty.csv"), "").unwrap();
+    fs::write(folder.path().join("wide.csv"), b"\xff\xfed\0i\0a\0").unwrap();
+    for (words, told) in [
+        (
+            vec!["table.csv", "--base", "base.yaml", "-o", "table.csv"],
+            "table.csv: error: --output names an input",
+        ),
+        (vec!["table.csv", "--base", "base.yaml", "-o", "./base.yaml"], "--output names an input"),
+        (vec!["table.csv", "--base", "base.yaml", "--errors", "table.csv"], "--errors names an input"),
+        (vec!["base.yaml", "--base", "base.yaml"], "hubgrip batch TABLE.csv --base JOINT.yaml"),
+        (vec!["-", "--base", "-"], "standard input can be read only once"),
+        (vec!["empty.csv", "--base", "base.yaml"], "empty.csv: error: the table is empty"),
+        (vec!["wide.csv", "--base", "base.yaml"], "not text in UTF-8"),
+        (vec!["none.csv", "--base", "base.yaml"], "name a table"),
+        (vec!["table.csv", "--base", "base.yaml", "-o", "no/out.csv"], "the folder no does not exist"),
+    ] {
+        let output = common::hubgrip_in(folder.path(), &[&["batch"], words.as_slice()].concat());
+        let errors = common::stderr(&output);
+        assert_eq!((output.status.code(), output.stdout.len()), (Some(2), 0), "{words:?}: {errors}");
+        assert!(errors.contains(told) && !errors.contains(".hubgrip-"), "{words:?}: {errors}");
+    }
+    assert_eq!(fs::read_to_string(folder.path().join("table.csv")).unwrap(), table);
+    assert_eq!(fs::read_to_string(folder.path().join("base.yaml")).unwrap(), BASE);
+}
+
 #[test]
 fn bad_input_of_the_command_is_told() {
     let folder = tempfile::tempdir().unwrap();

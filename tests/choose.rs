@@ -608,6 +608,10 @@ fn the_command_says_what_stands_in_the_way() {
 fn bad_input_is_told_with_a_way_out() {
     let (code, _, errors) = chosen(&HUB.replace("torque: 200 N.m", "torque: 0 N.m"), &[]);
     assert!(code == 2 && errors.contains("give a load"), "{errors}");
+    let (code, _, errors) = chosen(HUB, &["--finest", "-1"]);
+    assert!(code == 2 && errors.contains("grades are"), "{errors}");
+    let (code, _, errors) = chosen(HUB, &["-o", "joint.yaml"]);
+    assert!(code == 2 && errors.contains("would be overwritten"), "{errors}");
     let (code, _, errors) = chosen(HUB, &["--finest", "19"]);
     assert!(code == 2 && errors.contains("grades are"), "{errors}");
     let (code, _, errors) = chosen(HUB, &["--standard", "ansi", "--finest", "6"]);

@@ -427,3 +427,47 @@ fn a_list_that_is_not_there_is_told() {
     assert_eq!(output.status.code(), Some(2));
     assert!(stderr(&output).contains("nowhere.csv"), "{}", stderr(&output));
 }
+
+#[test]
+fn slips_of_the_command_line_are_told() {
+    let here = tempfile::tempdir().unwrap();
+    std::fs::write(here.path().join("joint.yaml"), JOINT).unwrap();
+    std::fs::write(here.path().join("holes.csv"), "diameter_mm\n6.001\n").unwrap();
+    let before = std::fs::read(here.path().join("joint.yaml")).unwrap();
+    for (arguments, message) in [
+        (vec!["--samples", "-5"], "below zero"),
+        (vec!["--samples", "many"], "write a whole number"),
+        (vec!["--samples", "0"], "1 to 10000000000"),
+        (vec!["--seed", "1.5"], "write a whole number"),
+        (vec!["-o", "joint.yaml"], "would be overwritten"),
+        (vec!["-o", "no/page.html"], "the folder no does not exist"),
+        (vec!["--set", "population.hole={measured: holes.csv}"], "5 % off the diameter of the joint, 60 mm"),
+        (vec!["--set", "population.hole={measured: .}"], "this is a folder"),
+        (vec!["--set", "require.allow=plastic"], "--set require.allow: "),
+    ] {
+        let all: Vec<&str> = ["scatter", "joint.yaml"].into_iter().chain(arguments).collect();
+        let output = hubgrip_in(here.path(), &all);
+        assert_eq!((output.status.code(), stdout(&output).as_str()), (Some(2), ""), "{all:?}");
+        assert!(stderr(&output).contains(message), "{all:?}: {}", stderr(&output));
+    }
+    assert_eq!(std::fs::read(here.path().join("joint.yaml")).unwrap(), before);
+    let run = |more: &[&str]| {
+        let output = hubgrip_in(here.path(), &[&["scatter", "joint.yaml", "--samples"], more].concat());
+        assert_eq!(output.status.code(), Some(0), "{}", stderr(&output));
+        stdout(&output)
+    };
+    assert_eq!(run(&["1e4"]), run(&["10_000"]));
+    let text = run(&["1e4", "--set", "population.hole={cp: 1.33, cpk: -0.2}"]);
+    assert!(text.split_whitespace().collect::<Vec<_>>().join(" ").contains("cpk is below zero"), "{text}");
+}
+
+/// What the model cannot take of a population is told where it stands.
+#[test]
+fn a_population_that_cannot_be_worked_out_is_refused_at_its_key() {
+    let here = tempfile::tempdir().unwrap();
+    let text = JOINT.to_owned() + "population:\n  friction: {mean: 0.1, sd: 0.02, truncated: -0.01 to 0.2}\n";
+    std::fs::write(here.path().join("joint.yaml"), text).unwrap();
+    let output = hubgrip_in(here.path(), &["scatter", "joint.yaml"]);
+    let error = stderr(&output);
+    assert!(output.status.code() == Some(2) && error.starts_with("joint.yaml:11:3: "), "{error}");
+}

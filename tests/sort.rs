@@ -128,3 +128,78 @@ fn what_cannot_be_sorted_is_told() {
         assert!(stderr(&output).contains(message), "{all:?}: {}", stderr(&output));
     }
 }
+
+/// Lists as spreadsheets of other countries write them give the same groups; what cannot be a list of this joint is told
+/// with its line.
+#[test]
+fn lists_are_read_as_they_come_or_refused() {
+    let here = tempfile::tempdir().unwrap();
+    let file = example("measured-lots.yaml");
+    let run = |list: &str, more: &[&str]| {
+        std::fs::write(here.path().join("holes.csv"), list).unwrap();
+        let shafts = example("shafts.csv");
+        let words = ["sort", &file, "--groups", "2", "--band", "52 to 66 um", "--holes", "holes.csv"];
+        hubgrip_in(here.path(), &[&words, &["--shafts", &shafts][..], more].concat())
+    };
+    let plain = run("part,diameter_mm\nA,40.0096\nB,40.0102\n", &["--json"]);
+    assert!(plain.status.code().unwrap() < 2, "{}", stderr(&plain));
+    for list in [
+        "\u{feff}part,diameter_mm\r\nA,40.0096\r\nB,40.0102\r\n",
+        "\u{feff}part;diameter_mm\r\nA;40,0096\r\nB;40,0102\r\n",
+        "\"part\"\t\"diameter (mm)\"\nA\t\"40.0096\"\nB\t40,0102\n",
+        "part,diameter\nA,40.0096 mm\n\nB,40010.2 um\n",
+    ] {
+        assert_eq!(stdout(&run(list, &["--json"])), stdout(&plain), "{list}");
+    }
+    for (list, words) in [
+        ("", "no column of sizes"),
+        ("part,diameter_mm\n", "no part under the first row"),
+        ("40.01\n40.02\n", "no column of sizes"),
+        ("diameter_mm\n40,01\n", "line 2: the row has 2 cells"),
+        ("diameter_mm\n40.01\nabc\n", "line 3: abc mm is not a length"),
+        ("diameter\n40.01\n", "has no unit"),
+        ("part,diameter_mm\nA,0.0401\n", "part A: 40.1 um is more than 5 % off"),
+        ("diameter (um)\n9.6\n", "whole sizes, not deviations"),
+    ] {
+        let output = run(list, &[]);
+        assert_eq!((output.status.code(), stdout(&output).as_str()), (Some(2), ""), "{list:?}");
+        assert!(
+            stderr(&output).contains(words) && stderr(&output).contains("holes.csv"),
+            "{}",
+            stderr(&output)
+        );
+    }
+    std::fs::create_dir(here.path().join("folder")).unwrap();
+    let words = ["sort", &file, "--groups", "2", "--band", "52 to 66 um", "--holes", "folder"];
+    let output = hubgrip_in(here.path(), &words);
+    assert!(
+        output.status.code() == Some(2) && stderr(&output).contains("this is a folder"),
+        "{}",
+        stderr(&output)
+    );
+}
+
+#[test]
+fn slips_of_the_command_line_are_told() {
+    let here = tempfile::tempdir().unwrap();
+    let file = example("measured-lots.yaml");
+    std::fs::write(here.path().join("holes.csv"), "part,diameter_mm\nA,40.0096\n").unwrap();
+    for (arguments, message) in [
+        (vec!["--groups", "-1"], "below zero"),
+        (vec!["--groups", "two"], "write a whole number"),
+        (vec!["--groups", "1e9"], "1 to 100"),
+        (vec!["--groups", "2", "--pick-list", "-", "--json"], "both go to standard output"),
+        (vec!["--groups", "2", "--holes", "-", "--shafts", "-"], "standard input can be read only once"),
+        (vec!["--groups", "2", "--holes", "holes.csv", "--pick-list", "holes.csv"], "would be overwritten"),
+        (vec!["--groups", "2", "--pick-list", "no/pairs.csv"], "the folder no does not exist"),
+    ] {
+        let all: Vec<&str> = ["sort", &file, "--band", "52 to 66 um"].into_iter().chain(arguments).collect();
+        let output = hubgrip_in(here.path(), &all);
+        assert_eq!((output.status.code(), stdout(&output).as_str()), (Some(2), ""), "{all:?}");
+        assert!(stderr(&output).contains(message), "{all:?}: {}", stderr(&output));
+        assert!(!stderr(&output).contains(".hubgrip-"), "{}", stderr(&output));
+    }
+    // A band below zero is one of clearances.
+    let output = hubgrip_in(here.path(), &["sort", &file, "--groups", "2", "--band", "-10 to 60 um"]);
+    assert!(output.status.code().unwrap() < 2, "{}", stderr(&output));
+}

@@ -16,7 +16,7 @@ use indicatif::{ProgressBar, ProgressStyle};
 
 use super::exit::{Ending, Failure};
 use super::input::{self, Source, WhatIf};
-use super::output::Output;
+use super::output::{Output, refuse_overwriting};
 
 const EXAMPLE: &str = "\
 Example:
@@ -45,7 +45,7 @@ pub struct Arguments {
     #[arg(long, value_enum)]
     pub standard: Option<StandardName>,
     /// Finest grade of ISO 286 to choose from, such as 6; without it all, down to IT01
-    #[arg(long, value_name = "GRADE", value_parser = grade)]
+    #[arg(long, value_name = "GRADE", value_parser = grade, allow_negative_numbers = true)]
     pub finest: Option<Grade>,
     /// List every fit, mixed ones too
     #[arg(long)]
@@ -69,6 +69,7 @@ fn grade(text: &str) -> Result<Grade, String> {
 }
 
 pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> Result<Ending, Failure> {
+    refuse_overwriting("--output", arguments.output.as_deref(), [arguments.file.as_path()])?;
     let library = input::library(materials, output)?;
     let source = Source::of(&arguments.file, &arguments.what_if)?;
     let joint = source.joint_without_fit(&library)?;

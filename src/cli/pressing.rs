@@ -15,7 +15,8 @@ use rayon::prelude::*;
 
 use super::exit::{Ending, Failure};
 use super::input::{self, WhatIf};
-use super::output::Output;
+use super::number;
+use super::output::{Output, refuse_overwriting};
 use super::scatter::two_to_standard_output;
 
 const EXAMPLE: &str = "\
@@ -56,19 +57,19 @@ pub struct Arguments {
     #[arg(long, value_name = "LENGTH", default_value = "0 mm", allow_hyphen_values = true)]
     pub touch_at: String,
     /// How far the first touch may lie from there
-    #[arg(long, value_name = "LENGTH", default_value = "1 mm")]
+    #[arg(long, value_name = "LENGTH", default_value = "1 mm", allow_hyphen_values = true)]
     pub touch_within: String,
     /// Uncertainty of the force, per cent of the reading
-    #[arg(long, value_name = "PERCENT", default_value_t = 1.0)]
+    #[arg(long, value_name = "PERCENT", default_value_t = 1.0, value_parser = number::per_cent, allow_negative_numbers = true)]
     pub force_uncertainty: f64,
     /// Greatest fall of the force, per cent of the peak
-    #[arg(long, value_name = "PERCENT", default_value_t = 5.0)]
+    #[arg(long, value_name = "PERCENT", default_value_t = 5.0, value_parser = number::per_cent, allow_negative_numbers = true)]
     pub drop: f64,
     /// Greatest ripple from trough to crest, per cent of the peak
-    #[arg(long, value_name = "PERCENT", default_value_t = 5.0)]
+    #[arg(long, value_name = "PERCENT", default_value_t = 5.0, value_parser = number::per_cent, allow_negative_numbers = true)]
     pub ripple: f64,
     /// Greatest ratio of the slope at the end to that at the beginning
-    #[arg(long, value_name = "RATIO", default_value_t = 1.5)]
+    #[arg(long, value_name = "RATIO", default_value_t = 1.5, value_parser = number::plain, allow_negative_numbers = true)]
     pub steepening: f64,
     #[command(flatten)]
     pub what_if: WhatIf,
@@ -79,6 +80,8 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     if arguments.json && arguments.output.as_deref().is_some_and(is_dash) {
         return Err(two_to_standard_output());
     }
+    let inputs = arguments.records.iter().chain([&arguments.file]).map(PathBuf::as_path);
+    refuse_overwriting("--output", arguments.output.as_deref(), inputs)?;
     let standard_input = arguments.records.iter().filter(|path| is_dash(path)).count();
     if standard_input + usize::from(is_dash(&arguments.file)) > 1 {
         return Err(Diagnostic::new("standard input can be read only once")

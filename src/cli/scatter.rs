@@ -1,6 +1,7 @@
 //! `hubgrip scatter`: what the population of parts does.
 
 use std::fs;
+use std::io::{self, Read};
 use std::path::{Path, PathBuf};
 
 use clap::Args;
@@ -14,7 +15,8 @@ use hubgrip::report::scatter as report;
 
 use super::exit::{Ending, Failure};
 use super::input::{self, Source, WhatIf};
-use super::output::Output;
+use super::number;
+use super::output::{Output, refuse_overwriting};
 
 const EXAMPLE: &str = "\
 Example:
@@ -46,20 +48,20 @@ pub struct Arguments {
     #[arg(long, short, value_name = "OUT.html")]
     pub output: Option<PathBuf>,
     /// Random pairs
-    #[arg(long, value_name = "N", default_value_t = 1_000_000)]
+    #[arg(long, value_name = "N", default_value_t = 1_000_000, value_parser = number::whole, allow_negative_numbers = true)]
     pub samples: u64,
     /// Seed of the random pairs; the same seed gives the same bytes on any number of threads
-    #[arg(long, value_name = "N", default_value_t = 1)]
+    #[arg(long, value_name = "N", default_value_t = 1, value_parser = number::whole, allow_negative_numbers = true)]
     pub seed: u64,
     #[command(flatten)]
     pub what_if: WhatIf,
 }
 
 pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> Result<Ending, Failure> {
-    let both = arguments.json && arguments.output.as_deref() == Some(Path::new("-"));
-    if both {
+    if arguments.json && arguments.output.as_deref() == Some(Path::new("-")) {
         return Err(two_to_standard_output());
     }
+    refuse_overwriting("--output", arguments.output.as_deref(), [arguments.file.as_path()])?;
     let library = input::library(materials, output)?;
     let source = Source::of(&arguments.file, &arguments.what_if)?;
     let joint = source.joint(&library)?;
@@ -68,7 +70,7 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
         Settings { samples: arguments.samples, seed: arguments.seed, slip_safety: joint.require.slip_safety };
     let scatter = scatter(model, settings).map_err(|error| match error {
         ScatterError::Samples { .. } => {
-            Diagnostic::new(format!("--samples {}: {error}", arguments.samples)).into()
+            Diagnostic::new(format!("--samples: {error}")).with_help("the usual number is 1000000").into()
         }
         error => source.refused(error.to_string(), None, None),
     })?;
@@ -106,9 +108,9 @@ pub fn understood_of(joint: &Joint, source: &Source<'_>) -> Result<Understood, F
         let key = match &error {
             PopulationError::Measured(fault) => return fault.clone().into(),
             PopulationError::Kernel(error) => return source.refused_by_kernel(error, joint, INSTEAD),
-            PopulationError::Distribution { key, .. } | PopulationError::TooManyValues { key, .. } => {
-                Some(*key)
-            }
+            PopulationError::Distribution { key, .. }
+            | PopulationError::OtherSize { key, .. }
+            | PopulationError::TooManyValues { key, .. } => Some(*key),
             PopulationError::Scatter(
                 ScatterError::ReachesZero { what } | ScatterError::FrictionAboveOne { what },
             ) => Some(*what),
@@ -121,14 +123,24 @@ pub fn understood_of(joint: &Joint, source: &Source<'_>) -> Result<Understood, F
 
 /// The measured parts of a CSV file.
 pub fn parts(path: &Path, kind: Kind) -> Result<Vec<Part>, Box<Diagnostic>> {
-    let bytes = fs::read(path).map_err(|error| {
-        Box::new(
-            Diagnostic::new(format!("cannot read: {error}"))
-                .in_file(path)
-                .with_help("a list of measurements is a CSV file, named from the folder of the joint file"),
+    let refused = |message: &str, help: &str| {
+        Box::new(Diagnostic::new(message).in_file(input::shown(path)).with_help(help))
+    };
+    let bytes = if path == Path::new("-") {
+        let mut bytes = Vec::new();
+        io::stdin().lock().read_to_end(&mut bytes).map(|_| bytes)
+    } else if path.is_dir() {
+        return Err(refused("this is a folder, not a list of measurements", "name a CSV file in it"));
+    } else {
+        fs::read(path)
+    };
+    let bytes = bytes.map_err(|error| {
+        refused(
+            &format!("cannot read: {error}"),
+            "a list of measurements is a CSV file; one that the joint file names lies beside it",
         )
     })?;
     let text = String::from_utf8(bytes)
-        .map_err(|_| Box::new(Diagnostic::new("this is not text in UTF-8").in_file(path)))?;
-    measured::read(&text, kind).map_err(|fault| Box::new(fault.in_file(path)))
+        .map_err(|_| refused("this is not text in UTF-8", "save the list as CSV in UTF-8"))?;
+    measured::read(&text, kind).map_err(|fault| Box::new(fault.in_file(input::shown(path))))
 }

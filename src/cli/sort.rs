@@ -9,17 +9,18 @@ use hubgrip::joint::population::Variation;
 use hubgrip::material::Range;
 use hubgrip::population::distribution::Distribution;
 use hubgrip::population::distribution::measured::Part;
-use hubgrip::population::scatter::understood::limits;
+use hubgrip::population::scatter::understood::{is_of_another_joint, limits};
 use hubgrip::population::sort::groups::{Grouping, Lots};
 use hubgrip::population::sort::matching::greatest_matching;
-use hubgrip::population::sort::required_band;
-use hubgrip::quantity::{Kind, parse_range};
+use hubgrip::population::sort::{MOST_GROUPS, required_band};
+use hubgrip::quantity::{Kind, parse_range, written};
 use hubgrip::report::sort as report;
 use hubgrip::tolerance::Member;
 
 use super::exit::{Ending, Failure};
 use super::input::{self, Source, WhatIf};
-use super::output::Output;
+use super::number;
+use super::output::{Output, refuse_overwriting};
 use super::scatter::{parts, understood_of};
 
 const EXAMPLE: &str = "\
@@ -40,18 +41,18 @@ pub struct Arguments {
     #[arg(value_name = "JOINT.yaml")]
     pub file: PathBuf,
     /// Number of groups; without it the fewest that keep every pair within the band
-    #[arg(long, value_name = "N")]
-    pub groups: Option<usize>,
+    #[arg(long, value_name = "N", value_parser = number::whole, allow_negative_numbers = true)]
+    pub groups: Option<u64>,
     /// Limits of the groups: of equal width, or with equal shares of the parts
     #[arg(long, value_enum, default_value_t = By::Width)]
     pub by: By,
     /// Wanted interference, such as "30 to 45 um"; without it what the requirements allow
-    #[arg(long, value_name = "RANGE")]
+    #[arg(long, value_name = "RANGE", allow_hyphen_values = true)]
     pub band: Option<String>,
-    /// Measured holes, CSV
+    /// Measured holes, CSV; - is standard input
     #[arg(long, value_name = "HOLES.csv")]
     pub holes: Option<PathBuf>,
-    /// Measured shafts, CSV
+    /// Measured shafts, CSV; - is standard input
     #[arg(long, value_name = "SHAFTS.csv")]
     pub shafts: Option<PathBuf>,
     /// Pick list of the measured parts, CSV; - is standard output
@@ -72,13 +73,14 @@ pub enum By {
 }
 
 pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> Result<Ending, Failure> {
+    refuse_lost_streams(arguments)?;
     let library = input::library(materials, output)?;
     let source = Source::of(&arguments.file, &arguments.what_if)?;
     let joint = source.joint(&library)?;
     let shown = input::shown(&arguments.file);
     let refused = |message: String| Failure::from(Diagnostic::new(message).in_file(&shown));
-    let holes = list(arguments.holes.as_deref(), joint.population.hole.as_ref(), &source)?;
-    let shafts = list(arguments.shafts.as_deref(), joint.population.shaft.as_ref(), &source)?;
+    let holes = list(arguments.holes.as_deref(), joint.population.hole.as_ref(), &source, joint.diameter)?;
+    let shafts = list(arguments.shafts.as_deref(), joint.population.shaft.as_ref(), &source, joint.diameter)?;
     let understood = understood_of(&joint, &source)?;
     let population = &understood.model.population;
     let of = |parts: &Option<Vec<Part>>, plan: &Distribution| match parts {
@@ -101,7 +103,8 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
         By::Share => Grouping::EqualShare,
     };
     let count = match (arguments.groups, fewest) {
-        (Some(count), _) | (None, Some(count)) => count,
+        (Some(count), _) => groups_of(count)?,
+        (None, Some(count)) => count,
         (None, None) => {
             return Err(Diagnostic::new("no number of groups brings every pair into the band")
                 .with_help("give --groups N, or a wider --band")
@@ -153,6 +156,37 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     Ok(ending(groups.all_within()))
 }
 
+/// The number of groups asked for.
+fn groups_of(count: u64) -> Result<usize, Failure> {
+    usize::try_from(count).ok().filter(|count| (1..=MOST_GROUPS).contains(count)).ok_or_else(|| {
+        Diagnostic::new(format!("--groups {count}: {count} groups are not possible"))
+            .with_help(format!("write 1 to {MOST_GROUPS}, or leave --groups out for the fewest that do"))
+            .into()
+    })
+}
+
+/// Standard input can be read once, standard output holds one thing, and no input is written over.
+fn refuse_lost_streams(arguments: &Arguments) -> Result<(), Failure> {
+    let is_dash = |path: &Path| path == Path::new("-");
+    let inputs = || {
+        let lists = [arguments.holes.as_deref(), arguments.shafts.as_deref()];
+        std::iter::once(arguments.file.as_path()).chain(lists.into_iter().flatten())
+    };
+    if inputs().filter(|path| is_dash(path)).count() > 1 {
+        return Err(Diagnostic::new("standard input can be read only once")
+            .with_help("give `-` for one of joint file, holes and shafts")
+            .into());
+    }
+    if arguments.json && arguments.pick_list.as_deref().is_some_and(is_dash) {
+        return Err(Diagnostic::new(
+            "the pick list (--pick-list -) and the JSON (--json) would both go to standard output",
+        )
+        .with_help("give the pick list a file, such as --pick-list OUT.csv, or leave one of the two out")
+        .into());
+    }
+    refuse_overwriting("--pick-list", arguments.pick_list.as_deref(), inputs())
+}
+
 fn ending(within: bool) -> Ending {
     if within { Ending::Met } else { Ending::NotMet }
 }
@@ -162,13 +196,27 @@ fn list(
     given: Option<&Path>,
     plan: Option<&Variation>,
     source: &Source<'_>,
+    nominal: f64,
 ) -> Result<Option<Vec<Part>>, Failure> {
     let path = match (given, plan) {
         (Some(path), _) => path.to_path_buf(),
         (None, Some(Variation::Measured(name))) => source.beside(name),
         _ => return Ok(None),
     };
-    Ok(Some(parts(&path, Kind::Length)?))
+    let parts = parts(&path, Kind::Length)?;
+    if let Some(part) = parts.iter().find(|part| is_of_another_joint(part.value, nominal)) {
+        let text = |size| written(Kind::Length, size);
+        return Err(Diagnostic::new(format!(
+            "part {}: {} is more than 5 % off the diameter of the joint, {}",
+            part.name,
+            text(part.value),
+            text(nominal)
+        ))
+        .in_file(input::shown(&path))
+        .with_help("write whole sizes, not deviations, and check the unit in the first row")
+        .into());
+    }
+    Ok(Some(parts))
 }
 
 /// The wanted band, m, with where it comes from.

@@ -34,6 +34,22 @@ pub enum PopulationError {
     /// A list of measurements cannot be read.
     #[error("{0}")]
     Measured(Box<Diagnostic>),
+    /// A measured size that cannot be one of this joint.
+    #[error(
+        "population.{key}: {} of {file} is more than 5 % off the diameter of the joint, {}",
+        crate::quantity::written(Kind::Length, *size),
+        crate::quantity::written(Kind::Length, *nominal)
+    )]
+    OtherSize {
+        /// Key.
+        key: &'static str,
+        /// The list.
+        file: String,
+        /// The size, m.
+        size: f64,
+        /// Diameter of the joint, m.
+        nominal: f64,
+    },
     /// More different values than are added up exactly.
     #[error(
         "population.{key}: {count} different measured values, at most {MOST_VALUES} are added up exactly"
@@ -171,6 +187,12 @@ pub fn understood(joint: &Joint, read: &mut ReadList<'_>) -> Result<Understood, 
     Ok(Understood { model, assumed })
 }
 
+/// Whether a size is so far off the nominal diameter that its unit or its list was mixed up: by 5 %, as for limits
+/// (common practice, no source).
+pub fn is_of_another_joint(size: f64, nominal: f64) -> bool {
+    (size - nominal).abs() > 0.05 * nominal
+}
+
 /// That of a state's pressure only a share counts for holding.
 fn relaxed(state: &DutyState) -> Option<String> {
     (state.relaxation < 1.0).then(|| {
@@ -256,6 +278,11 @@ impl Taking<'_, '_> {
                         if upper { "upper" } else { "lower" }
                     ));
                 }
+                if *cpk < 0.0 {
+                    self.assumed.push(format!(
+                        "population.{key}.cpk is below zero: the mean of the parts lies outside the limits."
+                    ));
+                }
                 let normal = Distribution::capable(limits.lower, limits.upper, *cp, *cpk, upper).map_err(refused)?;
                 if *cut { cut_normal(normal.mean(), normal.sd(), (limits.lower, limits.upper)) } else { Ok(normal) }
             }
@@ -285,6 +312,12 @@ impl Taking<'_, '_> {
         kind: Kind,
     ) -> Result<Distribution, PopulationError> {
         let values = (self.read)(file, kind).map_err(PopulationError::Measured)?;
+        let nominal = self.joint.diameter;
+        if ["hole", "shaft"].contains(&key)
+            && let Some(size) = values.iter().copied().find(|size| is_of_another_joint(*size, nominal))
+        {
+            return Err(PopulationError::OtherSize { key, file: file.to_owned(), size, nominal });
+        }
         let distribution =
             Distribution::measured(&values).map_err(|cause| PopulationError::Distribution { key, cause })?;
         if let Shape::Measured(atoms) = distribution.shape()
