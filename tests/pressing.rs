@@ -156,7 +156,10 @@ fn bad_command_lines_are_told() {
         (vec!["pressing", "joint.yaml", "pinion-01.csv", "--steepening", "1,5"], "decimal point"),
         (vec!["pressing", "joint.yaml", "pinion-01.csv", "--drop", "-5"], "no share"),
         (vec!["pressing", "joint.yaml", "pinion-01.csv", "--ripple", "some"], "write per cent"),
-        (vec!["pressing", "joint.yaml", "pinion-01.csv", "--touch-within", "-1 mm"], "--touch-within is negative"),
+        (
+            vec!["pressing", "joint.yaml", "pinion-01.csv", "--touch-within", "-1 mm"],
+            "--touch-within is negative",
+        ),
         (vec!["pressing", "joint.yaml", "pinion-01.csv", "-o", "pinion-01.csv"], "would be overwritten"),
         (
             vec!["pressing", "joint.yaml", "pinion-01.csv", "-o", "no/page.html"],

@@ -91,22 +91,34 @@ fn the_text_fits_a_terminal_and_says_what_was_assumed() {
 fn without_a_band_the_requirements_give_it() {
     let here = tempfile::tempdir().unwrap();
     let file = example("measured-lots.yaml");
-    let output = hubgrip_in(here.path(), &["sort", &file, "--groups", "2", "--json"]);
-    let value: serde_json::Value = serde_json::from_str(&stdout(&output)).unwrap();
-    assert_eq!(value["band"]["source"], "from the requirements of the joint file");
-    let (low, high) = (value["band"]["low_um"].as_f64().unwrap(), value["band"]["high_um"].as_f64().unwrap());
-    // At both ends the check of a measured pair just meets its requirement.
-    for (interference, key) in [(low, "slip"), (high, "yield")] {
-        let shaft = 40.0 + interference * 1e-3;
-        let set = format!("fit={{measured: {{hole: 40 mm, shaft: {shaft:.9} mm, uncertainty: 0 um}}}}");
-        let output = hubgrip_in(here.path(), &["check", &file, "--json", "--set", &set]);
-        let found: serde_json::Value = serde_json::from_str(&stdout(&output)).unwrap();
-        let question = if key == "slip" { "hold" } else { "strength" };
-        let verdicts = found["verdicts"].as_array().unwrap().iter().filter(|v| v["question"] == question);
-        let margin = verdicts
-            .map(|v| v["found"].as_f64().unwrap_or(f64::MAX) / v["required"].as_f64().unwrap())
-            .fold(f64::MAX, f64::min);
-        assert!((margin - 1.0).abs() < 1e-4, "{key}: {margin}");
+    for (more, questions) in [
+        (vec![], ["hold", "strength"]),
+        // Speed loosens and stresses, a relaxed pressure holds less: the band is that of `choose`.
+        (vec!["duty.0.speed=9000 rpm", "duty.0.relaxation=0.8"], ["hold", "strength"]),
+        (vec!["require.press_force=60 kN"], ["hold", "assembly"]),
+        (vec!["duty.0.bending_moment=20 N.m", "require.slip_safety=0.3"], ["hold", "strength"]),
+    ] {
+        let set: Vec<&str> = more.iter().flat_map(|set| ["--set", *set]).collect();
+        let output =
+            hubgrip_in(here.path(), &[&["sort", &file, "--groups", "2", "--json"], set.as_slice()].concat());
+        let value: serde_json::Value = serde_json::from_str(&stdout(&output)).unwrap_or_default();
+        assert!(value.is_object(), "{more:?}: {}", stderr(&output));
+        assert_eq!(value["band"]["source"], "from the requirements of the joint file");
+        let ends = ["low_um", "high_um"].map(|end| value["band"][end].as_f64().unwrap());
+        // At both ends the check of a measured pair just meets its requirement.
+        for (interference, question) in ends.into_iter().zip(questions) {
+            let shaft = 40.0 + interference * 1e-3;
+            let fit = format!("fit={{measured: {{hole: 40 mm, shaft: {shaft:.9} mm, uncertainty: 0 um}}}}");
+            let words = [&["check", &file, "--json", "--set", &fit], set.as_slice()].concat();
+            let found: serde_json::Value =
+                serde_json::from_str(&stdout(&hubgrip_in(here.path(), &words))).unwrap();
+            let verdicts = found["verdicts"].as_array().unwrap().iter().filter(|v| v["question"] == question);
+            let margin = verdicts
+                .map(|v| v["found"].as_f64().unwrap_or(f64::MAX) / v["required"].as_f64().unwrap())
+                .map(|margin| if question == "assembly" { 1.0 / margin } else { margin })
+                .fold(f64::MAX, f64::min);
+            assert!((margin - 1.0).abs() < 1e-4, "{more:?} {question}: {margin}");
+        }
     }
 }
 

@@ -96,7 +96,7 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
         hole: limits(&joint, Member::Hole),
         shaft: limits(&joint, Member::Shaft),
     };
-    let (band, band_source) = band(arguments.band.as_deref(), &joint)?;
+    let (band, band_source) = band(arguments.band.as_deref(), &joint, &source)?;
     let fewest = lots.fewest(band);
     let grouping = match arguments.by {
         By::Width => Grouping::EqualWidth,
@@ -220,7 +220,7 @@ fn list(
 }
 
 /// The wanted band, m, with where it comes from.
-fn band(given: Option<&str>, joint: &Joint) -> Result<(Range, &'static str), Failure> {
+fn band(given: Option<&str>, joint: &Joint, source: &Source<'_>) -> Result<(Range, &'static str), Failure> {
     if let Some(text) = given {
         let (low, high) = parse_range(Kind::Length, text).map_err(|error| {
             Diagnostic::new(format!("--band {text}: {error}"))
@@ -233,14 +233,20 @@ fn band(given: Option<&str>, joint: &Joint) -> Result<(Range, &'static str), Fai
         }
         return Ok((Range { low, high }, "as given"));
     }
-    let (low, high) = required_band(joint).map_err(|error| Diagnostic::new(error.to_string()))?;
+    let (low, high) = required_band(joint).map_err(|error| source.refused(error.to_string(), None, None))?;
     let tightest = joint.fits.first().map_or(0.0, |fit| fit.limits.interference().tightest);
     let low = low.unwrap_or(0.0);
     let high = high.unwrap_or(tightest);
     if low >= high {
-        return Err(Diagnostic::new("no interference meets all requirements of the joint file")
-            .with_help("give --band, or change the joint: `hubgrip choose` says what blocks")
-            .into());
+        let help = "give --band, or change the joint: `hubgrip choose` says what blocks";
+        let fault = "no interference meets all requirements of the joint file";
+        return Err(source.refused(fault, None, Some(help.to_owned())));
     }
-    Ok((Range { low, high }, "from the requirements of the joint file"))
+    let timed = joint.assembly.practice.handling_time.is_some();
+    let named = if timed && (joint.assembly.heats() || joint.assembly.chills()) {
+        "from the requirements of the joint file without its handling time"
+    } else {
+        "from the requirements of the joint file"
+    };
+    Ok((Range { low, high }, named))
 }

@@ -164,12 +164,12 @@ impl<'a> Judge<'a> {
     }
 
     /// Every requirement of the joint that has edges, with them, in the order of the verdicts of a check.
-    pub(super) fn requirements(&self) -> Vec<Requirement> {
+    pub(in crate::population) fn requirements(&self) -> Vec<Requirement> {
         self.subjects().into_iter().map(|subject| self.requirement(subject)).collect()
     }
 
     /// The window that requirements leave.
-    pub(super) fn window(requirements: &[Requirement]) -> Window {
+    pub(in crate::population) fn window(requirements: &[Requirement]) -> Window {
         let mut window = Window { least: f64::NEG_INFINITY, greatest: None };
         for requirement in requirements {
             let (least, greatest) = match requirement.never_met {
