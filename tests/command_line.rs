@@ -479,3 +479,21 @@ fn a_page_and_json_do_not_share_standard_output() {
     let choose = hubgrip_in(here.path(), &["choose", &joint, "--json", "-o", "-"]);
     assert_eq!((exit_code(&choose), stdout(&choose).as_str()), (2, ""));
 }
+
+/// The examples and notes under the options are broken by hand, so none may need more than a terminal of 80 columns.
+#[test]
+fn help_of_the_population_commands_fits_80_columns() {
+    for command in ["choose", "scatter", "sort", "batch", "pressing"] {
+        let run = |columns: &str| {
+            let mut hubgrip = std::process::Command::new(env!("CARGO_BIN_EXE_hubgrip"));
+            stdout(&hubgrip.args([command, "--help"]).env("COLUMNS", columns).output().unwrap())
+        };
+        let (wide, narrow) = (run("200"), run("80"));
+        let notes = wide.split_once("Example:").unwrap().1;
+        assert!(notes.lines().count() > 5 && notes.contains("Exit code"), "{notes}");
+        for line in notes.lines().chain(narrow.lines()) {
+            assert!(line.chars().count() <= 80, "{command}: {line}");
+        }
+        assert!(narrow.ends_with(notes), "{command} is wrapped again at 80 columns");
+    }
+}

@@ -19,12 +19,14 @@ const EXAMPLE: &str = "\
 Example:
   hubgrip batch joints.csv --base joint.yaml -o findings.csv
   hubgrip batch joints.csv --base joint.yaml --columns slip_safety,hub_safety,ok
-  cut -d, -f1-4 joints.csv | hubgrip batch - --base joint.yaml --errors bad.csv > findings.csv
+  hubgrip batch - --base joint.yaml --errors bad.csv < joints.csv > findings.csv
 
 Columns are keys of a joint file, with the unit of plain numbers in brackets:
-  id,diameter (mm),hub.outer_diameter (mm),fit,hub.roughness (Rz um),duty.rated.torque (N.m)
-A column that is no key, such as id, is carried along with --keep id. An empty cell leaves the
-key to the base file. The exit code is 1 when a row misses a requirement or has an error.";
+  id,diameter (mm),hub.outer_diameter (mm),fit,hub.roughness (Rz um)
+A column that is no key, such as id, is carried along with --keep id. An empty
+cell leaves the key to the base file.
+
+Exit code 0: every row is met, 1: some row is not or has an error, 2: bad input.";
 
 /// Many joints: a row of a table each, a row of findings each
 #[derive(Debug, Args)]

@@ -22,20 +22,22 @@ use super::scatter::two_to_standard_output;
 const EXAMPLE: &str = "\
 Example:
   hubgrip pressing joint.yaml record.csv -o record.html
-  hubgrip pressing joint.yaml records/ --json | jq '.records[] | select(.ok | not) | .file'
+  hubgrip pressing joint.yaml records/ --json | jq '.records[] | .file, .ok'
   hubgrip pressing joint.yaml record.csv --touch-at 12.4mm --touch-within 0.5mm
 
 A record is a CSV file with a header:
   travel (mm);force (kN)
   0.00;0.02
   0.25;0.31
-The columns are found by their words (travel, position, stroke, displacement, path; force, load), the unit stands
-behind the name. Comments begin with #. The travel must not go back.
+The columns are found by their words (travel, position, stroke, displacement,
+path; force, load), the unit stands behind the name. Comments begin with #. The
+travel must not go back.
 
 Exit codes:
   0  every record is within the joint's window
   1  some record is out
-  2  some record cannot be read (the others are judged and shown all the same), or bad input";
+  2  some record cannot be read (the others are judged all the same), or bad
+     input";
 
 /// Judge recorded force-travel curves against the joint's window
 #[derive(Debug, Args)]

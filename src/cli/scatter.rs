@@ -22,7 +22,8 @@ const EXAMPLE: &str = "\
 Example:
   hubgrip scatter joint.yaml
   hubgrip scatter joint.yaml -o population.html --samples 10000000 --seed 7
-  hubgrip scatter joint.yaml --set population.hole.cp=1.33 --json | jq '.slip[].ppm'
+  hubgrip scatter joint.yaml --set population.hole.cp=1.33
+  hubgrip scatter joint.yaml --json | jq '.slip[].ppm'
 
 The joint file says how the parts scatter:
   population:
@@ -32,7 +33,7 @@ The joint file says how the parts scatter:
     hub_roughness: 6 to 10 um                     every value alike
     shaft: {measured: shafts.csv}                 a list of measured parts
 
-The exit code is 1 when the two engines do not agree.";
+Exit code 0: worked out, 1: the two engines do not agree, 2: bad input.";
 
 /// What the population of parts does: probability of slip, of yield
 #[derive(Debug, Args)]

@@ -27,11 +27,15 @@ const EXAMPLE: &str = "\
 Example:
   hubgrip sort joint.yaml --groups 4 --band \"30 to 45 um\"
   hubgrip sort joint.yaml --groups 3 --by share
-  hubgrip sort joint.yaml --holes holes.csv --shafts shafts.csv --band \"30 to 40 um\" --pick-list pairs.csv
+  hubgrip sort joint.yaml --holes holes.csv --shafts shafts.csv \\
+    --band \"30 to 40 um\" --pick-list pairs.csv
 
-Without --band the band is what the requirements of the joint file allow. A list of measured
-parts is a CSV file with a column diameter_mm (or diameter, with the unit behind each number)
-and, if wanted, a column part. The exit code is 1 when pairs of a group may leave the band.";
+Without --band the band is what the requirements of the joint file allow. A list
+of measured parts is a CSV file with a column diameter_mm (or diameter, with the
+unit behind each number) and, if wanted, a column part.
+
+Exit code 0: every pair of a group is in the band, 1: some may leave it, 2: bad
+input.";
 
 /// Selective assembly: grouping parts so that a coarse tolerance gives a fine fit
 #[derive(Debug, Args)]
