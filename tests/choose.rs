@@ -688,6 +688,12 @@ fn the_examples_find_fits() {
         let (code, text, errors) = chosen(&example, &[]);
         assert_eq!((code, errors.as_str()), (0, ""), "{text}");
         assert!(text.lines().all(|line| line.chars().count() <= 80), "{text}");
+        // With every column there is, at the widest.
+        let set = ["assembly.handling_time=1 s", "duty.0.torque=20 N.m", "display=inch"];
+        let more: Vec<&str> = set.iter().flat_map(|set| ["--set", *set]).collect();
+        let (code, wide, _) =
+            chosen(&example, &[&["--finest", "5", "--standard", "iso"], more.as_slice()].concat());
+        assert!(code == 0 && wide.lines().all(|line| line.chars().count() <= 80), "{wide}");
         let (_, json, _) = chosen(&example, &["--json"]);
         let found: serde_json::Value = serde_json::from_str(&json).unwrap();
         let fit = &found["fits"][0];

@@ -99,19 +99,22 @@ fn fits(out: &mut String, choice: &Choice, all: bool) {
 
 fn fit_table(out: &mut String, choice: &Choice, fits: &[&ChosenFit]) {
     let to = format!("to {}", words::unit(choice.joint.display));
-    let mut header =
-        ["fit", "cost", "from", &to, "below", "above", words::hold_heading(choice), "shaft", "hub"]
-            .map(str::to_owned)
-            .to_vec();
+    let last = words::last_headings(choice);
+    // With a time and a bearing there is no room for what is to spare, which the page and the JSON have as well.
+    let spare = last.len() < 3;
+    let mut header = ["fit", "cost", "from", &to].map(str::to_owned).to_vec();
+    header.extend(["below", "above"].map(str::to_owned).into_iter().filter(|_| spare));
+    header.extend([words::hold_heading(choice), "shaft", "hub"].map(str::to_owned));
     header.extend(words::joining_heading(choice));
-    header.extend(words::last_headings(choice));
+    header.extend(last);
     let mut rows = table(&header);
     for fit in fits {
         let mark = if fit.preferred_by.is_empty() { "" } else { " *" };
         let row = words::row(choice, fit);
         let last: Vec<String> = row.last_cells().map(str::to_owned).collect();
         let mut cells = vec![format!("{}{mark}", fit.callout), row.cost, row.loosest, row.tightest];
-        cells.extend([row.below, row.above, row.hold, row.shaft, row.hub]);
+        cells.extend([row.below, row.above].into_iter().filter(|_| spare));
+        cells.extend([row.hold, row.shaft, row.hub]);
         cells.extend(row.joining);
         cells.extend(last);
         rows.add_row(cells);
