@@ -265,6 +265,41 @@ fn limits_come_a_row_each() {
     }
 }
 
+/// A time from oven to seated that is required is followed for each row, and the share that relaxation leaves counts.
+#[test]
+fn handling_time_and_relaxation_are_judged_as_the_check_does() {
+    let base = "joint_file: 1\ndiameter: 60 mm\nlength: 70 mm\nfriction: 0.12\nfit: H7/s6\n\
+        shaft: {material: C45+N}\nhub: {material: C45+N, outer_diameter: 120 mm}\n\
+        duty: [{state: rated, torque: 200 N.m}]\nassembly: {method: heat hub}\n";
+    let table = "assembly.handling_time (s),duty.0.relaxation,require.hub_temperature (degC)\n\
+        ,,\n1,,\n3600,,\n3600,,100\n,0.9,\n,0.1,\n1,0.1,\n";
+    let (output, _) = worked(table.as_bytes(), &settings(base));
+    let found = rows(&output);
+    let told = |column: &str| found.iter().map(|row| row[column].clone()).collect::<Vec<_>>();
+    let (yes, no) = ("met", "not met");
+    assert_eq!(told("assembly"), [yes, yes, no, no, yes, yes, yes]);
+    assert_eq!(told("hold"), [yes, yes, yes, yes, yes, no, no]);
+    let cells = table.lines().skip(1).map(|line| line.split(',').collect::<Vec<_>>());
+    for (row, cells) in found.iter().zip(cells) {
+        let keys = [
+            ("assembly.handling_time", " s"),
+            ("duty.0.relaxation", ""),
+            ("require.hub_temperature", " degC"),
+        ];
+        let set: Vec<(String, String)> = keys
+            .iter()
+            .zip(cells)
+            .filter(|(_, cell)| !cell.is_empty())
+            .map(|((key, unit), cell)| ((*key).to_owned(), format!("{cell}{unit}")))
+            .collect();
+        let findings =
+            compute(read::read(base, Path::new("b.yaml"), &set, &Library::built_in()).unwrap()).unwrap();
+        let ok = findings.verdicts.iter().all(|verdict| verdict.ok);
+        assert_eq!(row["ok"], ok.to_string(), "{set:?}");
+        same(&row["slip_safety"], findings.duty[0].loosest.slip_safety, 1.0);
+    }
+}
+
 /// What the kernel does not cover is worked out in full.
 #[test]
 fn joints_of_every_kind_go_through() {
@@ -512,6 +547,38 @@ fn a_killed_run_leaves_no_final_file() {
     }
     assert!(!folder.path().join("new.csv").exists() && !folder.path().join("bad.csv").exists());
     assert_eq!(fs::read_to_string(folder.path().join("old.csv")).unwrap(), "old\n");
+}
+
+/// Nothing that is read is written over, and table and base in each other's place are told apart.
+#[test]
+fn mixed_up_files_are_told() {
+    let folder = tempfile::tempdir().unwrap();
+    let table = "diameter (mm),fit\n60,H7/s6\n";
+    fs::write(folder.path().join("table.csv"), table).unwrap();
+    fs::write(folder.path().join("base.yaml"), BASE).unwrap();
+    fs::write(folder.path().join("empty.csv"), "").unwrap();
+    fs::write(folder.path().join("wide.csv"), b"\xff\xfed\0i\0a\0").unwrap();
+    for (words, told) in [
+        (
+            vec!["table.csv", "--base", "base.yaml", "-o", "table.csv"],
+            "table.csv: error: --output names an input",
+        ),
+        (vec!["table.csv", "--base", "base.yaml", "-o", "./base.yaml"], "--output names an input"),
+        (vec!["table.csv", "--base", "base.yaml", "--errors", "table.csv"], "--errors names an input"),
+        (vec!["base.yaml", "--base", "base.yaml"], "hubgrip batch TABLE.csv --base JOINT.yaml"),
+        (vec!["-", "--base", "-"], "standard input can be read only once"),
+        (vec!["empty.csv", "--base", "base.yaml"], "empty.csv: error: the table is empty"),
+        (vec!["wide.csv", "--base", "base.yaml"], "not text in UTF-8"),
+        (vec!["none.csv", "--base", "base.yaml"], "name a table"),
+        (vec!["table.csv", "--base", "base.yaml", "-o", "no/out.csv"], "the folder no does not exist"),
+    ] {
+        let output = common::hubgrip_in(folder.path(), &[&["batch"], words.as_slice()].concat());
+        let errors = common::stderr(&output);
+        assert_eq!((output.status.code(), output.stdout.len()), (Some(2), 0), "{words:?}: {errors}");
+        assert!(errors.contains(told) && !errors.contains(".hubgrip-"), "{words:?}: {errors}");
+    }
+    assert_eq!(fs::read_to_string(folder.path().join("table.csv")).unwrap(), table);
+    assert_eq!(fs::read_to_string(folder.path().join("base.yaml")).unwrap(), BASE);
 }
 
 #[test]

@@ -451,3 +451,49 @@ fn quiet_commands_that_write_a_page_print_nothing_else() {
         assert_eq!(run(&["-o", "-"]), page, "{words:?}: standard output holds the page alone");
     }
 }
+
+/// One stream cannot hold a page and JSON: nothing is written, and the way out is told. A page in a file leaves room for
+/// the JSON.
+#[test]
+fn a_page_and_json_do_not_share_standard_output() {
+    let here = folder();
+    let (joint, record) = ("examples/population/motor-hub.yaml", "examples/pressing");
+    let example = |name: &str| format!("{}/{name}", env!("CARGO_MANIFEST_DIR"));
+    let joint = example(joint);
+    let press = example("examples/pressing/joint.yaml");
+    let records = example(record);
+    for words in [vec!["scatter", &joint, "--samples", "1000"], vec!["pressing", &press, &records]] {
+        let run = |more: &[&str]| hubgrip_in(here.path(), &[words.as_slice(), more].concat());
+        let both = run(&["--json", "-o", "-"]);
+        assert_eq!((exit_code(&both), stdout(&both).as_str()), (2, ""), "{words:?}");
+        let error: Value = serde_json::from_str(&stderr(&both)).unwrap();
+        let message = error["error"]["message"].as_str().unwrap();
+        assert!(message.contains("-o -") && message.contains("--json"), "{message}");
+        assert!(error["error"]["help"].as_str().unwrap().contains("OUT.html"));
+        let apart = run(&["--json", "-o", "page.html"]);
+        assert!(exit_code(&apart) < 2, "{}", stderr(&apart));
+        serde_json::from_str::<Value>(&stdout(&apart)).unwrap();
+        assert!(fs::read_to_string(here.path().join("page.html")).unwrap().starts_with("<!DOCTYPE html>"));
+    }
+    // `choose` has one of the two only.
+    let choose = hubgrip_in(here.path(), &["choose", &joint, "--json", "-o", "-"]);
+    assert_eq!((exit_code(&choose), stdout(&choose).as_str()), (2, ""));
+}
+
+/// The examples and notes under the options are broken by hand, so none may need more than a terminal of 80 columns.
+#[test]
+fn help_of_the_population_commands_fits_80_columns() {
+    for command in ["choose", "scatter", "sort", "batch", "pressing"] {
+        let run = |columns: &str| {
+            let mut hubgrip = std::process::Command::new(env!("CARGO_BIN_EXE_hubgrip"));
+            stdout(&hubgrip.args([command, "--help"]).env("COLUMNS", columns).output().unwrap())
+        };
+        let (wide, narrow) = (run("200"), run("80"));
+        let notes = wide.split_once("Example:").unwrap().1;
+        assert!(notes.lines().count() > 5 && notes.contains("Exit code"), "{notes}");
+        for line in notes.lines().chain(narrow.lines()) {
+            assert!(line.chars().count() <= 80, "{command}: {line}");
+        }
+        assert!(narrow.ends_with(notes), "{command} is wrapped again at 80 columns");
+    }
+}

@@ -59,7 +59,9 @@ fn same_findings(plain: &PlainJoint, findings: &Findings) {
             (&duty.tightest, &findings.extremes.tightest, PairKind::Tightest),
         ];
         for (full, pair, kind) in pairs {
-            let state = plain.state(&plain.states[number], plain.effective(pair.interference, kind));
+            let condition = &plain.states[number];
+            let fresh = plain.state(condition, plain.effective(pair.interference, kind));
+            let state = if kind == PairKind::Loosest { fresh.relaxed(condition.relaxation) } else { fresh };
             same(state.pressure, full.pressure, 1e6);
             same(state.torque_capacity, full.torque_capacity, 1.0);
             same(state.axial_capacity, full.axial_capacity, 10.0);
@@ -139,7 +141,7 @@ fn what_the_kernel_does_not_cover_is_refused() {
 fn the_kernel_gives_what_the_full_computation_gives() {
     let library = Library::built_in();
     let mut random = random_joints::stream(1);
-    let (mut compared, mut loose, mut hot, mut moved, mut closed_by_cold) = (0, 0, 0, 0, 0);
+    let (mut compared, mut loose, mut hot, mut moved, mut closed_by_cold, mut relaxed) = (0, 0, 0, 0, 0, 0);
     for number in 0..400 {
         let mut parts = random_joints::parts(&mut random);
         // Every third shop is bitterly cold, every third cool: temperature alone then closes some pairs.
@@ -156,7 +158,16 @@ fn the_kernel_gives_what_the_full_computation_gives() {
         same_findings(&PlainJoint::of(&joint).unwrap(), &findings);
         same_verdicts(&PlainJoint::of(&joint).unwrap(), &joint, &findings);
         same_joining(&joint, &findings);
+        let slip = findings.duty.iter();
+        let least = slip.filter_map(|duty| duty.loosest.slip_safety).min_by(f64::total_cmp);
+        let plain = PlainJoint::of(&joint).unwrap();
+        let loosest = plain.effective(findings.extremes.loosest.interference, PairKind::Loosest);
+        match (plain.least_slip_safety(loosest), least) {
+            (Some((kernel, _)), Some(full)) => same(kernel, full, 0.01),
+            (kernel, full) => assert_eq!(kernel.is_some(), full.is_some()),
+        }
         compared += 1;
+        relaxed += usize::from(joint.duty.iter().any(|state| state.relaxation < 1.0));
         moved += usize::from(joint.duty.iter().any(|state| state.speed > 0.0 || state.inner_pressure > 0.0));
         loose += usize::from(findings.extremes.loosest.pressure == 0.0);
         let loosest = &findings.extremes.loosest;
@@ -166,8 +177,8 @@ fn the_kernel_gives_what_the_full_computation_gives() {
     assert!(compared > 300, "only {compared} joints could be read");
     assert!(closed_by_cold > 10, "only {closed_by_cold} joints are closed by the shop temperature");
     assert!(
-        loose > 10 && hot > 50 && moved > 50,
-        "{loose} loose, {hot} hot and {moved} moved joints are too few"
+        loose > 10 && hot > 50 && moved > 50 && relaxed > 50,
+        "{loose} loose, {hot} hot, {moved} moved and {relaxed} relaxed joints are too few"
     );
 }
 

@@ -153,6 +153,18 @@ fn bad_command_lines_are_told() {
         (vec!["pressing", "joint.yaml", "pinion-01.csv", "--touch-at", "3"], "--touch-at 3: 3 has no unit"),
         (vec!["pressing", "joint.yaml", "pinion-01.csv", "--drop", "400"], "no share"),
         (vec!["pressing", "joint.yaml", "pinion-01.csv", "--steepening", "0.5"], "below 1"),
+        (vec!["pressing", "joint.yaml", "pinion-01.csv", "--steepening", "1,5"], "decimal point"),
+        (vec!["pressing", "joint.yaml", "pinion-01.csv", "--drop", "-5"], "no share"),
+        (vec!["pressing", "joint.yaml", "pinion-01.csv", "--ripple", "some"], "write per cent"),
+        (
+            vec!["pressing", "joint.yaml", "pinion-01.csv", "--touch-within", "-1 mm"],
+            "--touch-within is negative",
+        ),
+        (vec!["pressing", "joint.yaml", "pinion-01.csv", "-o", "pinion-01.csv"], "would be overwritten"),
+        (
+            vec!["pressing", "joint.yaml", "pinion-01.csv", "-o", "no/page.html"],
+            "the folder no does not exist",
+        ),
         (vec!["pressing", "joint.yaml", "pinion-01.csv", "--set", "fit=H7/f7"], "does not grip"),
     ] {
         let (code, out, err) = run(&arguments);

@@ -14,7 +14,7 @@ use hubgrip::population::distribution::{Distribution, normal};
 use hubgrip::population::scatter::analysis::Analysis;
 use hubgrip::population::scatter::model::{Arithmetic, Limit, Model, Population, State, Stiffness};
 use hubgrip::population::scatter::simulation::Simulation;
-use hubgrip::population::scatter::understood::understood;
+use hubgrip::population::scatter::understood::{Understood, understood};
 use hubgrip::population::scatter::{Quantity, Settings, scatter};
 use rand::{Rng, SeedableRng};
 use rand_xoshiro::Xoshiro256PlusPlus;
@@ -350,6 +350,37 @@ fn a_population_without_scatter_is_the_check_of_one_pair() {
     }
 }
 
+/// What relaxes holds as the check says: both engines turn over at its safety, and the stresses stay.
+#[test]
+fn a_relaxed_state_slips_where_the_check_says() {
+    let population =
+        "population:\n  hole: 60.030 mm\n  shaft: 60.053 mm\n  friction: 0.1\n  pressing_friction: 0.14\n";
+    let of = |text: &str| {
+        let text = format!("{text}{population}");
+        let joint = read::read(&text, Path::new("joint.yaml"), &[], &Library::built_in()).unwrap();
+        let understood = understood(&joint, &mut |_, _| unreachable!("no list is named")).unwrap();
+        (understood, compute(joint).unwrap())
+    };
+    let (fresh, _) = of(JOINT);
+    let (relaxed, findings) = of(&JOINT.replace("torque:", "relaxation: 0.4, torque:"));
+    let safety = findings.duty[0].loosest.slip_safety.unwrap();
+    let analysis = Analysis::of(&relaxed.model).unwrap();
+    assert_eq!(analysis.slip(0, safety * 0.999_999), 0.0);
+    assert_eq!(analysis.slip(0, safety * 1.000_001), 1.0);
+    for (required, share) in [(safety * 0.999_999, 0), (safety * 1.000_001, 1)] {
+        let settings = Settings { samples: 1000, seed: 1, slip_safety: required };
+        let counted = scatter(relaxed.model.clone(), settings).unwrap().slips[0].counted_below_required;
+        assert_eq!(counted.count, share * 1000);
+    }
+    assert_eq!(fresh.model.rings, relaxed.model.rings);
+    let said = |understood: &Understood, words: &str| {
+        understood.assumed.iter().any(|sentence| sentence.contains(words))
+    };
+    assert!(said(&relaxed, "40 % of the pressure") && !said(&fresh, "relaxation"));
+    let (turning, _) = of(&JOINT.replace("torque:", "speed: 900 rpm, torque:"));
+    assert!(said(&turning, "not its speed") && !said(&fresh, "not its speed"));
+}
+
 #[test]
 fn faults_of_the_population_are_told_with_their_place() {
     for (keys, message) in [
@@ -405,4 +436,48 @@ fn a_list_that_is_not_there_is_told() {
     let output = hubgrip_in(here.path(), &["scatter", "joint.yaml"]);
     assert_eq!(output.status.code(), Some(2));
     assert!(stderr(&output).contains("nowhere.csv"), "{}", stderr(&output));
+}
+
+#[test]
+fn slips_of_the_command_line_are_told() {
+    let here = tempfile::tempdir().unwrap();
+    std::fs::write(here.path().join("joint.yaml"), JOINT).unwrap();
+    std::fs::write(here.path().join("holes.csv"), "diameter_mm\n6.001\n").unwrap();
+    let before = std::fs::read(here.path().join("joint.yaml")).unwrap();
+    for (arguments, message) in [
+        (vec!["--samples", "-5"], "below zero"),
+        (vec!["--samples", "many"], "write a whole number"),
+        (vec!["--samples", "0"], "1 to 10000000000"),
+        (vec!["--seed", "1.5"], "write a whole number"),
+        (vec!["-o", "joint.yaml"], "would be overwritten"),
+        (vec!["-o", "no/page.html"], "the folder no does not exist"),
+        (vec!["--set", "population.hole={measured: holes.csv}"], "5 % off the diameter of the joint, 60 mm"),
+        (vec!["--set", "population.hole={measured: .}"], "this is a folder"),
+        (vec!["--set", "require.allow=plastic"], "--set require.allow: "),
+    ] {
+        let all: Vec<&str> = ["scatter", "joint.yaml"].into_iter().chain(arguments).collect();
+        let output = hubgrip_in(here.path(), &all);
+        assert_eq!((output.status.code(), stdout(&output).as_str()), (Some(2), ""), "{all:?}");
+        assert!(stderr(&output).contains(message), "{all:?}: {}", stderr(&output));
+    }
+    assert_eq!(std::fs::read(here.path().join("joint.yaml")).unwrap(), before);
+    let run = |more: &[&str]| {
+        let output = hubgrip_in(here.path(), &[&["scatter", "joint.yaml", "--samples"], more].concat());
+        assert_eq!(output.status.code(), Some(0), "{}", stderr(&output));
+        stdout(&output)
+    };
+    assert_eq!(run(&["1e4"]), run(&["10_000"]));
+    let text = run(&["1e4", "--set", "population.hole={cp: 1.33, cpk: -0.2}"]);
+    assert!(text.split_whitespace().collect::<Vec<_>>().join(" ").contains("cpk is below zero"), "{text}");
+}
+
+/// What the model cannot take of a population is told where it stands.
+#[test]
+fn a_population_that_cannot_be_worked_out_is_refused_at_its_key() {
+    let here = tempfile::tempdir().unwrap();
+    let text = JOINT.to_owned() + "population:\n  friction: {mean: 0.1, sd: 0.02, truncated: -0.01 to 0.2}\n";
+    std::fs::write(here.path().join("joint.yaml"), text).unwrap();
+    let output = hubgrip_in(here.path(), &["scatter", "joint.yaml"]);
+    let error = stderr(&output);
+    assert!(output.status.code() == Some(2) && error.starts_with("joint.yaml:11:3: "), "{error}");
 }

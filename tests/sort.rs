@@ -91,22 +91,34 @@ fn the_text_fits_a_terminal_and_says_what_was_assumed() {
 fn without_a_band_the_requirements_give_it() {
     let here = tempfile::tempdir().unwrap();
     let file = example("measured-lots.yaml");
-    let output = hubgrip_in(here.path(), &["sort", &file, "--groups", "2", "--json"]);
-    let value: serde_json::Value = serde_json::from_str(&stdout(&output)).unwrap();
-    assert_eq!(value["band"]["source"], "from the requirements of the joint file");
-    let (low, high) = (value["band"]["low_um"].as_f64().unwrap(), value["band"]["high_um"].as_f64().unwrap());
-    // At both ends the check of a measured pair just meets its requirement.
-    for (interference, key) in [(low, "slip"), (high, "yield")] {
-        let shaft = 40.0 + interference * 1e-3;
-        let set = format!("fit={{measured: {{hole: 40 mm, shaft: {shaft:.9} mm, uncertainty: 0 um}}}}");
-        let output = hubgrip_in(here.path(), &["check", &file, "--json", "--set", &set]);
-        let found: serde_json::Value = serde_json::from_str(&stdout(&output)).unwrap();
-        let question = if key == "slip" { "hold" } else { "strength" };
-        let verdicts = found["verdicts"].as_array().unwrap().iter().filter(|v| v["question"] == question);
-        let margin = verdicts
-            .map(|v| v["found"].as_f64().unwrap_or(f64::MAX) / v["required"].as_f64().unwrap())
-            .fold(f64::MAX, f64::min);
-        assert!((margin - 1.0).abs() < 1e-4, "{key}: {margin}");
+    for (more, questions) in [
+        (vec![], ["hold", "strength"]),
+        // Speed loosens and stresses, a relaxed pressure holds less: the band is that of `choose`.
+        (vec!["duty.0.speed=9000 rpm", "duty.0.relaxation=0.8"], ["hold", "strength"]),
+        (vec!["require.press_force=60 kN"], ["hold", "assembly"]),
+        (vec!["duty.0.bending_moment=20 N.m", "require.slip_safety=0.3"], ["hold", "strength"]),
+    ] {
+        let set: Vec<&str> = more.iter().flat_map(|set| ["--set", *set]).collect();
+        let output =
+            hubgrip_in(here.path(), &[&["sort", &file, "--groups", "2", "--json"], set.as_slice()].concat());
+        let value: serde_json::Value = serde_json::from_str(&stdout(&output)).unwrap_or_default();
+        assert!(value.is_object(), "{more:?}: {}", stderr(&output));
+        assert_eq!(value["band"]["source"], "from the requirements of the joint file");
+        let ends = ["low_um", "high_um"].map(|end| value["band"][end].as_f64().unwrap());
+        // At both ends the check of a measured pair just meets its requirement.
+        for (interference, question) in ends.into_iter().zip(questions) {
+            let shaft = 40.0 + interference * 1e-3;
+            let fit = format!("fit={{measured: {{hole: 40 mm, shaft: {shaft:.9} mm, uncertainty: 0 um}}}}");
+            let words = [&["check", &file, "--json", "--set", &fit], set.as_slice()].concat();
+            let found: serde_json::Value =
+                serde_json::from_str(&stdout(&hubgrip_in(here.path(), &words))).unwrap();
+            let verdicts = found["verdicts"].as_array().unwrap().iter().filter(|v| v["question"] == question);
+            let margin = verdicts
+                .map(|v| v["found"].as_f64().unwrap_or(f64::MAX) / v["required"].as_f64().unwrap())
+                .map(|margin| if question == "assembly" { 1.0 / margin } else { margin })
+                .fold(f64::MAX, f64::min);
+            assert!((margin - 1.0).abs() < 1e-4, "{more:?} {question}: {margin}");
+        }
     }
 }
 
@@ -127,4 +139,79 @@ fn what_cannot_be_sorted_is_told() {
         assert_eq!(output.status.code(), Some(2), "{all:?}: {}", stdout(&output));
         assert!(stderr(&output).contains(message), "{all:?}: {}", stderr(&output));
     }
+}
+
+/// Lists as spreadsheets of other countries write them give the same groups; what cannot be a list of this joint is told
+/// with its line.
+#[test]
+fn lists_are_read_as_they_come_or_refused() {
+    let here = tempfile::tempdir().unwrap();
+    let file = example("measured-lots.yaml");
+    let run = |list: &str, more: &[&str]| {
+        std::fs::write(here.path().join("holes.csv"), list).unwrap();
+        let shafts = example("shafts.csv");
+        let words = ["sort", &file, "--groups", "2", "--band", "52 to 66 um", "--holes", "holes.csv"];
+        hubgrip_in(here.path(), &[&words, &["--shafts", &shafts][..], more].concat())
+    };
+    let plain = run("part,diameter_mm\nA,40.0096\nB,40.0102\n", &["--json"]);
+    assert!(plain.status.code().unwrap() < 2, "{}", stderr(&plain));
+    for list in [
+        "\u{feff}part,diameter_mm\r\nA,40.0096\r\nB,40.0102\r\n",
+        "\u{feff}part;diameter_mm\r\nA;40,0096\r\nB;40,0102\r\n",
+        "\"part\"\t\"diameter (mm)\"\nA\t\"40.0096\"\nB\t40,0102\n",
+        "part,diameter\nA,40.0096 mm\n\nB,40010.2 um\n",
+    ] {
+        assert_eq!(stdout(&run(list, &["--json"])), stdout(&plain), "{list}");
+    }
+    for (list, words) in [
+        ("", "no column of sizes"),
+        ("part,diameter_mm\n", "no part under the first row"),
+        ("40.01\n40.02\n", "no column of sizes"),
+        ("diameter_mm\n40,01\n", "line 2: the row has 2 cells"),
+        ("diameter_mm\n40.01\nabc\n", "line 3: abc mm is not a length"),
+        ("diameter\n40.01\n", "has no unit"),
+        ("part,diameter_mm\nA,0.0401\n", "part A: 40.1 um is more than 5 % off"),
+        ("diameter (um)\n9.6\n", "whole sizes, not deviations"),
+    ] {
+        let output = run(list, &[]);
+        assert_eq!((output.status.code(), stdout(&output).as_str()), (Some(2), ""), "{list:?}");
+        assert!(
+            stderr(&output).contains(words) && stderr(&output).contains("holes.csv"),
+            "{}",
+            stderr(&output)
+        );
+    }
+    std::fs::create_dir(here.path().join("folder")).unwrap();
+    let words = ["sort", &file, "--groups", "2", "--band", "52 to 66 um", "--holes", "folder"];
+    let output = hubgrip_in(here.path(), &words);
+    assert!(
+        output.status.code() == Some(2) && stderr(&output).contains("this is a folder"),
+        "{}",
+        stderr(&output)
+    );
+}
+
+#[test]
+fn slips_of_the_command_line_are_told() {
+    let here = tempfile::tempdir().unwrap();
+    let file = example("measured-lots.yaml");
+    std::fs::write(here.path().join("holes.csv"), "part,diameter_mm\nA,40.0096\n").unwrap();
+    for (arguments, message) in [
+        (vec!["--groups", "-1"], "below zero"),
+        (vec!["--groups", "two"], "write a whole number"),
+        (vec!["--groups", "1e9"], "1 to 100"),
+        (vec!["--groups", "2", "--pick-list", "-", "--json"], "both go to standard output"),
+        (vec!["--groups", "2", "--holes", "-", "--shafts", "-"], "standard input can be read only once"),
+        (vec!["--groups", "2", "--holes", "holes.csv", "--pick-list", "holes.csv"], "would be overwritten"),
+        (vec!["--groups", "2", "--pick-list", "no/pairs.csv"], "the folder no does not exist"),
+    ] {
+        let all: Vec<&str> = ["sort", &file, "--band", "52 to 66 um"].into_iter().chain(arguments).collect();
+        let output = hubgrip_in(here.path(), &all);
+        assert_eq!((output.status.code(), stdout(&output).as_str()), (Some(2), ""), "{all:?}");
+        assert!(stderr(&output).contains(message), "{all:?}: {}", stderr(&output));
+        assert!(!stderr(&output).contains(".hubgrip-"), "{}", stderr(&output));
+    }
+    // A band below zero is one of clearances.
+    let output = hubgrip_in(here.path(), &["sort", &file, "--groups", "2", "--band", "-10 to 60 um"]);
+    assert!(output.status.code().unwrap() < 2, "{}", stderr(&output));
 }

@@ -12,19 +12,21 @@ use indicatif::{ProgressBar, ProgressStyle};
 
 use super::exit::{Ending, Failure};
 use super::input::{self, WhatIf};
-use super::output::{Output, unwritable};
+use super::output::{Output, refuse_overwriting, unwritable};
 use super::whole::Whole;
 
 const EXAMPLE: &str = "\
 Example:
   hubgrip batch joints.csv --base joint.yaml -o findings.csv
   hubgrip batch joints.csv --base joint.yaml --columns slip_safety,hub_safety,ok
-  cut -d, -f1-4 joints.csv | hubgrip batch - --base joint.yaml --errors bad.csv > findings.csv
+  hubgrip batch - --base joint.yaml --errors bad.csv < joints.csv > findings.csv
 
 Columns are keys of a joint file, with the unit of plain numbers in brackets:
-  id,diameter (mm),hub.outer_diameter (mm),fit,hub.roughness (Rz um),duty.rated.torque (N.m)
-A column that is no key, such as id, is carried along with --keep id. An empty cell leaves the
-key to the base file. The exit code is 1 when a row misses a requirement or has an error.";
+  id,diameter (mm),hub.outer_diameter (mm),fit,hub.roughness (Rz um)
+A column that is no key, such as id, is carried along with --keep id. An empty
+cell leaves the key to the base file.
+
+Exit code 0: every row is met, 1: some row is not or has an error, 2: bad input.";
 
 /// Many joints: a row of a table each, a row of findings each
 #[derive(Debug, Args)]
@@ -62,6 +64,7 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     }
     let Some(table) = &arguments.table else { return Ok(Ending::Met) };
     refuse_one_place_for_two(arguments)?;
+    refuse_lost_inputs(table, arguments)?;
     let library = input::library(materials, output)?;
     let settings = Settings {
         base: arguments.base.as_deref().map(input::base).transpose()?,
@@ -92,7 +95,20 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     Ok(if summary.met == summary.rows { Ending::Met } else { Ending::NotMet })
 }
 
-/// Findings and errors cannot share a place, nor take that of the table.
+/// Table and base are not both standard input, and neither is written over.
+fn refuse_lost_inputs(table: &Path, arguments: &Arguments) -> Result<(), Failure> {
+    let base = arguments.base.as_deref();
+    if table == Path::new("-") && base == Some(Path::new("-")) {
+        return Err(Diagnostic::new("standard input can be read only once")
+            .with_help("give `-` for the table or for the base")
+            .into());
+    }
+    let inputs = || std::iter::once(table).chain(base);
+    refuse_overwriting("--output", arguments.output.as_deref(), inputs())?;
+    refuse_overwriting("--errors", arguments.errors.as_deref(), inputs())
+}
+
+/// Findings and errors cannot share a place.
 fn refuse_one_place_for_two(arguments: &Arguments) -> Result<(), Failure> {
     let real = |path: &PathBuf| path.canonicalize().unwrap_or_else(|_| path.clone());
     let is_stdout = |path: &PathBuf| path.as_os_str() == "-";
@@ -123,7 +139,10 @@ fn open(table: &Path) -> Result<(Box<dyn Read>, Option<u64>), Failure> {
     let opened = File::open(table).and_then(|file| Ok((file.metadata()?.len(), file)));
     match opened {
         Ok((size, file)) => Ok((Box::new(file), Some(size).filter(|size| *size > 0))),
-        Err(error) => Err(Diagnostic::new(format!("cannot read: {error}")).in_file(table).into()),
+        Err(error) => Err(Diagnostic::new(format!("cannot read: {error}"))
+            .in_file(table)
+            .with_help("name a table of comma-separated values, or `-` for standard input")
+            .into()),
     }
 }
 
@@ -189,8 +208,14 @@ fn refused(error: BatchError, arguments: &Arguments) -> Failure {
     let place = |path: &Option<PathBuf>| path.clone().unwrap_or_else(|| PathBuf::from("<stdout>"));
     match error {
         BatchError::Head(faults) => {
-            let at_head =
-                |fault: Diagnostic| if fault.place.is_some() { fault.in_file(&table) } else { fault };
+            // What is wrong with an option has no place in the table.
+            let at_head = |fault: Diagnostic| {
+                if fault.place.is_some() || !fault.message.starts_with("--") {
+                    fault.in_file(&table)
+                } else {
+                    fault
+                }
+            };
             Failure::Input(faults.into_iter().map(at_head).collect())
         }
         BatchError::Output(error) => unwritable(&place(&arguments.output), &error),

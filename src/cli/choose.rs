@@ -1,17 +1,22 @@
 //! `hubgrip choose`: the standard fits that meet the requirements, ranked.
 
+use std::io::{self, IsTerminal};
 use std::path::{Path, PathBuf};
 
 use clap::{Args, ValueEnum};
+use hubgrip::assembly::bearing_tables::BearingRing;
 use hubgrip::diagnostic::Diagnostic;
-use hubgrip::population::choose::{Choice, ChooseError, Options, Standard, choose};
+use hubgrip::joint::Joint;
+use hubgrip::population::choose::{Choice, ChooseError, Options, Standard, choose_telling};
+use hubgrip::population::kernel::KernelError;
 use hubgrip::quantity::UnitSystem;
 use hubgrip::report::choose as report;
 use hubgrip::tolerance::iso286::Grade;
+use indicatif::{ProgressBar, ProgressStyle};
 
 use super::exit::{Ending, Failure};
-use super::input::{self, WhatIf};
-use super::output::Output;
+use super::input::{self, Source, WhatIf};
+use super::output::{Output, refuse_overwriting};
 
 const EXAMPLE: &str = "\
 Example:
@@ -20,8 +25,12 @@ Example:
   hubgrip choose joint.yaml -o choice.html
   hubgrip choose joint.yaml --json | jq -r '.fits[].fit'
 
-The joint file needs no fit; one that it has is judged as well. It must state a load,
-such as duty: [{state: rated, torque: 900 N.m}]. The exit code is 1 when no fit is left.";
+The joint file needs no fit; one that it has is judged as well. It must state a
+load, such as duty: [{state: rated, torque: 900 N.m}]. Beside `bearing:` the
+classes of the other part are gone through. A required handling_time is followed
+for each fit, which takes seconds; --finest 6 takes less.
+
+Exit code 0: some fit, 1: none is left, 2: bad input.";
 
 /// Which standard fits meet the requirements, the cheapest first
 #[derive(Debug, Args)]
@@ -40,7 +49,7 @@ pub struct Arguments {
     #[arg(long, value_enum)]
     pub standard: Option<StandardName>,
     /// Finest grade of ISO 286 to choose from, such as 6; without it all, down to IT01
-    #[arg(long, value_name = "GRADE", value_parser = grade)]
+    #[arg(long, value_name = "GRADE", value_parser = grade, allow_negative_numbers = true)]
     pub finest: Option<Grade>,
     /// List every fit, mixed ones too
     #[arg(long)]
@@ -52,9 +61,7 @@ pub struct Arguments {
 /// Standard.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
 pub enum StandardName {
-    /// ISO 286
     Iso,
-    /// ANSI B4.1
     Ansi,
 }
 
@@ -64,15 +71,17 @@ fn grade(text: &str) -> Result<Grade, String> {
 }
 
 pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> Result<Ending, Failure> {
+    refuse_overwriting("--output", arguments.output.as_deref(), [arguments.file.as_path()])?;
     let library = input::library(materials, output)?;
-    let joint = input::joint_without_fit(&arguments.file, &arguments.what_if.set, &library)?;
+    let source = Source::of(&arguments.file, &arguments.what_if)?;
+    let joint = source.joint_without_fit(&library)?;
     let standard = match arguments.standard {
         Some(StandardName::Iso) => Standard::Iso286,
         Some(StandardName::Ansi) => Standard::AnsiB4_1,
-        None if joint.display == UnitSystem::Inch => Standard::AnsiB4_1,
+        None if joint.display == UnitSystem::Inch && joint.bearing.is_none() => Standard::AnsiB4_1,
         None => Standard::Iso286,
     };
-    if standard == Standard::AnsiB4_1 && arguments.finest.is_some() {
+    if standard == Standard::AnsiB4_1 && arguments.finest.is_some() && joint.bearing.is_none() {
         return Err(Diagnostic::new(
             "--finest names a grade of ISO 286, and the fits are those of ANSI B4.1",
         )
@@ -80,7 +89,14 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
         .into());
     }
     let options = Options { standard, finest: arguments.finest };
-    let choice = choose(joint, options).map_err(|error| refused(&error, &arguments.file))?;
+    let bar = bar(output);
+    let progress = |done: usize, all: usize| {
+        bar.set_length(all as u64);
+        bar.set_position(done as u64);
+    };
+    let choice = choose_telling(joint.clone(), options, &progress);
+    bar.finish_and_clear();
+    let choice = choice.map_err(|error| refused(&error, &joint, &source))?;
     match &arguments.output {
         Some(path) => {
             let page = report::html(&choice, arguments.all);
@@ -92,21 +108,58 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     Ok(ending(&choice))
 }
 
+/// A bar on standard error while times are worked out fit by fit, when it is a terminal and remarks are wanted.
+fn bar(output: &Output) -> ProgressBar {
+    if output.quiet() || !io::stderr().is_terminal() {
+        return ProgressBar::hidden();
+    }
+    let bar = ProgressBar::no_length();
+    match ProgressStyle::with_template("{bar:40} {pos} of {len} tightest pairs followed, {eta} left") {
+        Ok(style) => bar.with_style(style),
+        Err(_) => bar,
+    }
+}
+
 fn ending(choice: &Choice) -> Ending {
     if choice.fits.is_empty() { Ending::NotMet } else { Ending::Met }
 }
 
-fn refused(error: &ChooseError, file: &Path) -> Failure {
-    let diagnostic = Diagnostic::new(error.to_string()).in_file(input::shown(file));
-    let help = match error {
-        ChooseError::NoLoad => {
-            Some("add a state, such as `duty: [{state: rated, torque: 900 N.m}]`".to_owned())
+fn refused(error: &ChooseError, joint: &Joint, source: &Source<'_>) -> Failure {
+    match error {
+        ChooseError::Kernel(error) => {
+            let instead = match error {
+                KernelError::NotTwoRings(_) => {
+                    "choose works out two parts, shaft and hub; try fits of these rings with \
+                     `hubgrip check JOINT.yaml --set fits.0=H7/s6`"
+                }
+                KernelError::Stepped => {
+                    "choose for one section in place of the steps, then judge that fit on them with \
+                     `hubgrip check JOINT.yaml --set fit=H7/s6`"
+                }
+                _ => {
+                    "leave it out to choose an elastic fit, or try tighter ones with \
+                     `hubgrip check JOINT.yaml --set fit=H7/u6`"
+                }
+            };
+            source.refused_by_kernel(error, joint, instead)
         }
-        ChooseError::Tolerance(error) => error.help(),
-        _ => None,
-    };
-    match help {
-        Some(help) => diagnostic.with_help(help).into(),
-        None => diagnostic.into(),
+        ChooseError::NoLoad => {
+            let state = match joint.bearing {
+                Some(_) => "duty: [{state: rated, radial_force: 4 kN}]",
+                None => "duty: [{state: rated, torque: 900 N.m}]",
+            };
+            source.refused(error.to_string(), Some("duty"), Some(format!("give a load, such as `{state}`")))
+        }
+        ChooseError::Tolerance(tolerance) => {
+            source.refused(error.to_string(), Some("diameter"), tolerance.help())
+        }
+        ChooseError::RingByIso => source.refused(
+            error.to_string(),
+            joint.bearing.as_ref().map(|seat| match seat.ring {
+                BearingRing::Inner => "hub.bearing",
+                BearingRing::Outer => "shaft.bearing",
+            }),
+            Some("leave --standard ansi out".to_owned()),
+        ),
     }
 }

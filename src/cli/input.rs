@@ -9,6 +9,7 @@ use hubgrip::diagnostic::Diagnostic;
 use hubgrip::findings::{self, Findings};
 use hubgrip::joint::{Joint, read, set};
 use hubgrip::material::library::{self, Library};
+use hubgrip::population::kernel::KernelError;
 
 use super::exit::Failure;
 use super::output::Output;
@@ -54,10 +55,61 @@ pub fn joint(path: &Path, set: &[(String, String)], library: &Library) -> Result
     read::read_bytes(&bytes, &shown(path), set, library).map_err(Failure::Input)
 }
 
-/// Reads a joint file whose fit is still to be chosen.
-pub fn joint_without_fit(path: &Path, set: &[(String, String)], library: &Library) -> Result<Joint, Failure> {
-    let bytes = bytes(path)?;
-    read::read_without_fit(&bytes, &shown(path), set, library).map_err(Failure::Input)
+/// The joint file of a population command: its text stays at hand, to show the key that a joint is refused for.
+pub struct Source<'a> {
+    path: &'a Path,
+    set: &'a [(String, String)],
+    bytes: Vec<u8>,
+}
+
+impl<'a> Source<'a> {
+    /// Reads the file.
+    pub fn of(path: &'a Path, what_if: &'a WhatIf) -> Result<Self, Failure> {
+        Ok(Self { path, set: &what_if.set, bytes: bytes(path)? })
+    }
+
+    /// The joint in it.
+    pub fn joint(&self, library: &Library) -> Result<Joint, Failure> {
+        read::read_bytes(&self.bytes, &shown(self.path), self.set, library).map_err(Failure::Input)
+    }
+
+    /// The joint in it, whose fit is still to be chosen.
+    pub fn joint_without_fit(&self, library: &Library) -> Result<Joint, Failure> {
+        read::read_without_fit(&self.bytes, &shown(self.path), self.set, library).map_err(Failure::Input)
+    }
+
+    /// A file that the joint file names: it lies beside it.
+    pub fn beside(&self, name: &str) -> PathBuf {
+        self.path.parent().unwrap_or(Path::new("")).join(name)
+    }
+
+    /// A refusal of the joint, at the key that it is about.
+    pub fn refused(&self, message: impl Into<String>, key: Option<&str>, help: Option<String>) -> Failure {
+        let fault = Diagnostic::new(message).in_file(shown(self.path));
+        let fault = match help {
+            Some(help) => fault.with_help(help),
+            None => fault,
+        };
+        match key {
+            Some(key) => read::at_key(fault, &self.bytes, self.set, key).into(),
+            None => fault.into(),
+        }
+    }
+
+    /// What the kernel of the population commands refuses, with `instead` as the way out.
+    pub fn refused_by_kernel(&self, error: &KernelError, joint: &Joint, instead: &str) -> Failure {
+        let key = match error {
+            KernelError::NotTwoRings(_) => Some("rings"),
+            KernelError::Stepped => {
+                let first = joint.slices.first().map(|slice| slice.hub_outer_diameter);
+                let hub = joint.slices.iter().any(|slice| Some(slice.hub_outer_diameter) != first);
+                Some(if hub { "hub.steps" } else { "shaft.steps" })
+            }
+            KernelError::MayYield => Some("require.allow"),
+            _ => None,
+        };
+        self.refused(error.to_string(), key, key.map(|_| instead.to_owned()))
+    }
 }
 
 /// The text of a joint file that a table completes.

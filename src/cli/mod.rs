@@ -9,6 +9,7 @@ mod input;
 mod limits;
 mod materials;
 mod new;
+mod number;
 mod output;
 mod pressing;
 mod report;

@@ -85,12 +85,35 @@ impl Output {
     }
 }
 
+/// Refuses an output that is one of the inputs: it would be lost.
+pub fn refuse_overwriting<'a>(
+    option: &str,
+    output: Option<&Path>,
+    inputs: impl IntoIterator<Item = &'a Path>,
+) -> Result<(), Failure> {
+    let Some(output) = output.filter(|path| *path != Path::new("-")) else { return Ok(()) };
+    let Ok(real) = output.canonicalize() else { return Ok(()) };
+    let is_output = |input: &Path| input.canonicalize().is_ok_and(|input| input == real && input.is_file());
+    if inputs.into_iter().any(is_output) {
+        return Err(Diagnostic::new(format!("{option} names an input, which would be overwritten"))
+            .in_file(output)
+            .with_help("give the output a name of its own")
+            .into());
+    }
+    Ok(())
+}
+
 /// An output that cannot be written; a reader that has gone is no error.
 pub fn unwritable(path: &Path, error: &io::Error) -> Failure {
     if error.kind() == io::ErrorKind::BrokenPipe {
         return Failure::PipeClosed;
     }
-    Diagnostic::new(format!("cannot write: {error}"))
+    let folder = path.parent().filter(|folder| !folder.as_os_str().is_empty() && !folder.exists());
+    let cause = match folder {
+        Some(folder) => format!("the folder {} does not exist", folder.display()),
+        None => error.to_string(),
+    };
+    Diagnostic::new(format!("cannot write: {cause}"))
         .in_file(path)
         .with_help("give a file in a folder that exists and may be written")
         .into()

@@ -15,25 +15,29 @@ use rayon::prelude::*;
 
 use super::exit::{Ending, Failure};
 use super::input::{self, WhatIf};
-use super::output::Output;
+use super::number;
+use super::output::{Output, refuse_overwriting};
+use super::scatter::two_to_standard_output;
 
 const EXAMPLE: &str = "\
 Example:
   hubgrip pressing joint.yaml record.csv -o record.html
-  hubgrip pressing joint.yaml records/ --json | jq '.records[] | select(.ok | not) | .file'
+  hubgrip pressing joint.yaml records/ --json | jq '.records[] | .file, .ok'
   hubgrip pressing joint.yaml record.csv --touch-at 12.4mm --touch-within 0.5mm
 
 A record is a CSV file with a header:
   travel (mm);force (kN)
   0.00;0.02
   0.25;0.31
-The columns are found by their words (travel, position, stroke, displacement, path; force, load), the unit stands
-behind the name. Comments begin with #. The travel must not go back.
+The columns are found by their words (travel, position, stroke, displacement,
+path; force, load), the unit stands behind the name. Comments begin with #. The
+travel must not go back.
 
 Exit codes:
   0  every record is within the joint's window
   1  some record is out
-  2  some record cannot be read (the others are judged and shown all the same), or bad input";
+  2  some record cannot be read (the others are judged all the same), or bad
+     input";
 
 /// Judge recorded force-travel curves against the joint's window
 #[derive(Debug, Args)]
@@ -55,19 +59,19 @@ pub struct Arguments {
     #[arg(long, value_name = "LENGTH", default_value = "0 mm", allow_hyphen_values = true)]
     pub touch_at: String,
     /// How far the first touch may lie from there
-    #[arg(long, value_name = "LENGTH", default_value = "1 mm")]
+    #[arg(long, value_name = "LENGTH", default_value = "1 mm", allow_hyphen_values = true)]
     pub touch_within: String,
     /// Uncertainty of the force, per cent of the reading
-    #[arg(long, value_name = "PERCENT", default_value_t = 1.0)]
+    #[arg(long, value_name = "PERCENT", default_value_t = 1.0, value_parser = number::per_cent, allow_negative_numbers = true)]
     pub force_uncertainty: f64,
     /// Greatest fall of the force, per cent of the peak
-    #[arg(long, value_name = "PERCENT", default_value_t = 5.0)]
+    #[arg(long, value_name = "PERCENT", default_value_t = 5.0, value_parser = number::per_cent, allow_negative_numbers = true)]
     pub drop: f64,
     /// Greatest ripple from trough to crest, per cent of the peak
-    #[arg(long, value_name = "PERCENT", default_value_t = 5.0)]
+    #[arg(long, value_name = "PERCENT", default_value_t = 5.0, value_parser = number::per_cent, allow_negative_numbers = true)]
     pub ripple: f64,
     /// Greatest ratio of the slope at the end to that at the beginning
-    #[arg(long, value_name = "RATIO", default_value_t = 1.5)]
+    #[arg(long, value_name = "RATIO", default_value_t = 1.5, value_parser = number::plain, allow_negative_numbers = true)]
     pub steepening: f64,
     #[command(flatten)]
     pub what_if: WhatIf,
@@ -75,6 +79,11 @@ pub struct Arguments {
 
 pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> Result<Ending, Failure> {
     let settings = settings(arguments)?;
+    if arguments.json && arguments.output.as_deref().is_some_and(is_dash) {
+        return Err(two_to_standard_output());
+    }
+    let inputs = arguments.records.iter().chain([&arguments.file]).map(PathBuf::as_path);
+    refuse_overwriting("--output", arguments.output.as_deref(), inputs)?;
     let standard_input = arguments.records.iter().filter(|path| is_dash(path)).count();
     if standard_input + usize::from(is_dash(&arguments.file)) > 1 {
         return Err(Diagnostic::new("standard input can be read only once")
@@ -98,7 +107,7 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     }
     let told = Told { findings: &findings, window: &window, settings: &settings, entries: &entries };
     match &arguments.output {
-        Some(path) if arguments.json && path != Path::new("-") => {
+        Some(path) if arguments.json => {
             output.file(path, &report::html(&told))?;
             output.result(&report::json(&told))?;
         }

@@ -9,28 +9,33 @@ use hubgrip::joint::population::Variation;
 use hubgrip::material::Range;
 use hubgrip::population::distribution::Distribution;
 use hubgrip::population::distribution::measured::Part;
-use hubgrip::population::scatter::understood::limits;
+use hubgrip::population::scatter::understood::{is_of_another_joint, limits};
 use hubgrip::population::sort::groups::{Grouping, Lots};
 use hubgrip::population::sort::matching::greatest_matching;
-use hubgrip::population::sort::required_band;
-use hubgrip::quantity::{Kind, parse_range};
+use hubgrip::population::sort::{MOST_GROUPS, required_band};
+use hubgrip::quantity::{Kind, parse_range, written};
 use hubgrip::report::sort as report;
 use hubgrip::tolerance::Member;
 
 use super::exit::{Ending, Failure};
-use super::input::{self, WhatIf};
-use super::output::Output;
+use super::input::{self, Source, WhatIf};
+use super::number;
+use super::output::{Output, refuse_overwriting};
 use super::scatter::{parts, understood_of};
 
 const EXAMPLE: &str = "\
 Example:
   hubgrip sort joint.yaml --groups 4 --band \"30 to 45 um\"
   hubgrip sort joint.yaml --groups 3 --by share
-  hubgrip sort joint.yaml --holes holes.csv --shafts shafts.csv --band \"30 to 40 um\" --pick-list pairs.csv
+  hubgrip sort joint.yaml --holes holes.csv --shafts shafts.csv \\
+    --band \"30 to 40 um\" --pick-list pairs.csv
 
-Without --band the band is what the requirements of the joint file allow. A list of measured
-parts is a CSV file with a column diameter_mm (or diameter, with the unit behind each number)
-and, if wanted, a column part. The exit code is 1 when pairs of a group may leave the band.";
+Without --band the band is what the requirements of the joint file allow. A list
+of measured parts is a CSV file with a column diameter_mm (or diameter, with the
+unit behind each number) and, if wanted, a column part.
+
+Exit code 0: every pair of a group is in the band, 1: some may leave it, 2: bad
+input.";
 
 /// Selective assembly: grouping parts so that a coarse tolerance gives a fine fit
 #[derive(Debug, Args)]
@@ -40,18 +45,18 @@ pub struct Arguments {
     #[arg(value_name = "JOINT.yaml")]
     pub file: PathBuf,
     /// Number of groups; without it the fewest that keep every pair within the band
-    #[arg(long, value_name = "N")]
-    pub groups: Option<usize>,
+    #[arg(long, value_name = "N", value_parser = number::whole, allow_negative_numbers = true)]
+    pub groups: Option<u64>,
     /// Limits of the groups: of equal width, or with equal shares of the parts
     #[arg(long, value_enum, default_value_t = By::Width)]
     pub by: By,
     /// Wanted interference, such as "30 to 45 um"; without it what the requirements allow
-    #[arg(long, value_name = "RANGE")]
+    #[arg(long, value_name = "RANGE", allow_hyphen_values = true)]
     pub band: Option<String>,
-    /// Measured holes, CSV
+    /// Measured holes, CSV; - is standard input
     #[arg(long, value_name = "HOLES.csv")]
     pub holes: Option<PathBuf>,
-    /// Measured shafts, CSV
+    /// Measured shafts, CSV; - is standard input
     #[arg(long, value_name = "SHAFTS.csv")]
     pub shafts: Option<PathBuf>,
     /// Pick list of the measured parts, CSV; - is standard output
@@ -72,14 +77,15 @@ pub enum By {
 }
 
 pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> Result<Ending, Failure> {
+    refuse_lost_streams(arguments)?;
     let library = input::library(materials, output)?;
-    let joint = input::joint(&arguments.file, &arguments.what_if.set, &library)?;
+    let source = Source::of(&arguments.file, &arguments.what_if)?;
+    let joint = source.joint(&library)?;
     let shown = input::shown(&arguments.file);
     let refused = |message: String| Failure::from(Diagnostic::new(message).in_file(&shown));
-    let folder = arguments.file.parent().unwrap_or(Path::new("")).to_path_buf();
-    let holes = list(arguments.holes.as_deref(), joint.population.hole.as_ref(), &folder)?;
-    let shafts = list(arguments.shafts.as_deref(), joint.population.shaft.as_ref(), &folder)?;
-    let understood = understood_of(&joint, &arguments.file)?;
+    let holes = list(arguments.holes.as_deref(), joint.population.hole.as_ref(), &source, joint.diameter)?;
+    let shafts = list(arguments.shafts.as_deref(), joint.population.shaft.as_ref(), &source, joint.diameter)?;
+    let understood = understood_of(&joint, &source)?;
     let population = &understood.model.population;
     let of = |parts: &Option<Vec<Part>>, plan: &Distribution| match parts {
         Some(parts) => {
@@ -94,14 +100,15 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
         hole: limits(&joint, Member::Hole),
         shaft: limits(&joint, Member::Shaft),
     };
-    let (band, band_source) = band(arguments.band.as_deref(), &joint)?;
+    let (band, band_source) = band(arguments.band.as_deref(), &joint, &source)?;
     let fewest = lots.fewest(band);
     let grouping = match arguments.by {
         By::Width => Grouping::EqualWidth,
         By::Share => Grouping::EqualShare,
     };
     let count = match (arguments.groups, fewest) {
-        (Some(count), _) | (None, Some(count)) => count,
+        (Some(count), _) => groups_of(count)?,
+        (None, Some(count)) => count,
         (None, None) => {
             return Err(Diagnostic::new("no number of groups brings every pair into the band")
                 .with_help("give --groups N, or a wider --band")
@@ -153,22 +160,71 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     Ok(ending(groups.all_within()))
 }
 
+/// The number of groups asked for.
+fn groups_of(count: u64) -> Result<usize, Failure> {
+    usize::try_from(count).ok().filter(|count| (1..=MOST_GROUPS).contains(count)).ok_or_else(|| {
+        Diagnostic::new(format!("--groups {count}: {count} groups are not possible"))
+            .with_help(format!("write 1 to {MOST_GROUPS}, or leave --groups out for the fewest that do"))
+            .into()
+    })
+}
+
+/// Standard input can be read once, standard output holds one thing, and no input is written over.
+fn refuse_lost_streams(arguments: &Arguments) -> Result<(), Failure> {
+    let is_dash = |path: &Path| path == Path::new("-");
+    let inputs = || {
+        let lists = [arguments.holes.as_deref(), arguments.shafts.as_deref()];
+        std::iter::once(arguments.file.as_path()).chain(lists.into_iter().flatten())
+    };
+    if inputs().filter(|path| is_dash(path)).count() > 1 {
+        return Err(Diagnostic::new("standard input can be read only once")
+            .with_help("give `-` for one of joint file, holes and shafts")
+            .into());
+    }
+    if arguments.json && arguments.pick_list.as_deref().is_some_and(is_dash) {
+        return Err(Diagnostic::new(
+            "the pick list (--pick-list -) and the JSON (--json) would both go to standard output",
+        )
+        .with_help("give the pick list a file, such as --pick-list OUT.csv, or leave one of the two out")
+        .into());
+    }
+    refuse_overwriting("--pick-list", arguments.pick_list.as_deref(), inputs())
+}
+
 fn ending(within: bool) -> Ending {
     if within { Ending::Met } else { Ending::NotMet }
 }
 
 /// The measured parts named on the command line, else those of the joint file.
-fn list(given: Option<&Path>, plan: Option<&Variation>, folder: &Path) -> Result<Option<Vec<Part>>, Failure> {
+fn list(
+    given: Option<&Path>,
+    plan: Option<&Variation>,
+    source: &Source<'_>,
+    nominal: f64,
+) -> Result<Option<Vec<Part>>, Failure> {
     let path = match (given, plan) {
         (Some(path), _) => path.to_path_buf(),
-        (None, Some(Variation::Measured(name))) => folder.join(name),
+        (None, Some(Variation::Measured(name))) => source.beside(name),
         _ => return Ok(None),
     };
-    Ok(Some(parts(&path, Kind::Length)?))
+    let parts = parts(&path, Kind::Length)?;
+    if let Some(part) = parts.iter().find(|part| is_of_another_joint(part.value, nominal)) {
+        let text = |size| written(Kind::Length, size);
+        return Err(Diagnostic::new(format!(
+            "part {}: {} is more than 5 % off the diameter of the joint, {}",
+            part.name,
+            text(part.value),
+            text(nominal)
+        ))
+        .in_file(input::shown(&path))
+        .with_help("write whole sizes, not deviations, and check the unit in the first row")
+        .into());
+    }
+    Ok(Some(parts))
 }
 
 /// The wanted band, m, with where it comes from.
-fn band(given: Option<&str>, joint: &Joint) -> Result<(Range, &'static str), Failure> {
+fn band(given: Option<&str>, joint: &Joint, source: &Source<'_>) -> Result<(Range, &'static str), Failure> {
     if let Some(text) = given {
         let (low, high) = parse_range(Kind::Length, text).map_err(|error| {
             Diagnostic::new(format!("--band {text}: {error}"))
@@ -181,14 +237,20 @@ fn band(given: Option<&str>, joint: &Joint) -> Result<(Range, &'static str), Fai
         }
         return Ok((Range { low, high }, "as given"));
     }
-    let (low, high) = required_band(joint).map_err(|error| Diagnostic::new(error.to_string()))?;
+    let (low, high) = required_band(joint).map_err(|error| source.refused(error.to_string(), None, None))?;
     let tightest = joint.fits.first().map_or(0.0, |fit| fit.limits.interference().tightest);
     let low = low.unwrap_or(0.0);
     let high = high.unwrap_or(tightest);
     if low >= high {
-        return Err(Diagnostic::new("no interference meets all requirements of the joint file")
-            .with_help("give --band, or change the joint: `hubgrip choose` says what blocks")
-            .into());
+        let help = "give --band, or change the joint: `hubgrip choose` says what blocks";
+        let fault = "no interference meets all requirements of the joint file";
+        return Err(source.refused(fault, None, Some(help.to_owned())));
     }
-    Ok((Range { low, high }, "from the requirements of the joint file"))
+    let timed = joint.assembly.practice.handling_time.is_some();
+    let named = if timed && (joint.assembly.heats() || joint.assembly.chills()) {
+        "from the requirements of the joint file without its handling time"
+    } else {
+        "from the requirements of the joint file"
+    };
+    Ok((Range { low, high }, named))
 }

@@ -17,7 +17,7 @@ use super::diagnose::Faults;
 use super::draft::Draft;
 use super::file::{JointFile, VERSION};
 use super::grow::tree_of;
-use super::tree::{Content, Tree};
+use super::tree::{Content, Origin, Tree};
 use super::{Joint, place, set, validate};
 use crate::diagnostic::Diagnostic;
 use crate::material::library::Library;
@@ -127,6 +127,39 @@ pub fn read_without_fit(
 ) -> Result<Joint, Vec<Diagnostic>> {
     let text = text_of(bytes).map_err(|fault| vec![fault.in_file(file)])?;
     read_as(text, file, set, library, FitKey::Optional)
+}
+
+/// A fault of a joint that was read well, at the key that it is about: dotted, such as `require.allow` or
+/// `hub.steps`.
+///
+/// The fault stays as it is where the key is not in the file; one that the changes made is named in the message.
+///
+/// # Example
+/// ```
+/// use hubgrip::diagnostic::Diagnostic;
+/// use hubgrip::joint::read::at_key;
+///
+/// let text = b"joint_file: 1\nrequire:\n  allow: plastic\n";
+/// let fault = at_key(Diagnostic::new("not here"), text, &[], "require.allow");
+/// assert_eq!(fault.place.map(|place| (place.line, place.column)), Some((3, 3)));
+/// ```
+pub fn at_key(fault: Diagnostic, text: &[u8], set: &[(String, String)], key: &str) -> Diagnostic {
+    let Ok(text) = text_of(text) else { return fault };
+    let plain = text.strip_prefix('\u{feff}').unwrap_or(text);
+    let Ok(mut tree) = tree_of(plain) else { return fault };
+    if set::apply(&mut tree, set).is_err() {
+        return fault;
+    }
+    let found = key.split('.').try_fold(tree.root(), |node, key| tree.get(node, key));
+    let Some(node) = found else { return fault };
+    if let Origin::Set(number) = tree.origin(node) {
+        let named = set.get(number).map_or(key, |(key, _)| key.as_str());
+        return Diagnostic { message: format!("--set {named}: {}", fault.message), ..fault };
+    }
+    match place::of_node(plain, &tree, node, place::Part::Key) {
+        Some(span) => fault.at(plain, span.place, span.width),
+        None => fault,
+    }
 }
 
 fn understood(tree: &Tree, faults: &Faults, library: &Library, fit: FitKey) -> Option<Joint> {

@@ -1,27 +1,35 @@
 //! Which standard fits meet the requirements of a joint, the cheapest first.
 //!
 //! Every pair of classes that the standard defines at the diameter is held against the allowed window of
-//! interference; those inside are evaluated in full at both extremes. When no fit is left, [`Choice::changes`]
-//! says by how little one dimension, strength or friction would have to change to let one in.
+//! interference; those inside are evaluated in full at both extremes. A bearing ring has its limits from ISO 492, so
+//! there the classes of its seat alone are gone through. When no fit is left, [`Choice::changes`] says by how little
+//! one dimension, strength or friction would have to change to let one in.
 
 mod candidate;
 mod change;
 pub(in crate::population) mod judge;
+mod ranking;
+mod seat;
+mod timing;
+
+use std::cmp::Ordering;
 
 use thiserror::Error;
 
-use crate::findings::{self, FindingsError};
-use crate::joint::{Fit, Joint};
+use crate::joint::Joint;
 use crate::tolerance::iso286::Grade;
-use crate::tolerance::{FitCallout, FitLimits, ToleranceError};
+use crate::tolerance::{FitLimits, ToleranceError};
 
 use super::kernel::KernelError;
+use candidate::Candidates;
 pub use candidate::{Basis, Standard};
-use candidate::{Candidate, Candidates};
 use change::Wanted;
 pub use change::{Change, Opening, Parameter, WORKSHOP};
 use judge::{Judge, Made};
 pub use judge::{Requirement, Subject, Window};
+use ranking::{Ranked, Rules};
+pub use seat::SeatEffect;
+pub use timing::Progress;
 
 /// Which fits are gone through.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -36,17 +44,19 @@ pub struct Options {
 #[derive(Debug, Clone, PartialEq, Error)]
 pub enum ChooseError {
     /// Without a load every fit holds.
-    #[error("no service state has a torque or an axial force, so nothing says how tight the fit must be")]
+    #[error("no service state loads the joint, so nothing says how tight the fit must be")]
     NoLoad,
+    /// The limits of a bearing ring are in one standard only.
+    #[error(
+        "the bearing ring has its limits from ISO 492, which goes with seats of ISO 286, not with ANSI B4.1"
+    )]
+    RingByIso,
     /// The joint is not one that the kernel evaluates.
     #[error(transparent)]
     Kernel(#[from] KernelError),
     /// The diameter is outside the standard.
     #[error(transparent)]
     Tolerance(#[from] ToleranceError),
-    /// The full computation was refused.
-    #[error(transparent)]
-    Findings(#[from] FindingsError),
 }
 
 /// The fits that meet the requirements, or what stands in the way.
@@ -58,18 +68,22 @@ pub struct Choice {
     pub options: Options,
     /// How many fits were gone through.
     pub considered: usize,
-    /// Every requirement with its edge.
+    /// Every requirement with its edge; last the handling time, which has none, where it is required.
     pub requirements: Vec<Requirement>,
     /// The interferences that meet them all.
     pub window: Window,
     /// The fits that meet them all: the lowest relative cost first, then preferred ones, then hole basis before
     /// shaft basis before mixed, then the wider margin.
     pub fits: Vec<ChosenFit>,
+    /// How many fits meet everything but the time from oven or bath to seated.
+    pub short_of_time: usize,
     /// The fit written in the joint file.
     pub given: Option<ChosenFit>,
-    /// When no fit meets them: the one that comes nearest, of grade IT5 or coarser.
+    /// When no fit meets them: the one that comes nearest, of grade IT5 or coarser; where the handling time alone
+    /// leaves none, the one with the longest time.
     pub nearest: Option<ChosenFit>,
-    /// When no fit meets them: the smallest changes that let one in.
+    /// When no fit meets them: the smallest changes that let one in. None are sought where the handling time alone
+    /// leaves no fit.
     pub changes: Vec<Change>,
 }
 
@@ -84,13 +98,14 @@ pub struct ChosenFit {
     pub loosest: f64,
     /// Interference of the tightest pair, m.
     pub tightest: f64,
-    /// Which member is the basis; none for a fit that names no classes.
+    /// Which member is the basis; none for a fit that names no classes, and for a seat, whose ring is no choice.
     pub basis: Option<Basis>,
     /// The standards that prefer it.
     pub preferred_by: Vec<&'static str>,
     /// Finest grade of ISO 286 in it.
     pub finest_grade: Option<Grade>,
-    /// Cost of making it relative to H7 with a shaft of grade 6; none when a limit has no width.
+    /// Cost of making it relative to H7 with a shaft of grade 6, of a seat relative to that member alone; none when a
+    /// limit has no width.
     pub relative_cost: Option<f64>,
     /// What it gives for each requirement, in their order: found, and whether that is enough.
     pub found: Vec<(Option<f64>, bool)>,
@@ -98,12 +113,16 @@ pub struct ChosenFit {
     pub margin_below: f64,
     /// Interference of the tightest pair below the greatest, m; none when nothing limits it.
     pub margin_above: Option<f64>,
+    /// What it does to the bearing, when a ring of one is fitted.
+    pub seat: Option<SeatEffect>,
+    /// Why the full computation refuses it; such a fit meets nothing.
+    pub refused: Option<String>,
 }
 
 impl ChosenFit {
     /// Whether it meets every requirement.
     pub fn meets_all(&self) -> bool {
-        self.found.iter().all(|(_, ok)| *ok)
+        self.refused.is_none() && self.found.iter().all(|(_, ok)| *ok)
     }
 
     /// The smaller of its two margins, m.
@@ -113,8 +132,7 @@ impl ChosenFit {
 
     /// What a user of its classes should know; full sentences.
     pub fn remarks(&self) -> Vec<String> {
-        let resolved = FitCallout::parse(&self.callout).and_then(|fit| fit.resolve(self.limits.nominal));
-        resolved.map(|resolved| resolved.remarks).unwrap_or_default()
+        candidate::remarks(&self.callout, self.limits.nominal)
     }
 }
 
@@ -145,30 +163,53 @@ impl ChosenFit {
 /// assert!(choice.fits.iter().all(|fit| fit.loosest >= choice.window.least));
 /// ```
 pub fn choose(joint: Joint, options: Options) -> Result<Choice, ChooseError> {
-    if joint.duty.iter().all(|state| state.torque == 0.0 && state.axial_force == 0.0) {
+    choose_telling(joint, options, &|_, _| ())
+}
+
+/// As [`choose`], telling how far it has come; only where the handling time is required does it take long enough.
+///
+/// # Errors
+/// As [`choose`].
+pub fn choose_telling(joint: Joint, options: Options, progress: Progress<'_>) -> Result<Choice, ChooseError> {
+    let rules = Rules::of(&joint)?;
+    if !rules.requirements.iter().any(|wanted| wanted.subject.is_of_holding()) {
         return Err(ChooseError::NoLoad);
     }
-    let candidates = Candidates::at(joint.diameter, options.standard, options.finest)?;
-    let judge = Judge::of(&joint)?;
-    let requirements = judge.requirements();
-    let window = Judge::window(&requirements);
-    let fits = ranked(&judge, &requirements, &window, &candidates)?;
-    let given = match joint.fits.first() {
-        Some(fit) => Some(written_fit(&judge, &requirements, &window, fit)?),
-        None => None,
-    };
+    let candidates = Candidates::of(&joint, options.standard, options.finest)?;
+    let Ranked { fits, short_of_time } = rules.ranked(&candidates, progress);
+    let given = joint.fits.first().map(|fit| rules.written(fit));
     let considered = candidates.count();
-    let (nearest, changes) = if fits.is_empty() {
-        let workshop = workshop(&joint, options)?;
-        let any = Wanted::of(candidates);
-        let nearest = workshop.as_ref().unwrap_or(&any).nearest(&window);
-        let nearest =
-            nearest.map(|nearest| evaluated(&judge, &requirements, &window, nearest)).transpose()?;
-        (nearest, change::changes(&joint, &any, workshop.as_ref())?)
-    } else {
-        (None, Vec::new())
+    let (nearest, changes) = match short_of_time.iter().max_by(|a, b| by_time(a, b)) {
+        _ if !fits.is_empty() => (None, Vec::new()),
+        Some(longest) => (Some(longest.clone()), Vec::new()),
+        None => {
+            let workshop = workshop(&joint, options)?;
+            let any = Wanted::of(candidates);
+            let nearest = workshop.as_ref().unwrap_or(&any).nearest(&rules.window);
+            let nearest = nearest.map(|nearest| rules.evaluated_in_full(nearest));
+            (nearest, change::changes(&joint, &any, workshop.as_ref())?)
+        }
     };
-    Ok(Choice { considered, options, requirements, window, fits, given, nearest, changes, joint })
+    let (requirements, window) = (rules.requirements, rules.window);
+    let short_of_time = short_of_time.len();
+    Ok(Choice {
+        considered,
+        options,
+        requirements,
+        window,
+        fits,
+        short_of_time,
+        given,
+        nearest,
+        changes,
+        joint,
+    })
+}
+
+/// The order of fits by how much time they leave.
+fn by_time(a: &ChosenFit, b: &ChosenFit) -> Ordering {
+    let time = |fit: &ChosenFit| fit.found.last().and_then(|(found, _)| *found).unwrap_or(0.0);
+    time(a).total_cmp(&time(b))
 }
 
 /// The fits of grades that are made for fits, when the options let finer ones in as well.
@@ -177,114 +218,7 @@ fn workshop(joint: &Joint, options: Options) -> Result<Option<Wanted>, ChooseErr
     if options.standard != Standard::Iso286 || options.finest >= grade {
         return Ok(None);
     }
-    Ok(Some(Wanted::of(Candidates::at(joint.diameter, options.standard, grade)?)))
-}
-
-/// The fits that meet all requirements, best first.
-fn ranked(
-    judge: &Judge<'_>,
-    requirements: &[Requirement],
-    window: &Window,
-    candidates: &Candidates,
-) -> Result<Vec<ChosenFit>, ChooseError> {
-    // A rounding beyond the edge is let through to be judged in full.
-    let slack = 1e-15;
-    let near =
-        Window { least: window.least - slack, greatest: window.greatest.map(|greatest| greatest + slack) };
-    let mut fits = Vec::new();
-    for candidate in candidates.iter().filter(|candidate| near.holds(candidate.loosest, candidate.tightest)) {
-        let fit = evaluated(judge, requirements, window, candidate)?;
-        if fit.meets_all() {
-            fits.push((candidate, fit));
-        }
-    }
-    fits.sort_by(|(a, a_fit), (b, b_fit)| {
-        let plain = |fit: &ChosenFit| fit.preferred_by.is_empty();
-        a.cost
-            .total_cmp(&b.cost)
-            .then(plain(a_fit).cmp(&plain(b_fit)))
-            .then(a_fit.basis.cmp(&b_fit.basis))
-            .then(b_fit.least_margin().total_cmp(&a_fit.least_margin()))
-    });
-    Ok(fits.into_iter().map(|(_, fit)| fit).collect())
-}
-
-fn evaluated(
-    judge: &Judge<'_>,
-    requirements: &[Requirement],
-    window: &Window,
-    candidate: Candidate,
-) -> Result<ChosenFit, ChooseError> {
-    let callout = candidate.name.callout().to_string();
-    let found = found(judge, requirements, &callout, &candidate.limits)?;
-    Ok(ChosenFit {
-        callout,
-        limits: candidate.limits,
-        loosest: candidate.loosest,
-        tightest: candidate.tightest,
-        basis: Some(candidate.name.basis()),
-        preferred_by: candidate.name.preferred_by(),
-        finest_grade: candidate.name.finest_grade(),
-        relative_cost: Some(candidate.cost),
-        found,
-        margin_below: candidate.loosest - window.least,
-        margin_above: window.greatest.map(|greatest| greatest - candidate.tightest),
-    })
-}
-
-/// The fit of the joint file.
-fn written_fit(
-    judge: &Judge<'_>,
-    requirements: &[Requirement],
-    window: &Window,
-    fit: &Fit,
-) -> Result<ChosenFit, ChooseError> {
-    let interference = fit.limits.interference();
-    let name = candidate::name_of(&fit.callout);
-    Ok(ChosenFit {
-        callout: fit.callout.clone(),
-        limits: fit.limits,
-        loosest: interference.loosest,
-        tightest: interference.tightest,
-        basis: name.map(candidate::Name::basis),
-        preferred_by: name.map(candidate::Name::preferred_by).unwrap_or_default(),
-        finest_grade: name.and_then(candidate::Name::finest_grade),
-        relative_cost: candidate::cost_of(&fit.limits),
-        found: found(judge, requirements, &fit.callout, &fit.limits)?,
-        margin_below: interference.loosest - window.least,
-        margin_above: window.greatest.map(|greatest| greatest - interference.tightest),
-    })
-}
-
-/// A found number this close to the required one is judged by the full computation, whose rounding counts.
-const CLOSE: f64 = 1e-11;
-
-/// What a fit gives for each requirement, and whether that is enough.
-fn found(
-    judge: &Judge<'_>,
-    requirements: &[Requirement],
-    callout: &str,
-    limits: &FitLimits,
-) -> Result<Vec<(Option<f64>, bool)>, ChooseError> {
-    let interference = limits.interference();
-    let made = Made { loosest: interference.loosest, tightest: interference.tightest };
-    let mut found: Vec<(Option<f64>, bool)> = requirements
-        .iter()
-        .map(|requirement| (judge.found(requirement.subject, made), judge.meets(requirement.subject, made)))
-        .collect();
-    let close = requirements.iter().zip(&found).any(|(requirement, (found, _))| {
-        matches!((found, requirement.required), (Some(found), Some(required))
-            if (found - required).abs() <= CLOSE * required.abs())
-    });
-    if close {
-        let fit = Fit { callout: callout.to_owned(), limits: *limits, source: String::new() };
-        let full = findings::compute(Joint { fits: vec![fit], ..judge.joint().clone() })?;
-        // The verdicts stand in the order of the requirements, save that a press without a limit has one more.
-        for ((_, ok), verdict) in found.iter_mut().zip(&full.verdicts) {
-            *ok = verdict.ok;
-        }
-    }
-    Ok(found)
+    Ok(Some(Wanted::of(Candidates::of(joint, options.standard, grade)?)))
 }
 
 impl Choice {

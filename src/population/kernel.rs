@@ -44,9 +44,6 @@ pub enum KernelError {
     /// Its hub may yield by design.
     #[error("a joint whose hub may yield by design is not a plain joint: it must be elastic")]
     MayYield,
-    /// The pressure of a state relaxes.
-    #[error("a joint whose pressure relaxes is not a plain joint: every state must keep all of it")]
-    Relaxes,
     /// A ring was refused by the ring formulas.
     #[error(transparent)]
     Mechanics(#[from] MechanicsError),
@@ -197,6 +194,20 @@ pub struct StateValues {
     pub hub: RingValues,
 }
 
+impl StateValues {
+    /// What is left for holding when of the contact pressure only this share counts; the stresses stay.
+    #[must_use]
+    pub fn relaxed(self, share: f64) -> Self {
+        Self {
+            pressure: share * self.pressure,
+            torque_capacity: share * self.torque_capacity,
+            axial_capacity: share * self.axial_capacity,
+            slip_safety: self.slip_safety.map(|safety| share * safety),
+            ..self
+        }
+    }
+}
+
 impl PlainJoint {
     /// A joint prepared for evaluation; its fit, if it has one, is not looked at.
     ///
@@ -234,9 +245,6 @@ impl PlainJoint {
         }
         if joint.require.allow != Allow::Elastic {
             return Err(KernelError::MayYield);
-        }
-        if joint.duty.iter().any(|state| state.relaxation < 1.0) {
-            return Err(KernelError::Relaxes);
         }
         let shaft = PlainRing::inner(inner, joint.criterion)?;
         let hub = PlainRing::outer(outer, joint.criterion)?;
@@ -338,7 +346,7 @@ impl PlainJoint {
         })
     }
 
-    /// One pair in one condition; `effective` is the interference that grips, m.
+    /// One pair in one condition, as on its first day; `effective` is the interference that grips, m.
     #[inline]
     pub fn state(&self, condition: &Condition, effective: f64) -> StateValues {
         let pressure = self.pressure(condition, effective);
@@ -350,6 +358,12 @@ impl PlainJoint {
             shaft: self.shaft.values(pressure, &condition.shaft),
             hub: self.hub.values(pressure, &condition.hub),
         }
+    }
+
+    /// Contact pressure (Pa) that relaxation leaves for holding, of an interference that grips (m) at the loosest pair.
+    #[inline]
+    pub fn pressure_left(&self, condition: &Condition, effective: f64) -> f64 {
+        condition.relaxation * self.pressure(condition, effective)
     }
 
     /// Greatest press-in force (N) at a contact pressure (Pa), interference that grips (m) and friction.
@@ -370,12 +384,13 @@ impl PlainJoint {
         })?)
     }
 
-    /// Least safety against slip over the states that load the joint, with the number of its state.
+    /// Least safety against slip over the states that load the joint, with the number of its state; of the pressure
+    /// counts what relaxation leaves.
     pub fn least_slip_safety(&self, effective: f64) -> Option<(f64, usize)> {
         let mut least: Option<(f64, usize)> = None;
         for (number, condition) in self.states.iter().enumerate() {
             if let Some(gain) = condition.slip_safety_per_pressure {
-                let safety = gain * self.pressure(condition, effective);
+                let safety = gain * self.pressure_left(condition, effective);
                 if least.is_none_or(|(found, _)| safety < found) {
                     least = Some((safety, number));
                 }

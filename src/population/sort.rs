@@ -8,10 +8,11 @@ pub mod matching;
 
 use thiserror::Error;
 
-use crate::joint::{Joint, SmoothingAt};
-use crate::material::{Kind, Range};
+use crate::joint::Joint;
+use crate::material::Range;
+use crate::population::choose::judge::Judge;
 use crate::population::distribution::DistributionError;
-use crate::population::kernel::{Condition, KernelError, PlainJoint};
+use crate::population::kernel::KernelError;
 
 /// Sizes closer than this are the same, m: far below any measurement, far above rounding.
 pub const SAME: f64 = 1e-12;
@@ -47,46 +48,17 @@ pub enum SortError {
     Distribution(#[from] DistributionError),
 }
 
-/// The band of interference (m) in which a joint meets its requirements: least for the slip safety at the low
-/// friction, with the loss by smoothing when it is taken for holding; greatest for the strength of every ring.
+/// The band of interference (m) in which a joint meets its requirements: what `choose` finds as the allowed window, for
+/// the loosest pair at its lower end and for the tightest at its upper.
 ///
-/// An end that nothing requires is none.
+/// An end that nothing requires is none; where no interference meets them all, the ends do not rise. A handling time has
+/// no edge and is not counted.
 ///
 /// # Errors
 /// The joint is not a plain joint of two rings.
 pub fn required_band(joint: &Joint) -> Result<(Option<f64>, Option<f64>), KernelError> {
-    let plain = PlainJoint::of(joint)?;
-    let loss = |taken: bool| if taken { plain.smoothing_loss } else { 0.0 };
-    let holds = loss(joint.smoothing.at != SmoothingAt::None);
-    let stresses = loss(joint.smoothing.at == SmoothingAt::Both);
-    let least = plain
-        .states
-        .iter()
-        .filter_map(|state| {
-            let gain = state.slip_safety_per_pressure?;
-            let compliance = 1.0 / state.pressure_per_interference;
-            Some(compliance * joint.require.slip_safety / gain - state.thermal_interference + holds)
-        })
-        .reduce(f64::max);
-    let conditions = || std::iter::once(&plain.shop).chain(&plain.states);
-    let at = |pressure: f64| {
-        let made = |c: &Condition| pressure / c.pressure_per_interference - c.thermal_interference;
-        conditions().map(made).fold(f64::INFINITY, f64::min)
-    };
-    let greatest = joint
-        .rings
-        .iter()
-        .zip([&plain.shaft, &plain.hub])
-        .filter_map(|(ring, plain)| {
-            let required = match ring.material.kind {
-                Kind::Brittle => joint.require.fracture_safety,
-                Kind::Ductile | Kind::Polymer => joint.require.yield_safety,
-            };
-            Some(plain.pressure_at_strength()? / required)
-        })
-        .reduce(f64::min)
-        .map(|pressure| at(pressure) + stresses);
-    Ok((least, greatest))
+    let window = Judge::window(&Judge::of(joint)?.requirements());
+    Ok((Some(window.least).filter(|least| *least != f64::NEG_INFINITY), window.greatest))
 }
 
 /// Checks a band.

@@ -6,10 +6,12 @@ pub(in crate::report) mod words;
 
 use std::fmt::Write;
 
+use comfy_table::ContentArrangement;
+
 use crate::population::choose::{Choice, ChosenFit};
 use crate::quantity::{Measure, show};
 
-use super::terminal::{BAD, GOOD, heading, line, paragraph, plain, print_table, table};
+use super::terminal::{BAD, GOOD, WIDTH, heading, line, paragraph, plain, print_table, table};
 
 pub use json::to_json;
 pub use page::html;
@@ -68,6 +70,7 @@ fn requirements(out: &mut String, choice: &Choice) {
     let unit = words::unit(choice.joint.display);
     heading(out, &format!("Allowed interference: {}", words::window(choice)));
     let mut rows = table(&[format!("{unit}, pair"), "requirement".to_owned()]);
+    rows.set_content_arrangement(ContentArrangement::Dynamic).set_width(WIDTH as u16);
     for requirement in &choice.requirements {
         rows.add_row(vec![
             format!("{}, {}", words::edge(choice, requirement), words::pair(requirement)),
@@ -79,35 +82,41 @@ fn requirements(out: &mut String, choice: &Choice) {
 
 fn fits(out: &mut String, choice: &Choice, all: bool) {
     let (shown, left_out) = words::shown(choice, all);
-    let count = choice.fits.len();
-    heading(out, &format!("{count} of {} fits meet every requirement", choice.considered));
-    paragraph(out, "", &format!("{}; the lowest relative cost first.", words::counts(choice)));
+    heading(out, &words::heading(choice));
+    paragraph(
+        out,
+        "",
+        &words::sentence(&format!("{}; the lowest relative cost first.", words::counts(choice))),
+    );
     fit_table(out, choice, &shown);
     if left_out > 0 {
         paragraph(out, "", &format!("{left_out} more are listed with --all and with --json."));
     }
     line(out, "");
-    paragraph(
-        out,
-        "",
-        "* preferred by ISO 286-1 or ANSI B4.2. Below and above are to spare: the loosest pair over the least \
-         allowed, the tightest pair under the greatest. Safeties are the least over every state.",
-    );
-    paragraph(out, "", words::COST_NOTE);
+    paragraph(out, "", &words::list_note(choice));
+    paragraph(out, "", &words::cost_note(choice));
 }
 
 fn fit_table(out: &mut String, choice: &Choice, fits: &[&ChosenFit]) {
     let to = format!("to {}", words::unit(choice.joint.display));
-    let mut header =
-        ["fit", "cost", "from", &to, "below", "above", "slip", "shaft", "hub"].map(str::to_owned).to_vec();
+    let last = words::last_headings(choice);
+    // With a time and a bearing there is no room for what is to spare, which the page and the JSON have as well.
+    let spare = last.len() < 3;
+    let mut header = ["fit", "cost", "from", &to].map(str::to_owned).to_vec();
+    header.extend(["below", "above"].map(str::to_owned).into_iter().filter(|_| spare));
+    header.extend([words::hold_heading(choice), "shaft", "hub"].map(str::to_owned));
     header.extend(words::joining_heading(choice));
+    header.extend(last);
     let mut rows = table(&header);
     for fit in fits {
         let mark = if fit.preferred_by.is_empty() { "" } else { " *" };
         let row = words::row(choice, fit);
+        let last: Vec<String> = row.last_cells().map(str::to_owned).collect();
         let mut cells = vec![format!("{}{mark}", fit.callout), row.cost, row.loosest, row.tightest];
-        cells.extend([row.below, row.above, row.slip, row.shaft, row.hub]);
+        cells.extend([row.below, row.above].into_iter().filter(|_| spare));
+        cells.extend([row.hold, row.shaft, row.hub]);
         cells.extend(row.joining);
+        cells.extend(last);
         rows.add_row(cells);
     }
     print_table(out, rows, 1);
@@ -115,7 +124,7 @@ fn fit_table(out: &mut String, choice: &Choice, fits: &[&ChosenFit]) {
 
 fn nothing(out: &mut String, choice: &Choice) {
     line(out, "");
-    line(out, format!("{BAD}None of {} fits meets every requirement.{BAD:#}", choice.considered));
+    line(out, format!("{BAD}{}.{BAD:#}", words::heading(choice)));
     for said in words::blocking(choice) {
         paragraph(out, "", &said);
     }
@@ -136,12 +145,8 @@ fn nothing(out: &mut String, choice: &Choice) {
         );
     }
     heading(out, "Smallest change that lets a fit in, each for itself");
-    if choice.changes.is_empty() {
-        paragraph(
-            out,
-            "  ",
-            "none was found: no change up to four times a dimension or strength, or a friction of 1",
-        );
+    if let Some(note) = words::changes_note(choice) {
+        paragraph(out, "  ", note);
     }
     for change in &choice.changes {
         let key = change.parameter.key().map_or_else(String::new, |key| format!(" ({key})"));

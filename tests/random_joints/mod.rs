@@ -117,6 +117,11 @@ pub fn parts(random: &mut impl Rng) -> Parts {
             let moment = share * torque * random.random_range(0.01..0.6);
             more += &format!(", bending_moment: {moment:.3} N.m, radial_force: {:.0} N", 0.1 * axial);
         }
+        // Drawn from the numbers above, so that the stream of the other draws stays as it is.
+        let drawn = (share * 1e4) as u64 % 10;
+        if drawn < 3 {
+            more += &format!(", relaxation: {}", 0.5 + 0.15 * drawn as f64);
+        }
         duty.push(format!(
             "{{state: state {number}, torque: {:.3} N.m, axial_force: {axial:.1} N{more}}}",
             share * torque

@@ -34,6 +34,17 @@ pub(super) fn columns(
     {
         return Err(vec![other_separator(only, separator)]);
     }
+    let first = heads.first().map_or("", |head| head.trim());
+    if first.starts_with("joint_file:") || (heads.len() == 1 && first.starts_with('#')) {
+        let fault = Diagnostic::new("this is a joint file or a comment, not the head of a table");
+        let help = "the table comes first, the joint file as base: hubgrip batch TABLE.csv --base JOINT.yaml";
+        return Err(vec![Diagnostic { place: Some(Place { line: 1, column: 1 }), ..fault.with_help(help) }]);
+    }
+    if heads.iter().any(|head| head.contains(['\0', '\u{fffd}'])) {
+        let fault = Diagnostic::new("the head of the table is not text in UTF-8");
+        let fault = fault.with_help("save the table as comma-separated values in UTF-8");
+        return Err(vec![Diagnostic { place: Some(Place { line: 1, column: 1 }), ..fault }]);
+    }
     let mut columns: Vec<Column> = Vec::new();
     for head in heads {
         let mut column = split(head);

@@ -177,18 +177,20 @@ impl Outcome {
         self.hold && self.strength && self.assembly
     }
 
-    /// The findings of a joint; the full computation takes what the kernel does not cover.
+    /// The findings of a joint; the full computation takes what the kernel does not cover: other joints than those of
+    /// two rings, and a time from oven or bath to seated that may still be met.
     pub(super) fn of(joint: &Joint) -> Result<Self, String> {
         match Self::by_kernel(joint) {
-            Ok(outcome) => Ok(outcome),
-            Err(_) => match crate::findings::compute(joint.clone()) {
+            Ok((outcome, false)) => Ok(outcome),
+            Ok((_, true)) | Err(_) => match crate::findings::compute(joint.clone()) {
                 Ok(findings) => Ok(Self::of_findings(&findings)),
                 Err(error) => Err(error.to_string()),
             },
         }
     }
 
-    fn by_kernel(joint: &Joint) -> Result<Self, KernelError> {
+    /// The findings, and whether a handling time is left to be judged.
+    fn by_kernel(joint: &Joint) -> Result<(Self, bool), KernelError> {
         let judge = Judge::of(joint)?;
         let plain = judge.plain();
         let limits = joint.fits.first().map(|fit| fit.limits).ok_or(KernelError::NotTwoRings(0))?;
@@ -208,7 +210,7 @@ impl Outcome {
         let made = Made { loosest: interference.loosest, tightest: interference.tightest };
         let met = judge.verdicts(made);
         let (hub_temperature, shaft_temperature) = temperatures(judge.joining(), joint, made.tightest);
-        Ok(Self {
+        let outcome = Self {
             limits: Some(limits),
             loosest: Pair::of_values(&loosest),
             tightest: Pair::of_values(&tightest),
@@ -220,7 +222,8 @@ impl Outcome {
             hold: met.hold,
             strength: met.strength,
             assembly: met.assembly,
-        })
+        };
+        Ok((outcome, met.assembly && judge.handling_time().is_some()))
     }
 
     fn of_findings(findings: &Findings) -> Self {

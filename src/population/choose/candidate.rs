@@ -1,11 +1,16 @@
-//! The fits to choose from: every pair of classes that a standard defines at the diameter.
+//! The fits to choose from: every pair of classes that a standard defines at the diameter, or every class of the seat
+//! of a bearing ring.
 
+use std::fmt;
+
+use super::ChooseError;
+use crate::joint::{BearingSeat, Joint};
 use crate::tolerance::ansi_b4_1::{self, AnsiClass};
 use crate::tolerance::iso286::{
     Grade, Letter, PREFERRED_FITS_ANSI_B4_2, PREFERRED_FITS_ISO_286_1, PreferredFit, ToleranceClass,
     defined_classes, it_grade,
 };
-use crate::tolerance::{FitCallout, FitLimits, Limits, Member, ToleranceError};
+use crate::tolerance::{FitCallout, FitLimits, Limits, Member, MemberCallout, ToleranceError};
 
 /// Standard whose fits are gone through.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -49,24 +54,33 @@ pub(super) struct Candidate {
 /// How a fit is called.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub(super) enum Name {
-    Iso { hole: ToleranceClass, shaft: ToleranceClass },
+    Iso {
+        hole: ToleranceClass,
+        shaft: ToleranceClass,
+    },
     Ansi(AnsiClass),
+    /// The member that a bearing ring sits on or in.
+    Seat(ToleranceClass),
+}
+
+impl fmt::Display for Name {
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        match *self {
+            Self::Iso { hole, shaft } => FitCallout::Iso { hole, shaft }.fmt(f),
+            Self::Ansi(class) => FitCallout::Ansi(class).fmt(f),
+            Self::Seat(class) => class.fmt(f),
+        }
+    }
 }
 
 impl Name {
-    pub(super) fn callout(self) -> FitCallout {
+    pub(super) fn basis(self) -> Option<Basis> {
         match self {
-            Self::Iso { hole, shaft } => FitCallout::Iso { hole, shaft },
-            Self::Ansi(class) => FitCallout::Ansi(class),
-        }
-    }
-
-    pub(super) fn basis(self) -> Basis {
-        match self {
-            Self::Iso { hole, .. } if hole.letter == Letter::H => Basis::Hole,
-            Self::Iso { shaft, .. } if shaft.letter == Letter::H => Basis::Shaft,
-            Self::Iso { .. } => Basis::Mixed,
-            Self::Ansi(_) => Basis::Hole,
+            Self::Iso { hole, .. } if hole.letter == Letter::H => Some(Basis::Hole),
+            Self::Iso { shaft, .. } if shaft.letter == Letter::H => Some(Basis::Shaft),
+            Self::Iso { .. } => Some(Basis::Mixed),
+            Self::Ansi(_) => Some(Basis::Hole),
+            Self::Seat(_) => None,
         }
     }
 
@@ -84,6 +98,7 @@ impl Name {
     pub(super) fn finest_grade(self) -> Option<Grade> {
         match self {
             Self::Iso { hole, shaft } => Some(hole.grade.min(shaft.grade)),
+            Self::Seat(class) => Some(class.grade),
             Self::Ansi(_) => None,
         }
     }
@@ -95,28 +110,28 @@ pub(super) struct Candidates {
     nominal: f64,
     holes: Vec<MemberClass>,
     shafts: Vec<MemberClass>,
-    ansi: Vec<Candidate>,
+    /// Fits that are not made up of a hole and a shaft class.
+    single: Vec<Candidate>,
 }
 
 impl Candidates {
-    /// The fits defined at a nominal diameter (m); of ISO 286 none with a grade finer than `finest`.
-    pub(super) fn at(
-        nominal: f64,
-        standard: Standard,
-        finest: Option<Grade>,
-    ) -> Result<Self, ToleranceError> {
+    /// The fits defined at the diameter of a joint; of ISO 286 none with a grade finer than `finest`.
+    pub(super) fn of(joint: &Joint, standard: Standard, finest: Option<Grade>) -> Result<Self, ChooseError> {
+        let nominal = joint.diameter;
         let cost = Cost::at(nominal)?;
-        let mut candidates = Self { nominal, holes: Vec::new(), shafts: Vec::new(), ansi: Vec::new() };
-        match standard {
-            Standard::Iso286 => {
+        let mut candidates = Self { nominal, holes: Vec::new(), shafts: Vec::new(), single: Vec::new() };
+        match (standard, &joint.bearing) {
+            (Standard::Iso286, Some(seat)) => candidates.single = seats(seat, nominal, finest, &cost)?,
+            (Standard::AnsiB4_1, Some(_)) => return Err(ChooseError::RingByIso),
+            (Standard::Iso286, None) => {
                 candidates.holes = member_classes(Member::Hole, nominal, finest, &cost)?;
                 candidates.shafts = member_classes(Member::Shaft, nominal, finest, &cost)?;
             }
-            Standard::AnsiB4_1 => {
+            (Standard::AnsiB4_1, None) => {
                 for class in ansi_b4_1::defined_classes(nominal)? {
                     let limits = class.limits(nominal)?;
                     let name = Name::Ansi(class);
-                    candidates.ansi.push(candidate(name, limits, cost.of_limits(&limits)));
+                    candidates.single.push(candidate(name, limits, cost.of_limits(&limits)));
                 }
             }
         }
@@ -125,7 +140,7 @@ impl Candidates {
 
     /// How many there are.
     pub(super) fn count(&self) -> usize {
-        self.holes.len() * self.shafts.len() + self.ansi.len()
+        self.holes.len() * self.shafts.len() + self.single.len()
     }
 
     /// Every fit, those of ISO 286 by hole, then by shaft.
@@ -137,13 +152,31 @@ impl Candidates {
                 candidate(name, limits, hole.cost + shaft.cost)
             })
         });
-        iso.chain(self.ansi.iter().copied())
+        iso.chain(self.single.iter().copied())
     }
 }
 
 fn candidate(name: Name, limits: FitLimits, cost: f64) -> Candidate {
     let interference = limits.interference();
     Candidate { name, limits, loosest: interference.loosest, tightest: interference.tightest, cost }
+}
+
+/// Every class of the member that carries a bearing ring, with the ring's own limits beside it.
+fn seats(
+    seat: &BearingSeat,
+    nominal: f64,
+    finest: Option<Grade>,
+    cost: &Cost,
+) -> Result<Vec<Candidate>, ToleranceError> {
+    let made = seat.member().other();
+    let of = |class: &MemberClass| {
+        let (hole, shaft) = match made {
+            Member::Hole => (class.limits, seat.limits.value),
+            Member::Shaft => (seat.limits.value, class.limits),
+        };
+        candidate(Name::Seat(class.class), FitLimits { nominal, hole, shaft }, 2.0 * class.cost)
+    };
+    Ok(member_classes(made, nominal, finest, cost)?.iter().map(of).collect())
 }
 
 fn member_classes(
@@ -198,9 +231,16 @@ impl Cost {
     }
 }
 
-/// Relative cost of given limits, by the same rule; none where ISO 286 has no grades or a limit has no width.
-pub(super) fn cost_of(limits: &FitLimits) -> Option<f64> {
-    Cost::at(limits.nominal).ok().map(|cost| cost.of_limits(limits)).filter(|cost| cost.is_finite())
+/// Relative cost of given limits, by the same rule, of a seat for the member that is made; none where ISO 286 has no
+/// grades or a limit has no width.
+pub(super) fn cost_of(limits: &FitLimits, seat: Option<&BearingSeat>) -> Option<f64> {
+    let cost = Cost::at(limits.nominal).ok()?;
+    let cost = match seat.map(|seat| seat.member().other()) {
+        None => cost.of_limits(limits),
+        Some(Member::Hole) => 2.0 * cost.of_member(Member::Hole, &limits.hole),
+        Some(Member::Shaft) => 2.0 * cost.of_member(Member::Shaft, &limits.shaft),
+    };
+    Some(cost).filter(|cost| cost.is_finite())
 }
 
 /// The fits with the narrowest band at each place: every other fit has one of these between its extremes.
@@ -223,6 +263,24 @@ pub(super) fn name_of(callout: &str) -> Option<Name> {
     match FitCallout::parse(callout) {
         Ok(FitCallout::Iso { hole, shaft }) => Some(Name::Iso { hole, shaft }),
         Ok(FitCallout::Ansi(class)) => Some(Name::Ansi(class)),
-        _ => None,
+        _ => member_of(callout).map(|(_, class)| Name::Seat(class)),
     }
+}
+
+/// The one member that a callout such as `k6` names.
+fn member_of(callout: &str) -> Option<(Member, ToleranceClass)> {
+    [Member::Hole, Member::Shaft].into_iter().find_map(|member| match MemberCallout::parse(callout, member) {
+        Ok(MemberCallout::Class(class)) => Some((member, class)),
+        _ => None,
+    })
+}
+
+/// What a user of the classes of a callout should know; full sentences.
+pub(super) fn remarks(callout: &str, nominal: f64) -> Vec<String> {
+    let fit = FitCallout::parse(callout).and_then(|fit| fit.resolve(nominal)).map(|fit| fit.remarks);
+    let member = || {
+        let (member, class) = member_of(callout)?;
+        Some(MemberCallout::Class(class).resolve(member, nominal).ok()?.remarks)
+    };
+    fit.ok().or_else(member).unwrap_or_default()
 }

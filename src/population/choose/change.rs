@@ -2,11 +2,14 @@
 //!
 //! How far the best fit is from the window is a function of each number of the joint: negative while every fit
 //! lies outside, zero where the first one comes in. Going away from the present value in small steps brackets
-//! that zero, a bracketed root finds it, and the search is run again with the number as it would be written.
+//! that zero, a bracketed root finds it, and the search is run again with the number as it would be written. The
+//! handling time has no edge: the search goes by the other requirements, and what it lets in must meet the time as well.
 
 use super::candidate::{Candidate, Candidates, narrowest};
 use super::judge::{Judge, Window};
-use super::{ChooseError, ChosenFit, ranked};
+use super::ranking::Rules;
+use super::{ChooseError, ChosenFit};
+use crate::assembly::bearing_tables::BearingRing;
 use crate::joint::{Joint, Ring};
 use crate::material::{Kind as MaterialKind, Range};
 use crate::numerics::root::bracketed;
@@ -43,8 +46,17 @@ impl Parameter {
         }
     }
 
-    /// Its value in a joint; none when the joint has no such number.
+    /// Its value in a joint; none when the joint has no such number, and for what a bearing settles.
     pub fn of(self, joint: &Joint) -> Option<f64> {
+        let settled = joint.bearing.as_ref().is_some_and(|seat| match self {
+            Self::HubOuterDiameter | Self::HubStrength => seat.ring == BearingRing::Inner,
+            Self::ShaftStrength => seat.ring == BearingRing::Outer,
+            Self::Length => true,
+            Self::HoldingFriction => false,
+        });
+        if settled {
+            return None;
+        }
         match self {
             Self::HubOuterDiameter => Some(joint.rings.get(1)?.outer_diameter),
             Self::Length => Some(joint.length),
@@ -273,11 +285,8 @@ impl Search<'_> {
             let count = if upwards { first + f64::from(further) } else { first - f64::from(further) };
             let Some((written, to)) = writing.steps(count) else { continue };
             let Some(joint) = self.parameter.changed(self.joint, to) else { continue };
-            let judge = Judge::of(&joint)?;
-            let requirements = judge.requirements();
-            let window = Judge::window(&requirements);
-            let fits = ranked(&judge, &requirements, &window, &self.wanted.candidates)?;
-            if let Some(ChosenFit { callout: lets_in, finest_grade, .. }) = fits.into_iter().next() {
+            let first = Rules::of(&joint)?.first(&self.wanted.candidates);
+            if let Some(ChosenFit { callout: lets_in, finest_grade, .. }) = first {
                 return Ok(Some(Opening { to, written, lets_in, finest_grade }));
             }
         }

@@ -3,14 +3,15 @@
 //! Safety against slip rises with the interference of the loosest pair. Press force and the change of temperature
 //! for joining rise with that of the tightest pair. Stress does so too, unless speed or a pressure from outside
 //! stresses a part that the grip relieves. So each requirement has one edge or two, and the edges together leave
-//! the allowed window.
+//! the allowed window. The time from oven or bath to seated is no part of it: it is worked out fit by fit
+//! ([`timing`](super::timing)).
 
-use crate::assembly::AssemblyError;
 use crate::findings::bath_temperature;
 use crate::joint::{Joint, Method};
 use crate::material::Kind;
 use crate::population::kernel::joining::PlainJoining;
 use crate::population::kernel::{Condition, KernelError, PairKind, Part, PlainJoint};
+use crate::tolerance::FitLimits;
 
 /// What is judged.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -31,6 +32,20 @@ pub enum Subject {
     HubTemperature,
     /// Temperature that the shaft must reach for the tightest pair, against that of the bath.
     ShaftTemperature,
+    /// Time from oven or bath until the tightest pair has no clearance left; judged fit by fit, without an edge.
+    HandlingTime,
+}
+
+impl Subject {
+    /// Whether its edges are part of the allowed window; what is not is judged for each fit by itself.
+    pub fn has_edges(self) -> bool {
+        self != Self::HandlingTime
+    }
+
+    /// Whether it is a matter of holding.
+    pub fn is_of_holding(self) -> bool {
+        matches!(self, Self::Slip(_) | Self::GapingEdge(_))
+    }
 }
 
 /// Interference of the loosest and of the tightest pair as made, m.
@@ -45,7 +60,7 @@ pub(in crate::population) struct Made {
 pub struct Requirement {
     /// What is judged.
     pub subject: Subject,
-    /// The number it is held against: a safety, a force (N) or a temperature (K); none when the end of an
+    /// The number it is held against: a safety, a force (N), a temperature (K) or a time (s); none when the end of an
     /// expansion curve alone sets the edge.
     pub required: Option<f64>,
     /// Least interference of the loosest pair as made that meets it, m, to the last digit of a double; none when
@@ -105,10 +120,6 @@ impl<'a> Judge<'a> {
         Ok(judge)
     }
 
-    pub(super) fn joint(&self) -> &Joint {
-        self.joint
-    }
-
     pub(in crate::population) fn plain(&self) -> &PlainJoint {
         &self.plain
     }
@@ -117,7 +128,24 @@ impl<'a> Judge<'a> {
         &self.joining
     }
 
-    /// Whether a fit meets all that each of the three questions asks.
+    /// The time from oven or bath to seated that is required, s; none when nothing is heated or chilled.
+    pub(in crate::population) fn handling_time(&self) -> Option<f64> {
+        let plan = &self.joint.assembly;
+        plan.practice.handling_time.filter(|_| plan.heats() || plan.chills())
+    }
+
+    /// Why the full computation refuses a pair of these limits; nothing when it does not.
+    pub(super) fn refusal(&self, limits: &FitLimits) -> Option<KernelError> {
+        let made = limits.interference();
+        let pairs = [
+            (made.loosest, PairKind::Loosest),
+            (made.mean, PairKind::Mean),
+            (made.tightest, PairKind::Tightest),
+        ];
+        pairs.into_iter().find_map(|(made, kind)| self.plain.pair(made, kind).err())
+    }
+
+    /// Whether a fit meets all that each of the three questions asks, the handling time left aside.
     pub(in crate::population) fn verdicts(&self, made: Made) -> Met {
         let mut met = Met { hold: true, strength: true, assembly: true };
         self.each_subject(|subject| {
@@ -125,21 +153,22 @@ impl<'a> Judge<'a> {
             match subject {
                 Subject::Slip(_) | Subject::GapingEdge(_) => met.hold &= ok,
                 Subject::ShaftStrength | Subject::HubStrength | Subject::LoadedEdge(_) => met.strength &= ok,
-                Subject::PressForce | Subject::HubTemperature | Subject::ShaftTemperature => {
-                    met.assembly &= ok;
-                }
+                Subject::PressForce
+                | Subject::HubTemperature
+                | Subject::ShaftTemperature
+                | Subject::HandlingTime => met.assembly &= ok,
             }
         });
         met
     }
 
-    /// Every requirement of the joint with its edges, in the order of the verdicts of a check.
-    pub(super) fn requirements(&self) -> Vec<Requirement> {
+    /// Every requirement of the joint that has edges, with them, in the order of the verdicts of a check.
+    pub(in crate::population) fn requirements(&self) -> Vec<Requirement> {
         self.subjects().into_iter().map(|subject| self.requirement(subject)).collect()
     }
 
     /// The window that requirements leave.
-    pub(super) fn window(requirements: &[Requirement]) -> Window {
+    pub(in crate::population) fn window(requirements: &[Requirement]) -> Window {
         let mut window = Window { least: f64::NEG_INFINITY, greatest: None };
         for requirement in requirements {
             let (least, greatest) = match requirement.never_met {
@@ -202,10 +231,12 @@ impl<'a> Judge<'a> {
             Subject::PressForce => require.press_force,
             Subject::HubTemperature => self.joining.hub_limit(),
             Subject::ShaftTemperature => Some(bath_temperature(self.joint.assembly.bath)),
+            Subject::HandlingTime => self.handling_time(),
         }
     }
 
-    /// What a fit gives; none when it does not exist, such as the safety of a ring that nothing stresses.
+    /// What a fit gives; none when it does not exist, such as the safety of a ring that nothing stresses, and for the
+    /// handling time, which no formula gives.
     pub(super) fn found(&self, subject: Subject, made: Made) -> Option<f64> {
         let plain = &self.plain;
         let loose = plain.effective(made.loosest, PairKind::Loosest);
@@ -214,12 +245,12 @@ impl<'a> Judge<'a> {
         match subject {
             Subject::Slip(number) => {
                 let state = plain.states.get(number)?;
-                state.slip_safety_per_pressure.map(|gain| gain * plain.pressure(state, loose))
+                state.slip_safety_per_pressure.map(|gain| gain * plain.pressure_left(state, loose))
             }
             Subject::GapingEdge(number) => {
                 let state = plain.states.get(number)?;
                 let change = state.edge_change?;
-                Some(if change > 0.0 { plain.pressure(state, loose) / change } else { 0.0 })
+                Some(if change > 0.0 { plain.pressure_left(state, loose) / change } else { 0.0 })
             }
             Subject::ShaftStrength => strength(Part::Shaft),
             Subject::HubStrength => strength(Part::Hub),
@@ -229,6 +260,7 @@ impl<'a> Judge<'a> {
             }
             Subject::PressForce => self.press_force(tight).ok(),
             Subject::HubTemperature | Subject::ShaftTemperature => self.by_method(made.tightest).0,
+            Subject::HandlingTime => None,
         }
     }
 
@@ -244,16 +276,13 @@ impl<'a> Judge<'a> {
             }
             Subject::PressForce => required.is_none_or(|allowed| found.is_some_and(|force| force <= allowed)),
             Subject::HubTemperature | Subject::ShaftTemperature => self.by_method(made.tightest).1,
+            Subject::HandlingTime => true,
         }
     }
 
     fn press_force(&self, tight: f64) -> Result<f64, KernelError> {
         let pressure = self.plain.pressure(&self.plain.shop, tight);
-        match self.plain.press_force(pressure, tight, self.plain.pressing.high) {
-            // A pair that only the temperature of the shop closes has no chamfer to squeeze in.
-            Err(KernelError::Assembly(AssemblyError::OutsideRange { .. })) if tight <= 0.0 => Ok(0.0),
-            force => force,
-        }
+        self.plain.press_force(pressure, tight, self.plain.pressing.high)
     }
 
     fn by_method(&self, made: f64) -> (Option<f64>, bool) {
@@ -281,8 +310,9 @@ impl<'a> Judge<'a> {
                 let edge = Edge::between(at_tightest, -far, far);
                 Requirement { greatest: edge.at(), never_met: edge == Edge::NeverMet, ..none }
             }
-            Subject::ShaftStrength => Requirement { ..self.strength_edges(Part::Shaft, none, far) },
-            Subject::HubStrength => Requirement { ..self.strength_edges(Part::Hub, none, far) },
+            Subject::ShaftStrength => self.strength_edges(Part::Shaft, none, far),
+            Subject::HubStrength => self.strength_edges(Part::Hub, none, far),
+            Subject::HandlingTime => none,
         }
     }
 

@@ -2,7 +2,8 @@
 //!
 //! The first row names the columns. The column of sizes is `size`, `diameter` or `value`; its unit stands in the
 //! header, `diameter_mm`, `diameter [mm]` or `diameter (mm)`, or behind each number. A column `part`, `name` or
-//! `id` names the parts; without it they go by their number.
+//! `id` names the parts; without it they go by their number. Columns are parted by `,`, `;` or a tab, whichever the
+//! first row has; where it is not `,`, a decimal comma is read too.
 
 use crate::diagnostic::Diagnostic;
 use crate::quantity::{self, Kind};
@@ -34,8 +35,12 @@ pub const MOST_PARTS: usize = 1_000_000;
 /// ```
 pub fn read(text: &str, kind: Kind) -> Result<Vec<Part>, Box<Diagnostic>> {
     let text = text.strip_prefix('\u{feff}').unwrap_or(text);
-    let mut table =
-        csv::ReaderBuilder::new().trim(csv::Trim::All).comment(Some(b'#')).from_reader(text.as_bytes());
+    let separator = separator(text);
+    let mut table = csv::ReaderBuilder::new()
+        .trim(csv::Trim::All)
+        .comment(Some(b'#'))
+        .delimiter(separator)
+        .from_reader(text.as_bytes());
     let header = table.headers().map_err(|error| unreadable(&error))?.clone();
     let (column, unit) =
         header.iter().enumerate().find_map(|(index, name)| Some((index, size_column(name)?))).ok_or_else(
@@ -52,9 +57,10 @@ pub fn read(text: &str, kind: Kind) -> Result<Vec<Part>, Box<Diagnostic>> {
         let row = row.map_err(|error| unreadable(&error))?;
         let line = row.position().map_or(0, csv::Position::line);
         let cell = row.get(column).unwrap_or("");
+        let cell = if separator == b',' { cell.to_owned() } else { cell.replace(',', ".") };
         let written = match &unit {
             Some(unit) => format!("{cell} {unit}"),
-            None => cell.to_owned(),
+            None => cell,
         };
         let value = quantity::parse(kind, written.trim()).map_err(|error| {
             let fault = Diagnostic::new(format!("line {line}: {error}"));
@@ -76,6 +82,17 @@ pub fn read(text: &str, kind: Kind) -> Result<Vec<Part>, Box<Diagnostic>> {
     Ok(parts)
 }
 
+/// What parts the columns of the first row that is neither blank nor a comment.
+fn separator(text: &str) -> u8 {
+    let first = text.lines().map(str::trim).find(|line| !line.is_empty() && !line.starts_with('#'));
+    let has = |character: char| first.is_some_and(|line| line.contains(character));
+    match (has(';'), has('\t')) {
+        (true, _) => b';',
+        (false, true) => b'\t',
+        (false, false) => b',',
+    }
+}
+
 fn plain(name: &str) -> String {
     name.trim().to_lowercase()
 }
@@ -95,7 +112,14 @@ fn size_column(name: &str) -> Option<Option<String>> {
 }
 
 fn unreadable(error: &csv::Error) -> Box<Diagnostic> {
-    Box::new(Diagnostic::new(format!("this is not a table in CSV: {error}")))
+    let line = error.position().map_or(0, csv::Position::line);
+    Box::new(match error.kind() {
+        csv::ErrorKind::UnequalLengths { expected_len, len, .. } => {
+            Diagnostic::new(format!("line {line}: the row has {len} cells, the first row has {expected_len}"))
+                .with_help("write decimal points, or part the columns by `;`: a comma parts them here")
+        }
+        _ => Diagnostic::new(format!("this is not a table in CSV: {error}")),
+    })
 }
 
 #[cfg(test)]
@@ -109,6 +133,9 @@ mod tests {
             "part,Diameter [mm]\nA,60.01\n",
             "name,size\nA,60.01 mm\n",
             "# bench 4\nid,value (um)\nA,60010\n",
+            "\u{feff}part;diameter_mm\r\nA;60,01\r\n",
+            "\"part\"\t\"size\"\nA\t\"60,01 mm\"\n",
+            "part,diameter_mm\nA,\"60.01\"\n",
         ] {
             let parts = read(text, Kind::Length).unwrap();
             assert_eq!(parts, [Part { name: "A".into(), value: 0.06001 }], "{text}");
@@ -122,6 +149,9 @@ mod tests {
         assert!(fault.message.starts_with("line 3: "), "{fault}");
         let fault = read("size\n60.01\n", Kind::Length).unwrap_err();
         assert!(fault.message.contains("has no unit"), "{fault}");
+        let fault = read("size_mm\n60,01\n", Kind::Length).unwrap_err();
+        assert!(fault.message.starts_with("line 2: the row has 2 cells"), "{fault}");
+        assert!(fault.help.unwrap().contains("decimal points"));
         assert!(read("length_mm\n60\n", Kind::Length).is_err());
         assert!(read("size_mm\n", Kind::Length).is_err());
     }

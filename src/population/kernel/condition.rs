@@ -26,6 +26,8 @@ pub struct Condition {
     pub torque: f64,
     /// Axial force, N.
     pub axial_force: f64,
+    /// Share of the contact pressure that relaxation leaves for holding at the loosest pair, above 0 and at most 1.
+    pub relaxation: f64,
     /// Safety against slip for each pascal of contact pressure, 1/Pa; none when there is no load.
     pub slip_safety_per_pressure: Option<f64>,
     /// Change of the contact pressure at the edges by bending and radial force, Pa; none without them.
@@ -60,6 +62,7 @@ impl Conditions<'_> {
             thermal_interference: thermal,
             torque: 0.0,
             axial_force: 0.0,
+            relaxation: 1.0,
             slip_safety_per_pressure: None,
             edge_change: None,
             shaft: RingBase::default(),
@@ -111,6 +114,7 @@ impl Conditions<'_> {
             thermal_interference: thermal,
             torque: state.torque,
             axial_force: state.axial_force,
+            relaxation: state.relaxation,
             slip_safety_per_pressure: self.slip_safety_per_pressure(state),
             edge_change: self.edge_change(state),
             shaft,

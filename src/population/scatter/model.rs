@@ -9,7 +9,7 @@
 //! | temperature | θ = d (ε_shaft − ε_hub) |
 //! | pressure | p = max(V + θ, 0)/C |
 //! | capacity | T = μ p π d² l/2, F = μ p π d l |
-//! | slip | μ p π d l < √(F² + (2 T/d)²) |
+//! | slip | μ ρ p π d l < √(F² + (2 T/d)²), ρ the share that relaxation leaves |
 //! | yield, fracture | p above the pressure at which a ring reaches its strength |
 //! | press force | π d p (μ l + V (K − μ)²/(4 K tan φ)), K = (μ + tan φ)/(1 − μ tan φ) |
 
@@ -97,7 +97,8 @@ pub struct Arithmetic {
 pub struct State {
     /// Its name.
     pub name: String,
-    /// Resultant force on the mating surface, N: √(F² + (2 T/d)²).
+    /// Resultant force on the mating surface, N, over the share ρ of the pressure that relaxation leaves for holding:
+    /// √(F² + (2 T/d)²)/ρ.
     pub force: f64,
     /// Interference that its temperatures add, m.
     pub thermal: f64,

@@ -7,7 +7,7 @@ use super::model::{Arithmetic, Limit, Model, Population, State, Stiffness, Warm}
 use crate::diagnostic::Diagnostic;
 use crate::findings::failure;
 use crate::joint::population::{Bounds, Variation};
-use crate::joint::{Joint, SmoothingAt};
+use crate::joint::{DutyState, Joint, SmoothingAt};
 use crate::material::{Kind as MaterialKind, Range};
 use crate::population::distribution::{Distribution, DistributionError, Shape};
 use crate::population::kernel::{Condition, KernelError, PlainJoint};
@@ -34,6 +34,22 @@ pub enum PopulationError {
     /// A list of measurements cannot be read.
     #[error("{0}")]
     Measured(Box<Diagnostic>),
+    /// A measured size that cannot be one of this joint.
+    #[error(
+        "population.{key}: {} of {file} is more than 5 % off the diameter of the joint, {}",
+        crate::quantity::written(Kind::Length, *size),
+        crate::quantity::written(Kind::Length, *nominal)
+    )]
+    OtherSize {
+        /// Key.
+        key: &'static str,
+        /// The list.
+        file: String,
+        /// The size, m.
+        size: f64,
+        /// Diameter of the joint, m.
+        nominal: f64,
+    },
     /// More different values than are added up exactly.
     #[error(
         "population.{key}: {count} different measured values, at most {MOST_VALUES} are added up exactly"
@@ -110,7 +126,9 @@ pub fn understood(joint: &Joint, read: &mut ReadList<'_>) -> Result<Understood, 
         hub_temperature: taking.offset("hub_temperature", plan.hub_temperature.as_ref())?,
         shaft_temperature: taking.offset("shaft_temperature", plan.shaft_temperature.as_ref())?,
     };
-    let assumed = taking.assumed;
+    let mut assumed = taking.assumed;
+    assumed.extend(joint.duty.iter().filter_map(relaxed));
+    assumed.extend(joint.duty.iter().filter_map(left_out));
     let roughness = inner.roughness.value + outer.roughness.value;
     let factor = joint.smoothing.factor.unwrap_or(if roughness > 0.0 {
         plain.smoothing_loss / roughness
@@ -124,7 +142,7 @@ pub fn understood(joint: &Joint, read: &mut ReadList<'_>) -> Result<Understood, 
     let states = joint.duty.iter().zip(&plain.states).map(|(state, condition)| State {
         stiffness: stiffness(condition),
         name: state.name.clone(),
-        force: condition.axial_force.hypot(2.0 * condition.torque / joint.diameter),
+        force: condition.axial_force.hypot(2.0 * condition.torque / joint.diameter) / condition.relaxation,
         thermal: condition.thermal_interference,
         warm: match state.temperatures.as_slice() {
             [shaft, hub] => Some(Warm {
@@ -173,6 +191,42 @@ pub fn understood(joint: &Joint, read: &mut ReadList<'_>) -> Result<Understood, 
     };
     model.check()?;
     Ok(Understood { model, assumed })
+}
+
+/// Whether a size is so far off the nominal diameter that its unit or its list was mixed up: by 5 %, as for limits
+/// (common practice, no source).
+pub fn is_of_another_joint(size: f64, nominal: f64) -> bool {
+    (size - nominal).abs() > 0.05 * nominal
+}
+
+/// That of a state's pressure only a share counts for holding.
+fn relaxed(state: &DutyState) -> Option<String> {
+    (state.relaxation < 1.0).then(|| {
+        format!(
+            "In state {} holding counts {:.0} % of the pressure of every pair, the share that relaxation leaves (joint file); the stresses stay those of the first day.",
+            state.name,
+            100.0 * state.relaxation
+        )
+    })
+}
+
+/// What of a state the model has no place for.
+fn left_out(state: &DutyState) -> Option<String> {
+    let parts = [
+        (state.speed != 0.0, "speed"),
+        (state.inner_pressure != 0.0, "pressure inside"),
+        (state.outer_pressure != 0.0, "pressure outside"),
+        (!state.temperature_rises.is_empty(), "radial gradient of temperature"),
+        (state.bending_moment != 0.0 || state.radial_force != 0.0, "bending"),
+    ];
+    let named: Vec<&str> = parts.into_iter().filter_map(|(there, name)| there.then_some(name)).collect();
+    (!named.is_empty()).then(|| {
+        format!(
+            "Of state {} only loads along and round the shaft and temperatures count here, not its {}: `hubgrip check` has them at the extreme pairs.",
+            state.name,
+            named.join(", ")
+        )
+    })
 }
 
 /// Limits of a member of the joint, m from the nominal diameter.
@@ -230,6 +284,11 @@ impl Taking<'_, '_> {
                         if upper { "upper" } else { "lower" }
                     ));
                 }
+                if *cpk < 0.0 {
+                    self.assumed.push(format!(
+                        "population.{key}.cpk is below zero: the mean of the parts lies outside the limits."
+                    ));
+                }
                 let normal = Distribution::capable(limits.lower, limits.upper, *cp, *cpk, upper).map_err(refused)?;
                 if *cut { cut_normal(normal.mean(), normal.sd(), (limits.lower, limits.upper)) } else { Ok(normal) }
             }
@@ -259,6 +318,12 @@ impl Taking<'_, '_> {
         kind: Kind,
     ) -> Result<Distribution, PopulationError> {
         let values = (self.read)(file, kind).map_err(PopulationError::Measured)?;
+        let nominal = self.joint.diameter;
+        if ["hole", "shaft"].contains(&key)
+            && let Some(size) = values.iter().copied().find(|size| is_of_another_joint(*size, nominal))
+        {
+            return Err(PopulationError::OtherSize { key, file: file.to_owned(), size, nominal });
+        }
         let distribution =
             Distribution::measured(&values).map_err(|cause| PopulationError::Distribution { key, cause })?;
         if let Shape::Measured(atoms) = distribution.shape()

@@ -16,6 +16,7 @@ struct Document<'a> {
     diameter_mm: f64,
     standard: &'static str,
     considered: usize,
+    short_of_time: usize,
     window: WindowLine,
     requirements: Vec<RequirementLine>,
     fits: Vec<FitLine<'a>>,
@@ -43,6 +44,7 @@ struct RequirementLine {
     least_um: Option<f64>,
     greatest_um: Option<f64>,
     never_met: bool,
+    in_window: bool,
 }
 
 #[derive(Serialize)]
@@ -67,7 +69,21 @@ struct FitLine<'a> {
     hub_temperature_c: Option<f64>,
     #[serde(skip_serializing_if = "Option::is_none")]
     shaft_temperature_c: Option<f64>,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    handling_time_s: Option<f64>,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    bearing: Option<SeatLine<'a>>,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    refused: Option<&'a str>,
     ok: bool,
+}
+
+/// What the seat does to a bearing.
+#[derive(Serialize)]
+struct SeatLine<'a> {
+    least_clearance_um: f64,
+    at: &'a str,
+    hoop_stress_mpa: f64,
 }
 
 #[derive(Serialize)]
@@ -110,7 +126,8 @@ pub fn to_json(choice: &Choice) -> String {
     });
     let mut notes: Vec<String> = words::grade_note(choice).into_iter().collect();
     notes.extend(joint.remarks.iter().cloned());
-    notes.push(words::COST_NOTE.to_owned());
+    notes.extend(words::changes_note(choice).filter(|_| choice.fits.is_empty()).map(str::to_owned));
+    notes.push(words::cost_note(choice));
     let document = Document {
         choice: 1,
         version: env!("CARGO_PKG_VERSION"),
@@ -123,6 +140,7 @@ pub fn to_json(choice: &Choice) -> String {
             Standard::AnsiB4_1 => "ANSI B4.1",
         },
         considered: choice.considered,
+        short_of_time: choice.short_of_time,
         window: WindowLine {
             least_um: microns(choice.window.least),
             greatest_um: choice.window.greatest.and_then(microns),
@@ -173,6 +191,7 @@ fn requirement(choice: &Choice, wanted: &Requirement) -> RequirementLine {
         required: wanted.required.map(|required| if kelvin { required - 273.15 } else { required }),
         unit: match wanted.subject {
             Subject::PressForce => "N",
+            Subject::HandlingTime => "s",
             _ if kelvin => "degC",
             _ => "",
         },
@@ -180,6 +199,7 @@ fn requirement(choice: &Choice, wanted: &Requirement) -> RequirementLine {
         least_um: wanted.least.and_then(microns),
         greatest_um: wanted.greatest.and_then(microns),
         never_met: wanted.never_met,
+        in_window: wanted.subject.has_edges(),
     }
 }
 
@@ -193,7 +213,7 @@ fn line<'a>(choice: &Choice, fit: &'a ChosenFit) -> FitLine<'a> {
     let celsius = |kelvin: f64| kelvin - 273.15;
     FitLine {
         fit: &fit.callout,
-        basis: words::basis(fit.basis),
+        basis: words::basis(choice, fit),
         preferred_by: &fit.preferred_by,
         relative_cost: fit.relative_cost,
         finest_grade: fit.finest_grade.map(|grade| grade.name()),
@@ -209,6 +229,13 @@ fn line<'a>(choice: &Choice, fit: &'a ChosenFit) -> FitLine<'a> {
         press_force_n: found(|subject| subject == Subject::PressForce),
         hub_temperature_c: found(|subject| subject == Subject::HubTemperature).map(celsius),
         shaft_temperature_c: found(|subject| subject == Subject::ShaftTemperature).map(celsius),
+        handling_time_s: found(|subject| subject == Subject::HandlingTime),
+        bearing: fit.seat.as_ref().map(|seat| SeatLine {
+            least_clearance_um: seat.least_clearance * 1e6,
+            at: &seat.at,
+            hoop_stress_mpa: seat.hoop_stress * 1e-6,
+        }),
+        refused: fit.refused.as_deref(),
         ok: fit.meets_all(),
     }
 }

@@ -26,7 +26,7 @@ pub fn html(choice: &Choice, all: bool) -> String {
         }
         main {
             section { h2 { "What is allowed" } (allowed(choice)) }
-            section { h2 { (heading(choice)) } (list(choice, &fits, left_out)) }
+            section { h2 { (words::heading(choice)) } (list(choice, &fits, left_out)) }
             @if let Some(picture) = plot::interference_windows(choice, &pictured) {
                 section {
                     h2 { "Picture" }
@@ -48,14 +48,6 @@ fn subtitle(choice: &Choice) -> String {
     let materials: Vec<&str> = joint.rings.iter().map(|ring| ring.material.id.as_str()).collect();
     let drawing = joint.drawing.as_ref().map_or_else(String::new, |drawing| format!("{drawing} · "));
     format!("{drawing}{} by {} · {}", size(joint.diameter), size(joint.length), materials.join(" in "))
-}
-
-fn heading(choice: &Choice) -> String {
-    match choice.fits.len() {
-        0 => "No fit meets every requirement".to_owned(),
-        1 => format!("One of {} fits meets every requirement", choice.considered),
-        count => format!("{count} of {} fits meet every requirement", choice.considered),
-    }
 }
 
 fn allowed(choice: &Choice) -> Markup {
@@ -87,7 +79,7 @@ fn list(choice: &Choice, fits: &[&ChosenFit], left_out: usize) -> Markup {
                 p { "Nearest is " strong { (nearest.callout) } ": " (words::missed(choice, nearest).join("; ")) "." }
             }
             h3 { "Smallest change that lets a fit in, each for itself" }
-            @if choice.changes.is_empty() { p { "None was found." } }
+            @if let Some(note) = words::changes_note(choice) { p { (note) } }
             ul {
                 @for change in &choice.changes {
                     li { (words::sentence(&words::parameter(choice, change.parameter))) ": " (words::change(choice, change)) }
@@ -120,10 +112,11 @@ fn table(choice: &Choice, fits: &[&ChosenFit]) -> Markup {
                         th.n scope="col" { "interference, " (unit) }
                         th.n scope="col" { "spare below" }
                         th.n scope="col" { "spare above" }
-                        th.n scope="col" { "slip" }
+                        th.n scope="col" { (words::hold_heading(choice)) }
                         th.n scope="col" { "shaft" }
                         th.n scope="col" { "hub" }
                         @if let Some(joining) = &joining { th.n scope="col" { (joining) } }
+                        @for heading in words::last_headings(choice) { th.n scope="col" { (heading) } }
                     }
                 }
                 tbody {
@@ -133,31 +126,29 @@ fn table(choice: &Choice, fits: &[&ChosenFit]) -> Markup {
                             th scope="row" {
                                 @if fit.preferred_by.is_empty() { (fit.callout) } @else { strong { (fit.callout) " *" } }
                             }
-                            td { (words::basis(fit.basis).trim_end_matches(" basis")) }
+                            td { (words::basis(choice, fit).trim_end_matches(" basis")) }
                             td.r { (row.cost) }
                             td.r { (row.loosest) " to " (row.tightest) }
                             td.r { (row.below) }
                             td.r { (row.above) }
-                            td.r { (row.slip) }
+                            td.r { (row.hold) }
                             td.r { (row.shaft) }
                             td.r { (row.hub) }
-                            @if let Some(joining) = row.joining { td.r { (joining) } }
+                            @if let Some(joining) = &row.joining { td.r { (joining) } }
+                            @for cell in row.last_cells() { td.r { (cell) } }
                         }
                     }
                 }
             }
         }
-        p.small {
-            "Spare below is the interference of the loosest pair over the least allowed, spare above that of the \
-             tightest pair under the greatest. A star: preferred by ISO 286-1 or ANSI B4.2. Slip, shaft and hub are the least safeties over every state."
-        }
+        p.small { (words::list_note(choice)) }
     }
 }
 
 fn notes(choice: &Choice) -> Markup {
     let joint = &choice.joint;
     html! {
-        p { (words::COST_NOTE) }
+        p { (words::cost_note(choice)) }
         @if let Some(note) = words::grade_note(choice) { p { (note) } }
         @for remark in choice.fits.first().map(ChosenFit::remarks).unwrap_or_default() { p { (remark) } }
         @for remark in &joint.remarks { p { (remark) } }

@@ -1,5 +1,8 @@
 //! What is said of a choice, in words that the terminal and the page share.
 
+use std::fmt::Write;
+
+use crate::assembly::bearing_tables::BearingRing;
 use crate::findings::{bath_name, failure};
 use crate::joint::{Method, Ring};
 use crate::population::choose::{
@@ -7,6 +10,7 @@ use crate::population::choose::{
 };
 use crate::quantity::factor_found as safety;
 use crate::quantity::{Measure, UnitSystem, display_unit, show};
+use crate::report::seating::time_allowed;
 use crate::tolerance::iso286::Grade;
 
 /// Fits that are shown when not all are asked for.
@@ -15,11 +19,54 @@ pub(super) const MOST_SHOWN: usize = 20;
 /// Fits of hole or shaft basis below which mixed ones are shown as well.
 const FEW: usize = 6;
 
+/// What the relative cost is.
+const COST_OF_FITS: &str =
+    "Relative cost is half IT7 over the tolerance of the hole and half IT6 over that of the shaft";
+const COST_OF_SHAFT: &str = "Relative cost is IT6 over the tolerance of the shaft";
+const COST_OF_HOUSING: &str = "Relative cost is IT7 over the tolerance of the housing";
+
 /// Where the order of the fits comes from.
-pub(super) const COST_NOTE: &str = "Relative cost is half IT7 over the tolerance of the hole and half IT6 over that of \
-     the shaft: cost as the reciprocal of the tolerance (Chase and Greenwood, Manufacturing Review 1 (1988) 50-59, \
-     from memory), a hole costing as much as a shaft one grade finer (common practice, no source). It orders fits \
-     and is no price.";
+pub(super) fn cost_note(choice: &Choice) -> String {
+    let source = "cost as the reciprocal of the tolerance (Chase and Greenwood, Manufacturing Review 1 (1988) 50-59, \
+                  from memory)";
+    let (what, more) = match choice.joint.bearing.as_ref().map(|seat| seat.ring) {
+        None => {
+            (COST_OF_FITS, ", a hole costing as much as a shaft one grade finer (common practice, no source)")
+        }
+        Some(BearingRing::Inner) => (COST_OF_SHAFT, ""),
+        Some(BearingRing::Outer) => (COST_OF_HOUSING, ""),
+    };
+    format!("{what}: {source}{more}. It orders fits and is no price.")
+}
+
+/// What the columns of the list show.
+pub(super) fn list_note(choice: &Choice) -> String {
+    let mut said = String::new();
+    if choice.joint.bearing.is_none() {
+        said.push_str("* preferred by ISO 286-1 or ANSI B4.2. ");
+    }
+    said.push_str(
+        "Below and above are to spare: the loosest pair over the least allowed, the tightest pair under the greatest. \
+         Safeties are the least over every state.",
+    );
+    if time_requirement(choice).is_some() {
+        said.push_str(" Time is that of the tightest pair, worked out for each fit by itself: it bounds no interference.");
+    }
+    if let Some(seat) = &choice.joint.bearing {
+        let _ = write!(
+            said,
+            " Left is the least radial clearance left after mounting and in every state, below 0 preload; hoop the \
+             greatest hoop stress in the {}. Neither is a requirement, so no fit is left out for it.",
+            seat.ring_name()
+        );
+    }
+    said
+}
+
+/// The time from oven or bath to seated that is required, with its number among the requirements.
+fn time_requirement(choice: &Choice) -> Option<(usize, &Requirement)> {
+    choice.requirements.iter().enumerate().find(|(_, wanted)| !wanted.subject.has_edges())
+}
 
 /// What is judged, with its state.
 pub(super) fn subject(choice: &Choice, subject: Subject) -> String {
@@ -44,6 +91,9 @@ pub(super) fn subject(choice: &Choice, subject: Subject) -> String {
         }
         Subject::HubTemperature => "hub temperature".to_owned(),
         Subject::ShaftTemperature => format!("shaft temperature in {}", bath_name(joint.assembly.bath)),
+        Subject::HandlingTime => {
+            format!("time from {} to seated", if joint.assembly.heats() { "oven" } else { "bath" })
+        }
     }
 }
 
@@ -51,9 +101,9 @@ fn state_name(choice: &Choice, number: usize) -> &str {
     choice.joint.duty.get(number).map_or("", |state| state.name.as_str())
 }
 
-/// Whether what is judged is a safety, not a force or a temperature.
-pub(super) fn is_safety(subject: Subject) -> bool {
-    !matches!(subject, Subject::PressForce | Subject::HubTemperature | Subject::ShaftTemperature)
+/// Whether what is judged is a force or a temperature of joining.
+fn is_of_joining(subject: Subject) -> bool {
+    matches!(subject, Subject::PressForce | Subject::HubTemperature | Subject::ShaftTemperature)
 }
 
 /// A number of a requirement with its unit.
@@ -63,6 +113,7 @@ pub(super) fn value(subject: Subject, number: f64, system: UnitSystem) -> String
         Subject::HubTemperature | Subject::ShaftTemperature => {
             show(Measure::Temperature, number, system).to_string()
         }
+        Subject::HandlingTime => time_allowed(number),
         _ => safety(number),
     }
 }
@@ -79,7 +130,7 @@ pub(super) fn requirement(choice: &Choice, requirement: &Requirement) -> String 
     };
     let bound = match requirement.subject {
         Subject::PressForce | Subject::HubTemperature => "at most",
-        Subject::ShaftTemperature => "the bath has",
+        Subject::ShaftTemperature => "of",
         _ => "at least",
     };
     match requirement.required {
@@ -136,6 +187,7 @@ pub(super) fn edge(choice: &Choice, requirement: &Requirement) -> String {
         requirement.greatest.map(|greatest| rounded_down(greatest, system)),
     );
     match (least, greatest) {
+        _ if !requirement.subject.has_edges() => "each fit by itself".to_owned(),
         _ if requirement.never_met => "none".to_owned(),
         (None, None) => "any".to_owned(),
         (Some(least), None) => format!("{least} or more"),
@@ -153,12 +205,13 @@ pub(super) fn pair(requirement: &Requirement) -> &'static str {
     }
 }
 
-/// Name of a basis.
-pub(super) fn basis(basis: Option<Basis>) -> &'static str {
-    match basis {
+/// Name of the basis of a fit.
+pub(super) fn basis(choice: &Choice, fit: &ChosenFit) -> &'static str {
+    match fit.basis {
         Some(Basis::Hole) => "hole basis",
         Some(Basis::Shaft) => "shaft basis",
         Some(Basis::Mixed) => "mixed",
+        None if choice.joint.bearing.is_some() => "bearing seat",
         None => "own limits",
     }
 }
@@ -181,12 +234,46 @@ pub(super) struct Row {
     pub(super) tightest: String,
     pub(super) below: String,
     pub(super) above: String,
-    /// Least safety against slip over the states.
-    pub(super) slip: String,
+    /// Least safety over the states against slip, or against a gaping edge where nothing can slip.
+    pub(super) hold: String,
     pub(super) shaft: String,
     pub(super) hub: String,
     /// Press force or temperature for joining, when that is required.
     pub(super) joining: Option<String>,
+    /// Time from oven or bath to seated, s, when that is required.
+    pub(super) time: Option<String>,
+    /// Clearance left in a bearing, and the hoop stress in its ring, when one is fitted.
+    pub(super) seat: Option<(String, String)>,
+}
+
+/// Heading of [`Row::hold`].
+pub(super) fn hold_heading(choice: &Choice) -> &'static str {
+    if slips(choice) { "slip" } else { "edge" }
+}
+
+/// Whether safety against slip is judged; otherwise only edges that may gape are.
+fn slips(choice: &Choice) -> bool {
+    choice.requirements.iter().any(|wanted| matches!(wanted.subject, Subject::Slip(_)))
+}
+
+/// Headings of [`Row::time`] and [`Row::seat`]; none for what is not judged or not there.
+pub(super) fn last_headings(choice: &Choice) -> Vec<String> {
+    let system = choice.joint.display;
+    let mut headings: Vec<String> =
+        time_requirement(choice).map(|_| "time s".to_owned()).into_iter().collect();
+    if choice.joint.bearing.is_some() {
+        headings.push("left".to_owned());
+        headings.push(format!("hoop {}", display_unit(Measure::Pressure, system).name));
+    }
+    headings
+}
+
+impl Row {
+    /// What stands under [`last_headings`].
+    pub(super) fn last_cells(&self) -> impl Iterator<Item = &str> {
+        let seat = self.seat.iter().flat_map(|(left, hoop)| [left.as_str(), hoop.as_str()]);
+        self.time.iter().map(String::as_str).chain(seat)
+    }
 }
 
 /// Heading of [`Row::joining`]; none when joining is not judged.
@@ -202,7 +289,7 @@ pub(super) fn joining_heading(choice: &Choice) -> Option<String> {
 /// The requirement on joining with its number.
 fn joining(choice: &Choice) -> Option<(usize, Subject)> {
     let subjects = choice.requirements.iter().map(|requirement| requirement.subject).enumerate();
-    let mut joining = subjects.filter(|(_, subject)| !is_safety(*subject));
+    let mut joining = subjects.filter(|(_, subject)| is_of_joining(*subject));
     joining.next()
 }
 
@@ -222,21 +309,64 @@ pub(super) fn row(choice: &Choice, fit: &ChosenFit) -> Row {
         let found = fit.found.get(number).and_then(|found| found.0);
         found.map_or_else(none, |found| show(measure, found, system).number)
     });
+    let time = time_requirement(choice).map(|(number, _)| {
+        let found = fit.found.get(number).and_then(|found| found.0);
+        found.map_or_else(none, |time| crate::quantity::number(time.floor(), 6))
+    });
+    let seat = choice.joint.bearing.as_ref().map(|_| match &fit.seat {
+        None => (none(), none()),
+        Some(seat) => (
+            rounded_down(seat.least_clearance, system),
+            show(Measure::Pressure, seat.hoop_stress, system).number,
+        ),
+    });
     Row {
+        time,
+        seat,
         cost: fit.relative_cost.map_or_else(none, |cost| format!("{cost:.2}")),
         loosest: deviation(fit.loosest),
         tightest: deviation(fit.tightest),
         below: rounded_down(fit.margin_below, system),
         above: fit.margin_above.map_or_else(none, |above| rounded_down(above, system)),
-        slip: least(|subject| matches!(subject, Subject::Slip(_))),
+        hold: if slips(choice) {
+            least(|subject| matches!(subject, Subject::Slip(_)))
+        } else {
+            least(Subject::is_of_holding)
+        },
         shaft: least(|subject| subject == Subject::ShaftStrength),
         hub: least(|subject| subject == Subject::HubStrength),
         joining,
     }
 }
 
+/// How many fits there are.
+pub(super) fn heading(choice: &Choice) -> String {
+    let what = if choice.joint.bearing.is_some() { "classes" } else { "fits" };
+    match choice.fits.len() {
+        0 => format!("None of {} {what} meets every requirement", choice.considered),
+        1 => format!("1 of {} {what} meets every requirement", choice.considered),
+        count => format!("{count} of {} {what} meet every requirement", choice.considered),
+    }
+}
+
 /// How many fits of each basis there are.
 pub(super) fn counts(choice: &Choice) -> String {
+    if let Some(seat) = &choice.joint.bearing {
+        let made = match seat.ring {
+            BearingRing::Inner => "shaft",
+            BearingRing::Outer => "housing",
+        };
+        let limits = &seat.limits;
+        let deviation = |value: f64| show(Measure::Deviation, value, choice.joint.display).number;
+        return format!(
+            "classes of the {made} alone, the {} has its limits {} to {} {} by {}",
+            seat.ring_name(),
+            deviation(limits.value.lower),
+            deviation(limits.value.upper),
+            unit(choice.joint.display),
+            limits.source
+        );
+    }
     let count = |basis| choice.fits.iter().filter(|fit| fit.basis == Some(basis)).count();
     format!(
         "{} of hole basis, {} of shaft basis, {} mixed",
@@ -250,12 +380,11 @@ pub(super) fn counts(choice: &Choice) -> String {
 pub(super) fn missed(choice: &Choice, fit: &ChosenFit) -> Vec<String> {
     let system = choice.joint.display;
     let missed = choice.requirements.iter().zip(&fit.found).filter(|(_, (_, ok))| !ok);
-    missed
-        .map(|(wanted, (found, _))| {
-            let found = found.map_or("none".to_owned(), |found| value(wanted.subject, found, system));
-            format!("{}: {found}", requirement(choice, wanted))
-        })
-        .collect()
+    let missed = missed.map(|(wanted, (found, _))| {
+        let found = found.map_or("none".to_owned(), |found| value(wanted.subject, found, system));
+        format!("{}: {found}", requirement(choice, wanted))
+    });
+    missed.chain(fit.refused.as_ref().map(|why| format!("it cannot be computed: {why}"))).collect()
 }
 
 /// When no fit is left: what stands in the way, and by how much.
@@ -268,6 +397,15 @@ pub(super) fn blocking(choice: &Choice) -> Vec<String> {
         .filter(|wanted| wanted.never_met)
         .map(|wanted| format!("No interference gives {}.", requirement(choice, wanted)))
         .collect();
+    if let (1.., Some((_, time))) = (choice.short_of_time, time_requirement(choice)) {
+        said.push(format!(
+            "{} {} everything but one: {}.",
+            choice.short_of_time,
+            if choice.short_of_time == 1 { "meets" } else { "meet" },
+            requirement(choice, time)
+        ));
+        return said;
+    }
     let (Some(below), Some(greatest)) = (below, choice.window.greatest) else { return said };
     let least = choice.window.least;
     if !said.is_empty() || !least.is_finite() || !greatest.is_finite() {
@@ -351,6 +489,23 @@ pub(super) fn change(choice: &Choice, change: &Change) -> String {
         said.push_str("; none of IT5 or coarser");
     }
     said
+}
+
+/// What is said above the changes; none when they speak for themselves.
+pub(super) fn changes_note(choice: &Choice) -> Option<&'static str> {
+    match (choice.short_of_time, time_requirement(choice).is_some(), choice.changes.is_empty()) {
+        (1.., ..) => Some(
+            "None is sought: the time bounds no interference, so it has no smallest change. More clearance, a hotter \
+             oven (oven_temperature) or a quicker transfer gives more of it.",
+        ),
+        (0, _, true) => {
+            Some("None was found: no change up to four times a dimension or strength, or a friction of 1.")
+        }
+        (0, true, false) => {
+            Some("Each goes by the other requirements; the fit that it lets in meets the time as well.")
+        }
+        (0, false, false) => None,
+    }
 }
 
 /// What a reader of the list should know of grades; none when nothing needs saying.
