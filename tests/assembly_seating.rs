@@ -151,6 +151,31 @@ fn an_oven_that_is_too_cold_leaves_no_time() {
     assert_eq!(handling_time(&found), 0.0);
     let verdict = found.verdicts.iter().find(|verdict| verdict.unit == VerdictUnit::Time).unwrap();
     assert!(!verdict.ok && verdict.question == Question::Assembly);
+    // The temperature needed is more than the oven gives.
+    let hub = found.verdicts.iter().find(|verdict| verdict.unit == VerdictUnit::Temperature).unwrap();
+    assert!(!hub.ok && hub.required == Some(333.15) && hub.found == found.assembly.heat_hub.temperature);
+}
+
+/// A hub that is left in an oven above its limit becomes as hot as that, though it would clear below.
+#[test]
+fn an_oven_above_the_limit_of_the_hub_is_not_met() {
+    let found = findings_of(&hot("  oven_temperature: 340 degC\n  hub_temperature_limit: 320 degC\n"));
+    let hub = found.verdicts.iter().find(|verdict| verdict.unit == VerdictUnit::Temperature).unwrap();
+    assert!(found.assembly.heat_hub.possible && !hub.ok);
+    assert_eq!((hub.found, hub.required), (Some(613.15), Some(593.15)));
+    assert_eq!(hub.at, "left in its oven");
+}
+
+/// Parts that overlap only after the clearance is gone cannot be seated.
+#[test]
+fn a_transfer_that_takes_longer_than_there_is_time_is_not_met() {
+    let time = |transfer: &str| {
+        let found = findings_of(&hot(&format!("  transfer_time: {transfer}\n")));
+        found.verdicts.into_iter().find(|verdict| verdict.unit == VerdictUnit::Time).unwrap()
+    };
+    let (short, long) = (time("1 s"), time("10 h"));
+    assert!(short.ok && short.required == Some(1.0));
+    assert!(!long.ok && long.found.unwrap() < 36_000.0);
 }
 
 #[test]

@@ -485,7 +485,7 @@ fn many(diameters: &[f64], interference: &[f64], rest: &str) -> Findings {
         &text
             .replace("tensile_strength: 900 MPa", "tensile_strength: 2500 MPa")
             .chars()
-            .chain("friction: {holding: 0.12}\nsmoothing: {factor: 0}\n".chars())
+            .chain("friction: {holding: 0.12, pressing: 0.1}\nsmoothing: {factor: 0}\n".chars())
             .chain(rest.chars())
             .collect::<String>(),
     )
@@ -663,4 +663,55 @@ fn a_shaft_that_its_own_load_brings_near_yield_is_named() {
     assert!(!named(&joint(1000.0), "against its yield strength"));
     let fatigue = found.service.fatigue[0];
     assert!(fatigue.safety.low < 1.0 && named(&found, "Rotating bending in state rated may break the shaft"));
+}
+
+/// Three rings: the joint made first has grown the outside of the inner pair (or shrunk the bore of the outer one) before the
+/// last is made: Lamé, u(b) = 2 p a² b/(E (b² − a²)) at the free outside, u(a) = 2 p b² a/(E (b² − a²)) at the free bore.
+/// A hub of constant coefficient α clears at ΔT = (overlap + clearance)/(α d).
+#[test]
+fn the_last_joint_counts_what_the_first_has_strained() {
+    let heat = "assembly: {method: heat hub, clearance: 40 um}\n";
+    let (a, b, c, d) = (0.02, 0.04, 0.06, 0.10);
+    // Inner joint first: the middle ring's outside grows under the pressure in its bore.
+    let found = many(&[20.0, 40.0, 60.0, 100.0], &[20.0, 30.0], heat);
+    let first = closed_pair(a, b, c, 20e-6, 0.0);
+    let grown = 2.0 * first * b * b * c / (200e9 * (c * c - b * b));
+    let steps = &found.service.steps;
+    assert_relative_eq!(steps[0].overlap, 20e-6, max_relative = 1e-9);
+    assert_relative_eq!(steps[0].pressure, first, max_relative = 1e-9);
+    assert_relative_eq!(steps[1].overlap, 30e-6 + grown, max_relative = 1e-9);
+    assert_relative_eq!(found.assembly.needed, 30e-6 + grown + 40e-6, max_relative = 1e-9);
+    let hot = 293.15 + (30e-6 + grown + 40e-6) / (12e-6 * c);
+    assert_relative_eq!(found.assembly.heat_hub.temperature.unwrap(), hot, max_relative = 1e-9);
+    let earlier = &found.assembly.earlier[0];
+    assert_relative_eq!(earlier.hub_temperature.unwrap(), 293.15 + 60e-6 / (12e-6 * b), max_relative = 1e-9);
+    // Outer joint first: the middle ring's bore shrinks under the pressure round it.
+    let found = many(&[20.0, 40.0, 60.0, 100.0], &[20.0, 30.0], &format!("order: [2, 1]\n{heat}"));
+    let first = closed_pair(b, c, d, 30e-6, 0.0);
+    let shrunk = 2.0 * first * c * c * b / (200e9 * (c * c - b * b));
+    assert_relative_eq!(found.service.steps[1].overlap, 20e-6 + shrunk, max_relative = 1e-9);
+    let hot = 293.15 + (20e-6 + shrunk + 40e-6) / (12e-6 * b);
+    assert_relative_eq!(found.assembly.heat_hub.temperature.unwrap(), hot, max_relative = 1e-9);
+    let verdicts: Vec<&str> = found
+        .verdicts
+        .iter()
+        .filter(|verdict| verdict.subject.ends_with("temperature"))
+        .map(|verdict| verdict.at.as_str())
+        .collect();
+    assert_eq!(verdicts, ["tightest pair with clearance", "fit 2, made before the last, every fit tightest"]);
+}
+
+/// The press is judged for every joint: 40 kN would do for the last one alone.
+#[test]
+fn every_press_of_several_rings_is_judged() {
+    let found = many(&[20.0, 40.0, 60.0, 70.0], &[80.0, 10.0], "require: {press_force: 40 kN}\n");
+    let forces: Vec<_> =
+        found.verdicts.iter().filter(|verdict| verdict.subject == "peak press force").collect();
+    assert_eq!(forces.len(), 2);
+    assert!(forces[0].ok && !forces[1].ok, "{forces:#?}");
+    // Lamé and μ p π d L, the chamfer apart: at most 0.2 % more.
+    let pressure = closed_pair(0.02, 0.04, 0.06, 80e-6, 0.0);
+    let plateau = 0.1 * pressure * PI * 0.04 * 0.04;
+    let force = forces[1].found.unwrap();
+    assert!(force >= plateau && force < 1.01 * plateau, "{force} and {plateau}");
 }

@@ -246,7 +246,7 @@ fn band(given: Option<&str>, joint: &Joint, source: &Source<'_>) -> Result<(Rang
         let fault = "no interference meets all requirements of the joint file";
         return Err(source.refused(fault, None, Some(help.to_owned())));
     }
-    let timed = joint.assembly.practice.handling_time.is_some();
+    let timed = joint.assembly.practice.time_needed().is_some();
     let named = if timed && (joint.assembly.heats() || joint.assembly.chills()) {
         "from the requirements of the joint file without its handling time"
     } else {

@@ -29,7 +29,7 @@ pub(super) fn assembly(
     let hub_limit = hub_limit(joint);
     let joining = Joining {
         diameter: joint.interface_diameter(joint.last_interface()),
-        interference: extremes.tightest.interference,
+        interference: extremes.tightest.interference + strained(joint, &extremes.tightest),
         clearance: joint.assembly.clearance_to_open(),
         hub: &hub.material.expansion,
         shaft: &shaft.material.expansion,
@@ -55,6 +55,7 @@ pub(super) fn assembly(
         constant_coefficient: Vec::new(),
         times: Times::default(),
         cold_bath: None,
+        earlier: Vec::new(),
         press_work: None,
         oil: None,
     };
@@ -69,7 +70,8 @@ fn in_the_oven_and_bath(
     extremes: &Extremes<PairFindings>,
     assembly: &mut AssemblyFindings,
 ) -> Result<(), FindingsError> {
-    let interference = (extremes.loosest.interference, extremes.tightest.interference);
+    let to_part = |pair: &PairFindings| pair.interference + strained(joint, pair);
+    let interference = (to_part(&extremes.loosest), to_part(&extremes.tightest));
     assembly.times = times::times(joint, assembly, interference)?;
     if let Some(soak) = &assembly.times.shaft {
         match cold_bath(joint, soak)? {
@@ -100,6 +102,19 @@ fn constant_coefficient(ring: &Ring, temperature: f64, diameter: f64) -> Option<
         by_curve: diameter * expansion.strain(temperature).ok()?,
         by_coefficient: diameter * coefficient * (temperature - REFERENCE_TEMPERATURE),
     })
+}
+
+/// Overlap that the joints made before add at the interface joined last, m: they have grown what is inside it and shrunk what
+/// is outside.
+fn strained(joint: &Joint, pair: &PairFindings) -> f64 {
+    if joint.rings.len() == 2 {
+        return 0.0;
+    }
+    let (shaft, hub) = joint.joined_last();
+    let shop = joint.assembly.shop_temperature;
+    let strain = |ring: &Ring| ring.material.expansion.strain(shop).unwrap_or(0.0);
+    let by_temperature = joint.interface_diameter(joint.last_interface()) * (strain(shaft) - strain(hub));
+    pair.shop_interference - pair.effective_interference - by_temperature
 }
 
 fn press_curve(joint: &Joint, pair: &PairFindings, friction: f64) -> Result<PressCurve, FindingsError> {
@@ -239,10 +254,7 @@ fn hub_limit(joint: &Joint) -> Option<(f64, String)> {
         .map(|limit| (limit.value, format!("limit of {}", hub.material.name)));
     let user =
         joint.assembly.hub_temperature_limit.map(|limit| (limit, "limit given in the joint file".to_owned()));
-    match (material, user) {
-        (Some(material), Some(user)) => Some(if user.0 < material.0 { user } else { material }),
-        (material, user) => material.or(user),
-    }
+    material.into_iter().chain(user).reduce(|low, other| if other.0 < low.0 { other } else { low })
 }
 
 /// Temperature of a bath, K.

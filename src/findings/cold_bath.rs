@@ -1,6 +1,6 @@
 //! How much liquid nitrogen or dry ice the chilling takes, and what its gas does to the air of the room.
 
-use super::thermal_part::{body, substance};
+use super::thermal_part::{Pace, body, joined_parts, substance};
 use super::times::SoakFindings;
 use crate::assembly::AssemblyError;
 use crate::assembly::atmosphere::{
@@ -86,12 +86,12 @@ pub(super) fn cold_bath(
     joint: &Joint,
     soak: &SoakFindings,
 ) -> Result<Result<ColdBathFindings, String>, AssemblyError> {
-    let (shaft, _) = joint.joined_last();
+    let (shaft, _) = joined_parts(joint, Pace::Slow);
     let shop = joint.assembly.shop_temperature;
     let coolant = coolant(joint.assembly.bath);
     let practice = &joint.assembly.practice;
     let length = practice.chilled_length.unwrap_or(joint.length);
-    let part = body(shaft, length);
+    let part = body(&shaft, length);
     let Some(substance) = substance(&shaft.material, coolant.temperature, shop)? else {
         return Ok(
             Err("The amount of coolant does not exist: the material has no specific heat.".to_owned()),

@@ -6,8 +6,8 @@ use super::condition::Condition;
 use super::kernel::{Kernel, pair_interferences};
 use super::softening::Parts;
 use super::{
-    DutyFindings, Findings, OnsetOfYield, assembly_of, bearing_of, cautions, oil, service, softening,
-    verdicts,
+    DutyFindings, Findings, OnsetOfYield, assembly_of, bearing_of, cautions, earlier, oil, service,
+    softening, verdicts,
 };
 use crate::assembly::AssemblyError;
 use crate::joint::{Allow, Joint};
@@ -92,6 +92,7 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
     }
     let service = service::service(&joint, &kernel, &pairs, &extremes.tightest, &duty, plastic)?;
     let mut assembly = assembly_of::assembly(&joint, &extremes)?;
+    assembly.earlier = earlier::earlier(&joint, &service.steps)?;
     assembly.oil = oil::oil(&joint, &kernel, &pairs, &extremes, service.plastic.as_ref())?;
     let character =
         joint.fits.get(joint.last_interface()).map_or(Character::Clearance, |fit| fit.limits.character());

@@ -160,7 +160,7 @@ fn short_time(findings: &Findings) -> Option<Caution> {
 
 /// A time that is met only without frost.
 fn frosted(findings: &Findings) -> Option<Caution> {
-    let needed = findings.joint.assembly.practice.handling_time?;
+    let needed = findings.joint.assembly.practice.time_needed()?;
     let end = findings.assembly.times.handling.as_ref()?.frost.as_ref()?.at_end?;
     (end.gone < needed && needed <= end.time).then(|| Caution {
         subject: "cold",

@@ -6,6 +6,7 @@ mod cautions;
 pub mod cold_bath;
 mod compute;
 mod condition;
+mod earlier;
 mod envelope;
 pub mod expression;
 mod fatigue;
@@ -28,6 +29,7 @@ pub use bearing_of::{BearingFindings, BearingState, HOOP_LIMIT, RING_LIMIT_SOURC
 pub use cautions::criterion_source;
 use cold_bath::ColdBathFindings;
 pub use compute::{FindingsError, compute};
+pub use earlier::EarlierJoint;
 pub use envelope::{Envelope, EnvelopeLine, EnvelopeMeaning, EnvelopeState};
 pub use fatigue::{Fatigue, PLAIN_SHARE, TESTED_DIAMETER, TESTED_NOTCH};
 pub use kernel::after_smoothing;
@@ -263,6 +265,8 @@ pub struct AssemblyFindings {
     pub times: Times,
     /// The cold bath of the method asked for.
     pub cold_bath: Option<ColdBathFindings>,
+    /// The joints of several rings that are made before the last one; empty with two rings.
+    pub earlier: Vec<EarlierJoint>,
     /// Around the press, and after it; none when no pair grips.
     pub press_work: Option<PressWorkFindings>,
     /// Oil injection; none when no pair grips.

@@ -112,6 +112,11 @@ pub struct WornHub {
 pub struct OrderStep {
     /// The interface that is joined in this step.
     pub interface: usize,
+    /// Diametral overlap of the parts there before the step, at the shop temperature, m: with what the steps before have
+    /// strained.
+    pub overlap: f64,
+    /// Contact pressure there after the step, Pa.
+    pub pressure: f64,
     /// Stress in each ring; rings that are not joined yet are free of stress.
     pub rings: Vec<RingStress>,
 }
@@ -346,11 +351,20 @@ fn steps(
         .order
         .iter()
         .map(|joined| {
-            if let (Some(own), Some(made)) = (interference.get_mut(*joined), tightest.effective.get(*joined))
-            {
-                *own = *made;
+            let made = tightest.effective.get(*joined).copied().unwrap_or_default();
+            let apart = kernel.stack(&interference, &kernel.shop)?.solve()?;
+            let gap = 2.0 * apart.gaps.get(*joined).copied().unwrap_or_default();
+            let before = interference.get(*joined).copied().unwrap_or_default();
+            if let Some(own) = interference.get_mut(*joined) {
+                *own = made;
             }
-            Ok(OrderStep { interface: *joined, rings: kernel.ring_stresses(&interference, &kernel.shop)? })
+            let together = kernel.stack(&interference, &kernel.shop)?.solve()?;
+            Ok(OrderStep {
+                interface: *joined,
+                overlap: made - before - gap,
+                pressure: together.pressures.get(*joined).copied().unwrap_or_default(),
+                rings: kernel.ring_stresses(&interference, &kernel.shop)?,
+            })
         })
         .collect()
 }

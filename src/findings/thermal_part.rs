@@ -4,11 +4,38 @@ use crate::assembly::AssemblyError;
 use crate::assembly::conduction::{Body, Substance};
 use crate::assembly::cryogen::debye_specific_heat;
 use crate::assembly::property::Property;
-use crate::joint::Ring;
+use crate::joint::{Joint, Ring};
 use crate::material::{Family, Material};
 
 /// Below this temperature a metal's specific heat is taken from Debye's function, K.
 const COLD: f64 = 273.15;
+
+/// The two parts that are joined last as the heat sees them, the inner one first: whole, with the rings that each of them has
+/// been joined with before. Their material is that of the ring at the seat.
+///
+/// A stepped part has the section with the `slow` pace of all its slices, that which soaks longest, or the quick one, which
+/// is the first to lose its warmth or cold.
+pub(super) fn joined_parts(joint: &Joint, pace: Pace) -> (Ring, Ring) {
+    let (shaft, hub) = joint.joined_last();
+    let (innermost, outermost) = joint.shaft_and_hub();
+    let (mut bore, mut rim) = (innermost.inner_diameter, outermost.outer_diameter);
+    let pick =
+        |slow: fn(f64, f64) -> f64, quick: fn(f64, f64) -> f64| if pace == Pace::Slow { slow } else { quick };
+    let bores = joint.slices.iter().map(|slice| slice.shaft_bore);
+    bore = bores.reduce(pick(f64::min, f64::max)).unwrap_or(bore);
+    let rims = joint.slices.iter().map(|slice| slice.hub_outer_diameter);
+    rim = rims.reduce(pick(f64::max, f64::min)).unwrap_or(rim);
+    (Ring { inner_diameter: bore, ..shaft.clone() }, Ring { outer_diameter: rim, ..hub.clone() })
+}
+
+/// Which slice of a stepped part is meant.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) enum Pace {
+    /// The one that takes longest to soak.
+    Slow,
+    /// The one whose temperature changes first.
+    Quick,
+}
 
 /// The ring over `length` (m).
 pub(super) fn body(ring: &Ring, length: f64) -> Body {

@@ -3,7 +3,7 @@
 use super::AssemblyFindings;
 use super::assembly_of::{bath_name, bath_temperature};
 use super::frost::{self, FrostFindings};
-use super::thermal_part::{body, substance};
+use super::thermal_part::{Pace, body, joined_parts, substance};
 use crate::assembly::AssemblyError;
 use crate::assembly::conduction::{Conduction, Substance, Surroundings};
 use crate::assembly::film::Film;
@@ -111,7 +111,7 @@ pub(super) fn times(
     };
     let shop = joint.assembly.shop_temperature;
     let (coldest, hottest) = (plan.shaft.min(shop), plan.oven.max(shop));
-    let (shaft, hub) = joint.joined_last();
+    let (shaft, hub) = &joined_parts(joint, Pace::Slow);
     let (Some(shaft_substance), Some(hub_substance)) =
         (substance(&shaft.material, coldest, hottest)?, substance(&hub.material, coldest, hottest)?)
     else {
@@ -127,6 +127,7 @@ pub(super) fn times(
         let wanted = assembly.chill_shaft.temperature.filter(|_| joint.assembly.method == Method::ChillShaft);
         times.shaft = Some(chilled(joint, shaft, &shaft_substance, wanted, bath)?);
     }
+    let (shaft, hub) = &joined_parts(joint, Pace::Quick);
     let pair = Handling {
         hub: handled(hub, &hub_substance, plan.hub, joint.length),
         shaft: HandledPart {

@@ -203,8 +203,14 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
         ok,
         at: at.to_owned(),
     };
-    let (shaft, hub) = findings.joint.shaft_and_hub();
+    let (shaft, hub) = findings.joint.joined_last();
     let limit = assembly.hub_limit.as_ref().map(|(limit, _)| *limit);
+    let plan = &findings.joint.assembly;
+    // A hub left in its oven becomes as hot as that, and no hotter.
+    let oven = plan.practice.oven_temperature.filter(|_| plan.heats());
+    let too_hot = oven.filter(|oven| limit.is_some_and(|limit| *oven > limit));
+    let limit = limit.into_iter().chain(oven).reduce(f64::min);
+    let below = |found: Option<f64>| found.is_some_and(|found| limit.is_none_or(|limit| found <= limit));
     let mut verdicts = match findings.joint.assembly.method {
         Method::Press => {
             let force = assembly.press.tightest.peak_force;
@@ -225,9 +231,9 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
                 &format!("{} temperature", hub.name),
                 VerdictUnit::Temperature,
                 limit,
-                route.temperature,
-                route.possible,
-                "tightest pair with clearance",
+                too_hot.or(route.temperature),
+                route.possible && too_hot.is_none() && below(route.temperature),
+                if too_hot.is_some() { "left in its oven" } else { "tightest pair with clearance" },
             )]
         }
         Method::ChillShaft => {
@@ -243,8 +249,8 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
         }
         Method::HeatAndChill => {
             let bath = assembly.baths.iter().find(|bath| bath.bath == findings.joint.assembly.bath);
-            let found = bath.and_then(|bath| bath.hub_temperature);
-            let ok = found.is_some_and(|found| limit.is_none_or(|limit| found <= limit));
+            let found = too_hot.or(bath.and_then(|bath| bath.hub_temperature));
+            let ok = below(found);
             vec![verdict(
                 &format!("{} temperature besides the bath", hub.name),
                 VerdictUnit::Temperature,
@@ -255,8 +261,56 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
             )]
         }
     };
+    verdicts.extend(earlier(findings));
     verdicts.extend(handling(findings));
     verdicts
+}
+
+/// The joints of several rings that are made before the last one.
+fn earlier(findings: &Findings) -> Vec<Verdict> {
+    let joint = &findings.joint;
+    let found = findings.assembly.earlier.iter();
+    found
+        .map(|earlier| {
+            let name = |index: usize| joint.rings.get(index).map_or("part", |ring| ring.name.as_str());
+            let outer = name(earlier.interface + 1);
+            let cold = |alone: bool| alone.then(|| super::bath_temperature(joint.assembly.bath));
+            let within = |found: Option<f64>| {
+                found.is_some_and(|found| earlier.hub_limit.is_none_or(|limit| found <= limit))
+            };
+            let (subject, unit, required, found, ok) = match joint.assembly.method {
+                Method::Press => {
+                    let (force, allowed) = (earlier.press_force, joint.require.press_force);
+                    let ok = allowed.is_none_or(|allowed| force <= allowed);
+                    ("peak press force".to_owned(), VerdictUnit::Force, allowed, Some(force), ok)
+                }
+                Method::HeatHub => {
+                    let found = earlier.hub_temperature;
+                    let subject = format!("{outer} temperature");
+                    (subject, VerdictUnit::Temperature, earlier.hub_limit, found, within(found))
+                }
+                Method::ChillShaft => {
+                    let subject = format!("{} in the bath", name(earlier.interface));
+                    let found = cold(earlier.bath_alone);
+                    (subject, VerdictUnit::Temperature, cold(true), found, earlier.bath_alone)
+                }
+                Method::HeatAndChill => {
+                    let found = earlier.hub_temperature_in_bath;
+                    let subject = format!("{outer} temperature besides the bath");
+                    (subject, VerdictUnit::Temperature, earlier.hub_limit, found, within(found))
+                }
+            };
+            Verdict {
+                question: Question::Assembly,
+                subject,
+                required,
+                found,
+                unit,
+                ok,
+                at: format!("fit {}, made before the last, every fit tightest", earlier.interface + 1),
+            }
+        })
+        .collect()
 }
 
 /// The time from oven or bath to seated; nothing when the parts pass each other for ever and nothing is required.
@@ -265,7 +319,7 @@ fn handling(findings: &Findings) -> Option<Verdict> {
     if !plan.heats() && !plan.chills() {
         return None;
     }
-    let required = plan.practice.handling_time;
+    let required = plan.practice.time_needed();
     let handling = findings.assembly.times.handling.as_ref();
     let found = handling.and_then(|handling| handling.tightest.gone);
     if found.is_none() && required.is_none() {

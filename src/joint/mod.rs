@@ -118,6 +118,12 @@ impl Joint {
         self.order.last().copied().unwrap_or(0)
     }
 
+    /// Whether a ring has no bore, in any slice.
+    pub fn is_solid(&self, index: usize) -> bool {
+        let ring = self.rings.get(index).is_some_and(|ring| ring.inner_diameter == 0.0);
+        ring && (index > 0 || self.slices.iter().all(|slice| slice.shaft_bore == 0.0))
+    }
+
     /// The innermost and the outermost ring.
     pub fn shaft_and_hub(&self) -> (&Ring, &Ring) {
         (&self.rings[0], &self.rings[self.rings.len() - 1])

@@ -89,6 +89,23 @@ pub struct Practice {
     pub temperature_lag: f64,
 }
 
+impl Practice {
+    /// Time that must be left from oven or bath, s: the one required, and at least the one after which the parts begin to
+    /// overlap; none when neither is given.
+    ///
+    /// # Example
+    /// ```
+    /// use hubgrip::joint::practice::Practice;
+    /// let practice = Practice { handling_time: Some(10.0), transfer_time: 25.0, ..Practice::default() };
+    /// assert_eq!(practice.time_needed(), Some(25.0));
+    /// assert_eq!(Practice::default().time_needed(), None);
+    /// ```
+    pub fn time_needed(&self) -> Option<f64> {
+        let transfer = (self.transfer_time > 0.0).then_some(self.transfer_time);
+        self.handling_time.into_iter().chain(transfer).reduce(f64::max)
+    }
+}
+
 /// Share by which the shaft lags behind when the file is silent.
 pub const TEMPERATURE_LAG: f64 = 0.5;
 

@@ -181,6 +181,9 @@ pub fn soak_of(findings: &Findings, soak: &SoakFindings) -> String {
         time_needed(soak.hour_per_inch),
         soak.source
     );
+    if findings.assembly.times.handling.is_some() {
+        text.push_str(" The time to seat the parts counts from the 99 %.");
+    }
     if let Some((stress, strength)) = &soak.quench {
         let against = match strength {
             Some(strength) => format!(" of its {}", show(Measure::Pressure, *strength, system)),

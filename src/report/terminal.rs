@@ -77,21 +77,24 @@ fn title(out: &mut String, findings: &Findings) {
     for wrapped in textwrap::wrap(&name, WIDTH) {
         line(out, format!("{HEADING}{wrapped}{HEADING:#}"));
     }
-    let size = show(Measure::Size, joint.diameter, joint.display);
-    let callouts: Vec<&str> = joint.fits.iter().map(|fit| fit.callout.as_str()).collect();
-    let callout = callouts.join(", ");
-    let interference = &findings.extremes;
     let unit = display_unit(Measure::Deviation, joint.display).name;
-    let from = show(Measure::Deviation, interference.loosest.interference, joint.display).number;
-    let to = show(Measure::Deviation, interference.tightest.interference, joint.display).number;
-    paragraph(
-        out,
-        "",
-        &format!(
-            "{size}  {callout}: {} fit, interference {from} to {to} {unit}",
-            character_name(findings.character)
-        ),
-    );
+    for (index, fit) in joint.fits.iter().enumerate() {
+        let size = show(Measure::Size, joint.interface_diameter(index), joint.display);
+        let interference = fit.limits.interference();
+        let number = |metres| show(Measure::Deviation, metres, joint.display).number;
+        let several = if joint.fits.len() > 1 { format!("fit {}  ", index + 1) } else { String::new() };
+        paragraph(
+            out,
+            "",
+            &format!(
+                "{several}{size}  {}: {} fit, interference {} to {} {unit}",
+                fit.callout,
+                character_name(fit.limits.character()),
+                number(interference.loosest),
+                number(interference.tightest)
+            ),
+        );
+    }
     for (key, value) in &joint.set {
         paragraph(out, "set ", &plain(&format!("{key} = {value}")));
     }
@@ -237,16 +240,22 @@ pub fn extreme_rows(findings: &Findings) -> Vec<(String, Extremes<Option<String>
             findings.extremes.as_ref().map(|pair| Some(show(measure, value(pair), system).number)),
         )
     };
+    // With several fits, these are those of the fit that is joined last.
+    let last =
+        if joint.fits.len() > 1 { format!(", fit {}", joint.last_interface() + 1) } else { String::new() };
+    let of_last = |name: &str, measure: Measure, value: fn(&PairFindings) -> f64| {
+        measured(&format!("{name}{last}"), measure, value)
+    };
     let mut rows = vec![
-        measured("interference", Measure::Deviation, |pair| pair.interference),
-        measured("lost by smoothing", Measure::Deviation, |pair| pair.smoothing),
-        measured("interference that grips", Measure::Deviation, |pair| pair.effective_interference),
+        of_last("interference", Measure::Deviation, |pair| pair.interference),
+        of_last("lost by smoothing", Measure::Deviation, |pair| pair.smoothing),
+        of_last("interference that grips", Measure::Deviation, |pair| pair.effective_interference),
     ];
     if joint.assembly.shop_temperature != REFERENCE_TEMPERATURE {
         rows.push(measured("  in the shop", Measure::Deviation, |pair| pair.shop_interference));
     }
     rows.extend([
-        measured("contact pressure", Measure::Pressure, |pair| pair.pressure),
+        of_last("contact pressure", Measure::Pressure, |pair| pair.pressure),
         measured("  with the loss", Measure::Pressure, |pair| pair.pressure_smoothed),
         measured("  without the loss", Measure::Pressure, |pair| pair.pressure_unsmoothed),
     ]);
@@ -255,7 +264,7 @@ pub fn extreme_rows(findings: &Findings) -> Vec<(String, Extremes<Option<String>
         let cell = |pair: &PairFindings, value: fn(&crate::findings::RingStress) -> f64| {
             pair.rings.get(index).map(|stress| show(Measure::Pressure, value(stress), system).number)
         };
-        let solid = ring.inner_diameter == 0.0;
+        let solid = joint.is_solid(index);
         let place = if solid { "everywhere" } else { "at the bore" };
         rows.push((
             format!("{} hoop stress {place}, {unit}", ring.name),
@@ -273,10 +282,11 @@ pub fn extreme_rows(findings: &Findings) -> Vec<(String, Extremes<Option<String>
                 .map(|pair| pair.rings.get(index).and_then(|stress| stress.safety).map(factor_found)),
         ));
     }
-    rows.push(measured("torque at slip", Measure::Torque, |pair| pair.torque_capacity));
-    rows.push(measured("axial force at slip", Measure::Force, |pair| pair.axial_capacity));
-    rows.push(measured("peak press-in force", Measure::Force, |pair| pair.press_force.high));
-    rows.push(measured("release force", Measure::Force, |pair| pair.release_force.high));
+    let least = if joint.fits.len() > 1 { ", least" } else { "" };
+    rows.push(measured(&format!("torque at slip{least}"), Measure::Torque, |pair| pair.torque_capacity));
+    rows.push(measured(&format!("axial force at slip{least}"), Measure::Force, |pair| pair.axial_capacity));
+    rows.push(of_last("peak press-in force", Measure::Force, |pair| pair.press_force.high));
+    rows.push(of_last("release force", Measure::Force, |pair| pair.release_force.high));
     rows
 }
 

@@ -131,7 +131,7 @@ impl<'a> Judge<'a> {
     /// The time from oven or bath to seated that is required, s; none when nothing is heated or chilled.
     pub(in crate::population) fn handling_time(&self) -> Option<f64> {
         let plan = &self.joint.assembly;
-        plan.practice.handling_time.filter(|_| plan.heats() || plan.chills())
+        plan.practice.time_needed().filter(|_| plan.heats() || plan.chills())
     }
 
     /// Why the full computation refuses a pair of these limits; nothing when it does not.

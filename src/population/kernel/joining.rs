@@ -21,6 +21,8 @@ pub struct PlainJoining<'a> {
     hub_shop_strain: f64,
     shaft_shop_strain: f64,
     hub_limit: Option<f64>,
+    /// What the oven is set to, K; none: as hot as is needed.
+    oven: Option<f64>,
 }
 
 /// A temperature (K) that a part must reach; none when its expansion curve ends before.
@@ -38,10 +40,8 @@ impl<'a> PlainJoining<'a> {
         let shop_temperature = joint.assembly.shop_temperature;
         let user = joint.assembly.hub_temperature_limit;
         let material = outer.material.max_temperature.as_ref().map(|limit| limit.value);
-        let hub_limit = match (material, user) {
-            (Some(material), Some(user)) => Some(material.min(user)),
-            (material, user) => material.or(user),
-        };
+        let hub_limit = material.into_iter().chain(user).reduce(f64::min);
+        let oven = joint.assembly.practice.oven_temperature.filter(|_| joint.assembly.heats());
         Ok(Self {
             diameter: joint.diameter,
             clearance: joint.assembly.clearance_to_open(),
@@ -51,12 +51,13 @@ impl<'a> PlainJoining<'a> {
             hub_shop_strain: strain(outer, shop_temperature)?,
             shaft_shop_strain: strain(inner, shop_temperature)?,
             hub_limit,
+            oven,
         })
     }
 
-    /// Highest temperature allowed for the hub, K: the lower of the material's and the user's.
+    /// Highest temperature for the hub, K: the lowest of the material's, the user's and the oven's.
     pub fn hub_limit(&self) -> Option<f64> {
-        self.hub_limit
+        self.hub_limit.into_iter().chain(self.oven).reduce(f64::min)
     }
 
     /// Whether a hub temperature was found and is allowed.
@@ -99,16 +100,20 @@ impl<'a> PlainJoining<'a> {
     ///
     /// The temperature is the hub's, or the shaft's when the method chills it alone.
     pub fn by_method(&self, method: Method, bath: Bath, interference: f64) -> Option<(Reached, bool)> {
+        let too_hot = self.oven.filter(|oven| self.hub_limit.is_some_and(|limit| *oven > limit));
+        let in_the_oven =
+            |found: Reached| found.is_some_and(|found| self.oven.is_none_or(|oven| found <= oven));
         match method {
             Method::Press => None,
+            Method::HeatHub | Method::HeatAndChill if too_hot.is_some() => Some((too_hot, false)),
             Method::HeatHub => {
                 let found = self.heat_hub(interference);
-                Some((found, self.allowed(found)))
+                Some((found, self.allowed(found) && in_the_oven(found)))
             }
             Method::ChillShaft => Some((self.chill_shaft(interference), self.bath_alone(bath, interference))),
             Method::HeatAndChill => {
                 let found = self.hub_besides(bath, interference).filter(|found| self.allowed(Some(*found)));
-                Some((found, found.is_some()))
+                Some((found, in_the_oven(found)))
             }
         }
     }

@@ -4,6 +4,7 @@ use maud::{Markup, html};
 
 use super::table::{NONE, safety, safety_required, scrolling};
 use super::{Sheet, capital};
+use crate::findings::times::HandlingFindings;
 use crate::findings::{Question, Verdict, VerdictUnit};
 use crate::joint::Method;
 use crate::report::seating::time_allowed;
@@ -76,6 +77,16 @@ fn assembly(sheet: Sheet) -> String {
     let plan = &sheet.findings.joint.assembly;
     let (shaft, hub) = super::instructions::names(sheet);
     let temperature = |value: f64| units.text(Measure::Temperature, value);
+    // The time there is holds for a part as it leaves oven or bath, which is more than it needs to clear.
+    let left = |needed: f64, leaves: fn(&HandlingFindings) -> f64| {
+        let handling = assembly.times.handling.as_ref().filter(|handling| handling.tightest.gone.is_some());
+        match handling.map(leaves).map(temperature) {
+            Some(leaves) if leaves != temperature(needed) => {
+                format!("{leaves} ({} is needed)", temperature(needed))
+            }
+            _ => temperature(needed),
+        }
+    };
     let missed = governing(sheet, Question::Assembly).filter(|verdict| !verdict.ok);
     if let Some(verdict) = missed {
         return format!("can NOT be joined as asked: {}", shortfall(units, verdict, verdict.found));
@@ -88,11 +99,13 @@ fn assembly(sheet: Sheet) -> String {
             )
         }
         Method::HeatHub => match assembly.heat_hub.temperature {
-            Some(hot) => format!("heat the {hub} to {}", temperature(hot)),
+            Some(hot) => format!("heat the {hub} to {}", left(hot, |handling| handling.hub_temperature)),
             None => format!("heating the {hub} does not clear"),
         },
         Method::ChillShaft => match assembly.chill_shaft.temperature {
-            Some(cold) => format!("chill the {shaft} to {}", temperature(cold)),
+            Some(cold) => {
+                format!("chill the {shaft} to {}", left(cold, |handling| handling.shaft_temperature))
+            }
             None => "chilling alone does not clear".to_owned(),
         },
         Method::HeatAndChill => {
@@ -100,8 +113,8 @@ fn assembly(sheet: Sheet) -> String {
             match bath.and_then(|bath| bath.hub_temperature.map(|hot| (bath.temperature, hot))) {
                 Some((cold, hot)) => format!(
                     "chill the {shaft} to {} and heat the {hub} to {}",
-                    temperature(cold),
-                    temperature(hot)
+                    left(cold, |handling| handling.shaft_temperature),
+                    left(hot, |handling| handling.hub_temperature)
                 ),
                 None => "heating and chilling together do not clear".to_owned(),
             }

@@ -26,6 +26,12 @@ pub(super) fn body(sheet: Sheet) -> Markup {
             "hole with the largest shaft. Interference is diametral; what the roughness peaks lose is " (smoothing) "."
         }
         (scrolling("The extreme pairs", "extremes", &table(sheet)))
+        @if !joint.slices.is_empty() {
+            p {
+                "The contact pressure is the mean over the seat; the stresses of a part are those of the slice where it is "
+                "stressed most."
+            }
+        }
         @if plot::yields_by_design(sheet.findings) {
             @let hub = joint.rings.last().map_or("hub", |ring| ring.name.as_str());
             p {
@@ -96,7 +102,7 @@ fn interface_rows(sheet: Sheet, index: usize) -> Markup {
 }
 
 fn ring_rows(sheet: Sheet, index: usize, ring: &Ring) -> Markup {
-    let solid = ring.inner_diameter <= 0.0;
+    let solid = sheet.findings.joint.is_solid(index);
     let last = index + 1 == sheet.findings.joint.rings.len();
     let inner = if solid { "at the centre" } else { "at the bore" };
     let equivalent = match (ring.material.kind, sheet.findings.joint.criterion) {

@@ -98,7 +98,32 @@ fn order(sheet: Sheet) -> String {
         .iter()
         .map(|interface| format!("the {} into the {}", name(*interface), name(interface + 1)))
         .collect();
-    format!("Join in this order: {}. The steps below are for the last of them.", steps.join(", then "))
+    let (inner, outer) = names(sheet);
+    let last = joint.last_interface();
+    let with = |joined: bool, name: &str| {
+        if joined { format!("the {name} with all that it is joined to") } else { format!("the {name}") }
+    };
+    let mut text = format!(
+        "Join in this order: {}. The steps below are for the last of them: {} into {}.",
+        steps.join(", then "),
+        with(last > 0, inner),
+        with(last + 2 < joint.rings.len(), outer)
+    );
+    for earlier in &sheet.findings.assembly.earlier {
+        let outer = name(earlier.interface + 1);
+        let force = sheet.units.brief(Measure::Force, earlier.press_force).text();
+        let heat = match earlier.hub_temperature {
+            Some(hot) => {
+                format!("with the {outer} heated to {}", sheet.units.text(Measure::Temperature, hot))
+            }
+            None => format!("heating the {outer} alone does not clear"),
+        };
+        text.push_str(&format!(
+            " Before, the {} goes into the {outer} with up to {force}, or {heat} (tightest pair).",
+            name(earlier.interface)
+        ));
+    }
+    text
 }
 
 fn check_parts(sheet: Sheet) -> Step {
@@ -118,10 +143,15 @@ fn check_parts(sheet: Sheet) -> Step {
             size(fit.limits.shaft.upper)
         ));
     }
+    let (title, before) = if joint.fits.len() > 1 {
+        ("Measure the parts", ", before the first is joined")
+    } else {
+        ("Measure both parts", "")
+    };
     Step::new(
-        "Measure both parts",
+        title,
         format!(
-            "At {}. {} Parts outside these limits are not covered by this sheet.",
+            "At {}{before}. {} Parts outside these limits are not covered by this sheet.",
             sheet.units.text(Measure::Temperature, REFERENCE_TEMPERATURE),
             sentences.join(" ")
         ),
@@ -187,8 +217,17 @@ fn gauge(sheet: Sheet) -> (f64, f64) {
     let shop = joint.assembly.shop_temperature;
     let clearance = sheet.findings.assembly.clearance;
     let at_shop = |ring: &Ring, size: f64| size * (1.0 + ring.material.expansion.strain(shop).unwrap_or(0.0));
-    let Some(fit) = joint.fits.get(joint.last_interface()) else { return (0.0, 0.0) };
+    let last = joint.last_interface();
+    let Some(fit) = joint.fits.get(last) else { return (0.0, 0.0) };
     let (shaft, hub) = joint.joined_last();
+    // What was joined before has strained the parts.
+    if let [.., before, _] = sheet.findings.service.steps.as_slice()
+        && let (Some(inner), Some(outer)) = (before.rings.get(last), before.rings.get(last + 1))
+    {
+        let bore = fit.limits.nominal + fit.limits.hole.lower + outer.bore_change;
+        let pin = fit.limits.nominal + fit.limits.shaft.upper + inner.outer_change;
+        return (pin + clearance, bore - clearance);
+    }
     let bore = at_shop(hub, fit.limits.nominal + fit.limits.hole.lower);
     let pin = at_shop(shaft, fit.limits.nominal + fit.limits.shaft.upper);
     (pin + clearance, bore - clearance)

@@ -4,7 +4,7 @@ use serde::Serialize;
 
 use super::number::{celsius, finite, microns, millimetres};
 use super::seating::Seating;
-use crate::findings::{AssemblyFindings, BathFindings, Findings, bath_name};
+use crate::findings::{AssemblyFindings, BathFindings, EarlierJoint, Findings, bath_name};
 use crate::joint::{AssemblyPlan, Method};
 
 /// The method asked for, with its temperatures and forces at the tightest pair.
@@ -22,8 +22,20 @@ pub(super) struct Assembly {
     press_work_j: Option<f64>,
     hub_limit_c: Option<f64>,
     baths: Vec<Bath>,
+    earlier: Vec<Earlier>,
     #[serde(flatten)]
     seating: Seating,
+}
+
+/// A joint of several rings that is made before the last one; fits count from 1.
+#[derive(Serialize)]
+struct Earlier {
+    fit: usize,
+    overlap_um: f64,
+    press_force_n: Option<f64>,
+    hub_temperature_c: Option<f64>,
+    hub_temperature_in_bath_c: Option<f64>,
+    bath_alone: bool,
 }
 
 /// What one cold bath gives.
@@ -61,6 +73,7 @@ impl Assembly {
             press_work_j: finite(press.work),
             hub_limit_c: assembly.hub_limit.as_ref().map(|(limit, _)| celsius(*limit)),
             baths: assembly.baths.iter().map(Bath::of).collect(),
+            earlier: assembly.earlier.iter().map(Earlier::of).collect(),
             seating: Seating::of(assembly),
         }
     }
@@ -77,6 +90,19 @@ fn temperatures(assembly: &AssemblyFindings, plan: &AssemblyPlan) -> (Option<f64
         Method::HeatAndChill => {
             let chosen = assembly.baths.iter().find(|bath| bath.bath == plan.bath);
             (chosen.and_then(|bath| bath.hub_temperature), chosen.map(|bath| bath.temperature))
+        }
+    }
+}
+
+impl Earlier {
+    fn of(found: &EarlierJoint) -> Self {
+        Self {
+            fit: found.interface + 1,
+            overlap_um: microns(found.overlap),
+            press_force_n: finite(found.press_force),
+            hub_temperature_c: found.hub_temperature.map(celsius).and_then(finite),
+            hub_temperature_in_bath_c: found.hub_temperature_in_bath.map(celsius).and_then(finite),
+            bath_alone: found.bath_alone,
         }
     }
 }
