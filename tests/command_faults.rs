@@ -1,0 +1,128 @@
+//! The program as a process, used wrongly: nothing is overwritten, and what is told says what would be right.
+
+mod common;
+
+use std::fs;
+use std::path::{Path, PathBuf};
+use std::process::Output;
+
+use common::{hubgrip_in, stderr, stdout};
+
+/// The minimal joint file of the README.
+const PLAIN: &str = "\
+joint_file: 1
+title: Fan hub on a motor shaft
+diameter: 60 mm
+length: 70 mm
+shaft: {material: C45+N}
+hub: {material: C45+N, outer_diameter: 120 mm}
+fit: H7/s6
+duty:
+  - {state: rated, torque: 100 N.m}
+";
+
+fn folder_with(files: &[(&str, &str)]) -> tempfile::TempDir {
+    let folder = tempfile::tempdir().expect("a temporary folder can be made");
+    for (name, text) in files {
+        fs::write(folder.path().join(name), text).expect("the file can be written");
+    }
+    folder
+}
+
+fn example(name: &str) -> PathBuf {
+    Path::new(env!("CARGO_MANIFEST_DIR")).join("examples").join(name)
+}
+
+fn exit_code(output: &Output) -> i32 {
+    output.status.code().expect("the program was not killed")
+}
+
+/// Every file of a folder with its text, in order of name.
+fn contents(folder: &Path) -> Vec<(PathBuf, String)> {
+    let mut found: Vec<(PathBuf, String)> = fs::read_dir(folder)
+        .expect("the folder can be read")
+        .map(|entry| entry.expect("an entry can be read").path())
+        .map(|path| (path.clone(), fs::read_to_string(path).expect("the file is text")))
+        .collect();
+    found.sort();
+    found
+}
+
+#[test]
+fn no_command_overwrites_what_it_reads() {
+    let text = |name: &str| fs::read_to_string(example(name)).expect("the example can be read");
+    let here = folder_with(&[
+        ("self.yaml", PLAIN),
+        ("lots.yaml", &text("population/measured-lots.yaml")),
+        ("holes.csv", &text("population/holes.csv")),
+        ("shafts.csv", &text("population/shafts.csv")),
+        ("base.yaml", &text("batch/base.yaml")),
+        ("joints.csv", &text("batch/joints.csv")),
+        ("press.yaml", &text("pressing/joint.yaml")),
+        ("record.csv", &text("pressing/pinion-01.csv")),
+    ]);
+    let before = contents(here.path());
+    let absolute = here.path().join("self.yaml");
+    for arguments in [
+        vec!["report", "self.yaml", "-o", "self.yaml"],
+        vec!["report", "self.yaml", "-o", "./self.yaml"],
+        vec!["report", "self.yaml", "-o", absolute.to_str().expect("the path is UTF-8")],
+        vec!["report", "lots.yaml", "-o", "holes.csv"],
+        vec!["choose", "self.yaml", "-o", "self.yaml"],
+        vec!["scatter", "self.yaml", "-o", "self.yaml"],
+        vec!["scatter", "lots.yaml", "-o", "lots.yaml"],
+        vec!["scatter", "lots.yaml", "-o", "shafts.csv", "--json"],
+        vec!["sort", "lots.yaml", "--pick-list", "lots.yaml"],
+        vec!["sort", "lots.yaml", "--pick-list", "holes.csv"],
+        vec![
+            "sort",
+            "self.yaml",
+            "--holes",
+            "holes.csv",
+            "--shafts",
+            "shafts.csv",
+            "--pick-list",
+            "shafts.csv",
+        ],
+        vec!["batch", "joints.csv", "--base", "base.yaml", "--keep", "id", "-o", "joints.csv"],
+        vec!["batch", "joints.csv", "--base", "base.yaml", "--keep", "id", "-o", "base.yaml"],
+        vec!["batch", "joints.csv", "--base", "base.yaml", "--keep", "id", "--errors", "joints.csv"],
+        vec!["pressing", "press.yaml", "record.csv", "-o", "press.yaml"],
+        vec!["pressing", "press.yaml", "record.csv", "-o", "record.csv"],
+        vec!["pressing", "press.yaml", ".", "-o", "record.csv"],
+    ] {
+        let output = hubgrip_in(here.path(), &arguments);
+        assert_eq!(exit_code(&output), 2, "{arguments:?}: {}", stderr(&output));
+        assert!(
+            stderr(&output).contains("names an input, which would be overwritten"),
+            "{arguments:?}: {}",
+            stderr(&output)
+        );
+        assert_eq!(stdout(&output), "", "{arguments:?}");
+        assert_eq!(contents(here.path()), before, "{arguments:?}");
+    }
+    // Another file that exists is replaced as before.
+    let output = hubgrip_in(here.path(), &["report", "self.yaml", "-o", "base.yaml", "-q"]);
+    assert_eq!(exit_code(&output), 0, "{}", stderr(&output));
+    assert_ne!(contents(here.path()), before);
+}
+
+#[cfg(target_os = "linux")]
+#[test]
+fn a_link_and_a_redirected_input_are_seen_through() {
+    use std::process::{Command, Stdio};
+    let here = folder_with(&[("self.yaml", PLAIN)]);
+    let link = here.path().join("link.html");
+    std::os::unix::fs::symlink("self.yaml", &link).expect("a link can be made");
+    let output = hubgrip_in(here.path(), &["report", "self.yaml", "-o", "link.html"]);
+    assert_eq!(exit_code(&output), 2, "{}", stderr(&output));
+    let file = fs::File::open(here.path().join("self.yaml")).expect("the file can be read");
+    let output = Command::new(env!("CARGO_BIN_EXE_hubgrip"))
+        .args(["report", "-", "-o", "self.yaml"])
+        .current_dir(here.path())
+        .stdin(Stdio::from(file))
+        .output()
+        .expect("the program can be started");
+    assert_eq!(exit_code(&output), 2, "{}", stderr(&output));
+    assert_eq!(fs::read_to_string(here.path().join("self.yaml")).expect("the file is there"), PLAIN);
+}
