@@ -126,3 +126,16 @@ fn a_link_and_a_redirected_input_are_seen_through() {
     assert_eq!(exit_code(&output), 2, "{}", stderr(&output));
     assert_eq!(fs::read_to_string(here.path().join("self.yaml")).expect("the file is there"), PLAIN);
 }
+
+#[test]
+fn a_state_that_does_not_exist_is_not_made_beside_the_others() {
+    let here = folder_with(&[("joint.yaml", PLAIN), ("table.csv", "duty.1.torque (N.m)\n10\n")]);
+    let output = hubgrip_in(here.path(), &["check", "joint.yaml", "--set", "duty.1.torque=10N.m"]);
+    assert_eq!(exit_code(&output), 2, "{}", stdout(&output));
+    let told = stderr(&output);
+    assert!(told.contains("there is no state 1") && told.contains("0 (`rated`)"), "{told}");
+    let output = hubgrip_in(here.path(), &["check", "joint.yaml", "--set", "duty.0.torque=10N.m"]);
+    assert_eq!(exit_code(&output), 0, "{}", stderr(&output));
+    let bad = hubgrip_in(here.path(), &["batch", "table.csv", "--base", "joint.yaml", "-q"]);
+    assert!(stdout(&bad).contains("there is no state 1"), "{}{}", stdout(&bad), stderr(&bad));
+}
