@@ -215,6 +215,9 @@ pub(crate) enum GivenRoughness {
     Ra(f64),
 }
 
+/// Greatest roughness that is read, m: rougher than any machined seat (common practice, no source).
+pub(crate) const ROUGHEST: f64 = 0.5e-3;
+
 /// A roughness, such as `Rz 6.3 um` or `Ra 0.8 um`.
 #[derive(Debug, Clone)]
 pub(crate) struct Roughness;
@@ -227,9 +230,15 @@ impl Leaf for Roughness {
         let (symbol, depth) =
             text.split_at(text.find(|c: char| !c.is_ascii_alphabetic()).unwrap_or(text.len()));
         let of = |given: fn(f64) -> GivenRoughness| -> Result<GivenRoughness, Refused> {
-            let depth = quantity::parse(Kind::Length, depth)?;
+            let depth = quantity::parse(Kind::Length, depth).map_err(|error| error.suggesting("um"))?;
             if depth < 0.0 {
                 return Err(Refused { message: format!("the roughness {text} is negative"), help: None });
+            }
+            if depth > ROUGHEST {
+                return Err(Refused::new(
+                    format!("the roughness {text} is above 0.5 mm: no machined seat is so rough"),
+                    "is um meant, as in `Rz 6.3 um`?",
+                ));
             }
             Ok(given(depth))
         };

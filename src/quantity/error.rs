@@ -22,12 +22,14 @@ pub enum QuantityError {
         given: String,
     },
     /// A number without its unit.
-    #[error("{given} has no unit: write {given} {unit}", unit = first_unit(*.kind))]
+    #[error("{given} has no unit: write {given} {unit}")]
     NoUnit {
         /// What is due.
         kind: Kind,
         /// The number as written.
         given: String,
+        /// The unit to suggest.
+        unit: &'static str,
     },
     /// A unit that is not known.
     #[error("{unit} is not a unit that is known; {} is due ({})", .kind.phrase(), .kind.unit_names())]
@@ -103,11 +105,27 @@ pub enum QuantityError {
     },
 }
 
-fn first_unit(kind: Kind) -> &'static str {
+pub(super) fn first_unit(kind: Kind) -> &'static str {
     kind.units().next().map_or("", |unit| unit.name)
 }
 
 impl QuantityError {
+    /// The same fault where this unit is the likely one: micrometres for a roughness, which a suggestion of
+    /// millimetres would make a thousand times too great.
+    ///
+    /// # Example
+    /// ```
+    /// use hubgrip::quantity::{Kind, parse};
+    /// let error = parse(Kind::Length, "6.3").unwrap_err().suggesting("um");
+    /// assert_eq!(error.to_string(), "6.3 has no unit: write 6.3 um");
+    /// ```
+    pub fn suggesting(self, unit: &'static str) -> Self {
+        match self {
+            Self::NoUnit { kind, given, .. } => Self::NoUnit { kind, given, unit },
+            other => other,
+        }
+    }
+
     /// What would be right, when there is something to say.
     pub fn help(&self) -> Option<String> {
         match self {

@@ -85,6 +85,7 @@ macro_rules! quantities {
 quantities! {
     Number, Number, "1", "0.8";
     Length, Length, "m", "60 mm";
+    SmallLength, Length, "m", "25 um";
     Force, Force, "N", "2 kN";
     Torque, Torque, "N·m", "900 N.m";
     Pressure, Pressure, "Pa", "355 MPa";

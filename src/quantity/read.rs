@@ -2,7 +2,7 @@
 
 use std::f64::consts::TAU;
 
-use super::error::{QuantityError, shown};
+use super::error::{QuantityError, first_unit, shown};
 use super::scan::{Amount, Scanned, scan};
 use super::unit::{Kind, Scale, Unit, find, plain_spelling};
 use crate::diagnostic::did_you_mean;
@@ -55,7 +55,7 @@ pub(super) fn value(kind: Kind, scanned: &Scanned<'_>, unit: &str) -> Result<f64
 
 fn unit_of(kind: Kind, text: &str, spelling: &str) -> Result<&'static Unit, QuantityError> {
     if spelling.is_empty() {
-        return Err(QuantityError::NoUnit { kind, given: shown(text) });
+        return Err(QuantityError::NoUnit { kind, given: shown(text), unit: first_unit(kind) });
     }
     let plain = plain_spelling(spelling);
     if let Some(unit) = find(kind, &plain) {

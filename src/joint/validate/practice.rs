@@ -5,7 +5,7 @@ use crate::joint::draft::Draft;
 use crate::joint::practice::{HUMIDITY, Heating, Practice, Room, TEMPERATURE_LAG, Vessel};
 use crate::joint::written::{At, Written};
 use crate::joint::{Method, Ring};
-use crate::quantity::{Kind, Length, Number, Temperature, Time, written};
+use crate::quantity::{Kind, Number, SmallLength, Temperature, Time, written};
 
 /// Greatest time that is read, s: a week (common practice, no source).
 const LONGEST: f64 = 604_800.0;
@@ -99,7 +99,12 @@ fn oven(
     Some(Some(temperature))
 }
 
-fn allowance(draft: &mut Draft<'_>, given: Option<&Written<Length>>, key: &str, used: bool) -> Option<f64> {
+fn allowance(
+    draft: &mut Draft<'_>,
+    given: Option<&Written<SmallLength>>,
+    key: &str,
+    used: bool,
+) -> Option<f64> {
     if let Some(given) = given {
         return draft.not_negative(given);
     }
