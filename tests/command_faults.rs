@@ -139,3 +139,33 @@ fn a_state_that_does_not_exist_is_not_made_beside_the_others() {
     let bad = hubgrip_in(here.path(), &["batch", "table.csv", "--base", "joint.yaml", "-q"]);
     assert!(stdout(&bad).contains("there is no state 1"), "{}{}", stdout(&bad), stderr(&bad));
 }
+
+/// The README: with --json an error is one JSON object on standard error.
+#[test]
+fn a_bad_command_line_is_told_as_json_when_json_is_asked_for() {
+    let here = folder_with(&[("joint.yaml", PLAIN)]);
+    for (arguments, words) in [
+        (vec!["check", "--json"], "<JOINT.yaml>"),
+        (vec!["check", "--json", "--bogus"], "'--bogus'"),
+        (vec!["check", "joint.yaml", "--json", "--set", "foo"], "'foo'"),
+        (vec!["chek", "--json"], "'chek'"),
+        (vec!["limits", "--json", "60mm"], "<FIT>"),
+        (vec!["sort", "joint.yaml", "--by", "nothing", "--json"], "'nothing'"),
+        (vec!["report", "joint.yaml", "--json"], "'--json'"),
+    ] {
+        let output = hubgrip_in(here.path(), &arguments);
+        assert_eq!((exit_code(&output), stdout(&output).as_str()), (2, ""), "{arguments:?}");
+        assert_eq!(stderr(&output).lines().count(), 1, "{arguments:?}: {}", stderr(&output));
+        let told: serde_json::Value = serde_json::from_str(&stderr(&output)).expect("it is JSON");
+        let message = told["error"]["message"].as_str().expect("it has a message");
+        assert!(message.contains(words) && !message.starts_with("error"), "{arguments:?}: {message}");
+        assert!(told["error"]["help"].as_str().is_some_and(|help| !help.is_empty()), "{arguments:?}");
+        assert!(told["error"]["file"].is_null() && told["error"]["line"].is_null(), "{arguments:?}");
+    }
+    let plain = hubgrip_in(here.path(), &["check"]);
+    assert!(exit_code(&plain) == 2 && stderr(&plain).starts_with("error: "), "{}", stderr(&plain));
+    let behind = hubgrip_in(here.path(), &["check", "--bogus", "--", "--json"]);
+    assert!(stderr(&behind).starts_with("error: "), "a file may be called --json: {}", stderr(&behind));
+    let help = hubgrip_in(here.path(), &["check", "--json", "--help"]);
+    assert!(exit_code(&help) == 0 && stdout(&help).contains("Example:"), "{}", stdout(&help));
+}
