@@ -169,3 +169,25 @@ fn a_bad_command_line_is_told_as_json_when_json_is_asked_for() {
     let help = hubgrip_in(here.path(), &["check", "--json", "--help"]);
     assert!(exit_code(&help) == 0 && stdout(&help).contains("Example:"), "{}", stdout(&help));
 }
+
+#[test]
+fn several_files_are_told_apart_though_their_titles_agree() {
+    let here = folder_with(&[("a.yaml", PLAIN), ("b.yaml", &PLAIN.replace("70 mm", "80 mm"))]);
+    let alone = |file: &str, more: &[&str]| {
+        let arguments: Vec<&str> = ["check", file].into_iter().chain(more.iter().copied()).collect();
+        stdout(&hubgrip_in(here.path(), &arguments))
+    };
+    let both = stdout(&hubgrip_in(here.path(), &["check", "a.yaml", "b.yaml"]));
+    assert_eq!(both, format!("a.yaml:\n{}\nb.yaml:\n{}", alone("a.yaml", &[]), alone("b.yaml", &[])));
+    let both = stdout(&hubgrip_in(here.path(), &["check", "a.yaml", "b.yaml", "--json"]));
+    let mut found = serde_json::Deserializer::from_str(&both).into_iter::<serde_json::Value>();
+    for file in ["a.yaml", "b.yaml"] {
+        let mut object = found.next().expect("there is an object for each file").expect("it is JSON");
+        let name = object.as_object_mut().and_then(|keys| keys.remove("file"));
+        assert_eq!(name, Some(serde_json::Value::from(file)));
+        let only: serde_json::Value = serde_json::from_str(&alone(file, &["--json"])).expect("it is JSON");
+        assert!(only.get("file").is_none());
+        assert_eq!(object, only);
+    }
+    assert!(found.next().is_none());
+}
