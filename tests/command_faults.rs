@@ -191,3 +191,27 @@ fn several_files_are_told_apart_though_their_titles_agree() {
     }
     assert!(found.next().is_none());
 }
+
+#[test]
+fn limits_says_what_is_not_defined_and_joins_its_words() {
+    let here = folder_with(&[]);
+    for (arguments, message, help) in [
+        (["60mm", "H19"], "there is no grade `19`; grades are 01, 0 and 1 to 18", "a letter and a grade"),
+        (["60mm", "I7"], "ISO 286 has no deviation `I`", "deviations are a, b"),
+        (["4000mm", "H7"], "outside ISO 286, which covers over 0 to 3150 mm", "agreed with the maker"),
+        (["4000mm", "H7/s6"], "outside ISO 286", "a joint file takes limits as numbers"),
+        (["2in", "LC 6"], "its table is not carried", "look it up in a printed copy"),
+    ] {
+        let output = hubgrip_in(here.path(), &["limits", arguments[0], arguments[1]]);
+        assert_eq!(exit_code(&output), 2, "{arguments:?}: {}", stdout(&output));
+        let told = stderr(&output);
+        assert!(told.contains(message) && told.contains(help), "{arguments:?}: {told}");
+        assert!(!told.contains("`/`") && !told.contains('{'), "{arguments:?}: {told}");
+    }
+    for (apart, together) in [(&["2in", "FN", "4"], "FN 4"), (&["60mm", "H7", "/s6"], "H7 /s6")] {
+        let arguments: Vec<&str> = ["limits"].into_iter().chain(apart.iter().copied()).collect();
+        let output = hubgrip_in(here.path(), &arguments);
+        assert_eq!(exit_code(&output), 0, "{apart:?}: {}", stderr(&output));
+        assert_eq!(stdout(&output), stdout(&hubgrip_in(here.path(), &["limits", apart[0], together])));
+    }
+}
