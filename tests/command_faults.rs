@@ -215,3 +215,23 @@ fn limits_says_what_is_not_defined_and_joins_its_words() {
         assert_eq!(stdout(&output), stdout(&hubgrip_in(here.path(), &["limits", apart[0], together])));
     }
 }
+
+/// What is told of an output that cannot be written has the same bytes in every run: the name that was given, and why.
+#[test]
+fn an_output_that_cannot_be_written_is_named_as_it_was_given() {
+    let here = folder_with(&[("joint.yaml", PLAIN), ("a-file", "kept")]);
+    for (target, why) in [
+        ("missing/out.html", "cannot write: the folder missing does not exist"),
+        ("a-file/out.html", "cannot write: "),
+        (".", "cannot write: it is a folder"),
+    ] {
+        let run = || hubgrip_in(here.path(), &["report", "joint.yaml", "-o", target]);
+        let (first, second) = (run(), run());
+        assert_eq!(exit_code(&first), 2, "{target}");
+        let told = stderr(&first);
+        assert!(told.starts_with(&format!("{target}: error: {why}")), "{told}");
+        assert!(!told.contains(".hubgrip-"), "{told}");
+        assert_eq!(told, stderr(&second));
+        assert_eq!(stdout(&first), "", "{target}");
+    }
+}
