@@ -235,3 +235,14 @@ fn an_output_that_cannot_be_written_is_named_as_it_was_given() {
         assert_eq!(stdout(&first), "", "{target}");
     }
 }
+
+#[test]
+fn the_list_of_kinds_is_not_asked_for_beside_a_file() {
+    let here = folder_with(&[]);
+    for arguments in [["new", "--list", "-o", "x.yaml"].as_slice(), &["new", "hub", "--list"]] {
+        let output = hubgrip_in(here.path(), arguments);
+        assert_eq!((exit_code(&output), stdout(&output).as_str()), (2, ""), "{arguments:?}");
+        assert!(stderr(&output).contains("cannot be used with"), "{arguments:?}: {}", stderr(&output));
+    }
+    assert_eq!(contents(here.path()), []);
+}
