@@ -178,7 +178,7 @@ fn materials_in_place_are_read_and_refused_at_their_place() {
             case(
                 ("youngs_modulus: 200 GPa", "youngs_modulus: 200"),
                 (4, 51, 3),
-                "200 has no unit: write 200 MPa",
+                "200 has no unit: write 200 GPa",
                 "a pressure",
             ),
             case(

@@ -109,3 +109,94 @@ fn an_uncertainty_that_would_cover_any_fit_is_refused() {
 fn the_usual_file_is_still_read() {
     joint(FULL);
 }
+
+/// A steel shaft, a carbide core and a polymer bush written in place. Invented demo data.
+const IN_PLACE: &str = "\
+joint_file: 1
+diameter: 60 mm
+length: 70 mm
+shaft:
+  material: {kind: ductile, youngs_modulus: 200 GPa, poisson: 0.30, density: 7850 kg/m3, expansion: 11.5e-6 /K, yield_strength: 355 MPa, tensile_strength: 600 MPa}
+hub:
+  material:
+    kind: ductile
+    youngs_modulus: 205 GPa
+    poisson: 0.29
+    density: {value: 7.8 g/cm3, source: demo}
+    expansion: 11.5e-6 /K
+    strength: [{section_up_to: 40 mm, yield_strength: 400 MPa, tensile_strength: 650 MPa}]
+  outer_diameter: 110 mm
+fit: H7/s6
+";
+
+#[test]
+fn a_material_that_cannot_be_is_told_at_its_value() {
+    joint(IN_PLACE);
+    for (from, to, value, message, help) in [
+        (
+            "200 GPa",
+            "200 MPa",
+            "200 MPa",
+            "youngs_modulus 200 MPa is outside 10 GPa to 1200 GPa, which hold all metals and ceramics",
+            "steel has 210 GPa",
+        ),
+        (
+            "200 GPa",
+            "200000 GPa",
+            "200000 GPa",
+            "youngs_modulus 200000 GPa is outside 10 GPa to 1200 GPa, which hold all metals and ceramics",
+            "steel has 210 GPa",
+        ),
+        (
+            "7850 kg/m3",
+            "7.85 kg/m3",
+            "7.85 kg/m3",
+            "density 7.85 kg/m3 is outside 100 kg/m3 to 25000 kg/m3, which hold all materials",
+            "7.85 g/cm3",
+        ),
+        (
+            "yield_strength: 355 MPa, tensile_strength: 600 MPa",
+            "yield_strength: 355 GPa",
+            "355 GPa",
+            "yield_strength 355 GPa is above a tenth of Young's modulus 200 GPa, the strength of an ideal crystal",
+            "200 to 2000 MPa",
+        ),
+        (
+            "tensile_strength: 600 MPa",
+            "tensile_strength: 20.1 GPa",
+            "20.1 GPa",
+            "tensile_strength 20.1 GPa is above a tenth of Young's modulus 200 GPa, the strength of an ideal crystal",
+            "200 to 2000 MPa",
+        ),
+        (
+            "400 MPa, tensile_strength: 650 MPa",
+            "400 MPa, tensile_strength: 650 GPa",
+            "650 GPa",
+            "tensile_strength 650 GPa is above a tenth of Young's modulus 205 GPa, the strength of an ideal crystal",
+            "200 to 2000 MPa",
+        ),
+        ("200 GPa", "200", "200", "200 has no unit: write 200 GPa", "MPa, GPa"),
+    ] {
+        let fault = only(IN_PLACE, from, to, value);
+        assert_eq!(fault.message, message, "{to}");
+        assert!(fault.help.as_ref().is_some_and(|told| told.contains(help)), "{to}: {:?}", fault.help);
+    }
+    // A material's source stands beside its value: the place is that of the whole.
+    let found = faults(&IN_PLACE.replace("7.8 g/cm3", "7.8 kg/m3"));
+    assert_eq!(
+        (found.len(), found[0].message.starts_with("density 7.8 kg/m3")),
+        (1, true),
+        "{}",
+        listed(&found)
+    );
+    let polymer = IN_PLACE.replacen("kind: ductile", "kind: polymer", 1);
+    joint(&polymer.replace("200 GPa", "3 GPa").replace("7850", "1150"));
+    for outside in ["151 GPa", "0.9 MPa"] {
+        let found = faults(&polymer.replace("200 GPa", outside));
+        assert!(
+            found[0].message.contains("is outside 1 MPa to 150 GPa, which hold all polymers"),
+            "{}",
+            listed(&found)
+        );
+    }
+}
