@@ -53,6 +53,10 @@ pub(crate) fn apply(tree: &mut Tree, set: &[(String, String)]) -> Result<(), Vec
 fn one(tree: &mut Tree, origin: Origin, key: &str, value: &str) -> Result<(), Box<Diagnostic>> {
     let mut node = tree.root();
     let mut rest = key.trim();
+    if rest.ends_with('.') {
+        let fault = Diagnostic::new("the key ends with a dot");
+        return Err(Box::new(fault.with_help("take the dot out, or write the key that belongs behind it")));
+    }
     while !rest.is_empty() {
         (node, rest) = step(tree, origin, node, rest)?;
     }
@@ -70,6 +74,10 @@ fn step<'k>(
     match tree.content(node) {
         Content::Null if tree.key_path(node) == "duty" => state(tree, origin, node, rest),
         Content::List(_) => state(tree, origin, node, rest),
+        Content::Null | Content::Map(_) if first.is_empty() => {
+            let fault = Diagnostic::new("nothing stands before a dot of the key");
+            Err(Box::new(fault.with_help("write keys with one dot between them, such as hub.outer_diameter")))
+        }
         Content::Null | Content::Map(_) => {
             let found = tree.get(node, first);
             Ok((found.unwrap_or_else(|| tree.append(node, first, Content::Null, origin)), left))

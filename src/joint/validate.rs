@@ -176,15 +176,15 @@ fn lengths(
             draft.default("length", self::written(Kind::Length, seat.width), "the width of the bearing");
             Some(seat.width)
         }
-        (_, given) => draft
+        (seat, given) => draft
             .required(draft.tree.root(), "length", "70 mm", given.as_ref())
-            .and_then(|written| draft.positive(written)),
+            .and_then(|written| bearing::within_width(draft, written, seat)),
     };
     let Some(written) = &file.relief else {
         draft.default("relief", "0 mm", "the whole length is taken to carry");
         return (length, Some(0.0));
     };
-    let relief = draft.not_negative(written);
+    let relief = draft.zero_or_positive(written);
     if let (Some(length_value), Some(relief_value)) = (length, relief)
         && relief_value >= length_value
     {

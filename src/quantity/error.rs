@@ -85,6 +85,12 @@ pub enum QuantityError {
         /// The text.
         given: String,
     },
+    /// A number far beyond all that a machine part can have.
+    #[error("{given} is no number that a part can have")]
+    TooGreat {
+        /// The text.
+        given: String,
+    },
     /// A temperature below absolute zero.
     #[error("{given} is below absolute zero (-273.15 degC)")]
     BelowAbsoluteZero {
@@ -149,6 +155,7 @@ impl QuantityError {
             }
             Self::Fraction { .. } => Some("write 3/8 in or 2-3/16 in, else a decimal number".to_owned()),
             Self::TooSmall { .. } => Some("write 0 if nothing is meant".to_owned()),
+            Self::TooGreat { .. } => Some("check the exponent and the unit".to_owned()),
             Self::BelowAbsoluteZero { .. } => Some("temperatures are in degC, degF or K".to_owned()),
             Self::RangeOrder { .. } => Some("write the lesser value first, such as 0.08 to 0.14".to_owned()),
             Self::NotPlusMinus { .. } => Some("write ±10 um, +/- 10 um or +30 / -10 um".to_owned()),
