@@ -162,6 +162,7 @@ fn states_have_names_of_their_own() {
     assert_eq!(found[0].message, "`duty` lists no state");
     let unnamed = joint(&format!("{LEAST}duty:\n  - {{torque: 1 N.m}}\n"));
     assert_eq!(unnamed.duty[0].name, "state 1");
+    assert_eq!(unnamed.duty[0].called(), "state 1", "not: state state 1");
 }
 
 #[test]

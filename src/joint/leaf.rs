@@ -7,7 +7,7 @@ use serde::de::{Deserialize, Deserializer, IgnoredAny};
 
 use super::file::VERSION;
 use super::practice::Heating;
-use super::written::{Leaf, Refused, words};
+use super::written::{Leaf, Refused, Words, read_word, words};
 use super::{Bath, Method, SmoothingAt};
 use crate::material::friction::Lubrication;
 use crate::material::record::MaterialRecord;
@@ -72,13 +72,34 @@ words! {
     "degreased" => Lubrication::Degreased,
 }
 
-words! {
-    /// Yes or no.
-    FlagWord: bool, "yes or no",
-    "yes" => true,
-    "no" => false,
-    "true" => true,
-    "false" => false,
+/// Yes or no.
+#[derive(Debug, Clone)]
+pub(crate) struct FlagWord;
+
+impl Words for FlagWord {
+    type Value = bool;
+    const SUBJECT: &'static str = "yes or no";
+    const WORDS: &'static [(&'static str, bool)] =
+        &[("yes", true), ("no", false), ("true", true), ("false", false)];
+}
+
+impl Leaf for FlagWord {
+    type Value = bool;
+
+    fn read(text: &str) -> Result<bool, Refused> {
+        read_word::<Self>(text)
+    }
+}
+
+impl JsonSchema for FlagWord {
+    fn schema_name() -> Cow<'static, str> {
+        "FlagWord".into()
+    }
+
+    /// YAML itself takes `true` for no text, and YAML 1.1 `yes` as well.
+    fn json_schema(_: &mut SchemaGenerator) -> Schema {
+        json_schema!({ "type": ["string", "boolean"], "enum": ["yes", "no", "true", "false", true, false] })
+    }
 }
 
 words! {
