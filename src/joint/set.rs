@@ -113,8 +113,16 @@ fn state<'k>(
         }
         return Err(Box::new(no_such_number(tree, list, &items, number)));
     }
-    let names: Vec<(String, NodeId)> =
-        items.iter().filter_map(|&item| Some((state_name(tree, item)?, item))).collect();
+    let key = tree.key_path(list);
+    if key != "duty" {
+        let fault = Diagnostic::new(format!("`{key}` is a list and has no item `{first}`"));
+        return Err(Box::new(fault.with_help("name the item by its number, counted from 0")));
+    }
+    let names: Vec<(String, NodeId)> = items
+        .iter()
+        .enumerate()
+        .map(|(number, &item)| (state_name(tree, item).unwrap_or_else(|| unnamed(number)), item))
+        .collect();
     let named = names.iter().find_map(|(name, item)| {
         let after = rest.strip_prefix(name.as_str())?;
         if after.is_empty() { Some((*item, "")) } else { Some((*item, after.strip_prefix('.')?)) }
@@ -131,7 +139,6 @@ fn state<'k>(
     let known: Vec<&str> = names.iter().map(|(name, _)| name.as_str()).collect();
     Err(Box::new(match did_you_mean(first, known.iter().copied()) {
         Some(found) => fault.with_help(format!("did you mean `{found}`?")),
-        None if known.is_empty() => fault.with_help("the states have no names: use their numbers, from 0"),
         None => fault.with_help(format!("the states are {}", known.join(", "))),
     }))
 }
@@ -148,9 +155,9 @@ fn no_such_number(tree: &Tree, list: NodeId, items: &[NodeId], number: usize) ->
     let states: Vec<String> = items
         .iter()
         .enumerate()
-        .map(|(number, &item)| match state_name(tree, item) {
-            Some(name) => format!("{number} (`{name}`)"),
-            None => number.to_string(),
+        .map(|(number, &item)| {
+            let name = state_name(tree, item).unwrap_or_else(|| unnamed(number));
+            format!("{number} (`{name}`)")
         })
         .collect();
     let help = match states.as_slice() {
@@ -159,6 +166,11 @@ fn no_such_number(tree: &Tree, list: NodeId, items: &[NodeId], number: usize) ->
         all => format!("numbers count from 0: the states are {}", all.join(", ")),
     };
     Diagnostic::new(format!("there is no state {number}")).with_help(help)
+}
+
+/// What a state without a name is called wherever it is shown: counted from 1.
+fn unnamed(number: usize) -> String {
+    format!("state {}", number + 1)
 }
 
 fn state_name(tree: &Tree, item: NodeId) -> Option<String> {
@@ -276,11 +288,23 @@ duty:
         let (message, help) = refused(one, "duty.1.torque");
         assert_eq!(message, "--set duty.1.torque: there is no state 1");
         assert_eq!(help, "numbers count from 0: the only state is 0 (`rated`)");
+        let (message, help) = refused("rings: [{name: core}]", "rings.core.material");
+        assert_eq!(message, "--set rings.core.material: `rings` is a list and has no item `core`");
+        assert_eq!(help, "name the item by its number, counted from 0");
         let (_, help) = refused("duty: [{torque: 900 N.m}]", "duty.1.torque");
-        assert_eq!(help, "numbers count from 0: the only state is 0");
+        assert_eq!(help, "numbers count from 0: the only state is 0 (`state 1`)");
         let (message, help) = refused("fits: [H7/s6, H7/s6]", "fits.2");
         assert_eq!(message, "--set fits.2: `fits` has no item 2");
         assert_eq!(help, "numbers count from 0: the last is 1; set `fits` as a whole to add one");
+    }
+
+    #[test]
+    fn a_state_without_a_name_goes_by_what_it_is_called_in_the_output() {
+        let tree =
+            after("duty: [{torque: 900 N.m}, {torque: 800 N.m}]", &[("duty.state 2.torque", "1 kN.m")])
+                .unwrap();
+        assert_eq!(scalar(&tree, "duty.1.torque").as_deref(), Some("1 kN.m"));
+        assert_eq!(scalar(&tree, "duty.0.torque").as_deref(), Some("900 N.m"));
     }
 
     #[test]
