@@ -2,7 +2,7 @@
 
 mod joint_support;
 
-use joint_support::{FULL, LEAST, case, check, faults, joint, listed, set};
+use joint_support::{FULL, LEAST, case, check, faults, joint, listed, place, set};
 
 const BEARING: &str = "\
 joint_file: 1
@@ -106,4 +106,35 @@ fn a_key_has_one_dot_between_its_words() {
         assert_eq!(found[0].message, format!("--set {key}: {told}"));
         assert!(found[0].help.is_some());
     }
+}
+
+#[test]
+fn a_part_is_chilled_where_it_enters_and_there_is_time_to_seat_it() {
+    let cold = hubgrip::joint::template::find(Some("cold")).expect("there is one").text;
+    let told = |changes: &[(&str, &str)]| -> Vec<String> {
+        match set(cold, changes) {
+            Ok(_) => Vec::new(),
+            Err(found) => found.into_iter().map(|fault| fault.message).collect(),
+        }
+    };
+    // The seat is the length of 45 mm less a relief of 2 mm.
+    let too_short = "is less than the seat of 43 mm: what stays warm does not enter";
+    for (length, right) in [("1um", false), ("42.9mm", false), ("43mm", true), ("60mm", true)] {
+        let found = told(&[("assembly.chilled_length", length)]);
+        let wanted = format!("--set assembly.chilled_length: chilled_length {length} {too_short}");
+        assert_eq!(found, if right { vec![] } else { vec![wanted] });
+    }
+    // The template needs 8 s from the bath to seated.
+    for (time, right) in [("7.9s", true), ("8s", false), ("20s", false)] {
+        let found = told(&[("assembly.transfer_time", time)]);
+        let wanted = format!(
+            "--set assembly.transfer_time: transfer_time {time} leaves nothing of the handling_time 8 s to seat the part in"
+        );
+        assert_eq!(found, if right { vec![] } else { vec![wanted] });
+    }
+    let text = cold.replace("  # chilled_length: 45 mm  ", "  chilled_length: 1 um  ");
+    let found = faults(&text);
+    assert_eq!(found.len(), 1, "{}", listed(&found));
+    let line = text.lines().position(|line| line.contains("chilled_length")).expect("the line is there") + 1;
+    assert_eq!(place(&found[0]), Some((line, 19, 4)));
 }

@@ -80,6 +80,10 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) ->
     if let (Some(plan), Some(seat), Some(rings)) = (&mut assembly, &seat, &rings) {
         bearing::keep_cool(plan, seat, rings);
     }
+    if let Some(plan) = &assembly {
+        let seat = length.zip(relief).map(|(length, relief)| length - relief);
+        practice::refuse_impossible(draft, file, &plan.practice, seat);
+    }
     let smoothing = smoothing::smoothing(draft, file, rings.as_deref(), method);
     let criterion = criterion(draft, file);
     let require = requirements(draft, file.require.as_ref());
