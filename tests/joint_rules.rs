@@ -162,6 +162,7 @@ fn states_have_names_of_their_own() {
     assert_eq!(found[0].message, "`duty` lists no state");
     let unnamed = joint(&format!("{LEAST}duty:\n  - {{torque: 1 N.m}}\n"));
     assert_eq!(unnamed.duty[0].name, "state 1");
+    assert_eq!(unnamed.duty[0].called(), "state 1", "not: state state 1");
 }
 
 #[test]
@@ -178,7 +179,7 @@ fn materials_in_place_are_read_and_refused_at_their_place() {
             case(
                 ("youngs_modulus: 200 GPa", "youngs_modulus: 200"),
                 (4, 51, 3),
-                "200 has no unit: write 200 MPa",
+                "200 has no unit: write 200 GPa",
                 "a pressure",
             ),
             case(

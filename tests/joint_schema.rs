@@ -146,3 +146,23 @@ fn what_is_plainly_wrong_does_not_match_the_schema() {
         assert!(found.contains(why), "{to}: {found}");
     }
 }
+
+/// YAML takes `true` for no text, and the program reads it like `yes`.
+#[test]
+fn yes_and_no_may_be_written_as_yaml_has_them() {
+    let file = |word: &str| {
+        TEMPLATES[0].text.replacen("torque: 500 N.m,", &format!("torque: 500 N.m, reversing: {word},"), 1)
+    };
+    for (word, meaning) in
+        [("yes", true), ("true", true), ("\"true\"", true), ("no", false), ("false", false)]
+    {
+        let text = file(word);
+        assert_ne!(text, TEMPLATES[0].text);
+        assert_eq!(against_schema(&text), None, "{word}");
+        let joint = read_bytes(text.as_bytes(), Path::new("demo.yaml"), &[], &Library::built_in());
+        assert_eq!(joint.map(|joint| joint.duty[0].reversing), Ok(meaning), "{word}");
+    }
+    for word in ["maybe", "1"] {
+        assert!(against_schema(&file(word)).is_some(), "{word}");
+    }
+}

@@ -208,3 +208,29 @@ proptest! {
         }
     }
 }
+
+#[test]
+fn utf_16_and_merge_keys_are_called_by_their_name() {
+    let library = Library::built_in();
+    let told = |bytes: &[u8]| {
+        let found = read_bytes(bytes, Path::new("demo.yaml"), &[], &library).unwrap_err();
+        assert_eq!(found.len(), 1, "{}", listed(&found));
+        (found[0].message.clone(), found[0].help.clone().unwrap_or_default())
+    };
+    let units: Vec<u16> = LEAST.encode_utf16().collect();
+    let little: Vec<u8> = units.iter().flat_map(|unit| unit.to_le_bytes()).collect();
+    let big: Vec<u8> = units.iter().flat_map(|unit| unit.to_be_bytes()).collect();
+    let marked = |mark: [u8; 2], text: &[u8]| [mark.as_slice(), text].concat();
+    for bytes in [little.clone(), big.clone(), marked([0xff, 0xfe], &little), marked([0xfe, 0xff], &big)] {
+        let (message, help) = told(&bytes);
+        assert_eq!(message, "the file looks like UTF-16, and a joint file is in UTF-8");
+        assert!(help.contains("save it as UTF-8"), "{help}");
+    }
+    assert!(told(b"PK\0\0\0\0").0.contains("NUL bytes"));
+    let merged = LEAST.replacen("shaft: {", "shaft: {<<: {bore: 20 mm}, ", 1);
+    let found = faults(&merged);
+    assert_eq!(found.len(), 1, "{}", listed(&found));
+    assert_eq!(found[0].message, "merge keys (`<<`) are not read");
+    assert_eq!(place(&found[0]), Some((4, 9, 2)));
+    assert!(found[0].help.as_ref().is_some_and(|help| help.contains("write the keys out")));
+}

@@ -14,6 +14,7 @@ const EXAMPLE: &str = "\
 Example:
   hubgrip check joint.yaml
   hubgrip check joint.yaml --set fit=H7/u6 --set hub.outer_diameter=120mm
+  hubgrip check hub.yaml rim.yaml
   hubgrip check --json joint.yaml | jq '.extremes.tightest.pressure_mpa'";
 
 /// Does it hold, does it keep its strength, how is it assembled
@@ -38,17 +39,29 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     let mut worst = Ending::Met;
     let mut all = Vec::new();
     for file in &arguments.files {
-        all.push(input::findings(file, &arguments.what_if.set, &library)?);
+        all.push((shown(file), input::findings(file, &arguments.what_if.set, &library)?));
     }
-    for (index, findings) in all.iter().enumerate() {
-        if index > 0 && !arguments.json {
-            output.result("\n")?;
-        }
-        let text = if arguments.json { json::to_json(findings) } else { terminal::text(findings) };
+    let several = all.len() > 1;
+    for (index, (file, findings)) in all.iter().enumerate() {
+        let text = match (arguments.json, several) {
+            (true, false) => json::to_json(findings),
+            (true, true) => json::to_json_of(file, findings),
+            (false, false) => terminal::text(findings),
+            (false, true) => {
+                let gap = if index > 0 { "\n" } else { "" };
+                format!("{gap}{file}:\n{}", terminal::text(findings))
+            }
+        };
         output.result(&text)?;
         worst = worst.max(ending(findings, arguments.strict));
     }
     Ok(worst)
+}
+
+/// The name of a file on one line, without signs that steer a terminal.
+fn shown(file: &Path) -> String {
+    let name = input::shown(file).display().to_string();
+    name.chars().map(|sign| if sign.is_control() { ' ' } else { sign }).collect()
 }
 
 /// Whether all requirements are met; cautions count when the check is strict.

@@ -75,6 +75,8 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     let library = input::library(materials, output)?;
     let source = Source::of(&arguments.file, &arguments.what_if)?;
     let joint = source.joint_without_fit(&library)?;
+    let measured = input::measured(&joint, &arguments.file);
+    refuse_overwriting("--output", arguments.output.as_deref(), measured.iter().map(PathBuf::as_path))?;
     let standard = match arguments.standard {
         Some(StandardName::Iso) => Standard::Iso286,
         Some(StandardName::Ansi) => Standard::AnsiB4_1,

@@ -1,5 +1,6 @@
 //! How the program ends: one exit code, every error told in one place.
 
+use std::ffi::OsString;
 use std::io::Write;
 use std::process::ExitCode;
 
@@ -72,14 +73,33 @@ pub fn told(failure: &Failure, json: bool, output: &Output) -> ExitCode {
     ExitCode::from(TROUBLE)
 }
 
-/// Help and version end well; a bad command line is trouble.
-pub fn usage(error: &clap::Error) -> ExitCode {
+/// Help and version end well; a bad command line is trouble, told as JSON when `--json` is among the arguments.
+pub fn usage(error: &clap::Error, arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
+    let json = arguments.into_iter().take_while(|word| word != "--").any(|word| word == "--json");
+    if json && error.use_stderr() {
+        let told = diagnostics::json(&misused(&error.render().to_string()));
+        let _ = std::io::stderr().write_all(told.as_bytes());
+        return ExitCode::from(TROUBLE);
+    }
     let printed = error.print();
     if error.use_stderr() || printed.is_err_and(|error| error.kind() != std::io::ErrorKind::BrokenPipe) {
         ExitCode::from(TROUBLE)
     } else {
         ExitCode::SUCCESS
     }
+}
+
+/// What the reader of the command line says, in paragraphs: what is wrong, then tips and the usage.
+fn misused(told: &str) -> Diagnostic {
+    let one_line = |text: &str| text.split_whitespace().collect::<Vec<_>>().join(" ");
+    let mut paragraphs = told.split("\n\n").map(one_line).filter(|text| !text.is_empty());
+    let first = paragraphs.next().unwrap_or_default();
+    let fault = Diagnostic::new(first.strip_prefix("error: ").unwrap_or(&first));
+    let help: Vec<String> = paragraphs
+        .filter(|text| !text.starts_with("For more information"))
+        .map(|text| text.strip_prefix("tip: ").map_or(text.clone(), str::to_owned))
+        .collect();
+    if help.is_empty() { fault.with_help("try --help") } else { fault.with_help(help.join("; ")) }
 }
 
 /// A panic is a fault of the program: say so, and how to report it.

@@ -117,6 +117,12 @@ pub fn base(path: &Path) -> Result<String, Failure> {
     read::text_to_complete(&bytes(path)?, &shown(path)).map_err(Failure::Input)
 }
 
+/// The files of measured parts that a joint names, which lie beside its file.
+pub fn measured(joint: &Joint, file: &Path) -> Vec<PathBuf> {
+    let folder = file.parent().unwrap_or(Path::new(""));
+    joint.population.measured().map(|name| folder.join(name)).collect()
+}
+
 /// The name a file goes by in messages.
 pub fn shown(path: &Path) -> PathBuf {
     if path == Path::new("-") { PathBuf::from("<stdin>") } else { path.to_path_buf() }

@@ -12,7 +12,7 @@ use super::output::Output;
 const EXAMPLE: &str = "\
 Example:
   hubgrip limits 60mm H7/s6
-  hubgrip limits 2in \"FN 4\"
+  hubgrip limits 2in FN 4
   hubgrip limits 60mm H7";
 
 /// Limits and extreme interferences of a fit, or of one class alone
@@ -22,9 +22,9 @@ pub struct Arguments {
     /// Nominal diameter with its unit, such as 60mm or 2-3/16in
     #[arg(value_name = "DIAMETER")]
     pub diameter: String,
-    /// A fit such as H7/s6 or "FN 4", or one class such as H7
-    #[arg(value_name = "FIT")]
-    pub fit: String,
+    /// A fit such as H7/s6 or FN 4, or one class such as H7
+    #[arg(value_name = "FIT", required = true)]
+    pub fit: Vec<String>,
     /// Limits as JSON, fixed names, full precision
     #[arg(long)]
     pub json: bool,
@@ -49,18 +49,19 @@ pub fn run(arguments: &Arguments, output: &Output) -> Result<Ending, Failure> {
         }
     })?;
     let system = system(arguments);
-    let text = match single_member(&arguments.fit) {
+    let fit = arguments.fit.join(" ");
+    let text = match single_member(&fit) {
         Some(member) => {
-            let callout = MemberCallout::parse(&arguments.fit, member).map_err(refused)?;
+            let callout = MemberCallout::parse(&fit, member).map_err(refused)?;
             let resolved = callout.resolve(member, nominal).map_err(refused)?;
             if arguments.json {
                 json::member_limits(nominal, member, &resolved)
             } else {
-                limits::member_text(&arguments.fit, nominal, member, &resolved, system)
+                limits::member_text(&fit, nominal, member, &resolved, system)
             }
         }
         None => {
-            let callout = FitCallout::parse(&arguments.fit).map_err(refused)?;
+            let callout = FitCallout::parse(&fit).map_err(refused)?;
             let resolved = callout.resolve_given_in(nominal, system).map_err(refused)?;
             if arguments.json {
                 json::fit_limits(&callout.to_string(), &resolved)
@@ -75,9 +76,21 @@ pub fn run(arguments: &Arguments, output: &Output) -> Result<Ending, Failure> {
 
 fn refused(error: ToleranceError) -> Failure {
     let diagnostic = Diagnostic::new(error.to_string());
-    match error.help() {
+    match help(&error) {
         Some(help) => diagnostic.with_help(help).into(),
         None => diagnostic.into(),
+    }
+}
+
+/// The way out: without a joint file there is no place to write limits into.
+fn help(error: &ToleranceError) -> Option<String> {
+    const AGREED: &str = "a joint file takes limits as numbers";
+    match error {
+        ToleranceError::NominalOutOfRange { nominal, .. } if *nominal > 0.0 => Some(format!(
+            "nothing is extrapolated: beyond the tables limits are agreed with the maker, and {AGREED}"
+        )),
+        ToleranceError::NotCarried { .. } => Some(format!("look it up in a printed copy; {AGREED}")),
+        other => other.help(),
     }
 }
 

@@ -106,7 +106,7 @@ pub fn main() -> ExitCode {
     exit::install_fault_hook();
     let line = match CommandLine::try_parse() {
         Ok(line) => line,
-        Err(error) => return exit::usage(&error),
+        Err(error) => return exit::usage(&error, std::env::args_os()),
     };
     let output = Output::new(line.global.color, line.global.quiet);
     let json = line.command.json();

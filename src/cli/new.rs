@@ -25,7 +25,7 @@ pub struct Arguments {
     #[arg(long, short, value_name = "JOINT.yaml")]
     pub output: Option<PathBuf>,
     /// Name the kinds
-    #[arg(long)]
+    #[arg(long, conflicts_with_all = ["kind", "output"])]
     pub list: bool,
 }
 

@@ -86,6 +86,9 @@ impl Output {
 }
 
 /// Refuses an output that is one of the inputs: it would be lost.
+///
+/// Files are told apart by where they lie, whatever they are called on the way: `./a.yaml`, a symbolic link and (on
+/// Linux) standard input from a file are seen through.
 pub fn refuse_overwriting<'a>(
     option: &str,
     output: Option<&Path>,
@@ -93,7 +96,10 @@ pub fn refuse_overwriting<'a>(
 ) -> Result<(), Failure> {
     let Some(output) = output.filter(|path| *path != Path::new("-")) else { return Ok(()) };
     let Ok(real) = output.canonicalize() else { return Ok(()) };
-    let is_output = |input: &Path| input.canonicalize().is_ok_and(|input| input == real && input.is_file());
+    let standard_input = Path::new("/dev/stdin");
+    let place = |input: &'a Path| if input == Path::new("-") { standard_input } else { input };
+    let is_output =
+        |input: &'a Path| place(input).canonicalize().is_ok_and(|input| input == real && input.is_file());
     if inputs.into_iter().any(is_output) {
         return Err(Diagnostic::new(format!("{option} names an input, which would be overwritten"))
             .in_file(output)

@@ -98,6 +98,7 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
             .with_help("`hubgrip check` shows the interference of its pairs")
     })?;
     let files = files(&arguments.records)?;
+    refuse_overwriting("--output", arguments.output.as_deref(), files.iter().map(PathBuf::as_path))?;
     let entries = judged(&files, &window, &settings, output);
     if let [Entry { outcome: Err(fault), .. }] = entries.as_slice() {
         return Err(fault.clone().into());

@@ -8,7 +8,7 @@ use hubgrip::report::{html, terminal};
 use super::check;
 use super::exit::{Ending, Failure};
 use super::input::{self, WhatIf};
-use super::output::Output;
+use super::output::{Output, refuse_overwriting};
 
 const EXAMPLE: &str = "\
 Example:
@@ -35,8 +35,11 @@ pub struct Arguments {
 }
 
 pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> Result<Ending, Failure> {
+    refuse_overwriting("--output", arguments.output.as_deref(), [arguments.file.as_path()])?;
     let library = input::library(materials, output)?;
     let findings = input::findings(&arguments.file, &arguments.what_if.set, &library)?;
+    let measured = input::measured(&findings.joint, &arguments.file);
+    refuse_overwriting("--output", arguments.output.as_deref(), measured.iter().map(PathBuf::as_path))?;
     let page = html::html(&findings);
     match &arguments.output {
         Some(path) => output.page(path, &page, || terminal::summary(&findings))?,

@@ -66,6 +66,8 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     let library = input::library(materials, output)?;
     let source = Source::of(&arguments.file, &arguments.what_if)?;
     let joint = source.joint(&library)?;
+    let measured = input::measured(&joint, &arguments.file);
+    refuse_overwriting("--output", arguments.output.as_deref(), measured.iter().map(PathBuf::as_path))?;
     let Understood { model, assumed } = understood_of(&joint, &source)?;
     let settings =
         Settings { samples: arguments.samples, seed: arguments.seed, slip_safety: joint.require.slip_safety };

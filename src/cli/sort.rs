@@ -81,6 +81,8 @@ pub fn run(arguments: &Arguments, materials: Option<&Path>, output: &Output) -> 
     let library = input::library(materials, output)?;
     let source = Source::of(&arguments.file, &arguments.what_if)?;
     let joint = source.joint(&library)?;
+    let measured = input::measured(&joint, &arguments.file);
+    refuse_overwriting("--pick-list", arguments.pick_list.as_deref(), measured.iter().map(PathBuf::as_path))?;
     let shown = input::shown(&arguments.file);
     let refused = |message: String| Failure::from(Diagnostic::new(message).in_file(&shown));
     let holes = list(arguments.holes.as_deref(), joint.population.hole.as_ref(), &source, joint.diameter)?;

@@ -4,7 +4,7 @@ use std::fs::{self, File};
 use std::io::{self, BufWriter, Write};
 use std::path::{Path, PathBuf};
 
-use tempfile::NamedTempFile;
+use tempfile::TempPath;
 
 /// A file under construction; dropped before it is finished it leaves the target untouched.
 ///
@@ -18,7 +18,9 @@ enum Kind {
 }
 
 struct Beside {
-    temporary: BufWriter<NamedTempFile>,
+    /// The file apart from its name, which would get into the messages of its errors.
+    temporary: BufWriter<File>,
+    name: TempPath,
     target: PathBuf,
     existing: Option<fs::Metadata>,
 }
@@ -39,8 +41,14 @@ impl Whole {
             let straight = fs::OpenOptions::new().write(true).open(&target)?;
             return Ok(Self(Kind::Straight(BufWriter::new(straight))));
         }
-        let temporary = tempfile::Builder::new().prefix(".hubgrip-").tempfile_in(folder(&target))?;
-        Ok(Self(Kind::Beside(Box::new(Beside { temporary: BufWriter::new(temporary), target, existing }))))
+        let (temporary, name) = tempfile::Builder::new()
+            .prefix(".hubgrip-")
+            .tempfile_in(folder(&target))
+            // The error's own text holds the name that was tried, which differs from run to run.
+            .map_err(|error| io::Error::from(error.kind()))?
+            .into_parts();
+        let temporary = BufWriter::new(temporary);
+        Ok(Self(Kind::Beside(Box::new(Beside { temporary, name, target, existing }))))
     }
 
     /// Gives the complete file its name.
@@ -48,11 +56,11 @@ impl Whole {
         match self.0 {
             Kind::Straight(mut straight) => straight.flush(),
             Kind::Beside(beside) => {
-                let Beside { temporary, target, existing } = *beside;
+                let Beside { temporary, name, target, existing } = *beside;
                 let temporary = temporary.into_inner().map_err(io::IntoInnerError::into_error)?;
-                temporary.as_file().sync_all()?;
-                permissions(temporary.path(), existing.as_ref())?;
-                temporary.persist(&target).map_err(|error| error.error)?;
+                temporary.sync_all()?;
+                permissions(&name, existing.as_ref())?;
+                name.persist(&target).map_err(|error| error.error)?;
                 Ok(())
             }
         }

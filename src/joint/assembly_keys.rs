@@ -5,7 +5,7 @@ use serde::Deserialize;
 
 use super::leaf::{BathWord, HeatingWord, MethodWord};
 use super::written::{At, Written};
-use crate::quantity::{Angle, Length, Number, Temperature, Time, Volume};
+use crate::quantity::{Angle, Length, Number, SmallLength, Temperature, Time, Volume};
 
 /// How the joint is put together.
 #[derive(Debug, Default, Deserialize, JsonSchema)]
@@ -16,11 +16,11 @@ pub(crate) struct AssemblyKeys {
     /// Temperature of the shop. Silent: 20 degC.
     pub(crate) shop_temperature: Option<Written<Temperature>>,
     /// Diametral clearance wanted while joining hot or cold. Silent: a thousandth of the diameter.
-    pub(crate) clearance: Option<Written<Length>>,
+    pub(crate) clearance: Option<Written<SmallLength>>,
     /// Form error of both seats together, on the diameter, added to the clearance. Silent: 0 um.
-    pub(crate) form_error: Option<Written<Length>>,
+    pub(crate) form_error: Option<Written<SmallLength>>,
     /// Further diametral clearance for handling. Silent: 0 um.
-    pub(crate) handling_allowance: Option<Written<Length>>,
+    pub(crate) handling_allowance: Option<Written<SmallLength>>,
     /// Angle of the lead-in chamfer to the axis. Silent: 5 deg.
     pub(crate) chamfer_angle: Option<Written<Angle>>,
     /// Cold bath: dry ice, dry ice in alcohol, dry ice in acetone or liquid nitrogen. Silent: dry ice.

@@ -150,6 +150,10 @@ impl<'t> Value<'t> {
     }
 
     fn unknown(&self, entry: &Entry, known: &'static [&'static str]) -> Fault {
+        if entry.key == "<<" {
+            let fault = Fault::key(entry.value, "merge keys (`<<`) are not read");
+            return fault.help("write the keys out in the section that shall have them");
+        }
         let section = self.tree.key_path(self.node);
         let place = if section.is_empty() { String::new() } else { format!(" in `{section}`") };
         let fault = Fault::key(entry.value, format!("unknown key `{}`{place}", shortened(&entry.key)));

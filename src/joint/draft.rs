@@ -8,6 +8,9 @@ use super::written::{Leaf, Written};
 use crate::material::library::Library;
 use crate::quantity::Length;
 
+/// Smallest length or diameter that is read, m: some atoms (common practice, no source).
+const SMALLEST: f64 = 1e-9;
+
 /// A joint while it is put together.
 pub(crate) struct Draft<'a> {
     pub(crate) tree: &'a Tree,
@@ -82,13 +85,27 @@ impl<'a> Draft<'a> {
             || self.faults.meant(section, key)
     }
 
-    /// A length above zero.
+    /// A length or a diameter above zero, and no smaller than a part can be.
     pub(crate) fn positive(&self, written: &Written<Length>) -> Option<f64> {
         let value = self.value(written)?;
-        if value > 0.0 {
+        if value <= 0.0 {
+            self.refuse(written, "must be more than zero");
+            return None;
+        }
+        self.not_tiny(written, value)
+    }
+
+    /// A length or a diameter that may be zero, else no smaller than a part can be.
+    pub(crate) fn zero_or_positive(&self, written: &Written<Length>) -> Option<f64> {
+        let value = self.not_negative(written)?;
+        if value == 0.0 { Some(value) } else { self.not_tiny(written, value) }
+    }
+
+    fn not_tiny(&self, written: &Written<Length>, value: f64) -> Option<f64> {
+        if value >= SMALLEST {
             return Some(value);
         }
-        self.refuse(written, "must be more than zero");
+        self.refuse(written, "is less than 1 nm, which no part is");
         None
     }
 

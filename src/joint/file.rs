@@ -15,7 +15,9 @@ use super::leaf::{FitText, MaterialName, UncertainSize};
 use super::leaf::{MaterialKeys, Roughness, SmoothingAtWord, SmoothingText, Version};
 use super::population_keys::PopulationKeys;
 use super::written::{At, Line, Note, TextOr, Written};
-use crate::quantity::{Force, Length, Number, NumberRange, Pressure, Speed, Temperature, Torque};
+use crate::quantity::{
+    Force, Length, Number, NumberRange, Pressure, SmallLength, Speed, Temperature, Torque,
+};
 
 /// Version of the joint file that is read.
 pub const VERSION: u32 = 1;
@@ -267,9 +269,9 @@ pub(crate) struct FitKeys {
 #[serde(deny_unknown_fields)]
 pub(crate) struct LimitKeys {
     /// Lower deviation from the nominal diameter, with its sign.
-    pub(crate) lower: Option<Written<Length>>,
+    pub(crate) lower: Option<Written<SmallLength>>,
     /// Upper deviation from the nominal diameter, with its sign.
-    pub(crate) upper: Option<Written<Length>>,
+    pub(crate) upper: Option<Written<SmallLength>>,
     /// Smallest size.
     pub(crate) min: Option<Written<Length>>,
     /// Largest size.
@@ -287,7 +289,7 @@ pub(crate) struct MeasuredKeys {
     #[schemars(required)]
     pub(crate) shaft: Option<Written<UncertainSize>>,
     /// Uncertainty of each of the two, plus and minus.
-    pub(crate) uncertainty: Option<Written<Length>>,
+    pub(crate) uncertainty: Option<Written<SmallLength>>,
 }
 
 /// Coefficients of friction, each a number or a range such as 0.08 to 0.14.

@@ -7,7 +7,7 @@ use serde::de::{Deserialize, Deserializer, IgnoredAny};
 
 use super::file::VERSION;
 use super::practice::Heating;
-use super::written::{Leaf, Refused, words};
+use super::written::{Leaf, Refused, Words, read_word, words};
 use super::{Bath, Method, SmoothingAt};
 use crate::material::friction::Lubrication;
 use crate::material::record::MaterialRecord;
@@ -72,13 +72,34 @@ words! {
     "degreased" => Lubrication::Degreased,
 }
 
-words! {
-    /// Yes or no.
-    FlagWord: bool, "yes or no",
-    "yes" => true,
-    "no" => false,
-    "true" => true,
-    "false" => false,
+/// Yes or no.
+#[derive(Debug, Clone)]
+pub(crate) struct FlagWord;
+
+impl Words for FlagWord {
+    type Value = bool;
+    const SUBJECT: &'static str = "yes or no";
+    const WORDS: &'static [(&'static str, bool)] =
+        &[("yes", true), ("no", false), ("true", true), ("false", false)];
+}
+
+impl Leaf for FlagWord {
+    type Value = bool;
+
+    fn read(text: &str) -> Result<bool, Refused> {
+        read_word::<Self>(text)
+    }
+}
+
+impl JsonSchema for FlagWord {
+    fn schema_name() -> Cow<'static, str> {
+        "FlagWord".into()
+    }
+
+    /// YAML itself takes `true` for no text, and YAML 1.1 `yes` as well.
+    fn json_schema(_: &mut SchemaGenerator) -> Schema {
+        json_schema!({ "type": ["string", "boolean"], "enum": ["yes", "no", "true", "false", true, false] })
+    }
 }
 
 words! {
@@ -215,6 +236,9 @@ pub(crate) enum GivenRoughness {
     Ra(f64),
 }
 
+/// Greatest roughness that is read, m: rougher than any machined seat (common practice, no source).
+pub(crate) const ROUGHEST: f64 = 0.5e-3;
+
 /// A roughness, such as `Rz 6.3 um` or `Ra 0.8 um`.
 #[derive(Debug, Clone)]
 pub(crate) struct Roughness;
@@ -227,9 +251,15 @@ impl Leaf for Roughness {
         let (symbol, depth) =
             text.split_at(text.find(|c: char| !c.is_ascii_alphabetic()).unwrap_or(text.len()));
         let of = |given: fn(f64) -> GivenRoughness| -> Result<GivenRoughness, Refused> {
-            let depth = quantity::parse(Kind::Length, depth)?;
+            let depth = quantity::parse(Kind::Length, depth).map_err(|error| error.suggesting("um"))?;
             if depth < 0.0 {
                 return Err(Refused { message: format!("the roughness {text} is negative"), help: None });
+            }
+            if depth > ROUGHEST {
+                return Err(Refused::new(
+                    format!("the roughness {text} is above 0.5 mm: no machined seat is so rough"),
+                    "is um meant, as in `Rz 6.3 um`?",
+                ));
             }
             Ok(given(depth))
         };

@@ -238,6 +238,11 @@ pub struct DutyState {
 }
 
 impl DutyState {
+    /// What it is called in a sentence: `state rated`, and `state 2` where the file gives no name.
+    pub fn called(&self) -> String {
+        if self.name.starts_with("state ") { self.name.clone() } else { format!("state {}", self.name) }
+    }
+
     /// A state at rest without load, each ring at its temperature (K).
     pub fn unloaded(name: impl Into<String>, temperatures: Vec<f64>) -> Self {
         Self {

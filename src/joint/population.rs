@@ -25,6 +25,28 @@ pub struct PopulationPlan {
     pub shaft_temperature: Option<Variation>,
 }
 
+impl PopulationPlan {
+    /// The files of measurements it names, as written.
+    pub fn measured(&self) -> impl Iterator<Item = &str> {
+        let all = [
+            &self.hole,
+            &self.shaft,
+            &self.hub_roughness,
+            &self.shaft_roughness,
+            &self.friction,
+            &self.pressing_friction,
+            &self.hub_youngs_modulus,
+            &self.shaft_youngs_modulus,
+            &self.hub_temperature,
+            &self.shaft_temperature,
+        ];
+        all.into_iter().filter_map(|variation| match variation {
+            Some(Variation::Measured(name)) => Some(name.as_str()),
+            _ => None,
+        })
+    }
+}
+
 /// How one quantity scatters.
 #[derive(Debug, Clone, PartialEq)]
 pub enum Variation {

@@ -202,11 +202,29 @@ fn refuse_unreadable(bytes: &[u8]) -> Result<(), Box<Diagnostic>> {
         let message = format!("the file has {mebibytes:.1} MiB, a joint file has at most 1 MiB");
         return refused(message, "this looks like another file");
     }
+    if utf16(bytes) {
+        let help = "save it as UTF-8; an editor calls this the encoding";
+        return refused("the file looks like UTF-16, and a joint file is in UTF-8".to_owned(), help);
+    }
     if bytes.contains(&0) {
         let help = "a joint file is plain text in UTF-8; `hubgrip new` writes one to start from";
         return refused("this is not a text file: it holds NUL bytes".to_owned(), help);
     }
     Ok(())
+}
+
+/// Whether the bytes begin with the mark of UTF-16, or with plain letters of two bytes each.
+fn utf16(bytes: &[u8]) -> bool {
+    match bytes {
+        [0xff, 0xfe, ..] | [0xfe, 0xff, ..] => true,
+        [first, second, third, fourth, ..] => {
+            let letters = |high: &[u8], low: &[u8]| {
+                high.iter().all(|byte| *byte == 0) && low.iter().all(|byte| matches!(byte, b'\t'..=b'~'))
+            };
+            letters(&[*first, *third], &[*second, *fourth]) || letters(&[*second, *fourth], &[*first, *third])
+        }
+        _ => false,
+    }
 }
 
 fn refuse_other_shapes(text: &str, tree: &Tree) -> Result<(), Box<Diagnostic>> {

@@ -2,7 +2,8 @@
 //!
 //! Keys are dotted, as in `hub.outer_diameter=120mm` or `fit=H7/u6`. A service state is meant by its number
 //! from 0 or by its name: `duty.0.torque=1kN.m`, `duty.rated.torque=1kN.m`. A section that is not there yet is
-//! made. The value is taken as typed, except that one which begins with a brace, a bracket or a quote is
+//! made, and so are the states of a file that has none, one after the other; to a list that the file has nothing
+//! is added. The value is taken as typed, except that one which begins with a brace, a bracket or a quote is
 //! read as YAML: `fit={hole: H7, shaft: s6}`.
 
 use super::grow::tree_of;
@@ -52,6 +53,10 @@ pub(crate) fn apply(tree: &mut Tree, set: &[(String, String)]) -> Result<(), Vec
 fn one(tree: &mut Tree, origin: Origin, key: &str, value: &str) -> Result<(), Box<Diagnostic>> {
     let mut node = tree.root();
     let mut rest = key.trim();
+    if rest.ends_with('.') {
+        let fault = Diagnostic::new("the key ends with a dot");
+        return Err(Box::new(fault.with_help("take the dot out, or write the key that belongs behind it")));
+    }
     while !rest.is_empty() {
         (node, rest) = step(tree, origin, node, rest)?;
     }
@@ -69,6 +74,10 @@ fn step<'k>(
     match tree.content(node) {
         Content::Null if tree.key_path(node) == "duty" => state(tree, origin, node, rest),
         Content::List(_) => state(tree, origin, node, rest),
+        Content::Null | Content::Map(_) if first.is_empty() => {
+            let fault = Diagnostic::new("nothing stands before a dot of the key");
+            Err(Box::new(fault.with_help("write keys with one dot between them, such as hub.outer_diameter")))
+        }
         Content::Null | Content::Map(_) => {
             let found = tree.get(node, first);
             Ok((found.unwrap_or_else(|| tree.append(node, first, Content::Null, origin)), left))
@@ -98,14 +107,22 @@ fn state<'k>(
         if let Some(&item) = items.get(number) {
             return Ok((item, left));
         }
-        if number == items.len() {
+        let of_the_file = items.iter().any(|&item| tree.origin(item) == Origin::File);
+        if number == items.len() && !of_the_file {
             return Ok((tree.push(list, Content::Null, origin), left));
         }
-        let fault = format!("there is no item {number}: the list has {}, counted from 0", items.len());
-        return Err(Box::new(Diagnostic::new(fault)));
+        return Err(Box::new(no_such_number(tree, list, &items, number)));
     }
-    let names: Vec<(String, NodeId)> =
-        items.iter().filter_map(|&item| Some((state_name(tree, item)?, item))).collect();
+    let key = tree.key_path(list);
+    if key != "duty" {
+        let fault = Diagnostic::new(format!("`{key}` is a list and has no item `{first}`"));
+        return Err(Box::new(fault.with_help("name the item by its number, counted from 0")));
+    }
+    let names: Vec<(String, NodeId)> = items
+        .iter()
+        .enumerate()
+        .map(|(number, &item)| (state_name(tree, item).unwrap_or_else(|| unnamed(number)), item))
+        .collect();
     let named = names.iter().find_map(|(name, item)| {
         let after = rest.strip_prefix(name.as_str())?;
         if after.is_empty() { Some((*item, "")) } else { Some((*item, after.strip_prefix('.')?)) }
@@ -122,9 +139,38 @@ fn state<'k>(
     let known: Vec<&str> = names.iter().map(|(name, _)| name.as_str()).collect();
     Err(Box::new(match did_you_mean(first, known.iter().copied()) {
         Some(found) => fault.with_help(format!("did you mean `{found}`?")),
-        None if known.is_empty() => fault.with_help("the states have no names: use their numbers, from 0"),
         None => fault.with_help(format!("the states are {}", known.join(", "))),
     }))
+}
+
+/// A number that no item has: the items there are, counted from 0.
+fn no_such_number(tree: &Tree, list: NodeId, items: &[NodeId], number: usize) -> Diagnostic {
+    let key = tree.key_path(list);
+    if key != "duty" {
+        let last = items.len().saturating_sub(1);
+        return Diagnostic::new(format!("`{key}` has no item {number}")).with_help(format!(
+            "numbers count from 0: the last is {last}; set `{key}` as a whole to add one"
+        ));
+    }
+    let states: Vec<String> = items
+        .iter()
+        .enumerate()
+        .map(|(number, &item)| {
+            let name = state_name(tree, item).unwrap_or_else(|| unnamed(number));
+            format!("{number} (`{name}`)")
+        })
+        .collect();
+    let help = match states.as_slice() {
+        [] => "numbers count from 0, and there is no state yet: begin with 0".to_owned(),
+        [only] => format!("numbers count from 0: the only state is {only}"),
+        all => format!("numbers count from 0: the states are {}", all.join(", ")),
+    };
+    Diagnostic::new(format!("there is no state {number}")).with_help(help)
+}
+
+/// What a state without a name is called wherever it is shown: counted from 1.
+fn unnamed(number: usize) -> String {
+    format!("state {}", number + 1)
 }
 
 fn state_name(tree: &Tree, item: NodeId) -> Option<String> {
@@ -225,9 +271,51 @@ duty:
         assert_eq!(faults[0].message, "--set duty.ratde.torque: there is no state `ratde`");
         assert_eq!(faults[0].help.as_deref(), Some("did you mean `rated`?"));
         let faults = after(TEXT, &[("duty.7.torque", "1 kN.m")]).unwrap_err();
+        assert_eq!(faults[0].message, "--set duty.7.torque: there is no state 7");
         assert_eq!(
-            faults[0].message,
-            "--set duty.7.torque: there is no item 7: the list has 2, counted from 0"
+            faults[0].help.as_deref(),
+            Some("numbers count from 0: the states are 0 (`rated`), 1 (`cold start`)")
+        );
+    }
+
+    #[test]
+    fn a_list_of_the_file_gets_no_item_by_its_number() {
+        let refused = |text: &str, key: &str| {
+            let faults = after(text, &[(key, "10 N.m")]).unwrap_err();
+            (faults[0].message.clone(), faults[0].help.clone().unwrap_or_default())
+        };
+        let one = "duty: [{state: rated, torque: 900 N.m}]";
+        let (message, help) = refused(one, "duty.1.torque");
+        assert_eq!(message, "--set duty.1.torque: there is no state 1");
+        assert_eq!(help, "numbers count from 0: the only state is 0 (`rated`)");
+        let (message, help) = refused("rings: [{name: core}]", "rings.core.material");
+        assert_eq!(message, "--set rings.core.material: `rings` is a list and has no item `core`");
+        assert_eq!(help, "name the item by its number, counted from 0");
+        let (_, help) = refused("duty: [{torque: 900 N.m}]", "duty.1.torque");
+        assert_eq!(help, "numbers count from 0: the only state is 0 (`state 1`)");
+        let (message, help) = refused("fits: [H7/s6, H7/s6]", "fits.2");
+        assert_eq!(message, "--set fits.2: `fits` has no item 2");
+        assert_eq!(help, "numbers count from 0: the last is 1; set `fits` as a whole to add one");
+    }
+
+    #[test]
+    fn a_state_without_a_name_goes_by_what_it_is_called_in_the_output() {
+        let tree =
+            after("duty: [{torque: 900 N.m}, {torque: 800 N.m}]", &[("duty.state 2.torque", "1 kN.m")])
+                .unwrap();
+        assert_eq!(scalar(&tree, "duty.1.torque").as_deref(), Some("1 kN.m"));
+        assert_eq!(scalar(&tree, "duty.0.torque").as_deref(), Some("900 N.m"));
+    }
+
+    #[test]
+    fn states_of_a_file_without_any_are_made_in_their_order() {
+        let tree =
+            after("fit: H7/s6\n", &[("duty.0.torque", "1 kN.m"), ("duty.1.torque", "2 kN.m")]).unwrap();
+        assert_eq!(scalar(&tree, "duty.1.torque").as_deref(), Some("2 kN.m"));
+        let faults = after("fit: H7/s6\n", &[("duty.1.torque", "1 kN.m")]).unwrap_err();
+        assert_eq!(
+            faults[0].help.as_deref(),
+            Some("numbers count from 0, and there is no state yet: begin with 0")
         );
     }
 

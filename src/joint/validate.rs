@@ -80,6 +80,10 @@ pub(crate) fn joint(draft: &mut Draft<'_>, file: &JointFile, fit_key: FitKey) ->
     if let (Some(plan), Some(seat), Some(rings)) = (&mut assembly, &seat, &rings) {
         bearing::keep_cool(plan, seat, rings);
     }
+    if let Some(plan) = &assembly {
+        let seat = length.zip(relief).map(|(length, relief)| length - relief);
+        practice::refuse_impossible(draft, file, &plan.practice, seat);
+    }
     let smoothing = smoothing::smoothing(draft, file, rings.as_deref(), method);
     let criterion = criterion(draft, file);
     let require = requirements(draft, file.require.as_ref());
@@ -176,15 +180,15 @@ fn lengths(
             draft.default("length", self::written(Kind::Length, seat.width), "the width of the bearing");
             Some(seat.width)
         }
-        (_, given) => draft
+        (seat, given) => draft
             .required(draft.tree.root(), "length", "70 mm", given.as_ref())
-            .and_then(|written| draft.positive(written)),
+            .and_then(|written| bearing::within_width(draft, written, seat)),
     };
     let Some(written) = &file.relief else {
         draft.default("relief", "0 mm", "the whole length is taken to carry");
         return (length, Some(0.0));
     };
-    let relief = draft.not_negative(written);
+    let relief = draft.zero_or_positive(written);
     if let (Some(length_value), Some(relief_value)) = (length, relief)
         && relief_value >= length_value
     {

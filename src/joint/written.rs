@@ -199,6 +199,15 @@ quantities!(
     Volume
 );
 
+/// A length of some micrometres: one without a unit is not taken for millimetres.
+impl Leaf for quantity::SmallLength {
+    type Value = f64;
+
+    fn read(text: &str) -> Result<f64, Refused> {
+        quantity::parse(Kind::Length, text).map_err(|error| error.suggesting("um").into())
+    }
+}
+
 impl Leaf for quantity::NumberRange {
     type Value = (f64, f64);
 

@@ -22,12 +22,14 @@ pub enum QuantityError {
         given: String,
     },
     /// A number without its unit.
-    #[error("{given} has no unit: write {given} {unit}", unit = first_unit(*.kind))]
+    #[error("{given} has no unit: write {given} {unit}")]
     NoUnit {
         /// What is due.
         kind: Kind,
         /// The number as written.
         given: String,
+        /// The unit to suggest.
+        unit: &'static str,
     },
     /// A unit that is not known.
     #[error("{unit} is not a unit that is known; {} is due ({})", .kind.phrase(), .kind.unit_names())]
@@ -83,6 +85,12 @@ pub enum QuantityError {
         /// The text.
         given: String,
     },
+    /// A number far beyond all that a machine part can have.
+    #[error("{given} is no number that a part can have")]
+    TooGreat {
+        /// The text.
+        given: String,
+    },
     /// A temperature below absolute zero.
     #[error("{given} is below absolute zero (-273.15 degC)")]
     BelowAbsoluteZero {
@@ -103,11 +111,27 @@ pub enum QuantityError {
     },
 }
 
-fn first_unit(kind: Kind) -> &'static str {
+pub(super) fn first_unit(kind: Kind) -> &'static str {
     kind.units().next().map_or("", |unit| unit.name)
 }
 
 impl QuantityError {
+    /// The same fault where this unit is the likely one: micrometres for a roughness, which a suggestion of
+    /// millimetres would make a thousand times too great.
+    ///
+    /// # Example
+    /// ```
+    /// use hubgrip::quantity::{Kind, parse};
+    /// let error = parse(Kind::Length, "6.3").unwrap_err().suggesting("um");
+    /// assert_eq!(error.to_string(), "6.3 has no unit: write 6.3 um");
+    /// ```
+    pub fn suggesting(self, unit: &'static str) -> Self {
+        match self {
+            Self::NoUnit { kind, given, .. } => Self::NoUnit { kind, given, unit },
+            other => other,
+        }
+    }
+
     /// What would be right, when there is something to say.
     pub fn help(&self) -> Option<String> {
         match self {
@@ -131,6 +155,7 @@ impl QuantityError {
             }
             Self::Fraction { .. } => Some("write 3/8 in or 2-3/16 in, else a decimal number".to_owned()),
             Self::TooSmall { .. } => Some("write 0 if nothing is meant".to_owned()),
+            Self::TooGreat { .. } => Some("check the exponent and the unit".to_owned()),
             Self::BelowAbsoluteZero { .. } => Some("temperatures are in degC, degF or K".to_owned()),
             Self::RangeOrder { .. } => Some("write the lesser value first, such as 0.08 to 0.14".to_owned()),
             Self::NotPlusMinus { .. } => Some("write ±10 um, +/- 10 um or +30 / -10 um".to_owned()),

@@ -49,8 +49,8 @@ pub use error::QuantityError;
 pub use factor::{factor_found, factor_required};
 pub use newtype::{
     Angle, Conductivity, Density, ExpansionCoefficient, Force, HELP_SEPARATOR, HeatTransfer, Length, Mass,
-    Number, NumberRange, Pressure, SpecificHeat, Speed, Temperature, TemperatureDifference, Time, Torque,
-    Velocity, Volume,
+    Modulus, Number, NumberRange, Pressure, SmallLength, SpecificHeat, Speed, Temperature,
+    TemperatureDifference, Time, Torque, Velocity, Volume,
 };
 pub use range::{parse_number_range, parse_plus_minus, parse_range, parse_with_uncertainty};
 pub use read::{parse, parse_number};

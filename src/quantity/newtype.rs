@@ -41,7 +41,7 @@ impl<T> Visitor<'_> for Text<T> {
 }
 
 macro_rules! quantities {
-    ($($name:ident, $kind:ident, $unit:literal, $example:literal;)*) => {
+    ($($name:ident, $kind:ident, $unit:literal, $example:literal $(, likely $likely:literal)?;)*) => {
         $(
             #[doc = concat!("A quantity of the kind ", stringify!($kind), " in a file, held in ", $unit, ".")]
             #[derive(Debug, Clone, Copy, PartialEq, PartialOrd)]
@@ -54,7 +54,7 @@ macro_rules! quantities {
                 type Err = QuantityError;
 
                 fn from_str(text: &str) -> Result<Self, QuantityError> {
-                    parse(Kind::$kind, text).map(Self)
+                    parse(Kind::$kind, text)$(.map_err(|error| error.suggesting($likely)))?.map(Self)
                 }
             }
 
@@ -85,9 +85,11 @@ macro_rules! quantities {
 quantities! {
     Number, Number, "1", "0.8";
     Length, Length, "m", "60 mm";
+    SmallLength, Length, "m", "25 um", likely "um";
     Force, Force, "N", "2 kN";
     Torque, Torque, "N·m", "900 N.m";
     Pressure, Pressure, "Pa", "355 MPa";
+    Modulus, Pressure, "Pa", "210 GPa", likely "GPa";
     Temperature, Temperature, "K", "60 degC";
     TemperatureDifference, TemperatureDifference, "K", "40 K";
     Speed, Speed, "rad/s", "1450 rpm";

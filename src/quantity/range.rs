@@ -81,8 +81,11 @@ pub fn parse_with_uncertainty(kind: Kind, text: &str) -> Result<(f64, f64), Quan
     let split = PLUS_MINUS.iter().find_map(|sign| text.split_once(sign));
     let Some((value_text, size_text)) = split else { return Ok((parse(kind, text)?, 0.0)) };
     let size_kind = if kind == Kind::Temperature { Kind::TemperatureDifference } else { kind };
-    let size = unsigned(size_kind, size_text, text)?;
     let scanned = scan(kind, value_text)?;
+    let size = unsigned(size_kind, size_text, text).map_err(|error| match kind {
+        Kind::Length if !scanned.unit.is_empty() => error.suggesting("um"),
+        _ => error,
+    })?;
     let unit = if scanned.unit.is_empty() { scan(size_kind, size_text)?.unit } else { scanned.unit };
     Ok((value(kind, &scanned, unit)?, size))
 }

@@ -2,7 +2,7 @@
 
 use std::f64::consts::TAU;
 
-use super::error::{QuantityError, shown};
+use super::error::{QuantityError, first_unit, shown};
 use super::scan::{Amount, Scanned, scan};
 use super::unit::{Kind, Scale, Unit, find, plain_spelling};
 use crate::diagnostic::did_you_mean;
@@ -14,7 +14,7 @@ use crate::diagnostic::did_you_mean;
 /// power of ten of the SI unit, and within two units in the last place for the others.
 ///
 /// # Errors
-/// Every text that is not such a quantity: see [`QuantityError`].
+/// Every text that is not such a quantity, and an SI number above 1e15, which no part can have: see [`QuantityError`].
 ///
 /// # Example
 /// ```
@@ -36,6 +36,10 @@ pub fn parse_number(text: &str) -> Result<f64, QuantityError> {
     parse(Kind::Number, text)
 }
 
+/// Greatest SI number that is read, of any kind: a thousand times the stiffest modulus in pascals, and far below where
+/// a product of a few such numbers overflows (common practice, no source).
+pub(super) const GREATEST: f64 = 1e15;
+
 /// The SI number of a text taken apart, with the unit it is given in.
 pub(super) fn value(kind: Kind, scanned: &Scanned<'_>, unit: &str) -> Result<f64, QuantityError> {
     let given = || shown(scanned.text);
@@ -47,6 +51,9 @@ pub(super) fn value(kind: Kind, scanned: &Scanned<'_>, unit: &str) -> Result<f64
     } else {
         in_unit(scanned, unit_of(kind, scanned.text, unit)?)?
     };
+    if si.abs() > GREATEST {
+        return Err(QuantityError::TooGreat { given: given() });
+    }
     if kind == Kind::Temperature && si < 0.0 {
         return Err(QuantityError::BelowAbsoluteZero { given: given() });
     }
@@ -55,7 +62,7 @@ pub(super) fn value(kind: Kind, scanned: &Scanned<'_>, unit: &str) -> Result<f64
 
 fn unit_of(kind: Kind, text: &str, spelling: &str) -> Result<&'static Unit, QuantityError> {
     if spelling.is_empty() {
-        return Err(QuantityError::NoUnit { kind, given: shown(text) });
+        return Err(QuantityError::NoUnit { kind, given: shown(text), unit: first_unit(kind) });
     }
     let plain = plain_spelling(spelling);
     if let Some(unit) = find(kind, &plain) {

@@ -165,6 +165,9 @@ const REFUSED: &[(Kind, &str, &str)] = &[
     (Kind::Length, "1e-999 mm", "too close to zero"),
     (Kind::Length, "1e-323 uin", "too close to zero"),
     (Kind::Pressure, "1e305 Mpsi", "not a finite number"),
+    (Kind::Speed, "1e154 rpm", "no number that a part can have"),
+    (Kind::Length, "-1.001e18 mm", "no number that a part can have"),
+    (Kind::Number, "1.1e15", "check the exponent and the unit"),
     (Kind::Length, "mm", "does not begin with a number"),
     (Kind::Length, "½ in", "does not begin with a number"),
     (Kind::Length, "3/0 in", "not a fraction"),
@@ -353,7 +356,10 @@ proptest! {
         prop_assume!(si.is_finite());
         let si = if kind == Kind::Temperature { si.abs() } else { si };
         let text = written(kind, si);
-        prop_assert_eq!(parse(kind, &text), Ok(si), "{}", text);
+        match parse(kind, &text) {
+            Err(QuantityError::TooGreat { .. }) => prop_assert!(si.abs() > read::GREATEST, "{}", text),
+            read => prop_assert_eq!(read, Ok(si), "{}", text),
+        }
     }
 
     /// Numbers of everyday size, so that degC, rpm, deg and h are met as well.

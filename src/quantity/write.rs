@@ -8,7 +8,7 @@ use super::unit::{Kind, Scale, Unit, find};
 /// Powers of ten are moved on the digits, so nothing is rounded. Units that are no power of ten of the SI unit
 /// (degC, rpm, deg, h) are taken when fifteen digits in them read back to the same number; otherwise it is K,
 /// rad/s, rad or s with all digits. A number that is not finite gives `not a number`, which is refused when it
-/// is read.
+/// is read; so is one above 1e15.
 ///
 /// # Example
 /// ```

@@ -6,6 +6,7 @@
 //!
 //! | name | what it is |
 //! |---|---|
+//! | `file` | of several files the one that the object is of; absent when there is only one |
 //! | `findings` | version of this format: 1 |
 //! | `version` | version of the program |
 //! | `title`, `digest`, `set` | of the joint file: its title, the SHA-256 of its text, changes made by `--set` |
@@ -63,6 +64,19 @@ use crate::tolerance::callout::{Resolved, ResolvedMember};
 /// The findings of a joint as JSON text with a line break at its end.
 pub fn to_json(findings: &Findings) -> String {
     text(&document::Document::of(findings))
+}
+
+/// The same of one of several files, whose name stands first as `file`.
+pub fn to_json_of(file: &str, findings: &Findings) -> String {
+    text(&Named { file, document: document::Document::of(findings) })
+}
+
+/// A document with the name of its file.
+#[derive(Serialize)]
+struct Named<'f> {
+    file: &'f str,
+    #[serde(flatten)]
+    document: document::Document,
 }
 
 /// Limits of a fit as JSON: the object `fit` as in the findings, `character`, `interference`.

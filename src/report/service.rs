@@ -182,7 +182,7 @@ fn plastic(findings: &Findings) -> Vec<String> {
             "The {} is strained hardest {}: from then on the joint grips as an elastic one whose interference is less by {} at \
              the loosest and {} at the tightest pair. The states count that.",
             hub.name,
-            place.map_or("in assembly".to_owned(), |state| format!("in state {}", state.name)),
+            place.map_or("in assembly".to_owned(), |state| format!("in {}", state.called())),
             show(Measure::Deviation, worn.loosest, joint.display),
             show(Measure::Deviation, worn.tightest, joint.display),
         ));
@@ -201,24 +201,24 @@ fn bending(findings: &Findings) -> Vec<String> {
     for (state, duty) in joint.duty.iter().zip(&findings.duty) {
         let Some(bending) = &duty.loosest.bending else { continue };
         all.push(format!(
-            "Bending in state {}: the edge pressure changes by {}; an edge of the loosest pair gapes from {} on. Edge \
+            "Bending in {}: the edge pressure changes by {}; an edge of the loosest pair gapes from {} on. Edge \
              slip and fretting start earlier: half of that is recommended under rotating bending.",
-            state.name,
+            state.called(),
             show(Measure::Pressure, bending.edge_change, joint.display),
             show(Measure::Torque, bending.limiting_moment, joint.display),
         ));
     }
     for state in joint.duty.iter().filter(|state| state.relaxation < 1.0) {
         all.push(format!(
-            "In state {} holding counts {:.0} % of the fresh pressure, the share that relaxation leaves (joint file).",
-            state.name,
+            "In {} holding counts {:.0} % of the fresh pressure, the share that relaxation leaves (joint file).",
+            state.called(),
             100.0 * state.relaxation
         ));
     }
     for state in joint.duty.iter().filter(|state| state.reversing) {
         all.push(format!(
-            "The torque of state {} reverses: 1.8 to 2.2 against slip is usual there (textbooks after DIN 7190, from memory).",
-            state.name
+            "The torque of {} reverses: 1.8 to 2.2 against slip is usual there (textbooks after DIN 7190, from memory).",
+            state.called()
         ));
     }
     all
@@ -233,11 +233,11 @@ fn fatigue(findings: &Findings) -> Vec<String> {
         .filter_map(|fatigue| {
             let state = joint.duty.get(fatigue.state)?;
             Some(format!(
-                "Rotating bending in state {}: nominal stress of the shaft {}; notch factor at a plain hub edge {:.1} to {:.1}, \
+                "Rotating bending in {}: nominal stress of the shaft {}; notch factor at a plain hub edge {:.1} to {:.1}, \
                  size {:.2}, surface {:.2} (DIN 743-2, from memory; tests of Horger & Maulbetsch 1936), together {:.1} to \
                  {:.1}; with {} of the tensile strength for a small polished bar (from memory) the safety is {} to {}. \
                  Figures of steel shafts; not a fatigue calculation.",
-                state.name,
+                state.called(),
                 show(Measure::Pressure, fatigue.nominal_stress, joint.display),
                 fatigue.notch_factor.low,
                 fatigue.notch_factor.high,

@@ -219,6 +219,19 @@ pub(super) fn diameter(draft: &mut Draft<'_>, file: &JointFile, seat: &BearingSe
     Some(own)
 }
 
+/// The length of the seat, which a ring cannot exceed.
+pub(super) fn within_width(
+    draft: &Draft<'_>,
+    given: &Written<Length>,
+    seat: Option<&BearingSeat>,
+) -> Option<f64> {
+    let length = draft.positive(given)?;
+    let Some(seat) = seat.filter(|seat| length - seat.width > 1e-9) else { return Some(length) };
+    let width = written(Kind::Length, seat.width);
+    draft.refuse(given, &format!("is more than the width {width} of the bearing"));
+    None
+}
+
 fn surface(ring: BearingRing) -> &'static str {
     match ring {
         BearingRing::Inner => "bore",

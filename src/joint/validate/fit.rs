@@ -13,6 +13,9 @@ use crate::tolerance::{FitCallout, Limits, Member, MemberCallout, Resolved, Tole
 
 const EXAMPLE: &str = "H7/s6";
 
+/// Share of the diameter from which on an uncertainty is refused: it would cover any fit (common practice, no source).
+const COARSEST: f64 = 0.005;
+
 /// The fit of two parts with its limits.
 pub(super) fn fit(
     draft: &mut Draft<'_>,
@@ -210,6 +213,19 @@ fn of_measured(draft: &Draft<'_>, measured: &At<MeasuredKeys>) -> Option<FitCall
         draft.required::<()>(measured.node, "uncertainty", "2 um", None);
         return None;
     };
+    if hole > 0.0 && uncertainty >= COARSEST * hole {
+        let own = keys.hole.as_ref().filter(|_| own_hole.is_some()).or(keys.shaft.as_ref());
+        let node =
+            keys.uncertainty.as_ref().map_or(own.map_or(measured.node, |part| part.node), |at| at.node);
+        let fault = format!(
+            "the uncertainty {} is {:.2} % of the diameter {}: no measurement of a seat is so coarse",
+            quantity::written(Kind::Length, uncertainty),
+            100.0 * uncertainty / hole,
+            quantity::written(Kind::Length, hole)
+        );
+        draft.faults.add(Fault::value(node, fault).help("is um meant, as in `uncertainty: 2 um`?"));
+        return None;
+    }
     Some(FitCallout::measured(hole, shaft, uncertainty))
 }
 
@@ -246,6 +262,7 @@ fn of_member_text(text: &str, member: Member) -> Result<MemberCallout, Refused> 
             let both = "write ±10 um, or both deviations: {lower: 53 um, upper: 72 um}".to_owned();
             let help =
                 if matches!(error, QuantityError::NotPlusMinus { .. }) { Some(both) } else { error.help() };
+            let error = error.suggesting("um");
             Refused { message: error.to_string(), help }
         })?;
         return Ok(MemberCallout::Deviations(Limits { lower, upper }));

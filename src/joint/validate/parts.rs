@@ -74,7 +74,12 @@ pub(super) fn rings(
         };
         ring(draft, part, |inner, outer| 0.5 * (outer - inner), WALL_SECTION)
     });
-    Some(vec![shaft?, hub?])
+    let rings = vec![shaft?, hub?];
+    let name_of_shaft = file.shaft.as_ref().and_then(|at| at.value.name.as_ref());
+    let name_of_hub = file.hub.as_ref().and_then(|at| at.value.name.as_ref());
+    let given = [name_of_shaft, name_of_hub].map(|name| name.map(|name| name.node));
+    super::rings::refuse_one_name_for_two(draft, &rings, &given);
+    Some(rings)
 }
 
 fn shaft_ring(
@@ -168,7 +173,7 @@ fn bore(
         draft.default("shaft.bore", "0 mm", "a solid shaft");
         return Some(0.0);
     };
-    let bore = draft.not_negative(given)?;
+    let bore = draft.zero_or_positive(given)?;
     if bore >= diameter? {
         draft.refuse(given, &format!("is not smaller than the mating {}", called_diameter(draft, file)));
         return None;

@@ -2,10 +2,11 @@
 
 use crate::joint::assembly_keys::{AssemblyKeys, RoomKeys, VesselKeys};
 use crate::joint::draft::Draft;
+use crate::joint::file::JointFile;
 use crate::joint::practice::{HUMIDITY, Heating, Practice, Room, TEMPERATURE_LAG, Vessel};
 use crate::joint::written::{At, Written};
 use crate::joint::{Method, Ring};
-use crate::quantity::{Kind, Length, Number, Temperature, Time, written};
+use crate::quantity::{Kind, Number, SmallLength, Temperature, Time, written};
 
 /// Greatest time that is read, s: a week (common practice, no source).
 const LONGEST: f64 = 604_800.0;
@@ -48,6 +49,23 @@ pub(super) fn practice(
         humidity: humidity?,
         temperature_lag: temperature_lag?,
     })
+}
+
+/// What oven, bath and handling cannot be beside the rest: `seat` is the length that carries, m.
+pub(super) fn refuse_impossible(draft: &Draft<'_>, file: &JointFile, practice: &Practice, seat: Option<f64>) {
+    let Some(keys) = file.assembly.as_ref().map(|at| &at.value) else { return };
+    if let (Some(given), Some(chilled), Some(seat)) = (&keys.chilled_length, practice.chilled_length, seat)
+        && seat - chilled > 1e-9
+    {
+        let seat = written(Kind::Length, seat);
+        draft.refuse(given, &format!("is less than the seat of {seat}: what stays warm does not enter"));
+    }
+    if let (Some(given), Some(needed)) = (&keys.transfer_time, &keys.handling_time)
+        && practice.handling_time.is_some_and(|needed| practice.transfer_time >= needed)
+    {
+        let needed = draft.called(needed);
+        draft.refuse(given, &format!("leaves nothing of the {needed} to seat the part in"));
+    }
 }
 
 /// A value that may be missing, but must be right when it is there: none when it is wrong.
@@ -99,7 +117,12 @@ fn oven(
     Some(Some(temperature))
 }
 
-fn allowance(draft: &mut Draft<'_>, given: Option<&Written<Length>>, key: &str, used: bool) -> Option<f64> {
+fn allowance(
+    draft: &mut Draft<'_>,
+    given: Option<&Written<SmallLength>>,
+    key: &str,
+    used: bool,
+) -> Option<f64> {
     if let Some(given) = given {
         return draft.not_negative(given);
     }

@@ -4,6 +4,7 @@ use super::{fit, parts};
 use crate::joint::diagnose::Fault;
 use crate::joint::draft::Draft;
 use crate::joint::file::{JointFile, RingKeys};
+use crate::joint::tree::NodeId;
 use crate::joint::written::{At, Written};
 use crate::joint::{Fit, Ring};
 use crate::material::roughness::Member;
@@ -39,7 +40,25 @@ pub(super) fn rings(draft: &mut Draft<'_>, list: &At<Vec<At<RingKeys>>>) -> Opti
         inner = ring.as_ref().map(|ring| ring.outer_diameter);
         rings.push(ring);
     }
-    rings.into_iter().collect()
+    let rings: Vec<Ring> = rings.into_iter().collect::<Option<_>>()?;
+    let given: Vec<Option<NodeId>> =
+        list.value.iter().map(|at| at.value.name.as_ref().map(|name| name.node)).collect();
+    refuse_one_name_for_two(draft, &rings, &given);
+    Some(rings)
+}
+
+/// Findings are told by the names of the rings.
+pub(super) fn refuse_one_name_for_two(draft: &Draft<'_>, rings: &[Ring], given: &[Option<NodeId>]) {
+    for (number, ring) in rings.iter().enumerate() {
+        let Some(before) = rings.iter().take(number).position(|other| other.name == ring.name) else {
+            continue;
+        };
+        let place = [number, before].into_iter().find_map(|of| given.get(of).copied().flatten());
+        if let Some(node) = place {
+            let fault = Fault::value(node, format!("two parts are called `{}`", ring.name));
+            draft.faults.add(fault.help("give each part a name of its own"));
+        }
+    }
 }
 
 fn innermost_bore(draft: &mut Draft<'_>, list: &At<Vec<At<RingKeys>>>) -> Option<f64> {
@@ -50,7 +69,7 @@ fn innermost_bore(draft: &mut Draft<'_>, list: &At<Vec<At<RingKeys>>>) -> Option
         }
     }
     match list.value.first().and_then(|at| at.value.bore.as_ref()) {
-        Some(given) => draft.not_negative(given),
+        Some(given) => draft.zero_or_positive(given),
         None => {
             draft.default("rings.0.bore", "0 mm", "a solid core");
             Some(0.0)

@@ -85,7 +85,7 @@ fn hub_piece(draft: &Draft<'_>, step: &At<HubStepKeys>, diameter: f64) -> Option
 fn shaft_piece(draft: &Draft<'_>, step: &At<ShaftStepKeys>, diameter: f64) -> Option<(f64, f64)> {
     let length = step_length(draft, step.node, step.value.length.as_ref());
     let given = draft.required(step.node, "bore", "20 mm", step.value.bore.as_ref())?;
-    let bore = draft.not_negative(given)?;
+    let bore = draft.zero_or_positive(given)?;
     if bore >= diameter {
         let mating = written(Kind::Length, diameter);
         draft.refuse(given, &format!("is not smaller than the mating diameter {mating}"));

@@ -35,6 +35,7 @@
 mod error;
 mod expansion;
 mod modulus;
+mod plausible;
 mod strength;
 mod value;
 
@@ -50,7 +51,7 @@ pub use strength::{StrengthRecord, StrengthRow};
 pub use value::Value;
 
 use super::{Family, Kind, Material, Origin, REFERENCE_TEMPERATURE, Sourced, Strength};
-use crate::quantity::{Conductivity, Density, Number, Pressure, SpecificHeat, Temperature};
+use crate::quantity::{Conductivity, Density, Modulus, Number, Pressure, SpecificHeat, Temperature};
 
 /// A material as written; see the [module](self) for the keys.
 #[derive(Debug, Clone, PartialEq, Deserialize, JsonSchema)]
@@ -71,7 +72,7 @@ pub struct MaterialRecord {
     /// Heat treatment or form.
     pub condition: Option<String>,
     /// Young's modulus at 20 °C.
-    pub youngs_modulus: Value<Pressure>,
+    pub youngs_modulus: Value<Modulus>,
     /// Young's modulus against temperature.
     pub youngs_modulus_curve: Option<ModulusRecord>,
     /// Poisson's ratio.
@@ -112,9 +113,11 @@ impl MaterialRecord {
     ///
     /// # Errors
     /// The first value that no material can have, with the way to it: a modulus or density that is not
-    /// positive, a table of the modulus that does not reach 20 °C, Poisson's ratio outside −1 to 0.5, a yield strength above the tensile strength, sections or
+    /// positive, a modulus, density or strength that looks like a slip of the unit, a table of the modulus that does
+    /// not reach 20 °C, Poisson's ratio outside −1 to 0.5, a yield strength above the tensile strength, sections or
     /// temperatures that do not rise, a strength that is missing for the kind.
     pub fn into_material(self, id_default: &str, origin: Origin) -> Result<Material, MaterialError> {
+        plausible::check(&self)?;
         let source: Arc<str> = Arc::from(self.source.as_deref().unwrap_or("no source given"));
         let youngs_modulus = self.youngs_modulus.sourced(&source, |modulus| modulus.0);
         let poisson = self.poisson.sourced(&source, |ratio| ratio.0);

@@ -95,6 +95,11 @@ impl<'de> Visitor<'de> for StrengthVisitor {
 }
 
 impl StrengthRecord {
+    /// An error in the rows, seen from the key `strength`.
+    pub(super) fn place(&self, error: MaterialError) -> MaterialError {
+        if self.under_sections { error.under("sections") } else { error }
+    }
+
     /// The rows in SI; the path of an error begins below the key `strength`.
     pub(super) fn into_rows(self, kind: Kind, record: &Arc<str>) -> Result<Vec<Strength>, MaterialError> {
         let under_sections = self.under_sections;

@@ -23,7 +23,11 @@ pub(super) fn fit(text: &str) -> Result<FitCallout, ToleranceError> {
         return Err(fault("the nominal diameter is not part of it".to_owned(), WHAT_A_FIT_IS));
     }
     let Some((hole, shaft)) = text.split_once(SEPARATORS) else {
-        return Err(fault(one_member_only(text), WHAT_A_FIT_IS));
+        // A class alone that cannot be read is told as one: the stroke is not what is wrong with `H19`.
+        return Err(match text.parse::<ToleranceClass>() {
+            Err(error) if looks_like_a_class(text) => error,
+            _ => fault(one_member_only(text), WHAT_A_FIT_IS),
+        });
     };
     let class = |part: &str| -> Result<ToleranceClass, ToleranceError> {
         part.parse().map_err(|error: ToleranceError| {
@@ -42,6 +46,12 @@ pub(super) fn fit(text: &str) -> Result<FitCallout, ToleranceError> {
 
 const WHAT_A_FIT_IS: &str =
     "a fit is a hole and a shaft, as in `H7/s6`, or a class of ANSI B4.1, as in `FN 4`";
+
+/// One or two letters and a number.
+fn looks_like_a_class(text: &str) -> bool {
+    let (letters, digits) = split_run(text, |c| c.is_ascii_alphabetic());
+    (1..=2).contains(&letters.len()) && !digits.is_empty() && digits.bytes().all(|byte| byte.is_ascii_digit())
+}
 
 fn one_member_only(text: &str) -> String {
     if let Ok(class) = text.parse::<ToleranceClass>() {
@@ -121,6 +131,9 @@ mod tests {
             ("H 7/s 6", "a blank does not belong", "did you mean `H7/s6`?"),
             ("H7", "names the hole only", "a fit is a hole and a shaft"),
             ("s6", "names the shaft only", "a fit is a hole and a shaft"),
+            ("H19", "there is no grade `19`; grades are 01, 0 and 1 to 18", "a letter and a grade"),
+            ("I7", "ISO 286 has no deviation `I`", "deviations are a, b"),
+            ("zz7", "ISO 286 has no deviation `zz`", "did you mean the deviation `z`"),
             ("H7/w6", "no deviation `w`", "deviations are"),
             ("H7/s19", "no grade `19`", "a class is a letter and a grade"),
             ("H7/s6/h6", "`/` does not belong", "a class is a letter and a grade"),
