@@ -612,3 +612,28 @@ fn the_example_goes_through() {
     assert!(found.iter().all(|row| row["errors"].is_empty()), "{}", common::stdout(&output));
     assert_eq!(output.status.code(), Some(if found.iter().all(|row| row["ok"] == "true") { 0 } else { 1 }));
 }
+
+/// Rows that are put straight into a joint are refused for what the joint file would be refused for.
+#[test]
+fn what_no_joint_can_have_is_refused_in_every_row() {
+    let told = |base: &str, table: &str| -> Vec<String> {
+        let (output, _) = worked(table.as_bytes(), &settings(base));
+        rows(&output).iter().map(|row| row["errors"].clone()).collect()
+    };
+    let table = "length (mm),hub.roughness (Rz um),duty.rated.torque (N.m)\n\
+                 70,6.3,100\n71,6.3,110\n0.0000009,6.3,100\n70,6300,100\n70,6.3,9999999999999999\n";
+    let plain = BASE.replace("Rz 10 um}", "Rz 10 um, outer_diameter: 120 mm}\ndiameter: 60 mm");
+    let found = told(&format!("{plain}fit: H7/s6\n"), table);
+    assert_eq!((found[0].as_str(), found[1].as_str()), ("", ""));
+    for (error, words) in found[2..].iter().zip(["less than 1 nm", "above 0.5 mm", "no number that a part"]) {
+        assert!(error.contains(words), "{words}: {error}");
+    }
+    let measured = "fit.measured.hole (mm),fit.measured.shaft (mm),fit.measured.uncertainty (mm)\n\
+                    60.01,60.06,0.002\n60.01,60.06,0.003\n60.01,60.06,2\n";
+    let found = told(&plain, measured);
+    assert!(found[1].is_empty() && found[2].contains("no measurement of a seat is so coarse"), "{found:?}");
+    let bearing = "joint_file: 1\nshaft: {material: C45+N}\nfit: k5\n\
+                   hub: {bearing: {bore: 50 mm, outside_diameter: 90 mm, width: 20 mm}}\n";
+    let found = told(bearing, "length (mm)\n20\n18\n70\n");
+    assert!(found[1].is_empty() && found[2].contains("more than the width 20 mm"), "{found:?}");
+}

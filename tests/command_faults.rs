@@ -246,3 +246,18 @@ fn the_list_of_kinds_is_not_asked_for_beside_a_file() {
     }
     assert_eq!(contents(here.path()), []);
 }
+
+#[test]
+fn a_state_without_a_name_is_not_called_state_twice() {
+    let unnamed = "  - {torque: 10 N.m, reversing: true, relaxation: 0.9, bending_moment: 20 N.m}\n  - {temperature: 21 degC}\n";
+    let here = folder_with(&[("joint.yaml", &format!("{PLAIN}{unnamed}"))]);
+    let outputs = [
+        ["check", "joint.yaml", "-q"].as_slice(),
+        &["check", "joint.yaml", "--json"],
+        &["report", "joint.yaml", "-o", "-"],
+    ];
+    for arguments in outputs {
+        let told = stdout(&hubgrip_in(here.path(), arguments));
+        assert!(told.contains("state 3") && !told.to_lowercase().contains("state state"), "{arguments:?}");
+    }
+}

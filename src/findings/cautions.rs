@@ -170,8 +170,8 @@ pub(super) fn notes(findings: &Findings) -> Vec<String> {
     for (state, duty) in findings.joint.duty.iter().zip(&findings.duty) {
         if duty.loosest.slip_safety.is_none() {
             notes.push(format!(
-                "slip_safety of state {} does not exist: the state has neither torque nor axial force.",
-                state.name
+                "slip_safety of {} does not exist: the state has neither torque nor axial force.",
+                state.called()
             ));
         }
     }

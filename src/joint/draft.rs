@@ -9,7 +9,7 @@ use crate::material::library::Library;
 use crate::quantity::Length;
 
 /// Smallest length or diameter that is read, m: some atoms (common practice, no source).
-const SMALLEST: f64 = 1e-9;
+pub(crate) const SMALLEST: f64 = 1e-9;
 
 /// A joint while it is put together.
 pub(crate) struct Draft<'a> {

@@ -33,7 +33,10 @@ mod validate;
 mod written;
 
 pub use bearing::BearingSeat;
+pub(crate) use draft::SMALLEST;
 pub use file::VERSION;
+pub(crate) use leaf::ROUGHEST;
+pub(crate) use validate::COARSEST;
 
 use std::sync::Arc;
 

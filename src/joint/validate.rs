@@ -13,6 +13,8 @@ mod rings;
 mod smoothing;
 mod steps;
 
+pub(crate) use fit::COARSEST;
+
 use super::diagnose::Fault;
 use super::draft::Draft;
 use super::file::{JointFile, RequireKeys, RingKeys};

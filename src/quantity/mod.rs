@@ -53,6 +53,7 @@ pub use newtype::{
     TemperatureDifference, Time, Torque, Velocity, Volume,
 };
 pub use range::{parse_number_range, parse_plus_minus, parse_range, parse_with_uncertainty};
+pub(crate) use read::GREATEST;
 pub use read::{parse, parse_number};
 pub use show::{DisplayUnit, Measure, Shown, display_unit, number, show};
 pub use unit::Kind;

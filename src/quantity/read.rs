@@ -38,7 +38,7 @@ pub fn parse_number(text: &str) -> Result<f64, QuantityError> {
 
 /// Greatest SI number that is read, of any kind: a thousand times the stiffest modulus in pascals, and far below where
 /// a product of a few such numbers overflows (common practice, no source).
-pub(super) const GREATEST: f64 = 1e15;
+pub(crate) const GREATEST: f64 = 1e15;
 
 /// The SI number of a text taken apart, with the unit it is given in.
 pub(super) fn value(kind: Kind, scanned: &Scanned<'_>, unit: &str) -> Result<f64, QuantityError> {

@@ -20,7 +20,7 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
         let (Some(loosest), Some(tightest)) = (&duty.loosest.bending, &duty.tightest.bending) else {
             continue;
         };
-        sheet.section(format!("Duty state {}: bending at the edges of the seat", state.name));
+        sheet.section(format!("Duty {}: bending at the edges of the seat", state.called()));
         seat(sheet, findings, units);
         let tag = index + 1;
         let name = |symbol: &str| format!("{symbol}{tag}");

@@ -65,7 +65,7 @@ impl<'a> StateSheet<'a> {
         if pair.slip_safety.is_none() && self.state.speed == 0.0 && !pressed {
             return;
         }
-        sheet.section(format!("Duty state {}: the loosest pair", self.state.name));
+        sheet.section(format!("Duty {}: the loosest pair", self.state.called()));
         self.causes(sheet);
         self.contact(sheet, pair);
         self.capacity(sheet, pair);

@@ -88,7 +88,7 @@ fn capacities(sheet: &mut Sheet, units: &Units, tag: &str, interfaces: &[Interfa
 
 /// The loosest pair in a loaded state.
 fn held(sheet: &mut Sheet, units: &Units, state: &DutyState, tag: usize, interfaces: &[InterfaceFindings]) {
-    sheet.section(format!("Duty state {}: the loosest pair", state.name));
+    sheet.section(format!("Duty {}: the loosest pair", state.called()));
     let tag = format!("s{tag}");
     capacities(sheet, units, &tag, interfaces);
     let (torque, force) = (format!("M_{tag}"), format!("F_{tag}"));

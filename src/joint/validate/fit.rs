@@ -14,7 +14,7 @@ use crate::tolerance::{FitCallout, Limits, Member, MemberCallout, Resolved, Tole
 const EXAMPLE: &str = "H7/s6";
 
 /// Share of the diameter from which on an uncertainty is refused: it would cover any fit (common practice, no source).
-const COARSEST: f64 = 0.005;
+pub(crate) const COARSEST: f64 = 0.005;
 
 /// The fit of two parts with its limits.
 pub(super) fn fit(

@@ -5,7 +5,7 @@ use std::io::Write;
 
 use super::header::Column;
 use crate::quantity::unit::{Scale, Unit};
-use crate::quantity::{Kind, parse};
+use crate::quantity::{GREATEST, Kind, parse};
 
 /// The text of a cell as it would be written in a joint file.
 pub(super) fn written<'a>(cell: &'a str, column: &Column) -> Cow<'a, str> {
@@ -39,8 +39,8 @@ pub(super) fn quantity(kind: Kind, cell: &str, column: &Column, unit: Option<&'s
         _ => None,
     };
     match fast {
-        Some(value) if kind != Kind::Temperature || value >= 0.0 => Some(value),
-        Some(_) => None,
+        Some(value) if value.abs() > GREATEST || (kind == Kind::Temperature && value < 0.0) => None,
+        Some(value) => Some(value),
         None => parse(kind, &written(cell, column)).ok(),
     }
 }

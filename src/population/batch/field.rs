@@ -1,6 +1,6 @@
 //! The keys whose cells are put straight into a joint that was read before.
 
-use crate::joint::{DutyState, Joint};
+use crate::joint::{DutyState, Joint, SMALLEST};
 use crate::quantity::Kind;
 use crate::tolerance::Member;
 
@@ -157,17 +157,19 @@ fn split_state(key: &str) -> Option<(&str, &str)> {
 pub(super) fn put(joint: &mut Joint, field: Field, value: f64) -> Option<()> {
     let positive = (value > 0.0).then_some(value);
     let not_negative = (value >= 0.0).then_some(value);
+    let length = (value >= SMALLEST).then_some(value);
+    let length_or_zero = (value == 0.0 || value >= SMALLEST).then_some(value);
     let state = |joint: &mut Joint, number: usize, put: &dyn Fn(&mut DutyState, f64)| {
         let value = not_negative?;
         put(joint.duty.get_mut(number)?, value);
         Some(())
     };
     match field {
-        Field::Diameter => joint.diameter = positive?,
-        Field::Length => joint.length = positive?,
-        Field::Relief => joint.relief = not_negative?,
-        Field::Bore => joint.rings.first_mut()?.inner_diameter = not_negative?,
-        Field::OuterDiameter => joint.rings.get_mut(1)?.outer_diameter = positive?,
+        Field::Diameter => joint.diameter = length?,
+        Field::Length => joint.length = length?,
+        Field::Relief => joint.relief = length_or_zero?,
+        Field::Bore => joint.rings.first_mut()?.inner_diameter = length_or_zero?,
+        Field::OuterDiameter => joint.rings.get_mut(1)?.outer_diameter = length?,
         Field::SlipSafety => joint.require.slip_safety = positive?,
         Field::YieldSafety => joint.require.yield_safety = positive?,
         Field::FractureSafety => joint.require.fracture_safety = positive?,

@@ -8,7 +8,7 @@
 use super::cell;
 use super::field::{End, Field, put};
 use super::header::Column;
-use crate::joint::{Allow, Joint, Ring};
+use crate::joint::{Allow, COARSEST, Joint, ROUGHEST, Ring};
 use crate::material::Range;
 use crate::material::roughness::rz_from_ra;
 use crate::quantity::unit::Unit;
@@ -135,6 +135,12 @@ impl Template {
         if !in_order || joint.relief >= joint.length {
             return None;
         }
+        let seat = joint.length - joint.relief;
+        let chilled = joint.assembly.practice.chilled_length;
+        let too_wide = joint.bearing.as_ref().is_some_and(|bearing| joint.length - bearing.width > 1e-9);
+        if too_wide || chilled.is_some_and(|chilled| seat - chilled > 1e-9) {
+            return None;
+        }
         if self.sections_follow.0 {
             let section = tidy(shaft.outer_diameter);
             take_section(shaft, section)?;
@@ -161,7 +167,7 @@ impl Template {
             }
             FitOf::Members { hole, shaft } => limits(&FitCallout::members(*hole, *shaft), diameter),
             FitOf::Measured { hole, shaft, uncertainty } => {
-                if *uncertainty < 0.0 {
+                if *uncertainty < 0.0 || *uncertainty >= COARSEST * *hole {
                     return None;
                 }
                 limits(&FitCallout::measured(*hole, *shaft, *uncertainty), diameter)
@@ -261,7 +267,7 @@ fn roughness(text: &str, column: &Column) -> Option<f64> {
     let written = cell::written(text, column);
     let start = written.find(|c: char| !c.is_ascii_alphabetic())?;
     let (symbol, depth) = written.split_at(start);
-    let depth = parse(Kind::Length, depth).ok().filter(|depth| *depth >= 0.0)?;
+    let depth = parse(Kind::Length, depth).ok().filter(|depth| (0.0..=ROUGHEST).contains(depth))?;
     match symbol {
         "Rz" => Some(depth),
         "Ra" => Some(rz_from_ra(depth).value),
