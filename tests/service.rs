@@ -715,3 +715,72 @@ fn every_press_of_several_rings_is_judged() {
     let force = forces[1].found.unwrap();
     assert!(force >= plateau && force < 1.01 * plateau, "{force} and {plateau}");
 }
+
+/// What no requirement asks about is named: a part hotter than its material stands, one that turns brittle, an interface that
+/// opens in a state without load.
+#[test]
+fn states_beyond_what_is_judged_are_named() {
+    let hub = "material: EN-AW-7075-T651, outer_diameter: 100 mm";
+    let named = |shaft: &str, hub: &str, duty: &str, words: &str| {
+        let found = two_parts(shaft, hub, 50.0, &format!("duty: [{{state: odd, {duty}}}]"));
+        found.cautions.into_iter().find(|caution| caution.text.contains(words))
+    };
+    let alloy = "material: EN-AW-7075-T651";
+    let hot = named(alloy, hub, "temperature: 200 degC", "above the 120 °C usually allowed").unwrap();
+    assert!(!hot.usual && hot.text.starts_with("In state odd the"));
+    assert!(named(alloy, hub, "temperature: 110 degC", "usually allowed").is_none());
+    let cold =
+        named("material: C45+N", &format!("material: C45+N{HUB}"), "temperature: -60 degC", "60 °C. ")
+            .unwrap();
+    assert!(cold.usual);
+    // The joint of equal steel opens at 3525.9059 rad/s, which is 33670 rpm.
+    let loose = "comes loose from the shaft at the loosest pair";
+    assert!(named(&steel(300, ""), &steel(300, HUB), "speed: 34000 rpm", loose).is_some());
+    assert!(named(&steel(300, ""), &steel(300, HUB), "speed: 33000 rpm", loose).is_none());
+    assert!(named(&steel(300, ""), &steel(300, HUB), "speed: 34000 rpm, torque: 1 N.m", loose).is_none());
+}
+
+/// A hub that may yield by design is judged by its yield rule; the caution of the criterion would name another onset.
+#[test]
+fn a_hub_that_yields_by_design_has_one_onset() {
+    let begins =
+        |found: &Findings| found.cautions.iter().any(|caution| caution.text.contains("begins to yield at"));
+    let duty = "duty: [{state: rated, torque: 10 N.m}]";
+    assert!(begins(&two_parts(&steel(900, ""), &steel(300, HUB), 100.0, duty)));
+    assert!(!begins(&two_parts(
+        &steel(900, ""),
+        &steel(300, HUB),
+        100.0,
+        &format!("require: {{allow: plastic}}\n{duty}")
+    )));
+}
+
+/// Dry seats are not to be oiled: their friction is that of dry ones.
+#[test]
+fn a_dry_seat_is_not_told_to_be_oiled() {
+    let oiled = |lubrication: &str| {
+        let text = format!(
+            "joint_file: 1\ndiameter: 50 mm\nlength: 40 mm\nshaft: {{material: C45+N}}\nhub: {{material: C45+N, outer_diameter: \
+             90 mm}}\nfit: H7/s6\nfriction: {{lubrication: {lubrication}}}\n"
+        );
+        findings(&text).cautions.iter().any(|caution| caution.text == "Oil the seat lightly.")
+    };
+    assert!(oiled("oiled") && !oiled("dry") && !oiled("degreased"));
+}
+
+/// Of several pairs of materials the press takes the friction of the one that drags most, holding that of the one that holds
+/// least.
+#[test]
+fn the_press_takes_the_greatest_friction_of_several_pairs() {
+    let rings = |outer: &str| {
+        let text = format!(
+            "joint_file: 1\nlength: 40 mm\nrings: [{{material: C45+N, outer_diameter: 40 mm}}, {{material: C45+N, outer_diameter: \
+             60 mm}}, {{material: {outer}, outer_diameter: 90 mm}}]\nfits: [H7/s6, H7/s6]\n"
+        );
+        findings(&text).joint.friction
+    };
+    let (steel, mixed) = (rings("C45+N"), rings("EN-AW-6082-T6"));
+    assert!(mixed.holding.value.low <= steel.holding.value.low);
+    assert!(mixed.pressing.value.high >= steel.pressing.value.high);
+    assert!(mixed.release.value.high >= steel.release.value.high);
+}

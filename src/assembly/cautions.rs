@@ -14,6 +14,20 @@ pub struct Caution {
     pub text: String,
     /// Where it comes from.
     pub source: String,
+    /// Whether it goes with the way of joining or the material whatever the numbers are, and not with what was found.
+    pub usual: bool,
+}
+
+impl Caution {
+    /// A caution that what was found calls for.
+    pub fn found(subject: &'static str, text: impl Into<String>, source: impl Into<String>) -> Self {
+        Self { subject, text: text.into(), source: source.into(), usual: false }
+    }
+
+    /// The same as one that is usual.
+    pub fn usual(self) -> Self {
+        Self { usual: true, ..self }
+    }
 }
 
 /// A way to put a joint together or to take it apart.
@@ -94,9 +108,13 @@ pub fn cautions(process: Process) -> Vec<Caution> {
             subject: process.subject(),
             text: (*text).to_owned(),
             source: (*source).to_owned(),
+            usual: true,
         })
         .collect()
 }
+
+/// What is said of a seat that is pressed oiled, as is usual.
+pub const OIL_THE_SEAT: &str = "Oil the seat lightly.";
 
 const PRESS: &[(&str, &str)] = &[
     (
@@ -113,7 +131,8 @@ const PRESS: &[(&str, &str)] = &[
         "Keep the press speed low; a few millimetres a second is usual and 2 mm/s is a common limit.",
         "DIN 7190 gives 2 mm/s (from memory)",
     ),
-    ("Oil the seat lightly, and do not load a pressed joint for about 24 hours.", "DIN 7190 (from memory)"),
+    (OIL_THE_SEAT, "DIN 7190 (from memory)"),
+    ("Do not load a pressed joint for about 24 hours.", "DIN 7190 (from memory)"),
     ("Wear eye protection and never hammer on a hardened part: it can shatter.", MEMORY),
 ];
 
@@ -285,7 +304,7 @@ pub fn material_cautions(part: &Part) -> Vec<Caution> {
 
 fn heat_cautions(part: &Part, list: &mut Vec<Caution>) {
     let mut say = |text: String, source: &str| {
-        list.push(Caution { subject: "heat", text, source: source.to_owned() });
+        list.push(Caution::found("heat", text, source));
     };
     let (name, material) = (part.name, part.material);
     if let Some(limit) = &material.max_temperature
@@ -336,14 +355,15 @@ fn cold_cautions(part: &Part, list: &mut Vec<Caution>) {
     if part.coldest >= CHILLED {
         return;
     }
-    let mut say = |text: String, source: &str| {
-        list.push(Caution { subject: "cold", text, source: source.to_owned() });
-    };
     let (name, material, words) = (part.name, part.material, words(part.material));
     let coldest = celsius(part.coldest);
     if let Some(caution) = &material.low_temperature_caution {
-        say(format!("The {name} is chilled to {coldest}. {}", sentence(caution)), "material record");
+        let text = format!("The {name} is chilled to {coldest}. {}", sentence(caution));
+        list.push(Caution::found("cold", text, "material record").usual());
     }
+    let mut say = |text: String, source: &str| {
+        list.push(Caution::found("cold", text, source));
+    };
     if words.contains("harden") && part.coldest < HARDENED_STEEL_COLD {
         say(
             format!(

@@ -27,7 +27,8 @@ pub struct Arguments {
     /// Findings as JSON, fixed names, full precision
     #[arg(long)]
     pub json: bool,
-    /// Cautions count as requirements not met
+    /// Cautions that what was found calls for count as requirements not met; the
+    /// usual ones of the method do not
     #[arg(long)]
     pub strict: bool,
     #[command(flatten)]
@@ -64,8 +65,9 @@ fn shown(file: &Path) -> String {
     name.chars().map(|sign| if sign.is_control() { ' ' } else { sign }).collect()
 }
 
-/// Whether all requirements are met; cautions count when the check is strict.
+/// Whether all requirements are met; when the check is strict, cautions count that what was found calls for.
 pub fn ending(findings: &Findings, strict: bool) -> Ending {
-    let met = findings.verdicts.iter().all(|verdict| verdict.ok) && (!strict || findings.cautions.is_empty());
+    let cautioned = findings.cautions.iter().any(|caution| !caution.usual);
+    let met = findings.verdicts.iter().all(|verdict| verdict.ok) && !(strict && cautioned);
     if met { Ending::Met } else { Ending::NotMet }
 }

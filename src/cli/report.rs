@@ -27,7 +27,8 @@ pub struct Arguments {
     /// Where the report goes; - is standard output
     #[arg(long, short, value_name = "OUT.html")]
     pub output: Option<PathBuf>,
-    /// Cautions count as requirements not met
+    /// Cautions that what was found calls for count as requirements not met; the
+    /// usual ones of the method do not
     #[arg(long)]
     pub strict: bool,
     #[command(flatten)]

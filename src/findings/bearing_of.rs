@@ -164,7 +164,7 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     let system = findings.joint.display;
     let mut all = Vec::new();
     let mut say = |subject, text: String, source: &str| {
-        all.push(Caution { subject, text, source: source.to_owned() });
+        all.push(Caution::found(subject, text, source));
     };
     let hoop = bearing.hoop_stress.tightest;
     if seat.ring == BearingRing::Inner && hoop > HOOP_LIMIT {

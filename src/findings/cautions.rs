@@ -1,6 +1,8 @@
 //! Cautions and notes that the numbers of a joint call for.
 
-use super::{Caution, Findings, bearing_of, fatigue, joining_cautions, modulus_notes, shaft_alone};
+use super::{
+    Caution, Findings, bearing_of, fatigue, joining_cautions, modulus_notes, service_cautions, shaft_alone,
+};
 use crate::joint::Allow;
 use crate::material::Kind;
 use crate::mechanics::criteria::DuctileCriterion;
@@ -16,6 +18,7 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     all.extend(proportions(findings));
     all.extend(polymers(findings));
     all.extend(buckling(findings));
+    all.extend(service_cautions::cautions(findings));
     all.extend(shaft_alone::cautions(findings));
     all.extend(bearing_of::cautions(findings));
     all.extend(joining_cautions::cautions(findings));
@@ -24,7 +27,9 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
 
 fn yielding(findings: &Findings) -> Vec<Caution> {
     let joint = &findings.joint;
-    let Some(onset) = &findings.onset_of_yield else { return Vec::new() };
+    // A hub that may yield by design is judged by its own rule.
+    let by_design = joint.require.allow != Allow::Elastic && findings.service.plastic.is_some();
+    let Some(onset) = findings.onset_of_yield.as_ref().filter(|_| !by_design) else { return Vec::new() };
     let unit = |m: f64| show(Measure::Deviation, m, joint.display).to_string();
     let Some(ring) = joint.rings.get(onset.ring) else { return Vec::new() };
     let brittle = ring.material.kind == Kind::Brittle;
@@ -50,6 +55,7 @@ fn yielding(findings: &Findings) -> Vec<Caution> {
             unit(findings.extremes.tightest.effective_interference),
         ),
         source: criterion_source(brittle, joint.criterion).to_owned(),
+        usual: false,
     }]
 }
 
@@ -80,7 +86,7 @@ fn clearance(findings: &Findings) -> Vec<Caution> {
             "This is a clearance fit: even the tightest pair does not grip, the pressure is 0 at every pair."
         }
     };
-    vec![Caution { subject: "hold", text: text.to_owned(), source: "ISO 286-1, clause 3.3".to_owned() }]
+    vec![Caution::found("hold", text, "ISO 286-1, clause 3.3")]
 }
 
 fn input_remarks(findings: &Findings) -> Vec<Caution> {
@@ -90,6 +96,7 @@ fn input_remarks(findings: &Findings) -> Vec<Caution> {
             subject: "input",
             text: remark.clone(),
             source: "the joint file as understood".to_owned(),
+            usual: false,
         })
         .collect()
 }
@@ -105,6 +112,7 @@ fn proportions(findings: &Findings) -> Vec<Caution> {
                    above the value for long cylinders."
                 .to_owned(),
             source: "axisymmetric finite elements, frictionless, hub ratios 0.3 to 0.7 (own computation)".to_owned(),
+            usual: false,
         });
     }
     all
@@ -126,6 +134,7 @@ fn polymers(findings: &Findings) -> Vec<Caution> {
                 }
             ),
             source: "common practice, no source".to_owned(),
+            usual: false,
         })
         .collect()
 }
@@ -145,6 +154,7 @@ fn buckling(findings: &Findings) -> Option<Caution> {
             pressure(liner.housed),
         ),
         source: "D. Glock, Der Stahlbau 46 (1977) 212-217 (from memory): liner in a rigid housing".to_owned(),
+        usual: false,
     })
 }
 

@@ -6,6 +6,7 @@ use crate::assembly::cautions::{self as practice, Caution, Part, Process};
 use crate::joint::practice::Heating;
 use crate::joint::{Bath, Method, Ring};
 use crate::material::Kind;
+use crate::material::friction::Lubrication;
 use crate::quantity::{Measure, show};
 
 /// Below this handling time a lift must be drilled and may need another route, s (common practice, no source).
@@ -14,6 +15,10 @@ const SHORT: f64 = 15.0;
 /// The cautions of the method, of the materials that go through it, of the air, and of a time that is short.
 pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
     let mut all: Vec<Caution> = processes(findings).into_iter().flat_map(practice::cautions).collect();
+    // The forces and the grip of a dry seat are not those of an oiled one.
+    if matches!(findings.joint.friction.lubrication, Some(Lubrication::Dry | Lubrication::Degreased)) {
+        all.retain(|caution| caution.text != practice::OIL_THE_SEAT);
+    }
     all.extend(flammable(findings));
     all.extend(air(findings));
     all.extend(short_time(findings));
@@ -39,6 +44,7 @@ fn oil(findings: &Findings) -> Vec<Caution> {
             hub.name
         ),
         source: "common practice, from memory".to_owned(),
+        usual: true,
     }];
     let required = |ring: &Ring| match ring.material.kind {
         Kind::Brittle => joint.require.fracture_safety,
@@ -56,6 +62,8 @@ fn oil(findings: &Findings) -> Vec<Caution> {
                 hub.name
             ),
             source: "Lamé, with the oil pressure in place of the contact pressure".to_owned(),
+            // Oil is one way to take it apart; nobody has asked for it yet.
+            usual: true,
         });
     }
     all
@@ -98,6 +106,7 @@ fn flammable(findings: &Findings) -> Option<Caution> {
             show(Measure::Temperature, liquid.flash_point, findings.joint.display)
         ),
         source: liquid.source.to_owned(),
+        usual: false,
     })
 }
 
@@ -107,7 +116,7 @@ fn air(findings: &Findings) -> Vec<Caution> {
     };
     let mut all = Vec::new();
     let mut say = |text: String, source: &str| {
-        all.push(Caution { subject: "cold", text, source: source.to_owned() });
+        all.push(Caution::found("cold", text, source));
     };
     let percent = |share: f64| format!("{:.1} %", (share * 1000.0 + 1e-9).floor() / 10.0);
     const SOURCE: &str =
@@ -155,6 +164,7 @@ fn short_time(findings: &Findings) -> Option<Caution> {
              more; practise the movement before."
         ),
         source: "common practice, no source".to_owned(),
+        usual: false,
     })
 }
 
@@ -168,6 +178,7 @@ fn frosted(findings: &Findings) -> Option<Caution> {
                or open more clearance."
             .to_owned(),
         source: "bound on the frost by the analogy of heat and mass transfer".to_owned(),
+        usual: false,
     })
 }
 
@@ -189,6 +200,7 @@ fn quench(findings: &Findings) -> Vec<Caution> {
             source: "thermal stress of a free cylinder (S. P. Timoshenko and J. N. Goodier, Theory of Elasticity, chapter 13); \
                      half the strength is common practice, no source"
                 .to_owned(),
+            usual: false,
         })
     });
     worried.collect()
@@ -204,7 +216,7 @@ fn crushing(findings: &Findings) -> Vec<Caution> {
     let (shaft, hub) = joint.joined_last();
     let mut all = Vec::new();
     let mut say = |text: String, source: &str| {
-        all.push(Caution { subject: "press", text, source: source.to_owned() });
+        all.push(Caution::found("press", text, source));
     };
     for (ring, face) in [(shaft, &work.shaft_face), (hub, &work.hub_face)] {
         if face.safety.is_some_and(|safety| safety < 1.5) {

@@ -17,6 +17,7 @@ mod modulus_notes;
 pub mod oil;
 pub mod press_work;
 mod service;
+mod service_cautions;
 mod shaft_alone;
 mod softening;
 mod thermal_part;

@@ -31,16 +31,17 @@ fn nominal(joint: &Joint, state: &DutyState) -> Option<Caution> {
     Some(Caution {
         subject: "strength",
         text: format!(
-            "If the {} carries the torque and bending moment of state {} by itself, they stress it with {} at the hub's edge \
+            "If the {} carries the torque and bending moment of {} by itself, they stress it with {} at the hub's edge \
              (nominal, without the fit and without notch), {} against its yield strength of {}; the verdicts judge the fit, not \
              the shaft beside it.",
             shaft.name,
-            state.name,
+            state.called(),
             pressure(stress),
             factor_found(strength / stress),
             pressure(strength),
         ),
         source: "torsion and bending of a round bar; von Mises criterion".to_owned(),
+        usual: false,
     })
 }
 
@@ -53,14 +54,15 @@ fn fatigue(findings: &Findings) -> Vec<Caution> {
         Some(Caution {
             subject: "strength",
             text: format!(
-                "Rotating bending in state {} may break the {} at the hub's edge: its safety against fatigue is {} to {} over the \
+                "Rotating bending in {} may break the {} at the hub's edge: its safety against fatigue is {} to {} over the \
                  published notch factors.",
-                state.name,
+                state.called(),
                 shaft.name,
                 factor_found(found.safety.low),
                 factor_found(found.safety.high),
             ),
             source: "DIN 743 (from memory); Horger & Maulbetsch, J. Applied Mechanics 3 (1936)".to_owned(),
+            usual: false,
         })
     })
     .collect()

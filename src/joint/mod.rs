@@ -40,6 +40,7 @@ pub(crate) use validate::COARSEST;
 
 use std::sync::Arc;
 
+use crate::material::friction::Lubrication;
 use crate::material::{Kind, Material, Range, Sourced, Strength};
 use crate::mechanics::criteria::DuctileCriterion;
 use crate::mechanics::plastic::YieldRule;
@@ -184,6 +185,8 @@ pub struct Friction {
     pub pressing: Sourced<Range>,
     /// At first movement when pushing out after rest; the high end sizes the press.
     pub release: Sourced<Range>,
+    /// State of the seats that these belong to; none when the numbers are given without one.
+    pub lubrication: Option<Lubrication>,
 }
 
 /// A piece of a stepped joint, from the end that enters first.

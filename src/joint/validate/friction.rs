@@ -43,7 +43,7 @@ fn of_text(
         return None;
     }
     let range = range(draft, &At { node, value: Text::new(text.text.clone()) })?;
-    Some(Friction { holding: range.clone(), pressing: range.clone(), release: range })
+    Some(Friction { holding: range.clone(), pressing: range.clone(), release: range, lubrication: None })
 }
 
 fn of_keys(
@@ -74,6 +74,7 @@ fn of_keys(
         holding: next(draft, "holding", |set| &set.holding)?,
         pressing: next(draft, "pressing", |set| &set.pressing)?,
         release: next(draft, "release", |set| &set.release)?,
+        lubrication: lubrication.or(found.as_ref().map(|set| set.lubrication)),
     })
 }
 
@@ -88,6 +89,7 @@ fn all_from_library(
         holding: noted(draft, "holding", &set.holding),
         pressing: noted(draft, "pressing", &set.pressing),
         release: noted(draft, "release", &set.release),
+        lubrication: Some(set.lubrication),
     })
 }
 
@@ -97,13 +99,22 @@ fn of_library(
     method: Method,
     lubrication: Option<Lubrication>,
 ) -> Option<FrictionSet> {
-    // Of several pairs the one that holds least counts.
-    let pairs = rings.windows(2).map(|pair| {
-        let (inner, outer) = (&pair[0].material, &pair[1].material);
-        (from_library(outer, inner, friction_method(method), lubrication), inner, outer)
-    });
+    // Of several pairs the one that holds least counts, and for the press the one that drags most.
+    let pairs = || {
+        rings.windows(2).map(|pair| {
+            let (inner, outer) = (&pair[0].material, &pair[1].material);
+            (from_library(outer, inner, friction_method(method), lubrication), inner, outer)
+        })
+    };
     let least = |set: &FrictionSet| set.holding.value.low;
-    let (set, inner, outer) = pairs.min_by(|a, b| least(&a.0).total_cmp(&least(&b.0)))?;
+    let (mut set, inner, outer) = pairs().min_by(|a, b| least(&a.0).total_cmp(&least(&b.0)))?;
+    for other in pairs().map(|(other, ..)| other) {
+        for (own, other) in [(&mut set.pressing, other.pressing), (&mut set.release, other.release)] {
+            if other.value.high > own.value.high {
+                *own = other;
+            }
+        }
+    }
     if lubrication.is_none() {
         let (word, source) = match set.lubrication {
             Lubrication::Oiled => {
