@@ -729,9 +729,8 @@ fn states_beyond_what_is_judged_are_named() {
     let hot = named(alloy, hub, "temperature: 200 degC", "above the 120 °C usually allowed").unwrap();
     assert!(!hot.usual && hot.text.starts_with("In state odd the"));
     assert!(named(alloy, hub, "temperature: 110 degC", "usually allowed").is_none());
-    let cold =
-        named("material: C45+N", &format!("material: C45+N{HUB}"), "temperature: -60 degC", "60 °C. ")
-            .unwrap();
+    let cold = named("material: C45+N", &format!("material: C45+N{HUB}"), "temperature: -60 degC", "60 °C. ")
+        .unwrap();
     assert!(cold.usual);
     // The joint of equal steel opens at 3525.9059 rad/s, which is 33670 rpm.
     let loose = "comes loose from the shaft at the loosest pair";
