@@ -151,7 +151,7 @@ fn the_envelope_is_made_of_states() {
         two_parts(&shaft, &hub, 150.0, &format!("duty:\n  - {rated}\n{more}"))
     };
     let found = findings(&text(""));
-    let envelope = found.service.envelope.as_ref().unwrap();
+    let envelope = found.envelope().unwrap().unwrap();
     assert_relative_eq!(envelope.states[0].temperature, 343.15, max_relative = 1e-9);
     let mut compared = 0;
     for line in &envelope.lines {

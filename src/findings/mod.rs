@@ -80,6 +80,20 @@ impl Findings {
     pub fn worksheet(&self) -> Vec<WorksheetSection> {
         worksheet::worksheet(self)
     }
+
+    /// What is left of the pressure at speed and with a hot hub, of the loosest pair; drawn when asked for. None where it
+    /// cannot be drawn: more than two rings, a stepped joint, a pair that does not grip.
+    ///
+    /// # Errors
+    /// As [`compute`], which has found the same numbers before.
+    pub fn envelope(&self) -> Result<Option<Envelope>, FindingsError> {
+        let kernel = kernel::Kernel::new(&self.joint)?;
+        let worn = self.service.plastic.as_ref().and_then(|plastic| plastic.worn.as_ref());
+        let mut loosest = kernel::pair_interferences(&self.joint).loosest;
+        loosest.shrink(worn.map_or(0.0, |worn| worn.loosest));
+        let speed = self.service.loosening.first().and_then(|loosening| loosening.speed);
+        envelope::envelope(&self.joint, &kernel, &loosest, &self.duty, speed)
+    }
 }
 
 /// One pair of parts at the shop temperature, at rest.

@@ -1,7 +1,6 @@
 //! The joint at work: what loosens it, and what yielding by design gives.
 
 use super::condition::Condition;
-use super::envelope::{Envelope, envelope};
 use super::fatigue::{Fatigue, fatigue};
 use super::kernel::{Kernel, PairInterference};
 use super::{DutyFindings, FindingsError, InterfaceFindings, PairFindings, RingStress};
@@ -31,8 +30,6 @@ pub struct ServiceFindings {
     pub length_factors: Option<LengthFactors>,
     /// The innermost part under pressure from outside; none unless it is a tube with a thin wall.
     pub liner: Option<ThinLiner>,
-    /// What is left of the pressure at speed and with a hot hub; none where it cannot be drawn.
-    pub envelope: Option<Envelope>,
     /// Fatigue of the shaft at the hub edge for each state with rotating bending.
     pub fatigue: Vec<Fatigue>,
 }
@@ -131,13 +128,11 @@ pub(super) fn service(
     plastic: Option<PlasticFindings>,
 ) -> Result<ServiceFindings, FindingsError> {
     let loosening = loosening(joint, kernel, &pairs.loosest)?;
-    let loosening_speed = loosening.first().and_then(|loosening| loosening.speed);
     let (shaft, hub) = joint.shaft_and_hub();
     let slenderness = joint.engaged_length() / joint.diameter;
     let ratio = joint.diameter / hub.outer_diameter;
     let simple = joint.rings.len() == 2 && joint.slices.is_empty() && shaft.inner_diameter == 0.0;
     Ok(ServiceFindings {
-        envelope: envelope(joint, kernel, &pairs.loosest, duty, loosening_speed)?,
         liner: liner(joint, kernel, tightest, duty)?,
         loosening,
         plastic,

@@ -95,7 +95,7 @@ pub(super) fn soften(
 
 impl PairInterference {
     /// What grips when the hub's bore stays larger by this, m.
-    fn shrink(&mut self, growth: f64) {
+    pub(super) fn shrink(&mut self, growth: f64) {
         self.grip = self.effective.iter().map(|effective| effective - growth).collect();
     }
 }

@@ -11,7 +11,7 @@ use crate::report::units::{Measure, Units};
 /// Lines of equal pressure of the loosest pair over speed and hub temperature, with every duty state; none where the
 /// joint has more than two rings or steps, or where the loosest pair does not grip.
 pub fn envelope(findings: &Findings) -> Option<Plot> {
-    let envelope = findings.service.envelope.as_ref()?;
+    let envelope = &findings.envelope().ok()??;
     let units = Units { system: findings.joint.display };
     let temperature = |kelvin: f64| units.on_axis(Measure::Temperature, kelvin);
     let (low, high) = envelope.temperatures;
