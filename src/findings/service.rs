@@ -4,7 +4,7 @@ use super::condition::Condition;
 use super::fatigue::{Fatigue, fatigue};
 use super::kernel::{Kernel, PairInterference};
 use super::{DutyFindings, FindingsError, InterfaceFindings, PairFindings, RingStress};
-use crate::joint::Joint;
+use crate::joint::{Joint, Ring};
 use crate::material::Kind;
 use crate::mechanics::buckling::Liner;
 use crate::mechanics::criteria::DuctileCriterion;
@@ -12,6 +12,7 @@ use crate::mechanics::finite_length::{LengthFactors, ShaftEnds, length_factors};
 use crate::mechanics::governing::{Extreme, StackQuantity, StressMeasure};
 use crate::mechanics::plastic::{HubYield, PlasticJoint, PlasticLimits, PlasticState};
 use crate::mechanics::stack::Stack;
+use crate::mechanics::temperature::parting_temperature;
 use crate::mechanics::two_rings::TwoRings;
 use crate::tolerance::Extremes;
 
@@ -182,6 +183,18 @@ fn loosening(
         let end = limits.fold(f64::INFINITY, f64::min);
         if end <= shop {
             return Ok(None);
+        }
+        if let [inner, outer] = joint.rings.as_slice() {
+            let made = loosest.grip.first().copied().unwrap_or_default();
+            let strain = |ring: &Ring, temperature: f64| {
+                // Within the curves there is no error; beyond them nothing is known to part the rings.
+                ring.material.expansion.strain(temperature).unwrap_or(f64::NAN)
+            };
+            let overlap = |temperature: f64| {
+                let inner = strain(inner, if heated(0) { temperature } else { shop });
+                Ok(made + joint.diameter * (inner - strain(outer, temperature)))
+            };
+            return Ok(parting_temperature(overlap, shop, end)?);
         }
         Ok(stack.loosening_temperature_of(interface, at, shop, end)?)
     };

@@ -200,18 +200,53 @@ impl Stack {
             let solution = stack(temperature)?.solve()?;
             Ok(solution.pressures[interface] - stiffness * solution.gaps[interface])
         };
-        let place = |step: usize| from + (to - from) * step as f64 / INTERVALS as f64;
-        if grip(from)? <= 0.0 {
-            return Ok(Some(from));
-        }
-        for step in 1..=INTERVALS {
-            if grip(place(step))? < 0.0 {
-                let signed = |temperature: f64| grip(temperature).unwrap_or(f64::NAN);
-                return Ok(Some(bracketed(signed, place(step - 1), place(step), 0.0)?));
-            }
-        }
-        Ok(None)
+        first_opening(grip, from, to)
     }
+}
+
+/// The first temperature at which two rings at rest part on the way from one temperature to another; none when they stay
+/// closed.
+///
+/// `overlap` gives the diametral overlap of the free rings at a temperature (m), U + d (ε_s − ε_h): the moduli have no part in
+/// it. Searched as in [`Stack::loosening_temperature`].
+///
+/// Source: equal free growth of both faces; Timoshenko & Goodier, *Theory of Elasticity*, 3rd ed., chapter 13.
+///
+/// # Errors
+/// Those of `overlap`.
+///
+/// # Example
+/// ```
+/// use hubgrip::mechanics::temperature::parting_temperature;
+/// let overlap = |kelvin: f64| Ok(50e-6 - 0.05 * (23e-6 - 12e-6) * (kelvin - 293.15));
+/// let loose = parting_temperature(overlap, 293.15, 493.15).unwrap().unwrap();
+/// assert!((loose - 293.15 - 90.909091).abs() < 1e-6);
+/// ```
+pub fn parting_temperature(
+    overlap: impl Fn(f64) -> Result<f64, MechanicsError>,
+    from: f64,
+    to: f64,
+) -> Result<Option<f64>, MechanicsError> {
+    first_opening(overlap, from, to)
+}
+
+/// Where a grip that is signed, positive while it is closed, first goes through zero.
+fn first_opening(
+    grip: impl Fn(f64) -> Result<f64, MechanicsError>,
+    from: f64,
+    to: f64,
+) -> Result<Option<f64>, MechanicsError> {
+    let place = |step: usize| from + (to - from) * step as f64 / INTERVALS as f64;
+    if grip(from)? <= 0.0 {
+        return Ok(Some(from));
+    }
+    for step in 1..=INTERVALS {
+        if grip(place(step))? < 0.0 {
+            let signed = |temperature: f64| grip(temperature).unwrap_or(f64::NAN);
+            return Ok(Some(bracketed(signed, place(step - 1), place(step), 0.0)?));
+        }
+    }
+    Ok(None)
 }
 
 fn check_faces(ring: &RingSection, inner: f64, outer: f64) -> Result<(), MechanicsError> {
