@@ -196,6 +196,7 @@ fn every_ring_of_several_is_worked() {
         let findings = common::findings_of(&case);
         let (sections, drifts) = worksheet::worked(&findings);
         assert!(drifts.is_empty(), "{case}: {drifts:#?}");
+        assert!(work(&findings, &case) > 10);
         let lines = || sections.iter().flat_map(|section| &section.lines);
         let printed = |symbol: &str| {
             let line = lines().find(|line| line.symbol.plain() == symbol);
@@ -207,6 +208,54 @@ fn every_ring_of_several_is_worked() {
         for (number, governing) in findings.service.governing.iter().enumerate() {
             let safety = governing.safety.unwrap();
             assert!((printed(&format!("S_{}", number + 1)) / safety - 1.0).abs() < 5e-5, "{case}");
+        }
+    }
+}
+
+/// Where a state governs the strength of two parts, it is that state whose stress is worked: at speed, with pressures, with a
+/// gradient, brittle, by Tresca, relaxed, in inches.
+#[test]
+fn the_state_that_governs_the_strength_is_worked() {
+    let head = "joint_file: 1\ndiameter: 50 mm\nlength: 40 mm\nfit: H7/s6\n";
+    let steel =
+        "shaft: {material: 42CrMo4+QT, bore: 20 mm}\nhub: {material: C45+N, outer_diameter: 110 mm}\n";
+    let iron = "shaft: {material: C45+N}\nhub: {material: EN-GJL-250, outer_diameter: 110 mm}\n";
+    let liner =
+        "shaft: {material: EN-GJL-250, bore: 30 mm}\nhub: {material: C45+N, outer_diameter: 110 mm}\n";
+    for (parts, rest, symbols) in [
+        (steel, "duty: [{state: fast, torque: 20 N.m, speed: 9000 rpm}]\n", &["S_h1"][..]),
+        (
+            steel,
+            "duty: [{state: rest}, {state: pressed, inner_pressure: 60 MPa, outer_pressure: 20 MPa}]\n",
+            &["S_h2"],
+        ),
+        (
+            steel,
+            "criterion: Tresca\nduty: [{state: cold, torque: 5 N.m, hub_temperature: 0 degC, relaxation: 0.8}]\n",
+            &["S_h1", "S_s1"],
+        ),
+        (iron, "duty: [{state: fast, torque: 5 N.m, speed: 6000 rpm}]\ndisplay: inch\n", &["S_h1"]),
+        (
+            liner,
+            "duty: [{state: cold, torque: 5 N.m, hub_temperature: 0 degC, speed: 3000 rpm}]\n",
+            &["S_s1", "S_h1"],
+        ),
+        (
+            steel,
+            "duty: [{state: hot, torque: 5 N.m, inner_temperature: 90 degC, outer_temperature: 40 degC}]\n",
+            &["S_h1"],
+        ),
+    ] {
+        let case = format!("{head}{parts}{rest}");
+        let findings = common::findings_of(&case);
+        let (_, drifts) = worksheet::worked(&findings);
+        assert!(drifts.is_empty(), "{case}: {drifts:#?}");
+        assert!(work(&findings, &case) > 20);
+        for symbol in symbols {
+            let part = if symbol.starts_with("S_h") { "hub safety" } else { "shaft safety" };
+            let verdict = findings.verdicts.iter().find(|verdict| verdict.subject.starts_with(part)).unwrap();
+            let printed: f64 = line(&findings, symbol).printed.parse().unwrap();
+            assert!((printed / verdict.found.unwrap() - 1.0).abs() < 1e-4, "{case}: {symbol}");
         }
     }
 }
@@ -226,7 +275,8 @@ fn bending_is_worked_for_every_kind_of_joint() {
         let (sections, drifts) = worksheet::worked(&findings);
         assert!(drifts.is_empty(), "{case}: {drifts:#?}");
         let lines = || sections.iter().flat_map(|section| &section.lines);
-        for symbol in ["Deltap_1", "p_l1", "M_g1", "S_fl1"] {
+        assert!(work(&findings, case) > 10);
+        for symbol in ["Deltap_1", "p_l1", "M_g1", "S_fl1", "S_1s1"] {
             assert!(lines().any(|line| line.symbol.plain() == symbol), "{case}: {symbol} is missing");
         }
     }

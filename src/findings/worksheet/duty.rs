@@ -19,7 +19,7 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     }
 }
 
-/// The contact pressure of a state at the loosest pair, unless it is there, and at the tightest; their symbols.
+/// The contact pressures of a state at the loosest and at the tightest pair, unless they are there; their symbols.
 pub(super) fn both_pressures(
     sheet: &mut Sheet,
     findings: &Findings,
@@ -33,7 +33,9 @@ pub(super) fn both_pressures(
         state.causes(sheet);
         state.contact(sheet, &duty.loosest);
     }
-    state.tightest(sheet, &tightest, &duty.tightest);
+    if !sheet.has(&tightest) {
+        state.tightest(sheet, &tightest, &duty.tightest);
+    }
     Some([loosest, tightest])
 }
 

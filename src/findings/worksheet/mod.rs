@@ -8,8 +8,10 @@ mod bearing;
 mod bending;
 mod cold_bath;
 mod duty;
+mod faces;
 mod fit;
 mod frost;
+mod governing;
 mod rings;
 mod sheet;
 mod slices;
@@ -42,6 +44,7 @@ pub fn worked(findings: &Findings) -> (Vec<WorksheetSection>, Vec<String>) {
         fit::write(&mut sheet, findings, &units);
         strength::write(&mut sheet, findings, &units);
         duty::write(&mut sheet, findings, &units);
+        governing::write(&mut sheet, findings, &units);
         bending::write(&mut sheet, findings, &units);
         assembly::write(&mut sheet, findings, &units);
         bearing::write(&mut sheet, findings, &units);

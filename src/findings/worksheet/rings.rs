@@ -1,29 +1,28 @@
 //! A joint of more than two rings: capacity of each interface, and the stress that governs each ring.
 
 use super::super::condition::Condition;
-use super::super::expression::{Expression, Function, greatest, num, sym};
+use super::super::expression::{num, sym};
 use super::super::kernel::{Kernel, PairInterference, pair_interferences};
 use super::super::service::loosest_for_stress;
-use super::super::{Findings, GoverningRing, InterfaceFindings, cautions::criterion_source, combination};
+use super::super::{Findings, GoverningRing, InterfaceFindings, combination};
 use super::Units;
+use super::faces::{RingFaces, Spin};
 use super::sheet::Sheet;
 use crate::joint::{DutyState, Joint, Ring};
 use crate::material::Kind;
-use crate::mechanics::criteria::DuctileCriterion;
 use crate::tolerance::Extremes;
 
-const LAME: &str = "Lamé; Timoshenko & Goodier, Theory of Elasticity, § 28";
-const ROTATION: &str = "Lamé with rotation; Timoshenko & Goodier, Theory of Elasticity, §§ 28, 32";
-const SYSTEM: &str = "linear system of the rings, as above for the extreme pairs";
+const SYSTEM: &str = "rings (or slices) at this temperature and speed, Lamé";
 
 pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let joint = &findings.joint;
     sizes(sheet, joint, units);
     sheet.section("Capacity of the loosest pair, shop temperature");
-    capacities(sheet, units, "a", &findings.extremes.loosest.interfaces);
+    let diameter = |number: usize| format!("d_{number}");
+    capacities(sheet, units, "a", &findings.extremes.loosest.interfaces, &diameter);
     for (index, (state, duty)) in joint.duty.iter().zip(&findings.duty).enumerate() {
         if duty.loosest.slip_safety.is_some() {
-            held(sheet, units, state, index + 1, &duty.loosest.interfaces);
+            held(sheet, units, (index, state), &duty.loosest.interfaces, &diameter);
         }
     }
     let Ok(kernel) = Kernel::new(joint) else { return };
@@ -56,7 +55,13 @@ fn sizes(sheet: &mut Sheet, joint: &Joint, units: &Units) {
 }
 
 /// Axial force and torque at slip of each interface; a pressure that the sheet does not know is written first.
-fn capacities(sheet: &mut Sheet, units: &Units, tag: &str, interfaces: &[InterfaceFindings]) {
+fn capacities(
+    sheet: &mut Sheet,
+    units: &Units,
+    tag: &str,
+    interfaces: &[InterfaceFindings],
+    diameter_of: &dyn Fn(usize) -> String,
+) {
     for (k, interface) in interfaces.iter().enumerate() {
         let number = k + 1;
         let name = |symbol: &str| format!("{symbol}{number}{tag}");
@@ -65,7 +70,7 @@ fn capacities(sheet: &mut Sheet, units: &Units, tag: &str, interfaces: &[Interfa
             let meaning = format!("pressure at interface {number}");
             sheet.input(&pressure, &meaning, interface.pressure * units.per_pascal, units.pressure, SYSTEM);
         }
-        let diameter = || sym(&format!("d_{number}"));
+        let diameter = || sym(&diameter_of(number));
         let axial = sym("mu_h") * sym(&pressure) * sym("pi") * diameter() * sym("l");
         sheet.formula(
             &name("F_"),
@@ -87,10 +92,16 @@ fn capacities(sheet: &mut Sheet, units: &Units, tag: &str, interfaces: &[Interfa
 }
 
 /// The loosest pair in a loaded state.
-fn held(sheet: &mut Sheet, units: &Units, state: &DutyState, tag: usize, interfaces: &[InterfaceFindings]) {
+pub(super) fn held(
+    sheet: &mut Sheet,
+    units: &Units,
+    (index, state): (usize, &DutyState),
+    interfaces: &[InterfaceFindings],
+    diameter_of: &dyn Fn(usize) -> String,
+) {
     sheet.section(format!("Duty {}: the loosest pair", state.called()));
-    let tag = format!("s{tag}");
-    capacities(sheet, units, &tag, interfaces);
+    let tag = format!("s{}", index + 1);
+    capacities(sheet, units, &tag, interfaces, diameter_of);
     let (torque, force) = (format!("M_{tag}"), format!("F_{tag}"));
     sheet.input(&torque, "torque", state.torque * units.per_newton_metre, units.torque, "joint file");
     sheet.input(&force, "axial force", state.axial_force * units.per_newton, units.force, "joint file");
@@ -172,102 +183,23 @@ fn ring_stress(
             "stack of rings in a logarithmic gradient; Timoshenko & Goodier, Theory of Elasticity, ch. 13",
         );
     } else {
-        faces(sheet, ring, number, spinning, joint.criterion, units);
-        sheet.formula(
-            &format!("sigma_e{number}"),
-            &format!("equivalent stress of the {}, the greater of both faces", ring.name),
-            greatest([sym(&format!("e_i{number}")), sym(&format!("e_o{number}"))]),
-            units.pressure,
-            "both faces",
-            Some(governing.equivalent * units.per_pascal),
-        );
+        let name = |symbol: &str| format!("{symbol}{number}");
+        let (outer, inner) = (name("d_"), format!("d_{}", number - 1));
+        let (inside, outside) = (name("p_i"), name("p_o"));
+        let (speed, density, poisson) = (name("w_"), name("rho_"), name("nu_"));
+        let faces = RingFaces {
+            ring,
+            criterion: joint.criterion,
+            tag: &number.to_string(),
+            outer: &outer,
+            inner: &inner,
+            inside: Some(&inside),
+            outside: Some(&outside),
+            spin: spinning.then_some(Spin { speed: &speed, density: &density, poisson: &poisson }),
+        };
+        faces.write(sheet, units, governing.equivalent);
     }
     close(sheet, ring, number, governing, units);
-}
-
-/// The stresses at both faces.
-fn faces(
-    sheet: &mut Sheet,
-    ring: &Ring,
-    number: usize,
-    spinning: bool,
-    criterion: DuctileCriterion,
-    units: &Units,
-) {
-    let name = |symbol: &str| format!("{symbol}{number}");
-    let symbol = |text: &str| sym(&name(text));
-    let solid = ring.inner_diameter == 0.0;
-    let outer = || sym(&format!("d_{number}")).power(2);
-    let inner = || sym(&format!("d_{}", number - 1)).power(2);
-    let (mut bore, mut rim) = if solid {
-        (-symbol("p_o"), -symbol("p_o"))
-    } else {
-        let meaning = format!("bore over wall of the {}, squares of diameters", ring.name);
-        sheet.formula(&name("k_"), &meaning, inner() / (outer() - inner()), "", LAME, None);
-        let twice = |pressure: &str| num("2") * symbol(pressure);
-        let both = || num("2") * symbol("k_") + num("1");
-        (
-            symbol("p_i") * both() - twice("p_o") * (symbol("k_") + num("1")),
-            twice("p_i") * symbol("k_") - symbol("p_o") * both(),
-        )
-    };
-    if spinning {
-        let meaning = format!("density and speed of the {}", ring.name);
-        let unit = format!("{}/{}2", units.pressure, units.length);
-        let force = symbol("rho_") * symbol("w_").power(2) / num("16");
-        sheet.formula(&name("f_"), &meaning, force, &unit, ROTATION, None);
-        let three = || num("3") + symbol("nu_");
-        let one = || num("1") - symbol("nu_");
-        let (at_bore, at_rim) = if solid {
-            (three() / num("2") * outer(), one() * outer())
-        } else {
-            (three() * outer() + one() * inner(), three() * inner() + one() * outer())
-        };
-        bore = bore + symbol("f_") * at_bore;
-        rim = rim + symbol("f_") * at_rim;
-    }
-    let source = if spinning { ROTATION } else { LAME };
-    let places = if solid { ["in the middle", "at the outside"] } else { ["at the bore", "at the outside"] };
-    let criterion_source = criterion_source(ring.material.kind == Kind::Brittle, criterion);
-    for (hoop, found, pressure, place, formula) in [
-        ("sigma_i", "e_i", (!solid).then_some("p_i"), places[0], bore),
-        ("sigma_o", "e_o", Some("p_o"), places[1], rim),
-    ] {
-        let meaning = format!("hoop stress {place} of the {}", ring.name);
-        sheet.formula(&name(hoop), &meaning, formula, units.pressure, source, None);
-        let meaning = format!("equivalent stress {place}");
-        let formula = equivalent(ring, criterion, symbol(hoop), pressure.map(symbol));
-        sheet.formula(&name(found), &meaning, formula, units.pressure, criterion_source, None);
-    }
-}
-
-/// The equivalent stress at a face under a pressure; without one both stresses are the hoop stress, as in the middle of
-/// a solid ring.
-fn equivalent(
-    ring: &Ring,
-    criterion: DuctileCriterion,
-    hoop: Expression,
-    pressure: Option<Expression>,
-) -> Expression {
-    let absolute = |formula: Expression| formula.call(Function::Abs);
-    match (ring.material.kind, criterion, pressure) {
-        (Kind::Brittle, _, pressure) => {
-            let share = || num(&crate::quantity::number(ring.tension_share(), 6));
-            let mut all = vec![num("0"), hoop.clone()];
-            if ring.tension_share() > 0.0 {
-                all.push(-(hoop * share()));
-                all.extend(pressure.map(|pressure| pressure * share()));
-            }
-            greatest(all)
-        }
-        (_, _, None) => absolute(hoop),
-        (_, DuctileCriterion::VonMises, Some(pressure)) => {
-            (hoop.clone().power(2) + pressure.clone().power(2) + pressure * hoop).root()
-        }
-        (_, DuctileCriterion::Tresca, Some(pressure)) => {
-            greatest([absolute(hoop.clone() + pressure.clone()), absolute(hoop), pressure])
-        }
-    }
 }
 
 fn close(sheet: &mut Sheet, ring: &Ring, number: usize, governing: &GoverningRing, units: &Units) {

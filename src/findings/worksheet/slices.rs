@@ -71,4 +71,12 @@ pub(super) fn write(sheet: &mut Sheet, findings: &Findings, units: &Units) {
     let torque = Some(pair.torque_capacity * units.per_newton_metre);
     let formula = super::strength::torque("F_cap", units);
     sheet.formula("M_cap", "torque at slip", formula, units.torque, "equilibrium; DIN 7190-1", torque);
+    let engaged = joint.engaged_length() * units.per_metre;
+    sheet.input("l", "length that carries", engaged, units.length, "length less relief");
+    for (index, (state, duty)) in joint.duty.iter().zip(&findings.duty).enumerate() {
+        if duty.loosest.slip_safety.is_some() {
+            let diameter = |_: usize| "d".to_owned();
+            super::rings::held(sheet, units, (index, state), &duty.loosest.interfaces, &diameter);
+        }
+    }
 }

@@ -19,7 +19,9 @@ pub(super) fn body(sheet: Sheet) -> Markup {
     html! {
         p {
             "Every line can be redone by hand with the numbers as printed: symbol = formula = numbers put in = result. "
-            "A number put in is the printed result of the line that defines its symbol, in the unit given there."
+            "A number put in is the printed result of the line that defines its symbol, in the unit given there. "
+            "What an iteration, a linear system or a curve gives stands as an input with its source; soak and seating times and "
+            "the speed and temperature of opening are told in their parts and not derived here."
         }
         @for (index, section) in sheet.findings.worksheet().iter().enumerate() {
             h3 { span.number { (number_of("worksheet")) "." (index + 1) } " " (section.title) }
