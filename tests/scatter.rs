@@ -61,6 +61,7 @@ fn model(hole: Distribution, shaft: Distribution, friction: Distribution, loss: 
             failure: "yield",
             pressure: 170e6 * 0.75 / 3.0625f64.sqrt(),
             required: 1.2,
+            in_states: Vec::new(),
         }],
         arithmetic: Arithmetic {
             interference: Range { low: 18e-6, high: 58e-6 },
@@ -377,8 +378,58 @@ fn a_relaxed_state_slips_where_the_check_says() {
         understood.assumed.iter().any(|sentence| sentence.contains(words))
     };
     assert!(said(&relaxed, "40 % of the pressure") && !said(&fresh, "relaxation"));
-    let (turning, _) = of(&JOINT.replace("torque:", "speed: 900 rpm, torque:"));
-    assert!(said(&turning, "not its speed") && !said(&fresh, "not its speed"));
+    let (bent, _) = of(&JOINT.replace("torque:", "bending_moment: 10 N.m, torque:"));
+    assert!(said(&bent, "the bending does not count") && !said(&fresh, "does not count"));
+}
+
+/// Speed, pressures from outside and heat flow across a part count as in the check: both engines turn over at its safeties,
+/// against slip at the loosest pair and of both parts at the tightest.
+#[test]
+fn a_state_at_speed_slips_and_yields_where_the_check_says() {
+    let population = |hole: &str, shaft: &str| {
+        format!(
+            "population:\n  hole: {hole} mm\n  shaft: {shaft} mm\n  friction: 0.1\n  pressing_friction: 0.14\n"
+        )
+    };
+    let at_rest = JOINT.replace(", shaft_temperature: 60 degC, hub_temperature: 45 degC", "");
+    let read = |text: &str| read::read(text, Path::new("joint.yaml"), &[], &Library::built_in()).unwrap();
+    let model =
+        |text: &str| understood(&read(text), &mut |_, _| unreachable!("no list is named")).unwrap().model;
+    for keys in [
+        "speed: 6000 rpm, temperature: 30 degC",
+        "outer_pressure: 6 MPa",
+        "speed: 4000 rpm, inner_pressure: 20 MPa",
+        "speed: 3000 rpm, inner_temperature: 50 degC, outer_temperature: 30 degC",
+    ] {
+        let text = at_rest.replace("torque:", &format!("{keys}, torque:"));
+        let findings = compute(read(&text)).unwrap();
+        let loosest = model(&format!("{text}{}", population("60.030", "60.053")));
+        let slip = findings.duty[0].loosest.slip_safety.unwrap();
+        let analysis = Analysis::of(&loosest).unwrap();
+        assert_eq!(analysis.slip(0, slip * 0.999_999), 0.0, "{keys}");
+        assert_eq!(analysis.slip(0, slip * 1.000_001), 1.0, "{keys}");
+        for (required, share) in [(slip * 0.999_999, 0), (slip * 1.000_001, 1)] {
+            let settings = Settings { samples: 1000, seed: 1, slip_safety: required };
+            let counted = scatter(loosest.clone(), settings).unwrap().slips[0].counted_below_required;
+            assert_eq!(counted.count, share * 1000, "{keys}");
+        }
+        let safety = |ring: usize| findings.duty[0].tightest.rings[ring].safety.unwrap();
+        for (factor, share) in [(0.999_999, 0u64), (1.000_001, 1)] {
+            let require = format!(
+                "require: {{yield_safety: {:?}, fracture_safety: {:?}}}\n",
+                safety(0) * factor,
+                safety(1) * factor
+            );
+            let tightest = model(&format!("{text}{require}{}", population("60.000", "60.072")));
+            let analysis = Analysis::of(&tightest).unwrap();
+            let simulation = Simulation::run(&tightest, 1.0, 1000, 1, |quantity| tightest.limits(quantity));
+            for (ring, counted) in tightest.rings.iter().zip(&simulation.failures) {
+                let [_, wanted] = ring.in_condition(1);
+                assert_eq!(analysis.exceeds(1, wanted), share as f64, "{keys}: {}", ring.name);
+                assert_eq!(counted[1][1].count, share * 1000, "{keys}: {}", ring.name);
+            }
+        }
+    }
 }
 
 #[test]

@@ -297,8 +297,9 @@ fn failures(model: &Model, analysis: &Analysis<'_>, simulation: &Simulation) -> 
     for (ring, counted) in model.rings.iter().zip(&simulation.failures) {
         let mut worst: Option<Event> = None;
         for (condition, counted) in counted.iter().enumerate() {
-            let probability = analysis.exceeds(condition, ring.pressure);
-            let below_required = analysis.exceeds(condition, ring.pressure / ring.required);
+            let [limit, wanted] = ring.in_condition(condition);
+            let probability = analysis.exceeds(condition, limit);
+            let below_required = analysis.exceeds(condition, wanted);
             let higher = worst.as_ref().is_none_or(|worst| {
                 (probability, below_required) > (worst.probability, worst.below_required)
             });

@@ -6,6 +6,7 @@ use crate::material::Kind;
 use crate::mechanics::MechanicsError;
 use crate::mechanics::criteria::{self, DuctileCriterion};
 use crate::mechanics::ring::{RingLoad, RingSection, Stress};
+use crate::numerics::root::bracketed;
 
 /// Stress of a ring for each pascal of contact pressure, tension positive, and its strength.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -137,6 +138,33 @@ impl PlainRing {
     /// stresses nothing.
     pub fn pressure_at_strength(&self) -> Option<f64> {
         self.strength.filter(|_| self.equivalent > 0.0).map(|strength| strength / self.equivalent)
+    }
+
+    /// Contact pressure (Pa) above which the equivalent stress exceeds a stress (Pa), with what stresses the ring besides;
+    /// below zero when that alone does. None when the contact stresses nothing, or a stress is not positive.
+    ///
+    /// The equivalent stress is convex in the pressure, so that it goes through the stress once on the way up.
+    pub fn pressure_at_stress(&self, stress: f64, base: &RingBase) -> Option<f64> {
+        if self.equivalent <= 0.0 || stress <= 0.0 {
+            return None;
+        }
+        let alone = stress / self.equivalent;
+        if base.is_zero {
+            return Some(alone);
+        }
+        if self.equivalent_at(0.0, base) >= stress {
+            return Some(-alone);
+        }
+        let excess = |pressure: f64| self.equivalent_at(pressure, base) - stress;
+        let mut high = alone;
+        // What is added beside is linear in the pressure: doubling passes it.
+        for _ in 0..64 {
+            if excess(high) > 0.0 {
+                break;
+            }
+            high *= 2.0;
+        }
+        bracketed(excess, 0.0, high, 0.0).ok()
     }
 
     /// Stress and safety at a contact pressure (Pa).

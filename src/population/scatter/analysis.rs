@@ -149,6 +149,12 @@ impl<'a> Analysis<'a> {
 
     /// Probability that the contact pressure exceeds `pressure` in a condition.
     pub fn exceeds(&self, condition: usize, pressure: f64) -> f64 {
+        if pressure <= 0.0 {
+            return 1.0;
+        }
+        if pressure == f64::INFINITY {
+            return 0.0;
+        }
         let loss = self.model.loss_under_stress;
         let warm = condition.checked_sub(1).and_then(|state| self.warm.get(state)?.as_ref());
         let compliance = warm.map_or(&self.compliance, |warm| &warm.compliance);

@@ -6,11 +6,11 @@
 //! | loss | G = f (Rz shaft + Rz hub) |
 //! | grip | V = U for U ≤ 0, else max(U − G, 0) (DIN 7190; contact ends at zero) |
 //! | compliance | C = d (C_h/(k_h E_h) + C_s/(k_s E_s)), k modulus in the condition over that at 20 °C (Lamé) |
-//! | temperature | θ = d (ε_shaft − ε_hub) |
+//! | temperature | θ = d (ε_shaft − ε_hub) + θ₀, θ₀ by speed, pressures from outside and heat flow at the mean moduli |
 //! | pressure | p = max(V + θ, 0)/C |
 //! | capacity | T = μ p π d² l/2, F = μ p π d l |
 //! | slip | μ ρ p π d l < √(F² + (2 T/d)²), ρ the share that relaxation leaves |
-//! | yield, fracture | p above the pressure at which a ring reaches its strength |
+//! | yield, fracture | p above the pressure at which a ring reaches its strength in the condition |
 //! | press force | π d p (μ l + V (K − μ)²/(4 K tan φ)), K = (μ + tan φ)/(1 − μ tan φ) |
 
 use std::f64::consts::PI;
@@ -100,7 +100,8 @@ pub struct State {
     /// Resultant force on the mating surface, N, over the share ρ of the pressure that relaxation leaves for holding:
     /// √(F² + (2 T/d)²)/ρ.
     pub force: f64,
-    /// Interference that its temperatures add, m.
+    /// Interference that its temperatures, speed and pressures from outside add, m; what speed and pressures add is that at
+    /// the mean moduli.
     pub thermal: f64,
     /// Moduli at its temperatures; a scatter of the temperatures does not change them.
     pub stiffness: Stiffness,
@@ -134,6 +135,8 @@ pub struct Warm {
     pub shaft: Arc<Material>,
     /// Material of the hub.
     pub hub: Arc<Material>,
+    /// Interference that speed, pressures from outside and the rise of temperature to the outer faces add, m.
+    pub added: f64,
 }
 
 /// A ring with the contact pressure at which it gives way.
@@ -143,10 +146,23 @@ pub struct Limit {
     pub name: String,
     /// What happens there: `yield` or `fracture`.
     pub failure: &'static str,
-    /// Contact pressure, Pa.
+    /// Contact pressure at the shop temperature, at rest, Pa.
     pub pressure: f64,
     /// Safety that is required.
     pub required: f64,
+    /// In each service state, with what speed, pressures from outside and heat flow stress: the contact pressure at which it
+    /// gives way, and that at which it falls below the safety required, Pa; negative where it does so without contact. A
+    /// state that is not here is as the shop.
+    pub in_states: Vec<[f64; 2]>,
+}
+
+impl Limit {
+    /// Contact pressures (Pa) at which the ring gives way, and at which it falls below the safety required, in a condition:
+    /// 0 is the shop, then the states.
+    pub fn in_condition(&self, condition: usize) -> [f64; 2] {
+        let state = condition.checked_sub(1).and_then(|state| self.in_states.get(state));
+        state.copied().unwrap_or([self.pressure, self.pressure / self.required])
+    }
 }
 
 impl Model {
@@ -326,8 +342,9 @@ impl Warm {
             let (low, high) = material.expansion.range();
             material.expansion.strain(temperature.clamp(low, high)).unwrap_or(0.0)
         };
-        diameter
-            * (strain(&self.shaft, self.shaft_temperature + shaft_offset)
-                - strain(&self.hub, self.hub_temperature + hub_offset))
+        self.added
+            + diameter
+                * (strain(&self.shaft, self.shaft_temperature + shaft_offset)
+                    - strain(&self.hub, self.hub_temperature + hub_offset))
     }
 }

@@ -213,7 +213,7 @@ impl Plan<'_> {
         model.compliance(hub, shaft) / model.compliance_with(stiffness, hub, shaft)
     }
 
-    /// An earlier condition with the same temperatures: its pressures are the same.
+    /// An earlier condition with the same pressures and limits.
     fn earlier(&self, condition: usize) -> Option<usize> {
         if self.temperature_scatters {
             return None;
@@ -221,7 +221,13 @@ impl Plan<'_> {
         let thermal = self.model.thermal(condition);
         let stiffness = self.model.stiffness(condition);
         (0..condition).find(|earlier| {
-            self.model.thermal(*earlier) == thermal && self.model.stiffness(*earlier) == stiffness
+            self.model.thermal(*earlier) == thermal
+                && self.model.stiffness(*earlier) == stiffness
+                && self
+                    .model
+                    .rings
+                    .iter()
+                    .all(|ring| ring.in_condition(*earlier) == ring.in_condition(condition))
         })
     }
 }
@@ -423,8 +429,7 @@ impl Block {
             let highest = greatest(pressures);
             for (ring, failures) in model.rings.iter().zip(&mut tally.failures) {
                 let Some(failures) = failures.get_mut(condition) else { continue };
-                let limit = ring.pressure / stiffer;
-                let wanted = limit / ring.required;
+                let [limit, wanted] = ring.in_condition(condition).map(|limit| limit / stiffer);
                 if highest > limit.min(wanted) {
                     let found = counts(pressures, |p| p > limit, |p| p > wanted);
                     failures[0] += found[0];

@@ -128,6 +128,7 @@ pub fn understood(joint: &Joint, read: &mut ReadList<'_>) -> Result<Understood, 
     };
     let mut assumed = taking.assumed;
     assumed.extend(joint.duty.iter().filter_map(relaxed));
+    assumed.extend(joint.duty.iter().filter_map(at_mean_moduli));
     assumed.extend(joint.duty.iter().filter_map(left_out));
     let roughness = inner.roughness.value + outer.roughness.value;
     let factor = joint.smoothing.factor.unwrap_or(if roughness > 0.0 {
@@ -143,26 +144,36 @@ pub fn understood(joint: &Joint, read: &mut ReadList<'_>) -> Result<Understood, 
         stiffness: stiffness(condition),
         name: state.name.clone(),
         force: condition.axial_force.hypot(2.0 * condition.torque / joint.diameter) / condition.relaxation,
-        thermal: condition.thermal_interference,
+        thermal: condition.added_interference,
         warm: match state.temperatures.as_slice() {
             [shaft, hub] => Some(Warm {
                 shaft_temperature: *shaft,
                 hub_temperature: *hub,
                 shaft: inner.material.clone(),
                 hub: outer.material.clone(),
+                added: condition.added_interference - condition.thermal_interference,
             }),
             _ => None,
         },
     });
+    let states_of_plain = &plain.states;
     let rings = [(inner, &plain.shaft), (outer, &plain.hub)].into_iter().filter_map(|(ring, plain)| {
+        let required = match ring.material.kind {
+            MaterialKind::Brittle => joint.require.fracture_safety,
+            MaterialKind::Ductile | MaterialKind::Polymer => joint.require.yield_safety,
+        };
+        let (strength, pressure) = (plain.strength?, plain.pressure_at_strength()?);
+        let in_state = |condition: &Condition| {
+            let base = if std::ptr::eq(ring, inner) { &condition.shaft } else { &condition.hub };
+            let at = |stress: f64| plain.pressure_at_stress(stress, base).unwrap_or(f64::INFINITY);
+            [at(strength), at(strength / required)]
+        };
         Some(Limit {
             name: ring.name.clone(),
             failure: failure(ring),
-            pressure: plain.pressure_at_strength()?,
-            required: match ring.material.kind {
-                MaterialKind::Brittle => joint.require.fracture_safety,
-                MaterialKind::Ductile | MaterialKind::Polymer => joint.require.yield_safety,
-            },
+            pressure,
+            required,
+            in_states: states_of_plain.iter().map(in_state).collect(),
         })
     });
     let model = Model {
@@ -210,20 +221,28 @@ fn relaxed(state: &DutyState) -> Option<String> {
     })
 }
 
+/// That what a state adds by itself does not follow the scatter of the moduli.
+fn at_mean_moduli(state: &DutyState) -> Option<String> {
+    let adds = state.speed != 0.0
+        || state.inner_pressure != 0.0
+        || state.outer_pressure != 0.0
+        || !state.temperature_rises.is_empty();
+    adds.then(|| {
+        format!(
+            "What speed, pressures from outside and heat flow in {} add to the interference and to the stresses is that at the mean moduli.",
+            state.called()
+        )
+    })
+}
+
 /// What of a state the model has no place for.
 fn left_out(state: &DutyState) -> Option<String> {
-    let parts = [
-        (state.speed != 0.0, "speed"),
-        (state.inner_pressure != 0.0, "pressure inside"),
-        (state.outer_pressure != 0.0, "pressure outside"),
-        (!state.temperature_rises.is_empty(), "radial gradient of temperature"),
-        (state.bending_moment != 0.0 || state.radial_force != 0.0, "bending"),
-    ];
+    let parts = [(state.bending_moment != 0.0 || state.radial_force != 0.0, "bending")];
     let named: Vec<&str> = parts.into_iter().filter_map(|(there, name)| there.then_some(name)).collect();
     (!named.is_empty()).then(|| {
         format!(
-            "Of state {} only loads along and round the shaft and temperatures count here, not its {}: `hubgrip check` has them at the extreme pairs.",
-            state.name,
+            "Of {} the {} does not count here: `hubgrip check` has its edge pressures at the extreme pairs.",
+            state.called(),
             named.join(", ")
         )
     })
