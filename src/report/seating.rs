@@ -82,7 +82,7 @@ pub fn handling(findings: &Findings) -> Option<String> {
     let (tight, loose) = (&found.tightest, &found.loosest);
     let begin = |course: &HandlingCourse| course.points.first().map_or(0.0, |point| point.clearance);
     let gone = |time: Option<f64>| {
-        time.map_or_else(|| "never".to_owned(), |time| format!("after {}", time_allowed(time)))
+        time.map_or_else(|| "never gone".to_owned(), |time| format!("gone after {}", time_allowed(time)))
     };
     let overlap = joint.assembly.practice.transfer_time;
     let overlap =
@@ -93,9 +93,9 @@ pub fn handling(findings: &Findings) -> Option<String> {
         String::new()
     };
     let mut text = format!(
-        "{} at {} and {} at {}: the tightest pair begins with {} of clearance and the loosest with {}{touch}; it is gone {} \
+        "{} at {} and {} at {}: the tightest pair begins with {} of clearance and the loosest with {}{touch}; it is {} \
          at the tightest and {} at the loosest pair when the parts overlap {overlap}, because heat crosses the narrow gap; \
-         in air alone it would be gone {} at the tightest pair.",
+         in air alone it would be {} at the tightest pair.",
         super::typeset::capital(&hub.name),
         temperature(found.hub_temperature),
         shaft.name,

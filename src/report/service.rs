@@ -39,10 +39,12 @@ fn loosening_of(findings: &Findings, index: usize, loosening: &Loosening) -> Vec
         Some(kelvin) => format!("with {what} at {}", show(Measure::Temperature, kelvin, system)),
         None => format!("with {what} hot at no temperature within the expansion data"),
     };
+    let outside =
+        if findings.joint.rings.len() > 2 { "only the parts outside it" } else { "only the outer part" };
     vec![format!(
         "The loosest pair: {name} {speed}; it lets go {}, and {}.",
         temperature(loosening.temperature, "all parts"),
-        temperature(loosening.outer_temperature, "only the outer part"),
+        temperature(loosening.outer_temperature, outside),
     )]
 }
 

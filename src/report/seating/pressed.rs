@@ -79,9 +79,14 @@ pub fn release(findings: &Findings) -> Vec<String> {
             format!("Heat alone does not free it with the {} {lag} % behind in warming: {why}.", shaft.name)
         }
     };
+    let overlap = if push.sliding.high > push.first_movement.high {
+        " (the published bands of both frictions overlap: it slides with no more than it starts with)"
+    } else {
+        ""
+    };
     let mut all = vec![
         format!(
-            "After rest the tightest pair takes {} to {} to start and {} to {} to keep sliding; look for a press of {}.",
+            "After rest the tightest pair takes {} to {} to start and {} to {} to keep sliding{overlap}; look for a press of {}.",
             force(push.first_movement.low),
             force(push.first_movement.high),
             force(push.sliding.low),
