@@ -16,7 +16,7 @@
 //! | `onset_of_yield` | `ring` that yields or breaks first, with `pressure_mpa` and `interference_um` |
 //! | `duty` | each state: what acts, Young's modulus of each ring at its temperature, and `loosest` and `tightest` in it |
 //! | `service` | `loosening` of each interface, which fits are `governing` each ring, `steps` of assembly, the `plastic` hub, `fatigue` |
-//! | `assembly` | `method`, temperatures, clearance, forces of the tightest pair, `baths`, times, `cold_bath`, `press_work`, `oil_injection` |
+//! | `assembly` | `method`, temperatures, clearance, forces of the tightest pair, `baths`, the joints made `earlier`, times, `cold_bath`, `press_work`, `oil_injection` |
 //! | `bearing` | of a bearing seat: loss of radial clearance, what is left cold and in each state, mounting; else null |
 //! | `verdicts` | `question` (hold, strength, assembly), `subject`, `required`, `found`, `unit` (1, N, degC), `ok`, `at` |
 //! | `defaults` | `key`, `value`, `source` of what the joint file leaves open |
