@@ -2,7 +2,7 @@
 
 use super::cold_bath::cold_bath;
 use super::press_work::press_work;
-use super::times::{self, Times};
+use super::times::{self, Extent, Times};
 use super::{AssemblyFindings, BathFindings, ConstantCoefficient, FindingsError, PairFindings, ThermalRoute};
 use crate::assembly::bath_liquid::{ACETONE, ALCOHOL};
 use crate::assembly::joining::{BathRoute, Joining, Obstacle, Route};
@@ -18,6 +18,7 @@ const CURVE_POINTS: usize = 120;
 pub(super) fn assembly(
     joint: &Joint,
     extremes: &Extremes<PairFindings>,
+    extent: Extent,
 ) -> Result<AssemblyFindings, FindingsError> {
     let pressing = joint.friction.pressing.value;
     let press = Extremes {
@@ -60,7 +61,7 @@ pub(super) fn assembly(
         oil: None,
     };
     assembly.press_work = press_work(joint, extremes, &assembly, &joining)?;
-    in_the_oven_and_bath(joint, extremes, &mut assembly)?;
+    in_the_oven_and_bath(joint, extremes, &mut assembly, extent)?;
     Ok(assembly)
 }
 
@@ -69,10 +70,11 @@ fn in_the_oven_and_bath(
     joint: &Joint,
     extremes: &Extremes<PairFindings>,
     assembly: &mut AssemblyFindings,
+    extent: Extent,
 ) -> Result<(), FindingsError> {
     let to_part = |pair: &PairFindings| pair.interference + strained(joint, pair);
     let interference = (to_part(&extremes.loosest), to_part(&extremes.tightest));
-    assembly.times = times::times(joint, assembly, interference)?;
+    assembly.times = times::times(joint, assembly, interference, extent)?;
     if let Some(soak) = &assembly.times.shaft {
         match cold_bath(joint, soak)? {
             Ok(found) => assembly.cold_bath = Some(found),

@@ -5,8 +5,9 @@ use thiserror::Error;
 use super::condition::Condition;
 use super::kernel::{Kernel, pair_interferences};
 use super::softening::Parts;
+use super::times::Extent;
 use super::{
-    DutyFindings, Findings, OnsetOfYield, assembly_of, bearing_of, cautions, earlier, oil, service,
+    DutyFindings, Findings, OnsetOfYield, Verdict, assembly_of, bearing_of, cautions, earlier, oil, service,
     softening, verdicts,
 };
 use crate::assembly::AssemblyError;
@@ -91,7 +92,7 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
         softening::soften(&joint, &kernel, plastic, &mut parts)?;
     }
     let service = service::service(&joint, &kernel, &pairs, &extremes.tightest, &duty, plastic)?;
-    let mut assembly = assembly_of::assembly(&joint, &extremes)?;
+    let mut assembly = assembly_of::assembly(&joint, &extremes, Extent::Whole)?;
     assembly.earlier = earlier::earlier(&joint, &service.steps)?;
     assembly.oil = oil::oil(&joint, &kernel, &pairs, &extremes, service.plastic.as_ref())?;
     let character =
@@ -114,6 +115,20 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
     findings.cautions = cautions::cautions(&findings);
     findings.notes = cautions::notes(&findings);
     Ok(findings)
+}
+
+/// The verdict on the time from oven or bath to seated alone, of an elastic joint: that of [`compute`] without what else it
+/// works out. None where the method has no such time.
+pub(crate) fn seating_verdict(joint: &Joint) -> Result<Option<Verdict>, FindingsError> {
+    let kernel = Kernel::new(joint)?;
+    let pairs = pair_interferences(joint);
+    let extremes = Extremes {
+        loosest: kernel.pair(&pairs.loosest)?,
+        mean: kernel.pair(&pairs.mean)?,
+        tightest: kernel.pair(&pairs.tightest)?,
+    };
+    let assembly = assembly_of::assembly(joint, &extremes, Extent::Seating)?;
+    Ok(verdicts::handling(joint, &assembly.times))
 }
 
 /// Onset of yield (or fracture) at the shop temperature, at rest: every stress is linear in the pressure.

@@ -29,6 +29,7 @@ pub use assembly_of::{bath_name, bath_temperature};
 pub use bearing_of::{BearingFindings, BearingState, HOOP_LIMIT, RING_LIMIT_SOURCE};
 pub use cautions::criterion_source;
 use cold_bath::ColdBathFindings;
+pub(crate) use compute::seating_verdict;
 pub use compute::{FindingsError, compute};
 pub use earlier::EarlierJoint;
 pub use envelope::{Envelope, EnvelopeLine, EnvelopeMeaning, EnvelopeState};

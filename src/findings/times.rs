@@ -84,6 +84,15 @@ pub struct HandlingFindings {
     pub frost: Option<FrostFindings>,
 }
 
+/// How much of the times is worked out.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) enum Extent {
+    /// All.
+    Whole,
+    /// From oven or bath to seated, without soak and frost.
+    Seating,
+}
+
 /// Temperatures that the method plans.
 struct Plan {
     /// Mean that the hub must reach, K; none when it stays at shop temperature.
@@ -101,6 +110,7 @@ pub(super) fn times(
     joint: &Joint,
     assembly: &AssemblyFindings,
     interference: (f64, f64),
+    extent: Extent,
 ) -> Result<Times, AssemblyError> {
     if joint.assembly.method == Method::Press {
         return Ok(Times::default());
@@ -119,10 +129,10 @@ pub(super) fn times(
         return Ok(Times { gaps: vec![gap.to_owned()], ..Times::default() });
     };
     let mut times = Times::default();
-    if let Some(wanted) = plan.hub_wanted {
+    if let Some(wanted) = plan.hub_wanted.filter(|_| extent == Extent::Whole) {
         heated(joint, hub, &hub_substance, wanted, plan.oven, &mut times)?;
     }
-    if joint.assembly.chills() {
+    if joint.assembly.chills() && extent == Extent::Whole {
         let bath = joint.assembly.bath;
         let wanted = assembly.chill_shaft.temperature.filter(|_| joint.assembly.method == Method::ChillShaft);
         times.shaft = Some(chilled(joint, shaft, &shaft_substance, wanted, bath)?);
@@ -142,6 +152,7 @@ pub(super) fn times(
     };
     let practice = &joint.assembly.practice;
     match seating(&pair, interference.0, practice.form_error) {
+        Ok(found) if extent == Extent::Seating => times.handling = Some(found),
         Ok(mut found) => {
             match frost::frost(&pair, &found.tightest, practice.form_error, practice.humidity) {
                 Ok(frost) => found.frost = frost,

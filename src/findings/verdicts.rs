@@ -1,7 +1,8 @@
 //! The three questions answered: each requirement with what was found, at which pair and state.
 
+use super::times::Times;
 use super::{Findings, Question, RingStress, Verdict, VerdictUnit};
-use crate::joint::{Allow, Method, Ring};
+use crate::joint::{Allow, Joint, Method, Ring};
 use crate::material::Kind;
 use crate::mechanics::plastic::Regime;
 
@@ -262,7 +263,7 @@ fn assembly(findings: &Findings) -> Vec<Verdict> {
         }
     };
     verdicts.extend(earlier(findings));
-    verdicts.extend(handling(findings));
+    verdicts.extend(handling(&findings.joint, &assembly.times));
     verdicts
 }
 
@@ -314,13 +315,13 @@ fn earlier(findings: &Findings) -> Vec<Verdict> {
 }
 
 /// The time from oven or bath to seated; nothing when the parts pass each other for ever and nothing is required.
-fn handling(findings: &Findings) -> Option<Verdict> {
-    let plan = &findings.joint.assembly;
+pub(super) fn handling(joint: &Joint, times: &Times) -> Option<Verdict> {
+    let plan = &joint.assembly;
     if !plan.heats() && !plan.chills() {
         return None;
     }
     let required = plan.practice.time_needed();
-    let handling = findings.assembly.times.handling.as_ref();
+    let handling = times.handling.as_ref();
     let found = handling.and_then(|handling| handling.tightest.gone);
     if found.is_none() && required.is_none() {
         return None;

@@ -8,7 +8,7 @@ use std::sync::atomic::{AtomicUsize, Ordering};
 
 use rayon::prelude::*;
 
-use crate::findings::{self, VerdictUnit};
+use crate::findings;
 use crate::joint::{Fit, Joint};
 use crate::tolerance::FitLimits;
 
@@ -36,15 +36,12 @@ impl<'a> Timing<'a> {
         Self { joint, required }
     }
 
-    /// One fit, by the full computation; one that it refuses has no time.
+    /// One fit, by the transient calculation of the full check; one that it refuses has no time.
     pub(super) fn of(&self, limits: &FitLimits) -> Found {
         let fit = Fit { callout: String::new(), limits: *limits, source: String::new() };
-        let verdicts = match findings::compute(Joint { fits: vec![fit], ..self.joint.clone() }) {
-            Ok(findings) => findings.verdicts,
-            Err(_) => return (None, false),
-        };
-        let time = verdicts.iter().find(|verdict| verdict.unit == VerdictUnit::Time);
-        time.map_or((None, false), |verdict| (verdict.found, verdict.ok))
+        let joint = Joint { fits: vec![fit], ..self.joint.clone() };
+        let verdict = findings::seating_verdict(&joint).ok().flatten();
+        verdict.map_or((None, false), |verdict| (verdict.found, verdict.ok))
     }
 
     /// Every fit, in the order given.
