@@ -1,6 +1,6 @@
 //! The time from oven or bath to seated, fit by fit.
 //!
-//! It comes from the transient calculation of two parts that exchange heat, some tens of milliseconds a fit, and need
+//! It comes from the transient calculation of two parts that exchange heat, some milliseconds a fit, and need
 //! not fall as the interference rises (an oven set to what the fit needs is hotter for a tighter one). So it has no
 //! edge in the allowed window: fits that meet everything else are worked out in full, on all cores.
 
