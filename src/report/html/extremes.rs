@@ -52,8 +52,14 @@ fn first_yield(sheet: Sheet, onset: &OnsetOfYield) -> String {
         Some(Kind::Brittle) => "reaches its tensile strength",
         _ => "begins to yield",
     };
+    // A hub that may yield by design has another rule beside the criterion.
+    let by = match (plot::yields_by_design(sheet.findings), sheet.findings.joint.criterion) {
+        (false, _) => "",
+        (true, DuctileCriterion::VonMises) => " by the von Mises criterion",
+        (true, DuctileCriterion::Tresca) => " by the Tresca criterion",
+    };
     format!(
-        "The {name} is the first that {what}: at a contact pressure of {}, which is an effective interference of {}.",
+        "The {name} is the first that {what}{by}: at a contact pressure of {}, which is an effective interference of {}.",
         units.brief(Measure::Pressure, onset.pressure).text(),
         units.text(Measure::Deviation, onset.interference),
     )
