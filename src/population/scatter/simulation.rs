@@ -315,16 +315,20 @@ impl Block {
             plan.hub_temperature.fill(generator, &mut self.warm_hub[..count]);
             plan.shaft_temperature.fill(generator, &mut self.warm_shaft[..count]);
         }
-        for (grips, taken) in
-            [(&mut self.hold, model.loss_when_holding), (&mut self.stress, model.loss_under_stress)]
-        {
+        let grips = |grips: &mut [f64], taken: bool| {
             if !taken {
                 grips.copy_from_slice(&self.made);
-                continue;
+                return;
             }
             for ((grip, made), loss) in grips.iter_mut().zip(&self.made).zip(&self.loss) {
                 *grip = lesser(*made, open(made - loss));
             }
+        };
+        grips(&mut self.hold, model.loss_when_holding);
+        if model.loss_under_stress == model.loss_when_holding {
+            self.stress.copy_from_slice(&self.hold);
+        } else {
+            grips(&mut self.stress, model.loss_under_stress);
         }
         for ((gain, friction), stiffness) in self.gain.iter_mut().zip(&self.friction).zip(&self.stiffness) {
             *gain = friction * stiffness;
