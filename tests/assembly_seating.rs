@@ -7,7 +7,7 @@ use common::{findings_of, hubgrip_in, stdout};
 use hubgrip::assembly::conduction::{Body, Conduction, Substance, Surroundings};
 use hubgrip::assembly::film::Film;
 use hubgrip::assembly::handling::{
-    Accuracy, GAP_AIR_CONDUCTIVITY, HUB_EMISSIVITY, HandledPart, Handling, still_air_films,
+    Accuracy, HUB_EMISSIVITY, HandledPart, Handling, gap_air_conductivity, still_air_films,
 };
 use hubgrip::assembly::soak::soak;
 use hubgrip::findings::{Findings, Question, VerdictUnit};
@@ -84,7 +84,7 @@ fn a_finer_mesh_and_step_change_the_handling_time_by_less_than_half_a_per_cent()
             length: joint.length,
             interference: found.extremes.tightest.interference,
             air_temperature: joint.assembly.shop_temperature,
-            gas_conductivity: GAP_AIR_CONDUCTIVITY,
+            gas_conductivity: gap_air_conductivity(handling.hub_temperature, handling.shaft_temperature),
             overlap_after: joint.assembly.practice.transfer_time,
         };
         let quick = pair.course_with(0.0, Accuracy::QUICK).unwrap().gone.unwrap();

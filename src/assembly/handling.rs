@@ -7,9 +7,42 @@ use super::integrator::{Integration, State};
 use super::pair::{Gap, Pair, PairPart};
 use crate::material::Expansion;
 
-/// Conductivity of the air in the gap, W/(m·K): that of air near 80 °C, between a hot hub and a shaft at shop
-/// temperature (F. P. Incropera and D. P. DeWitt, table A.4).
-pub const GAP_AIR_CONDUCTIVITY: f64 = 0.030;
+/// Conductivity of air, temperature (K) and W/(m·K): F. P. Incropera and D. P. DeWitt, *Fundamentals of Heat and Mass
+/// Transfer*, table A.4 (from memory).
+const AIR: [(f64, f64); 11] = [
+    (100.0, 9.34e-3),
+    (150.0, 13.8e-3),
+    (200.0, 18.1e-3),
+    (250.0, 22.3e-3),
+    (300.0, 26.3e-3),
+    (350.0, 30.0e-3),
+    (400.0, 33.8e-3),
+    (450.0, 37.3e-3),
+    (500.0, 40.7e-3),
+    (550.0, 43.9e-3),
+    (600.0, 46.9e-3),
+];
+
+/// Conductivity of the air in the gap between two parts, W/(m·K), from the mean of their temperatures (K).
+///
+/// Linear between the rows of the table, the end of it beyond. The mean is taken as the parts leave oven or bath: what one
+/// gives the other takes, so that it changes little. Source: Incropera and DeWitt, table A.4 (from memory).
+///
+/// # Example
+/// ```
+/// use hubgrip::assembly::handling::gap_air_conductivity;
+/// assert!((gap_air_conductivity(300.0, 400.0) - 0.030).abs() < 1e-12);
+/// assert!((gap_air_conductivity(293.15, 77.36) - 0.0169).abs() < 1e-4);
+/// ```
+pub fn gap_air_conductivity(hub_temperature: f64, shaft_temperature: f64) -> f64 {
+    let mean = 0.5 * (hub_temperature + shaft_temperature);
+    let between = AIR.windows(2).find_map(|rows| {
+        let [(low, from), (high, to)] = rows else { return None };
+        (*low..=*high).contains(&mean).then(|| from + (to - from) * (mean - low) / (high - low))
+    });
+    let [(coldest, least), .., (_, greatest)] = AIR;
+    between.unwrap_or(if mean < coldest { least } else { greatest })
+}
 
 /// Emissivity taken for a hot hub, 0.8: oxidised steel (usual textbook figure); bright parts radiate less and
 /// cool more slowly.
@@ -383,7 +416,7 @@ mod tests {
             length: 0.1,
             interference: 100e-6,
             air_temperature: 293.15,
-            gas_conductivity: GAP_AIR_CONDUCTIVITY,
+            gas_conductivity: 0.030,
             overlap_after: 20.0,
         }
     }

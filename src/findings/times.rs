@@ -8,7 +8,7 @@ use crate::assembly::AssemblyError;
 use crate::assembly::conduction::{Conduction, Substance, Surroundings};
 use crate::assembly::film::Film;
 use crate::assembly::handling::{
-    Accuracy, GAP_AIR_CONDUCTIVITY, HUB_EMISSIVITY, HandledPart, Handling, HandlingCourse, still_air_films,
+    Accuracy, HUB_EMISSIVITY, HandledPart, Handling, HandlingCourse, gap_air_conductivity, still_air_films,
 };
 use crate::assembly::media::Medium;
 use crate::assembly::soak::{QuenchStress, hour_per_inch, quench_stress, soak_to};
@@ -147,7 +147,7 @@ pub(super) fn times(
         length: joint.length,
         interference: interference.1,
         air_temperature: shop,
-        gas_conductivity: GAP_AIR_CONDUCTIVITY,
+        gas_conductivity: gap_air_conductivity(plan.hub, plan.shaft),
         overlap_after: joint.assembly.practice.transfer_time,
     };
     let practice = &joint.assembly.practice;

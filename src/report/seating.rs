@@ -6,7 +6,7 @@ pub use pressed::{oil, press, release};
 
 use crate::assembly::atmosphere::OxygenLevel;
 use crate::assembly::frost::FROST_DENSITY;
-use crate::assembly::handling::HandlingCourse;
+use crate::assembly::handling::{HandlingCourse, gap_air_conductivity};
 use crate::findings::cold_bath::{ColdBathFindings, RoomFindings};
 use crate::findings::times::{HandlingFindings, SoakFindings};
 use crate::findings::{Findings, bath_name};
@@ -94,8 +94,8 @@ pub fn handling(findings: &Findings) -> Option<String> {
     };
     let mut text = format!(
         "{} at {} and {} at {}: the tightest pair begins with {} of clearance and the loosest with {}{touch}; it is {} \
-         at the tightest and {} at the loosest pair when the parts overlap {overlap}, because heat crosses the narrow gap; \
-         in air alone it would be {} at the tightest pair.",
+         at the tightest and {} at the loosest pair when the parts overlap {overlap}, because heat crosses the narrow gap \
+         (air of {} W/m.K); in air alone it would be {} at the tightest pair.",
         super::typeset::capital(&hub.name),
         temperature(found.hub_temperature),
         shaft.name,
@@ -104,6 +104,7 @@ pub fn handling(findings: &Findings) -> Option<String> {
         deviation(begin(loose)),
         gone(tight.gone),
         gone(loose.gone),
+        number(gap_air_conductivity(found.hub_temperature, found.shaft_temperature), 2),
         gone(tight.gone_in_air)
     );
     if joint.assembly.chills() {
