@@ -213,6 +213,13 @@ impl Plan<'_> {
         model.compliance(hub, shaft) / model.compliance_with(stiffness, hub, shaft)
     }
 
+    /// Whether every pair presses in a condition as in the shop.
+    fn is_as_the_shop(&self, condition: usize) -> bool {
+        !self.temperature_scatters
+            && self.model.thermal(condition) == self.model.shop_thermal
+            && self.model.stiffness(condition) == self.model.shop_stiffness
+    }
+
     /// An earlier condition with the same pressures and limits.
     fn earlier(&self, condition: usize) -> Option<usize> {
         if self.temperature_scatters {
@@ -344,6 +351,20 @@ impl Block {
             *torque = factor * gain * open(grip + thermal);
         }
         tally.spread.torque.count(&self.scratch[..count]);
+        // Where a state is as the shop, these are its torques at slip too.
+        for (number, state) in model.states.iter().enumerate() {
+            if state.force > 0.0
+                && plan.is_as_the_shop(number + 1)
+                && let Some(slips) = tally.slips.get_mut(number)
+            {
+                let needed = state.force * model.arm();
+                let torques = &self.scratch[..count];
+                let found =
+                    counts(torques, |torque| torque < needed, |torque| torque < plan.slip_safety * needed);
+                slips[0] += found[0];
+                slips[1] += found[1];
+            }
+        }
         self.press_forces(model);
         tally.spread.force.count(&self.scratch[..count]);
         if let Some([effective, pressure, stress]) = &mut tally.spread.own {
@@ -408,6 +429,7 @@ impl Block {
             }
             if let Some(State { force, .. }) = state
                 && *force > 0.0
+                && !plan.is_as_the_shop(condition)
                 && let Some(slips) = number.and_then(|number| tally.slips.get_mut(number))
             {
                 let held =
