@@ -2,6 +2,7 @@
 //!
 //! Everything here is a bound from above: the seat stands in the open, the frost is as light as fresh frost can be.
 
+use super::air::air_conductivity;
 use super::error::{AssemblyError, not_negative, positive, require};
 use crate::material::Range;
 
@@ -118,13 +119,14 @@ pub struct Air {
     pub prandtl: f64,
 }
 
-/// F. P. Incropera and D. P. DeWitt, *Fundamentals of Heat and Mass Transfer*, table A.4: T (K), ρ, c_p, ν, k, α, Pr.
-const TABLE: [[f64; 7]; 5] = [
-    [150.0, 2.3364, 1012.0, 4.426e-6, 13.8e-3, 5.84e-6, 0.758],
-    [200.0, 1.7458, 1007.0, 7.590e-6, 18.1e-3, 10.3e-6, 0.737],
-    [250.0, 1.3947, 1006.0, 11.44e-6, 22.3e-3, 15.9e-6, 0.720],
-    [300.0, 1.1614, 1007.0, 15.89e-6, 26.3e-3, 22.5e-6, 0.707],
-    [350.0, 0.9950, 1009.0, 20.92e-6, 30.0e-3, 29.9e-6, 0.700],
+/// F. P. Incropera and D. P. DeWitt, *Fundamentals of Heat and Mass Transfer*, table A.4: T (K), ρ, c_p, ν, α, Pr; the conductivity is that
+/// of [`air_conductivity`].
+const TABLE: [[f64; 6]; 5] = [
+    [150.0, 2.3364, 1012.0, 4.426e-6, 5.84e-6, 0.758],
+    [200.0, 1.7458, 1007.0, 7.590e-6, 10.3e-6, 0.737],
+    [250.0, 1.3947, 1006.0, 11.44e-6, 15.9e-6, 0.720],
+    [300.0, 1.1614, 1007.0, 15.89e-6, 22.5e-6, 0.707],
+    [350.0, 0.9950, 1009.0, 20.92e-6, 29.9e-6, 0.700],
 ];
 
 impl Air {
@@ -149,9 +151,9 @@ impl Air {
             density: of(1),
             specific_heat: of(2),
             viscosity: of(3),
-            conductivity: of(4),
-            diffusivity: of(5),
-            prandtl: of(6),
+            conductivity: air_conductivity(temperature),
+            diffusivity: of(4),
+            prandtl: of(5),
         })
     }
 

@@ -1,5 +1,6 @@
 //! The time there is: clearance against seconds from the oven or the bath until the parts touch.
 
+use super::air::air_conductivity;
 use super::conduction::{Body, Substance};
 use super::error::{AssemblyError, finite, not_negative, positive, require};
 use super::film::{Film, Standing};
@@ -7,41 +8,18 @@ use super::integrator::{Integration, State};
 use super::pair::{Gap, Pair, PairPart};
 use crate::material::Expansion;
 
-/// Conductivity of air, temperature (K) and W/(m·K): F. P. Incropera and D. P. DeWitt, *Fundamentals of Heat and Mass
-/// Transfer*, table A.4 (from memory).
-const AIR: [(f64, f64); 11] = [
-    (100.0, 9.34e-3),
-    (150.0, 13.8e-3),
-    (200.0, 18.1e-3),
-    (250.0, 22.3e-3),
-    (300.0, 26.3e-3),
-    (350.0, 30.0e-3),
-    (400.0, 33.8e-3),
-    (450.0, 37.3e-3),
-    (500.0, 40.7e-3),
-    (550.0, 43.9e-3),
-    (600.0, 46.9e-3),
-];
-
 /// Conductivity of the air in the gap between two parts, W/(m·K), from the mean of their temperatures (K).
 ///
-/// Linear between the rows of the table, the end of it beyond. The mean is taken as the parts leave oven or bath: what one
-/// gives the other takes, so that it changes little. Source: Incropera and DeWitt, table A.4 (from memory).
+/// The mean is taken as the parts leave oven or bath: what one gives the other takes, so that it changes little. Source and
+/// range as in [`air_conductivity`].
 ///
 /// # Example
 /// ```
 /// use hubgrip::assembly::handling::gap_air_conductivity;
-/// assert!((gap_air_conductivity(300.0, 400.0) - 0.030).abs() < 1e-12);
 /// assert!((gap_air_conductivity(293.15, 77.36) - 0.0169).abs() < 1e-4);
 /// ```
 pub fn gap_air_conductivity(hub_temperature: f64, shaft_temperature: f64) -> f64 {
-    let mean = 0.5 * (hub_temperature + shaft_temperature);
-    let between = AIR.windows(2).find_map(|rows| {
-        let [(low, from), (high, to)] = rows else { return None };
-        (*low..=*high).contains(&mean).then(|| from + (to - from) * (mean - low) / (high - low))
-    });
-    let [(coldest, least), .., (_, greatest)] = AIR;
-    between.unwrap_or(if mean < coldest { least } else { greatest })
+    air_conductivity(0.5 * (hub_temperature + shaft_temperature))
 }
 
 /// Emissivity taken for a hot hub, 0.8: oxidised steel (usual textbook figure); bright parts radiate less and

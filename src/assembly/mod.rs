@@ -8,12 +8,13 @@
 //! | What force along the travel, what press? | [`press`], [`press_practice`] |
 //! | How hot the hub, how cold the shaft? | [`thermal`], [`joining`] |
 //! | How long in the oven or bath? | [`soak`], [`conduction`], [`film`], [`media`], [`boiling`] |
-//! | How long from there until it seizes? | [`handling`], [`frost`] |
+//! | How long from there until it seizes? | [`handling`], [`air`], [`frost`] |
 //! | How much coolant, and what of the air? | [`cryogen`], [`bath_liquid`], [`atmosphere`] |
 //! | How does it come apart again? | [`press_practice`], [`release`], [`oil`] |
 //! | What does the seat do to a bearing? | [`bearing`], [`bearing_tables`] |
 //! | What must be minded? | [`cautions`] |
 
+pub mod air;
 pub mod atmosphere;
 pub mod bath_liquid;
 pub mod bearing;
