@@ -27,7 +27,7 @@ pub(super) fn assembly(
         tightest: press_curve(joint, &extremes.tightest, pressing.high)?,
     };
     let (shaft, hub) = joint.joined_last();
-    let hub_limit = hub_limit(joint);
+    let hub_limit = hub_limit(joint, hub);
     let joining = Joining {
         diameter: joint.interface_diameter(joint.last_interface()),
         interference: extremes.tightest.interference + strained(joint, &extremes.tightest),
@@ -247,8 +247,7 @@ impl Words<'_> {
 }
 
 /// The lower of the material's limit and the user's.
-fn hub_limit(joint: &Joint) -> Option<(f64, String)> {
-    let (_, hub) = joint.joined_last();
+pub(super) fn hub_limit(joint: &Joint, hub: &Ring) -> Option<(f64, String)> {
     let material = hub
         .material
         .max_temperature

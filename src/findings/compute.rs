@@ -3,12 +3,12 @@
 use thiserror::Error;
 
 use super::condition::Condition;
-use super::kernel::{Kernel, pair_interferences};
+use super::kernel::{Kernel, PairInterference, pair_interferences};
 use super::softening::Parts;
 use super::times::Extent;
 use super::{
-    DutyFindings, Findings, OnsetOfYield, Verdict, assembly_of, bearing_of, cautions, earlier, oil, service,
-    softening, verdicts,
+    DutyFindings, Findings, OnsetOfYield, PairFindings, Verdict, assembly_of, bearing_of, cautions, earlier,
+    oil, service, softening, verdicts,
 };
 use crate::assembly::AssemblyError;
 use crate::joint::{Allow, Joint};
@@ -69,11 +69,7 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
     }
     let kernel = Kernel::new(&joint)?;
     let mut pairs = pair_interferences(&joint);
-    let mut extremes = Extremes {
-        loosest: kernel.pair(&pairs.loosest)?,
-        mean: kernel.pair(&pairs.mean)?,
-        tightest: kernel.pair(&pairs.tightest)?,
-    };
+    let mut extremes = extremes(&kernel, &pairs)?;
     let mut duty = joint
         .duty
         .iter()
@@ -117,16 +113,24 @@ pub fn compute(joint: Joint) -> Result<Findings, FindingsError> {
     Ok(findings)
 }
 
+/// The three pairs at the shop temperature.
+fn extremes(
+    kernel: &Kernel<'_>,
+    pairs: &Extremes<PairInterference>,
+) -> Result<Extremes<PairFindings>, FindingsError> {
+    Ok(Extremes {
+        loosest: kernel.pair(&pairs.loosest)?,
+        mean: kernel.pair(&pairs.mean)?,
+        tightest: kernel.pair(&pairs.tightest)?,
+    })
+}
+
 /// The verdict on the time from oven or bath to seated alone, of an elastic joint: that of [`compute`] without what else it
 /// works out. None where the method has no such time.
 pub(crate) fn seating_verdict(joint: &Joint) -> Result<Option<Verdict>, FindingsError> {
     let kernel = Kernel::new(joint)?;
     let pairs = pair_interferences(joint);
-    let extremes = Extremes {
-        loosest: kernel.pair(&pairs.loosest)?,
-        mean: kernel.pair(&pairs.mean)?,
-        tightest: kernel.pair(&pairs.tightest)?,
-    };
+    let extremes = extremes(&kernel, &pairs)?;
     let assembly = assembly_of::assembly(joint, &extremes, Extent::Seating)?;
     Ok(verdicts::handling(joint, &assembly.times))
 }

@@ -1,6 +1,6 @@
 //! The joints of several rings that are made before the last one: what force or which temperature each of them takes.
 
-use super::assembly_of::bath_temperature;
+use super::assembly_of::{bath_temperature, hub_limit};
 use super::{FindingsError, OrderStep, after_smoothing};
 use crate::assembly::joining::Joining;
 use crate::assembly::press::{self, PressInput};
@@ -60,9 +60,7 @@ fn earlier_joint(joint: &Joint, step: &OrderStep) -> Result<Option<EarlierJoint>
         0.0
     };
     let by_temperature = diameter * (strain(shaft) - strain(hub));
-    let user = joint.assembly.hub_temperature_limit;
-    let own = hub.material.max_temperature.as_ref().map(|limit| limit.value);
-    let hub_limit = own.into_iter().chain(user).reduce(f64::min);
+    let hub_limit = hub_limit(joint, hub).map(|(limit, _)| limit);
     let joining = Joining {
         diameter,
         interference: step.overlap + smoothed - by_temperature,

@@ -9,6 +9,7 @@ use crate::assembly::press;
 use crate::joint::{DutyState, Joint, Ring, SmoothingAt};
 use crate::material::{Kind, Range};
 use crate::mechanics::MechanicsError;
+use crate::mechanics::bending::BentJoint;
 use crate::mechanics::capacity;
 use crate::mechanics::criteria::{self, DuctileCriterion};
 use crate::mechanics::ring::{RingLoad, RingSection, Stress};
@@ -152,7 +153,7 @@ impl<'a> Kernel<'a> {
         let pressure = mean_pressure(&solved, last);
         let friction = &joint.friction;
         let diameter = joint.interface_diameter(last);
-        let overlap = self.overlap(&pair.effective)?;
+        let overlap = self.overlap(last, &pair.effective)?;
         let peak =
             |friction: f64| press::peak_force(&assembly_of::press_input(joint, pressure, overlap, friction));
         let release = |friction: f64| capacity::axial(friction, pressure, diameter, joint.engaged_length());
@@ -180,21 +181,21 @@ impl<'a> Kernel<'a> {
         })
     }
 
-    /// Diametral overlap of the parts at the interface joined last, before they are joined, at the shop temperature, m.
-    fn overlap(&self, interference: &[f64]) -> Result<f64, FindingsError> {
-        let last = self.joint.last_interface();
+    /// Diametral overlap of the parts at an interface before they are joined, at the shop temperature, m.
+    pub(super) fn overlap(&self, interface: usize, interference: &[f64]) -> Result<f64, FindingsError> {
         if let [inner, outer] = self.shop.strain.as_slice() {
-            return Ok(at(interference, last) + self.joint.interface_diameter(last) * (inner - outer));
+            let diameter = self.joint.interface_diameter(interface);
+            return Ok(at(interference, interface) + diameter * (inner - outer));
         }
         // The rings within and without are strained by the joints made before: moved wide apart, the parts show by how
         // much they would overlap.
-        let apart = WIDE_APART * self.joint.interface_diameter(last);
+        let apart = WIDE_APART * self.joint.interface_diameter(interface);
         let mut opened = interference.to_vec();
-        if let Some(opened) = opened.get_mut(last) {
+        if let Some(opened) = opened.get_mut(interface) {
             *opened -= apart;
         }
         let solved = self.solve(&opened, &self.shop)?;
-        Ok(apart - 2.0 * solved.first().map_or(0.0, |piece| at(&piece.solution.gaps, last)))
+        Ok(apart - 2.0 * solved.first().map_or(0.0, |piece| at(&piece.solution.gaps, interface)))
     }
 
     /// One pair in a service state; of its contact pressure only the share `relaxation` is left for holding.
@@ -327,9 +328,8 @@ impl<'a> Kernel<'a> {
         let last = self.joint.last_interface();
         let diameter = self.joint.interface_diameter(last);
         let length = self.joint.engaged_length();
-        let radial = 2.0 * state.radial_force / (std::f64::consts::PI * diameter * length);
-        let per_moment = 12.0 / (std::f64::consts::PI * diameter * length * length);
-        let edge_change = per_moment * state.bending_moment + radial;
+        let bent = |pressure: f64| BentJoint { diameter, length, pressure };
+        let edge_change = bent(0.0).edge_pressure_rise(state.bending_moment, state.radial_force)?;
         let ends: Vec<&Solved> = solved.first().into_iter().chain(solved.last()).collect();
         let pressures = || ends.iter().map(|end| relaxation * at(&end.solution.pressures, last));
         let low = pressures().fold(f64::INFINITY, f64::min);
@@ -348,7 +348,7 @@ impl<'a> Kernel<'a> {
             edge_change,
             least_edge: low - edge_change,
             greatest_edge: high + edge_change,
-            limiting_moment: ((low - radial) / per_moment).max(0.0),
+            limiting_moment: bent(low).limiting_moment(state.radial_force)?,
             weakest,
         }))
     }

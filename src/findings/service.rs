@@ -360,16 +360,13 @@ fn steps(
         .iter()
         .map(|joined| {
             let made = tightest.effective.get(*joined).copied().unwrap_or_default();
-            let apart = kernel.stack(&interference, &kernel.shop)?.solve()?;
-            let gap = 2.0 * apart.gaps.get(*joined).copied().unwrap_or_default();
-            let before = interference.get(*joined).copied().unwrap_or_default();
             if let Some(own) = interference.get_mut(*joined) {
                 *own = made;
             }
             let together = kernel.stack(&interference, &kernel.shop)?.solve()?;
             Ok(OrderStep {
                 interface: *joined,
-                overlap: made - before - gap,
+                overlap: kernel.overlap(*joined, &interference)?,
                 pressure: together.pressures.get(*joined).copied().unwrap_or_default(),
                 rings: kernel.ring_stresses(&interference, &kernel.shop)?,
             })

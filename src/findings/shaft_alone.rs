@@ -1,9 +1,7 @@
 //! The shaft by itself, beside the fit: its torsion and bending are no part of the verdicts, but a shaft that cannot bear them is
 //! named.
 
-use std::f64::consts::PI;
-
-use super::fatigue::bore_at_the_edges;
+use super::fatigue::stress_per_moment;
 use super::{Caution, Findings};
 use crate::joint::{DutyState, Joint};
 use crate::quantity::{Measure, factor_found, show};
@@ -20,8 +18,7 @@ pub(super) fn cautions(findings: &Findings) -> Vec<Caution> {
 fn nominal(joint: &Joint, state: &DutyState) -> Option<Caution> {
     let (shaft, _) = joint.shaft_and_hub();
     let strength = shaft.strength.yield_strength?;
-    let (outer, bore) = (shaft.outer_diameter, bore_at_the_edges(joint));
-    let per_moment = 32.0 * outer / (PI * (outer.powi(4) - bore.powi(4)));
+    let per_moment = stress_per_moment(joint);
     let (bending, torsion) = (per_moment * state.bending_moment, 0.5 * per_moment * state.torque);
     let stress = (bending * bending + 3.0 * torsion * torsion).sqrt();
     if stress * joint.require.yield_safety <= strength {
