@@ -95,8 +95,7 @@ fn edges(
         sym(loosest_pressure) - sym(&change),
         units.pressure,
         EQUILIBRIUM,
-        // A small difference of two checked figures loses digits by hand.
-        None,
+        Some(loosest.least_edge * units.per_pascal),
     );
     sheet.formula(
         &name("p_g"),
